@@ -1,0 +1,179 @@
+package action
+
+import "math"
+
+const pi = math.Pi
+
+func sqrt(x float64) float64 { return math.Sqrt(x) }
+
+// CriticalUniform is the elastic critical axial force of a uniform column with
+// EI = 1 under a force that does not change with height, on rigid holds
+// (ascending, strictly inside): multiply by E I. Zero when the column is a
+// mechanism.
+func CriticalUniform(base, top End, holds []float64, height float64) float64 {
+	bar := Bar{Base: base, Top: top}
+	bar.Nodes = append(append([]float64{0}, holds...), height)
+	for i := range bar.Nodes {
+		inner := i > 0 && i < len(bar.Nodes)-1
+		bar.Held = append(bar.Held, inner)
+	}
+	n := len(bar.Nodes) - 1
+	bar.Force, bar.Stiffness = make([]float64, n), make([]float64, n)
+	for i := range bar.Force {
+		bar.Force[i], bar.Stiffness[i] = 1, 1
+	}
+	return bar.Critical()
+}
+
+// Bar is a straight column cut at its nodes, with an axial force and a bending
+// stiffness that are constant between neighbouring nodes.
+type Bar struct {
+	Base, Top End
+	Nodes     []float64 // heights, ascending, from the base to the top
+	Held      []bool    // rigid lateral hold at each inner node; ends follow Base and Top
+	Lateral   []float64 // stiffness of a lateral spring at each node, N/m; nil for none
+	Turning   []float64 // stiffness of a rotational spring at each node, Nm/rad; nil for none
+	Force     []float64 // axial compression of each part under the reference loading, N
+	Stiffness []float64 // E I of each part, Nm2
+}
+
+// Critical is the factor by which the reference forces must grow until the bar
+// buckles, by the stiffness method with exact stability functions: the least
+// factor at which the stiffness matrix stops being positive definite. Zero for
+// a mechanism, +Inf when nothing is compressed.
+func (b *Bar) Critical() float64 {
+	// No part can carry more than if it were clamped at both ends: there the
+	// stability functions pass their first pole.
+	limit := math.Inf(1)
+	for i, n := range b.Force {
+		if n > 0 {
+			l := b.Nodes[i+1] - b.Nodes[i]
+			limit = min(limit, 4*pi*pi*b.Stiffness[i]/(l*l*n))
+		}
+	}
+	if !b.stable(0) {
+		return 0
+	}
+	if math.IsInf(limit, 1) {
+		return limit
+	}
+	low, high := 0.0, limit*(1-1e-12)
+	if b.stable(high) {
+		return limit
+	}
+	for range 200 {
+		mid := (low + high) / 2
+		if b.stable(mid) {
+			low = mid
+		} else {
+			high = mid
+		}
+		if high-low <= 1e-13*high {
+			break
+		}
+	}
+	return low
+}
+
+// stable tells whether the bar's stiffness matrix is positive definite under
+// the reference forces times factor: a factorisation without a pivot at or
+// below zero. The matrix has a half band of three besides the diagonal.
+func (b *Bar) stable(factor float64) bool {
+	nodes := len(b.Nodes)
+	size := 2 * nodes
+	k := make([][4]float64, size) // k[i][d] is the entry (i, i+d)
+	height := b.Nodes[nodes-1] - b.Nodes[0]
+	scale := 0.0
+	for i := range b.Force {
+		l := b.Nodes[i+1] - b.Nodes[i]
+		s, c, t := stability(factor*b.Force[i]*l*l/b.Stiffness[i])
+		ei := b.Stiffness[i]
+		r := 2 * i
+		// slope-deflection form: s, c rotational terms, t the sway term
+		k[r][0] += ei / (l * l * l) * t
+		k[r][1] += ei / (l * l) * (s + c)
+		k[r][2] += -ei / (l * l * l) * t
+		k[r][3] += ei / (l * l) * (s + c)
+		k[r+1][0] += ei / l * s
+		k[r+1][1] += -ei / (l * l) * (s + c)
+		k[r+1][2] += ei / l * c
+		k[r+2][0] += ei / (l * l * l) * t
+		k[r+2][1] += -ei / (l * l) * (s + c)
+		k[r+3][0] += ei / l * s
+		scale = max(scale, ei/(l*l*l)*12)
+	}
+	for i := range nodes {
+		if b.Lateral != nil {
+			k[2*i][0] += b.Lateral[i]
+		}
+		if b.Turning != nil {
+			k[2*i+1][0] += b.Turning[i]
+		}
+	}
+	fixed := make([]bool, size)
+	for i := range nodes {
+		if i < len(b.Held) && b.Held[i] && i > 0 && i < nodes-1 {
+			fixed[2*i] = true
+		}
+	}
+	for i, e := range map[int]End{0: b.Base, nodes - 1: b.Top} {
+		fixed[2*i] = fixed[2*i] || e.held()
+		fixed[2*i+1] = e == Fixed || e == Guided
+	}
+	for i := range size {
+		if fixed[i] {
+			for d := 1; d < 4; d++ {
+				k[i][d] = 0
+				if i-d >= 0 {
+					k[i-d][d] = 0
+				}
+			}
+			k[i][0] = 1
+		}
+	}
+	for i := range size {
+		p := k[i][0]
+		floor := scale * 1e-10
+		if i%2 == 1 {
+			floor *= height * height
+		}
+		if fixed[i] {
+			floor = 0
+		}
+		if !(p > floor) {
+			return false
+		}
+		for d := 1; d < 4 && i+d < size; d++ {
+			f := k[i][d] / p
+			for e := d; e < 4 && i+e < size; e++ {
+				k[i+d][e-d] -= f * k[i][e]
+			}
+		}
+	}
+	return true
+}
+
+// stability gives the stability functions of a part: s and c of the rotations,
+// in units of EI/l, and t of the sway, in units of EI/l³. x is N l²/(E I),
+// compression positive; for small x the series, where the closed form loses
+// its digits.
+func stability(x float64) (s, c, t float64) {
+	switch {
+	case math.Abs(x) < 0.01:
+		s = 4 - 2*x/15 - 11*x*x/6300 - x*x*x/27000
+		c = 2 + x/30 + 13*x*x/12600 + 11*x*x*x/378000
+	case x > 0:
+		u := math.Sqrt(x)
+		sin, cos := math.Sincos(u)
+		d := 2 - 2*cos - u*sin
+		s = u * (sin - u*cos) / d
+		c = u * (u - sin) / d
+	default:
+		u := math.Sqrt(-x)
+		sh, ch := math.Sinh(u), math.Cosh(u)
+		d := 2 - 2*ch + u*sh
+		s = u * (u*ch - sh) / d
+		c = u * (sh - u) / d
+	}
+	return s, c, 2*(s+c) - x
+}

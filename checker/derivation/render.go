@@ -1,0 +1,83 @@
+package derivation
+
+import (
+	"math"
+	"strings"
+
+	"kern/lang"
+	"kern/lang/unit"
+)
+
+// Units says in which unit a dimension is shown. Dimensions that are not in it
+// are shown in the usual one.
+type Units map[unit.Dim]unit.Unit
+
+var usual = map[unit.Dim]string{
+	unit.Length: "mm", unit.Area: "mm2", unit.Volume: "cm3", unit.Length4: "cm4", unit.Length6: "cm6", unit.Force: "kN",
+	unit.Stress: "N/mm2", unit.Moment: "kNm", unit.ForcePerLength: "kN/m", unit.Density: "kg/m3", unit.MassPerLength: "kg/m",
+	unit.Mass: "kg", unit.Angle: "rad", unit.Acceleration: "m/s2", unit.WeightDensity: "kN/m3", unit.RotationalStiffness: "kNm/rad",
+}
+
+// For gives the unit in which to show a quantity of the dimension.
+func (u Units) For(dim unit.Dim) unit.Unit {
+	if s, ok := u[dim]; ok {
+		return s
+	}
+	text, ok := usual[dim]
+	if !ok {
+		text = dim.Base()
+	}
+	if s, err := unit.Parse(text); err == nil {
+		return s
+	}
+	return unit.Unit{Factor: 1, Dim: dim}
+}
+
+// Show writes a value with its unit, to the given number of significant
+// digits, so that the language reads it back.
+func (u Units) Show(value float64, dim unit.Dim, digits int) string {
+	if dim.IsNone() {
+		return unit.Number(value, digits)
+	}
+	s := u.For(dim)
+	return unit.Number(value/s.Factor, digits) + " " + s.Symbol
+}
+
+// Digits is how many significant digits derivations are printed with: enough
+// that a checker who puts the printed numbers in finds the printed result.
+const Digits = 5
+
+// Numbers writes the formula of a step with its numbers put in. It is a text
+// that the language evaluates. digits 0 writes every digit.
+func (s Step) Numbers(set *Set, units Units, digits int) string {
+	if s.Formula == nil {
+		return ""
+	}
+	values := make(map[string]string, len(s.Inputs))
+	for _, in := range s.Inputs {
+		sym := set.At(in.Symbol)
+		var text string
+		if digits == 0 {
+			text = unit.Exact(in.Value)
+			if !sym.Dim.IsNone() {
+				text += " " + sym.Dim.Base()
+			}
+		} else {
+			text = units.Show(in.Value, sym.Dim, digits)
+		}
+		if in.Value < 0 || math.Signbit(in.Value) {
+			text = "(" + text + ")"
+		}
+		values[sym.Name] = text
+	}
+	var b strings.Builder
+	text := s.Formula.Text
+	for _, t := range lang.Tokens(text) {
+		piece := t.Span().Of(text)
+		if v, ok := values[piece]; ok && t.Kind == lang.Name {
+			piece = v
+		}
+		b.WriteString(piece)
+	}
+	return b.String()
+}

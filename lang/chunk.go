@@ -1,0 +1,127 @@
+package lang
+
+import "strings"
+
+// cut splits a text into the texts of its declarations. It looks at the first
+// words of lines, at braces, brackets and quotes, and at nothing else: the rule
+// must be so local that after an edit the same declarations come out wherever
+// the text is the same.
+//
+// A line begins a declaration when it starts with one of the starter words, or
+// when it has contents and no block, bracket or trailing comma of the lines
+// before it is open. Comments and blank lines stay with what precedes them.
+func cut(text string, emit func(start, end int)) {
+	c := cutter{text: text}
+	start := 0
+	for pos := 0; pos < len(text); {
+		end, next := lineEnd(text, pos)
+		line := text[pos:end]
+		if c.begins(line) {
+			if pos > start {
+				emit(start, pos)
+				start = pos
+			}
+			c.braces, c.parens, c.comma = 0, 0, false
+		}
+		c.read(line)
+		pos = next
+	}
+	if len(text) > start {
+		emit(start, len(text))
+	}
+}
+
+type cutter struct {
+	text           string
+	braces, parens int
+	comma          bool // the last line ended with a comma
+}
+
+// begins tells whether the line starts a declaration.
+func (c *cutter) begins(line string) bool {
+	rest := trimBlank(line)
+	if rest == "" || rest[0] == '#' {
+		return false
+	}
+	if StartsDeclaration(rest, c.braces > 0) {
+		return true
+	}
+	return c.braces == 0 && c.parens == 0 && !c.comma
+}
+
+// StartsDeclaration tells whether a line (without leading blanks) begins a
+// declaration even when a block or bracket is open.
+func StartsDeclaration(line string, inBlock bool) bool {
+	n := nameLength(line)
+	if n == 0 || !starters[line[:n]] {
+		return false
+	}
+	word, rest := line[:n], trimBlank(line[n:])
+	if strings.HasPrefix(rest, "=") {
+		return false
+	}
+	if inBlock && blockAssigned[word] {
+		// "section mast" in a block is a property that lacks its sign; "section
+		// mast = …" and "material cast {" are declarations.
+		m := nameLength(rest)
+		rest = trimBlank(rest[m:])
+		return m > 0 && (strings.HasPrefix(rest, "=") || strings.HasPrefix(rest, "{"))
+	}
+	return true
+}
+
+func trimBlank(s string) string { return strings.TrimLeft(s, " \t\u00a0\ufeff") }
+
+// read follows the braces, brackets and trailing comma of a line.
+func (c *cutter) read(line string) {
+	last := byte(0)
+	for i := 0; i < len(line); i++ {
+		switch b := line[i]; b {
+		case '#':
+			i = len(line)
+			continue
+		case '"':
+			if j := strings.IndexByte(line[i+1:], '"'); j >= 0 {
+				i += j + 1
+			} else {
+				i = len(line)
+			}
+			last = '"'
+			continue
+		case '{':
+			c.braces++
+			c.parens = 0
+		case '}':
+			c.braces = max(0, c.braces-1)
+			c.parens = 0
+		case '(':
+			c.parens++
+		case ')':
+			c.parens = max(0, c.parens-1)
+		case ' ', '\t':
+			continue
+		}
+		last = line[i]
+	}
+	if last != 0 {
+		c.comma = last == ','
+	}
+}
+
+// lineEnd gives the end of the line that starts at pos and the start of the
+// next one.
+func lineEnd(text string, pos int) (end, next int) {
+	i := strings.IndexByte(text[pos:], '\n')
+	if i < 0 {
+		i = len(text) - pos
+	}
+	end = pos + i
+	// a lone \r ends a line too
+	if r := strings.IndexByte(text[pos:end], '\r'); r >= 0 {
+		if pos+r+1 == end && end < len(text) {
+			return pos + r, end + 1
+		}
+		return pos + r, pos + r + 1
+	}
+	return end, min(end+1, len(text))
+}

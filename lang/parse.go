@@ -1,0 +1,446 @@
+package lang
+
+import (
+	"runtime"
+	"strings"
+	"sync"
+	"sync/atomic"
+	"unicode/utf8"
+
+	"github.com/alecthomas/participle/v2/lexer"
+)
+
+// Limits that keep any input bounded in time and memory. They lie far above
+// what a person writes.
+const (
+	maxFile   = 256 << 20 // bytes
+	maxTokens = 20_000    // tokens of one statement's line
+	maxBlocks = 8         // depth of blocks
+	maxReport = 200       // problems reported in one declaration
+)
+
+// Parse reads a file. It never fails: what cannot be read is a problem of its
+// own declaration. Parts of an earlier tree of the same file whose text did not
+// change are used again; prev may be nil.
+func Parse(id *FileID, text string, prev *File) *File {
+	f := &File{Name: id.Name, Text: text}
+	switch {
+	case len(text) > maxFile:
+		f.Unreadable = "the file is larger than 256 MiB"
+	case strings.IndexByte(text[:min(len(text), 1<<16)], 0) >= 0:
+		f.Unreadable = "the file is not text (it contains zero bytes)"
+	}
+	if f.Unreadable != "" {
+		f.Decls = []*Decl{{File: id, Syntax: &Syntax{Text: text}}}
+		f.Starts = []int32{0}
+		return f
+	}
+	var ranges [][2]int
+	cut(text, func(start, end int) { ranges = append(ranges, [2]int{start, end}) })
+	f.Decls = make([]*Decl, len(ranges))
+	f.Starts = make([]int32, len(ranges))
+	for i, r := range ranges {
+		f.Starts[i] = int32(r[0])
+	}
+	head, tail := reuse(f, prev, ranges)
+	// declarations do not depend on one another: long files are read on all cores
+	const batch = 64
+	var wait sync.WaitGroup
+	next := atomic.Int64{}
+	next.Store(int64(head))
+	work := func() {
+		for {
+			first := int(next.Add(batch)) - batch
+			if first >= tail {
+				return
+			}
+			for i := first; i < min(first+batch, tail); i++ {
+				r := ranges[i]
+				f.Decls[i] = &Decl{File: id, Syntax: parseDecl(text[r[0]:r[1]])}
+			}
+		}
+	}
+	for range min(runtime.GOMAXPROCS(0)-1, (tail-head)/batch) {
+		wait.Go(work)
+	}
+	work()
+	wait.Wait()
+	return f
+}
+
+// reuse fills in the declarations at the head and the tail of the file that
+// stand in the earlier tree with the same text, and gives the range that is
+// left to parse.
+func reuse(f *File, prev *File, ranges [][2]int) (head, tail int) {
+	head, tail = 0, len(ranges)
+	if prev == nil || prev.Unreadable != "" {
+		return head, tail
+	}
+	same := func(i, j int) bool { return f.Text[ranges[i][0]:ranges[i][1]] == prev.Decls[j].Text }
+	for head < tail && head < len(prev.Decls) && same(head, head) {
+		f.Decls[head] = prev.Decls[head]
+		head++
+	}
+	for j := len(prev.Decls) - 1; tail > head && j >= head && same(tail-1, j); j-- {
+		tail--
+		f.Decls[tail] = prev.Decls[j]
+	}
+	return head, tail
+}
+
+// parseDecl reads the text of one declaration.
+func parseDecl(text string) *Syntax {
+	s := &Syntax{Text: text}
+	b := builders.Get().(*builder)
+	b.reset(s)
+	s.Stmts = b.stmts(nil, 0)
+	b.syntax = nil
+	builders.Put(b)
+	return s
+}
+
+var builders = sync.Pool{New: func() any { return new(builder) }}
+
+// builder reads statements. It splits the tokens into statements by line ends,
+// semicolons and braces alone, and hands each line to the grammar.
+type builder struct {
+	syntax *Syntax
+	lex    Lexer
+	tok    Token
+	line   []Token
+	feed   tokenSource
+	depth  int
+}
+
+func (b *builder) reset(s *Syntax) {
+	b.syntax, b.depth = s, 0
+	b.lex = Lexer{text: s.Text}
+	b.next()
+}
+
+func (b *builder) next() { b.tok = b.lex.Next() }
+
+func (s *Syntax) problem(p Problem) {
+	if len(s.Problems) < maxReport {
+		s.Problems = append(s.Problems, p)
+	}
+}
+
+// stmts reads statements up to the brace that closes the block open, or to the
+// end of the text for the outermost level.
+func (b *builder) stmts(open *Stmt, depth int) []*Stmt {
+	var out []*Stmt
+	for {
+		switch b.tok.Kind {
+		case Blank, Comment, Newline, Semicolon:
+			b.next()
+			continue
+		case EOF:
+			if open != nil {
+				b.unclosed(open)
+			}
+			return out
+		case CloseBrace:
+			if open != nil {
+				open.Body.Span.End = b.tok.End
+				open.Span.End = b.tok.End
+				b.next()
+				return out
+			}
+			b.syntax.problem(Problem{Rule: "stray-brace", Span: b.tok.Span(), Message: "this } closes nothing",
+				Fixes: []Fix{Replace("Remove the brace", true, b.tok.Span(), "")}})
+			b.next()
+			continue
+		}
+		out = append(out, b.stmt(depth))
+	}
+}
+
+func (b *builder) unclosed(open *Stmt) {
+	at := Span{open.Body.Span.Start, open.Body.Span.Start + 1}
+	end := int32(len(strings.TrimRight(b.syntax.Text, " \t\r\n")))
+	open.Body.Span.End, open.Span.End = end, end
+	b.syntax.problem(Problem{Rule: "unclosed-block", Span: at, Message: "the block of '" + open.Word + "' is not closed: a } is missing",
+		Fixes: []Fix{Replace("Add the closing brace", true, Span{end, end}, "\n}")}})
+}
+
+// stmt reads one statement with its block.
+func (b *builder) stmt(depth int) *Stmt {
+	b.collect()
+	st := &Stmt{}
+	before := len(b.syntax.Problems)
+	if len(b.line) > 0 {
+		st.Line = Span{b.line[0].Start, b.line[len(b.line)-1].End}
+	} else {
+		st.Line = Span{b.tok.Start, b.tok.Start}
+	}
+	st.Span = st.Line
+	b.syntax.fill(st, b.line, &b.feed)
+	st.Broken = len(b.syntax.Problems) > before
+	if b.tok.Kind != OpenBrace {
+		return st
+	}
+	st.Body = &Block{Span: b.tok.Span()}
+	st.Span.End = b.tok.End
+	if depth >= maxBlocks {
+		b.syntax.problem(Problem{Rule: "nested-too-deep", Span: b.tok.Span(), Message: "blocks are nested too deeply; what follows in this declaration was not read"})
+		st.Broken = true
+		for b.tok.Kind != EOF {
+			b.next()
+		}
+		st.Body.Span.End = int32(len(b.syntax.Text))
+		st.Span.End = st.Body.Span.End
+		return st
+	}
+	b.next()
+	st.Body.Stmts = b.stmts(st, depth+1)
+	return st
+}
+
+// collect gathers the tokens of the statement's line, without blanks and
+// comments, and stops on the token that ends it.
+func (b *builder) collect() {
+	b.line = b.line[:0]
+	parens := 0
+	dropped := false
+	for {
+		switch b.tok.Kind {
+		case EOF, OpenBrace, CloseBrace:
+			b.long(dropped)
+			return
+		case Semicolon:
+			b.long(dropped)
+			return
+		case Newline:
+			comma := len(b.line) > 0 && b.line[len(b.line)-1].Kind == Comma
+			if !b.goesOn(parens > 0 || comma) {
+				b.long(dropped)
+				return
+			}
+			continue
+		case Blank, Comment:
+			b.next()
+			continue
+		case OpenParen:
+			parens++
+		case CloseParen:
+			parens = max(0, parens-1)
+		}
+		if len(b.line) < maxTokens {
+			b.line = append(b.line, b.tok)
+		} else {
+			dropped = true
+		}
+		b.next()
+	}
+}
+
+func (b *builder) long(dropped bool) {
+	if dropped {
+		b.syntax.problem(Problem{Rule: "statement-too-long", Span: Span{b.line[0].Start, b.line[0].End},
+			Message: "this statement has more than 20,000 words and signs and was not read"})
+		b.line = b.line[:1]
+	}
+}
+
+// goesOn moves past the line end and what is blank behind it, and tells whether
+// the statement goes on there: always when an opening brace stands first, and
+// for an open bracket or trailing comma unless the next line plainly starts a
+// statement of its own.
+func (b *builder) goesOn(open bool) bool {
+	saveLex, saveTok := b.lex, b.tok
+	for b.tok.Kind == Newline || b.tok.Kind == Blank || b.tok.Kind == Comment {
+		b.next()
+	}
+	on := false
+	switch b.tok.Kind {
+	case OpenBrace:
+		on = true
+	case Name:
+		rest := b.syntax.Text[b.tok.Start:]
+		on = open && !verbs[b.tok.Span().Of(b.syntax.Text)] && !StartsDeclaration(rest, true) && !strings.HasPrefix(trimBlank(rest[nameLength(rest):]), "=")
+	case EOF, CloseBrace:
+	default:
+		on = open
+	}
+	if !on {
+		b.lex, b.tok = saveLex, saveTok
+	}
+	return on
+}
+
+// fill reads the tokens of a line into the statement.
+func (s *Syntax) fill(st *Stmt, tokens []Token, feed *tokenSource) {
+	if len(tokens) == 0 {
+		s.problem(Problem{Rule: "missing-statement", Span: Span{st.Line.Start, st.Line.Start + 1}, Message: "a block opens here without a statement before it"})
+		return
+	}
+	bad := s.flaws(tokens)
+	first := tokens[0]
+	if first.Kind == Name {
+		st.Head = first.Span()
+		st.Word = st.Head.Of(s.Text)
+		tokens = tokens[1:]
+		// "width=90 mm" and "A1*2" both begin with a word: what follows decides
+	} else if !bad {
+		s.problem(Problem{Rule: "missing-statement", Span: first.Span(),
+			Message: "a statement begins with a word, not with " + describe(first, s.Text)})
+		bad = true
+	}
+	if len(tokens) == 0 {
+		return
+	}
+	feed.text, feed.tokens, feed.next = s.Text, tokens, 0
+	st.Args = s.read(feed, bad)
+}
+
+// parts reads tokens that are no statement, such as a formula.
+func (s *Syntax) parts(tokens []Token) []*Expr {
+	bad := s.flaws(tokens)
+	return s.read(&tokenSource{text: s.Text, tokens: tokens}, bad)
+}
+
+// read runs the grammar over a line's tokens. Problems of the expressions are
+// reported unless the line has a flaw reported already.
+func (s *Syntax) read(feed *tokenSource, silent bool) []*Expr {
+	peeking, err := lexer.Upgrade(feed)
+	if err != nil {
+		return nil // cannot be: the source never fails
+	}
+	parsed, err := lineParser.ParseFromLexer(peeking)
+	if err != nil {
+		return nil // cannot be: a part never fails and takes at least one token
+	}
+	for _, e := range parsed.parts {
+		if !silent && s.complain(e) {
+			silent = true
+		}
+	}
+	return parsed.parts
+}
+
+// complain reports the first bad expression below e.
+func (s *Syntax) complain(e *Expr) bool {
+	if e.Kind == BadExpr {
+		for _, a := range e.Args {
+			if s.complain(a) {
+				return true
+			}
+		}
+		p := Problem{Span: e.Span}
+		switch e.Text {
+		case "(":
+			p.Rule, p.Message = "unclosed-bracket", "this bracket is not closed: a ) is missing"
+			p.Fixes = []Fix{Replace("Add the closing bracket", true, Span{e.Span.End, e.Span.End}, ")")}
+			p.Span.End = p.Span.Start + 1
+			if i := strings.IndexByte(s.Text[e.Span.Start:e.Span.End], '('); i >= 0 {
+				p.Span = Span{e.Span.Start + int32(i), e.Span.Start + int32(i) + 1}
+			}
+		case "deep":
+			p.Rule, p.Message = "nested-too-deep", "brackets are nested too deeply"
+			p.Span.End = min(p.Span.End, p.Span.Start+1)
+		case "number":
+			p.Rule, p.Message = "bad-number", "this number is too large to be one"
+		case "end":
+			p.Rule, p.Message = "missing-value", "a value is missing here"
+			p.Span = s.lastVisible(e.Span)
+		default:
+			p.Rule, p.Message = "misplaced-sign", "'"+e.Span.Of(s.Text)+"' does not belong here"
+		}
+		s.problem(p)
+		return true
+	}
+	if e.Kind == StringExpr {
+		return false
+	}
+	for _, a := range e.Args {
+		if a.Kind == StringExpr {
+			s.problem(Problem{Rule: "misplaced-sign", Span: a.Span, Message: "a text cannot be part of a calculation"})
+			return true
+		}
+		if s.complain(a) {
+			return true
+		}
+	}
+	return false
+}
+
+// lastVisible turns an empty span at the end of something into the last
+// character before it, so that there is something to underline.
+func (s *Syntax) lastVisible(at Span) Span {
+	if at.Len() > 0 || at.Start == 0 {
+		return at
+	}
+	_, n := utf8.DecodeLastRuneInString(s.Text[:at.Start])
+	return Span{at.Start - int32(n), at.Start}
+}
+
+// flaws reports what the lexer marked. It tells whether there was anything.
+func (s *Syntax) flaws(tokens []Token) bool {
+	found := false
+	for _, t := range tokens {
+		if t.Flaw == Sound {
+			continue
+		}
+		found = true
+		text := t.Span().Of(s.Text)
+		p := Problem{Span: t.Span()}
+		switch t.Flaw {
+		case OpenString:
+			p.Rule, p.Message = "unclosed-text", "the quoted text is not closed on its line"
+			p.Fixes = []Fix{Replace("Close the text", false, Span{t.End, t.End}, `"`)}
+		case CurlyQuotes:
+			p.Rule, p.Message = "curly-quotes", "quoted text stands between straight quotes \"…\""
+			p.Fixes = []Fix{Replace("Use straight quotes", true, t.Span(), `"`+strings.Trim(text, "\"“”„«»")+`"`)}
+		case DecimalComma:
+			p.Rule, p.Message = "decimal-comma", "a decimal comma: numbers are written with a point"
+			point := strings.Replace(text, ",", ".", 1)
+			if strings.Count(text, ",") > 1 {
+				p.Message = "commas in a number: write the decimal point as . and group digits with _"
+				p.Fixes = []Fix{Replace("Write "+strings.ReplaceAll(text, ",", "_"), false, t.Span(), strings.ReplaceAll(text, ",", "_"))}
+				break
+			}
+			p.Message += ", " + point
+			p.Fixes = []Fix{Replace("Write "+point, false, t.Span(), point)}
+			if thousands := strings.Replace(text, ",", "_", 1); len(text)-strings.IndexByte(text, ',') == 4 {
+				p.Notes = append(p.Notes, "for thousands write "+thousands)
+				p.Fixes = append(p.Fixes, Replace("Write "+thousands, false, t.Span(), thousands))
+			}
+		case BadNumber:
+			p.Rule, p.Message = "bad-number", "'"+text+"' is not a number"
+			if mended := mendNumber(text); mended != "" {
+				p.Message += ": write " + mended
+				p.Fixes = []Fix{Replace("Write "+mended, true, t.Span(), mended)}
+			}
+		case BadEncoding:
+			p.Rule, p.Message = "stray-character", "these bytes are not UTF-8 text"
+		default:
+			p.Rule, p.Message = "stray-character", "'"+text+"' has no meaning in the language"
+		}
+		s.problem(p)
+	}
+	return found
+}
+
+// mendNumber writes ".5" and "5." as a reader would; "" when there is more
+// wrong than that.
+func mendNumber(s string) string {
+	m := s
+	if strings.HasPrefix(m, ".") {
+		m = "0" + m
+	}
+	m = strings.TrimSuffix(m, ".")
+	l := NewLexer(m)
+	if t := l.Next(); t.Kind == Number && t.Flaw == Sound && int(t.End) == len(m) {
+		return m
+	}
+	return ""
+}
+
+func describe(t Token, text string) string {
+	s := t.Span().Of(text)
+	if len(s) > 20 {
+		s = strings.ToValidUTF8(s[:20], "") + "…"
+	}
+	return "'" + s + "'"
+}

@@ -1,0 +1,199 @@
+package lang
+
+import (
+	"path"
+	"slices"
+	"sort"
+	"strings"
+)
+
+// Project is the files of a workspace that are read together: the roots that
+// were asked for and what they include.
+type Project struct {
+	Files map[string]*File
+	// Roots are the files that no other file of the project includes, in
+	// alphabetical order: each is a calculation of its own.
+	Roots []string
+	// Problems of includes, by declaration.
+	Problems []Diagnostic
+	includes map[string][]inclusion
+	ids      map[string]*FileID
+}
+
+type inclusion struct {
+	decl *Decl
+	stmt *Stmt
+	arg  *Expr
+	name string // "" when it leads nowhere
+}
+
+// Read gives the text of a file by its workspace name, or an error that is told
+// to the user.
+type Read func(name string) (string, error)
+
+// Load reads the named files and all that they include. Unchanged declarations
+// of an earlier project are used again; prev may be nil.
+func Load(names []string, read Read, prev *Project) *Project {
+	p := &Project{Files: map[string]*File{}, includes: map[string][]inclusion{}, ids: map[string]*FileID{}}
+	queue := slices.Clone(names)
+	sort.Strings(queue)
+	failed := map[string]string{}
+	for len(queue) > 0 {
+		name := queue[0]
+		queue = queue[1:]
+		if p.Files[name] != nil || failed[name] != "" {
+			continue
+		}
+		text, err := read(name)
+		if err != nil {
+			failed[name] = err.Error()
+			continue
+		}
+		id := &FileID{Name: name}
+		var old *File
+		if prev != nil {
+			if f := prev.Files[name]; f != nil {
+				old = f
+				id = prev.ids[name]
+			}
+		}
+		p.ids[name] = id
+		f := old
+		if old == nil || old.Text != text {
+			f = Parse(id, text, old)
+		}
+		p.Files[name] = f
+		for _, inc := range inclusions(f) {
+			p.includes[name] = append(p.includes[name], inc)
+			if inc.name != "" {
+				queue = append(queue, inc.name)
+			}
+		}
+	}
+	p.link(names, failed)
+	return p
+}
+
+// inclusions are the include statements of a file with the names they mean.
+func inclusions(f *File) []inclusion {
+	var out []inclusion
+	for _, d := range f.Decls {
+		for _, s := range d.Stmts {
+			if s.Word != "include" {
+				continue
+			}
+			if _, assigned := s.Assigned(); assigned || s.Broken {
+				continue
+			}
+			inc := inclusion{decl: d, stmt: s}
+			if len(s.Args) > 0 && s.Args[0].Kind == StringExpr {
+				inc.arg = s.Args[0]
+				inc.name, _ = Resolve(f.Name, inc.arg.Text)
+			}
+			out = append(out, inc)
+		}
+	}
+	return out
+}
+
+// Resolve gives the workspace name that an include in the file means, and false
+// when it would leave the workspace. Slashes of both kinds separate.
+func Resolve(from, include string) (string, bool) {
+	target := strings.ReplaceAll(include, `\`, "/")
+	if target == "" || strings.HasPrefix(target, "/") || len(target) > 1 && target[1] == ':' || strings.Contains(target, "\x00") {
+		return "", false
+	}
+	name := path.Join(path.Dir(from), target)
+	if name == ".." || strings.HasPrefix(name, "../") || strings.HasPrefix(name, "/") {
+		return "", false
+	}
+	return name, true
+}
+
+// link finds the roots and the includes that lead nowhere or in circles.
+func (p *Project) link(names []string, failed map[string]string) {
+	included := map[string]bool{}
+	files := make([]string, 0, len(p.Files))
+	for name := range p.Files {
+		files = append(files, name)
+	}
+	sort.Strings(files)
+	loops := map[string]bool{}
+	for _, name := range files {
+		for _, inc := range p.includes[name] {
+			switch {
+			case inc.arg == nil:
+				p.include(inc, "wrong-form", inc.stmt.Line, "include names a file: include \"common.kern\"")
+			case inc.name == "":
+				p.include(inc, "include-outside", inc.arg.Span, "'"+inc.arg.Text+"' lies outside the workspace; a calculation reads nothing from there")
+			case failed[inc.name] != "":
+				p.include(inc, "include-missing", inc.arg.Span, "cannot read '"+inc.name+"': "+failed[inc.name])
+			case inc.name == name || p.reaches(inc.name, name):
+				p.include(inc, "include-loop", inc.arg.Span, "this include leads back to '"+name+"'")
+				loops[name] = true
+			default:
+				included[inc.name] = true
+			}
+		}
+	}
+	for _, name := range names {
+		if p.Files[name] != nil && (!included[name] || loops[name]) && !slices.Contains(p.Roots, name) {
+			p.Roots = append(p.Roots, name)
+		}
+	}
+	sort.Strings(p.Roots)
+}
+
+func (p *Project) include(inc inclusion, rule string, span Span, message string) {
+	p.Problems = append(p.Problems, Diagnostic{Decl: inc.decl, Problem: Problem{Rule: rule, Span: span, Message: message}})
+}
+
+// reaches tells whether a chain of includes leads from one file to another.
+func (p *Project) reaches(from, to string) bool {
+	seen := map[string]bool{from: true}
+	queue := []string{from}
+	for len(queue) > 0 {
+		name := queue[0]
+		queue = queue[1:]
+		for _, inc := range p.includes[name] {
+			if inc.name == to {
+				return true
+			}
+			if inc.name != "" && !seen[inc.name] {
+				seen[inc.name] = true
+				queue = append(queue, inc.name)
+			}
+		}
+	}
+	return false
+}
+
+// Closure is a root with all that it includes, each file once, the included
+// before the including.
+func (p *Project) Closure(root string) []*File {
+	var out []*File
+	seen := map[string]bool{}
+	var visit func(name string)
+	visit = func(name string) {
+		if seen[name] || p.Files[name] == nil {
+			return
+		}
+		seen[name] = true
+		for _, inc := range p.includes[name] {
+			visit(inc.name)
+		}
+		out = append(out, p.Files[name])
+	}
+	visit(root)
+	return out
+}
+
+// Included tells where an include statement of a file leads: "" for nowhere.
+func (p *Project) Included(file string, stmt *Stmt) string {
+	for _, inc := range p.includes[file] {
+		if inc.stmt == stmt {
+			return inc.name
+		}
+	}
+	return ""
+}
