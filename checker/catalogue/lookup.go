@@ -1,0 +1,95 @@
+package catalogue
+
+import (
+	"strings"
+	"unicode/utf8"
+)
+
+// maxWords bounds the words of a search that are looked at.
+const maxWords = 8
+
+// Search returns the sections that a text describes, in the order of All: those
+// whose designation begins with the text ("IPE 3", "SHS 100"), or else those
+// that every word of the text fits ("cold square 100", "HE 200", "EN 10219"), or
+// else the one unlisted section that the text names. An empty text gives all.
+func Search(text string) []Entry {
+	x := catalogue()
+	if strings.TrimSpace(text) == "" {
+		return All()
+	}
+	if len(text) > 4*maxName || !utf8.ValidString(text) {
+		return nil
+	}
+	var buf, own [maxName]byte
+	var out []Entry
+	if name, ok := compact(buf[:0], text); ok {
+		for i := range x.entries {
+			d, _ := compact(own[:0], x.entries[i].Designation)
+			if strings.HasPrefix(string(d), string(name)) {
+				out = append(out, x.entries[i])
+			}
+		}
+	}
+	if len(out) > 0 {
+		return out
+	}
+	wanted := strings.Fields(strings.ToUpper(strings.NewReplacer("×", "x", ",", ".").Replace(text)))
+	if len(wanted) > maxWords {
+		return nil
+	}
+	for i := range x.entries {
+		if fits(descriptors(&x.entries[i]), wanted) {
+			out = append(out, x.entries[i])
+		}
+	}
+	if len(out) > 0 {
+		return out
+	}
+	if e, ok := Find(text); ok {
+		return []Entry{e}
+	}
+	return nil
+}
+
+// fits tells whether every wanted word begins one of the descriptors.
+func fits(descriptors, wanted []string) bool {
+	for _, w := range wanted {
+		hit := false
+		for _, d := range descriptors {
+			if strings.HasPrefix(d, w) {
+				hit = true
+				break
+			}
+		}
+		if !hit {
+			return false
+		}
+	}
+	return true
+}
+
+// familyWords describes the families in words.
+var familyWords = map[string]string{
+	"IPE": "I SECTION BEAM OPEN ROLLED",
+	"HEA": "HE H SECTION WIDE FLANGE LIGHT OPEN ROLLED",
+	"HEB": "HE H SECTION WIDE FLANGE OPEN ROLLED",
+	"HEM": "HE H SECTION WIDE FLANGE HEAVY OPEN ROLLED",
+	"UPN": "U CHANNEL TAPER FLANGE OPEN ROLLED",
+	"UPE": "U CHANNEL PARALLEL FLANGE OPEN ROLLED",
+	"SHS": "SQUARE HOLLOW SECTION TUBE",
+	"RHS": "RECTANGULAR HOLLOW SECTION TUBE",
+	"CHS": "CIRCULAR ROUND HOLLOW SECTION PIPE TUBE",
+}
+
+// descriptors returns the words, in capitals, that a search may use for e.
+func descriptors(e *Entry) []string {
+	d := strings.Fields(strings.ToUpper(e.Designation) + " " + familyWords[e.Family] + " " + e.Standard)
+	d = append(d, strings.TrimPrefix(e.Standard, "EN "), strings.ReplaceAll(e.Standard, " ", ""))
+	switch e.Product {
+	case HotHollow:
+		d = append(d, "HOT", "FINISHED")
+	case ColdHollow:
+		d = append(d, "COLD", "FORMED")
+	}
+	return d
+}

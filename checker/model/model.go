@@ -1,0 +1,310 @@
+// Package model is what a calculation means: materials, sections, cases,
+// levels and members with every name resolved and every unit checked. All
+// quantities are in coherent SI units (m, N, Pa, kg, rad).
+package model
+
+import (
+	"kern/checker/action"
+	"kern/checker/catalogue"
+	"kern/checker/derivation"
+	"kern/checker/section"
+	"kern/lang"
+	"kern/lang/unit"
+)
+
+// Calculation is one root file with all that it includes.
+type Calculation struct {
+	Root    string
+	Files   []*lang.File
+	Env     *Env
+	Members []*Member // in the order of the files and of the lines
+}
+
+// Env is what the members of a calculation share.
+type Env struct {
+	Basis        Basis
+	Names        map[string]*Named
+	Cases        []*Case
+	Levels       []*Level
+	Materials    []*Material
+	Sections     []*Section
+	Combinations []Combination // written out in the text, by name
+	Values       lang.Values
+
+	// Automatic are the combinations that the actions standard makes; empty when
+	// there is none or when it could not (then Refused says why).
+	Automatic []Combination
+	Refused   string
+	// SelfWeight is the index of the case that self-weight belongs to; it is a
+	// case of its own, the last, when the calculation has no permanent case.
+	SelfWeight int
+
+	Problems []lang.Diagnostic
+	decls    []*lang.Decl // the declarations that made it, for comparison with a later text
+	members  []*lang.Decl
+
+	caseNames []*Named // of each case; nil for those that nobody declared
+}
+
+// NameKind is what a name stands for.
+type NameKind uint8
+
+// What a name can stand for.
+const (
+	ValueName NameKind = iota
+	MaterialName
+	SectionName
+	CaseName
+	CombinationName
+	LevelName
+	MemberName
+)
+
+// String names the kind with its article.
+func (k NameKind) String() string {
+	return [...]string{"a value", "a material", "a section", "a load case", "a combination", "a level", "a member"}[k]
+}
+
+// Named is a name with where it was given.
+type Named struct {
+	Name  string
+	Kind  NameKind
+	Place lang.Place
+	Stmt  *lang.Stmt
+	Index int // into the Env's list of its kind
+	Bad   bool
+}
+
+// Basis is the design basis.
+type Basis struct {
+	Stated      bool // there is a basis block
+	Place       lang.Place
+	Standard    string // "" when not stated
+	StandardAt  lang.Place
+	Annex       string
+	Actions     string // "" when not stated
+	Equation    string
+	Show        derivation.Units
+	Overrides   map[string]Override // gamma_M0, factor_yield, …
+	Recommended bool                // effective lengths: recommended design values
+	SelfWeight  bool
+	TableFy     bool // strengths from EN 1993-1-1 Table 3.1 rather than the product standard
+	Simple      bool // amplification 1/(1 - N/N_cr) for every moment diagram
+}
+
+// Override is a number of the standard that the calculation replaces.
+type Override struct {
+	Value   float64
+	Because string
+	Place   lang.Place
+}
+
+// Material is a steel grade or a material with stated values.
+type Material struct {
+	Name    string
+	Place   lang.Place
+	Grade   *catalogue.Grade // nil for stated values
+	E, G    float64          // Pa
+	Nu      float64          // Poisson's ratio; 0 when G is stated by itself
+	Density float64          // kg/m3; NaN when not known
+	Fy, Fu  float64          // Pa, of stated values; NaN when not known
+	Assumed []string
+	Bad     bool
+}
+
+// Strength is the yield and ultimate strength for a thickness in metres, and
+// the row of the table it comes from. It is false when there is none.
+func (m *Material) Strength(thickness float64, table31 bool) (fy, fu float64, source string, ok bool) {
+	if m.Grade == nil {
+		return m.Fy, m.Fu, "stated", m.Fy > 0
+	}
+	if table31 {
+		fy, fu, row, ok := m.Grade.Table31(thickness)
+		return fy, fu, "EN 1993-1-1 Table 3.1, " + m.Grade.Name + ", " + row, ok
+	}
+	fy, fu, row, ok := m.Grade.Strength(thickness)
+	return fy, fu, m.Grade.Standard + ", " + m.Grade.Name + ", " + row, ok
+}
+
+// Title is how a derivation names the material.
+func (m *Material) Title() string {
+	if m.Grade != nil {
+		return m.Grade.Name
+	}
+	return m.Name
+}
+
+// Section is a cross-section with its computed properties.
+type Section struct {
+	Name        string
+	Place       lang.Place
+	Designation string // catalogue name, "" otherwise
+	Standard    string // product standard, "" otherwise
+	Shape       section.Shape
+	section.Properties
+	// Thickness decides the strength of a grade: the thickest part, m; NaN when
+	// not known.
+	Thickness float64
+	// CurveMajor and CurveMinor are stated buckling curves ("" to look them up).
+	CurveMajor, CurveMinor string
+	Class                  int // stated cross-section class, 0 to determine it
+	Assumed                []string
+	Bad                    bool
+}
+
+// Title is how a derivation names the section.
+func (s *Section) Title() string {
+	if s.Designation != "" {
+		return s.Designation
+	}
+	return s.Name
+}
+
+// Case is a load case with where it was declared.
+type Case struct {
+	action.Case
+	Place lang.Place
+	Given string // the category as written
+	Bad   bool
+}
+
+// Level is a height with the pressures on its floor.
+type Level struct {
+	Name      string
+	At        float64 // m
+	Place     lang.Place
+	Pressures []Pressure
+	Bad       bool
+}
+
+// Pressure is a load on each square metre of a level.
+type Pressure struct {
+	Case  int
+	Value float64 // Pa
+	Place lang.Place
+}
+
+// Combination is a combination with where it was declared (a nil declaration
+// for automatic ones).
+type Combination struct {
+	action.Combination
+	Label string // the name given in the text
+	Place lang.Place
+}
+
+// Kind is what sort of member it is.
+type Kind uint8
+
+// The kinds of member.
+const (
+	Column Kind = iota
+	Strut
+	Tie
+)
+
+// String is the kind's word in the language.
+func (k Kind) String() string { return [...]string{"column", "strut", "tie"}[k] }
+
+// Axis is a bending axis of a member.
+type Axis uint8
+
+// The axes of a member.
+const (
+	Major Axis = iota
+	Minor
+)
+
+// String is the axis's word in the language.
+func (a Axis) String() string { return [...]string{"major", "minor"}[a] }
+
+// Member is a column, strut or tie, ready to be checked.
+type Member struct {
+	Name, Title string
+	Kind        Kind
+	Decl        *lang.Decl
+	NameSpan    lang.Span
+	Stmt        *lang.Stmt
+
+	Section   *Section
+	Material  *Material
+	SectionAt lang.Place
+	MaterialAt,
+	HeightAt lang.Place
+
+	Height    float64 // m
+	From      float64 // height of the base above datum, m
+	Base, Top [2]action.End
+	Holds     []Hold
+	Factor    [3]float64 // effective length factors of the user: major, minor, twist; 0 for none
+	Loads     []Load
+	Weight    bool // self-weight counts
+
+	Limits   Limits
+	Requires []Require
+	Departs  []Departure
+	Notes    []string
+
+	Assumed []string
+	// Missing is why the member cannot be judged; its checks are then undecided.
+	Missing []string
+	Uses    []*Named
+	As      *lang.Decl // the declaration it leans on, nil for none
+
+	Problems []lang.Diagnostic
+}
+
+// Hold is a point between the ends where the member is restrained.
+type Hold struct {
+	At                  float64 // height above the base, m
+	Major, Minor, Twist bool
+	Place               lang.Place
+}
+
+// LoadKind is how a load acts.
+type LoadKind uint8
+
+// The kinds of load.
+const (
+	AxialLoad LoadKind = iota // along the member, compression positive
+	PointLoad                 // across the member
+	LineLoad                  // across the member, per length
+	EndMoment                 // a moment
+)
+
+// Load is one load of one case on a member.
+type Load struct {
+	Case   int
+	Kind   LoadKind
+	Value  float64 // N, N/m or Nm
+	At, To float64 // heights above the base, m; To of a line load
+	Axis   Axis    // of PointLoad, LineLoad and EndMoment
+	// Offset is the distance of an axial load from the centroid: it bends the
+	// member about the major and the minor axis, m.
+	Offset [2]float64
+	Place  lang.Place
+}
+
+// Limits are the bounds that a calculation sets itself; zero for none.
+type Limits struct {
+	Utilisation, Slenderness float64
+	Sway                     float64 // m
+	UtilisationAt            lang.Place
+	SlendernessAt            lang.Place
+	SwayAt                   lang.Place
+}
+
+// Require is a condition on a result.
+type Require struct {
+	Symbol   string
+	Compare  string // < <= > >=
+	Quantity unit.Quantity
+	Because  string
+	Place    lang.Place
+	SymbolAt lang.Span
+}
+
+// Departure is a rule that the member is allowed to break, with the reason.
+type Departure struct {
+	Rule, Because string
+	Place         lang.Place
+}

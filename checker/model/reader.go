@@ -1,0 +1,308 @@
+package model
+
+import (
+	"fmt"
+	"strings"
+
+	"kern/lang"
+	"kern/lang/unit"
+)
+
+// reader reads the parts of one statement in order. It reports the first thing
+// that is wrong and is silent after that.
+type reader struct {
+	env    *Env
+	decl   *lang.Decl
+	stmt   *lang.Stmt
+	args   []*lang.Expr
+	report func(lang.Diagnostic)
+	names  lang.Lookup
+	failed bool
+}
+
+func (r *reader) problem(p lang.Problem) {
+	if r.failed || p.Rule == "" {
+		r.failed = true
+		return
+	}
+	r.failed = true
+	r.report(lang.Diagnostic{Decl: r.decl, Problem: p})
+}
+
+func (r *reader) fail(rule string, span lang.Span, format string, args ...any) {
+	r.problem(lang.Problem{Rule: rule, Span: span, Message: fmt.Sprintf(format, args...)})
+}
+
+// place is a span of the statement's declaration.
+func (r *reader) place(span lang.Span) lang.Place { return lang.Place{Decl: r.decl, Span: span} }
+
+// peek is the next part, nil at the end.
+func (r *reader) peek() *lang.Expr {
+	if len(r.args) == 0 {
+		return nil
+	}
+	return r.args[0]
+}
+
+func (r *reader) take() *lang.Expr {
+	e := r.peek()
+	if e != nil {
+		r.args = r.args[1:]
+	}
+	return e
+}
+
+// after is the span just behind what was read, for things that are missing.
+func (r *reader) after() lang.Span {
+	if e := r.peek(); e != nil {
+		return e.Span
+	}
+	return r.stmt.Line
+}
+
+// word takes the next part when it is one of the words.
+func (r *reader) word(words ...string) (string, bool) {
+	if e := r.peek(); e != nil && e.Kind == lang.NameExpr {
+		for _, w := range words {
+			if e.Text == w {
+				r.take()
+				return w, true
+			}
+		}
+	}
+	return "", false
+}
+
+// wordOf is word for a part that must be there.
+func (r *reader) wordOf(what string, words ...string) (string, bool) {
+	if w, ok := r.word(words...); ok {
+		return w, true
+	}
+	e := r.peek()
+	switch {
+	case e == nil:
+		r.fail("wrong-form", r.stmt.Line, "%s is missing: %s", what, lang.OrList(words))
+	case e.Kind == lang.NameExpr:
+		p := lang.Problem{Rule: "unknown-word", Span: e.Span, Message: fmt.Sprintf("'%s' is no %s: %s", e.Text, strings.TrimPrefix(strings.TrimPrefix(what, "the "), "an "), lang.OrList(words))}
+		for _, n := range closest(e.Text, words, 1) {
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, true, e.Span, n))
+		}
+		r.problem(p)
+	default:
+		r.fail("wrong-form", e.Span, "%s is due here: %s", what, lang.OrList(words))
+	}
+	return "", false
+}
+
+// text takes a quoted text.
+func (r *reader) text(what string) (string, bool) {
+	e := r.peek()
+	if e != nil && e.Kind == lang.StringExpr {
+		r.take()
+		return e.Text, true
+	}
+	if e != nil && e.Kind == lang.NameExpr {
+		r.problem(lang.Problem{Rule: "wrong-form", Span: e.Span, Message: what + " stands in quotes",
+			Fixes: []lang.Fix{lang.Replace("Put it in quotes", true, e.Span, `"`+e.Text+`"`)}})
+		return "", false
+	}
+	r.fail("wrong-form", r.after(), "%s is due here, in quotes", what)
+	return "", false
+}
+
+// because takes the reason that an override or departure must give.
+func (r *reader) because() (string, bool) {
+	if _, ok := r.word("because"); !ok {
+		end := r.stmt.Line.End
+		r.problem(lang.Problem{Rule: "missing-reason", Span: r.stmt.Line, Message: "this departs from the standard: say why with because \"…\"",
+			Fixes: []lang.Fix{lang.Replace("Add a reason", false, lang.Span{Start: end, End: end}, ` because "…"`)}})
+		return "", false
+	}
+	e := r.peek()
+	reason, ok := r.text("the reason")
+	if ok && (strings.TrimSpace(reason) == "" || reason == "…") {
+		r.fail("missing-reason", e.Span, "the reason is empty")
+		return "", false
+	}
+	return reason, ok
+}
+
+// end complains about parts that nobody took.
+func (r *reader) end() bool {
+	if e := r.peek(); e != nil && !r.failed {
+		last := r.args[len(r.args)-1]
+		r.problem(lang.Problem{Rule: "left-over", Span: e.Span.Join(last.Span), Message: "'" + clip(e.Span.Of(r.decl.Text)) + "' does not belong here: a '" + r.stmt.Word + "' statement ends before it",
+			Fixes: []lang.Fix{lang.Replace("Remove it", false, e.Span.Join(last.Span), "")}})
+	}
+	return !r.failed
+}
+
+func clip(s string) string {
+	if len(s) > 30 {
+		return strings.ToValidUTF8(s[:30], "") + "…"
+	}
+	return s
+}
+
+// want is a quantity that a place needs.
+type want struct {
+	what string // with article: "a height"
+	dim  unit.Dim
+	unit string // the unit to offer for a bare number
+	// min and max bound what can be, in SI units; zero for no bound.
+	min, max float64
+	signed   bool // negative values make sense
+	zero     bool // zero makes sense
+}
+
+// quantity takes an expression and gives its value in SI units.
+func (r *reader) quantity(w want) (float64, lang.Span, bool) {
+	e := r.take()
+	if e == nil {
+		r.problem(lang.Problem{Rule: "missing-value", Span: r.stmt.Line, Message: w.what + " is missing"})
+		return 0, lang.Span{}, false
+	}
+	if e.Kind == lang.EqualsExpr || e.Kind == lang.CommaExpr || e.Kind == lang.CompareExpr {
+		r.fail("wrong-form", e.Span, "%s is due here", w.what)
+		return 0, e.Span, false
+	}
+	if e.Kind == lang.QuantExpr && e.Unit.Symbol == "" {
+		r.problem(*lang.UnknownUnit(e, w.dim, false))
+		return 0, e.Span, false
+	}
+	q, p := lang.Eval(e, r.names)
+	if p != nil {
+		r.problem(*p)
+		return 0, e.Span, false
+	}
+	if q.Dim != w.dim {
+		r.problem(mismatch(e, q, w))
+		return 0, e.Span, false
+	}
+	return q.Value, e.Span, r.possible(e, q.Value, w)
+}
+
+// possible refuses values that cannot be what was meant.
+func (r *reader) possible(e *lang.Expr, v float64, w want) bool {
+	switch {
+	case v < 0 && !w.signed:
+		r.fail("impossible-value", e.Span, "%s cannot be negative", w.what)
+	case v == 0 && !w.zero:
+		r.fail("impossible-value", e.Span, "%s cannot be zero", w.what)
+	case w.min > 0 && v != 0 && abs(v) < w.min, w.max > 0 && abs(v) > w.max:
+		r.problem(magnitude(e, v, w))
+	default:
+		return true
+	}
+	return false
+}
+
+func abs(x float64) float64 {
+	if x < 0 {
+		return -x
+	}
+	return x
+}
+
+// magnitude is the problem of a value that is out by powers of ten; a unit that
+// brings it into the range is offered.
+func magnitude(e *lang.Expr, v float64, w want) lang.Problem {
+	v = abs(v)
+	side, bound := "low", w.min
+	if w.max > 0 && v > w.max {
+		side, bound = "high", w.max
+	}
+	show := func(x float64) string {
+		for _, u := range unit.For(w.dim) {
+			if y := x / u.Factor; y >= 0.1 && y < 10000 {
+				return unit.Number(y, 3) + " " + u.Symbol
+			}
+		}
+		return unit.Number(x, 3) + " " + w.dim.Base()
+	}
+	p := lang.Problem{Rule: "impossible-value", Span: e.Span,
+		Message: fmt.Sprintf("%s of %s is far too %s to be meant: the limit is %s", w.what, show(v), side, show(bound))}
+	if w.dim.IsNone() {
+		p.Message = fmt.Sprintf("%s of %s is far too %s to be meant: the limit is %s", w.what, unit.Number(v, 3), side, unit.Number(bound, 3))
+	}
+	if e.Kind != lang.QuantExpr {
+		return p
+	}
+	for _, u := range unit.For(w.dim) {
+		x := e.Value * u.Factor
+		ratio := x / v
+		if (w.min == 0 || x >= w.min) && (w.max == 0 || x <= w.max) && u.Symbol != e.Text && powerOfTen(ratio) {
+			p.Notes = append(p.Notes, fmt.Sprintf("%s would be %s times as much", unit.Exact(e.Value)+" "+u.Symbol, unit.Number(ratio, 1)))
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+unit.Exact(e.Value)+" "+u.Symbol, false, e.UnitSpan(), u.Symbol))
+			break
+		}
+	}
+	return p
+}
+
+func powerOfTen(x float64) bool {
+	for _, p := range []float64{10, 100, 1e3, 1e6, 1e9, 1e-1, 1e-2, 1e-3, 1e-6, 1e-9} {
+		if abs(x/p-1) < 1e-9 {
+			return true
+		}
+	}
+	return false
+}
+
+// mismatch is the problem of a quantity of another dimension than is due.
+func mismatch(e *lang.Expr, q unit.Quantity, w want) lang.Problem {
+	src := func(suffix string) lang.Fix {
+		at := lang.Span{Start: e.Span.End, End: e.Span.End}
+		return lang.Fix{Edits: []lang.Edit{{Place: lang.Place{Span: at}, New: suffix}}}
+	}
+	switch {
+	case q.Dim.IsNone() && !w.dim.IsNone():
+		p := lang.Problem{Rule: "missing-unit", Span: e.Span, Message: fmt.Sprintf("%s needs a unit of %s; this is a bare number", w.what, w.dim.Name())}
+		if e.Kind == lang.NumberExpr {
+			units := []string{w.unit}
+			for _, u := range unit.For(w.dim) {
+				if len(units) < 4 && u.Symbol != w.unit {
+					units = append(units, u.Symbol)
+				}
+			}
+			for _, u := range units {
+				if u == "" {
+					continue
+				}
+				f := src(" " + u)
+				f.Title = "Write " + unit.Exact(e.Value) + " " + u
+				p.Fixes = append(p.Fixes, f)
+			}
+			if w.unit != "" {
+				p.Message += fmt.Sprintf(", write for instance %s %s", unit.Exact(e.Value), w.unit)
+			}
+		}
+		return p
+	case q.Dim == unit.Mass && w.dim == unit.Force:
+		p := lang.Problem{Rule: "mass-for-force", Span: e.Span, Message: fmt.Sprintf("%s is a force; this is a mass. Say kgf for the weight of a kilogram, or multiply by g", w.what)}
+		if e.Kind == lang.QuantExpr && e.Text == "kg" {
+			p.Fixes = append(p.Fixes, lang.Replace("Write kgf", false, e.UnitSpan(), "kgf"))
+		}
+		if e.Kind == lang.QuantExpr && e.Text == "lb" {
+			p.Fixes = append(p.Fixes, lang.Replace("Write lbf", false, e.UnitSpan(), "lbf"))
+		}
+		f := src(" * g")
+		f.Title = "Multiply by g"
+		p.Fixes = append(p.Fixes, f)
+		return p
+	}
+	p := lang.Problem{Rule: "wrong-unit", Span: e.Span, Message: fmt.Sprintf("%s is a %s; this is a %s", w.what, w.dim.Name(), q.Dim.Name())}
+	if w.dim.IsNone() {
+		p.Message = fmt.Sprintf("%s is a pure number; this is a %s", w.what, q.Dim.Name())
+		if e.Kind == lang.QuantExpr {
+			p.Fixes = append(p.Fixes, lang.Replace("Remove the unit", false, lang.Span{Start: e.Span.Start, End: e.Span.End}, unit.Exact(e.Value)))
+		}
+	} else if e.Kind == lang.QuantExpr {
+		for _, n := range unit.Nearest(e.Text, w.dim, false, 2) {
+			if u, err := unit.Parse(n); err == nil && u.Dim == w.dim {
+				p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.UnitSpan(), n))
+			}
+		}
+	}
+	return p
+}

@@ -1,0 +1,344 @@
+package standard
+
+import (
+	"fmt"
+	"math"
+
+	"kern/checker/action"
+	"kern/checker/model"
+	"kern/lang"
+	"kern/lang/unit"
+)
+
+// Frame is a member as every standard starts from it: its stretches between
+// holds, and the axial force and moments of each combination.
+type Frame struct {
+	Member       *model.Member
+	Env          *model.Env
+	Combinations []model.Combination
+
+	// Stretches between points held against buckling about major and minor;
+	// Stands is false about an axis for a mechanism.
+	Stretches [2][]action.Stretch
+	Stands    [2]bool
+	// Twist is the greatest distance between points held against twist; with
+	// TwistFree an end can turn about the member's own axis.
+	Twist     float64
+	TwistK    float64 // the user's factor on it, 1 otherwise
+	TwistFree bool
+
+	// Bends tells about which axes there is bending; Pushed where it comes (also)
+	// from loads across the member.
+	Bends, Pushed [2]bool
+
+	cuts   []float64   // heights where the axial force changes, from 0 to the height
+	axial  [][]float64 // [combination][segment] compression at the segment's bottom
+	weight []float64   // [combination] self-weight per length times its factor
+	beams  [2][][]action.Piece
+	beamOK [2]bool
+}
+
+// NewFrame works out the mechanics of a member that lacks nothing.
+func NewFrame(env *model.Env, m *model.Member, combinations []model.Combination) *Frame {
+	f := &Frame{Member: m, Env: env, Combinations: combinations, TwistK: 1}
+	f.split()
+	f.forces()
+	f.moments()
+	return f
+}
+
+// split finds the stretches about each axis and between points held in twist.
+func (f *Frame) split() {
+	m := f.Member
+	for axis := range f.Stretches {
+		var holds []float64
+		for _, h := range m.Holds {
+			if axis == 0 && h.Major || axis == 1 && h.Minor {
+				holds = append(holds, h.At)
+			}
+		}
+		f.Stretches[axis], f.Stands[axis] = action.Stretches(m.Base[axis], m.Top[axis], holds, m.Height, f.Env.Basis.Recommended)
+		if k := m.Factor[axis]; k > 0 {
+			if !f.Stands[axis] || len(f.Stretches[axis]) == 1 && f.Stretches[axis][0].Exact {
+				f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis]}}
+				f.Stands[axis] = true
+			}
+			for i := range f.Stretches[axis] {
+				s := &f.Stretches[axis][i]
+				s.K, s.Overridden, s.Exact = k, true, false
+			}
+		}
+	}
+	last := 0.0
+	for _, h := range m.Holds {
+		if h.Twist {
+			f.Twist = max(f.Twist, h.At-last)
+			last = h.At
+		}
+	}
+	f.Twist = max(f.Twist, m.Height-last)
+	f.TwistFree = m.Top[0] == action.Free || m.Top[1] == action.Free || m.Base[0] == action.Free || m.Base[1] == action.Free
+	if k := m.Factor[2]; k > 0 {
+		f.TwistK, f.TwistFree = k, false
+	}
+}
+
+// forces adds up the axial force from the top down.
+func (f *Frame) forces() {
+	m := f.Member
+	f.cuts = append(f.cuts, 0)
+	insert := func(z float64) {
+		for i, c := range f.cuts {
+			if math.Abs(c-z) <= 1e-9*m.Height {
+				return
+			}
+			if z < c {
+				f.cuts = append(f.cuts[:i], append([]float64{z}, f.cuts[i:]...)...)
+				return
+			}
+		}
+		f.cuts = append(f.cuts, z)
+	}
+	insert(m.Height)
+	for _, h := range m.Holds {
+		insert(h.At)
+	}
+	for _, l := range m.Loads {
+		if l.Kind == model.AxialLoad {
+			insert(l.At)
+		}
+	}
+	cases := len(f.Env.Cases)
+	segments := len(f.cuts) - 1
+	of := make([]float64, cases*segments) // [case][segment]
+	for _, l := range m.Loads {
+		if l.Kind != model.AxialLoad {
+			continue
+		}
+		for s := range segments {
+			if f.cuts[s+1] <= l.At+1e-9*m.Height {
+				of[l.Case*segments+s] += l.Value
+			}
+		}
+	}
+	own := 0.0
+	if m.Weight {
+		own = m.Material.Density * m.Section.Area * unit.StandardGravity
+	}
+	f.axial = make([][]float64, len(f.Combinations))
+	f.weight = make([]float64, len(f.Combinations))
+	flat := make([]float64, len(f.Combinations)*segments)
+	for c, combination := range f.Combinations {
+		row := flat[c*segments : (c+1)*segments]
+		for k, factor := range combination.Factors {
+			if factor != 0 {
+				for s := range row {
+					row[s] += factor * of[k*segments+s]
+				}
+			}
+		}
+		f.weight[c] = f.ownFactor(combination) * own
+		for s := range row {
+			row[s] += f.weight[c] * (m.Height - f.cuts[s])
+		}
+		f.axial[c] = row
+	}
+}
+
+// ownFactor is the factor that self-weight has in a combination: that of the
+// permanent case it belongs to; a combination written out that leaves this case
+// out takes the greatest factor of its permanent cases, or 1.
+func (f *Frame) ownFactor(c model.Combination) float64 {
+	if v := c.Factors[f.Env.SelfWeight]; v != 0 || c.Label == "" {
+		return v
+	}
+	factor := 0.0
+	for i, k := range f.Env.Cases {
+		if k.Kind == action.Permanent {
+			factor = max(factor, c.Factors[i])
+		}
+	}
+	if factor == 0 {
+		return 1
+	}
+	return factor
+}
+
+// Compression is the greatest compression of a combination between two
+// heights, N; negative when there is tension throughout.
+func (f *Frame) Compression(combination int, from, to float64) float64 {
+	most := math.Inf(-1)
+	eps := 1e-9 * f.Member.Height
+	for s, n := range f.axial[combination] {
+		if f.cuts[s+1] > from+eps && f.cuts[s] < to-eps {
+			most = max(most, n, f.top(combination, s))
+		}
+	}
+	return most
+}
+
+// Tension is the greatest tension of a combination anywhere, N; negative when
+// there is compression throughout.
+func (f *Frame) Tension(combination int) float64 {
+	most := math.Inf(-1)
+	for s, n := range f.axial[combination] {
+		most = max(most, -n, -f.top(combination, s))
+	}
+	return most
+}
+
+// At is the compression of a combination at a height, N; at a height where a
+// load comes in, the value below it.
+func (f *Frame) At(combination int, z float64) float64 {
+	eps := 1e-9 * f.Member.Height
+	for s := len(f.cuts) - 2; s >= 0; s-- {
+		if f.cuts[s] < z-eps || s == 0 {
+			return f.axial[combination][s] - f.weight[combination]*(max(z, f.cuts[s])-f.cuts[s])
+		}
+	}
+	return math.NaN()
+}
+
+func (f *Frame) top(combination, segment int) float64 {
+	return f.axial[combination][segment] - f.weight[combination]*(f.cuts[segment+1]-f.cuts[segment])
+}
+
+// Heights are where the axial force can have its extremes.
+func (f *Frame) Heights() []float64 { return f.cuts }
+
+// moments analyses the member as a beam about each axis that is bent.
+func (f *Frame) moments() {
+	m := f.Member
+	for _, l := range m.Loads {
+		switch l.Kind {
+		case model.AxialLoad:
+			for a, e := range l.Offset {
+				f.Bends[a] = f.Bends[a] || e != 0 && l.Value != 0
+			}
+		case model.EndMoment:
+			f.Bends[l.Axis] = f.Bends[l.Axis] || l.Value != 0
+		default:
+			f.Bends[l.Axis] = f.Bends[l.Axis] || l.Value != 0
+			f.Pushed[l.Axis] = f.Pushed[l.Axis] || l.Value != 0
+		}
+	}
+	for axis, bends := range f.Bends {
+		if !bends {
+			continue
+		}
+		beam := action.Beam{Base: m.Base[axis], Top: m.Top[axis], Height: m.Height}
+		for _, h := range m.Holds {
+			if axis == 0 && h.Major || axis == 1 && h.Minor {
+				beam.Holds = append(beam.Holds, h.At)
+			}
+		}
+		loadings := make([][]action.Push, len(f.Env.Cases))
+		for _, l := range m.Loads {
+			p := action.Push{From: l.At}
+			switch {
+			case l.Kind == model.AxialLoad && l.Offset[axis] != 0:
+				p.Moment = l.Value * l.Offset[axis]
+			case l.Kind == model.AxialLoad || int(l.Axis) != axis:
+				continue
+			case l.Kind == model.EndMoment:
+				p.Moment = l.Value
+			case l.Kind == model.PointLoad:
+				p.Force = l.Value
+			case l.Kind == model.LineLoad:
+				p.Line, p.To = l.Value, l.To
+			}
+			loadings[l.Case] = append(loadings[l.Case], p)
+		}
+		pieces, err := beam.Solve(loadings)
+		f.beams[axis], f.beamOK[axis] = pieces, err == nil
+	}
+}
+
+// Bending gives the first-order moments of a combination about an axis, in
+// pieces from the base up. It is false when the member cannot stand; without
+// bending it is empty.
+func (f *Frame) Bending(axis int, factors []float64, into []action.Piece) ([]action.Piece, bool) {
+	if !f.Bends[axis] {
+		return into[:0], true
+	}
+	if !f.beamOK[axis] {
+		return into[:0], false
+	}
+	return action.Add(f.beams[axis], factors, into), true
+}
+
+// StretchName says in words which part of the member a stretch is.
+func (f *Frame) StretchName(axis int, s action.Stretch) string {
+	if len(f.Stretches[axis]) == 1 {
+		return "the whole height"
+	}
+	return fmt.Sprintf("the stretch from %s m to %s m", number(s.From), number(s.To))
+}
+
+func number(x float64) string { return unit.Exact(math.Round(x*1e4) / 1e4) }
+
+// Assumptions are the assumptions that every standard shares.
+func (f *Frame) Assumptions() []string {
+	m := f.Member
+	out := append([]string(nil), m.Assumed...)
+	out = append(out, m.Section.Assumed...)
+	out = append(out, m.Material.Assumed...)
+	for axis, name := range []string{"major", "minor"} {
+		for _, s := range f.Stretches[axis] {
+			kind := "theoretical"
+			switch {
+			case s.Overridden:
+				kind = "stated"
+			case s.Exact:
+				kind = "solved for the whole column, as its free end stands beyond a hold"
+			case f.Env.Basis.Recommended:
+				kind = "recommended for design"
+			}
+			out = append(out, fmt.Sprintf("K = %s %s over %s (%s–%s, %s)", unit.Number(s.K, 3), name, f.StretchName(axis, s), s.Base, s.Top, kind))
+		}
+	}
+	switch {
+	case m.Weight:
+		c := f.Env.Cases[f.Env.SelfWeight].Name
+		w := m.Material.Density * m.Section.Area * unit.StandardGravity
+		out = append(out, fmt.Sprintf("self-weight %s kN in all, in case %s", unit.Number(w*m.Height/1e3, 3), c))
+	case m.Kind == model.Column:
+		out = append(out, "self-weight not counted")
+	}
+	if f.Env.Basis.Actions == "" {
+		if len(f.Env.Combinations) > 0 {
+			out = append(out, "only the combinations written out are checked (no actions standard is stated)")
+		} else {
+			out = append(out, "all cases summed with factor 1 (no actions standard is stated)")
+		}
+	}
+	return out
+}
+
+// Utilisation judges a demand against a capacity: undecided unless both are
+// finite and the capacity is positive.
+func Utilisation(u, limit float64) Verdict {
+	switch {
+	case math.IsNaN(u) || math.IsInf(u, 0) || u < 0:
+		return Undecided
+	case u <= limit:
+		return Passes
+	}
+	return Fails
+}
+
+// Limit is the utilisation that the member may reach.
+func (f *Frame) Limit() float64 {
+	if l := f.Member.Limits.Utilisation; l > 0 {
+		return l
+	}
+	return 1
+}
+
+// NameOf cuts a place's text out, for messages.
+func NameOf(p lang.Place) string {
+	if p.Decl == nil {
+		return ""
+	}
+	return p.Span.Of(p.Decl.Text)
+}

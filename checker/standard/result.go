@@ -1,0 +1,95 @@
+// Package standard is what every design standard is to the checker: a small
+// interface, and the mechanics that all of them start from.
+package standard
+
+import (
+	"kern/checker/derivation"
+	"kern/checker/model"
+	"kern/lang/unit"
+)
+
+// Standard checks members by one design standard.
+type Standard interface {
+	// Name is the name that a basis states.
+	Name() string
+	// Annexes are the sets of national values; the first is the default.
+	Annexes() []string
+	// Overrides are the numbers that a basis may replace, with whether it must
+	// say why.
+	Overrides() map[string]bool
+	// Rules are the checks that the standard makes.
+	Rules() []string
+	// Symbols are the letters that its derivations use.
+	Symbols() *derivation.Set
+	// Alias turns the trade's words into a symbol ("N_b_minor"); "" when it is
+	// none.
+	Alias(word string) string
+	// Check judges a member. With a record the steps of the governing checks are
+	// written down; without, nothing is composed that is not needed.
+	Check(f *Frame, record *derivation.Record) *Outcome
+}
+
+// Verdict is the answer of a check or a member.
+type Verdict uint8
+
+// The three verdicts. Undecided is never a pass.
+const (
+	Undecided Verdict = iota
+	Passes
+	Fails
+)
+
+// String is the word that every output prints.
+func (v Verdict) String() string { return [...]string{"undecided", "passes", "fails"}[v] }
+
+// Check is one row of a member's results.
+type Check struct {
+	Rule        string
+	Clause      string
+	Combination int     // index into the frame's combinations, -1 when it does not depend on one
+	Demand      float64 // SI units of Dim
+	Capacity    float64
+	Dim         unit.Dim
+	Utilisation float64 // NaN when undecided
+	Verdict     Verdict
+	Why         string // of an undecided check, or what a failing one is about
+	Departed    bool   // the member departs from this rule
+}
+
+// State says whether a check that the standard asks for was made.
+type State uint8
+
+// The states of coverage.
+const (
+	Checked State = iota
+	NotApplicable
+	NotCovered
+)
+
+// String is the words that every output prints.
+func (s State) String() string { return [...]string{"checked", "not applicable", "not covered"}[s] }
+
+// Coverage is one line of what was checked and what not.
+type Coverage struct {
+	Rule  string
+	State State
+	Why   string // why it does not apply, or what a person must do by hand
+}
+
+// Outcome is what a standard says of a member.
+type Outcome struct {
+	Checks      []Check
+	Coverage    []Coverage
+	Assumptions []string
+	// Value gives the result of a symbol for requirements; false when the
+	// calculation did not come to it.
+	Value func(symbol string) (unit.Quantity, bool)
+}
+
+// Overridden gives a number of the standard and whether the basis replaces it.
+func Overridden(basis *model.Basis, name string, standard float64) (float64, bool) {
+	if o, ok := basis.Overrides[name]; ok {
+		return o.Value, true
+	}
+	return standard, false
+}
