@@ -64,10 +64,22 @@ func (p Piece) Largest() (moment, height float64) {
 // ErrMechanism is returned for a beam that cannot stand.
 var ErrMechanism = errors.New("the column cannot stand: nothing holds it in place")
 
+// ErrAccuracy is returned when heights lie so close together that the solution
+// has lost its digits.
+var ErrAccuracy = errors.New("heights of loads or holds lie too close together to solve the column exactly")
+
+// ErrLoading is returned for a height, load or hold that is not a finite number
+// or does not lie on the column.
+var ErrLoading = errors.New("a load or hold is not a number or lies outside the column")
+
 // Solve gives the pieces of the beam under each of several loadings, all cut at
 // the same heights so that they can be added up. The analysis is exact: elastic
-// beam theory, first order, stiffness method.
+// beam theory, first order, stiffness method. The error is ErrLoading,
+// ErrMechanism or ErrAccuracy.
 func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
+	if err := b.check(loadings); err != nil {
+		return nil, err
+	}
 	nodes := b.nodes(loadings)
 	n := len(nodes)
 	size := 2 * n
@@ -89,11 +101,15 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 			}
 		}
 	}
-	line := make([][]float64, len(loadings)) // of each loading, the line load in each part
+	line := make([][]float64, len(loadings))  // of each loading, the line load in each part
+	nodal := make([][]float64, len(loadings)) // and the force and moment on each node
 	for j, pushes := range loadings {
 		line[j] = make([]float64, n-1)
+		nodal[j] = make([]float64, size)
 		for _, p := range pushes {
 			at := nodeAt(nodes, p.From)
+			nodal[j][2*at] += p.Force
+			nodal[j][2*at+1] += p.Moment
 			k[2*at][size+j] += p.Force
 			k[2*at+1][size+j] += p.Moment
 			if p.Line != 0 {
@@ -117,9 +133,21 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 		}
 	}
 	fixed[0] = fixed[0] || b.Base.held()
-	fixed[1] = b.Base == Fixed || b.Base == Guided
+	fixed[1] = b.Base.clamped()
 	fixed[size-2] = fixed[size-2] || b.Top.held()
-	fixed[size-1] = b.Top == Fixed || b.Top == Guided
+	fixed[size-1] = b.Top.clamped()
+	// Two points kept in place, or one and an end kept from turning. The pivots
+	// cannot tell: a short part makes their rounding errors larger than the
+	// stiffness of the rest.
+	held := 0
+	for i := range nodes {
+		if fixed[2*i] {
+			held++
+		}
+	}
+	if held == 0 || held == 1 && !fixed[1] && !fixed[size-1] {
+		return nil, ErrMechanism
+	}
 	u, err := eliminate(k, fixed, size, b.Height)
 	if err != nil {
 		return nil, err
@@ -134,8 +162,80 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 			m1 := 6/(l*l)*(v1-v2) + (4*r1+2*r2)/l - w*l*l/12
 			out[j][i] = Piece{From: nodes[i], To: nodes[i+1], M: -m1, V: f1, Line: w, D: v1, R: r1}
 		}
+		if !balanced(out[j], nodal[j], fixed, b.Height) {
+			return nil, ErrAccuracy
+		}
 	}
 	return out, nil
+}
+
+// balanced tells whether the forces and moments on every node that is free to
+// follow them are in equilibrium with its loads within a thousandth of all
+// loads. Parts much shorter than a thousandth of the column lose the digits of
+// their ends' deflections.
+func balanced(pieces []Piece, nodal []float64, fixed []bool, height float64) bool {
+	scale := 0.0 // N
+	for i, p := range pieces {
+		if !finite(p.M, p.V, p.D, p.R) {
+			return false
+		}
+		scale += math.Abs(p.Line*(p.To-p.From)) + math.Abs(nodal[2*i]) + math.Abs(nodal[2*i+1])/height
+	}
+	last := len(nodal) - 2
+	scale += math.Abs(nodal[last]) + math.Abs(nodal[last+1])/height
+	limit := 1e-3 * scale
+	for i := 0; i <= len(pieces); i++ {
+		force, moment := nodal[2*i], nodal[2*i+1]
+		if i > 0 {
+			l := pieces[i-1].To - pieces[i-1].From
+			force += pieces[i-1].Shear(l)
+			moment -= pieces[i-1].Moment(l)
+		}
+		if i < len(pieces) {
+			force -= pieces[i].V
+			moment += pieces[i].M
+		}
+		if !fixed[2*i] && !(math.Abs(force) <= limit) || !fixed[2*i+1] && !(math.Abs(moment) <= limit*height) {
+			return false
+		}
+	}
+	return true
+}
+
+// check is ErrLoading when something is not finite, lies outside the column
+// (within a billionth of it) or is a line load that ends before it begins.
+func (b Beam) check(loadings [][]Push) error {
+	slack := 1e-9 * b.Height
+	inside := func(z float64) bool { return z >= -slack && z <= b.Height+slack }
+	if !finite(b.Height) || !(b.Height > 0) {
+		return ErrLoading
+	}
+	for _, h := range b.Holds {
+		if !inside(h) {
+			return ErrLoading
+		}
+	}
+	for _, pushes := range loadings {
+		for _, p := range pushes {
+			if !finite(p.Force, p.Moment, p.Line) || !inside(p.From) {
+				return ErrLoading
+			}
+			if p.Line != 0 && !(inside(p.To) && p.To >= p.From) {
+				return ErrLoading
+			}
+		}
+	}
+	return nil
+}
+
+// finite tells whether all numbers are finite.
+func finite(x ...float64) bool {
+	for _, v := range x {
+		if math.IsNaN(v) || math.IsInf(v, 0) {
+			return false
+		}
+	}
+	return true
 }
 
 // nodes are the heights where something holds, pushes or changes.

@@ -123,11 +123,13 @@ func Persistent(cases []Case, f Factors) ([]Combination, bool) {
 	var out []Combination
 	seen := map[string]bool{}
 	add := func(factors []float64) {
-		name := Sum(cases, factors)
-		if name != "" && !seen[name] {
-			seen[name] = true
-			out = append(out, Combination{Name: name, Factors: factors, Source: "EN 1990:2002 (6.10)"})
+		// by the factors, not by the name: cases may share one, and it is rounded
+		key := fmt.Sprint(factors)
+		if nothing(factors) || seen[key] {
+			return
 		}
+		seen[key] = true
+		out = append(out, Combination{Name: Sum(cases, factors), Factors: factors, Source: "EN 1990:2002 (6.10)"})
 	}
 	for _, g := range gammas {
 		base := make([]float64, len(cases))
@@ -162,6 +164,16 @@ func Persistent(cases []Case, f Factors) ([]Combination, bool) {
 		}
 	}
 	return out, true
+}
+
+// nothing tells whether no case has a part in a combination.
+func nothing(factors []float64) bool {
+	for _, f := range factors {
+		if f != 0 {
+			return false
+		}
+	}
+	return true
 }
 
 // Sum writes a combination as a person does, leaving out what has no part.

@@ -40,18 +40,22 @@ type Bar struct {
 // Critical is the factor by which the reference forces must grow until the bar
 // buckles, by the stiffness method with exact stability functions: the least
 // factor at which the stiffness matrix stops being positive definite. Zero for
-// a mechanism, +Inf when nothing is compressed.
+// a mechanism and for a part without a positive length and stiffness, +Inf when
+// nothing is compressed.
 func (b *Bar) Critical() float64 {
 	// No part can carry more than if it were clamped at both ends: there the
 	// stability functions pass their first pole.
 	limit := math.Inf(1)
 	for i, n := range b.Force {
+		l := b.Nodes[i+1] - b.Nodes[i]
+		if !(l > 0) || !(b.Stiffness[i] > 0) || !finite(l, n, b.Stiffness[i]) {
+			return 0
+		}
 		if n > 0 {
-			l := b.Nodes[i+1] - b.Nodes[i]
 			limit = min(limit, 4*pi*pi*b.Stiffness[i]/(l*l*n))
 		}
 	}
-	if !b.stable(0) {
+	if !b.stands() || !b.stable(0) {
 		return 0
 	}
 	if math.IsInf(limit, 1) {
@@ -75,6 +79,57 @@ func (b *Bar) Critical() float64 {
 	return low
 }
 
+// holds tells whether something rigid keeps a node in place.
+func (b *Bar) holds(i int) bool {
+	switch i {
+	case 0:
+		return b.Base.held()
+	case len(b.Nodes) - 1:
+		return b.Top.held()
+	}
+	return i < len(b.Held) && b.Held[i]
+}
+
+// stands tells whether the bar, taken as rigid, can neither shift nor turn. The
+// pivots of the stiffness matrix cannot tell: a short part makes their rounding
+// errors larger than the stiffness of the rest.
+func (b *Bar) stands() bool {
+	height := b.Nodes[len(b.Nodes)-1] - b.Nodes[0]
+	held, centre := 0, 0.0
+	k, kz := 0.0, 0.0
+	for i, z := range b.Nodes {
+		switch {
+		case b.holds(i):
+			held, centre = held+1, z
+		case b.Lateral != nil:
+			k += b.Lateral[i]
+			kz += b.Lateral[i] * z
+		}
+	}
+	if b.Base.clamped() || b.Top.clamped() {
+		return held > 0 || k > 0
+	}
+	if held >= 2 {
+		return true
+	}
+	if held == 0 {
+		if !(k > 0) {
+			return false
+		}
+		centre = kz / k
+	}
+	turning := 0.0 // stiffness against turning about the centre
+	for i, z := range b.Nodes {
+		if b.Lateral != nil && !b.holds(i) {
+			turning += b.Lateral[i] * (z - centre) * (z - centre)
+		}
+		if b.Turning != nil {
+			turning += b.Turning[i]
+		}
+	}
+	return turning > 1e-20*k*height*height // above the rounding of the centre
+}
+
 // stable tells whether the bar's stiffness matrix is positive definite under
 // the reference forces times factor: a factorisation without a pivot at or
 // below zero. The matrix has a half band of three besides the diagonal.
@@ -82,11 +137,9 @@ func (b *Bar) stable(factor float64) bool {
 	nodes := len(b.Nodes)
 	size := 2 * nodes
 	k := make([][4]float64, size) // k[i][d] is the entry (i, i+d)
-	height := b.Nodes[nodes-1] - b.Nodes[0]
-	scale := 0.0
 	for i := range b.Force {
 		l := b.Nodes[i+1] - b.Nodes[i]
-		s, c, t := stability(factor*b.Force[i]*l*l/b.Stiffness[i])
+		s, c, t := stability(factor * b.Force[i] * l * l / b.Stiffness[i])
 		ei := b.Stiffness[i]
 		r := 2 * i
 		// slope-deflection form: s, c rotational terms, t the sway term
@@ -100,7 +153,6 @@ func (b *Bar) stable(factor float64) bool {
 		k[r+2][0] += ei / (l * l * l) * t
 		k[r+2][1] += -ei / (l * l) * (s + c)
 		k[r+3][0] += ei / l * s
-		scale = max(scale, ei/(l*l*l)*12)
 	}
 	for i := range nodes {
 		if b.Lateral != nil {
@@ -112,14 +164,9 @@ func (b *Bar) stable(factor float64) bool {
 	}
 	fixed := make([]bool, size)
 	for i := range nodes {
-		if i < len(b.Held) && b.Held[i] && i > 0 && i < nodes-1 {
-			fixed[2*i] = true
-		}
+		fixed[2*i] = b.holds(i)
 	}
-	for i, e := range map[int]End{0: b.Base, nodes - 1: b.Top} {
-		fixed[2*i] = fixed[2*i] || e.held()
-		fixed[2*i+1] = e == Fixed || e == Guided
-	}
+	fixed[1], fixed[size-1] = b.Base.clamped(), b.Top.clamped()
 	for i := range size {
 		if fixed[i] {
 			for d := 1; d < 4; d++ {
@@ -133,14 +180,7 @@ func (b *Bar) stable(factor float64) bool {
 	}
 	for i := range size {
 		p := k[i][0]
-		floor := scale * 1e-10
-		if i%2 == 1 {
-			floor *= height * height
-		}
-		if fixed[i] {
-			floor = 0
-		}
-		if !(p > floor) {
+		if !(p > 0) {
 			return false
 		}
 		for d := 1; d < 4 && i+d < size; d++ {
@@ -155,25 +195,42 @@ func (b *Bar) stable(factor float64) bool {
 
 // stability gives the stability functions of a part: s and c of the rotations,
 // in units of EI/l, and t of the sway, in units of EI/l³. x is N l²/(E I),
-// compression positive; for small x the series, where the closed form loses
-// its digits.
+// compression positive.
 func stability(x float64) (s, c, t float64) {
 	switch {
-	case math.Abs(x) < 0.01:
-		s = 4 - 2*x/15 - 11*x*x/6300 - x*x*x/27000
-		c = 2 + x/30 + 13*x*x/12600 + 11*x*x*x/378000
+	case math.Abs(x) < 4:
+		s, c = stabilitySeries(x)
 	case x > 0:
 		u := math.Sqrt(x)
 		sin, cos := math.Sincos(u)
 		d := 2 - 2*cos - u*sin
 		s = u * (sin - u*cos) / d
 		c = u * (u - sin) / d
-	default:
+	case x > -1600:
 		u := math.Sqrt(-x)
 		sh, ch := math.Sinh(u), math.Cosh(u)
 		d := 2 - 2*ch + u*sh
 		s = u * (u*ch - sh) / d
 		c = u * (sh - u) / d
+	default: // e^u is past 1e17 and would overflow: what is left without e^-u
+		u := math.Sqrt(-x)
+		s = u * (u - 1) / (u - 2)
+		c = u / (u - 2)
 	}
 	return s, c, 2*(s+c) - x
+}
+
+// stabilitySeries is the quotient of the power series of the closed forms'
+// numerators and denominator, each divided by u⁴. For small x the closed forms
+// lose their digits in differences.
+func stabilitySeries(x float64) (s, c float64) {
+	var ns, nc, d float64
+	term := 1.0 / 6 // (-x)^(k-1)/(2k+1)!
+	for k := 1.0; k <= 16; k++ {
+		ns += term * 2 * k
+		nc += term
+		d += term * 2 * k / (2*k + 2)
+		term *= -x / ((2*k + 2) * (2*k + 3))
+	}
+	return ns / d, nc / d
 }

@@ -20,6 +20,9 @@ func (e End) String() string { return [...]string{"pinned", "fixed", "free", "gu
 // held tells whether the end stays in place.
 func (e End) held() bool { return e == Pinned || e == Fixed }
 
+// clamped tells whether the end cannot turn.
+func (e End) clamped() bool { return e == Fixed || e == Guided }
+
 // Factor is the effective length factor of a uniform bar with the given ends:
 // the theoretical value, or the one recommended for design, which allows for
 // fixity that is never perfect (common handbook values: fixed–fixed 0.65,

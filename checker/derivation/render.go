@@ -72,10 +72,15 @@ func (s Step) Numbers(set *Set, units Units, digits int) string {
 	}
 	var b strings.Builder
 	text := s.Formula.Text
-	for _, t := range lang.Tokens(text) {
+	tokens := lang.Tokens(text)
+	for i, t := range tokens {
 		piece := t.Span().Of(text)
 		if v, ok := values[piece]; ok && t.Kind == lang.Name {
 			piece = v
+			// "5 mm^2" is an area: a length to the power of two needs brackets
+			if i+1 < len(tokens) && tokens[i+1].Span().Of(text) == "^" && !strings.HasPrefix(v, "(") && strings.Contains(v, " ") {
+				piece = "(" + v + ")"
+			}
 		}
 		b.WriteString(piece)
 	}

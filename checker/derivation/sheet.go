@@ -15,6 +15,46 @@ type Sheet struct {
 type Record struct {
 	Set   *Set
 	Steps []Step
+	group string
+}
+
+// Group says which check the steps that follow belong to; "" for those that
+// several checks share.
+func (r *Record) Group(rule string) { r.group = rule }
+
+// Of gives the steps that a check rests on: those that are shared and its own,
+// leaving out what nothing of it leads to. An empty rule gives all.
+func (r *Record) Of(rule string) []Step {
+	if rule == "" {
+		return r.Steps
+	}
+	var out []Step
+	for _, s := range r.Steps {
+		if s.Group == rule || s.Group == "" {
+			out = append(out, s)
+		}
+	}
+	// walk back from the check's own steps to what they read
+	need := map[ID]bool{}
+	keep := make([]bool, len(out))
+	for i := len(out) - 1; i >= 0; i-- {
+		s := out[i]
+		if s.Group == rule || need[s.Symbol] && s.Note == "" {
+			keep[i] = true
+			if s.Note == "" {
+				for _, in := range s.Inputs {
+					need[in.Symbol] = true
+				}
+			}
+		}
+	}
+	kept := out[:0]
+	for i, s := range out {
+		if keep[i] {
+			kept = append(kept, s)
+		}
+	}
+	return kept
 }
 
 // Step is one line of a derivation.
@@ -25,6 +65,7 @@ type Step struct {
 	Value   float64  // coherent SI units
 	Clause  string   // the clause of a computed step, the source of a taken value
 	Note    string   // a remark that stands by itself; the other fields are empty
+	Group   string   // the rule of the check that it belongs to, "" for shared steps
 }
 
 // Input is a value that a formula read.
@@ -60,7 +101,7 @@ func (s *Sheet) Recorded() bool { return s.record != nil }
 func (s *Sheet) Take(id ID, value float64, source string) float64 {
 	s.values[id] = value
 	if s.record != nil {
-		s.record.Steps = append(s.record.Steps, Step{Symbol: id, Value: value, Clause: source})
+		s.record.Steps = append(s.record.Steps, Step{Symbol: id, Value: value, Clause: source, Group: s.record.group})
 	}
 	return value
 }
@@ -73,7 +114,7 @@ func (s *Sheet) Do(f *Formula) float64 {
 		for i, u := range f.uses {
 			inputs[i] = Input{u, s.values[u]}
 		}
-		s.record.Steps = append(s.record.Steps, Step{Symbol: f.Symbol, Formula: f, Inputs: inputs, Value: v, Clause: f.Clause})
+		s.record.Steps = append(s.record.Steps, Step{Symbol: f.Symbol, Formula: f, Inputs: inputs, Value: v, Clause: f.Clause, Group: s.record.group})
 	}
 	s.values[f.Symbol] = v
 	return v
@@ -85,6 +126,6 @@ func (s *Sheet) At(id ID) float64 { return s.values[id] }
 // Note records a remark.
 func (s *Sheet) Note(text string) {
 	if s.record != nil {
-		s.record.Steps = append(s.record.Steps, Step{Note: text})
+		s.record.Steps = append(s.record.Steps, Step{Note: text, Group: s.record.group})
 	}
 }

@@ -25,8 +25,9 @@ type Symbol struct {
 // Set is the symbols of one standard. It is filled when the program starts and
 // only read afterwards.
 type Set struct {
-	symbols []Symbol
-	index   map[string]ID
+	symbols  []Symbol
+	index    map[string]ID
+	formulas []*Formula
 }
 
 // NewSet returns an empty set.
@@ -75,17 +76,29 @@ func (f *Formula) Tree() *lang.Expr { return f.tree }
 // appearance.
 func (f *Formula) Uses() []ID { return f.uses }
 
-// Formula declares an equation. Text that cannot be read or names an unknown
-// symbol is a defect of the program and panics at start.
+// Formula declares an equation. Text that cannot be read is a defect of the
+// program and panics at start.
 func (s *Set) Formula(symbol ID, text, clause string) *Formula {
 	tree, err := lang.ParseExpr(text)
 	if err != nil {
 		panic(fmt.Sprintf("derivation: formula %q: %v", text, err))
 	}
 	f := &Formula{Symbol: symbol, Text: text, Clause: clause, tree: tree}
-	f.run = s.compile(f, tree)
+	s.formulas = append(s.formulas, f)
 	return f
 }
+
+// Seal makes the formulas ready to compute, once all symbols are declared: a
+// package's variables come to be in an order that formulas do not show. A
+// formula that names an unknown symbol panics.
+func (s *Set) Seal() {
+	for _, f := range s.formulas {
+		f.run = s.compile(f, f.tree)
+	}
+}
+
+// Formulas are all equations of the set.
+func (s *Set) Formulas() []*Formula { return s.formulas }
 
 // compile turns an expression into a closure over a sheet's values. It follows
 // lang.Eval exactly, without the dimensions, which a test checks for every

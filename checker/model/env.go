@@ -830,3 +830,30 @@ func sortStrings(s []string) {
 
 // known is NaN for a value that was not given.
 var unknown = math.NaN()
+
+// MemberDecls are the declarations that describe members.
+func (env *Env) MemberDecls() []*lang.Decl { return env.members }
+
+// MarkNamed calls f for every name that the text of a member mentions. A member
+// with an error was not read to its end, yet what it names is not unused.
+func (env *Env) MarkNamed(m *Member, f func(*Named)) {
+	if m.Stmt == nil {
+		return
+	}
+	var stmts func(s *lang.Stmt)
+	stmts = func(s *lang.Stmt) {
+		for _, a := range s.Args {
+			a.Walk(func(e *lang.Expr) {
+				if n, ok := env.Names[e.Text]; ok && e.Kind == lang.NameExpr {
+					f(n)
+				}
+			})
+		}
+		if s.Body != nil {
+			for _, b := range s.Body.Stmts {
+				stmts(b)
+			}
+		}
+	}
+	stmts(m.Stmt)
+}

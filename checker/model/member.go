@@ -390,7 +390,7 @@ func (w *memberReader) fromTo(r *reader) {
 		return
 	}
 	if h := to - from; h < 0.05 || h > 200 {
-		r.fail("impossible-value", span, "from %s m to %s m is no height of a member", unit.Number(from, 4), unit.Number(to, 4))
+		r.fail("impossible-value", span, "from %s m to %s m is no height of a member", unit.Short(from, 4), unit.Short(to, 4))
 		return
 	}
 	w.m.From, w.m.Height = from, to-from
@@ -466,7 +466,7 @@ func (w *memberReader) place(r *reader, what string) (float64, lang.Span, bool) 
 		return v, span, true
 	}
 	if h := w.m.Height; v < -1e-9*h || v > h*(1+1e-9) {
-		r.fail("outside-the-member", span, "%s at %s m lies outside the member, which is %s m high", what, unit.Number(v, 4), unit.Number(h, 4))
+		r.fail("outside-the-member", span, "%s at %s m lies outside the member, which is %s m high", what, unit.Short(v, 4), unit.Short(h, 4))
 		return 0, span, false
 	}
 	return min(max(v, 0), w.m.Height), span, true
@@ -684,10 +684,10 @@ func (w *memberReader) sane() {
 		switch {
 		case v > 50*squash:
 			m.Problems = append(m.Problems, lang.Diagnostic{Decl: l.Place.Decl, Problem: lang.Problem{Rule: "implausible-load", Severity: lang.Warning, Span: l.Place.Span,
-				Message: fmt.Sprintf("a load of %s kN is %s times what the section can carry at all: is the unit meant?", unit.Number(v/1e3, 3), unit.Number(v/squash, 2))}})
+				Message: fmt.Sprintf("a load of %s kN is %s times what the section can carry at all: is the unit meant?", unit.Short(v/1e3, 3), unit.Short(v/squash, 2))}})
 		case v < 1e-4*squash && v < 200:
 			m.Problems = append(m.Problems, lang.Diagnostic{Decl: l.Place.Decl, Problem: lang.Problem{Rule: "implausible-load", Severity: lang.Warning, Span: l.Place.Span,
-				Message: fmt.Sprintf("a load of %s N is next to nothing for this section: is the unit meant?", unit.Number(v, 3))}})
+				Message: fmt.Sprintf("a load of %s N is next to nothing for this section: is the unit meant?", unit.Short(v, 3))}})
 		}
 	}
 }

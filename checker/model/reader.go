@@ -215,15 +215,15 @@ func magnitude(e *lang.Expr, v float64, w want) lang.Problem {
 	show := func(x float64) string {
 		for _, u := range unit.For(w.dim) {
 			if y := x / u.Factor; y >= 0.1 && y < 10000 {
-				return unit.Number(y, 3) + " " + u.Symbol
+				return unit.Short(y, 3) + " " + u.Symbol
 			}
 		}
-		return unit.Number(x, 3) + " " + w.dim.Base()
+		return unit.Short(x, 3) + " " + w.dim.Base()
 	}
 	p := lang.Problem{Rule: "impossible-value", Span: e.Span,
 		Message: fmt.Sprintf("%s of %s is far too %s to be meant: the limit is %s", w.what, show(v), side, show(bound))}
 	if w.dim.IsNone() {
-		p.Message = fmt.Sprintf("%s of %s is far too %s to be meant: the limit is %s", w.what, unit.Number(v, 3), side, unit.Number(bound, 3))
+		p.Message = fmt.Sprintf("%s of %s is far too %s to be meant: the limit is %s", w.what, unit.Short(v, 3), side, unit.Short(bound, 3))
 	}
 	if e.Kind != lang.QuantExpr {
 		return p
@@ -232,7 +232,7 @@ func magnitude(e *lang.Expr, v float64, w want) lang.Problem {
 		x := e.Value * u.Factor
 		ratio := x / v
 		if (w.min == 0 || x >= w.min) && (w.max == 0 || x <= w.max) && u.Symbol != e.Text && powerOfTen(ratio) {
-			p.Notes = append(p.Notes, fmt.Sprintf("%s would be %s times as much", unit.Exact(e.Value)+" "+u.Symbol, unit.Number(ratio, 1)))
+			p.Notes = append(p.Notes, fmt.Sprintf("%s would be %s times as much", unit.Exact(e.Value)+" "+u.Symbol, unit.Short(ratio, 1)))
 			p.Fixes = append(p.Fixes, lang.Replace("Write "+unit.Exact(e.Value)+" "+u.Symbol, false, e.UnitSpan(), u.Symbol))
 			break
 		}

@@ -260,7 +260,7 @@ func (s *Section) complete(corner float64) {
 		if math.IsNaN(corner) {
 			shape.OuterRadius, shape.InnerRadius = section.DefaultRadii(shape.Made, shape.Wall)
 			if shape.OuterRadius > 0 {
-				assume("'%s' with corners of outside radius %s mm (corner is not given)", s.Name, unit.Number(shape.OuterRadius*1000, 3))
+				assume("'%s' with corners of outside radius %s mm (corner is not given)", s.Name, unit.Short(shape.OuterRadius*1000, 3))
 			}
 		} else {
 			shape.OuterRadius = corner

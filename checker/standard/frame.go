@@ -294,14 +294,14 @@ func (f *Frame) Assumptions() []string {
 			case f.Env.Basis.Recommended:
 				kind = "recommended for design"
 			}
-			out = append(out, fmt.Sprintf("K = %s %s over %s (%s–%s, %s)", unit.Number(s.K, 3), name, f.StretchName(axis, s), s.Base, s.Top, kind))
+			out = append(out, fmt.Sprintf("K = %s %s over %s (%s–%s, %s)", unit.Short(s.K, 3), name, f.StretchName(axis, s), s.Base, s.Top, kind))
 		}
 	}
 	switch {
 	case m.Weight:
 		c := f.Env.Cases[f.Env.SelfWeight].Name
 		w := m.Material.Density * m.Section.Area * unit.StandardGravity
-		out = append(out, fmt.Sprintf("self-weight %s kN in all, in case %s", unit.Number(w*m.Height/1e3, 3), c))
+		out = append(out, fmt.Sprintf("self-weight %s kN in all, in case %s", unit.Short(w*m.Height/1e3, 3), c))
 	case m.Kind == model.Column:
 		out = append(out, "self-weight not counted")
 	}

@@ -81,3 +81,17 @@ func short(scientific string) string {
 	}
 	return scientific[:mark+1] + strconv.Itoa(exponent)
 }
+
+// Short writes v for reading: at most the given number of significant digits,
+// without zeros at the end ("2.5", "0.04", "12345" with any number of digits).
+func Short(v float64, significant int) string {
+	s := Number(v, significant)
+	mantissa, exponent, _ := strings.Cut(s, "e")
+	if strings.Contains(mantissa, ".") {
+		mantissa = strings.TrimRight(strings.TrimRight(mantissa, "0"), ".")
+	}
+	if exponent != "" {
+		return mantissa + "e" + exponent
+	}
+	return mantissa
+}

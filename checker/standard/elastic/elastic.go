@@ -1,0 +1,499 @@
+// Package elastic checks members by elastic theory alone: first yield of the
+// extreme fibre, and Euler's critical load about both axes, each with a factor
+// of safety that the user sets.
+package elastic
+
+import (
+	"fmt"
+	"math"
+
+	"kern/checker/action"
+	"kern/checker/derivation"
+	"kern/checker/model"
+	"kern/checker/standard"
+	"kern/lang/unit"
+)
+
+// Standard is the standard "elastic".
+type Standard struct{}
+
+// The symbols and formulas. Sources: Euler 1744 for the critical load; the
+// secant formula and the amplification of a sinusoidal moment are standard
+// results of the theory of beam-columns (Timoshenko and Gere, Theory of Elastic
+// Stability, chapter 1).
+var (
+	set = derivation.NewSet()
+
+	symE  = set.Symbol("E", unit.Stress, "Young's modulus")
+	symFy = set.Symbol("f_y", unit.Stress, "yield strength")
+	symA  = set.Symbol("A", unit.Area, "area of the section")
+	symN  = set.Symbol("N", unit.Force, "axial force, compression positive")
+	symPy = set.Symbol("P_y", unit.Force, "force at which the section yields, axial force alone")
+	symNy = set.Symbol("factor_yield", unit.None, "factor of safety against first yield")
+	symNb = set.Symbol("factor_buckling", unit.None, "factor of safety against buckling")
+	symS  = set.Symbol("sigma", unit.Stress, "greatest stress under the loads times the factor of safety")
+	symUy = set.Symbol("u_yield", unit.None, "utilisation, first yield")
+	symNs = set.Symbol("N_s", unit.Force, "axial force where the stress is greatest, without its sign")
+
+	axes = [2]axis{newAxis("major"), newAxis("minor")}
+
+	doPy    = set.Formula(symPy, "f_y * A", "stress = force / area")
+	doAxial = set.Formula(symS, "factor_yield * N_s / A", "stress = force / area")
+	doMajor = set.Formula(symS, "factor_yield * (N_s / A + a_major * M_major / W_major)", "axial force and bending, second order")
+	doMinor = set.Formula(symS, "factor_yield * (N_s / A + a_minor * M_minor / W_minor)", "axial force and bending, second order")
+	doBoth  = set.Formula(symS, "factor_yield * (N_s / A + a_major * M_major / W_major + a_minor * M_minor / W_minor)", "axial force and bending, second order")
+	doUy    = set.Formula(symUy, "sigma / f_y", "demand / capacity")
+)
+
+type axis struct {
+	name                                        string
+	i, w, r, l, k, le, pcr, n, u, slender, m, a derivation.ID
+	ratio, uSlender, limit                      derivation.ID
+	doLe, doPcr, doU, doR, doSlender, doRatio   *derivation.Formula
+	secant, sine, sway, tension, doUSlender     *derivation.Formula
+}
+
+func newAxis(name string) axis {
+	x := axis{name: name}
+	sym := func(letter string, dim unit.Dim, what string) derivation.ID {
+		return set.Symbol(letter+"_"+name, dim, what+", "+name+" axis")
+	}
+	x.i = sym("I", unit.Length4, "second moment of area")
+	x.w = sym("W", unit.Volume, "elastic section modulus")
+	x.r = sym("i", unit.Length, "radius of gyration")
+	x.l = sym("L", unit.Length, "length of the stretch between holds")
+	x.k = sym("K", unit.None, "effective length factor")
+	x.le = sym("L_cr", unit.Length, "effective length")
+	x.pcr = sym("P_cr", unit.Force, "Euler's critical load")
+	x.n = sym("N", unit.Force, "greatest compression in the stretch")
+	x.u = sym("u_buckling", unit.None, "utilisation, buckling")
+	x.slender = sym("slenderness", unit.None, "slenderness")
+	x.m = sym("M", unit.Moment, "bending moment, first order, without its sign")
+	x.a = sym("a", unit.None, "amplification of the moment by the axial force")
+	x.ratio = sym("n", unit.None, "factored axial force over the critical load")
+	x.uSlender = sym("u_slenderness", unit.None, "utilisation, slenderness")
+	x.limit = sym("limit_slenderness", unit.None, "limit of slenderness")
+	f := func(id derivation.ID, text, clause string) *derivation.Formula { return set.Formula(id, text, clause) }
+	x.doLe = f(x.le, "K_"+name+" * L_"+name, "effective length")
+	x.doR = f(x.r, "sqrt(I_"+name+" / A)", "definition")
+	x.doPcr = f(x.pcr, "pi^2 * E * I_"+name+" / L_cr_"+name+"^2", "Euler")
+	x.doU = f(x.u, "factor_buckling * N_"+name+" / P_cr_"+name, "demand / capacity")
+	x.doSlender = f(x.slender, "L_cr_"+name+" / i_"+name, "definition")
+	x.doUSlender = f(x.uSlender, "slenderness_"+name+" / limit_slenderness_"+name, "demand / limit")
+	x.doRatio = f(x.ratio, "factor_yield * N_"+name+" / P_cr_"+name, "definition")
+	x.secant = f(x.a, "1 / cos(pi / 2 * sqrt(n_"+name+"))", "secant formula (equal end moments; an upper bound for others)")
+	x.sway = f(x.a, "(1 + 0.03 * n_"+name+") / (1 - n_"+name+")", "amplification of the moment of a load across the member")
+	x.sine = f(x.a, "1 / (1 - n_"+name+")", "amplification of a sinusoidal moment, as the basis asks")
+	x.tension = f(x.a, "1", "tension does not amplify moments")
+	return x
+}
+
+// Name implements standard.Standard.
+func (Standard) Name() string { return "elastic" }
+
+// Annexes implements standard.Standard.
+func (Standard) Annexes() []string { return nil }
+
+// Overrides implements standard.Standard: the two factors of safety. They
+// replace no published value, so they need no reason.
+func (Standard) Overrides() map[string]bool {
+	return map[string]bool{"factor_yield": false, "factor_buckling": false}
+}
+
+// Rules implements standard.Standard.
+func (Standard) Rules() []string {
+	return []string{"first-yield", "elastic-buckling-major", "elastic-buckling-minor", "slenderness"}
+}
+
+// Symbols implements standard.Standard.
+func (Standard) Symbols() *derivation.Set { return set }
+
+// Alias implements standard.Standard.
+func (Standard) Alias(word string) string {
+	return map[string]string{"N_cr_major": "P_cr_major", "N_cr_minor": "P_cr_minor", "N_c": "P_y"}[word]
+}
+
+// Check implements standard.Standard.
+func (Standard) Check(f *standard.Frame, record *derivation.Record) *standard.Outcome {
+	c := &calc{f: f, s: derivation.NewSheet(set), record: record}
+	c.out.Value = c.value
+	c.given()
+	for a := range axes {
+		c.buckling(a)
+	}
+	c.yield()
+	c.slenderness()
+	c.out.Assumptions = c.assumptions()
+	why := "elastic theory asks for no such check; a design standard does, where walls are thin or the section is open"
+	for _, rule := range []string{"local-buckling", "torsional-buckling", "lateral-torsional-buckling"} {
+		c.cover(rule, standard.NotApplicable, why)
+	}
+	c.cover("section-shear", standard.NotApplicable, "stresses of axial force and bending alone are judged against yield")
+	return &c.out
+}
+
+type calc struct {
+	f      *standard.Frame
+	s      *derivation.Sheet
+	record *derivation.Record
+	out    standard.Outcome
+}
+
+func (c *calc) value(symbol string) (unit.Quantity, bool) {
+	id, ok := set.Find(symbol)
+	if !ok {
+		return unit.Quantity{}, false
+	}
+	v := c.s.At(id)
+	return unit.Quantity{Value: v, Dim: set.At(id).Dim}, !math.IsNaN(v)
+}
+
+func (c *calc) cover(rule string, state standard.State, why string) {
+	c.out.Coverage = append(c.out.Coverage, standard.Coverage{Rule: rule, State: state, Why: why})
+}
+
+func (c *calc) assumptions() []string {
+	out := c.f.Assumptions()
+	for _, name := range []string{"factor_yield", "factor_buckling"} {
+		if _, set := c.f.Env.Basis.Overrides[name]; !set {
+			out = append(out, name+" = 1")
+		}
+	}
+	if c.f.Bends[0] || c.f.Bends[1] {
+		if c.f.Env.Basis.Simple {
+			out = append(out, "moments amplified by 1/(1 - N/N_cr), as the basis asks; for equal end moments this is up to 23 % too low")
+		} else {
+			out = append(out, "moments amplified for the axial force: the secant for end moments and offsets, (1 + 0.03 n)/(1 - n) for loads across the member")
+		}
+	}
+	return out
+}
+
+// given takes the values that do not depend on the loads.
+func (c *calc) given() {
+	m, basis := c.f.Member, &c.f.Env.Basis
+	c.s.Recording(c.record)
+	group(c.record, "")
+	fy, _, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	if !ok {
+		fy = math.NaN()
+	}
+	c.s.Take(symE, m.Material.E, m.Material.Title())
+	c.s.Take(symFy, fy, source)
+	c.s.Take(symA, m.Section.Area, m.Section.Title())
+	c.s.Take(axes[0].i, m.Section.IMajor, m.Section.Title())
+	c.s.Take(axes[1].i, m.Section.IMinor, m.Section.Title())
+	for _, o := range []struct {
+		id   derivation.ID
+		name string
+	}{{symNy, "factor_yield"}, {symNb, "factor_buckling"}} {
+		v, set := standard.Overridden(basis, o.name, 1)
+		source := "assumed"
+		if set {
+			source = "basis"
+		}
+		c.s.Take(o.id, v, source)
+	}
+	c.s.Do(doPy)
+}
+
+func group(r *derivation.Record, rule string) {
+	if r != nil {
+		r.Group(rule)
+	}
+}
+
+// buckling checks every stretch about one axis under every combination.
+func (c *calc) buckling(a int) {
+	x := &axes[a]
+	rule := "elastic-buckling-" + x.name
+	if !c.f.Stands[a] {
+		c.out.Checks = append(c.out.Checks, standard.Check{Rule: rule, Clause: "Euler", Combination: -1, Dim: unit.Force, Utilisation: math.NaN(), Demand: math.NaN(), Capacity: math.NaN(),
+			Why: "the ends and holds do not keep the member in place about " + x.name})
+		c.cover(rule, standard.NotCovered, "the ends and holds do not keep the member in place about "+x.name)
+		return
+	}
+	worst, at, combination, compressed := math.Inf(-1), 0, -1, false
+	c.s.Recording(nil)
+	for i, s := range c.f.Stretches[a] {
+		c.stretch(a, s)
+		for k := range c.f.Combinations {
+			n := c.f.Compression(k, s.From, s.To)
+			if n <= 0 {
+				continue
+			}
+			compressed = true
+			c.s.Take(x.n, n, "")
+			if u := c.s.Do(x.doU); u > worst || math.IsNaN(u) {
+				worst, at, combination = u, i, k
+				if math.IsNaN(u) {
+					break
+				}
+			}
+		}
+	}
+	c.s.Recording(c.record)
+	group(c.record, rule)
+	if !compressed {
+		at = c.longest(a)
+	}
+	s := c.f.Stretches[a][at]
+	c.stretch(a, s)
+	if !compressed {
+		c.cover(rule, standard.NotApplicable, "no combination compresses the member")
+		return
+	}
+	c.s.Take(x.n, c.f.Compression(combination, s.From, s.To), c.f.Combinations[combination].Name)
+	u := c.s.Do(x.doU)
+	check := standard.Check{Rule: rule, Clause: "Euler", Combination: combination, Demand: c.s.At(x.n), Capacity: c.s.At(x.pcr) / c.s.At(symNb), Dim: unit.Force, Utilisation: u,
+		Verdict: standard.Utilisation(u, c.f.Limit())}
+	if check.Verdict == standard.Undecided {
+		check.Why = "a value that the check needs is missing"
+	}
+	c.out.Checks = append(c.out.Checks, check)
+	c.cover(rule, standard.Checked, "")
+}
+
+// longest is the stretch with the greatest effective length.
+func (c *calc) longest(a int) int {
+	best := 0
+	for i, s := range c.f.Stretches[a] {
+		if s.Effective() > c.f.Stretches[a][best].Effective() {
+			best = i
+		}
+	}
+	return best
+}
+
+func (c *calc) stretch(a int, s action.Stretch) {
+	x := &axes[a]
+	source := ""
+	if c.s.Recorded() {
+		source = fmt.Sprintf("%s, %s–%s", c.f.StretchName(a, s), s.Base, s.Top)
+	}
+	c.s.Take(x.l, s.Length(), source)
+	c.s.Take(x.k, s.K, source)
+	c.s.Do(x.doLe)
+	c.s.Do(x.doPcr)
+}
+
+// yield finds the greatest stress over the height and the combinations.
+func (c *calc) yield() {
+	const rule = "first-yield"
+	m := c.f.Member
+	bends := c.f.Bends
+	c.s.Recording(nil)
+	fail := func(why string) {
+		c.out.Checks = append(c.out.Checks, standard.Check{Rule: rule, Clause: "first yield", Combination: -1, Dim: unit.Stress, Utilisation: math.NaN(), Demand: math.NaN(), Capacity: math.NaN(), Why: why})
+		c.cover(rule, standard.NotCovered, why)
+	}
+	if math.IsNaN(c.s.At(symFy)) {
+		fail("the yield strength of " + m.Material.Title() + " is not known for this thickness")
+		return
+	}
+	for a, b := range bends {
+		if b && !c.f.Stands[a] {
+			fail("the ends and holds do not keep the member in place about " + axes[a].name)
+			return
+		}
+	}
+	c.s.Take(axes[0].w, m.Section.WelMajor, "")
+	c.s.Take(axes[1].w, m.Section.WelMinor, "")
+	best := point{u: math.Inf(-1)}
+	var pieces [2][]action.Piece
+	for k := range c.f.Combinations {
+		amplify := [2]float64{1, 1}
+		for a := range axes {
+			var ok bool
+			if pieces[a], ok = c.f.Bending(a, c.f.Combinations[k].Factors, pieces[a]); !ok {
+				fail("the ends and holds do not keep the member in place about " + axes[a].name)
+				return
+			}
+			if bends[a] {
+				amplify[a] = c.amplify(a, k)
+			}
+		}
+		c.s.Take(axes[0].a, amplify[0], "")
+		c.s.Take(axes[1].a, amplify[1], "")
+		for _, z := range c.heights(pieces) {
+			p := point{combination: k, z: z, n: math.Abs(c.f.At(k, z))}
+			p.n = max(p.n, math.Abs(c.f.Compression(k, max(0, z-1e-6*m.Height), min(m.Height, z+1e-6*m.Height))))
+			for a := range axes {
+				p.m[a] = momentAt(pieces[a], z)
+			}
+			if p.u = c.stress(p); p.u > best.u || math.IsNaN(p.u) {
+				best = p
+			}
+		}
+	}
+	c.s.Recording(c.record)
+	group(c.record, rule)
+	for a, b := range bends {
+		if b {
+			c.s.Take(axes[a].w, []float64{m.Section.WelMajor, m.Section.WelMinor}[a], m.Section.Title())
+			c.amplify(a, best.combination)
+		}
+	}
+	u := c.stress(best)
+	check := standard.Check{Rule: rule, Clause: "first yield", Combination: best.combination, Demand: c.s.At(symS), Capacity: c.s.At(symFy), Dim: unit.Stress, Utilisation: u,
+		Verdict: standard.Utilisation(u, c.f.Limit())}
+	if check.Verdict == standard.Undecided {
+		check.Why = "a value that the check needs is missing"
+		if (bends[0] || bends[1]) && math.IsNaN(c.s.At(axes[0].a)+c.s.At(axes[1].a)) {
+			check.Why = "the axial force times the factor of safety reaches the critical load: no stress can be given"
+		}
+	}
+	c.out.Checks = append(c.out.Checks, check)
+	c.cover(rule, standard.Checked, "")
+}
+
+type point struct {
+	combination int
+	z, n, u     float64
+	m           [2]float64
+}
+
+// stress computes the utilisation at a point.
+func (c *calc) stress(p point) float64 {
+	source := ""
+	if c.s.Recorded() {
+		source = fmt.Sprintf("%s, at %s m", c.f.Combinations[p.combination].Name, metres(p.z))
+	}
+	c.s.Take(symNs, p.n, source)
+	formula := doAxial
+	switch c.f.Bends {
+	case [2]bool{true, false}:
+		formula = doMajor
+	case [2]bool{false, true}:
+		formula = doMinor
+	case [2]bool{true, true}:
+		formula = doBoth
+	}
+	for a, b := range c.f.Bends {
+		if b {
+			c.s.Take(axes[a].m, p.m[a], source)
+		}
+	}
+	c.s.Do(formula)
+	return c.s.Do(doUy)
+}
+
+func metres(z float64) string { return unit.Exact(math.Round(z*1e3) / 1e3) }
+
+// amplify computes the amplification of the moments about an axis: NaN when the
+// factored axial force reaches the critical load.
+func (c *calc) amplify(a, combination int) float64 {
+	x := &axes[a]
+	worst, at, n := math.Inf(-1), -1, 0.0
+	recording := c.s.Recorded()
+	c.s.Recording(nil)
+	for i, s := range c.f.Stretches[a] {
+		c.stretch(a, s)
+		c.s.Take(x.n, c.f.Compression(combination, s.From, s.To), "")
+		if r := c.s.Do(x.doRatio); r > worst || math.IsNaN(r) {
+			worst, at, n = r, i, c.s.At(x.n)
+		}
+	}
+	if recording {
+		c.s.Recording(c.record)
+	}
+	if worst <= 0 {
+		return c.s.Do(x.tension)
+	}
+	s := c.f.Stretches[a][at]
+	c.stretch(a, s)
+	source := ""
+	if recording {
+		source = c.f.Combinations[combination].Name
+	}
+	c.s.Take(x.n, n, source)
+	if r := c.s.Do(x.doRatio); !(r < 1) {
+		return c.s.Take(x.a, math.NaN(), "the factored axial force reaches the critical load")
+	}
+	switch {
+	case c.f.Env.Basis.Simple:
+		return c.s.Do(x.sine)
+	case c.f.Pushed[a] && !c.ends(a):
+		return c.s.Do(x.sway)
+	}
+	return c.s.Do(x.secant)
+}
+
+// ends tells whether moments about the axis come from anything but loads across
+// the member.
+func (c *calc) ends(a int) bool {
+	for _, l := range c.f.Member.Loads {
+		if l.Offset[a] != 0 || l.Kind == model.EndMoment && int(l.Axis) == a {
+			return true
+		}
+	}
+	return false
+}
+
+// heights are the places where the stress can be greatest.
+func (c *calc) heights(pieces [2][]action.Piece) []float64 {
+	z := append([]float64(nil), c.f.Heights()...)
+	for _, side := range pieces {
+		for _, p := range side {
+			z = append(z, p.From, p.To)
+			if _, h := p.Largest(); h > p.From && h < p.To {
+				z = append(z, h)
+			}
+		}
+	}
+	return z
+}
+
+// momentAt is the size of the moment at a height: the larger of the two sides
+// where it jumps.
+func momentAt(pieces []action.Piece, z float64) float64 {
+	m := 0.0
+	for _, p := range pieces {
+		if z >= p.From-1e-12 && z <= p.To+1e-12 {
+			m = max(m, math.Abs(p.Moment(z-p.From)))
+		}
+	}
+	return m
+}
+
+// slenderness compares with the limit that the member sets itself.
+func (c *calc) slenderness() {
+	const rule = "slenderness"
+	limit := c.f.Member.Limits.Slenderness
+	if limit == 0 {
+		c.cover(rule, standard.NotApplicable, "the member sets no limit")
+		return
+	}
+	worst, axis := math.Inf(-1), -1
+	c.s.Recording(nil)
+	run := func(a int) float64 {
+		x := &axes[a]
+		c.stretch(a, c.f.Stretches[a][c.longest(a)])
+		c.s.Do(x.doR)
+		c.s.Do(x.doSlender)
+		c.s.Take(x.limit, limit, "limit of the member")
+		return c.s.Do(x.doUSlender)
+	}
+	for a := range axes {
+		if !c.f.Stands[a] {
+			c.cover(rule, standard.NotCovered, "the ends and holds do not keep the member in place about "+axes[a].name)
+			return
+		}
+		if u := run(a); u > worst {
+			worst, axis = u, a
+		}
+	}
+	c.s.Recording(c.record)
+	group(c.record, rule)
+	if axis < 0 {
+		axis = 0
+	}
+	u := run(axis)
+	c.out.Checks = append(c.out.Checks, standard.Check{Rule: rule, Clause: "limit of the member", Combination: -1, Demand: c.s.At(axes[axis].slender), Capacity: limit, Dim: unit.None, Utilisation: u,
+		Verdict: standard.Utilisation(u, 1)})
+	c.cover(rule, standard.Checked, "")
+}
+
+var _ standard.Standard = Standard{}
+
+func init() { set.Seal() }
