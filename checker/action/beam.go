@@ -43,6 +43,9 @@ func (p Piece) Deflection(x float64) float64 {
 	return p.D + x*(p.R+x*(p.M/2+x*(p.V/6+x*p.Line/24)))
 }
 
+// slope is the slope times E I at x above From.
+func (p Piece) slope(x float64) float64 { return p.R + x*(p.M+x*(p.V/2+x*p.Line/6)) }
+
 // Largest is the moment of greatest size in the piece, with its sign, and its
 // height.
 func (p Piece) Largest() (moment, height float64) {
@@ -64,31 +67,36 @@ func (p Piece) Largest() (moment, height float64) {
 // ErrMechanism is returned for a beam that cannot stand.
 var ErrMechanism = errors.New("the column cannot stand: nothing holds it in place")
 
-// ErrAccuracy is returned when heights lie so close together that the solution
-// has lost its digits.
-var ErrAccuracy = errors.New("heights of loads or holds lie too close together to solve the column exactly")
-
 // ErrLoading is returned for a height, load or hold that is not a finite number
 // or does not lie on the column.
 var ErrLoading = errors.New("a load or hold is not a number or lies outside the column")
 
 // Solve gives the pieces of the beam under each of several loadings, all cut at
 // the same heights so that they can be added up. The analysis is exact: elastic
-// beam theory, first order, stiffness method. The error is ErrLoading,
-// ErrMechanism or ErrAccuracy.
+// beam theory, first order, stiffness method. The error is ErrLoading or
+// ErrMechanism.
 func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 	if err := b.check(loadings); err != nil {
 		return nil, err
 	}
 	nodes := b.nodes(loadings)
 	n := len(nodes)
-	size := 2 * n
+	// Only the ends and holds take part in the equations: loads that lie close
+	// together would cost digits there.
+	at := []int{0} // the supports among the nodes
+	for i := 1; i < n-1; i++ {
+		if b.holdAt(nodes[i]) {
+			at = append(at, i)
+		}
+	}
+	at = append(at, n-1)
+	size := 2 * len(at)
 	k := make([][]float64, size)
 	for i := range k {
 		k[i] = make([]float64, size+len(loadings))
 	}
-	for i := range n - 1 {
-		l := nodes[i+1] - nodes[i]
+	for i := range len(at) - 1 {
+		l := nodes[at[i+1]] - nodes[at[i]]
 		e := [4][4]float64{
 			{12 / (l * l * l), 6 / (l * l), -12 / (l * l * l), 6 / (l * l)},
 			{6 / (l * l), 4 / l, -6 / (l * l), 2 / l},
@@ -101,105 +109,121 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 			}
 		}
 	}
-	line := make([][]float64, len(loadings))  // of each loading, the line load in each part
-	nodal := make([][]float64, len(loadings)) // and the force and moment on each node
-	for j, pushes := range loadings {
-		line[j] = make([]float64, n-1)
-		nodal[j] = make([]float64, size)
-		for _, p := range pushes {
-			at := nodeAt(nodes, p.From)
-			nodal[j][2*at] += p.Force
-			nodal[j][2*at+1] += p.Moment
-			k[2*at][size+j] += p.Force
-			k[2*at+1][size+j] += p.Moment
-			if p.Line != 0 {
-				for i := at; i < n-1 && nodes[i] < p.To-1e-9*b.Height; i++ {
-					l := nodes[i+1] - nodes[i]
-					line[j][i] += p.Line
-					k[2*i][size+j] += p.Line * l / 2
-					k[2*i+1][size+j] += p.Line * l * l / 12
-					k[2*i+2][size+j] += p.Line * l / 2
-					k[2*i+3][size+j] -= p.Line * l * l / 12
-				}
-			}
-		}
-	}
 	fixed := make([]bool, size)
-	for i, z := range nodes {
-		for _, h := range b.Holds {
-			if math.Abs(h-z) <= 1e-9*b.Height {
-				fixed[2*i] = true
-			}
-		}
-	}
-	fixed[0] = fixed[0] || b.Base.held()
-	fixed[1] = b.Base.clamped()
-	fixed[size-2] = fixed[size-2] || b.Top.held()
-	fixed[size-1] = b.Top.clamped()
-	// Two points kept in place, or one and an end kept from turning. The pivots
-	// cannot tell: a short part makes their rounding errors larger than the
-	// stiffness of the rest.
 	held := 0
-	for i := range nodes {
-		if fixed[2*i] {
+	for i, node := range at {
+		if b.holdAt(nodes[node]) || i == 0 && b.Base.held() || i == len(at)-1 && b.Top.held() {
+			fixed[2*i] = true
 			held++
 		}
 	}
+	fixed[1], fixed[size-1] = b.Base.clamped(), b.Top.clamped()
+	// two points kept in place, or one and an end kept from turning
 	if held == 0 || held == 1 && !fixed[1] && !fixed[size-1] {
 		return nil, ErrMechanism
+	}
+	cases := make([]carried, len(loadings))
+	for j, pushes := range loadings {
+		cases[j] = carry(nodes, at, pushes, b.Height)
+		for i := range len(at) - 1 {
+			for r, x := range cases[j].span[i] {
+				k[2*i+r][size+j] += x
+			}
+		}
+		for i, node := range at {
+			k[2*i][size+j] += cases[j].force[node]
+			k[2*i+1][size+j] += cases[j].moment[node]
+		}
 	}
 	u, err := eliminate(k, fixed, size, b.Height)
 	if err != nil {
 		return nil, err
 	}
 	out := make([][]Piece, len(loadings))
-	for j := range loadings {
-		out[j] = make([]Piece, n-1)
-		for i := range n - 1 {
-			l := nodes[i+1] - nodes[i]
-			v1, r1, v2, r2, w := u[2*i][j], u[2*i+1][j], u[2*i+2][j], u[2*i+3][j], line[j][i]
-			f1 := 12/(l*l*l)*(v1-v2) + 6/(l*l)*(r1+r2) - w*l/2
-			m1 := 6/(l*l)*(v1-v2) + (4*r1+2*r2)/l - w*l*l/12
-			out[j][i] = Piece{From: nodes[i], To: nodes[i+1], M: -m1, V: f1, Line: w, D: v1, R: r1}
-		}
-		if !balanced(out[j], nodal[j], fixed, b.Height) {
-			return nil, ErrAccuracy
+	for j, load := range cases {
+		for i := range len(at) - 1 {
+			l := nodes[at[i+1]] - nodes[at[i]]
+			v1, r1, v2, r2 := u[2*i][j], u[2*i+1][j], u[2*i+2][j], u[2*i+3][j]
+			p := Piece{D: v1, R: r1}
+			p.V = 12/(l*l*l)*(v1-v2) + 6/(l*l)*(r1+r2) - load.span[i][0]
+			p.M = -(6/(l*l)*(v1-v2) + (4*r1+2*r2)/l - load.span[i][1])
+			for s := at[i]; s < at[i+1]; s++ {
+				if s > at[i] { // go on from the end of the part below
+					x := p.To - p.From
+					p = Piece{M: p.Moment(x) - load.moment[s], V: p.Shear(x) + load.force[s], D: p.Deflection(x), R: p.slope(x)}
+				}
+				p.From, p.To, p.Line = nodes[s], nodes[s+1], load.line[s]
+				if !finite(p.M, p.V, p.D, p.R) {
+					return nil, ErrLoading
+				}
+				out[j] = append(out[j], p)
+			}
 		}
 	}
 	return out, nil
 }
 
-// balanced tells whether the forces and moments on every node that is free to
-// follow them are in equilibrium with its loads within a thousandth of all
-// loads. Parts much shorter than a thousandth of the column lose the digits of
-// their ends' deflections.
-func balanced(pieces []Piece, nodal []float64, fixed []bool, height float64) bool {
-	scale := 0.0 // N
-	for i, p := range pieces {
-		if !finite(p.M, p.V, p.D, p.R) {
-			return false
-		}
-		scale += math.Abs(p.Line*(p.To-p.From)) + math.Abs(nodal[2*i]) + math.Abs(nodal[2*i+1])/height
-	}
-	last := len(nodal) - 2
-	scale += math.Abs(nodal[last]) + math.Abs(nodal[last+1])/height
-	limit := 1e-3 * scale
-	for i := 0; i <= len(pieces); i++ {
-		force, moment := nodal[2*i], nodal[2*i+1]
-		if i > 0 {
-			l := pieces[i-1].To - pieces[i-1].From
-			force += pieces[i-1].Shear(l)
-			moment -= pieces[i-1].Moment(l)
-		}
-		if i < len(pieces) {
-			force -= pieces[i].V
-			moment += pieces[i].M
-		}
-		if !fixed[2*i] && !(math.Abs(force) <= limit) || !fixed[2*i+1] && !(math.Abs(moment) <= limit*height) {
-			return false
+// holdAt tells whether a hold is at a height.
+func (b Beam) holdAt(z float64) bool {
+	for _, h := range b.Holds {
+		if math.Abs(h-z) <= 1e-9*b.Height {
+			return true
 		}
 	}
-	return true
+	return false
+}
+
+// carried is a loading by nodes and spans.
+type carried struct {
+	force, moment []float64    // on each node, N and Nm
+	line          []float64    // on each part above a node, N/m
+	span          [][4]float64 // of the loads inside each span: equivalent force and moment on its lower and upper end
+}
+
+// carry sorts a loading. A load inside a span does the same work on the cubic
+// shapes of a beam without loads as its equivalent on the ends; this is exact
+// for the ends.
+func carry(nodes []float64, at []int, pushes []Push, height float64) carried {
+	n := len(nodes)
+	c := carried{make([]float64, n), make([]float64, n), make([]float64, n-1), make([][4]float64, len(at)-1)}
+	for _, p := range pushes {
+		i := nodeAt(nodes, p.From)
+		c.force[i] += p.Force
+		c.moment[i] += p.Moment
+		if p.Line != 0 {
+			for ; i < n-1 && nodes[i] < p.To-1e-9*height; i++ {
+				c.line[i] += p.Line
+			}
+		}
+	}
+	for i := range c.span {
+		from, l := nodes[at[i]], nodes[at[i+1]]-nodes[at[i]]
+		area := func(z float64) [4]float64 { // integrals of the shapes up to z
+			x := (z - from) / l
+			return [4]float64{
+				l * (x - x*x*x + x*x*x*x/2), l * l * x * x * (0.5 - x*(2./3-x/4)),
+				l * x * x * x * (1 - x/2), l * l * x * x * x * (x/4 - 1./3),
+			}
+		}
+		for s := at[i]; s < at[i+1]; s++ {
+			if c.line[s] != 0 {
+				low, high := area(nodes[s]), area(nodes[s+1])
+				for r := range 4 {
+					c.span[i][r] += c.line[s] * (high[r] - low[r])
+				}
+			}
+			if s == at[i] {
+				continue
+			}
+			x := (nodes[s] - from) / l
+			shape := [4]float64{1 - x*x*(3-2*x), l * x * (1 - x) * (1 - x), x * x * (3 - 2*x), l * x * x * (x - 1)}
+			slope := [4]float64{6 * x * (x - 1) / l, (1 - x) * (1 - 3*x), 6 * x * (1 - x) / l, x * (3*x - 2)}
+			for r := range 4 {
+				c.span[i][r] += c.force[s]*shape[r] + c.moment[s]*slope[r]
+			}
+		}
+	}
+	return c
 }
 
 // check is ErrLoading when something is not finite, lies outside the column

@@ -191,7 +191,7 @@ func Sum(cases []Case, factors []float64) string {
 		case b.Len() > 0:
 			b.WriteString(" + ")
 		}
-		fmt.Fprintf(&b, "%.4g %s", math.Abs(f), cases[i].Name)
+		fmt.Fprintf(&b, "%.6g %s", math.Abs(f), cases[i].Name)
 	}
 	return b.String()
 }
