@@ -137,7 +137,8 @@ func each(n int, progress Progress, task func(i int)) {
 
 // gather collects the results in the order of the files.
 func (r *Report) gather(jobs []*job) {
-	p := places{starts: map[*lang.Decl]place{}}
+	r.places = places{starts: map[*lang.Decl]place{}}
+	p := r.places
 	var files []string
 	for name := range r.Project.Files {
 		files = append(files, name)
@@ -267,6 +268,11 @@ func (r *Report) unused(add func(lang.Diagnostic)) {
 				Message: "nothing uses " + map[model.NameKind]string{model.SectionName: "the section", model.MaterialName: "the material"}[n.Kind] + " '" + n.Name + "'"}})
 		}
 	}
+}
+
+// Place is where a member's name stands.
+func (r *Report) Place(m *Result) (string, lang.Span) {
+	return r.places.span(m.Member.Decl, m.Member.NameSpan)
 }
 
 // places knows where declarations stand.

@@ -106,17 +106,15 @@ func numbers(r *Result, c standard.Check) string {
 	return fmt.Sprintf(": needs %s, has %s, utilisation %s", units.Show(c.Demand, c.Dim, 4), units.Show(c.Capacity, c.Dim, 4), Ratio(c.Utilisation))
 }
 
-// Ratio writes a utilisation with two decimals, rounded so that nothing that
-// fails reads 1.00 and nothing is shown as smaller than it is.
+// Ratio writes a utilisation with two decimals; what is over 1 never reads 1.00.
 func Ratio(u float64) string {
-	if math.IsNaN(u) {
+	switch {
+	case math.IsNaN(u):
 		return "–"
+	case u > 1 && u < 1.005:
+		return "1.01"
 	}
-	up := math.Ceil(u*100-1e-9) / 100
-	if u <= 1 && up > 1 {
-		up = 1
-	}
-	return fmt.Sprintf("%.2f", up)
+	return fmt.Sprintf("%.2f", u)
 }
 
 // governs points at the lines that decide a failing check: the section, and the

@@ -22,6 +22,7 @@ type Report struct {
 	Summary     Summary
 
 	calculations []*model.Calculation
+	places       places
 }
 
 // Diagnostic is a diagnostic with its file and its span in the file's text.

@@ -1,6 +1,9 @@
 package lang
 
-import "strings"
+import (
+	"strings"
+	"unicode/utf8"
+)
 
 // cut splits a text into the texts of its declarations. It looks at the first
 // words of lines, at braces, brackets and quotes, and at nothing else: the rule
@@ -9,7 +12,8 @@ import "strings"
 //
 // A line begins a declaration when it starts with one of the starter words, or
 // when it has contents and no block, bracket or trailing comma of the lines
-// before it is open. Comments and blank lines stay with what precedes them.
+// before it is open. Comments and blank lines stay with what precedes them, and
+// so does a line that starts with the brace of a block.
 func cut(text string, emit func(start, end int)) {
 	c := cutter{text: text}
 	start := 0
@@ -40,7 +44,7 @@ type cutter struct {
 // begins tells whether the line starts a declaration.
 func (c *cutter) begins(line string) bool {
 	rest := trimBlank(line)
-	if rest == "" || rest[0] == '#' {
+	if rest == "" || rest[0] == '#' || rest[0] == '{' {
 		return false
 	}
 	if StartsDeclaration(rest, c.braces > 0) {
@@ -70,7 +74,32 @@ func StartsDeclaration(line string, inBlock bool) bool {
 	return true
 }
 
-func trimBlank(s string) string { return strings.TrimLeft(s, " \t\u00a0\ufeff") }
+// trimBlank takes away the blanks that a line begins with.
+func trimBlank(s string) string {
+	for s != "" {
+		n := blankLength(s)
+		if n == 0 {
+			break
+		}
+		s = s[n:]
+	}
+	return s
+}
+
+// blankLength is the length in bytes of the blank that s begins with, 0 when it
+// begins with something else. The blanks are those of the lexer.
+func blankLength(s string) int {
+	switch c := s[0]; {
+	case c == ' ' || c == '\t':
+		return 1
+	case c < utf8.RuneSelf:
+		return 0
+	}
+	if r, n := utf8.DecodeRuneInString(s); isWideBlank(r) {
+		return n
+	}
+	return 0
+}
 
 // read follows the braces, brackets and trailing comma of a line.
 func (c *cutter) read(line string) {
@@ -98,8 +127,11 @@ func (c *cutter) read(line string) {
 			c.parens++
 		case ')':
 			c.parens = max(0, c.parens-1)
-		case ' ', '\t':
-			continue
+		default:
+			if n := blankLength(line[i:]); n > 0 {
+				i += n - 1
+				continue
+			}
 		}
 		last = line[i]
 	}
@@ -111,17 +143,13 @@ func (c *cutter) read(line string) {
 // lineEnd gives the end of the line that starts at pos and the start of the
 // next one.
 func lineEnd(text string, pos int) (end, next int) {
-	i := strings.IndexByte(text[pos:], '\n')
+	i := strings.IndexAny(text[pos:], "\r\n")
 	if i < 0 {
-		i = len(text) - pos
+		return len(text), len(text)
 	}
 	end = pos + i
-	// a lone \r ends a line too
-	if r := strings.IndexByte(text[pos:end], '\r'); r >= 0 {
-		if pos+r+1 == end && end < len(text) {
-			return pos + r, end + 1
-		}
-		return pos + r, pos + r + 1
+	if strings.HasPrefix(text[end:], "\r\n") {
+		return end, end + 2
 	}
-	return end, min(end+1, len(text))
+	return end, end + 1 // a lone \r ends a line too
 }

@@ -207,16 +207,29 @@ func (r *exprReader) number() *Expr {
 	if err != nil {
 		e.Unit = unit.Unit{} // its Symbol is "": the evaluator reports it, where the unit is needed
 	}
-	if u.Value == "ft" && kindOf(r.lex.Peek().Type) == Number {
+	if u.Value == "ft" && r.inchesAhead() {
 		mark := r.lex.MakeCheckpoint()
 		end := r.end
-		if inches := r.number(); inches.Kind == QuantExpr && inches.Text == "in" {
+		if inches := r.number(); inches.Kind == QuantExpr {
 			return r.line.expr(Expr{Kind: BinaryExpr, Op: '+', Span: e.Span.Join(inches.Span), Text: "ft-in", Args: []*Expr{e, inches}})
 		}
 		r.lex.LoadCheckpoint(mark)
 		r.end = end
 	}
 	return e
+}
+
+// inchesAhead tells whether a number and "in" come next. It looks no further:
+// a row of feet must not be read again for each of them.
+func (r *exprReader) inchesAhead() bool {
+	if kindOf(r.lex.Peek().Type) != Number {
+		return false
+	}
+	mark := r.lex.MakeCheckpoint()
+	r.lex.Next()
+	u := r.lex.Peek()
+	r.lex.LoadCheckpoint(mark)
+	return kindOf(u.Type) == Unit && u.Value == "in"
 }
 
 func plainNumber(s string) string {

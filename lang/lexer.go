@@ -336,9 +336,10 @@ func (l *Lexer) bad() (Kind, Flaw) {
 		return Bad, BadEncoding
 	}
 	l.pos += n
-	switch r {
-	case '\ufeff', '\u00a0', '\u202f', '\u2009': // byte-order mark and the blanks that word processors make
+	if isWideBlank(r) {
 		return Blank, Sound
+	}
+	switch r {
 	case '“', '”', '„', '«', '»':
 		for l.pos < len(l.text) {
 			r, n := utf8.DecodeRuneInString(l.text[l.pos:])
@@ -353,6 +354,12 @@ func (l *Lexer) bad() (Kind, Flaw) {
 		return Bad, BadCharacters
 	}
 	return Bad, BadCharacters
+}
+
+// isWideBlank tells the blanks beside space and tab: the byte-order mark and
+// those that word processors make.
+func isWideBlank(r rune) bool {
+	return r == '\ufeff' || r == '\u00a0' || r == '\u202f' || r == '\u2009'
 }
 
 func isDigit(c byte) bool { return '0' <= c && c <= '9' }

@@ -121,6 +121,7 @@ func (b *builder) reset(s *Syntax) {
 func (b *builder) next() { b.tok = b.lex.Next() }
 
 func (s *Syntax) problem(p Problem) {
+	s.found++
 	if len(s.Problems) < maxReport {
 		s.Problems = append(s.Problems, p)
 	}
@@ -137,7 +138,7 @@ func (b *builder) stmts(open *Stmt, depth int) []*Stmt {
 			continue
 		case EOF:
 			if open != nil {
-				b.unclosed(open)
+				b.unclosed(open, out)
 			}
 			return out
 		case CloseBrace:
@@ -156,9 +157,12 @@ func (b *builder) stmts(open *Stmt, depth int) []*Stmt {
 	}
 }
 
-func (b *builder) unclosed(open *Stmt) {
+func (b *builder) unclosed(open *Stmt, inside []*Stmt) {
 	at := Span{open.Body.Span.Start, open.Body.Span.Start + 1}
 	end := int32(len(strings.TrimRight(b.syntax.Text, " \t\r\n")))
+	if n := len(inside); n > 0 {
+		end = max(end, inside[n-1].Span.End) // a text that is not closed ends with blanks
+	}
 	open.Body.Span.End, open.Span.End = end, end
 	b.syntax.problem(Problem{Rule: "unclosed-block", Span: at, Message: "the block of '" + open.Word + "' is not closed: a } is missing",
 		Fixes: []Fix{Replace("Add the closing brace", true, Span{end, end}, "\n}")}})
@@ -168,7 +172,7 @@ func (b *builder) unclosed(open *Stmt) {
 func (b *builder) stmt(depth int) *Stmt {
 	b.collect()
 	st := &Stmt{}
-	before := len(b.syntax.Problems)
+	before := b.syntax.found
 	if len(b.line) > 0 {
 		st.Line = Span{b.line[0].Start, b.line[len(b.line)-1].End}
 	} else {
@@ -176,7 +180,7 @@ func (b *builder) stmt(depth int) *Stmt {
 	}
 	st.Span = st.Line
 	b.syntax.fill(st, b.line, &b.feed)
-	st.Broken = len(b.syntax.Problems) > before
+	st.Broken = b.syntax.found > before
 	if b.tok.Kind != OpenBrace {
 		return st
 	}

@@ -37,7 +37,8 @@ type FileID struct{ Name string }
 type Syntax struct {
 	Text     string
 	Stmts    []*Stmt
-	Problems []Problem // spans relative to Text
+	Problems []Problem // spans relative to Text, maxReport at most
+	found    int       // problems found, those beyond maxReport too
 }
 
 // Stmt is one statement: a word, what follows it on its line, and the block

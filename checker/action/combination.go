@@ -5,6 +5,8 @@ package action
 import (
 	"fmt"
 	"math"
+	"math/bits"
+	"strconv"
 	"strings"
 )
 
@@ -138,13 +140,10 @@ func Persistent(cases []Case, f Factors) ([]Combination, bool) {
 				base[i] = g
 			}
 		}
-		// from the full selection down to none, so that the usual governing ones
-		// come first
-		for set := 1<<len(variable) - 1; set >= 0; set-- {
-			if set == 0 {
-				add(base)
-				break
-			}
+		add(base)
+		// from few variable actions to many: of combinations that do the same to a
+		// member, the first and so the shortest is named
+		for _, set := range selections(len(variable)) {
 			for lead := range variable {
 				if set&(1<<lead) == 0 {
 					continue
@@ -176,6 +175,20 @@ func nothing(factors []float64) bool {
 	return true
 }
 
+// selections are the non-empty subsets of n things as bit sets, the small ones
+// first.
+func selections(n int) []int {
+	out := make([]int, 0, 1<<n)
+	for size := 1; size <= n; size++ {
+		for set := 1; set < 1<<n; set++ {
+			if bits.OnesCount(uint(set)) == size {
+				out = append(out, set)
+			}
+		}
+	}
+	return out
+}
+
 // Sum writes a combination as a person does, leaving out what has no part.
 func Sum(cases []Case, factors []float64) string {
 	var b strings.Builder
@@ -191,7 +204,11 @@ func Sum(cases []Case, factors []float64) string {
 		case b.Len() > 0:
 			b.WriteString(" + ")
 		}
-		fmt.Fprintf(&b, "%.6g %s", math.Abs(f), cases[i].Name)
+		factor := strconv.FormatFloat(math.Abs(f), 'g', 6, 64)
+		if factor == "1" {
+			factor = "1.0"
+		}
+		b.WriteString(factor + " " + cases[i].Name)
 	}
 	return b.String()
 }

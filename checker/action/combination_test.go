@@ -244,7 +244,7 @@ func TestPersistentLimits(t *testing.T) {
 		t.Errorf("%+v, %v", got, ok)
 	}
 	two, ok := Persistent([]Case{{Name: "G1"}, {Name: "G2"}}, Recommended)
-	if !ok || len(two) != 2 || two[0].Name != "1.35 G1 + 1.35 G2" || two[1].Name != "1 G1 + 1 G2" {
+	if !ok || len(two) != 2 || two[0].Name != "1.35 G1 + 1.35 G2" || two[1].Name != "1.0 G1 + 1.0 G2" {
 		t.Errorf("%+v, %v", two, ok)
 	}
 }
@@ -257,8 +257,8 @@ func TestSum(t *testing.T) {
 		want    string
 	}{
 		{[]float64{1.35, 1.5, 0}, "1.35 G + 1.5 Q"},
-		{[]float64{-1, 0, 1.5 * 0.6}, "-1 G + 0.9 W"},
-		{[]float64{1, -1.5, 0}, "1 G - 1.5 Q"},
+		{[]float64{-1, 0, 1.5 * 0.6}, "-1.0 G + 0.9 W"},
+		{[]float64{1, -1.5, 0}, "1.0 G - 1.5 Q"},
 		{[]float64{0, 0, 0}, ""},
 	} {
 		if got := Sum(cases, c.factors); got != c.want {
