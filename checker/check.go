@@ -71,16 +71,7 @@ type Progress func(done, all int)
 // Check works out a project. The same files give the same report, whatever the
 // order of the files and the number of cores. progress may be nil.
 func Check(project *lang.Project, progress Progress) *Report {
-	r := &Report{Project: project}
-	for _, root := range project.Roots {
-		files := project.Closure(root)
-		calculation := &model.Calculation{Root: root, Files: files, Env: model.NewEnv(files, registry{})}
-		r.calculations = append(r.calculations, calculation)
-	}
-	jobs := r.jobs()
-	each(len(jobs), progress, func(i int) { jobs[i].run() })
-	r.gather(jobs)
-	return r
+	return CheckAgain(nil, project, progress)
 }
 
 // job is one declaration of members in one calculation.
@@ -90,6 +81,7 @@ type job struct {
 	combinations []model.Combination
 	members      []*model.Member
 	results      []*Result
+	done         bool // taken over from an earlier report
 }
 
 func (j *job) run() {
@@ -99,17 +91,6 @@ func (j *job) run() {
 			j.results = append(j.results, evaluate(j.calculation.Env, m, j.combinations))
 		}
 	}
-}
-
-func (r *Report) jobs() []*job {
-	var out []*job
-	for _, c := range r.calculations {
-		combinations := c.Env.All()
-		for _, d := range c.Env.MemberDecls() {
-			out = append(out, &job{calculation: c, decl: d, combinations: combinations})
-		}
-	}
-	return out
 }
 
 // each runs n tasks on all cores.
@@ -136,7 +117,7 @@ func each(n int, progress Progress, task func(i int)) {
 }
 
 // gather collects the results in the order of the files.
-func (r *Report) gather(jobs []*job) {
+func (r *Report) gather() {
 	r.places = places{starts: map[*lang.Decl]place{}}
 	p := r.places
 	var files []string
@@ -175,7 +156,7 @@ func (r *Report) gather(jobs []*job) {
 		offset int32
 	}
 	seen := map[row]*Result{}
-	for _, j := range jobs {
+	for _, j := range r.jobs {
 		for _, m := range j.members {
 			for _, d := range m.Problems {
 				add(d)

@@ -22,6 +22,7 @@ type Report struct {
 	Summary     Summary
 
 	calculations []*model.Calculation
+	jobs         []*job
 	places       places
 }
 

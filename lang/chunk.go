@@ -15,14 +15,21 @@ import (
 // before it is open. Comments and blank lines stay with what precedes them, and
 // so does a line that starts with the brace of a block.
 func cut(text string, emit func(start, end int)) {
-	c := cutter{text: text}
-	start := 0
-	for pos := 0; pos < len(text); {
+	cutFrom(text, 0, func(start, end int) bool { emit(start, end); return true })
+}
+
+// cutFrom is cut from a place where a declaration begins. A declaration is
+// handed out when its end is known; emit returns false to stop.
+func cutFrom(text string, start int, emit func(start, end int) bool) {
+	c := cutter{}
+	for pos := start; pos < len(text); {
 		end, next := lineEnd(text, pos)
 		line := text[pos:end]
 		if c.begins(line) {
 			if pos > start {
-				emit(start, pos)
+				if !emit(start, pos) {
+					return
+				}
 				start = pos
 			}
 			c.braces, c.parens, c.comma = 0, 0, false
@@ -36,7 +43,6 @@ func cut(text string, emit func(start, end int)) {
 }
 
 type cutter struct {
-	text           string
 	braces, parens int
 	comma          bool // the last line ended with a comma
 }

@@ -94,12 +94,12 @@ const (
 // row is a line of the result, or the lines of a statement that goes on.
 type row struct {
 	first, last int32 // its pieces
-	level       int16
+	level       int16 // of blocks around it; around its end for a raw row
 	kind        rowKind
 	blank       bool // a blank line stands before it
 	opens       bool // the next row lies in a block that it opens
-	heads       bool // a statement with a block of several lines begins
-	closes      bool // it ends a block of several lines that began at level 0
+	heads       bool // a statement of the top level with a block of several lines begins
+	closes      bool // one ends
 	single      bool // a statement on one line
 }
 

@@ -152,7 +152,7 @@ func (w *formatter) number(r *row) (s shape, start, end int) {
 		return shape{}, 0, 0
 	}
 	end = start
-	if end < last && w.pieces[end].kind == Operator {
+	if end+1 < last && w.pieces[end].kind == Operator && w.pieces[end+1].gap == 0 {
 		end++
 	}
 	if end+1 >= last || w.pieces[end].kind != Number || w.pieces[end+1].kind != Unit || w.pieces[end+1].gap != 1 || plain && end+2 != last {

@@ -12,11 +12,7 @@ func (w *formatter) declaration(s *Syntax, base int32) {
 	w.onLine = false
 	for i := 0; i < len(w.units); {
 		u := &w.units[i]
-		from := u.first
-		if u.first == u.last {
-			from = u.brace
-		}
-		w.between(from)
+		w.between(w.start(i))
 		switch {
 		case u.raw:
 			i = w.raw(i)
@@ -49,7 +45,7 @@ func (w *formatter) add(r row, pieces ...piece) {
 	w.pieces = append(w.pieces, pieces...)
 	r.last = int32(len(w.pieces))
 	r.blank = w.blank || w.newlines > 1
-	if n := len(w.rows); n == 0 || w.rows[n-1].opens || r.kind == closeRow {
+	if n := len(w.rows); n == 0 || w.rows[n-1].opens || w.rows[n-1].kind == aloneRow || r.kind == closeRow {
 		r.blank = false
 	}
 	w.newlines, w.blank = 0, false
@@ -98,10 +94,7 @@ func (w *formatter) trail(token int) {
 // gives the index of the segment behind them.
 func (w *formatter) raw(i int) int {
 	first := &w.units[i]
-	from := first.first
-	if first.first == first.last {
-		from = first.brace
-	}
+	from := w.start(i)
 	for from > 1 && w.tokens[from-1].Kind != Newline {
 		from--
 	}
@@ -109,15 +102,16 @@ func (w *formatter) raw(i int) int {
 	for j < len(w.units) && w.firstLine(j) <= w.lastLine(j-1) {
 		j++
 	}
-	to := w.units[j-1].end()
+	last := &w.units[j-1]
+	to := max(last.end(), last.semicolon+1)
 	for to < len(w.tokens) && w.tokens[to].Kind != Newline {
 		to++
 	}
-	last := &w.units[j-1]
 	inside := first.depth > 0 || first.close // of a block that began before
 	r := row{kind: rawRow, level: int16(last.depth), opens: last.brace > 0}
-	r.heads = r.opens && !inside
-	r.closes = !r.opens && last.depth == 0 && inside
+	ends := r.opens || last.depth > 0 // inside a block that goes on
+	r.heads = ends && !inside
+	r.closes = !ends && inside
 	if first.close {
 		w.newlines, w.blank = 0, false
 	}
@@ -129,7 +123,7 @@ func (w *formatter) raw(i int) int {
 // statement adds the rows of a statement without the contents of its block.
 func (w *formatter) statement(i int) {
 	u := &w.units[i]
-	r := row{kind: statementRow, level: int16(u.depth), first: int32(len(w.pieces)), single: u.brace == 0, heads: u.brace > 0}
+	r := row{kind: statementRow, level: int16(u.depth), first: int32(len(w.pieces)), single: u.brace == 0, heads: u.brace > 0 && u.depth == 0}
 	w.spread(u, &r)
 	w.next = u.last
 	switch {
@@ -139,14 +133,9 @@ func (w *formatter) statement(i int) {
 		w.pieces = append(w.pieces, p)
 		r.opens = true
 		w.next = u.brace + 1
-	case u.brace == 0:
-		if semicolon := w.needed(i); semicolon > 0 {
-			w.pieces = append(w.pieces, w.piece(semicolon))
-			// what stands before it is none but blanks and comments
-			if !w.commented(u.last, semicolon) {
-				w.next = semicolon + 1
-			}
-		}
+	case u.semicolon > 0:
+		// a comment before it comes to stand behind it
+		w.pieces = append(w.pieces, w.piece(u.semicolon))
 	}
 	r.last = int32(len(w.pieces))
 	w.add(r)
@@ -179,33 +168,6 @@ func (w *formatter) commented(from, to int) bool {
 		}
 	}
 	return false
-}
-
-// needed gives the semicolon behind a statement that a line end cannot stand
-// for, 0 when there is none: after a comma a line goes on, and a brace that
-// begins the next line belongs to the line before.
-func (w *formatter) needed(i int) int {
-	u := &w.units[i]
-	comma := w.tokens[u.last-1].Kind == Comma
-	brace := i+1 < len(w.units) && w.units[i+1].first == w.units[i+1].last
-	if !comma && !brace {
-		return 0
-	}
-	return w.semicolon(u.last)
-}
-
-// semicolon finds the first semicolon behind a statement.
-func (w *formatter) semicolon(at int) int {
-	for ; at < len(w.tokens); at++ {
-		switch w.tokens[at].Kind {
-		case Semicolon:
-			return at
-		case Blank, Newline, Comment:
-		default:
-			return 0
-		}
-	}
-	return 0
 }
 
 // inline adds a statement with its block as one row, when it stood on one line
@@ -257,17 +219,7 @@ func (w *formatter) inline(i int) bool {
 func (w *formatter) separate() {
 	for i := range w.rows {
 		r := &w.rows[i]
-		if i == 0 || r.level > 0 || r.kind == closeRow || r.kind == braceRow {
-			continue
-		}
-		before := &w.rows[i-1]
-		if r.kind == commentRow {
-			if before.closes && w.sticks(i) {
-				r.blank = true
-			}
-			continue
-		}
-		if before.closes {
+		if i > 0 && w.rows[i-1].closes && (r.kind != commentRow || w.sticks(i)) {
 			r.blank = true
 		}
 		if !r.heads {

@@ -10,6 +10,9 @@ type segment struct {
 	depth int  // of blocks around it
 	after int  // the segment after its block
 	raw   bool // stays as it is
+	// semicolon is the token of the one behind the statement that a line end
+	// cannot stand for, 0 when there is none.
+	semicolon int
 }
 
 // end is the index after the last token of the segment.
@@ -112,6 +115,9 @@ func (w *formatter) skip(at *int, offset int32) bool {
 // statement that cannot be read, and with one that would begin a declaration if
 // it stood on a line of its own.
 func (w *formatter) spoil() {
+	for i := range w.units {
+		w.units[i].semicolon = w.needed(i)
+	}
 	for i := 0; i < len(w.units); {
 		j := i
 		raw := false
@@ -135,6 +141,24 @@ func (w *formatter) misread(u *segment) bool {
 	return !u.close && u.depth > 0 && u.first < u.last && StartsDeclaration(w.text[w.tokens[u.first].Start:], true)
 }
 
+// start is the token that a segment starts with. A block without a statement at
+// the start of a declaration keeps the semicolon before it: without one it would
+// belong to the declaration before.
+func (w *formatter) start(i int) int {
+	u := &w.units[i]
+	if u.first < u.last {
+		return u.first
+	}
+	if i == 0 {
+		for j, t := range w.tokens[1:u.brace] {
+			if t.Kind == Semicolon {
+				return j + 1
+			}
+		}
+	}
+	return u.brace
+}
+
 func (w *formatter) firstLine(i int) int32 {
 	u := &w.units[i]
 	if u.first == u.last {
@@ -143,4 +167,37 @@ func (w *formatter) firstLine(i int) int32 {
 	return w.tokens[u.first].line
 }
 
-func (w *formatter) lastLine(i int) int32 { return w.tokens[w.units[i].end()-1].line }
+func (w *formatter) lastLine(i int) int32 {
+	u := &w.units[i]
+	return w.tokens[max(u.end()-1, u.semicolon)].line
+}
+
+// needed gives the semicolon behind a statement that a line end cannot stand
+// for, 0 when there is none: after a comma and inside a bracket that was never
+// closed a line goes on, and a brace that begins the next line belongs to the
+// line before.
+func (w *formatter) needed(i int) int {
+	u := &w.units[i]
+	if u.close || u.brace > 0 {
+		return 0
+	}
+	brace := i+1 < len(w.units) && w.units[i+1].first == w.units[i+1].last
+	if !u.raw && !brace && w.tokens[u.last-1].Kind != Comma {
+		return 0
+	}
+	return w.semicolon(u.last)
+}
+
+// semicolon finds the first semicolon behind a statement.
+func (w *formatter) semicolon(at int) int {
+	for ; at < len(w.tokens); at++ {
+		switch w.tokens[at].Kind {
+		case Semicolon:
+			return at
+		case Blank, Newline, Comment:
+		default:
+			return 0
+		}
+	}
+	return 0
+}

@@ -61,7 +61,7 @@ func TestFormatLineEnds(t *testing.T) {
 		{"byte-order mark", "\ufeffa=1\n", "\ufeffa = 1\n"},
 		{"byte-order mark before a blank line", "\ufeff\n\na=1\n", "\ufeffa = 1\n"},
 		{"byte-order mark before a broken line", "\ufeff  a=1..2\n", "\ufeff  a=1..2\n"},
-		{"byte-order mark before an open block", "\ufeff\ncolumn A {\n x  = 1", "\ufeff\ncolumn A {\n x  = 1\n"},
+		{"byte-order mark before an open block", "\ufeff\ncolumn A {\n x  = 1", "\ufeffcolumn A {\n x  = 1\n"},
 		{"byte-order mark alone", "\ufeff", "\ufeff"},
 		{"no-break spaces", "a\u00a0=\u00a05\u00a0kN\u00a0\n", "a = 5 kN\n"},
 		{"thin spaces", "a\u2009= 5\u202fkN\n", "a = 5 kN\n"},

@@ -2,6 +2,7 @@ package lang
 
 import (
 	"runtime"
+	"sort"
 	"strings"
 	"sync"
 	"sync/atomic"
@@ -23,6 +24,9 @@ const (
 // own declaration. Parts of an earlier tree of the same file whose text did not
 // change are used again; prev may be nil.
 func Parse(id *FileID, text string, prev *File) *File {
+	if prev != nil && prev.Text == text && prev.Name == id.Name {
+		return prev
+	}
 	f := &File{Name: id.Name, Text: text}
 	switch {
 	case len(text) > maxFile:
@@ -35,19 +39,92 @@ func Parse(id *FileID, text string, prev *File) *File {
 		f.Starts = []int32{0}
 		return f
 	}
-	var ranges [][2]int
-	cut(text, func(start, end int) { ranges = append(ranges, [2]int{start, end}) })
-	f.Decls = make([]*Decl, len(ranges))
-	f.Starts = make([]int32, len(ranges))
-	for i, r := range ranges {
-		f.Starts[i] = int32(r[0])
+	head, tail, ranges := recut(text, prev)
+	f.Decls = make([]*Decl, head+len(ranges)+tail)
+	f.Starts = make([]int32, len(f.Decls))
+	if prev != nil {
+		shift := int32(len(text) - len(prev.Text))
+		copy(f.Decls, prev.Decls[:head])
+		copy(f.Starts, prev.Starts[:head])
+		copy(f.Decls[head+len(ranges):], prev.Decls[len(prev.Decls)-tail:])
+		for i := range tail {
+			f.Starts[head+len(ranges)+i] = prev.Starts[len(prev.Decls)-tail+i] + shift
+		}
 	}
-	head, tail := reuse(f, prev, ranges)
+	for i, r := range ranges {
+		f.Starts[head+i] = int32(r[0])
+	}
+	f.read(id, head, ranges)
+	return f
+}
+
+// recut cuts the part of a text that differs from an earlier one into
+// declarations, and tells how many of the earlier declarations stay at the head
+// and at the tail. Where a declaration begins, nothing of what stands before it
+// counts any more, so the cut is the same from there on.
+func recut(text string, prev *File) (head, tail int, ranges [][2]int) {
+	start, from := 0, len(text) // the cut begins at start; from is where the old tail could begin
+	if prev != nil && prev.Unreadable == "" && len(prev.Decls) > 0 {
+		same := commonPrefix(text, prev.Text)
+		from = len(text) - commonSuffix(text[same:], prev.Text[same:])
+		// The declaration in which the texts part, and the one before it: an edit
+		// at its first line can join the two.
+		head = sort.Search(len(prev.Starts), func(i int) bool { return int(prev.Starts[i]) > same }) - 1
+		head = max(0, head-1)
+		start = int(prev.Starts[head])
+	} else {
+		prev = nil
+	}
+	done := false
+	cutFrom(text, start, func(begin, end int) bool {
+		if prev != nil && begin >= from {
+			old := int32(begin - (len(text) - len(prev.Text)))
+			if i := sort.Search(len(prev.Starts), func(i int) bool { return prev.Starts[i] >= old }); i < len(prev.Starts) && prev.Starts[i] == old && i >= head {
+				tail = len(prev.Starts) - i
+				done = true
+				return false
+			}
+		}
+		ranges = append(ranges, [2]int{begin, end})
+		return true
+	})
+	if !done {
+		tail = 0
+	}
+	return head, tail, ranges
+}
+
+func commonPrefix(a, b string) int {
+	n := min(len(a), len(b))
+	i := 0
+	for i+64 <= n && a[i:i+64] == b[i:i+64] {
+		i += 64
+	}
+	for i < n && a[i] == b[i] {
+		i++
+	}
+	return i
+}
+
+func commonSuffix(a, b string) int {
+	n := min(len(a), len(b))
+	i := 0
+	for i+64 <= n && a[len(a)-i-64:len(a)-i] == b[len(b)-i-64:len(b)-i] {
+		i += 64
+	}
+	for i < n && a[len(a)-1-i] == b[len(b)-1-i] {
+		i++
+	}
+	return i
+}
+
+// read parses the declarations that are new, long files on all cores.
+func (f *File) read(id *FileID, head int, ranges [][2]int) {
+	text, tail := f.Text, len(ranges)
 	// declarations do not depend on one another: long files are read on all cores
 	const batch = 64
 	var wait sync.WaitGroup
 	next := atomic.Int64{}
-	next.Store(int64(head))
 	work := func() {
 		for {
 			first := int(next.Add(batch)) - batch
@@ -56,36 +133,15 @@ func Parse(id *FileID, text string, prev *File) *File {
 			}
 			for i := first; i < min(first+batch, tail); i++ {
 				r := ranges[i]
-				f.Decls[i] = &Decl{File: id, Syntax: parseDecl(text[r[0]:r[1]])}
+				f.Decls[head+i] = &Decl{File: id, Syntax: parseDecl(text[r[0]:r[1]])}
 			}
 		}
 	}
-	for range min(runtime.GOMAXPROCS(0)-1, (tail-head)/batch) {
+	for range min(runtime.GOMAXPROCS(0)-1, tail/batch) {
 		wait.Go(work)
 	}
 	work()
 	wait.Wait()
-	return f
-}
-
-// reuse fills in the declarations at the head and the tail of the file that
-// stand in the earlier tree with the same text, and gives the range that is
-// left to parse.
-func reuse(f *File, prev *File, ranges [][2]int) (head, tail int) {
-	head, tail = 0, len(ranges)
-	if prev == nil || prev.Unreadable != "" {
-		return head, tail
-	}
-	same := func(i, j int) bool { return f.Text[ranges[i][0]:ranges[i][1]] == prev.Decls[j].Text }
-	for head < tail && head < len(prev.Decls) && same(head, head) {
-		f.Decls[head] = prev.Decls[head]
-		head++
-	}
-	for j := len(prev.Decls) - 1; tail > head && j >= head && same(tail-1, j); j-- {
-		tail--
-		f.Decls[tail] = prev.Decls[j]
-	}
-	return head, tail
 }
 
 // parseDecl reads the text of one declaration.
@@ -335,7 +391,7 @@ func (s *Syntax) complain(e *Expr) bool {
 		switch e.Text {
 		case "(":
 			p.Rule, p.Message = "unclosed-bracket", "this bracket is not closed: a ) is missing"
-			p.Fixes = []Fix{Replace("Add the closing bracket", true, Span{e.Span.End, e.Span.End}, ")")}
+			p.Fixes = []Fix{Replace("Add the closing bracket", false, Span{e.Span.End, e.Span.End}, ")")}
 			p.Span.End = p.Span.Start + 1
 			if i := strings.IndexByte(s.Text[e.Span.Start:e.Span.End], '('); i >= 0 {
 				p.Span = Span{e.Span.Start + int32(i), e.Span.Start + int32(i) + 1}
@@ -414,7 +470,7 @@ func (s *Syntax) flaws(tokens []Token) bool {
 			p.Rule, p.Message = "bad-number", "'"+text+"' is not a number"
 			if mended := mendNumber(text); mended != "" {
 				p.Message += ": write " + mended
-				p.Fixes = []Fix{Replace("Write "+mended, true, t.Span(), mended)}
+				p.Fixes = []Fix{Replace("Write "+mended, text[0] == '.', t.Span(), mended)}
 			}
 		case BadEncoding:
 			p.Rule, p.Message = "stray-character", "these bytes are not UTF-8 text"

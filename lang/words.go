@@ -8,6 +8,9 @@ var joinWords = map[string]bool{
 	"major": true, "minor": true, "both": true, "twist": true, "top": true, "base": true,
 }
 
+// Joins tells whether a word stands between the parts of statements.
+func Joins(word string) bool { return joinWords[word] }
+
 // starters are the words that begin a declaration. At the start of a line they
 // always do, even inside a bracket that was never closed: that is how a broken
 // declaration breaks itself alone.

@@ -126,9 +126,9 @@ func (b *builder) unknown(d declared) {
 		return
 	}
 	p := lang.Problem{Rule: "unknown-statement", Span: d.stmt.Head, Message: "'" + d.stmt.Word + "' begins no declaration"}
-	if near := closest(d.stmt.Word, topWords, 1); len(near) > 0 {
+	if near, sure := nearest(d.stmt.Word, topWords, 1); len(near) > 0 {
 		p.Message += "; did you mean " + near[0] + "?"
-		p.Fixes = append(p.Fixes, lang.Replace("Write "+near[0], true, d.stmt.Head, near[0]))
+		p.Fixes = append(p.Fixes, lang.Replace("Write "+near[0], sure, d.stmt.Head, near[0]))
 	} else {
 		p.Notes = append(p.Notes, "a declaration begins with "+lang.OrList(topWords)+", or gives a name a value: name = 5 m")
 	}
@@ -138,10 +138,11 @@ func (b *builder) unknown(d declared) {
 func (b *builder) value(d declared, value []*lang.Expr) {
 	s := d.stmt
 	head := &lang.Expr{Kind: lang.NameExpr, Text: s.Word, Span: s.Head}
-	if !b.name(d, head, ValueName, -1) || s.Broken {
-		if s.Broken {
-			b.env.Names[s.Word].Bad = true
-		}
+	if !b.name(d, head, ValueName, -1) {
+		return
+	}
+	if s.Broken {
+		b.env.Names[s.Word].Bad = true
 		return
 	}
 	r := b.reader(d)
@@ -158,6 +159,10 @@ func (b *builder) value(d declared, value []*lang.Expr) {
 	b.env.Values.Define(&lang.Value{Name: s.Word, Decl: d.decl, Stmt: s, Expr: value[0]})
 }
 
+// ownWords are what every member has of its own. A value of such a name would
+// change, unseen, what the members say with it.
+var ownWords = map[string]bool{"height": true, "length": true, "top": true, "base": true, "floor": true}
+
 // name registers a name; the first to give it keeps it.
 func (b *builder) name(d declared, e *lang.Expr, kind NameKind, index int) bool {
 	place := lang.Place{Decl: d.decl, Span: e.Span}
@@ -170,6 +175,10 @@ func (b *builder) name(d declared, e *lang.Expr, kind NameKind, index int) bool 
 	}
 	if _, taken := lang.Functions[e.Text]; taken {
 		problem("'" + e.Text + "' is a function of the language and cannot be given another meaning")
+		return false
+	}
+	if kind == ValueName && ownWords[e.Text] {
+		problem("'" + e.Text + "' is a word of the language: every member has its own, and it cannot be given another meaning")
 		return false
 	}
 	if first, twice := b.env.Names[e.Text]; twice {
@@ -282,19 +291,17 @@ func readBody(newReader func(declared) *reader, d declared, block *lang.Block, t
 				words = append(words, w)
 			}
 			p := lang.Problem{Rule: "unknown-property", Span: s.Head, Message: "'" + s.Word + "' is nothing that '" + d.stmt.Word + "' knows here"}
-			near := closest(s.Word, words, 1)
+			near, sure := nearest(s.Word, words, 1)
 			if len(near) > 0 {
 				p.Message += "; did you mean " + near[0] + "?"
-				p.Fixes = append(p.Fixes, lang.Replace("Write "+near[0], true, s.Head, near[0]))
+				p.Fixes = append(p.Fixes, lang.Replace("Write "+near[0], sure, s.Head, near[0]))
 			} else {
 				sortStrings(words)
 				p.Notes = append(p.Notes, "it knows "+lang.OrList(words))
 			}
 			r.problem(p)
 		case !assigned:
-			p := lang.Problem{Rule: "wrong-form", Span: s.Line, Message: "a sign = is missing: " + s.Word + " = …"}
-			p.Fixes = []lang.Fix{lang.Replace("Add the sign", true, lang.Span{Start: s.Head.End, End: s.Head.End}, " =")}
-			r.problem(p)
+			noSign(r)
 		case seen[s.Word] != nil:
 			twice(r, seen[s.Word])
 		default:
@@ -307,6 +314,18 @@ func readBody(newReader func(declared) *reader, d declared, block *lang.Block, t
 		ok = ok && !r.failed
 	}
 	return ok
+}
+
+// noSign is the problem of a property without the sign and the value, or the
+// sign alone.
+func noSign(r *reader) {
+	s := r.stmt
+	if len(s.Args) == 0 {
+		r.problem(lang.Problem{Rule: "missing-value", Span: s.Line, Message: "'" + s.Word + "' has no value: " + s.Word + " = …"})
+		return
+	}
+	r.problem(lang.Problem{Rule: "wrong-form", Span: s.Line, Message: "a sign = is missing: " + s.Word + " = …",
+		Fixes: []lang.Fix{lang.Replace("Add the sign", true, lang.Span{Start: s.Head.End, End: s.Head.End}, " =")}})
 }
 
 func twice(r *reader, first *lang.Stmt) {
@@ -335,15 +354,16 @@ func (b *builder) basis() {
 		seen := map[string]*lang.Stmt{}
 		for _, s := range d.stmt.Body.Stmts {
 			r := b.reader(declared{d.decl, s})
-			if s.Broken {
-				continue
-			}
 			if first := seen[s.Word]; first != nil && s.Word != "show" {
 				twice(r, first)
-				continue
+			} else if !s.Broken {
+				seen[s.Word] = s
+				b.basisStmt(r)
 			}
-			seen[s.Word] = s
-			b.basisStmt(r)
+			if r.failed && s.Word != "show" {
+				// what it was to say is not known, so no member can be judged by it
+				env.refuse("a line of the basis has an error")
+			}
 		}
 	}
 }
@@ -402,7 +422,7 @@ func (b *builder) basisStmt(r *reader) {
 		if name != "EN 1990:2002" {
 			r.problem(lang.Problem{Rule: "unknown-standard", Span: e.Span, Message: "'" + name + "' is no standard of actions that kern combines to: \"EN 1990:2002\"",
 				Fixes: []lang.Fix{lang.Replace("Write EN 1990:2002", false, e.Span, `"EN 1990:2002"`)}})
-			b.env.Refused = "the standard of actions is not known"
+			b.env.refuse("the standard of actions is not known")
 			return
 		}
 		basis.Actions, basis.Equation = name, "6.10"
@@ -411,7 +431,7 @@ func (b *builder) basisStmt(r *reader) {
 			eq, ok := r.text("the equation")
 			if ok && eq != "6.10" {
 				r.fail("unknown-standard", e.Span, "equation '%s' is not known; known is 6.10. Other combinations are written out: combination NAME = 1.1 G + 0.5 W", eq)
-				b.env.Refused = "the equation of the combinations is not known"
+				b.env.refuse("the equation of the combinations is not known")
 			}
 		}
 	case "show":
@@ -443,9 +463,10 @@ func (b *builder) basisStmt(r *reader) {
 		return
 	default:
 		p := lang.Problem{Rule: "unknown-statement", Span: r.stmt.Head, Message: "'" + r.stmt.Word + "' is no part of a basis"}
-		for _, n := range closest(r.stmt.Word, basisWords, 1) {
+		near, sure := nearest(r.stmt.Word, basisWords, 1)
+		for _, n := range near {
 			p.Message += "; did you mean " + n + "?"
-			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, true, r.stmt.Head, n))
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, sure, r.stmt.Head, n))
 		}
 		r.problem(p)
 		return
@@ -470,8 +491,9 @@ func (b *builder) override(r *reader) {
 		}
 		sortStrings(words)
 		p := lang.Problem{Rule: "unknown-property", Span: r.stmt.Head, Message: "'" + name + "' is no number that a basis can set: " + lang.OrList(words)}
-		for _, n := range closest(name, words, 1) {
-			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, true, r.stmt.Head, n))
+		near, sure := nearest(name, words, 3)
+		for _, n := range near {
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, sure && len(near) == 1, r.stmt.Head, n))
 		}
 		r.problem(p)
 		return
@@ -529,11 +551,11 @@ func (b *builder) cases() {
 		}
 		c := &Case{Place: r.place(name.Span)}
 		c.Name = name.Text
-		if n := env.Names[c.Name]; n.Stmt == d.stmt {
-			n.Index = len(env.Cases)
-		} else {
-			continue
+		n := env.Names[c.Name]
+		if n == nil || n.Stmt != d.stmt {
+			continue // given twice, or a word that the language has taken
 		}
+		n.Index = len(env.Cases)
 		env.Cases = append(env.Cases, c)
 		kind, ok := r.wordOf("the kind of action", "permanent", "imposed", "snow", "wind", "temperature")
 		if !ok {
@@ -557,9 +579,6 @@ func (b *builder) cases() {
 				r.problem(lang.Problem{Rule: "missing-category", Span: name.Span, Message: fmt.Sprintf("the case '%s' needs a category for the combinations of %s: %s", c.Name, env.Basis.Actions, categories[c.Kind]),
 					Fixes: []lang.Fix{lang.Replace("Add a category", false, lang.Span{Start: d.stmt.Line.End, End: d.stmt.Line.End}, map[action.Kind]string{action.Imposed: ` "B"`, action.Snow: ` "below 1000 m"`}[c.Kind])}})
 			}
-		}
-		if c.Bad && env.Refused == "" {
-			env.Refused = "the case '" + c.Name + "' has an error"
 		}
 	}
 	if len(env.Cases) == 0 {
@@ -639,8 +658,8 @@ func (b *builder) levels() {
 			continue
 		}
 		n := env.Names[name.Text]
-		if n.Stmt != d.stmt {
-			continue
+		if n == nil || n.Stmt != d.stmt {
+			continue // given twice, or a word that the language has taken
 		}
 		l := &Level{Name: name.Text, Place: r.place(name.Span)}
 		if _, ok := r.wordOf("the height of the level", "at"); ok {
@@ -687,21 +706,31 @@ func (b *builder) combinations() {
 	for _, d := range b.of("combination") {
 		r := b.reader(d)
 		name := r.name("a combination")
-		if name == nil || env.Names[name.Text].Stmt != d.stmt {
+		if name == nil {
+			env.refuse("a combination has an error")
 			continue
 		}
 		n := env.Names[name.Text]
+		if n == nil || n.Stmt != d.stmt {
+			continue // given twice, or a word that the language has taken
+		}
+		// a combination that was meant and cannot be read leaves members
+		// undecided: without it they would be checked for less than was asked
+		refused := "the combination '" + name.Text + "' has an error"
 		if e := r.take(); e == nil || e.Kind != lang.EqualsExpr {
 			r.fail("wrong-form", r.stmt.Line, "a combination is a sum of cases: combination %s = 1.1 G + 0.5 W", name.Text)
+			env.refuse(refused)
 			continue
 		}
 		e := r.take()
 		if e == nil {
 			r.fail("missing-value", r.stmt.Line, "a combination is a sum of cases: combination %s = 1.1 G + 0.5 W", name.Text)
+			env.refuse(refused)
 			continue
 		}
 		factors := make([]float64, len(env.Cases))
 		if !b.sum(r, e, 1, factors) || !r.end() {
+			env.refuse(refused)
 			continue
 		}
 		c := Combination{Label: name.Text, Place: r.place(name.Span)}
@@ -739,7 +768,16 @@ func (b *builder) combinations() {
 			*at = o.Value
 		}
 	}
-	made, ok := action.Persistent(plain, f)
+	// a case with an error takes no part: a member that has a load of it is
+	// undecided for that load, and the others are what they are without it
+	var good []action.Case
+	var at []int
+	for i, c := range env.Cases {
+		if !c.Bad {
+			good, at = append(good, c.Case), append(at, i)
+		}
+	}
+	made, ok := action.Persistent(good, f)
 	if !ok {
 		env.Refused = fmt.Sprintf("there are more than %d variable cases", action.MaxVariable)
 		c := env.Cases[len(env.Cases)-1]
@@ -749,6 +787,11 @@ func (b *builder) combinations() {
 		return
 	}
 	for _, m := range made {
+		factors := make([]float64, len(env.Cases))
+		for i, factor := range m.Factors {
+			factors[at[i]] = factor
+		}
+		m.Factors = factors
 		env.Automatic = append(env.Automatic, Combination{Combination: m})
 	}
 }
@@ -830,6 +873,13 @@ func sortStrings(s []string) {
 
 // known is NaN for a value that was not given.
 var unknown = math.NaN()
+
+// refuse notes why no member can be judged; the first reason stays.
+func (env *Env) refuse(why string) {
+	if env.Refused == "" {
+		env.Refused = why
+	}
+}
 
 // MemberDecls are the declarations that describe members.
 func (env *Env) MemberDecls() []*lang.Decl { return env.members }

@@ -279,6 +279,10 @@ func (w *memberReader) floor(r *reader, l Load) {
 		return
 	}
 	for _, p := range level.Pressures {
+		if c := w.env.Cases[p.Case]; c.Bad {
+			w.m.Missing = append(w.m.Missing, "its load case '"+c.Name+"' has an error")
+			continue
+		}
 		f := l
 		f.Case, f.Value = p.Case, p.Value*area
 		w.m.Loads = append(w.m.Loads, f)

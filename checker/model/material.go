@@ -17,8 +17,8 @@ func (b *builder) materials() {
 			continue
 		}
 		n := b.env.Names[name.Text]
-		if n.Stmt != d.stmt {
-			continue
+		if n == nil || n.Stmt != d.stmt {
+			continue // given twice, or a word that the language has taken
 		}
 		m := &Material{Name: name.Text, Place: r.place(name.Span)}
 		n.Index = len(b.env.Materials)

@@ -221,8 +221,7 @@ func (w *memberReader) statement(d declared) {
 	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true}
 	if needsSign[s.Word] != assigned {
 		if needsSign[s.Word] {
-			r.problem(lang.Problem{Rule: "wrong-form", Span: s.Line, Message: "a sign = is missing: " + s.Word + " = …",
-				Fixes: []lang.Fix{lang.Replace("Add the sign", true, lang.Span{Start: s.Head.End, End: s.Head.End}, " =")}})
+			noSign(r)
 		} else if contains(memberWords, s.Word) {
 			r.problem(lang.Problem{Rule: "wrong-form", Span: s.Args[0].Span, Message: "'" + s.Word + "' takes no sign ="})
 		} else {
@@ -279,9 +278,9 @@ func (w *memberReader) statement(d declared) {
 
 func (w *memberReader) unknown(r *reader) {
 	p := lang.Problem{Rule: "unknown-statement", Span: r.stmt.Head, Message: "'" + r.stmt.Word + "' is nothing that a " + w.m.Kind.String() + " says"}
-	if near := closest(r.stmt.Word, memberWords, 1); len(near) > 0 {
+	if near, sure := nearest(r.stmt.Word, memberWords, 1); len(near) > 0 {
 		p.Message += "; did you mean " + near[0] + "?"
-		p.Fixes = append(p.Fixes, lang.Replace("Write "+near[0], true, r.stmt.Head, near[0]))
+		p.Fixes = append(p.Fixes, lang.Replace("Write "+near[0], sure, r.stmt.Head, near[0]))
 	} else {
 		p.Notes = append(p.Notes, "a "+w.m.Kind.String()+" says "+lang.OrList(memberWords))
 	}

@@ -18,6 +18,9 @@ type reader struct {
 	report func(lang.Diagnostic)
 	names  lang.Lookup
 	failed bool
+	// tried are the words that could have stood where the next part stands.
+	tried  [8]string
+	trials int
 }
 
 func (r *reader) problem(p lang.Problem) {
@@ -48,6 +51,7 @@ func (r *reader) take() *lang.Expr {
 	e := r.peek()
 	if e != nil {
 		r.args = r.args[1:]
+		r.trials = 0
 	}
 	return e
 }
@@ -69,6 +73,7 @@ func (r *reader) word(words ...string) (string, bool) {
 				return w, true
 			}
 		}
+		r.trials += copy(r.tried[r.trials:], words)
 	}
 	return "", false
 }
@@ -84,8 +89,9 @@ func (r *reader) wordOf(what string, words ...string) (string, bool) {
 		r.fail("wrong-form", r.stmt.Line, "%s is missing: %s", what, lang.OrList(words))
 	case e.Kind == lang.NameExpr:
 		p := lang.Problem{Rule: "unknown-word", Span: e.Span, Message: fmt.Sprintf("'%s' is no %s: %s", e.Text, strings.TrimPrefix(strings.TrimPrefix(what, "the "), "an "), lang.OrList(words))}
-		for _, n := range closest(e.Text, words, 1) {
-			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, true, e.Span, n))
+		near, sure := nearest(e.Text, words, 1)
+		for _, n := range near {
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, sure, e.Span, n))
 		}
 		r.problem(p)
 	default:
@@ -101,9 +107,16 @@ func (r *reader) text(what string) (string, bool) {
 		r.take()
 		return e.Text, true
 	}
-	if e != nil && e.Kind == lang.NameExpr {
-		r.problem(lang.Problem{Rule: "wrong-form", Span: e.Span, Message: what + " stands in quotes",
-			Fixes: []lang.Fix{lang.Replace("Put it in quotes", true, e.Span, `"`+e.Text+`"`)}})
+	if e != nil && e.Kind != lang.CommaExpr && e.Kind != lang.EqualsExpr {
+		span := e.Span
+		for _, next := range r.args[1:] { // HEB 200, EN 10025-2: up to the next word of the language
+			if next.Kind == lang.StringExpr || next.Kind == lang.CommaExpr || next.Kind == lang.NameExpr && lang.Joins(next.Text) {
+				break
+			}
+			span = span.Join(next.Span)
+		}
+		r.problem(lang.Problem{Rule: "wrong-form", Span: span, Message: what + " stands in quotes",
+			Fixes: []lang.Fix{lang.Replace("Put it in quotes", false, span, `"`+span.Of(r.decl.Text)+`"`)}})
 		return "", false
 	}
 	r.fail("wrong-form", r.after(), "%s is due here, in quotes", what)
@@ -113,6 +126,9 @@ func (r *reader) text(what string) (string, bool) {
 // because takes the reason that an override or departure must give.
 func (r *reader) because() (string, bool) {
 	if _, ok := r.word("because"); !ok {
+		if r.slip() {
+			return "", false
+		}
 		end := r.stmt.Line.End
 		r.problem(lang.Problem{Rule: "missing-reason", Span: r.stmt.Line, Message: "this departs from the standard: say why with because \"…\"",
 			Fixes: []lang.Fix{lang.Replace("Add a reason", false, lang.Span{Start: end, End: end}, ` because "…"`)}})
@@ -127,9 +143,24 @@ func (r *reader) because() (string, bool) {
 	return reason, ok
 }
 
+// slip reports the next part when it is a slip of a word that could stand there.
+func (r *reader) slip() bool {
+	e := r.peek()
+	if e == nil || e.Kind != lang.NameExpr || r.failed {
+		return false
+	}
+	near, sure := nearest(e.Text, r.tried[:r.trials], 1)
+	if len(near) == 0 {
+		return false
+	}
+	r.problem(lang.Problem{Rule: "unknown-word", Span: e.Span, Message: "'" + e.Text + "' has no meaning here; did you mean " + near[0] + "?",
+		Fixes: []lang.Fix{lang.Replace("Write "+near[0], sure, e.Span, near[0])}})
+	return true
+}
+
 // end complains about parts that nobody took.
 func (r *reader) end() bool {
-	if e := r.peek(); e != nil && !r.failed {
+	if e := r.peek(); e != nil && !r.failed && !r.slip() {
 		last := r.args[len(r.args)-1]
 		r.problem(lang.Problem{Rule: "left-over", Span: e.Span.Join(last.Span), Message: "'" + clip(e.Span.Of(r.decl.Text)) + "' does not belong here: a '" + r.stmt.Word + "' statement ends before it",
 			Fixes: []lang.Fix{lang.Replace("Remove it", false, e.Span.Join(last.Span), "")}})

@@ -21,8 +21,8 @@ func (b *builder) sections() {
 			continue
 		}
 		n := b.env.Names[name.Text]
-		if n.Stmt != d.stmt {
-			continue
+		if n == nil || n.Stmt != d.stmt {
+			continue // given twice, or a word that the language has taken
 		}
 		s := &Section{Name: name.Text, Place: r.place(name.Span)}
 		n.Index = len(b.env.Sections)
