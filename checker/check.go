@@ -218,7 +218,8 @@ func (r *Report) count() {
 }
 
 // unused warns of sections, materials and values that no calculation uses. A
-// file with definitions alone, that nothing includes, is left in peace.
+// file with definitions alone, that nothing includes, is left in peace, and so
+// is one that was read only because another includes it.
 func (r *Report) unused(add func(lang.Diagnostic)) {
 	used := map[lang.Place]bool{}
 	where := map[lang.Place]*model.Named{}
@@ -230,7 +231,7 @@ func (r *Report) unused(add func(lang.Diagnostic)) {
 			continue
 		}
 		for _, n := range c.Env.Names {
-			if n.Kind == model.SectionName || n.Kind == model.MaterialName {
+			if (n.Kind == model.SectionName || n.Kind == model.MaterialName) && r.Project.Asked[n.Place.Decl.File.Name] && !c.Env.Bad(n) {
 				where[n.Place] = n
 			}
 		}

@@ -214,6 +214,9 @@ func UnknownUnit(e *Expr, dim unit.Dim, any bool) *Problem {
 		p.Notes = append(p.Notes, "for arithmetic with a name put blanks around the sign: "+e.Text[:i]+" "+e.Text[i:i+1]+" "+e.Text[i+1:])
 	}
 	near := unit.Nearest(e.Text, dim, any, 3)
+	if len(near) > 0 && strings.EqualFold(near[0], e.Text) {
+		near = near[:1] // the letters are right, their size is not
+	}
 	if len(near) > 0 {
 		p.Message += "; did you mean " + orList(near) + "?"
 	}

@@ -10,6 +10,7 @@ type spacing struct {
 	text    string
 	word    string // the statement's first word
 	prev    Kind
+	unit    bool  // the token before is a unit, or a word where a unit may stand
 	after   int32 // columns behind the token before
 	operand bool  // a value ended: a sign would be an operator
 	first   bool  // the token before is the statement's first word
@@ -65,6 +66,7 @@ func (w *formatter) following(i, last int) (next Kind, glued bool) {
 func (s *spacing) before(t Token, next Kind, spaced, glued bool) int32 {
 	gap, after := s.after, int32(1)
 	operand, first := false, false
+	unit := t.Kind == Unit || t.Kind == Name && s.prev == Number
 	switch t.Kind {
 	case Comma:
 		gap = 0
@@ -95,7 +97,7 @@ func (s *spacing) before(t Token, next Kind, spaced, glued bool) int32 {
 	case Operator:
 		gap, after = s.operator(t, next, spaced, glued)
 	}
-	s.prev, s.after, s.operand, s.first = t.Kind, after, operand, first
+	s.prev, s.unit, s.after, s.operand, s.first = t.Kind, unit, after, operand, first
 	return gap
 }
 
@@ -111,7 +113,7 @@ func (s *spacing) operator(t Token, next Kind, spaced, glued bool) (gap, after i
 			return 0, 0 // the hyphen in the name of a rule
 		}
 	case op == '^':
-		if s.prev == Unit && next == Number {
+		if s.unit && next == Number {
 			break // "kN^2" without blanks is one unit
 		}
 		if s.word != "show" {

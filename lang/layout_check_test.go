@@ -89,11 +89,8 @@ func brokenLines(f *File) []string {
 			for _, s := range stmts {
 				if s.Broken {
 					start := lineStart(f.Text, int(f.Starts[i]+s.Line.Start))
-					if i == 0 && start == 0 {
-						start = len(f.Text) - len(strings.TrimPrefix(f.Text, byteOrderMark))
-					}
 					end, _ := lineEnd(f.Text, int(f.Starts[i]+s.Line.End))
-					out = append(out, f.Text[start:end])
+					out = append(out, strings.TrimPrefix(f.Text[start:end], byteOrderMark))
 				}
 				if s.Body != nil {
 					walk(s.Body.Stmts)

@@ -11,6 +11,9 @@ import (
 // were asked for and what they include.
 type Project struct {
 	Files map[string]*File
+	// Asked are the files that were asked for by name; the others were read
+	// because a file includes them.
+	Asked map[string]bool
 	// Roots are the files that no other file of the project includes, in
 	// alphabetical order: each is a calculation of its own.
 	Roots []string
@@ -34,8 +37,11 @@ type Read func(name string) (string, error)
 // Load reads the named files and all that they include. Unchanged declarations
 // of an earlier project are used again; prev may be nil.
 func Load(names []string, read Read, prev *Project) *Project {
-	p := &Project{Files: map[string]*File{}, includes: map[string][]inclusion{}, ids: map[string]*FileID{}}
+	p := &Project{Files: map[string]*File{}, includes: map[string][]inclusion{}, ids: map[string]*FileID{}, Asked: map[string]bool{}}
 	queue := slices.Clone(names)
+	for _, name := range names {
+		p.Asked[name] = true
+	}
 	sort.Strings(queue)
 	failed := map[string]string{}
 	for len(queue) > 0 {

@@ -55,7 +55,7 @@ func nearest(text string, names []string, n int) (near []string, sure bool) {
 	})
 	if len(found) > 0 {
 		first := found[0]
-		sure = !first.half && (first.distance <= 1 || first.distance == 2 && len(text) >= 8) &&
+		sure = len(text) > 1 && !first.half && (first.distance <= 1 || first.distance == 2 && len(text) >= 8) &&
 			(len(found) == 1 || found[1].distance > first.distance)
 	}
 	for i := 0; i < len(found) && i < n; i++ {

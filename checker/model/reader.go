@@ -280,6 +280,12 @@ func powerOfTen(x float64) bool {
 	return false
 }
 
+// offered are the units that a bare number most often lacks.
+var offered = map[unit.Dim][]string{
+	unit.Length: {"m", "mm", "ft", "in"}, unit.Force: {"kN", "N", "kip"}, unit.Stress: {"MPa", "kN/m2", "ksi"}, unit.Area: {"m2", "cm2", "mm2"},
+	unit.Length4: {"cm4", "mm4", "in4"}, unit.Volume: {"cm3", "mm3", "in3"}, unit.Density: {"kg/m3"}, unit.ForcePerLength: {"kN/m"}, unit.Moment: {"kNm"}, unit.Length6: {"cm6"},
+}
+
 // mismatch is the problem of a quantity of another dimension than is due.
 func mismatch(e *lang.Expr, q unit.Quantity, w want) lang.Problem {
 	src := func(suffix string) lang.Fix {
@@ -290,14 +296,9 @@ func mismatch(e *lang.Expr, q unit.Quantity, w want) lang.Problem {
 	case q.Dim.IsNone() && !w.dim.IsNone():
 		p := lang.Problem{Rule: "missing-unit", Span: e.Span, Message: fmt.Sprintf("%s needs a unit of %s; this is a bare number", w.what, w.dim.Name())}
 		if e.Kind == lang.NumberExpr {
-			units := []string{w.unit}
-			for _, u := range unit.For(w.dim) {
-				if len(units) < 4 && u.Symbol != w.unit {
-					units = append(units, u.Symbol)
-				}
-			}
-			for _, u := range units {
-				if u == "" {
+			units := append([]string{w.unit}, offered[w.dim]...)
+			for i, u := range units {
+				if u == "" || i > 0 && u == w.unit {
 					continue
 				}
 				f := src(" " + u)

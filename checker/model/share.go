@@ -17,3 +17,14 @@ func (env *Env) Owns(m *Member) bool {
 	}
 	return true
 }
+
+// Bad tells whether the definition of a name has an error of its own.
+func (env *Env) Bad(n *Named) bool {
+	switch {
+	case n.Kind == MaterialName && n.Index >= 0:
+		return env.Materials[n.Index].Bad
+	case n.Kind == SectionName && n.Index >= 0:
+		return env.Sections[n.Index].Bad
+	}
+	return n.Bad
+}

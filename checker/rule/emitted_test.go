@@ -191,7 +191,8 @@ func (s *sources) collect() {
 		ast.Inspect(f.File, func(n ast.Node) bool {
 			switch n := n.(type) {
 			case *ast.FuncDecl:
-				if p := ruleParamOf(n.Type); p.at >= 0 {
+				// Record.Of looks a rule up and names none; a span's Of has the same form
+				if p := ruleParamOf(n.Type); p.at >= 0 && n.Name.Name != "Of" {
 					key := f.folder + " " + n.Name.Name
 					s.functions[key] = append(s.functions[key], p)
 				}

@@ -136,7 +136,7 @@ func TestNearest(t *testing.T) {
 		n, count    int
 	}{
 		{"slendernes", "slenderness", 1, 1},
-		{"Decimal_Comma", "", 3, -1},
+		{"Decimal_Comma", "decimal-comma", 3, -1},
 		{"decimal comma!", "decimal-comma", 1, 1},
 		{"lateral-torsional", "lateral-torsional-buckling", 2, -1},
 		{"buckling", "elastic-buckling-major", 3, 3},

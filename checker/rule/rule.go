@@ -103,8 +103,9 @@ func SeverityOf(name string) lang.Severity {
 }
 
 // Nearest gives up to n rules that a person may have meant by a name, the
-// likeliest first: those that it is part of, then those that differ from it in
-// the fewest letters, at most in half of them.
+// likeliest first: the rule itself when only capitals or hyphens differ, those
+// that it is part of, then those that differ in the fewest letters, at most in
+// half of them.
 func Nearest(name string, n int) []string {
 	const longest = 64 // no rule has a name near as long
 	name = strings.ToLower(strings.NewReplacer("_", "-", " ", "-").Replace(strings.TrimSpace(name)))
@@ -119,8 +120,7 @@ func Nearest(name string, n int) []string {
 	for _, r := range book().all {
 		d := levenshtein.ComputeDistance(name, r.Name)
 		switch {
-		case d == 0:
-		case len(name) >= 3 && strings.Contains(r.Name, name):
+		case d > 0 && len(name) >= 3 && strings.Contains(r.Name, name):
 			d = 1 // "buckling" means one of the rules that have it in their name
 		case 2*d > max(len(name), len(r.Name)):
 			continue

@@ -37,7 +37,7 @@ var (
 
 	axes = [2]axis{newAxis("major"), newAxis("minor")}
 
-	doPy    = set.Formula(symPy, "f_y * A", "stress = force / area")
+	doPy = set.Formula(symPy, "f_y * A", "stress = force / area")
 	// The axial force adds to a moment no more than it adds to the greatest moment
 	// of the stretch, wherever that is: where the axial force is greatest the
 	// moment of first order may be small, and yet the deflection is not.
