@@ -2,6 +2,7 @@ package checker
 
 import (
 	"runtime"
+	"slices"
 	"sort"
 	"sync"
 	"sync/atomic"
@@ -46,20 +47,18 @@ func (registry) Annexes(name string) []string { return find(name).Annexes() }
 
 func (registry) Overrides(name string) map[string]bool { return find(name).Overrides() }
 
-// departable tells whether a member may depart from a rule.
-func departable(name string) bool {
-	if name == "requirement" {
-		return true
-	}
+// departable are the checks that a member may depart from.
+var departable = func() model.DepartureRules {
+	out := model.DepartureRules{"requirement"}
 	for _, s := range standards {
 		for _, r := range s.Rules() {
-			if r == name {
-				return true
+			if !slices.Contains(out, r) {
+				out = append(out, r)
 			}
 		}
 	}
-	return false
-}
+	return out
+}()
 
 // Standards lists the names of the design standards.
 func Standards() []string { return registry{}.Names() }

@@ -123,7 +123,7 @@ func (w *formatter) spoil() {
 		raw := false
 		for {
 			u := &w.units[j]
-			raw = raw || u.raw || j > i && w.firstLine(j) == w.lastLine(j-1) && w.misread(u)
+			raw = raw || u.raw || w.misread(u)
 			if j+1 == len(w.units) || w.firstLine(j+1) > w.lastLine(j) {
 				break
 			}
@@ -135,10 +135,17 @@ func (w *formatter) spoil() {
 	}
 }
 
-// misread tells whether a statement in a block begins with a word that starts a
-// declaration wherever it stands first on a line.
+// misread tells whether a statement in a block begins with a word that would
+// start a declaration if it stood first on its line, which it does not yet.
 func (w *formatter) misread(u *segment) bool {
-	return !u.close && u.depth > 0 && u.first < u.last && StartsDeclaration(w.text[w.tokens[u.first].Start:], true)
+	if u.close || u.depth == 0 || u.first == u.last || !StartsDeclaration(w.text[w.tokens[u.first].Start:], true) {
+		return false
+	}
+	i := u.first - 1
+	for w.tokens[i].Kind == Blank {
+		i--
+	}
+	return i > 0 && w.tokens[i].Kind != Newline
 }
 
 // start is the token that a segment starts with. A block without a statement at

@@ -226,9 +226,9 @@ func (b *builder) unclosed(open *Stmt, inside []*Stmt) {
 
 // stmt reads one statement with its block.
 func (b *builder) stmt(depth int) *Stmt {
+	before := b.syntax.found
 	b.collect()
 	st := &Stmt{}
-	before := b.syntax.found
 	if len(b.line) > 0 {
 		st.Line = Span{b.line[0].Start, b.line[len(b.line)-1].End}
 	} else {

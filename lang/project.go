@@ -139,6 +139,9 @@ func (p *Project) link(names []string, failed map[string]string) {
 				loops[name] = true
 			default:
 				included[inc.name] = true
+				if extra := inc.stmt.Args[1:]; len(extra) > 0 {
+					p.include(inc, "left-over", extra[0].Span.Join(extra[len(extra)-1].Span), "include names one file; this does not belong here")
+				}
 			}
 		}
 	}

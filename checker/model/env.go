@@ -71,7 +71,11 @@ func (b *builder) collect() {
 				item := declared{d, s}
 				if value, ok := s.Assigned(); ok {
 					b.value(item, value)
+					b.noBlock(item)
 					continue
+				}
+				if s.Word == "case" || s.Word == "combination" || s.Word == "include" {
+					b.noBlock(item)
 				}
 				switch s.Word {
 				case "column", "strut", "tie":
@@ -103,6 +107,13 @@ func (b *builder) collect() {
 	}
 }
 
+// noBlock complains about a block behind a declaration that takes none.
+func (b *builder) noBlock(d declared) {
+	if s := d.stmt; s.Body != nil && !s.Broken {
+		b.report(lang.Diagnostic{Decl: d.decl, Problem: lang.Problem{Rule: "left-over", Span: s.Body.Span, Message: "'" + s.Word + "' takes no block"}})
+	}
+}
+
 // memberNames are the names before the title or the block of a member.
 func memberNames(s *lang.Stmt) []*lang.Expr {
 	var out []*lang.Expr
@@ -126,7 +137,9 @@ func (b *builder) unknown(d declared) {
 		return
 	}
 	p := lang.Problem{Rule: "unknown-statement", Span: d.stmt.Head, Message: "'" + d.stmt.Word + "' begins no declaration"}
-	if near, sure := nearest(d.stmt.Word, topWords, 1); len(near) > 0 {
+	if contains(memberWords, d.stmt.Word) {
+		p.Message = "'" + d.stmt.Word + "' stands outside of a member: it is said inside the braces of one"
+	} else if near, sure := nearest(d.stmt.Word, topWords, 1); len(near) > 0 {
 		p.Message += "; did you mean " + near[0] + "?"
 		p.Fixes = append(p.Fixes, lang.Replace("Write "+near[0], sure, d.stmt.Head, near[0]))
 	} else {
@@ -137,6 +150,19 @@ func (b *builder) unknown(d declared) {
 
 func (b *builder) value(d declared, value []*lang.Expr) {
 	s := d.stmt
+	if contains(topWords, s.Word) {
+		if !s.Broken {
+			p := lang.Problem{Rule: "wrong-form", Span: s.Head, Message: "a " + s.Word + " that is declared has a name: " + s.Word + " NAME = …"}
+			if contains(memberWords, s.Word) {
+				p.Notes = append(p.Notes, "what a member is made of is said inside its braces")
+			}
+			b.report(lang.Diagnostic{Decl: d.decl, Problem: p})
+		}
+		if s.Word == "combination" {
+			b.env.refuse("a combination has an error")
+		}
+		return
+	}
 	head := &lang.Expr{Kind: lang.NameExpr, Text: s.Word, Span: s.Head}
 	if !b.name(d, head, ValueName, -1) {
 		return
@@ -148,6 +174,11 @@ func (b *builder) value(d declared, value []*lang.Expr) {
 	r := b.reader(d)
 	if len(value) == 0 {
 		r.fail("missing-value", s.Line, "'%s' has no value: something must stand behind the sign =", s.Word)
+		b.env.Names[s.Word].Bad = true
+		return
+	}
+	if k := value[0].Kind; k == lang.EqualsExpr || k == lang.CommaExpr || k == lang.CompareExpr {
+		r.fail("wrong-form", value[0].Span, "the value of '%s' is due here", s.Word)
 		b.env.Names[s.Word].Bad = true
 		return
 	}
@@ -350,6 +381,9 @@ func (b *builder) basis() {
 		if d.stmt.Body == nil {
 			r.fail("wrong-form", d.stmt.Line, "basis opens a block: basis { standard \"…\" }")
 			continue
+		}
+		if hurt(d.decl, d.stmt) {
+			env.refuse("the basis has an error")
 		}
 		seen := map[string]*lang.Stmt{}
 		for _, s := range d.stmt.Body.Stmts {
@@ -666,7 +700,7 @@ func (b *builder) levels() {
 			l.At, _, _ = r.quantity(want{what: "the height of a level", dim: unit.Length, unit: "m", max: 1000, signed: true, zero: true})
 		}
 		r.end()
-		l.Bad = r.failed
+		l.Bad = r.failed || hurt(d.decl, d.stmt)
 		n.Index = len(env.Levels)
 		env.Levels = append(env.Levels, l)
 		if d.stmt.Body == nil {
@@ -752,6 +786,9 @@ func (b *builder) combinations() {
 		}
 		c := Combination{}
 		c.Name, c.Factors, c.Source = action.Sum(plain, factors), factors, "sum of all cases"
+		if !env.Declared() {
+			c.Name = "all loads"
+		}
 		env.Automatic = []Combination{c}
 		return
 	}
@@ -794,6 +831,18 @@ func (b *builder) combinations() {
 		m.Factors = factors
 		env.Automatic = append(env.Automatic, Combination{Combination: m})
 	}
+}
+
+// hurt tells whether the text of a statement has a problem that belongs to none
+// of its lines, such as a block that is not closed: what it was to say is then
+// not known for certain.
+func hurt(d *lang.Decl, s *lang.Stmt) bool {
+	for _, p := range d.Problems {
+		if p.Severity == lang.Error && s.Span.Start <= p.Span.Start && p.Span.Start < s.Span.End {
+			return true
+		}
+	}
+	return false
 }
 
 // sum reads "1.1 G + 0.5 W - Q": a name after a number is a case, not a unit.

@@ -20,12 +20,12 @@ func (b *builder) materials() {
 		if n == nil || n.Stmt != d.stmt {
 			continue // given twice, or a word that the language has taken
 		}
-		m := &Material{Name: name.Text, Place: r.place(name.Span)}
+		m := &Material{Name: name.Text, Place: r.place(name.Span), Bad: hurt(d.decl, d.stmt)}
 		n.Index = len(b.env.Materials)
 		b.env.Materials = append(b.env.Materials, m)
 		if d.stmt.Body != nil {
 			r.end()
-			m.Bad = r.failed
+			m.Bad = m.Bad || r.failed
 			b.statedMaterial(d, m)
 			continue
 		}

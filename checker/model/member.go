@@ -3,6 +3,7 @@ package model
 import (
 	"fmt"
 	"math"
+	"slices"
 	"sort"
 	"strings"
 
@@ -17,7 +18,7 @@ var memberWords = []string{"section", "material", "height", "length", "from", "b
 
 // DepartureRules are the rules that a member may depart from; the checker fills
 // in the rules of its standards.
-type DepartureRules func(rule string) bool
+type DepartureRules []string
 
 // Members reads the members that a declaration describes. The result depends on
 // the Env, the declaration and the declarations it leans on with "as", and on
@@ -61,14 +62,17 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules) []*
 	}
 	w.read(stmts)
 	w.complete()
+	if len(m.Missing) == 0 && hurt(d, s) {
+		m.Missing = append(m.Missing, "its block has an error")
+	}
 	var out []*Member
 	for i, e := range names {
-		n := env.Names[e.Text]
-		if n == nil || n.Stmt != s {
-			continue // given twice: the first one keeps the name
-		}
 		c := *m
 		c.Name, c.NameSpan = e.Text, e.Span
+		if n := env.Names[e.Text]; n == nil || n.Place != (lang.Place{Decl: d, Span: e.Span}) {
+			// the first one keeps the name; this one is told apart by its place
+			c.Missing = append(slices.Clone(m.Missing), "its name stands for something else")
+		}
 		if i > 0 {
 			c.Problems = nil // said once
 		}
@@ -299,7 +303,7 @@ func contains(list []string, s string) bool {
 func (w *memberReader) section(r *reader, d declared) {
 	w.m.SectionAt = r.place(r.stmt.Line)
 	e := r.peek()
-	if e != nil && e.Kind == lang.NameExpr && (d.stmt.Body == nil || !contains(shapeWords, e.Text)) {
+	if e != nil && e.Kind == lang.NameExpr && (d.stmt.Body == nil || w.env.Names[e.Text] != nil) {
 		if contains(shapeWords, e.Text) && w.env.Names[e.Text] == nil {
 			r.fail("wrong-form", r.stmt.Line, "a %s has a block with its dimensions: %s", e.Text, shapeForms[e.Text])
 			return
@@ -309,6 +313,10 @@ func (w *memberReader) section(r *reader, d declared) {
 		n, ok := w.env.Names[e.Text]
 		if !ok || n.Kind != SectionName || n.Index < 0 {
 			w.wrongName(r, e, n, "section", SectionName)
+			return
+		}
+		if d.stmt.Body != nil {
+			r.fail("left-over", d.stmt.Body.Span, "a section that is given by its name takes no block")
 			return
 		}
 		w.m.Uses = append(w.m.Uses, n)
@@ -599,8 +607,17 @@ func (w *memberReader) depart(r *reader) {
 		// a rule's name has hyphens, which read as minus signs
 		rule = strings.Join(strings.Fields(rule), "")
 	}
-	if e == nil || !w.known(rule) {
-		r.fail("unknown-rule", span, "'%s' is no check that a member can depart from; `kern rules` lists them", clip(rule))
+	if e == nil || !contains(w.known, rule) {
+		p := lang.Problem{Rule: "unknown-rule", Span: span, Message: "'" + clip(rule) + "' is no check that a member can depart from"}
+		near := closest(rule, w.known, 2)
+		if len(near) > 0 {
+			p.Message += "; did you mean " + lang.OrList(near) + "?"
+		}
+		for _, n := range near {
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, span, n))
+		}
+		p.Notes = append(p.Notes, "`kern rules` lists the checks")
+		r.problem(p)
 		return
 	}
 	because, ok := r.because()

@@ -32,7 +32,7 @@ func (b *builder) sections() {
 			s.Bad = true
 			continue
 		}
-		s.Bad = !readSection(r, b.reader, d, s)
+		s.Bad = !readSection(r, b.reader, d, s) || hurt(d.decl, d.stmt)
 	}
 }
 

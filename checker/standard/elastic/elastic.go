@@ -110,7 +110,8 @@ func (Standard) Overrides() map[string]bool {
 
 // Rules implements standard.Standard.
 func (Standard) Rules() []string {
-	return []string{"first-yield", "elastic-buckling-major", "elastic-buckling-minor", "slenderness"}
+	return []string{"first-yield", "elastic-buckling-major", "elastic-buckling-minor", "torsional-buckling", "flexural-torsional-buckling",
+		"section-shear-major", "section-shear-minor", "lateral-torsional-buckling", "slenderness", "sway"}
 }
 
 // Symbols implements standard.Standard.
@@ -129,14 +130,22 @@ func (Standard) Check(f *standard.Frame, record *derivation.Record) *standard.Ou
 	for a := range axes {
 		c.buckling(a)
 	}
+	c.torsion()
 	c.yield()
+	c.shear()
 	c.slenderness()
 	c.out.Assumptions = c.assumptions()
-	why := "elastic theory asks for no such check; a design standard does, where walls are thin or the section is open"
-	for _, rule := range []string{"local-buckling", "torsional-buckling", "lateral-torsional-buckling"} {
-		c.cover(rule, standard.NotApplicable, why)
+	c.cover("local-buckling", standard.NotApplicable, "elastic theory of bars has no such check: where walls are thin, use a design standard")
+	if c.f.Bends[0] {
+		c.cover("lateral-torsional-buckling", standard.NotApplicable, "elastic theory of bars has no such check here: where the section is open and its flange not held, use a design standard")
+	} else {
+		c.cover("lateral-torsional-buckling", standard.NotApplicable, "the loads do not bend the member about its major axis")
 	}
-	c.cover("section-shear", standard.NotApplicable, "stresses of axial force and bending alone are judged against yield")
+	if c.f.Member.Limits.Sway > 0 {
+		const why = "sway is not worked out: compare the frame's sway with the limit by hand"
+		c.out.Checks = append(c.out.Checks, standard.Check{Rule: "sway", Clause: "limit of the member", Combination: -1, Dim: unit.Length, Utilisation: math.NaN(), Demand: math.NaN(), Capacity: math.NaN(), Why: why})
+		c.cover("sway", standard.NotCovered, why)
+	}
 	return &c.out
 }
 
@@ -145,6 +154,7 @@ type calc struct {
 	s      *derivation.Sheet
 	record *derivation.Record
 	out    standard.Outcome
+	pieces []action.Piece // kept for its room
 }
 
 func (c *calc) value(symbol string) (unit.Quantity, bool) {
