@@ -4,6 +4,7 @@ import (
 	"runtime"
 	"slices"
 	"sort"
+	"strings"
 	"sync"
 	"sync/atomic"
 
@@ -130,6 +131,13 @@ func (r *Report) gather() {
 			p.starts[d] = place{name, f.Starts[i]}
 		}
 	}
+	found := len(r.Project.Problems)
+	for _, f := range r.Project.Files {
+		for _, d := range f.Decls {
+			found += len(d.Problems)
+		}
+	}
+	r.Diagnostics = make([]Diagnostic, 0, found)
 	add := func(d lang.Diagnostic) { r.Diagnostics = append(r.Diagnostics, p.resolve(d)) }
 	for _, name := range files {
 		f := r.Project.Files[name]
@@ -256,6 +264,9 @@ func (r *Report) Place(m *Result) (string, lang.Span) {
 	return r.places.span(m.Member.Decl, m.Member.NameSpan)
 }
 
+// maxMessage bounds the length of a message in bytes.
+const maxMessage = 1600
+
 // places knows where declarations stand.
 type places struct{ starts map[*lang.Decl]place }
 
@@ -271,6 +282,10 @@ func (p places) span(decl *lang.Decl, s lang.Span) (string, lang.Span) {
 
 func (p places) resolve(d lang.Diagnostic) Diagnostic {
 	out := Diagnostic{Problem: d.Problem}
+	if len(out.Message) > maxMessage {
+		// a text can hold a word of any length
+		out.Message = strings.ToValidUTF8(out.Message[:maxMessage/2], "") + " … " + strings.ToValidUTF8(out.Message[len(out.Message)-maxMessage/4:], "")
+	}
 	out.File, out.Span = p.span(d.Decl, d.Span)
 	out.Problem.Span = out.Span
 	of := func(at lang.Place) (string, lang.Span) {

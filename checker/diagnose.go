@@ -52,18 +52,29 @@ func (r *Result) diagnose() {
 	if r.Verdict != standard.Undecided {
 		return
 	}
-	var why []string
+	var reasons []string
+	rules := map[string][]string{} // of each reason
+	because := func(rule, reason string) {
+		if rules[reason] == nil {
+			reasons = append(reasons, reason)
+		}
+		rules[reason] = append(rules[reason], rule)
+	}
 	for _, c := range r.Checks {
 		if c.Verdict == standard.Undecided && !c.Departed {
-			why = append(why, c.Rule+": "+c.Why)
+			because(c.Rule, c.Why)
 		}
 	}
 	for _, c := range r.Coverage {
 		if c.State == standard.NotCovered && !r.departs(c.Rule) {
-			why = append(why, c.Rule+": "+c.Why)
+			because(c.Rule, c.Why)
 		}
 	}
-	why = append(unique(why), r.Missing...)
+	var why []string
+	for _, reason := range reasons {
+		why = append(why, strings.Join(unique(rules[reason]), ", ")+": "+reason)
+	}
+	why = append(why, r.Missing...)
 	if len(why) == 0 {
 		why = []string{"nothing could be checked"}
 	}

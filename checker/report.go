@@ -3,8 +3,9 @@
 package checker
 
 import (
+	"cmp"
 	"math"
-	"sort"
+	"slices"
 	"strings"
 
 	"kern/checker/derivation"
@@ -180,7 +181,9 @@ func (r *Result) require(s standard.Standard, out *standard.Outcome) {
 			check.Why = "the calculation does not come to " + q.Symbol
 			check.Capacity = math.NaN()
 		case v.Dim != q.Quantity.Dim:
-			problem("wrong-unit", q.Symbol+" is a "+v.Dim.Name()+"; it is compared with a "+q.Quantity.Dim.Name(), q.Place.Span)
+			p := model.Unlike(q.Symbol, q.Value, q.Quantity, v.Dim)
+			p.Member, check.Why = r.Name, p.Message
+			r.problems = append(r.problems, lang.Diagnostic{Decl: q.Place.Decl, Problem: p})
 		default:
 			holds := map[string]bool{"<": v.Value < q.Quantity.Value, "<=": v.Value <= q.Quantity.Value, ">": v.Value > q.Quantity.Value, ">=": v.Value >= q.Quantity.Value}[q.Compare]
 			check.Verdict = standard.Fails
@@ -277,26 +280,20 @@ func (r *Result) departs(rule string) bool {
 // sortDiagnostics orders diagnostics and drops those said twice, as happens
 // when two calculations include one file.
 func sortDiagnostics(list []Diagnostic) []Diagnostic {
-	sort.SliceStable(list, func(i, j int) bool {
-		a, b := list[i], list[j]
-		switch {
-		case a.File != b.File:
-			return a.File < b.File
-		case a.Span.Start != b.Span.Start:
-			return a.Span.Start < b.Span.Start
-		case a.Severity != b.Severity:
-			return a.Severity < b.Severity
-		case a.Rule != b.Rule:
-			return a.Rule < b.Rule
-		case a.Span.End != b.Span.End:
-			return a.Span.End < b.Span.End
-		}
-		return a.Message < b.Message
+	order := make([]int, len(list)) // a diagnostic is too big to be moved about
+	for i := range order {
+		order[i] = i
+	}
+	slices.SortFunc(order, func(i, j int) int {
+		a, b := &list[i], &list[j]
+		return cmp.Or(strings.Compare(a.File, b.File), cmp.Compare(a.Span.Start, b.Span.Start), cmp.Compare(a.Severity, b.Severity),
+			strings.Compare(a.Rule, b.Rule), cmp.Compare(a.Span.End, b.Span.End), strings.Compare(a.Message, b.Message), cmp.Compare(i, j))
 	})
-	out := list[:0]
-	for i, d := range list {
-		if i > 0 && len(out) > 0 {
-			l := out[len(out)-1]
+	out := make([]Diagnostic, 0, len(list))
+	for _, i := range order {
+		d := list[i]
+		if len(out) > 0 {
+			l := &out[len(out)-1]
 			if l.File == d.File && l.Span == d.Span && l.Rule == d.Rule && l.Message == d.Message && l.Member == d.Member {
 				continue
 			}

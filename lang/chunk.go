@@ -119,7 +119,7 @@ func (c *cutter) read(line string) {
 			if j := strings.IndexByte(line[i+1:], '"'); j >= 0 {
 				i += j + 1
 			} else {
-				i = len(line)
+				i = len(line) - braces(line[i+1:]) - 1
 			}
 			last = '"'
 			continue

@@ -33,14 +33,20 @@ var Constants = map[string]unit.Quantity{
 // Division by zero, roots of negative numbers and results that are not finite
 // are problems, never values.
 func Eval(e *Expr, names Lookup) (unit.Quantity, *Problem) {
-	q, p := eval(e, names)
+	return eval(e, names)
+}
+
+// eval looks at every result on the way: 1 / (1e308 * 10) would be a harmless 0
+// otherwise.
+func eval(e *Expr, names Lookup) (unit.Quantity, *Problem) {
+	q, p := compute(e, names)
 	if p == nil && (math.IsNaN(q.Value) || math.IsInf(q.Value, 0)) {
 		return q, &Problem{Rule: "no-value", Span: e.Span, Message: "this has no finite value"}
 	}
 	return q, p
 }
 
-func eval(e *Expr, names Lookup) (unit.Quantity, *Problem) {
+func compute(e *Expr, names Lookup) (unit.Quantity, *Problem) {
 	switch e.Kind {
 	case NumberExpr:
 		return unit.Quantity{Value: e.Value}, nil
@@ -119,17 +125,17 @@ func clash(e *Expr, x, y unit.Quantity) *Problem {
 		verb = "subtract"
 	}
 	return &Problem{Rule: "unit-mismatch", Span: e.Span,
-		Message: fmt.Sprintf("cannot %s a %s and a %s", verb, x.Dim.Name(), y.Dim.Name()),
+		Message: fmt.Sprintf("cannot %s %s and %s", verb, DimName(x.Dim), DimName(y.Dim)),
 		Related: []Related{
-			{Place: Place{Span: e.Args[0].Span}, Message: "this is a " + x.Dim.Name()},
-			{Place: Place{Span: e.Args[1].Span}, Message: "this is a " + y.Dim.Name()}}}
+			{Place: Place{Span: e.Args[0].Span}, Message: "this is " + DimName(x.Dim)},
+			{Place: Place{Span: e.Args[1].Span}, Message: "this is " + DimName(y.Dim)}}}
 }
 
 // power takes a pure number as exponent; with a unit in the base the exponent
 // must be a fraction that the dimensions can follow (1/2, 1/3, 2, …).
 func power(e *Expr, x, y unit.Quantity) (unit.Quantity, *Problem) {
 	if !y.Dim.IsNone() {
-		return x, &Problem{Rule: "unit-mismatch", Span: e.Args[1].Span, Message: "an exponent is a pure number, this is a " + y.Dim.Name()}
+		return x, &Problem{Rule: "unit-mismatch", Span: e.Args[1].Span, Message: "an exponent is a pure number, this is " + DimName(y.Dim)}
 	}
 	dim := x.Dim
 	if !dim.IsNone() {
@@ -188,8 +194,8 @@ func call(e *Expr, names Lookup) (unit.Quantity, *Problem) {
 		for i, y := range args[1:] {
 			if y.Dim != x.Dim {
 				return x, &Problem{Rule: "unit-mismatch", Span: e.Args[i+1].Span,
-					Message: fmt.Sprintf("%s compares like with like: the first value is a %s, this is a %s", e.Text, x.Dim.Name(), y.Dim.Name()),
-					Related: []Related{{Place: Place{Span: e.Args[0].Span}, Message: "this is a " + x.Dim.Name()}}}
+					Message: fmt.Sprintf("%s compares like with like: the first value is %s, this is %s", e.Text, DimName(x.Dim), DimName(y.Dim)),
+					Related: []Related{{Place: Place{Span: e.Args[0].Span}, Message: "this is " + DimName(x.Dim)}}}
 			}
 			if e.Text == "min" {
 				x.Value = min(x.Value, y.Value)
@@ -200,7 +206,7 @@ func call(e *Expr, names Lookup) (unit.Quantity, *Problem) {
 		return x, nil
 	}
 	if !x.Dim.IsNone() && x.Dim != unit.Angle {
-		return x, &Problem{Rule: "unit-mismatch", Span: e.Args[0].Span, Message: e.Text + " takes an angle, this is a " + x.Dim.Name()}
+		return x, &Problem{Rule: "unit-mismatch", Span: e.Args[0].Span, Message: e.Text + " takes an angle, this is " + DimName(x.Dim)}
 	}
 	f := map[string]func(float64) float64{"sin": math.Sin, "cos": math.Cos, "tan": math.Tan}[e.Text]
 	return unit.Quantity{Value: f(x.Value)}, nil
@@ -214,6 +220,9 @@ func UnknownUnit(e *Expr, dim unit.Dim, any bool) *Problem {
 		p.Notes = append(p.Notes, "for arithmetic with a name put blanks around the sign: "+e.Text[:i]+" "+e.Text[i:i+1]+" "+e.Text[i+1:])
 	}
 	near := unit.Nearest(e.Text, dim, any, 3)
+	if !any {
+		near = fitting(near, dim)
+	}
 	if len(near) > 0 && strings.EqualFold(near[0], e.Text) {
 		near = near[:1] // the letters are right, their size is not
 	}
@@ -226,6 +235,21 @@ func UnknownUnit(e *Expr, dim unit.Dim, any bool) *Problem {
 	return p
 }
 
+// fitting keeps the units of a dimension, when there is any; where a pure number
+// is due, none is meant.
+func fitting(symbols []string, dim unit.Dim) []string {
+	var out []string
+	for _, s := range symbols {
+		if u, err := unit.Parse(s); err == nil && u.Dim == dim && !dim.IsNone() {
+			out = append(out, s)
+		}
+	}
+	if len(out) == 0 && !dim.IsNone() {
+		return symbols
+	}
+	return out
+}
+
 // orList joins names as "a, b or c".
 func orList(names []string) string {
 	switch len(names) {
@@ -235,6 +259,23 @@ func orList(names []string) string {
 		return names[0]
 	}
 	return strings.Join(names[:len(names)-1], ", ") + " or " + names[len(names)-1]
+}
+
+// A puts the article before a noun.
+func A(noun string) string {
+	if first := strings.TrimLeft(noun, "'"); first != "" && strings.IndexByte("aeiouAEIOU", first[0]) >= 0 {
+		return "an " + noun
+	}
+	return "a " + noun
+}
+
+// DimName says what sort of quantity has the dimension, with its article.
+func DimName(d unit.Dim) string {
+	name := d.Name()
+	if name == strings.ReplaceAll(d.Base(), "*", "·") {
+		return "a quantity in " + name
+	}
+	return A(name)
 }
 
 // OrList joins names for a message: "a, b or c".

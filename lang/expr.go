@@ -194,7 +194,7 @@ func (r *exprReader) number() *Expr {
 	t := r.take()
 	value, err := strconv.ParseFloat(plainNumber(t.Value), 64)
 	span := spanOf(t)
-	if err != nil || math.IsInf(value, 0) {
+	if err != nil || math.IsInf(value, 0) || value == 0 && strings.ContainsAny(mantissa(t.Value), "123456789") {
 		return r.line.expr(Expr{Kind: BadExpr, Text: "number", Span: span})
 	}
 	u := r.lex.Peek()
@@ -230,6 +230,14 @@ func (r *exprReader) inchesAhead() bool {
 	u := r.lex.Peek()
 	r.lex.LoadCheckpoint(mark)
 	return kindOf(u.Type) == Unit && u.Value == "in"
+}
+
+// mantissa is a number's text without its exponent.
+func mantissa(s string) string {
+	if i := strings.IndexAny(s, "eE"); i >= 0 {
+		return s[:i]
+	}
+	return s
 }
 
 func plainNumber(s string) string {

@@ -6,11 +6,7 @@ import (
 )
 
 func TestFormatProperties(t *testing.T) {
-	n := uint64(20000)
-	if testing.Short() {
-		n = 2000
-	}
-	for seed := range n {
+	for seed := range uint64(4000) {
 		checkLayout(t, random(seed))
 	}
 }

@@ -127,7 +127,7 @@ func (w *formatter) statement(i int) {
 	w.spread(u, &r)
 	w.next = u.last
 	switch {
-	case u.brace > 0 && !w.commented(u.last, u.brace):
+	case u.brace > 0 && !w.apart(u):
 		p := w.piece(u.brace)
 		p.gap = 1
 		w.pieces = append(w.pieces, p)
@@ -141,7 +141,7 @@ func (w *formatter) statement(i int) {
 	w.add(r)
 	w.onLine = true
 	if u.brace > 0 && !r.opens {
-		// a comment stands before the brace: the brace stays behind it
+		// the brace stays on a line of its own, behind the comments before it
 		for ; w.next < u.brace; w.next++ {
 			switch w.tokens[w.next].Kind {
 			case Newline:
@@ -160,14 +160,20 @@ func (w *formatter) statement(i int) {
 	}
 }
 
-// commented tells whether a comment stands among the tokens.
-func (w *formatter) commented(from, to int) bool {
-	for _, t := range w.tokens[from:to] {
+// apart tells whether the brace of a statement must stay on a line of its own: a
+// comment stands before it, or with the brace behind it the line would begin a
+// declaration wherever it stands ("section mast {" in a block).
+func (w *formatter) apart(u *segment) bool {
+	for _, t := range w.tokens[u.last:u.brace] {
 		if t.Kind == Comment {
 			return true
 		}
 	}
-	return false
+	if w.tokens[u.brace].line == w.tokens[u.last-1].line || u.depth == 0 {
+		return false
+	}
+	line := w.text[w.tokens[u.first].Start:w.tokens[u.last-1].End]
+	return !StartsDeclaration(line, true) && StartsDeclaration(line+" {", true)
 }
 
 // inline adds a statement with its block as one row, when it stood on one line

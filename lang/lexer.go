@@ -1,6 +1,7 @@
 package lang
 
 import (
+	"strings"
 	"unicode"
 	"unicode/utf8"
 )
@@ -142,6 +143,7 @@ func (l *Lexer) skip(while func(byte) bool) {
 }
 
 func (l *Lexer) quoted() (Kind, Flaw) {
+	start := l.pos
 	l.pos++
 	for l.pos < len(l.text) {
 		switch l.text[l.pos] {
@@ -149,11 +151,24 @@ func (l *Lexer) quoted() (Kind, Flaw) {
 			l.pos++
 			return String, Sound
 		case '\n', '\r':
+			l.pos -= braces(l.text[start+1 : l.pos])
 			return String, OpenString
 		}
 		l.pos++
 	}
+	l.pos -= braces(l.text[start+1 : l.pos])
 	return String, OpenString
+}
+
+// braces is the length of the braces, and of the blanks around them, that a text
+// ends with when its quote does not close: they are the block's, so that the text
+// breaks itself alone.
+func braces(text string) int {
+	rest := strings.TrimRight(text, "{} \t")
+	if strings.IndexAny(text[len(rest):], "{}") < 0 {
+		return 0
+	}
+	return len(text) - len(rest)
 }
 
 // number reads digits, one point, one exponent; what sticks to it and cannot

@@ -1,11 +1,13 @@
 package lang
 
 import (
+	"fmt"
 	"runtime"
 	"sort"
 	"strings"
 	"sync"
 	"sync/atomic"
+	"unicode"
 	"unicode/utf8"
 
 	"github.com/alecthomas/participle/v2/lexer"
@@ -204,6 +206,11 @@ func (b *builder) stmts(open *Stmt, depth int) []*Stmt {
 				b.next()
 				return out
 			}
+			if b.syntax.found >= maxReport {
+				b.syntax.found++ // not reported any more, and not written either
+				b.next()
+				continue
+			}
 			b.syntax.problem(Problem{Rule: "stray-brace", Span: b.tok.Span(), Message: "this } closes nothing",
 				Fixes: []Fix{Replace("Remove the brace", true, b.tok.Span(), "")}})
 			b.next()
@@ -220,8 +227,11 @@ func (b *builder) unclosed(open *Stmt, inside []*Stmt) {
 		end = max(end, inside[n-1].Span.End) // a text that is not closed ends with blanks
 	}
 	open.Body.Span.End, open.Span.End = end, end
+	if open.Word == "" {
+		return // the block itself is reported
+	}
 	b.syntax.problem(Problem{Rule: "unclosed-block", Span: at, Message: "the block of '" + open.Word + "' is not closed: a } is missing",
-		Fixes: []Fix{Replace("Add the closing brace", true, Span{end, end}, "\n}")}})
+		Fixes: []Fix{Replace("Add the closing brace", false, Span{end, end}, "\n}")}})
 }
 
 // stmt reads one statement with its block.
@@ -400,7 +410,7 @@ func (s *Syntax) complain(e *Expr) bool {
 			p.Rule, p.Message = "nested-too-deep", "brackets are nested too deeply"
 			p.Span.End = min(p.Span.End, p.Span.Start+1)
 		case "number":
-			p.Rule, p.Message = "bad-number", "this number is too large to be one"
+			p.Rule, p.Message = "bad-number", "this number is too large or too small to compute with"
 		case "end":
 			p.Rule, p.Message = "missing-value", "a value is missing here"
 			p.Span = s.lastVisible(e.Span)
@@ -437,10 +447,10 @@ func (s *Syntax) lastVisible(at Span) Span {
 
 // flaws reports what the lexer marked. It tells whether there was anything.
 func (s *Syntax) flaws(tokens []Token) bool {
-	found := false
+	found, stray := false, false
 	for _, t := range tokens {
-		if t.Flaw == Sound {
-			continue
+		if t.Flaw == Sound || t.Flaw == BadCharacters && stray {
+			continue // one stray character of a statement is enough to look at
 		}
 		found = true
 		text := t.Span().Of(s.Text)
@@ -475,11 +485,28 @@ func (s *Syntax) flaws(tokens []Token) bool {
 		case BadEncoding:
 			p.Rule, p.Message = "stray-character", "these bytes are not UTF-8 text"
 		default:
-			p.Rule, p.Message = "stray-character", "'"+text+"' has no meaning in the language"
+			stray = true
+			p.Rule, p.Message = "stray-character", printable(text)+" has no meaning in the language"
+			switch text {
+			case "'":
+				p.Message = "single quotes have no meaning in the language: text stands between \"…\""
+			case ":":
+				p.Notes = append(p.Notes, "a value is given with =")
+			}
 		}
 		s.problem(p)
 	}
 	return found
+}
+
+// printable shows a character in a message: by its number when it would not be
+// seen, or would do something to the terminal.
+func printable(s string) string {
+	r, n := utf8.DecodeRuneInString(s)
+	if n == len(s) && !unicode.IsGraphic(r) {
+		return fmt.Sprintf("the character U+%04X", r)
+	}
+	return "'" + s + "'"
 }
 
 // mendNumber writes ".5" and "5." as a reader would; "" when there is more

@@ -130,6 +130,8 @@ func (p *Project) link(names []string, failed map[string]string) {
 			switch {
 			case inc.arg == nil:
 				p.include(inc, "wrong-form", inc.stmt.Line, "include names a file: include \"common.kern\"")
+			case inc.arg.Text == "":
+				p.include(inc, "include-outside", inc.arg.Span, "include names no file: include \"common.kern\"")
 			case inc.name == "":
 				p.include(inc, "include-outside", inc.arg.Span, "'"+inc.arg.Text+"' lies outside the workspace; a calculation reads nothing from there")
 			case failed[inc.name] != "":

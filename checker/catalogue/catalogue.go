@@ -20,7 +20,7 @@ type Product uint8
 
 // The kinds of product.
 const (
-	OpenSection Product = iota // hot rolled I, H or channel section
+	OpenSection Product = iota // hot rolled I or H section, channel, angle, or tee cut from one
 	HotHollow                  // hot finished hollow section, EN 10210
 	ColdHollow                 // cold formed hollow section, EN 10219
 )
@@ -40,20 +40,31 @@ func (p Product) String() string {
 
 // Entry is one section of the catalogue.
 type Entry struct {
-	// Designation is the canonical name: "HEB 200", "SHS 100x100x5" for a hot
-	// finished and "SHS 100x100x5 cold" for a cold formed hollow section.
+	// Designation is the canonical name: "HEB 200", "UC 203x203x46", "L 150x75x10",
+	// "1/2 IPE 300" for a tee of half the depth cut from another section, "SHS
+	// 100x100x5" for a hot finished and "SHS 100x100x5 cold" for a cold formed
+	// hollow section.
 	Designation string
-	// Family is IPE, HEA, HEB, HEM, UPN, UPE, SHS, RHS or CHS.
+	// Family is IPE, HEAA, HEA, HEB, HEM, HL, HD, HP, UB, UC, UBP, UPN, UPE, PFC, L
+	// (angles), T (tees cut from IPE, HEA, HEB, HEM, UB and UC), SHS, RHS, CHS or
+	// EHS (elliptical).
 	Family string
-	// Standard is the standard of dimensions, "EN 10365" for instance.
+	// Standard is the standard of dimensions, "EN 10365" for instance; for a tee
+	// that of the section it is cut from.
 	Standard string
 	// Product is the kind of product.
 	Product Product
 	// Shape holds the nominal dimensions in metres.
 	Shape section.Shape
-	// Listed tells whether the standard's list of common sizes names this size;
-	// false only for hollow sections. The lists are largely from memory.
+	// Listed tells whether the standard's list of sizes names this size; false for
+	// hollow sections of other sizes and for a few angles. The lists are largely
+	// from memory.
 	Listed bool
+	// Torsion names the formula of the torsion constant that section.Compute finds
+	// for the shape: the UK tables (UB, UC, UBP) follow El Darwish and Johnston, the
+	// European ones (IPE, HE, HL, HD, HP) the producers' formula. Channels, tees and
+	// angles are computed by El Darwish and Johnston's factors for their shapes.
+	Torsion string
 	// Assumed names in words what Find took for granted because the designation
 	// left it open ("hot finished"); empty if nothing was.
 	Assumed string
@@ -62,21 +73,23 @@ type Entry struct {
 // index is the catalogue made ready for searching.
 type index struct {
 	entries []Entry
+	sizes   []size               // of the entries, for Nearest
 	names   map[string]int32     // compact names, see compact
+	turned  map[string]int32     // those of unequal angles with the shorter leg first
 	hollow  map[hollowSize]int32 // sizes that the standards list
 }
 
 // catalogue builds the index at its first use.
 var catalogue = sync.OnceValue(func() *index {
 	x := &index{
-		names:  make(map[string]int32, 4096),
+		names:  make(map[string]int32, 8192),
+		turned: make(map[string]int32, 256),
 		hollow: make(map[hollowSize]int32, 1024),
 	}
-	for _, s := range openSeries() {
-		for _, r := range s.rows {
-			x.add(s.entry(r))
-		}
+	for _, e := range rolledEntries() {
+		x.add(e)
 	}
+	x.addTeeSizes()
 	for _, l := range hollowLists() {
 		for _, size := range l.sizes() {
 			x.hollow[size] = int32(len(x.entries))
@@ -93,11 +106,15 @@ func (x *index) add(e Entry) {
 	var buf [maxName]byte
 	name, _ := compact(buf[:0], e.Designation)
 	x.names[string(name)] = n
+	x.sizes = append(x.sizes, sizeOf(&e))
 	for _, alias := range aliases(e, string(name)) {
 		x.names[alias] = n
 	}
+	for _, alias := range turnedAliases(e) {
+		x.turned[alias] = n
+	}
 }
 
-// All returns every listed section, by family and then size, hot finished
+// All returns every section of the tables, by family and then size, hot finished
 // hollow sections before cold formed ones. The slice is the caller's own.
 func All() []Entry { return slices.Clone(catalogue().entries) }

@@ -4,8 +4,10 @@ import "strings"
 
 // Find returns the section that a designation names, in any usual way of
 // writing it: "HEB 200", "HE 200 B", "SHS 100x100x5", "SHS 100x5",
-// "CHS 114,3 × 5", "100/100/5 SHS", "CFRHS 200x100x8", "SHS 100x100x5 EN 10219".
-// Capitals and blanks do not matter.
+// "CHS 114,3 × 5", "100/100/5 SHS", "CFRHS 200x100x8", "SHS 100x100x5 EN 10219",
+// "UB 457x191x67", "203 x 203 UC 46", "L 100x10", "half IPE 300", "½ HE 300 A",
+// "T 305x457x127". Capitals and blanks do not matter. An unequal angle written
+// shorter leg first is taken with the longer leg upright.
 //
 // A hollow section of a size that its standard does not list is found as long
 // as it can be made, with Listed false. Without a word on how it is made it is
@@ -26,6 +28,9 @@ func Find(designation string) (Entry, bool) {
 		}
 		return e, true
 	}
+	if n, found := x.turned[string(name)]; found {
+		return x.legsTurned(n), true
+	}
 	q := split(string(name))
 	if q.bad {
 		return Entry{}, false
@@ -33,12 +38,22 @@ func Find(designation string) (Entry, bool) {
 	if q.family == "" {
 		// What is left may be an open section followed by its standard.
 		n, found := x.names[q.rest]
-		if !found || x.entries[n].Product != OpenSection || q.cold || q.hollow || q.hot && !q.rolled {
+		turned := false
+		if !found {
+			n, turned = x.turned[q.rest]
+		}
+		if !found && !turned || x.entries[n].Product != OpenSection || q.cold || q.hollow || q.hot && !q.rolled {
 			return Entry{}, false
+		}
+		if angle := x.entries[n].Family == "L"; q.open && angle || q.angle && !angle {
+			return Entry{}, false
+		}
+		if turned {
+			return x.legsTurned(n), true
 		}
 		return x.entries[n], true
 	}
-	if q.rolled || q.open {
+	if q.rolled || q.open || q.angle {
 		return Entry{}, false
 	}
 	size, turned, ok := q.size()
@@ -62,67 +77,83 @@ func Find(designation string) (Entry, bool) {
 	return e, true
 }
 
+// legsTurned returns the entry of an unequal angle whose shorter leg was written
+// first.
+func (x *index) legsTurned(n int32) Entry {
+	e := x.entries[n]
+	e.Assumed = assumedLeg
+	return e
+}
+
 // What Entry.Assumed says.
 const (
 	assumedHot     = "hot finished"
 	assumedUpright = "longer side upright"
+	assumedLeg     = "longer leg upright"
 )
 
 // query is a compact name taken apart.
 type query struct {
 	rest   string // what is left once the known words are gone
-	family string // CHS, SHS or RHS; empty if no hollow family is named
+	family string // CHS, SHS, RHS or EHS; empty if no hollow family is named
 	hot    bool   // named hot finished, or hot rolled
 	rolled bool   // named hot rolled
 	cold   bool   // named cold formed
-	open   bool   // the standard named is that of open sections
+	open   bool   // the standard named is one of I and H sections and channels
+	angle  bool   // the standard named is that of angles
 	hollow bool   // the standard named is one of hollow sections
 	bad    bool   // words that contradict each other
 }
 
-// word is something that may stand before or after the dimensions.
+// word is something that may stand before or after the dimensions, and what it
+// says of the section.
 type word struct {
-	text  string
-	apply func(*query)
+	text string
+	says query // without rest and bad
 }
 
 // words lists them, longer before shorter where one begins or ends another.
 var words = []word{
-	{"HOTFINISHED", func(q *query) { q.hot = true }},
-	{"HOTFORMED", func(q *query) { q.hot = true }},
-	{"HOTROLLED", func(q *query) { q.hot, q.rolled = true, true }},
-	{"HOT", func(q *query) { q.hot = true }},
-	{"COLDFORMED", func(q *query) { q.cold = true }},
-	{"COLD", func(q *query) { q.cold = true }},
-	{"HFCHS", func(q *query) { q.hot = true; q.name("CHS") }},
-	{"HFSHS", func(q *query) { q.hot = true; q.name("SHS") }},
-	{"HFRHS", func(q *query) { q.hot = true; q.name("RHS") }},
-	{"CFCHS", func(q *query) { q.cold = true; q.name("CHS") }},
-	{"CFSHS", func(q *query) { q.cold = true; q.name("SHS") }},
-	{"CFRHS", func(q *query) { q.cold = true; q.name("RHS") }},
-	{"CHS", func(q *query) { q.name("CHS") }},
-	{"SHS", func(q *query) { q.name("SHS") }},
-	{"RHS", func(q *query) { q.name("RHS") }},
-	{"HF", func(q *query) { q.hot = true }},
-	{"CF", func(q *query) { q.cold = true }},
-	{"EN10210-2", hotStandard}, {"EN10210-1", hotStandard}, {"EN10210", hotStandard},
-	{"EN10219-2", coldStandard}, {"EN10219-1", coldStandard}, {"EN10219", coldStandard},
-	{"EN10365", openStandard}, {"DIN1026-1", openStandard}, {"DIN1026-2", openStandard},
-	{"BS", func(*query) {}}, {"DIN", func(*query) {}}, {"NF", func(*query) {}},
-	{"MM", func(*query) {}},
+	{"HOTFINISHED", query{hot: true}},
+	{"HOTFORMED", query{hot: true}},
+	{"HOTROLLED", query{hot: true, rolled: true}},
+	{"HOT", query{hot: true}},
+	{"COLDFORMED", query{cold: true}},
+	{"COLD", query{cold: true}},
+	{"HFCHS", query{hot: true, family: "CHS"}},
+	{"HFSHS", query{hot: true, family: "SHS"}},
+	{"HFRHS", query{hot: true, family: "RHS"}},
+	{"HFEHS", query{hot: true, family: "EHS"}},
+	{"CFCHS", query{cold: true, family: "CHS"}},
+	{"CFSHS", query{cold: true, family: "SHS"}},
+	{"CFRHS", query{cold: true, family: "RHS"}},
+	{"CHS", query{family: "CHS"}},
+	{"SHS", query{family: "SHS"}},
+	{"RHS", query{family: "RHS"}},
+	{"EHS", query{family: "EHS"}},
+	{"HF", query{hot: true}},
+	{"CF", query{cold: true}},
+	// The product standards say how a section is made.
+	{"EN10210-2", query{hot: true, hollow: true}}, {"EN10210-1", query{hot: true, hollow: true}}, {"EN10210", query{hot: true, hollow: true}},
+	{"EN10219-2", query{cold: true, hollow: true}}, {"EN10219-1", query{cold: true, hollow: true}}, {"EN10219", query{cold: true, hollow: true}},
+	{"EN10365", query{open: true}}, {"DIN1026-1", query{open: true}}, {"DIN1026-2", query{open: true}},
+	{"BS4-1", query{open: true}}, {"BS4", query{open: true}},
+	{"EN10056-1", query{angle: true}}, {"EN10056", query{angle: true}},
+	{"BS", query{}}, {"DIN", query{}}, {"NF", query{}}, {"MM", query{}},
 }
 
-// The product standards say how a section is made.
-func hotStandard(q *query)  { q.hot, q.hollow = true, true }
-func coldStandard(q *query) { q.cold, q.hollow = true, true }
-func openStandard(q *query) { q.open = true }
-
-// name sets the family; two families contradict each other.
-func (q *query) name(family string) {
-	if q.family != "" {
-		q.bad = true
+// add takes in what a word says; two families contradict each other.
+func (q *query) add(says *query) {
+	q.hot = q.hot || says.hot
+	q.rolled = q.rolled || says.rolled
+	q.cold = q.cold || says.cold
+	q.open = q.open || says.open
+	q.angle = q.angle || says.angle
+	q.hollow = q.hollow || says.hollow
+	if says.family != "" {
+		q.bad = q.bad || q.family != ""
+		q.family = says.family
 	}
-	q.family = family
 }
 
 // split takes the known words off both ends of a compact name.
@@ -130,20 +161,24 @@ func split(name string) query {
 	q := query{rest: name}
 	for again := true; again && q.rest != ""; {
 		again = false
-		if digit(q.rest[0]) && digit(q.rest[len(q.rest)-1]) && !strings.Contains(q.rest, "EN") {
+		if digit(q.rest[0]) && digit(q.rest[len(q.rest)-1]) && !strings.Contains(q.rest, "EN") && !strings.Contains(q.rest, "BS") {
 			break // nothing but dimensions
 		}
 		for i := range words {
 			w := &words[i]
 			switch {
-			case strings.HasSuffix(q.rest, w.text):
+			case q.rest[len(q.rest)-1] == w.text[len(w.text)-1] && strings.HasSuffix(q.rest, w.text):
 				q.rest = q.rest[:len(q.rest)-len(w.text)]
-			case strings.HasPrefix(q.rest, w.text):
+			case q.rest[0] == w.text[0] && strings.HasPrefix(q.rest, w.text):
 				q.rest = q.rest[len(w.text):]
+				if digit(w.text[len(w.text)-1]) {
+					// compact parts a standard's number from a dimension.
+					q.rest = strings.TrimPrefix(q.rest, "X")
+				}
 			default:
 				continue
 			}
-			w.apply(&q)
+			q.add(&w.says)
 			again = true
 			break
 		}
@@ -176,6 +211,7 @@ func (q query) size() (s hollowSize, turned, ok bool) {
 	case q.family == "SHS" && n == 2:
 		s.a, s.b, s.t = d[0], d[0], d[1]
 	case q.family != "CHS" && n == 3:
+		s.oval = q.family == "EHS"
 		s.a, s.b, s.t = d[0], d[1], d[2]
 		if s.a < s.b {
 			s.a, s.b, turned = s.b, s.a, true

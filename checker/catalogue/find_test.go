@@ -188,7 +188,8 @@ func TestFindIsNotConfusedByAllSeries(t *testing.T) {
 // against a line that is lost.
 func TestNumberOfLines(t *testing.T) {
 	want := map[string]int{
-		"IPE": 18, "HEA": 24, "HEB": 24, "HEM": 24, "UPN": 18, "UPE": 14,
+		"HEAA": 24, "HL": 28, "HD": 40, "HP": 32, "UB": 111, "UC": 46, "UBP": 17, "PFC": 16, "L": 97, "T": 247,
+		"EHS EN 10210-2": 22, "IPE": 18, "HEA": 24, "HEB": 24, "HEM": 24, "UPN": 18, "UPE": 14,
 		"SHS EN 10210-2": 96, "RHS EN 10210-2": 105, "CHS EN 10210-2": 197,
 		"SHS EN 10219-2": 142, "RHS EN 10219-2": 172, "CHS EN 10219-2": 211,
 	}
@@ -216,6 +217,10 @@ func TestAllIsSortedAndOwn(t *testing.T) {
 		p, e := &a[i-1], &a[i]
 		if p.Family != e.Family || p.Product != e.Product {
 			continue
+		}
+		switch p.Family {
+		case "HL", "HD", "HP", "UB", "UC", "UBP", "PFC", "L", "T":
+			continue // see TestSerialSizesAreSorted
 		}
 		less := p.Shape.Depth < e.Shape.Depth || p.Shape.Diameter < e.Shape.Diameter
 		same := p.Shape.Depth == e.Shape.Depth && p.Shape.Diameter == e.Shape.Diameter

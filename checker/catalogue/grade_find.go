@@ -51,7 +51,7 @@ var gradeIndex = sync.OnceValue(func() *gradesIndex {
 // FindGrade returns the grade of a name ("S355", "s355 j2", "S355J2+N",
 // "S275NH") in a product standard ("EN 10025-2", "EN 10210", "BS EN
 // 10219-1:2006"). With an empty standard EN 10025-2 goes before EN 10210-1, that
-// before EN 10219-1, EN 10025-3 and EN 10025-4. In a standard of hollow sections
+// before EN 10219-1, EN 10025-3, EN 10025-4 and EN 10025-6. In a standard of hollow sections
 // the closing H may be missing. It reports false for a name that the standard
 // does not have and for a standard that the catalogue does not have.
 func FindGrade(name, standard string) (Grade, bool) {

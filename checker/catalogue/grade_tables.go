@@ -29,6 +29,8 @@ var (
 	tensile4  = []float64{40, 63, 80, 100, 120}
 	tensile10 = []float64{3, 100, 120} // EN 10210-1, non-alloy
 	tensile19 = []float64{3, 40}       // EN 10219-1, non-alloy
+	bands150  = []float64{50, 100, 150}
+	tensile6  = []float64{3, 50, 100, 150} // EN 10025-6
 	one65     = []float64{65}
 	one40     = []float64{40}
 )
@@ -41,6 +43,11 @@ var (
 //   - EN 10210-1 Table A.3, non-alloy grades: read in a public copy.
 //   - EN 10210-1 Table B.3, EN 10219-1 Tables A.3, B.4 and B.5, EN 10025-3 Table
 //     4 and EN 10025-4 Table 5: from memory (S420NH up to 16 mm: read).
+//   - EN 10025-6 Table 5 (edition of 2004 with its amendment of 2009), quenched and
+//     tempered flat products of 3 to 150 mm: from memory. The edition of 2019 goes
+//     up to 200 mm, with bands that were not at hand; S890 and S960 are left out.
+//     EN 1993-1-1 Table 3.1 has S460Q, QL and QL1 alone; S500 to S690 are steels of
+//     EN 1993-1-12.
 //
 // Table 3.1 of EN 1993-1-1 is from memory throughout.
 func steels() []steelSeries {
@@ -139,5 +146,26 @@ func steels() []steelSeries {
 		{"EN 10025-4", "S460", []string{"M", "ML"}, true, strengthTable{
 			by(bands120, 460, 440, 430, 410, 400, 385), by(tensile4, 540, 530, 510, 500, 490), false,
 			[2][2]float64{{460, 540}, {430, 530}}}},
+
+		// The tensile strength is nil below 3 mm, where the standard does not hold.
+		{"EN 10025-6", "S460", quenched[1:], true, strengthTable{
+			by(bands150, 460, 440, 400), by(tensile6, 0, 550, 550, 500), true,
+			[2][2]float64{{460, 570}, {440, 550}}}},
+		{"EN 10025-6", "S500", quenched, true, strengthTable{
+			by(bands150, 500, 480, 440), by(tensile6, 0, 590, 590, 540), true,
+			[2][2]float64{}}},
+		{"EN 10025-6", "S550", quenched, true, strengthTable{
+			by(bands150, 550, 530, 490), by(tensile6, 0, 640, 640, 590), true,
+			[2][2]float64{}}},
+		{"EN 10025-6", "S620", quenched, true, strengthTable{
+			by(bands150, 620, 580, 560), by(tensile6, 0, 700, 700, 650), true,
+			[2][2]float64{}}},
+		{"EN 10025-6", "S690", quenched, true, strengthTable{
+			by(bands150, 690, 650, 630), by(tensile6, 0, 770, 760, 710), true,
+			[2][2]float64{}}},
 	}
 }
+
+// quenched are the qualities of EN 10025-6: "" for all of a grade, which S460
+// leaves to EN 10025-2, then impact energy at -20, -40 and -60 degrees.
+var quenched = []string{"", "Q", "QL", "QL1"}

@@ -11,7 +11,7 @@ import (
 // above the ends of the bands.
 //
 // Sources: EN 10025-2 Table 7 and EN 10210-1 Table A.3 (read); EN 10219-1, EN
-// 10210-1 Table B.3, EN 10025-3 and -4 from memory.
+// 10210-1 Table B.3, EN 10025-3, -4 and -6 from memory.
 func TestStrengthOfTheProductStandards(t *testing.T) {
 	for _, c := range []struct {
 		name, standard string
@@ -50,6 +50,15 @@ func TestStrengthOfTheProductStandards(t *testing.T) {
 		{"S460MLH", "EN 10219-1", 10, 460, 530, "t <= 16 mm"},
 		{"S460N", "EN 10025-3", 200, 370, 530, "150 < t <= 200 mm"},
 		{"S460M", "EN 10025-4", 41, 430, 530, "40 < t <= 63 mm"},
+		{"S460QL", "EN 10025-6", 3, 460, 550, "t <= 50 mm"},
+		{"S460QL1", "EN 10025-6", 150, 400, 500, "100 < t <= 150 mm"},
+		{"S500Q", "EN 10025-6", 60, 480, 590, "50 < t <= 100 mm"},
+		{"S550QL", "EN 10025-6", 110, 490, 590, "100 < t <= 150 mm"},
+		{"S620Q", "EN 10025-6", 51, 580, 700, "50 < t <= 100 mm"},
+		{"S690", "", 50, 690, 770, "t <= 50 mm"},
+		{"S690QL", "", 50.01, 650, 760, "50 < t <= 100 mm"},
+		{"S690QL1", "", 100, 650, 760, "50 < t <= 100 mm"},
+		{"S690Q", "EN 10025", 100.1, 630, 710, "100 < t <= 150 mm"},
 	} {
 		g, ok := FindGrade(c.name, c.standard)
 		if !ok {
@@ -71,6 +80,7 @@ func TestStrengthOutOfRange(t *testing.T) {
 		{"S355", "EN 10025-2", 0}, {"S355", "EN 10025-2", -1}, {"S355", "EN 10025-2", math.NaN()}, {"S355", "EN 10025-2", math.Inf(1)},
 		{"S355", "EN 10025-2", 1e-9}, {"S355", "EN 10025-2", 250.1}, {"S450", "EN 10025-2", 151}, {"S450", "EN 10025-2", 2.9},
 		{"S355H", "EN 10210-1", 120.1}, {"S355NH", "EN 10210-1", 65.1}, {"S355H", "EN 10219-1", 40.1}, {"S460N", "EN 10025-3", 201},
+		{"S690QL", "EN 10025-6", 2.9}, {"S690QL", "EN 10025-6", 150.1}, {"S460Q", "EN 10025-6", 151},
 	} {
 		g, ok := FindGrade(c.name, c.standard)
 		if !ok {
@@ -106,6 +116,8 @@ func TestTable31(t *testing.T) {
 		{"S460MLH", "EN 10219-1", [2]float64{460, 530}, [2]float64{}},
 		{"S460M", "EN 10025-4", [2]float64{460, 540}, [2]float64{430, 530}},
 		{"S460", "EN 10025-2", [2]float64{}, [2]float64{}},
+		{"S460QL", "EN 10025-6", [2]float64{460, 570}, [2]float64{440, 550}},
+		{"S690QL", "EN 10025-6", [2]float64{}, [2]float64{}},
 	} {
 		g, ok := FindGrade(c.name, c.standard)
 		if !ok {
@@ -183,6 +195,10 @@ func TestFindGrade(t *testing.T) {
 		{"S355N", "EN 10025", "S355N", "EN 10025-3"},
 		{"S460M", "", "S460M", "EN 10025-4"},
 		{"S450", "", "S450", "EN 10025-2"},
+		{"S460", "", "S460", "EN 10025-2"},
+		{"S460Q", "", "S460Q", "EN 10025-6"},
+		{"s690 ql", "", "S690QL", "EN 10025-6"},
+		{"S690QL1", "BS EN 10025-6:2004", "S690QL1", "EN 10025-6"},
 	} {
 		g, ok := FindGrade(c.name, c.standard)
 		if !ok || g.Name != c.want || g.Standard != c.wantStandard {

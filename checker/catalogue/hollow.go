@@ -12,6 +12,7 @@ import (
 // exact and usable as a key. A circular section has b = 0.
 type hollowSize struct {
 	cold    bool
+	oval    bool  // elliptical, a and b being its axes
 	a, b, t int32 // longer side or diameter, shorter side, wall thickness
 }
 
@@ -35,6 +36,11 @@ func (s hollowSize) sane() bool {
 	if s.b == 0 {
 		return s.a >= smallestSide && 2*s.t < s.a
 	}
+	if s.oval {
+		// The wall is thinner than the outside's smallest radius of curvature.
+		// EN 10219-2 had no elliptical sections before its edition of 2019.
+		return !s.cold && s.b >= smallestSide && s.b < s.a && 2*int64(s.t)*int64(s.a) < int64(s.b)*int64(s.b)
+	}
 	const slack = 1e-9 // m, of the conversion from micrometres
 	outer, inner := section.DefaultRadii(s.made(), inMetres(s.t))
 	return s.b >= smallestSide && s.b <= s.a && 2*s.t < s.b &&
@@ -49,9 +55,11 @@ func (s hollowSize) made() section.Made {
 	return section.Hot
 }
 
-// family returns CHS, SHS or RHS.
+// family returns EHS, CHS, SHS or RHS.
 func (s hollowSize) family() string {
 	switch {
+	case s.oval:
+		return "EHS"
 	case s.b == 0:
 		return "CHS"
 	case s.a == s.b:
@@ -101,11 +109,17 @@ func (s hollowSize) entry(listed bool) Entry {
 		Standard:    "EN 10210-2",
 		Product:     HotHollow,
 		Listed:      listed,
+		Torsion:     torsionHollow,
 	}
 	if s.cold {
 		e.Standard, e.Product = "EN 10219-2", ColdHollow
 	}
+	if s.oval {
+		e.Shape = section.Shape{Kind: section.Ellipse, Made: s.made(), Depth: inMetres(s.a), Width: inMetres(s.b), Wall: inMetres(s.t)}
+		return e
+	}
 	if s.b == 0 {
+		e.Torsion = torsionExact
 		e.Shape = section.Shape{Kind: section.Pipe, Made: s.made(), Diameter: inMetres(s.a), Wall: inMetres(s.t)}
 		return e
 	}
@@ -130,7 +144,7 @@ type hollowList struct {
 // hollowLists returns the lists in the order in which All gives them.
 func hollowLists() []hollowList {
 	return []hollowList{
-		{false, hotSquare}, {false, hotRectangular}, {false, hotCircular},
+		{false, hotSquare}, {false, hotRectangular}, {false, hotCircular}, {false, hotElliptical},
 		{true, coldSquare}, {true, coldRectangular}, {true, coldCircular},
 	}
 }
@@ -146,7 +160,7 @@ func (l hollowList) sizes() []hollowSize {
 			continue
 		}
 		var s hollowSize
-		s.cold = l.cold
+		s.cold, s.oval = l.cold, l.lines == hotElliptical
 		long, short, rectangular := strings.Cut(head, "x")
 		ok := true
 		if s.a, ok = parseMicro(long); !ok {

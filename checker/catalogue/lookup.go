@@ -1,6 +1,7 @@
 package catalogue
 
 import (
+	"slices"
 	"strings"
 	"unicode/utf8"
 )
@@ -23,7 +24,14 @@ func Search(text string) []Entry {
 	var buf, own [maxName]byte
 	var out []Entry
 	if name, ok := compact(buf[:0], text); ok {
+		_, family := familyWords[string(name)]
 		for i := range x.entries {
+			if family { // and "UB" is no beginning of UBP
+				if x.entries[i].Family == string(name) {
+					out = append(out, x.entries[i])
+				}
+				continue
+			}
 			d, _ := compact(own[:0], x.entries[i].Designation)
 			if strings.HasPrefix(string(d), string(name)) {
 				out = append(out, x.entries[i])
@@ -37,7 +45,13 @@ func Search(text string) []Entry {
 	if len(wanted) > maxWords {
 		return nil
 	}
+	tees := slices.ContainsFunc(wanted, func(w string) bool {
+		return w == "1/2" || w == "½" || w == "T" || len(w) > 1 && fits([]string{"TEE", "HALF", "CUT"}, []string{w})
+	})
 	for i := range x.entries {
+		if x.entries[i].Family == "T" && !tees {
+			continue // a tee has the words of the section that it is cut from
+		}
 		if fits(descriptors(&x.entries[i]), wanted) {
 			out = append(out, x.entries[i])
 		}
@@ -70,21 +84,39 @@ func fits(descriptors, wanted []string) bool {
 
 // familyWords describes the families in words.
 var familyWords = map[string]string{
-	"IPE": "I SECTION BEAM OPEN ROLLED",
-	"HEA": "HE H SECTION WIDE FLANGE LIGHT OPEN ROLLED",
-	"HEB": "HE H SECTION WIDE FLANGE OPEN ROLLED",
-	"HEM": "HE H SECTION WIDE FLANGE HEAVY OPEN ROLLED",
-	"UPN": "U CHANNEL TAPER FLANGE OPEN ROLLED",
-	"UPE": "U CHANNEL PARALLEL FLANGE OPEN ROLLED",
-	"SHS": "SQUARE HOLLOW SECTION TUBE",
-	"RHS": "RECTANGULAR HOLLOW SECTION TUBE",
-	"CHS": "CIRCULAR ROUND HOLLOW SECTION PIPE TUBE",
+	"IPE":  "I SECTION BEAM OPEN ROLLED",
+	"HEAA": "HE H SECTION WIDE FLANGE EXTRA LIGHT OPEN ROLLED",
+	"HL":   "H SECTION EXTRA WIDE FLANGE BEAM OPEN ROLLED",
+	"HD":   "H SECTION WIDE FLANGE COLUMN OPEN ROLLED",
+	"HP":   "H SECTION WIDE FLANGE BEARING PILE OPEN ROLLED",
+	"UB":   "I SECTION UNIVERSAL BEAM OPEN ROLLED",
+	"UC":   "H SECTION UNIVERSAL COLUMN OPEN ROLLED",
+	"UBP":  "H SECTION UNIVERSAL BEARING PILE OPEN ROLLED",
+	"PFC":  "U CHANNEL PARALLEL FLANGE OPEN ROLLED",
+	"L":    "ANGLE LEG OPEN ROLLED",
+	"T":    "TEE SECTION HALF CUT OPEN ROLLED",
+	"EHS":  "ELLIPTICAL OVAL HOLLOW SECTION TUBE",
+	"HEA":  "HE H SECTION WIDE FLANGE LIGHT OPEN ROLLED",
+	"HEB":  "HE H SECTION WIDE FLANGE OPEN ROLLED",
+	"HEM":  "HE H SECTION WIDE FLANGE HEAVY OPEN ROLLED",
+	"UPN":  "U CHANNEL TAPER FLANGE OPEN ROLLED",
+	"UPE":  "U CHANNEL PARALLEL FLANGE OPEN ROLLED",
+	"SHS":  "SQUARE HOLLOW SECTION TUBE",
+	"RHS":  "RECTANGULAR HOLLOW SECTION TUBE",
+	"CHS":  "CIRCULAR ROUND HOLLOW SECTION PIPE TUBE",
 }
 
 // descriptors returns the words, in capitals, that a search may use for e.
 func descriptors(e *Entry) []string {
 	d := strings.Fields(strings.ToUpper(e.Designation) + " " + familyWords[e.Family] + " " + e.Standard)
 	d = append(d, strings.TrimPrefix(e.Standard, "EN "), strings.ReplaceAll(e.Standard, " ", ""))
+	if e.Family == "L" {
+		if e.Shape.Depth == e.Shape.Width {
+			d = append(d, "EQUAL")
+		} else {
+			d = append(d, "UNEQUAL")
+		}
+	}
 	switch e.Product {
 	case HotHollow:
 		d = append(d, "HOT", "FINISHED")

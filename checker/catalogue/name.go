@@ -45,6 +45,13 @@ func compact(dst []byte, text string) ([]byte, bool) {
 			var r rune
 			r, size = utf8.DecodeRuneInString(text[i:])
 			switch r {
+			case '½':
+				if len(dst) > 0 && gap && (digit(dst[len(dst)-1]) || dst[len(dst)-1] == '.') {
+					return nil, false // 1 ½
+				}
+				dst, gap = append(dst, "1X2"...), false
+				i += size
+				continue
 			case '×', '✕', '⨯':
 				c = 'X'
 			case 'Ø', 'ø', '⌀', '\u00a0', '\u202f', '\u2009':
@@ -69,21 +76,3 @@ func compact(dst []byte, text string) ([]byte, bool) {
 
 // digit tells whether c is a decimal digit.
 func digit(c byte) bool { return c >= '0' && c <= '9' }
-
-// aliases returns further compact names of a listed section. name is the
-// compact form of its designation.
-func aliases(e Entry, name string) []string {
-	size := name[min(3, len(name)):]
-	switch e.Family {
-	case "HEA":
-		return []string{"HE" + size + "A", "IPBL" + size}
-	case "HEB":
-		return []string{"HE" + size + "B", "IPB" + size}
-	case "HEM":
-		return []string{"HE" + size + "M", "IPBV" + size}
-	case "UPN":
-		// "U" alone is no alias: EN 10365 has another series of that name.
-		return []string{"UNP" + size}
-	}
-	return nil
-}

@@ -25,7 +25,7 @@ func Nearest(designation string, n int) []string {
 	}
 	x := catalogue()
 	g := guess(string(name))
-	families, ok := probable(g.letters)
+	families, ok := probable(g)
 	if !ok {
 		return nil
 	}
@@ -35,14 +35,14 @@ func Nearest(designation string, n int) []string {
 	}
 	found := make([]candidate, 0, 256)
 	for i := range x.entries {
-		e := &x.entries[i]
-		if !slices.Contains(families, e.Family) {
+		e, s := &x.entries[i], &x.sizes[i]
+		if s.tee != g.tee || !slices.Contains(families, s.family) {
 			continue
 		}
 		if e.Product != OpenSection && (e.Product == ColdHollow) != g.cold {
 			continue
 		}
-		found = append(found, candidate{i, sizeDistance(e, g.numbers)})
+		found = append(found, candidate{i, s.distance(g.numbers)})
 	}
 	slices.SortStableFunc(found, func(a, b candidate) int { return cmp.Compare(a.distance, b.distance) })
 	names := make([]string, 0, min(n, len(found)))
@@ -57,12 +57,20 @@ type guessed struct {
 	letters string    // those that name a family
 	numbers []float64 // in mm, at most four
 	cold    bool
+	tee     bool // half of a section
 }
 
 // guess takes a compact name apart without asking that it makes sense.
 func guess(name string) guessed {
+	var g guessed
+	for _, half := range []string{"TEECUTFROM", "TCUTFROM", "T1X2", "1X2X", "1X2", "HALF"} {
+		if rest, found := strings.CutPrefix(name, half); found && strings.ContainsAny(rest, "IHU") {
+			name, g.tee = rest, true
+			break
+		}
+	}
 	q := split(name)
-	g := guessed{letters: q.family, cold: q.cold}
+	g.letters, g.cold = q.family, q.cold
 	var letters []byte
 	for i := 0; i < len(q.rest); {
 		if c := q.rest[i]; !digit(c) {
@@ -94,15 +102,24 @@ var familyNames = []struct{ letters, family string }{
 	{"IPE", "IPE"}, {"HEA", "HEA"}, {"HEB", "HEB"}, {"HEM", "HEM"},
 	{"UPN", "UPN"}, {"UNP", "UPN"}, {"UPE", "UPE"},
 	{"IPBL", "HEA"}, {"IPB", "HEB"}, {"IPBV", "HEM"},
-	{"SHS", "SHS"}, {"RHS", "RHS"}, {"CHS", "CHS"},
+	{"SHS", "SHS"}, {"RHS", "RHS"}, {"CHS", "CHS"}, {"EHS", "EHS"},
+	{"HEAA", "HEAA"}, {"HL", "HL"}, {"HD", "HD"}, {"HP", "HP"},
+	{"UB", "UB"}, {"UC", "UC"}, {"UBP", "UBP"}, {"PFC", "PFC"},
+	{"L", "L"}, {"RSA", "L"},
 }
 
 // probable returns the families whose letters are nearest to those given; ok is
 // false if none is near.
-func probable(letters string) (families []string, ok bool) {
+func probable(g guessed) (families []string, ok bool) {
+	letters := g.letters
 	switch letters {
 	case "":
-		return []string{"SHS", "RHS", "CHS"}, true // numbers alone: hollow sections
+		// Numbers alone: hollow sections, three of them perhaps something else.
+		families = []string{"SHS", "RHS", "CHS"}
+		if len(g.numbers) == 3 {
+			families = append(families, "EHS", "UB", "UC", "UBP", "PFC", "L")
+		}
+		return families, true
 	case "HE":
 		return []string{"HEA", "HEB", "HEM"}, true
 	}
@@ -131,47 +148,4 @@ func sameLetters(a, b string) bool {
 	slices.Sort(p)
 	slices.Sort(q)
 	return string(p) == string(q)
-}
-
-// sizeDistance tells how far the size of an entry is from the numbers of a
-// designation, of which there may be too few.
-func sizeDistance(e *Entry, numbers []float64) float64 {
-	if len(numbers) == 0 {
-		return 0
-	}
-	sh := &e.Shape
-	switch e.Family {
-	case "CHS":
-		return dimensionDistance(numbers, sh.Diameter, sh.Wall, 0)
-	case "SHS":
-		if len(numbers) == 2 && numbers[1] < numbers[0]/2 {
-			return dimensionDistance(numbers, sh.Depth, sh.Wall, 0)
-		}
-		return dimensionDistance(numbers, sh.Depth, sh.Width, sh.Wall)
-	case "RHS":
-		if len(numbers) > 1 && numbers[0] < numbers[1] {
-			return dimensionDistance(append([]float64{numbers[1], numbers[0]}, numbers[2:]...), sh.Depth, sh.Width, sh.Wall)
-		}
-		return dimensionDistance(numbers, sh.Depth, sh.Width, sh.Wall)
-	}
-	return math.Abs(numbers[0] - nominal(e))
-}
-
-// dimensionDistance compares dimensions by their ratio, the earlier ones more.
-func dimensionDistance(numbers []float64, a, b, c float64) float64 {
-	total, weight := 0.0, 100.0
-	for i, d := range [3]float64{a, b, c} {
-		if i == len(numbers) || d == 0 {
-			break
-		}
-		total += weight * math.Abs(math.Log(numbers[i]/(1000*d)))
-		weight /= 10
-	}
-	return total
-}
-
-// nominal returns the number in the designation of a rolled section.
-func nominal(e *Entry) float64 {
-	um, _ := parseMicro(e.Designation[strings.IndexByte(e.Designation, ' ')+1:])
-	return float64(um) / micro
 }

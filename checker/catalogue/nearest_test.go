@@ -59,7 +59,7 @@ func TestSearch(t *testing.T) {
 	}{
 		{"IPE 3", []string{"IPE 300", "IPE 330", "IPE 360"}},
 		{"ipe 300", []string{"IPE 300"}},
-		{"HE 200", []string{"HEA 200", "HEB 200", "HEM 200"}},
+		{"HE 200", []string{"HEAA 200", "HEA 200", "HEB 200", "HEM 200"}},
 		{"SHS 400", []string{"SHS 400x400x10", "SHS 400x400x12.5", "SHS 400x400x16", "SHS 400x400x20",
 			"SHS 400x400x10 cold", "SHS 400x400x12 cold", "SHS 400x400x12.5 cold", "SHS 400x400x16 cold"}},
 		{"cold square 400", []string{"SHS 400x400x10 cold", "SHS 400x400x12 cold", "SHS 400x400x12.5 cold", "SHS 400x400x16 cold"}},

@@ -2,6 +2,7 @@ package catalogue
 
 import (
 	"math"
+	"strings"
 	"testing"
 
 	"kern/checker/section"
@@ -60,10 +61,15 @@ func TestRolledSectionsHavePublishedProperties(t *testing.T) {
 	seen := map[string]bool{}
 	for _, p := range publishedRows {
 		seen[p.name] = true
-		f := p.name[:3]
+		f, _, _ := strings.Cut(p.name, " ")
 		worst[f] = max(worst[f], p.check(t))
 	}
 	for _, e := range All() {
+		switch e.Family {
+		case "IPE", "HEA", "HEB", "HEM", "UPN", "UPE":
+		default:
+			continue // series_test.go
+		}
 		if e.Product == OpenSection && !seen[e.Designation] {
 			t.Errorf("%s has no published line", e.Designation)
 		}

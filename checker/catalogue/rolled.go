@@ -6,7 +6,7 @@ import (
 	"kern/checker/section"
 )
 
-// rolledRow is one line of a table of rolled sections: the number in the
+// rolledRow is one line of such a table: the number in the
 // designation and the nominal dimensions, all in millimetres.
 type rolledRow struct {
 	size         int     // the number that follows the family's letters
@@ -22,7 +22,8 @@ type series struct {
 	rows     []rolledRow
 }
 
-// openSeries lists the rolled families in the order in which All gives them.
+// openSeries lists the rolled families whose designation ends in one number, in
+// the order in which rolledEntries takes them.
 func openSeries() []series {
 	return []series{
 		{"IPE", "EN 10365", ipeRows},
@@ -51,12 +52,13 @@ func (s series) entry(r rolledRow) Entry {
 			Flange: metres(r.tf),
 			Root:   metres(r.r),
 		},
+		Torsion: torsionProducer,
 	}
 	switch s.family {
 	case "UPE":
-		e.Shape.Kind = section.Channel
+		e.Shape.Kind, e.Torsion = section.Channel, torsionJunction
 	case "UPN":
-		e.Shape.Kind = section.Channel
+		e.Shape.Kind, e.Torsion = section.Channel, torsionJunction
 		e.Shape.Toe = metres(r.toe)
 		e.Shape.Taper, e.Shape.TaperAt = section.StandardTaper(e.Shape.Depth, e.Shape.Width, e.Shape.Web)
 		if r.size < upnSmallest {

@@ -46,6 +46,7 @@ var topWords = []string{"include", "basis", "material", "section", "case", "comb
 func NewEnv(files []*lang.File, standards Standards) *Env {
 	b := &builder{env: &Env{Names: map[string]*Named{}}, standards: standards, files: files}
 	b.collect()
+	b.env.offer = namesOf(b.env.Names)
 	b.basis()
 	b.cases()
 	b.levels()
@@ -152,7 +153,10 @@ func (b *builder) value(d declared, value []*lang.Expr) {
 	s := d.stmt
 	if contains(topWords, s.Word) {
 		if !s.Broken {
-			p := lang.Problem{Rule: "wrong-form", Span: s.Head, Message: "a " + s.Word + " that is declared has a name: " + s.Word + " NAME = …"}
+			p := lang.Problem{Rule: "wrong-form", Span: s.Head, Message: "a declared " + s.Word + " has a name: " + s.Word + " NAME = …"}
+			if s.Word == "include" || s.Word == "basis" {
+				p.Message = "'" + s.Word + "' takes no sign ="
+			}
 			if contains(memberWords, s.Word) {
 				p.Notes = append(p.Notes, "what a member is made of is said inside its braces")
 			}
@@ -254,27 +258,7 @@ func (env *Env) lookup(e *lang.Expr) (unit.Quantity, *lang.Problem) {
 		return unit.Quantity{}, &lang.Problem{Rule: "wrong-kind", Span: e.Span, Message: fmt.Sprintf("'%s' is %s, not a value", e.Text, n.Kind),
 			Related: []lang.Related{{Place: n.Place, Message: "given here"}}}
 	}
-	return unit.Quantity{}, env.unknownName(e, "value", func(n *Named) bool { return n.Kind == ValueName || n.Kind == LevelName })
-}
-
-// unknownName is the problem of a name that nobody gave, with the nearest names
-// of the kind that is due.
-func (env *Env) unknownName(e *lang.Expr, what string, fits func(*Named) bool) *lang.Problem {
-	p := &lang.Problem{Rule: "unknown-name", Span: e.Span, Message: "there is no " + what + " '" + e.Text + "'"}
-	var names []string
-	for name, n := range env.Names {
-		if fits(n) {
-			names = append(names, name)
-		}
-	}
-	near := closest(e.Text, names, 3)
-	if len(near) > 0 {
-		p.Message += "; did you mean " + lang.OrList(near) + "?"
-	}
-	for _, n := range near {
-		p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.Span, n))
-	}
-	return p
+	return unit.Quantity{}, env.unknownName(e, "value", []NameKind{ValueName, LevelName})
 }
 
 // values evaluates every named value once, so that each problem is reported
@@ -297,11 +281,11 @@ func (b *builder) values() {
 
 // body reads a block of assignments: what may stand in it and what each takes.
 // It reports unknown and repeated properties.
-func (b *builder) body(d declared, block *lang.Block, take map[string]func(r *reader)) bool {
-	return readBody(b.reader, d, block, take)
+func (b *builder) body(what string, d declared, block *lang.Block, take map[string]func(r *reader)) bool {
+	return readBody(b.reader, what, d, block, take)
 }
 
-func readBody(newReader func(declared) *reader, d declared, block *lang.Block, take map[string]func(r *reader)) bool {
+func readBody(newReader func(declared) *reader, what string, d declared, block *lang.Block, take map[string]func(r *reader)) bool {
 	ok := true
 	seen := map[string]*lang.Stmt{}
 	for _, s := range block.Stmts {
@@ -321,14 +305,14 @@ func readBody(newReader func(declared) *reader, d declared, block *lang.Block, t
 			for w := range take {
 				words = append(words, w)
 			}
-			p := lang.Problem{Rule: "unknown-property", Span: s.Head, Message: "'" + s.Word + "' is nothing that '" + d.stmt.Word + "' knows here"}
+			p := lang.Problem{Rule: "unknown-property", Span: s.Head, Message: "'" + s.Word + "' is nothing that " + lang.A(what) + " has"}
 			near, sure := nearest(s.Word, words, 1)
 			if len(near) > 0 {
 				p.Message += "; did you mean " + near[0] + "?"
 				p.Fixes = append(p.Fixes, lang.Replace("Write "+near[0], sure, s.Head, near[0]))
 			} else {
 				sortStrings(words)
-				p.Notes = append(p.Notes, "it knows "+lang.OrList(words))
+				p.Notes = append(p.Notes, "it has "+lang.OrList(words))
 			}
 			r.problem(p)
 		case !assigned:
@@ -353,6 +337,11 @@ func noSign(r *reader) {
 	s := r.stmt
 	if len(s.Args) == 0 {
 		r.problem(lang.Problem{Rule: "missing-value", Span: s.Line, Message: "'" + s.Word + "' has no value: " + s.Word + " = …"})
+		return
+	}
+	if sign := s.Args[0]; sign.Kind == lang.CompareExpr && sign.Text == "==" {
+		r.problem(lang.Problem{Rule: "wrong-form", Span: sign.Span, Message: "a value is given with one sign: " + s.Word + " = …",
+			Fixes: []lang.Fix{lang.Replace("Write =", true, sign.Span, "=")}})
 		return
 	}
 	r.problem(lang.Problem{Rule: "wrong-form", Span: s.Line, Message: "a sign = is missing: " + s.Word + " = …",
@@ -537,7 +526,7 @@ func (b *builder) override(r *reader) {
 		return
 	}
 	o := Override{Value: v, Place: r.place(span)}
-	if e := r.peek(); reason || e.Is("because") {
+	if r.may("because") || reason {
 		if o.Because, ok = r.because(); !ok {
 			return
 		}
@@ -601,8 +590,13 @@ func (b *builder) cases() {
 			r.take()
 			c.Given = e.Text
 			c.Category, ok = category(c.Kind, e.Text)
-			if !ok {
-				r.fail("unknown-category", e.Span, "'%s' is no category of a %s action: %s", e.Text, kind, categories[c.Kind])
+			switch {
+			case ok:
+			case c.Kind == action.Imposed || c.Kind == action.Snow:
+				r.fail("unknown-category", e.Span, "'%s' is no category of %s action: %s", e.Text, lang.A(kind), categories[c.Kind])
+			default:
+				r.problem(lang.Problem{Rule: "unknown-category", Span: e.Span, Message: lang.A(kind) + " action has no category",
+					Fixes: []lang.Fix{lang.Replace("Remove it", false, e.Span, "")}})
 			}
 		}
 		r.end()
@@ -676,6 +670,10 @@ func (r *reader) name(what string) *lang.Expr {
 		if e != nil {
 			span = e.Span
 		}
+		if e != nil && e.Kind != lang.EqualsExpr && e.Kind != lang.StringExpr {
+			r.fail("wrong-form", span, "'%s' is no name: a name has letters, digits and _, and begins with a letter", clip(span.Of(r.decl.Text)))
+			return nil
+		}
 		r.fail("wrong-form", span, "%s has a name behind the word '%s'", what, r.stmt.Word)
 		return nil
 	}
@@ -715,7 +713,7 @@ func (b *builder) levels() {
 			}
 			if !known || c.Kind != CaseName || c.Index < 0 {
 				e := &lang.Expr{Kind: lang.NameExpr, Text: s.Word, Span: s.Head}
-				r.problem(*env.unknownName(e, "load case", func(n *Named) bool { return n.Kind == CaseName }))
+				r.problem(*env.unknownName(e, "load case", []NameKind{CaseName}))
 				l.Bad = true
 				continue
 			}
@@ -856,7 +854,7 @@ func (b *builder) sum(r *reader, e *lang.Expr, sign float64, factors []float64) 
 			}
 			return n.Index, true
 		}
-		r.problem(*b.env.unknownName(&lang.Expr{Kind: lang.NameExpr, Text: name, Span: span}, "load case", func(n *Named) bool { return n.Kind == CaseName }))
+		r.problem(*b.env.unknownName(&lang.Expr{Kind: lang.NameExpr, Text: name, Span: span}, "load case", []NameKind{CaseName}))
 		return 0, false
 	}
 	switch e.Kind {

@@ -24,6 +24,10 @@ func (w *memberReader) load(r *reader) {
 		w.floor(r, l)
 		return
 	}
+	if e := r.peek(); e == nil || e.Kind == lang.NameExpr && isJoin(e.Text) && w.env.Names[e.Text] == nil {
+		r.fail("missing-value", r.stmt.Line, "the load has no value: load G 80 kN at top")
+		return
+	}
 	if !w.loadCase(r, &l) {
 		return
 	}
@@ -33,7 +37,11 @@ func (w *memberReader) load(r *reader) {
 		return
 	}
 	if e.Kind == lang.QuantExpr && e.Unit.Symbol == "" {
-		r.problem(*lang.UnknownUnit(e, unit.Force, false))
+		p := lang.UnknownUnit(e, unit.Force, true) // it may be a force per length or a moment
+		if len(p.Fixes) == 0 {
+			p = lang.UnknownUnit(e, unit.Force, false)
+		}
+		r.problem(*p)
 		return
 	}
 	q, p := lang.Eval(e, w.lookup)
@@ -62,15 +70,29 @@ func (w *memberReader) load(r *reader) {
 		}
 		w.moment(r, l)
 	default:
-		r.problem(loadMismatch(e, q))
+		r.problem(loadMismatch(r, e, q))
 	}
 }
 
 // loadMismatch says what a load can be.
-func loadMismatch(e *lang.Expr, q unit.Quantity) lang.Problem {
-	p := mismatch(e, q, want{what: "a load", dim: unit.Force, unit: "kN"})
-	if p.Rule == "wrong-unit" {
-		p.Message = fmt.Sprintf("a load is a force (along or across), a force per length or a moment; this is a %s", q.Dim.Name())
+func loadMismatch(r *reader, e *lang.Expr, q unit.Quantity) lang.Problem {
+	w := want{what: "a load", dim: unit.Force, unit: "kN", max: 1e9}
+	about := r.peek().Is("about")
+	if about || q.Dim == unit.MassPerLength {
+		w = want{what: "a load about an axis", dim: unit.ForcePerLength, unit: "kN/m", max: 1e7}
+	}
+	if q.Dim == unit.MassPerLength {
+		w.what = "a line load"
+	}
+	p := r.mismatch(e, q, w)
+	switch {
+	case p.Rule == "wrong-unit":
+		p.Message = fmt.Sprintf("a load is a force (along or across), a force per length or a moment; this is %s", lang.DimName(q.Dim))
+	case p.Rule == "missing-unit" && about && e.Kind == lang.NumberExpr:
+		value := unit.Exact(e.Value)
+		p.Message = fmt.Sprintf("a load about an axis is a force per length or a moment; this is a bare number, write for instance %s kN/m or %s kNm", value, value)
+		end := lang.Span{Start: e.Span.End, End: e.Span.End}
+		p.Fixes = []lang.Fix{lang.Replace("Write "+value+" kN/m", false, end, " kN/m"), lang.Replace("Write "+value+" kNm", false, end, " kNm")}
 	}
 	return p
 }
@@ -79,6 +101,18 @@ func loadMismatch(e *lang.Expr, q unit.Quantity) lang.Problem {
 // declares none.
 func (w *memberReader) loadCase(r *reader, l *Load) bool {
 	e := r.peek()
+	if e != nil && e.Kind == lang.StringExpr && w.env.Names[e.Text] != nil && w.env.Names[e.Text].Kind == CaseName {
+		r.problem(unquoted(e, "a load case"))
+		return false
+	}
+	if e != nil && e.Kind == lang.BinaryExpr && (e.Op == '-' || e.Op == '+') && e.Args[0].Kind == lang.NameExpr {
+		if n := w.env.Names[e.Args[0].Text]; n != nil && n.Kind == CaseName {
+			at := lang.Span{Start: e.Args[0].Span.End, End: e.Args[1].Span.Start}
+			r.problem(lang.Problem{Rule: "misplaced-sign", Span: at, Message: "a sign with blanks on both sides adds or subtracts; the sign of a value stands right before it",
+				Fixes: []lang.Fix{lang.Replace("Write "+string(e.Op)+" right before the value", false, at, " "+string(e.Op))}})
+			return false
+		}
+	}
 	if e != nil && e.Kind == lang.NameExpr {
 		n, ok := w.env.Names[e.Text]
 		next := len(r.args) > 1 && startsValue(r.args[1])
@@ -91,7 +125,8 @@ func (w *memberReader) loadCase(r *reader, l *Load) bool {
 			w.m.Uses = append(w.m.Uses, n)
 			l.Case = n.Index
 			if w.env.Cases[n.Index].Bad {
-				r.failed = true
+				w.m.Missing = append(w.m.Missing, "its load case '"+e.Text+"' has an error")
+				r.problem(*lang.Silent)
 				return false
 			}
 			return true
@@ -152,6 +187,10 @@ func (w *memberReader) force(r *reader, l Load) {
 		if l.At, _, fine = w.place(r, "a load"); !fine {
 			return
 		}
+	}
+	if r.peek().Is("about") {
+		r.fail("wrong-form", r.after(), "a force bends about an axis by its offset (offset 20 mm about major) or goes across one (across major at 2 m)")
+		return
 	}
 	if w.offset(r, &l) && r.end() {
 		w.m.Loads = append(w.m.Loads, l)
@@ -267,7 +306,8 @@ func (w *memberReader) floor(r *reader, l Load) {
 	w.m.Uses = append(w.m.Uses, n)
 	level := w.env.Levels[n.Index]
 	if level.Bad {
-		r.failed = true
+		w.m.Missing = append(w.m.Missing, "its level '"+level.Name+"' has an error")
+		r.problem(*lang.Silent)
 		return
 	}
 	if l.At, _, ok = w.place(r, "a floor"); !ok || !w.offset(r, &l) || !r.end() {

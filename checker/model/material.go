@@ -56,6 +56,10 @@ func readGrade(r *reader, m *Material) bool {
 		}
 	}
 	g, ok := catalogue.FindGrade(grade, standard)
+	if n := r.env.Names[e.Text]; !ok && n != nil && n.Kind == MaterialName {
+		r.problem(unquoted(e, "a material"))
+		return false
+	}
 	if !ok {
 		if _, elsewhere := catalogue.FindGrade(grade, ""); elsewhere && standard != "" {
 			r.fail("unknown-grade", at.Span, "'%s' has no grade '%s'", standard, grade)
@@ -85,13 +89,14 @@ func readGrade(r *reader, m *Material) bool {
 var (
 	wantE       = want{what: "Young's modulus", dim: unit.Stress, unit: "GPa", min: 0.5e9, max: 1000e9}
 	wantG       = want{what: "the shear modulus", dim: unit.Stress, unit: "GPa", min: 0.05e9, max: 500e9}
-	wantFy      = want{what: "a strength", dim: unit.Stress, unit: "MPa", min: 1e6, max: 5e9}
+	wantFy      = want{what: "the yield strength", dim: unit.Stress, unit: "MPa", min: 1e6, max: 5e9}
+	wantFu      = want{what: "the ultimate strength", dim: unit.Stress, unit: "MPa", min: 1e6, max: 5e9}
 	wantDensity = want{what: "the density", dim: unit.Density, unit: "kg/m3", min: 50, max: 25000}
 )
 
 // statedMaterial reads a material's block.
 func (b *builder) statedMaterial(d declared, m *Material) {
-	m.E, m.G, m.Fy, m.Fu, m.Density = unknown, unknown, unknown, unknown, unknown
+	m.E, m.G, m.Fy, m.Fu, m.Density, m.Nu = unknown, unknown, unknown, unknown, unknown, unknown
 	set := func(to *float64, w want) func(r *reader) {
 		return func(r *reader) {
 			if v, _, ok := r.quantity(w); ok {
@@ -99,8 +104,8 @@ func (b *builder) statedMaterial(d declared, m *Material) {
 			}
 		}
 	}
-	ok := b.body(d, d.stmt.Body, map[string]func(r *reader){
-		"E": set(&m.E, wantE), "G": set(&m.G, wantG), "fy": set(&m.Fy, wantFy), "fu": set(&m.Fu, wantFy),
+	ok := b.body("material", d, d.stmt.Body, map[string]func(r *reader){
+		"E": set(&m.E, wantE), "G": set(&m.G, wantG), "fy": set(&m.Fy, wantFy), "fu": set(&m.Fu, wantFu),
 		"density": set(&m.Density, wantDensity),
 		"nu":      set(&m.Nu, want{what: "Poisson's ratio", max: 0.5, zero: true}),
 	})
@@ -111,7 +116,7 @@ func (b *builder) statedMaterial(d declared, m *Material) {
 		m.Bad = true
 	}
 	if math.IsNaN(m.G) {
-		if m.Nu == 0 {
+		if math.IsNaN(m.Nu) {
 			m.Nu = 0.3
 			m.Assumed = append(m.Assumed, "nu = 0.3 for '"+m.Name+"'")
 		}

@@ -43,7 +43,11 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules) []*
 	r := w.reader(d, s)
 	names := memberNames(s)
 	if len(names) == 0 {
-		r.fail("wrong-form", s.Line, "a %s has a name: %s A1 { … }", s.Word, s.Word)
+		if e := r.peek(); e == nil || e.Kind == lang.StringExpr {
+			r.fail("wrong-form", s.Line, "a %s has a name: %s A1 { … }", s.Word, s.Word)
+		} else {
+			r.fail("wrong-form", e.Span, "'%s' is no name: a name has letters, digits and _, and begins with a letter", clip(e.Span.Of(d.Text)))
+		}
 		return nil2(m)
 	}
 	r.args = r.args[2*len(names)-1:]
@@ -54,11 +58,15 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules) []*
 	stmts := w.inherited(r, s, 0)
 	r.end()
 	if s.Broken || r.failed {
-		m.Missing = append(m.Missing, "its first line has an error")
+		w.headless = true
+		if len(m.Missing) == 0 {
+			m.Missing = append(m.Missing, "its first line has an error")
+		}
 	}
 	if s.Body == nil && m.As == nil && !r.failed {
 		r.fail("wrong-form", s.Line, "a %s opens a block that says what it is made of and what it carries: { … }", s.Word)
 		m.Missing = append(m.Missing, "it has no block")
+		w.headless = true
 	}
 	w.read(stmts)
 	w.complete()
@@ -95,6 +103,11 @@ type memberReader struct {
 	m     *Member
 	known DepartureRules
 	first map[string]declared // the first statement of each word that may stand once
+	said  map[string]bool     // the words of all statements, with an error or not
+	chain []*lang.Stmt        // the members that it is "as", nearest first
+	// headless is set when the first line could not be read: what the member
+	// lacks cannot be told then.
+	headless bool
 }
 
 func (w *memberReader) reader(d *lang.Decl, s *lang.Stmt) *reader {
@@ -145,10 +158,15 @@ func (w *memberReader) inherited(r *reader, s *lang.Stmt, depth int) []declared 
 	n, ok := w.env.Names[e.Text]
 	switch {
 	case !ok || n.Kind != MemberName:
-		r.problem(*w.env.unknownName(e, "member", func(n *Named) bool { return n.Kind == MemberName }))
-	case n.Stmt == s || depth > 20:
-		r.fail("defined-by-itself", e.Span, "'%s' is like itself", e.Text)
+		r.problem(*w.env.unknownName(e, "member", []NameKind{MemberName}))
+	case depth == 0 && w.circle(s) != "":
+		r.fail("defined-by-itself", e.Span, "a member cannot be like itself: %s", w.circle(s))
+	case slices.Contains(w.chain, n.Stmt):
+		r.problem(*lang.Silent) // the circle is reported where it closes
+	case depth >= maxLikeness:
+		r.fail("defined-by-itself", e.Span, "more than %d members lean on one another in a row", maxLikeness)
 	default:
+		w.chain = append(w.chain, n.Stmt)
 		w.m.Uses = append(w.m.Uses, n)
 		if w.m.As == nil {
 			w.m.As = n.Place.Decl
@@ -160,7 +178,7 @@ func (w *memberReader) inherited(r *reader, s *lang.Stmt, depth int) []declared 
 			base.args = base.args[1:]
 		}
 		from := w.inherited(&base, n.Stmt, depth+1)
-		if n.Stmt.Broken {
+		if n.Stmt.Broken || hurt(n.Place.Decl, n.Stmt) {
 			w.m.Missing = append(w.m.Missing, "'"+e.Text+"' has an error")
 		}
 		if base.failed {
@@ -178,6 +196,41 @@ func (w *memberReader) inherited(r *reader, s *lang.Stmt, depth int) []declared 
 	return own
 }
 
+// maxLikeness bounds how many members may lean on one another in a row.
+const maxLikeness = 100
+
+// circle writes the chain of members that leads from a member back to itself,
+// "A → B → A"; "" when it does not.
+func (w *memberReader) circle(s *lang.Stmt) string {
+	seen := []*lang.Stmt{s}
+	var names []string
+	for len(seen) <= maxLikeness {
+		last := seen[len(seen)-1]
+		own := memberNames(last)
+		i := slices.IndexFunc(last.Args, func(e *lang.Expr) bool { return e.Is("as") })
+		if len(own) == 0 || i < 0 || i+1 >= len(last.Args) {
+			return ""
+		}
+		if len(names) == 0 {
+			names = append(names, own[0].Text)
+		}
+		n := w.env.Names[last.Args[i+1].Text]
+		switch {
+		case n == nil || n.Kind != MemberName:
+			return ""
+		case n.Stmt == s:
+			if len(names) > 6 {
+				names = append(names[:6], "…")
+			}
+			return strings.Join(append(names, names[0]), " → ")
+		case slices.Contains(seen, n.Stmt):
+			return "" // the circle lies further on
+		}
+		seen, names = append(seen, n.Stmt), append(names, n.Name)
+	}
+	return ""
+}
+
 // sameWord groups words that say the same thing in two ways.
 func sameWord(word string) string {
 	if word == "from" || word == "length" {
@@ -188,7 +241,10 @@ func sameWord(word string) string {
 
 // read goes through the statements: first what fixes the height, then the rest.
 func (w *memberReader) read(stmts []declared) {
-	w.first = map[string]declared{}
+	w.first, w.said = map[string]declared{}, map[string]bool{}
+	for _, d := range stmts {
+		w.said[sameWord(d.stmt.Word)] = true
+	}
 	for _, pass := range []bool{true, false} {
 		for _, d := range stmts {
 			height := sameWord(d.stmt.Word) == "height"
@@ -202,8 +258,12 @@ func (w *memberReader) read(stmts []declared) {
 func (w *memberReader) statement(d declared) {
 	s := d.stmt
 	r := w.reader(d.decl, s)
+	fault := "a line in its block has an error"
+	if d.decl != w.m.Decl {
+		fault = "a line that it takes over has an error"
+	}
 	if s.Broken {
-		w.m.Missing = append(w.m.Missing, "a line in its block has an error")
+		w.m.Missing = append(w.m.Missing, fault)
 		return
 	}
 	value, assigned := s.Assigned()
@@ -231,7 +291,7 @@ func (w *memberReader) statement(d declared) {
 		} else {
 			w.unknown(r)
 		}
-		w.m.Missing = append(w.m.Missing, "a line in its block has an error")
+		w.m.Missing = append(w.m.Missing, fault)
 		return
 	}
 	switch s.Word {
@@ -266,7 +326,7 @@ func (w *memberReader) statement(d declared) {
 		word, _ := r.wordOf("the setting of self-weight", "on", "off")
 		w.m.Weight = word != "off"
 	case "":
-		w.m.Missing = append(w.m.Missing, "a line in its block has an error")
+		w.m.Missing = append(w.m.Missing, fault)
 		return
 	default:
 		w.unknown(r)
@@ -275,8 +335,11 @@ func (w *memberReader) statement(d declared) {
 		r.fail("left-over", s.Body.Span, "'%s' takes no block", s.Word)
 	}
 	r.end()
-	if r.failed {
-		w.m.Missing = append(w.m.Missing, "a line in its block has an error")
+	switch {
+	case r.failed && r.silent && len(w.m.Missing) == 0:
+		w.m.Missing = append(w.m.Missing, "what its '"+s.Word+"' line leans on has an error")
+	case r.failed && !r.silent:
+		w.m.Missing = append(w.m.Missing, fault)
 	}
 }
 
@@ -308,9 +371,13 @@ func (w *memberReader) section(r *reader, d declared) {
 			r.fail("wrong-form", r.stmt.Line, "a %s has a block with its dimensions: %s", e.Text, shapeForms[e.Text])
 			return
 		}
+		n, ok := w.env.Names[e.Text]
+		if p, found := r.inQuotes("a section of the catalogue", inCatalogue); found && !ok {
+			r.problem(p)
+			return
+		}
 		r.take()
 		w.m.SectionAt = r.place(e.Span)
-		n, ok := w.env.Names[e.Text]
 		if !ok || n.Kind != SectionName || n.Index < 0 {
 			w.wrongName(r, e, n, "section", SectionName)
 			return
@@ -338,7 +405,7 @@ func (w *memberReader) section(r *reader, d declared) {
 // wrongName reports a name that is unknown or stands for something else.
 func (w *memberReader) wrongName(r *reader, e *lang.Expr, n *Named, what string, kind NameKind) {
 	if n != nil && (n.Bad || n.Kind == kind) {
-		r.failed = true
+		r.problem(*lang.Silent)
 		return
 	}
 	if n != nil {
@@ -346,7 +413,7 @@ func (w *memberReader) wrongName(r *reader, e *lang.Expr, n *Named, what string,
 			Related: []lang.Related{{Place: n.Place, Message: "given here"}}})
 		return
 	}
-	r.problem(*w.env.unknownName(e, what, func(n *Named) bool { return n.Kind == kind }))
+	r.problem(*w.env.unknownName(e, what, []NameKind{kind}))
 }
 
 func (w *memberReader) material(r *reader) {
@@ -363,9 +430,13 @@ func (w *memberReader) material(r *reader) {
 		r.fail("wrong-form", r.after(), "a material is a name or a grade in quotes: material = s355, or material = \"S355\"")
 		return
 	}
+	n, ok := w.env.Names[e.Text]
+	if p, found := r.inQuotes("a steel grade", isGrade); found && !ok {
+		r.problem(p)
+		return
+	}
 	r.take()
 	w.m.MaterialAt = r.place(e.Span)
-	n, ok := w.env.Names[e.Text]
 	if !ok || n.Kind != MaterialName || n.Index < 0 {
 		w.wrongName(r, e, n, "material", MaterialName)
 		return
@@ -439,6 +510,14 @@ func (w *memberReader) end(r *reader) {
 	}
 }
 
+// placeOf names the height at which something stands.
+func placeOf(what string) string {
+	if strings.HasPrefix(what, "a ") {
+		return "the place of " + what
+	}
+	return what
+}
+
 // place reads a height on the member: "top", "base", a level, a height above
 // the base. A level counts from datum, everything else from the base.
 func (w *memberReader) place(r *reader, what string) (float64, lang.Span, bool) {
@@ -452,7 +531,13 @@ func (w *memberReader) place(r *reader, what string) (float64, lang.Span, bool) 
 		}
 	}
 	e := r.peek()
-	v, span, ok := r.quantity(want{what: what, dim: unit.Length, unit: "m", max: 2000, signed: true, zero: true})
+	if e != nil && e.Kind == lang.NameExpr && w.env.Names[e.Text] == nil {
+		if _, constant := lang.Constants[e.Text]; !constant && e.Text != "height" && e.Text != "length" {
+			r.problem(*w.env.unknownName(e, "level or place", []NameKind{ValueName, LevelName}, "top", "base"))
+			return 0, e.Span, false
+		}
+	}
+	v, span, ok := r.quantity(want{what: placeOf(what), dim: unit.Length, unit: "m", max: 2000, signed: true, zero: true})
 	if !ok {
 		return 0, span, false
 	}
@@ -585,8 +670,8 @@ func (w *memberReader) require(r *reader) {
 		r.problem(*p)
 		return
 	}
-	q.Quantity = val
-	if x := r.peek(); x.Is("because") {
+	q.Quantity, q.Value = val, v
+	if r.may("because") {
 		var ok bool
 		if q.Because, ok = r.because(); !ok {
 			return
@@ -599,15 +684,22 @@ func (w *memberReader) require(r *reader) {
 
 func (w *memberReader) depart(r *reader) {
 	e := r.take()
-	rule := ""
-	span := r.stmt.Line
-	if e != nil {
-		span = e.Span
-		rule = e.Span.Of(r.decl.Text)
-		// a rule's name has hyphens, which read as minus signs
-		rule = strings.Join(strings.Fields(rule), "")
+	if e == nil || e.Is("because") {
+		r.fail("wrong-form", r.stmt.Line, "depart names a check: depart slenderness because \"…\"")
+		return
 	}
-	if e == nil || !contains(w.known, rule) {
+	span := e.Span
+	written := e.Span.Of(r.decl.Text)
+	if e.Kind == lang.StringExpr {
+		written = e.Text
+	}
+	// a rule's name has hyphens, which read as minus signs
+	rule := strings.Join(strings.Fields(written), "")
+	if e.Kind == lang.StringExpr && contains(w.known, rule) {
+		r.problem(unquoted(e, "a check"))
+		return
+	}
+	if !contains(w.known, rule) {
 		p := lang.Problem{Rule: "unknown-rule", Span: span, Message: "'" + clip(rule) + "' is no check that a member can depart from"}
 		near := closest(rule, w.known, 2)
 		if len(near) > 0 {
@@ -629,8 +721,10 @@ func (w *memberReader) depart(r *reader) {
 // complete looks for what the member lacks and states what is assumed.
 func (w *memberReader) complete() {
 	m := w.m
-	missing := func(fix, format string, args ...any) {
-		what := fmt.Sprintf(format, args...)
+	missing := func(fix, what string) {
+		if len(m.Missing) > 0 && (w.headless || w.said[what]) {
+			return // reported where it lies
+		}
 		if len(m.Missing) == 0 {
 			p := lang.Problem{Rule: "missing-value", Span: m.Stmt.Line, Message: "the " + m.Kind.String() + " has no " + what}
 			if m.Stmt.Body != nil && fix != "" {

@@ -43,7 +43,8 @@ type Env struct {
 	decls    []*lang.Decl // the declarations that made it, for comparison with a later text
 	members  []*lang.Decl
 
-	caseNames []*Named // of each case; nil for those that nobody declared
+	offer     map[NameKind][]string // the names of each kind, for offers
+	caseNames []*Named              // of each case; nil for those that nobody declared
 }
 
 // NameKind is what a name stands for.
@@ -298,6 +299,7 @@ type Require struct {
 	Symbol   string
 	Compare  string // < <= > >=
 	Quantity unit.Quantity
+	Value    *lang.Expr // what Quantity was written as
 	Because  string
 	Place    lang.Place
 	SymbolAt lang.Span

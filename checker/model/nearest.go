@@ -37,6 +37,9 @@ func nearest(text string, names []string, n int) (near []string, sure bool) {
 		}
 		seen[name] = true
 		to := strings.ToLower(name)
+		if far := len(name) - len(text); (far > 4 || far < -4) && !strings.HasPrefix(to, lower) {
+			continue
+		}
 		d := distance(lower, to)
 		half := len(text) >= 2 && d > 0 && strings.HasPrefix(to, lower)
 		if half || d <= min(4, max(1, (max(len(text), len(name))+1)/3)) && d < max(len(text), len(name)) {

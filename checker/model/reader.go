@@ -2,6 +2,7 @@ package model
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"kern/lang"
@@ -21,10 +22,13 @@ type reader struct {
 	// tried are the words that could have stood where the next part stands.
 	tried  [8]string
 	trials int
+	// silent is set when the reason was reported where it lies.
+	silent bool
 }
 
 func (r *reader) problem(p lang.Problem) {
 	if r.failed || p.Rule == "" {
+		r.silent = r.silent || !r.failed
 		r.failed = true
 		return
 	}
@@ -84,16 +88,25 @@ func (r *reader) wordOf(what string, words ...string) (string, bool) {
 		return w, true
 	}
 	e := r.peek()
+	join := len(words) == 1 && lang.Joins(words[0])
 	switch {
+	case e == nil && join:
+		r.fail("wrong-form", r.stmt.Line, "%s is missing: %s …", what, words[0])
 	case e == nil:
 		r.fail("wrong-form", r.stmt.Line, "%s is missing: %s", what, lang.OrList(words))
 	case e.Kind == lang.NameExpr:
-		p := lang.Problem{Rule: "unknown-word", Span: e.Span, Message: fmt.Sprintf("'%s' is no %s: %s", e.Text, strings.TrimPrefix(strings.TrimPrefix(what, "the "), "an "), lang.OrList(words))}
+		p := lang.Problem{Rule: "unknown-word", Span: e.Span, Message: fmt.Sprintf("%s is %s, not '%s'", what, lang.OrList(words), e.Text)}
+		if len(words) == 1 {
+			p.Message = fmt.Sprintf("the word '%s' is due here, not '%s'", words[0], e.Text)
+		}
 		near, sure := nearest(e.Text, words, 1)
 		for _, n := range near {
 			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, sure, e.Span, n))
 		}
 		r.problem(p)
+	case join:
+		r.problem(lang.Problem{Rule: "wrong-form", Span: e.Span, Message: fmt.Sprintf("%s begins with '%s'", what, words[0]),
+			Fixes: []lang.Fix{lang.Replace("Add '"+words[0]+"'", false, lang.Span{Start: e.Span.Start, End: e.Span.Start}, words[0]+" ")}})
 	default:
 		r.fail("wrong-form", e.Span, "%s is due here: %s", what, lang.OrList(words))
 	}
@@ -107,7 +120,7 @@ func (r *reader) text(what string) (string, bool) {
 		r.take()
 		return e.Text, true
 	}
-	if e != nil && e.Kind != lang.CommaExpr && e.Kind != lang.EqualsExpr {
+	if e != nil && e.Kind == lang.NameExpr {
 		span := e.Span
 		for _, next := range r.args[1:] { // HEB 200, EN 10025-2: up to the next word of the language
 			if next.Kind == lang.StringExpr || next.Kind == lang.CommaExpr || next.Kind == lang.NameExpr && lang.Joins(next.Text) {
@@ -143,6 +156,15 @@ func (r *reader) because() (string, bool) {
 	return reason, ok
 }
 
+// may notes a word that could stand next, and tells whether it does.
+func (r *reader) may(word string) bool {
+	if r.peek().Is(word) {
+		return true
+	}
+	r.trials += copy(r.tried[r.trials:], []string{word})
+	return false
+}
+
 // slip reports the next part when it is a slip of a word that could stand there.
 func (r *reader) slip() bool {
 	e := r.peek()
@@ -161,9 +183,18 @@ func (r *reader) slip() bool {
 // end complains about parts that nobody took.
 func (r *reader) end() bool {
 	if e := r.peek(); e != nil && !r.failed && !r.slip() {
-		last := r.args[len(r.args)-1]
-		r.problem(lang.Problem{Rule: "left-over", Span: e.Span.Join(last.Span), Message: "'" + clip(e.Span.Of(r.decl.Text)) + "' does not belong here: a '" + r.stmt.Word + "' statement ends before it",
-			Fixes: []lang.Fix{lang.Replace("Remove it", false, e.Span.Join(last.Span), "")}})
+		rest := e.Span.Join(r.args[len(r.args)-1].Span)
+		p := lang.Problem{Rule: "left-over", Span: rest, Message: "'" + clip(e.Span.Of(r.decl.Text)) + "' does not belong here: " + lang.A("'"+r.stmt.Word+"'") + " statement ends before it",
+			Fixes: []lang.Fix{lang.Replace("Remove it", false, rest, "")}}
+		switch {
+		case e.Kind == lang.NameExpr && unit.Known(e.Text):
+			p.Notes = append(p.Notes, "a unit is written without blanks inside: kNm, kN/m")
+		case e.Kind == lang.UnaryExpr:
+			p.Notes = append(p.Notes, "a minus with a blank before it and none behind it begins a new part; to subtract write a - b")
+		case len(r.args) > 1 && slices.ContainsFunc(r.args, func(a *lang.Expr) bool { return a.Kind == lang.EqualsExpr }):
+			p.Notes = append(p.Notes, "statements on one line are parted by ;")
+		}
+		r.problem(p)
 	}
 	return !r.failed
 }
@@ -184,6 +215,11 @@ type want struct {
 	min, max float64
 	signed   bool // negative values make sense
 	zero     bool // zero makes sense
+}
+
+// fits tells whether a value lies within the bounds.
+func (w want) fits(v float64) bool {
+	return v == 0 || (w.min == 0 || abs(v) >= w.min) && (w.max == 0 || abs(v) <= w.max)
 }
 
 // quantity takes an expression and gives its value in SI units.
@@ -207,10 +243,36 @@ func (r *reader) quantity(w want) (float64, lang.Span, bool) {
 		return 0, e.Span, false
 	}
 	if q.Dim != w.dim {
-		r.problem(mismatch(e, q, w))
+		r.problem(r.mismatch(e, q, w))
 		return 0, e.Span, false
 	}
 	return q.Value, e.Span, r.possible(e, q.Value, w)
+}
+
+// mismatch is the problem of a quantity of another dimension than is due, in
+// the light of what follows it.
+func (r *reader) mismatch(e *lang.Expr, q unit.Quantity, w want) lang.Problem {
+	next := r.peek()
+	if e.Kind != lang.NumberExpr || next == nil {
+		return mismatch(e, q, w)
+	}
+	both := e.Span.Join(next.Span)
+	gap := lang.Span{Start: e.Span.End, End: next.Span.Start}
+	switch next.Kind {
+	case lang.NameExpr:
+		if u, err := unit.Parse(next.Text); err == nil && u.Dim == w.dim && gap.Len() > 1 {
+			return lang.Problem{Rule: "missing-unit", Span: both, Message: "a unit stands one blank at most behind its number",
+				Fixes: []lang.Fix{lang.Replace("Leave one blank", true, gap, " ")}}
+		}
+	case lang.NumberExpr, lang.QuantExpr, lang.BinaryExpr:
+		p := lang.Problem{Rule: "bad-number", Span: both, Message: "two numbers stand side by side"}
+		if digits := next.Span.Of(r.decl.Text); len(digits) > 3 && next.Kind == lang.QuantExpr && strings.Trim(digits[:3], "0123456789") == "" && digits[3] == ' ' {
+			p.Message += ": digits are grouped with _"
+			p.Fixes = append(p.Fixes, lang.Replace("Group the digits", false, gap, "_"))
+		}
+		return p
+	}
+	return mismatch(e, q, w)
 }
 
 // possible refuses values that cannot be what was meant.
@@ -239,11 +301,14 @@ func abs(x float64) float64 {
 // brings it into the range is offered.
 func magnitude(e *lang.Expr, v float64, w want) lang.Problem {
 	v = abs(v)
-	side, bound := "low", w.min
+	side, bound := "small", w.min
 	if w.max > 0 && v > w.max {
-		side, bound = "high", w.max
+		side, bound = "large", w.max
 	}
 	show := func(x float64) string {
+		if e.Kind == lang.QuantExpr && x/e.Unit.Factor >= 1e-3 && x/e.Unit.Factor < 1e6 {
+			return unit.Short(x/e.Unit.Factor, 6) + " " + e.Text
+		}
 		for _, u := range unit.For(w.dim) {
 			if y := x / u.Factor; y >= 0.1 && y < 10000 {
 				return unit.Short(y, 3) + " " + u.Symbol
@@ -298,8 +363,8 @@ func mismatch(e *lang.Expr, q unit.Quantity, w want) lang.Problem {
 		if e.Kind == lang.NumberExpr {
 			units := append([]string{w.unit}, offered[w.dim]...)
 			for i, u := range units {
-				if u == "" || i > 0 && u == w.unit {
-					continue
+				if known, err := unit.Parse(u); err != nil || i > 0 && (u == w.unit || !w.fits(e.Value*known.Factor)) {
+					continue // none to offer, offered already, or beyond what can be
 				}
 				f := src(" " + u)
 				f.Title = "Write " + unit.Exact(e.Value) + " " + u
@@ -310,31 +375,67 @@ func mismatch(e *lang.Expr, q unit.Quantity, w want) lang.Problem {
 			}
 		}
 		return p
-	case q.Dim == unit.Mass && w.dim == unit.Force:
-		p := lang.Problem{Rule: "mass-for-force", Span: e.Span, Message: fmt.Sprintf("%s is a force; this is a mass. Say kgf for the weight of a kilogram, or multiply by g", w.what)}
-		if e.Kind == lang.QuantExpr && e.Text == "kg" {
-			p.Fixes = append(p.Fixes, lang.Replace("Write kgf", false, e.UnitSpan(), "kgf"))
+	case weighs(q.Dim, w.dim):
+		p := lang.Problem{Rule: "mass-for-force", Span: e.Span, Message: fmt.Sprintf("%s needs a unit of %s; this is %s. Say kgf for the weight of a kilogram, or multiply by g", w.what, w.dim.Name(), lang.DimName(q.Dim))}
+		if e.Kind == lang.QuantExpr {
+			for _, pair := range [][2]string{{"kg", "kgf"}, {"lb", "lbf"}} {
+				rest, ok := strings.CutPrefix(e.Text, pair[0])
+				if u, err := unit.Parse(pair[1] + rest); ok && err == nil && u.Dim == w.dim {
+					p.Fixes = append(p.Fixes, lang.Replace("Write "+u.Symbol, false, e.UnitSpan(), pair[1]+rest))
+				}
+			}
 		}
-		if e.Kind == lang.QuantExpr && e.Text == "lb" {
-			p.Fixes = append(p.Fixes, lang.Replace("Write lbf", false, e.UnitSpan(), "lbf"))
-		}
-		f := src(" * g")
-		f.Title = "Multiply by g"
-		p.Fixes = append(p.Fixes, f)
+		p.Fixes = append(p.Fixes, times(e, "Multiply by g", " * g"))
 		return p
+	case weighs(w.dim, q.Dim):
+		return lang.Problem{Rule: "wrong-unit", Span: e.Span, Message: fmt.Sprintf("%s needs a unit of %s; this is %s, which divided by g is one", w.what, w.dim.Name(), lang.DimName(q.Dim)),
+			Fixes: []lang.Fix{times(e, "Divide by g", " / g")}}
 	}
-	p := lang.Problem{Rule: "wrong-unit", Span: e.Span, Message: fmt.Sprintf("%s is a %s; this is a %s", w.what, w.dim.Name(), q.Dim.Name())}
+	p := lang.Problem{Rule: "wrong-unit", Span: e.Span, Message: fmt.Sprintf("%s needs a unit of %s; this is %s", w.what, w.dim.Name(), lang.DimName(q.Dim))}
+	if w.unit != "" {
+		p.Message = fmt.Sprintf("%s needs a unit of %s, such as %s; this is %s", w.what, w.dim.Name(), w.unit, lang.DimName(q.Dim))
+	}
 	if w.dim.IsNone() {
-		p.Message = fmt.Sprintf("%s is a pure number; this is a %s", w.what, q.Dim.Name())
+		p.Message = fmt.Sprintf("%s is a pure number; this is %s", w.what, lang.DimName(q.Dim))
 		if e.Kind == lang.QuantExpr {
 			p.Fixes = append(p.Fixes, lang.Replace("Remove the unit", false, lang.Span{Start: e.Span.Start, End: e.Span.End}, unit.Exact(e.Value)))
 		}
 	} else if e.Kind == lang.QuantExpr {
-		for _, n := range unit.Nearest(e.Text, w.dim, false, 2) {
-			if u, err := unit.Parse(n); err == nil && u.Dim == w.dim {
+		for _, n := range unit.Nearest(e.Text, w.dim, false, 6) {
+			if u, err := unit.Parse(n); err == nil && u.Dim == w.dim && w.fits(e.Value*u.Factor) && len(p.Fixes) < 2 {
 				p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.UnitSpan(), n))
 			}
 		}
 	}
 	return p
+}
+
+// weighs tells whether the second dimension is the weight of what the first is
+// the mass of, under gravity.
+func weighs(mass, weight unit.Dim) bool {
+	d, ok := mass.Mul(unit.Acceleration)
+	return ok && d == weight && mass.M != 0
+}
+
+// times multiplies an expression; a sum gets brackets around it.
+func times(e *lang.Expr, title, by string) lang.Fix {
+	f := lang.Fix{Title: title}
+	end := lang.Span{Start: e.Span.End, End: e.Span.End}
+	if e.Kind == lang.BinaryExpr && (e.Op == '+' || e.Op == '-') {
+		start := lang.Span{Start: e.Span.Start, End: e.Span.Start}
+		f.Edits = []lang.Edit{{Place: lang.Place{Span: start}, New: "("}, {Place: lang.Place{Span: end}, New: ")" + by}}
+		return f
+	}
+	f.Edits = []lang.Edit{{Place: lang.Place{Span: end}, New: by}}
+	return f
+}
+
+// Unlike is the problem of a quantity that is compared with one of another
+// dimension.
+func Unlike(what string, e *lang.Expr, q unit.Quantity, dim unit.Dim) lang.Problem {
+	w := want{what: what, dim: dim}
+	if usual := unit.For(dim); len(usual) > 0 && !dim.IsNone() {
+		w.unit = usual[0].Symbol
+	}
+	return mismatch(e, q, w)
 }

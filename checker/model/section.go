@@ -50,6 +50,10 @@ func readSection(r *reader, newReader func(declared) *reader, d declared, s *Sec
 		}
 		return r.end()
 	}
+	if p, found := r.inQuotes("a section of the catalogue", inCatalogue); found {
+		r.problem(p)
+		return false
+	}
 	word, ok := r.wordOf("the shape", shapeWords...)
 	if !ok {
 		return false
@@ -87,6 +91,10 @@ var rolled sync.Map // designation -> *section.Properties
 
 func fromCatalogue(r *reader, e *lang.Expr, s *Section) bool {
 	entry, ok := catalogue.Find(e.Text)
+	if n := r.env.Names[e.Text]; !ok && n != nil && n.Kind == SectionName {
+		r.problem(unquoted(e, "a section"))
+		return false
+	}
 	if !ok {
 		near := catalogue.Nearest(e.Text, 4)
 		p := lang.Problem{Rule: "unknown-section", Span: e.Span, Message: "'" + clip(e.Text) + "' is no section of the catalogue"}
@@ -143,6 +151,7 @@ func shapedSection(r *reader, newReader func(declared) *reader, d declared, s *S
 	corner := math.NaN()
 	set := func(to *float64, w want) func(r *reader) {
 		return func(r *reader) {
+			w.what = "the " + r.stmt.Word
 			if v, span, ok := r.quantity(w); ok {
 				*to = v
 				places[r.stmt.Word] = span
@@ -194,8 +203,11 @@ func shapedSection(r *reader, newReader func(declared) *reader, d declared, s *S
 			"root": set(&shape.Root, wantRadius), "toe": set(&shape.Toe, wantRadius), "made": made("rolled", "welded")}
 		need = []string{"depth", "wall"}
 	}
-	if !readBody(newReader, d, d.stmt.Body, take) {
+	if !readBody(newReader, word, d, d.stmt.Body, take) {
 		return false
+	}
+	if hurt(d.decl, d.stmt) {
+		return false // what is missing may stand where it could not be read
 	}
 	for _, n := range need {
 		if _, ok := places[n]; !ok {
@@ -208,6 +220,9 @@ func shapedSection(r *reader, newReader func(declared) *reader, d declared, s *S
 	props, err := section.Compute(*shape)
 	if errors.As(err, &shapeErr) {
 		f := shapeErr.Faults[0]
+		if f.Field == "outer" || f.Field == "inner" {
+			f.Field = "corner"
+		}
 		span, ok := places[f.Field]
 		if !ok {
 			span = d.stmt.Line
@@ -276,10 +291,11 @@ func givenSection(r *reader, newReader func(declared) *reader, d declared, s *Se
 	p := &s.Properties
 	nan := math.NaN()
 	*p = section.Properties{Area: nan, IMajor: nan, IMinor: nan, WelMajor: nan, WelMinor: nan, WplMajor: nan, WplMinor: nan, It: nan, Iw: nan, AvMajor: nan, AvMinor: nan}
+	places := map[string]lang.Span{}
 	set := func(to *float64, w want) func(r *reader) {
 		return func(r *reader) {
-			if v, _, ok := r.quantity(w); ok {
-				*to = v
+			if v, span, ok := r.quantity(w); ok {
+				*to, places[r.stmt.Word] = v, span
 			}
 		}
 	}
@@ -301,15 +317,17 @@ func givenSection(r *reader, newReader func(declared) *reader, d declared, s *Se
 		}
 	}
 	class := 0.0
-	ok := readBody(newReader, d, d.stmt.Body, map[string]func(r *reader){
+	ok := readBody(newReader, "given section", d, d.stmt.Body, map[string]func(r *reader){
 		"A":       set(&p.Area, want{what: "the area", dim: unit.Area, unit: "cm2", min: 1e-6, max: 10}),
 		"I_major": set(&p.IMajor, i4("the second moment of area", false)), "I_minor": set(&p.IMinor, i4("the second moment of area", false)),
 		"W_major": set(&p.WelMajor, w3("the elastic section modulus")), "W_minor": set(&p.WelMinor, w3("the elastic section modulus")),
 		"Wpl_major": set(&p.WplMajor, w3("the plastic section modulus")), "Wpl_minor": set(&p.WplMinor, w3("the plastic section modulus")),
+		"A_v_major": set(&p.AvMajor, want{what: "the shear area", dim: unit.Area, unit: "cm2", min: 1e-6, max: 10}),
+		"A_v_minor": set(&p.AvMinor, want{what: "the shear area", dim: unit.Area, unit: "cm2", min: 1e-6, max: 10}),
 		"I_t":       set(&p.It, i4("the torsion constant", true)),
 		"I_w":       set(&p.Iw, want{what: "the warping constant", dim: unit.Length6, unit: "cm6", max: 1, zero: true}),
 		"thickness": set(&s.Thickness, wantWall),
-		"class":     set(&class, want{what: "the cross-section class", min: 1, max: 4}),
+		"class":     set(&class, want{what: "the cross-section class"}),
 		"curve":     curve(&s.CurveMajor, &s.CurveMinor), "curve_major": curve(&s.CurveMajor), "curve_minor": curve(&s.CurveMinor),
 	})
 	if !ok {
@@ -324,13 +342,13 @@ func givenSection(r *reader, newReader func(declared) *reader, d declared, s *Se
 			return false
 		}
 	}
-	if class != math.Trunc(class) {
-		r.problem(lang.Problem{Rule: "impossible-value", Span: s.Place.Span, Message: "a cross-section class is 1, 2, 3 or 4"})
+	if _, given := places["class"]; given && (class != math.Trunc(class) || class > 4) {
+		r.problem(lang.Problem{Rule: "impossible-value", Span: places["class"], Message: "a cross-section class is 1, 2, 3 or 4"})
 		return false
 	}
 	s.Class = int(class)
 	if p.IMinor > p.IMajor {
-		r.problem(lang.Problem{Rule: "impossible-section", Span: s.Place.Span, Message: "I_minor is larger than I_major: the major axis is the strong one"})
+		r.problem(lang.Problem{Rule: "impossible-section", Span: places["I_minor"], Message: "I_minor is larger than I_major: the major axis is the strong one"})
 		return false
 	}
 	p.RMajor, p.RMinor = math.Sqrt(p.IMajor/p.Area), math.Sqrt(p.IMinor/p.Area)

@@ -74,6 +74,8 @@ func (s Shape) dimensions() (needed, optional, unused []dimension) {
 		need, may = "depth,width,wall", "outer,inner"
 	case Pipe:
 		need = "outside,wall"
+	case Ellipse:
+		need = "depth,width,wall"
 	case Bar:
 		need = "depth,width"
 	case Rod:
@@ -190,6 +192,9 @@ func (s Shape) checkParts() []Fault {
 		}
 	case Pipe:
 		below("wall", s.Wall, s.Diameter/2, "the wall is not thinner than half the outside diameter")
+	case Ellipse:
+		// A wall of even thickness needs room within the outside's tightest bend.
+		below("wall", s.Wall, side*side/(2*math.Max(h, b)), "the wall is not thinner than the outside's smallest radius of curvature")
 	case ISection, Channel:
 		below("web", s.Web, b, "the web is not thinner than the width")
 		below("flange", s.Flange, h/2, "the flange is not thinner than half the depth")

@@ -51,6 +51,11 @@ func TestFaults(t *testing.T) {
 		{"tube corner too round", Shape{Kind: Tube, Depth: 100 * mm, Width: 40 * mm, Wall: 8 * mm, OuterRadius: 21 * mm, InnerRadius: 12 * mm}, "outer", 20 * mm},
 		{"tube without a wall at the corner", Shape{Kind: Tube, Depth: 100 * mm, Width: 100 * mm, Wall: 5 * mm, OuterRadius: 12 * mm}, "outer", 10 * mm},
 		{"tube inside too round", Shape{Kind: Tube, Depth: 100 * mm, Width: 40 * mm, Wall: 8 * mm, OuterRadius: 16 * mm, InnerRadius: 13 * mm}, "inner", 12 * mm},
+		{"sound ellipse", Shape{Kind: Ellipse, Made: Hot, Depth: 300 * mm, Width: 150 * mm, Wall: 16 * mm}, "", 0},
+		{"ellipse too thick for its tightest bend", Shape{Kind: Ellipse, Made: Hot, Depth: 300 * mm, Width: 150 * mm, Wall: 37.5 * mm}, "wall", 37.5 * mm},
+		{"lying ellipse too thick", Shape{Kind: Ellipse, Made: Hot, Depth: 100 * mm, Width: 200 * mm, Wall: 30 * mm}, "wall", 25 * mm},
+		{"ellipse without a wall", Shape{Kind: Ellipse, Depth: 300 * mm, Width: 150 * mm}, "wall", 0},
+		{"ellipse with a root", Shape{Kind: Ellipse, Depth: 300 * mm, Width: 150 * mm, Wall: 8 * mm, Root: 8 * mm}, "root", 0},
 		{"pipe walls meet", Shape{Kind: Pipe, Diameter: 40 * mm, Wall: 20 * mm}, "wall", 20 * mm},
 		{"pipe without a diameter", Shape{Kind: Pipe, Wall: 2 * mm}, "outside", 0},
 		{"rod without a diameter", Shape{Kind: Rod}, "diameter", 0},
@@ -115,7 +120,7 @@ func FuzzCompute(f *testing.F) {
 	f.Add(uint8(6), uint8(1), 100.0, 1e-3, 1e-5, 1e-5, 0.0, 0.0, 1e-300, 1e-18, 0.0, 0.0, 1e-20, 1e-9)
 	f.Add(uint8(8), uint8(4), 100.0, 1.1e-5, 0.0, 0.0, 1e-5, 0.0, 0.0, 1e-5, 0.0, 0.0, 0.0, 0.0)
 	f.Fuzz(func(t *testing.T, kind, made uint8, depth, width, web, flange, wall, diameter, root, toe, outer, inner, taper, at float64) {
-		s := Shape{Kind: Kind(kind % 11), Made: Made(made % 6), Depth: depth, Width: width, Web: web, Flange: flange, Wall: wall,
+		s := Shape{Kind: Kind(kind % 12), Made: Made(made % 6), Depth: depth, Width: width, Web: web, Flange: flange, Wall: wall,
 			Diameter: diameter, Root: root, Toe: toe, OuterRadius: outer, InnerRadius: inner, Taper: taper, TaperAt: at}
 		faults := s.Check()
 		loops := s.Outline()

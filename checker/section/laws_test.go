@@ -53,7 +53,7 @@ func TestQuarterTurn(t *testing.T) {
 	r := rand.New(rand.NewPCG(3, 20))
 	for seen := 0; seen < 200; {
 		s := randomShape(r)
-		if s.Kind != Bar && s.Kind != Tube && s.Kind != Angle || s.Depth == s.Width {
+		if s.Kind != Bar && s.Kind != Tube && s.Kind != Ellipse && s.Kind != Angle || s.Depth == s.Width {
 			continue
 		}
 		seen++
@@ -103,7 +103,7 @@ func TestBounds(t *testing.T) {
 		if p.It > polar*(1+1e-12) {
 			t.Errorf("It %g above the polar second moment %g\n%+v", p.It, polar, s)
 		}
-		if s.Kind != Tube && s.Kind != Pipe && p.It > p.Area*p.Area/(2*math.Pi)*(1+1e-12) {
+		if s.Kind != Tube && s.Kind != Pipe && s.Kind != Ellipse && p.It > p.Area*p.Area/(2*math.Pi)*(1+1e-12) {
 			t.Errorf("It %g above the circle's\n%+v", p.It, s)
 		}
 		for _, w := range [][2]float64{{p.WplMajor, p.WelMajor}, {p.WplMinor, p.WelMinor}} {
@@ -123,6 +123,9 @@ func TestParallelAxes(t *testing.T) {
 	r := rand.New(rand.NewPCG(5, 20))
 	for range 200 {
 		s := randomShape(r)
+		if s.Kind == Ellipse {
+			continue // its outline is drawn and not integrated, see ellipse_test.go
+		}
 		var segments []Segment
 		for _, l := range s.Outline() {
 			segments = append(segments, l...)

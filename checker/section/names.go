@@ -10,6 +10,7 @@ var kindNames = [...]string{
 	Channel:  "channel",
 	Tee:      "tee",
 	Angle:    "angle",
+	Ellipse:  "ellipse",
 	Given:    "given",
 }
 

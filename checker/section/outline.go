@@ -51,7 +51,9 @@ func (l Loop) Length() float64 {
 }
 
 // Outline gives the closed outlines of the shape, the outer one first. It is
-// nil for a shape that fails Check, and for a kind that has no geometry.
+// nil for a shape that fails Check, and for a kind that has no geometry. The
+// outlines are exact but for those of an Ellipse, which are drawn with circular
+// arcs, see ellipse.
 func (s Shape) Outline() []Loop {
 	if len(s.Check()) > 0 {
 		return nil
@@ -69,6 +71,12 @@ func (s Shape) outline() []Loop {
 	case Rod:
 		r := s.Diameter / 2
 		return []Loop{circle(Point{r, r}, r, 2*math.Pi)}
+	case Ellipse:
+		c := Point{s.Width / 2, s.Depth / 2}
+		return []Loop{
+			ellipse(c, s.Width/2, s.Depth/2, 1),
+			ellipse(c, s.Width/2-s.Wall, s.Depth/2-s.Wall, -1),
+		}
 	}
 	var loops []Loop
 	for _, polygon := range s.corners() {

@@ -28,7 +28,7 @@ type Properties struct {
 	WplMajor, WplMinor float64
 
 	It float64 // St Venant torsion constant, m4; see TorsionPlates, TorsionProducer, TorsionElDarwishJohnston
-	Iw float64 // warping constant, m6; 0 for tube, pipe, bar and rod, where it is left out
+	Iw float64 // warping constant, m6; 0 for tube, pipe, ellipse, bar and rod, where it is left out
 
 	// Shear areas by EN 1993-1-1:2005, 6.2.6(3), m2: AvMajor resists the shear
 	// force that goes with bending about the major axis.
@@ -50,7 +50,7 @@ type Properties struct {
 // image.
 func (s Shape) symmetry() (aboutX, aboutY bool) {
 	switch s.Kind {
-	case Tube, Pipe, Bar, Rod, ISection:
+	case Tube, Pipe, Ellipse, Bar, Rod, ISection:
 		return true, true
 	case Channel:
 		return true, false
@@ -65,6 +65,9 @@ func (s Shape) symmetry() (aboutX, aboutY bool) {
 func Compute(s Shape) (Properties, error) {
 	if faults := s.Check(); len(faults) > 0 {
 		return Properties{}, &ShapeError{s.Kind, faults}
+	}
+	if s.Kind == Ellipse {
+		return s.computeEllipse()
 	}
 	loops := s.outline()
 	var segments []Segment

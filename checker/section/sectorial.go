@@ -7,7 +7,7 @@ import "math"
 // Check, with the centroid and the second moment about the paper's y axis
 // given. All of it is thin-walled theory on the mid-lines of the plates.
 //
-//	Tube, Pipe, Bar, Rod  shear centre in the centroid; Iw = 0: closed and
+//	Tube, Pipe, Ellipse, Bar, Rod  shear centre in the centroid; Iw = 0: closed and
 //	                      solid sections hardly warp, and leaving it out
 //	                      lowers a torsional load
 //	ISection  Iw = Iz hs2/4, Iz about the web and hs between the flanges'

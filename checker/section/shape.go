@@ -17,6 +17,7 @@ const (
 	Channel       // U, web and two flanges on one side
 	Tee           // T, one flange on top of a stem
 	Angle         // L, equal or unequal legs
+	Ellipse       // elliptical hollow section
 	Given         // properties stated by the user, no geometry
 )
 
@@ -33,6 +34,21 @@ const (
 	Welded           // built up by welding
 )
 
+// Junction names the formula by which the junctions of web and flanges count in
+// the torsion constant of a rolled I or H section. Two are published, and the
+// tables of different countries follow different ones.
+type Junction uint8
+
+// The junction formulas.
+const (
+	// ByProducer is the formula behind the tables of the European producers,
+	// TorsionProducer, at most 1.075 times the other one.
+	ByProducer Junction = iota
+	// ByElDarwishJohnston is the formula behind the UK tables,
+	// TorsionElDarwishJohnston.
+	ByElDarwishJohnston
+)
+
 // Shape is the geometry of a cross-section as it stands on paper: the web
 // vertical, the flanges horizontal, x to the right and y up. All lengths are
 // in metres. Fields that a kind does not use are zero.
@@ -40,11 +56,11 @@ type Shape struct {
 	Kind Kind
 	Made Made
 
-	Depth  float64 // overall depth h, along y (Tube, Bar, ISection, Channel, Tee, Angle: vertical leg)
+	Depth  float64 // overall depth h, along y (Tube, Ellipse, Bar, ISection, Channel, Tee, Angle: vertical leg)
 	Width  float64 // overall width b, along x (flange width; Angle: horizontal leg)
 	Web    float64 // web or stem thickness t_w
 	Flange float64 // flange thickness t_f; for a taper flange the thickness at TaperAt
-	Wall   float64 // wall thickness t (Tube, Pipe, Angle)
+	Wall   float64 // wall thickness t (Tube, Pipe, Ellipse, Angle)
 
 	Diameter float64 // outside diameter (Pipe, Rod)
 
@@ -56,4 +72,8 @@ type Shape struct {
 
 	Taper   float64 // slope of the inner flange face (0.08 for 8 %), 0 for parallel flanges
 	TaperAt float64 // distance from the web's back (Channel) at which Flange is measured
+
+	// Junction says by which formula a rolled ISection's torsion constant is
+	// found; other kinds take no notice of it.
+	Junction Junction
 }

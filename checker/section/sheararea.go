@@ -14,10 +14,14 @@ import "math"
 //	I, channel, tee, along the flanges   the area of the flanges alone
 //	tube                        A h/(b + h) and A b/(b + h)
 //	pipe                        2 A/pi
+//	ellipse                     2 (h - t) A/U and 2 (b - t) A/U, U the mid-line's length
 //	bar, rod                    A
 //
 // The clause has no line for an angle: the area of its shorter leg is taken for
-// both directions.
+// both directions. Nor has it one for an elliptical hollow section: what its wall
+// of the mean thickness A/U projects onto the direction of the force is taken,
+// which for a circle is the clause's 2 A/pi. Published tests of such sections use
+// the full thickness t (from memory), 3 % more at 2 : 1.
 func (s Shape) shearAreas(a float64) (alongY, alongX float64) {
 	h, b, tw, tf, r := s.Depth, s.Width, s.Web, s.Flange, s.Root
 	rolled := s.Made == Rolled || s.Root > 0 || s.Taper > 0
@@ -26,6 +30,10 @@ func (s Shape) shearAreas(a float64) (alongY, alongX float64) {
 		return a * h / (b + h), a * b / (b + h)
 	case Pipe:
 		return 2 * a / math.Pi, 2 * a / math.Pi
+	case Ellipse:
+		p, q := h-s.Wall, b-s.Wall
+		mean := a / ellipsePerimeter(p/2, q/2)
+		return 2 * p * mean, 2 * q * mean
 	case ISection, Channel:
 		alongY = (h - 2*tf) * tw
 		if rolled {

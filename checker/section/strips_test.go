@@ -37,6 +37,17 @@ func chords(s Shape, x float64) []interval {
 			return []interval{{r - y, r - z}, {r + z, r + y}}
 		}
 		return []interval{{r - y, r + y}}
+	case Ellipse:
+		height := func(half, a float64) float64 { // of half an ellipse with the half axes a along x and half
+			u := (x - b/2) / a
+			return half * math.Sqrt(math.Max(0, 1-u*u))
+		}
+		y := height(h/2, b/2)
+		if a := b/2 - t; math.Abs(x-b/2) < a {
+			z := height(h/2-t, a)
+			return []interval{{h/2 - y, h/2 - z}, {h/2 + z, h/2 + y}}
+		}
+		return []interval{{h/2 - y, h/2 + y}}
 	case Tube:
 		low := fillet(s.OuterRadius, math.Min(x, b-x))
 		if x <= t || x >= b-t {
@@ -102,6 +113,8 @@ func panels(s Shape) []float64 {
 		return []float64{0, s.Diameter}
 	case Pipe:
 		return []float64{0, s.Wall, s.Diameter - s.Wall, s.Diameter}
+	case Ellipse:
+		return []float64{0, s.Wall, b - s.Wall, b}
 	case Tube:
 		return ordered(0, s.OuterRadius, s.Wall, s.Wall+s.InnerRadius, b-s.Wall-s.InnerRadius, b-s.Wall, b-s.OuterRadius, b)
 	case ISection, Tee:
@@ -259,6 +272,9 @@ func randomShape(r *rand.Rand) Shape {
 			s = Shape{Kind: Tube, Made: Hot, Depth: h, Width: b, Wall: t, InnerRadius: in, OuterRadius: maybe(in + t*u(0, 1.5))}
 		case Pipe:
 			s = Shape{Kind: Pipe, Made: Cold, Diameter: b, Wall: b * u(0.005, 0.45)}
+		case Ellipse:
+			s.Kind, s.Made = Ellipse, Hot
+			s.Wall = side * side / (2 * math.Max(h, b)) * u(0.01, 0.95)
 		case Bar:
 			s.Kind = Bar
 		case Rod:

@@ -24,10 +24,12 @@ const (
 //	Tube      EN 10210-2 and EN 10219-2, Annexes: t3 h/3 + 2 K Ah, and never
 //	          more than the solid rectangle or the polar second moment, which
 //	          it would be for thick walls with very round corners
+//	Ellipse   EN 10210-2, Annex, with the same bounds
 //	Pipe, Rod the polar second moment, exact
 //	Bar       St Venant's series, exact
-//	ISection  rolled: TorsionProducer, at most 1.075 times
-//	          TorsionElDarwishJohnston; welded: TorsionPlates
+//	ISection  rolled: as Shape.Junction says TorsionProducer, at most 1.075
+//	          times TorsionElDarwishJohnston, or the latter; welded:
+//	          TorsionPlates
 //	Channel, Tee, Angle  rolled: TorsionElDarwishJohnston; welded: TorsionPlates
 //
 // "Rolled" is what was made so, has a root fillet or has a taper. A rolled
@@ -36,6 +38,9 @@ func (s Shape) torsionConstant(polar float64) float64 {
 	switch s.Kind {
 	case Tube:
 		return min(s.torsionTube(), TorsionRectangle(s.Depth, s.Width), polar)
+	case Ellipse:
+		a, b := s.Depth/2, s.Width/2
+		return min(s.torsionEllipse(), math.Pi*a*a*a*b*b*b/(a*a+b*b), polar)
 	case Pipe:
 		r, q := s.Diameter/2, s.Diameter/2-s.Wall
 		return math.Pi / 2 * (r*r + q*q) * (r + q) * s.Wall
@@ -54,7 +59,7 @@ func (s Shape) torsionConstant(polar float64) float64 {
 	if !ok {
 		return plates
 	}
-	if s.Kind == ISection {
+	if s.Kind == ISection && s.Junction != ByElDarwishJohnston {
 		producer := TorsionProducer(s.Depth, s.Width, s.Web, s.Flange, s.Root)
 		formula = math.Min(producer, producerExcessMax*formula)
 	}

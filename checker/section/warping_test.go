@@ -164,6 +164,7 @@ func solidShapes() []struct {
 		{"bar", Shape{Kind: Bar, Depth: 40 * mm, Width: 40 * mm}, 1 * mm},
 		{"flat", Shape{Kind: Bar, Depth: 20 * mm, Width: 100 * mm}, 1 * mm},
 		{"tube", tube(Hot, 100*mm, 60*mm, 8*mm), 0.5 * mm},
+		{"EHS 150x75x6", Shape{Kind: Ellipse, Made: Hot, Depth: 150 * mm, Width: 75 * mm, Wall: 6 * mm}, 0.5 * mm},
 		{"sharp tube", Shape{Kind: Tube, Made: Welded, Depth: 80 * mm, Width: 80 * mm, Wall: 10 * mm}, 1 * mm},
 		{"UPE 200", Shape{Kind: Channel, Made: Rolled, Depth: 200 * mm, Width: 80 * mm, Web: 6 * mm, Flange: 11 * mm, Root: 13 * mm}, 0.5 * mm},
 		{"UPN 200", taperChannel(200*mm, 75*mm, 8.5*mm, 11.5*mm, 11.5*mm, 6*mm), 0.5 * mm},
@@ -203,6 +204,11 @@ func TestTorsionAndWarpingBySolids(t *testing.T) {
 			low, high = -0.08, 0.01
 		case c.s.Kind == Tube: // the closed formula leaves the corners' gain out
 			low = -0.06
+		case c.s.Kind == Ellipse:
+			// The standard's formula counts a wall of even thickness, the solid has
+			// the standard's inside, thinner between the axes: 3 % on ever smaller
+			// cells (5.6 % at 0.25 mm, 4.4 % at 0.125 mm).
+			high = 0.09
 		case c.s.Root > 2*c.s.Flange && c.s.Kind == ISection: // the root's excess is left out
 			low = -0.3
 		case c.s.Kind == ISection: // as the producers publish

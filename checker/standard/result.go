@@ -3,8 +3,11 @@
 package standard
 
 import (
+	"math"
+
 	"kern/checker/derivation"
 	"kern/checker/model"
+	"kern/checker/section"
 	"kern/lang/unit"
 )
 
@@ -86,10 +89,39 @@ type Outcome struct {
 	Value func(symbol string) (unit.Quantity, bool)
 }
 
+// Known gives a value that must be finite and positive, NaN for any other: what
+// depends on it is then undecided. The language refuses such values; this is the
+// last gate before a verdict.
+func Known(v float64) float64 {
+	if v > 0 && !math.IsInf(v, 1) {
+		return v
+	}
+	return math.NaN()
+}
+
+// KnownOrZero is Known for a value that may be zero.
+func KnownOrZero(v float64) float64 {
+	if v == 0 {
+		return 0
+	}
+	return Known(v)
+}
+
 // Overridden gives a number of the standard and whether the basis replaces it.
 func Overridden(basis *model.Basis, name string, standard float64) (float64, bool) {
 	if o, ok := basis.Overrides[name]; ok {
 		return o.Value, true
 	}
 	return standard, false
+}
+
+// Warping is the warping constant that a torsional check may count on, m6. The
+// plates of tees and angles meet in one line and warp across their thickness
+// alone; by common practice that little is left out.
+func Warping(s *model.Section) float64 {
+	switch s.Shape.Kind {
+	case section.Tee, section.Angle:
+		return 0
+	}
+	return s.Iw
 }

@@ -196,11 +196,11 @@ func (c *calc) given() {
 	if !ok {
 		fy = math.NaN()
 	}
-	c.s.Take(symE, m.Material.E, m.Material.Title())
-	c.s.Take(symFy, fy, source)
-	c.s.Take(symA, m.Section.Area, m.Section.Title())
-	c.s.Take(axes[0].i, m.Section.IMajor, m.Section.Title())
-	c.s.Take(axes[1].i, m.Section.IMinor, m.Section.Title())
+	c.s.Take(symE, standard.Known(m.Material.E), m.Material.Title())
+	c.s.Take(symFy, standard.Known(fy), source)
+	c.s.Take(symA, standard.Known(m.Section.Area), m.Section.Title())
+	c.s.Take(axes[0].i, standard.Known(m.Section.IMajor), m.Section.Title())
+	c.s.Take(axes[1].i, standard.Known(m.Section.IMinor), m.Section.Title())
 	for _, o := range []struct {
 		id   derivation.ID
 		name string
@@ -315,9 +315,9 @@ func (c *calc) yield() {
 			return
 		}
 	}
-	c.s.Take(axes[0].w, m.Section.WelMajor, "")
-	c.s.Take(axes[1].w, m.Section.WelMinor, "")
-	best := point{u: math.Inf(-1)}
+	c.s.Take(axes[0].w, standard.Known(m.Section.WelMajor), "")
+	c.s.Take(axes[1].w, standard.Known(m.Section.WelMinor), "")
+	best, over := point{u: math.Inf(-1)}, buckled{}
 	var pieces [2][]action.Piece
 	for k := range c.f.Combinations {
 		amplify := [2]float64{1, 1}
@@ -329,6 +329,9 @@ func (c *calc) yield() {
 			}
 			if bends[a] {
 				amplify[a] = c.amplify(a, k)
+				if r := c.s.At(axes[a].ratio); math.IsNaN(amplify[a]) && r >= 1 && r > over.ratio && !math.IsInf(r, 0) {
+					over = buckled{r, a, k}
+				}
 			}
 		}
 		c.s.Take(axes[0].a, amplify[0], "")
@@ -346,9 +349,13 @@ func (c *calc) yield() {
 	}
 	c.s.Recording(c.record)
 	group(c.record, rule)
+	if over.ratio >= 1 {
+		c.buckles(rule, over)
+		return
+	}
 	for a, b := range bends {
 		if b {
-			c.s.Take(axes[a].w, []float64{m.Section.WelMajor, m.Section.WelMinor}[a], m.Section.Title())
+			c.s.Take(axes[a].w, standard.Known([]float64{m.Section.WelMajor, m.Section.WelMinor}[a]), m.Section.Title())
 			c.amplify(a, best.combination)
 		}
 	}
@@ -358,10 +365,25 @@ func (c *calc) yield() {
 	if check.Verdict == standard.Undecided {
 		check.Why = "a value that the check needs is missing"
 		if (bends[0] || bends[1]) && math.IsNaN(c.s.At(axes[0].a)+c.s.At(axes[1].a)) {
-			check.Why = "the axial force times the factor of safety reaches the critical load: no stress can be given"
 		}
 	}
 	c.out.Checks = append(c.out.Checks, check)
+	c.cover(rule, standard.Checked, "")
+}
+
+// buckled is a combination whose factored axial force reaches the critical load.
+type buckled struct {
+	ratio             float64
+	axis, combination int
+}
+
+// buckles is the check of first yield for a member that buckles before it
+// yields: no stress can be given, and it fails all the same.
+func (c *calc) buckles(rule string, b buckled) {
+	x := &axes[b.axis]
+	c.amplify(b.axis, b.combination)
+	c.out.Checks = append(c.out.Checks, standard.Check{Rule: rule, Clause: "first yield", Combination: b.combination, Demand: c.s.At(symNy) * c.s.At(x.n), Capacity: c.s.At(x.pcr), Dim: unit.Force,
+		Utilisation: b.ratio, Verdict: standard.Fails, Why: "the axial force times the factor of safety reaches the critical load"})
 	c.cover(rule, standard.Checked, "")
 }
 

@@ -80,9 +80,9 @@ func (c *calc) torsion() {
 	c.s.Recording(c.record)
 	group(c.record, rule)
 	title := sec.Title()
-	c.s.Take(symG, c.f.Member.Material.G, c.f.Member.Material.Title())
-	c.s.Take(symIt, sec.It, title)
-	c.s.Take(symIw, sec.Iw, title)
+	c.s.Take(symG, standard.Known(c.f.Member.Material.G), c.f.Member.Material.Title())
+	c.s.Take(symIt, standard.KnownOrZero(sec.It), title)
+	c.s.Take(symIw, standard.KnownOrZero(standard.Warping(sec)), title)
 	offset := 0.0
 	if rule == coupled {
 		offset = math.Hypot(sec.SMajor, sec.SMinor)

@@ -152,9 +152,9 @@ func (c *calc) given() {
 		fy = math.NaN()
 	}
 	title := m.Section.Title()
-	c.s.Take(symE, m.Material.E, m.Material.Title()+", 3.2.6(1)")
-	c.s.Take(symG, m.Material.G, m.Material.Title()+", 3.2.6(1)")
-	c.s.Take(symFy, fy, source)
+	c.s.Take(symE, standard.Known(m.Material.E), m.Material.Title()+", 3.2.6(1)")
+	c.s.Take(symG, standard.Known(m.Material.G), m.Material.Title()+", 3.2.6(1)")
+	c.s.Take(symFy, standard.Known(fy), source)
 	if m.Material.Grade != nil {
 		if basis.TableFy {
 			c.assume("strengths of %s from EN 1993-1-1 Table 3.1", m.Material.Grade.Name)
@@ -176,9 +176,9 @@ func (c *calc) given() {
 		}
 		c.s.Take(g.id, v, source)
 	}
-	c.s.Take(symA, m.Section.Area, title)
-	c.s.Take(axes[0].i, m.Section.IMajor, title)
-	c.s.Take(axes[1].i, m.Section.IMinor, title)
+	c.s.Take(symA, standard.Known(m.Section.Area), title)
+	c.s.Take(axes[0].i, standard.Known(m.Section.IMajor), title)
+	c.s.Take(axes[1].i, standard.Known(m.Section.IMinor), title)
 	c.major, c.minor = curves(m.Section, isS460(m.Material))
 	if m.Section.Shape.Kind == section.Tube && m.Section.Shape.Made == section.Welded {
 		c.assume("welds of the box are not thicker than half its wall (curve b)")
@@ -411,13 +411,13 @@ func (c *calc) torsional() {
 func (c *calc) torsionalResistance(rule string) {
 	sec := c.f.Member.Section
 	title := sec.Title()
-	iw := sec.Iw
+	iw := standard.Warping(sec)
 	if math.IsNaN(iw) {
 		iw = 0
 		c.assume("I_w = 0, as it is not stated")
 	}
-	c.s.Take(symIt, sec.It, title)
-	c.s.Take(symIw, iw, title)
+	c.s.Take(symIt, standard.KnownOrZero(sec.It), title)
+	c.s.Take(symIw, standard.KnownOrZero(iw), title)
 	offset := math.Hypot(sec.SMajor, sec.SMinor)
 	if rule == "torsional-buckling" {
 		offset = 0

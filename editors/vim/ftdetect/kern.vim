@@ -1,0 +1,1 @@
+autocmd BufRead,BufNewFile *.kern set filetype=kern

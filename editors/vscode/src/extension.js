@@ -1,0 +1,106 @@
+'use strict';
+
+const vscode = require('vscode');
+const { LanguageClient, State } = require('vscode-languageclient/node');
+const server = require('./server');
+const working = require('./working');
+
+let client; // undefined while no server was found
+let found = {};
+let output, item;
+
+const states = { [State.Stopped]: 'stopped', [State.Starting]: 'starting', [State.Running]: 'running' };
+
+function state() {
+  return client ? states[client.state] || 'starting' : 'not found';
+}
+
+function showState() {
+  const bad = !client || client.state === State.Stopped;
+  item.text = `kern: ${state()}`;
+  item.detail = found.command ? `${found.command}, from ${found.from}` : found.problem;
+  item.severity = bad ? vscode.LanguageStatusSeverity.Error : vscode.LanguageStatusSeverity.Information;
+  item.busy = Boolean(client) && client.state === State.Starting;
+}
+
+/** settings keeps what is the extension's own from the server, which does not know it. */
+function settings(params, token, next) {
+  const own = (value) => {
+    if (!value || typeof value !== 'object') return value;
+    const { server: _, ...rest } = value;
+    return rest;
+  };
+  return Promise.resolve(next(params, token)).then((values) => (Array.isArray(values) ? values.map(own) : values));
+}
+
+async function start(context) {
+  found = server.find(vscode.workspace.getConfiguration('kern').get('server.path', ''), context.extensionPath, process.env.PATH);
+  if (found.problem) {
+    output.error(found.problem);
+    showState();
+    const answer = await vscode.window.showErrorMessage(`kern: ${found.problem}`, 'Open Settings');
+    if (answer) await vscode.commands.executeCommand('workbench.action.openSettings', 'kern.server.path');
+    return;
+  }
+  output.info(`server: ${found.command}, from ${found.from}`);
+  client = new LanguageClient('kern', 'kern', { command: found.command, args: ['lsp'] }, {
+    documentSelector: [{ language: 'kern', scheme: 'file' }, { language: 'kern', scheme: 'untitled' }],
+    outputChannel: output,
+    middleware: { workspace: { configuration: settings } },
+  });
+  client.onDidChangeState(showState);
+  showState();
+  try {
+    await client.start();
+  } catch (error) {
+    output.error(`the server did not start: ${error.message || error}`);
+    vscode.window.showErrorMessage(`kern: the server did not start: ${error.message || error}`);
+  }
+  showState();
+}
+
+async function stop() {
+  const old = client;
+  client = undefined;
+  if (old) await old.dispose().catch((error) => output.warn(`the server did not stop in order: ${error.message || error}`));
+}
+
+let turn = Promise.resolve(); // starts and stops, one after the other
+
+function restart(context) {
+  turn = turn.then(stop).then(() => start(context));
+  return turn;
+}
+
+async function showStatus() {
+  const info = client && client.initializeResult && client.initializeResult.serverInfo;
+  const lines = [`Server: ${state()}`];
+  if (info) lines.push(`Version: ${info.version || 'unknown'}`);
+  lines.push(found.command ? `Program: ${found.command}, from ${found.from}` : found.problem);
+  const answer = await vscode.window.showInformationMessage(lines.join('. '), 'Restart Server', 'Open Output');
+  if (answer) await vscode.commands.executeCommand(answer === 'Open Output' ? 'kern.openOutput' : 'kern.restartServer');
+}
+
+function activate(context) {
+  output = vscode.window.createOutputChannel('kern', { log: true });
+  item = vscode.languages.createLanguageStatusItem('kern.server', { language: 'kern' });
+  item.name = 'kern';
+  item.command = { command: 'kern.showStatus', title: 'Show Status' };
+  const command = (name, run) => context.subscriptions.push(vscode.commands.registerCommand(name, run));
+  command('kern.restartServer', () => restart(context));
+  command('kern.showStatus', showStatus);
+  command('kern.openOutput', () => output.show(true));
+  command('kern.showWorkingHere', () => vscode.window.activeTextEditor && working.at(vscode.window.activeTextEditor));
+  command(working.command, working.open);
+  context.subscriptions.push(output, item, vscode.workspace.onDidChangeConfiguration((e) => {
+    if (e.affectsConfiguration('kern.server.path')) restart(context);
+  }));
+  // Not waited for: an error message stays open until somebody answers it.
+  turn = start(context);
+}
+
+function deactivate() {
+  return stop();
+}
+
+module.exports = { activate, deactivate };

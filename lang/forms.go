@@ -1,0 +1,138 @@
+package lang
+
+// Context is a place where statements stand.
+type Context string
+
+// The contexts of the language.
+const (
+	InFile     Context = "file"     // between declarations
+	InBasis    Context = "basis"    // in the design basis
+	InLevel    Context = "level"    // in a level's block
+	InMember   Context = "member"   // in a column, strut or tie
+	InMaterial Context = "material" // in a material's block
+	InSection  Context = "section"  // in the block of a shape
+)
+
+// Form is a statement of the language: how it is written and what it says. The
+// forms feed completion, signature help, hovers and the editors' grammars.
+type Form struct {
+	Word    string // the word it begins with
+	In      Context
+	Syntax  []string // capitals stand for what the writer puts in, [ ] for what may be left out
+	Summary string   // one sentence
+	Snippet string   // the statement with placeholders ${1:…} as editors know them
+}
+
+// Forms are the statements of the language, by context.
+var Forms = []Form{
+	{"include", InFile, []string{`include "FILE"`}, "Brings in the declarations of another file of the workspace.", `include "${1:common.kern}"`},
+	{"basis", InFile, []string{`basis { … }`}, "The design basis, once in a calculation.", "basis {\n    standard \"${1:EN 1993-1-1:2005}\"\n    actions  \"${2:EN 1990:2002}\"\n    $0\n}"},
+	{"material", InFile, []string{`material NAME = "GRADE" [per "STANDARD"]`, `material NAME { E = …; fy = …; density = … }`}, "A steel grade, or a material with stated values.", `material ${1:s355} = "${2:S355}"`},
+	{"section", InFile, []string{`section NAME = "DESIGNATION"`, `section NAME = SHAPE { … }`}, "A cross-section: from the catalogue, or a shape with its dimensions.", `section ${1:post} = "${2:HEB 160}"`},
+	{"case", InFile, []string{`case NAME permanent`, `case NAME imposed "CATEGORY"`, `case NAME snow "PLACE"`, `case NAME wind`, `case NAME temperature`}, "A load case and what it is.", "case ${1:G} ${2|permanent,imposed,snow,wind,temperature|}"},
+	{"combination", InFile, []string{`combination NAME = FACTOR CASE + FACTOR CASE …`}, "A sum of cases, checked besides those that the basis makes.", "combination ${1:name} = ${2:1.1} ${3:G}"},
+	{"level", InFile, []string{`level NAME at HEIGHT [{ CASE LOAD; … }]`}, "A height of the building, with the loads on its floor.", "level ${1:name} at ${2:3.6 m}"},
+	{"column", InFile, []string{`column NAME[, NAME …] ["TITLE"] { … }`, `column NAME ["TITLE"] as NAME { … }`}, "A column: what it is made of, how it is held, what it carries.", "column ${1:A1} \"${2:title}\" {\n    section  = ${3:\"HEB 160\"}\n    material = ${4:\"S355\"}\n    height   = ${5:3 m}\n    load ${6:80 kN} at top\n}"},
+	{"strut", InFile, []string{`strut NAME[, NAME …] ["TITLE"] { … }`}, "A member of any slope in compression; its own weight is not counted.", "strut ${1:D1} \"${2:title}\" {\n    section  = ${3:\"CHS 114.3x5\"}\n    material = ${4:\"S355H\"}\n    length   = ${5:3 m}\n    load ${6:40 kN}\n}"},
+	{"tie", InFile, []string{`tie NAME[, NAME …] ["TITLE"] { … }`}, "A member in tension; its own weight is not counted.", "tie ${1:T1} \"${2:title}\" {\n    section  = ${3:\"CHS 114.3x5\"}\n    material = ${4:\"S355H\"}\n    length   = ${5:3 m}\n    load ${6:-40 kN}\n}"},
+
+	{"standard", InBasis, []string{`standard "NAME" [annex "NAME"]`}, "The design standard that members are checked to.", `standard "${1:EN 1993-1-1:2005}"`},
+	{"actions", InBasis, []string{`actions "EN 1990:2002" [eq "6.10"]`}, "The standard that combinations are made by.", `actions "${1:EN 1990:2002}"`},
+	{"show", InBasis, []string{`show UNIT[, UNIT …]`}, "Units that results are shown in.", "show ${1:kN, kNm, mm, MPa}"},
+	{"effective", InBasis, []string{`effective lengths theoretical`, `effective lengths recommended`}, "Effective length factors of ideal ends, or those recommended for design.", "effective lengths ${1|recommended,theoretical|}"},
+	{"selfweight", InBasis, []string{`selfweight on`, `selfweight off`}, "Whether members carry their own weight.", "selfweight ${1|off,on|}"},
+	{"strengths", InBasis, []string{`strengths "product standard"`, `strengths "EN 1993-1-1 Table 3.1"`}, "Where the strength of a grade comes from.", `strengths "${1|product standard,EN 1993-1-1 Table 3.1|}"`},
+	{"amplification", InBasis, []string{`amplification secant`, `amplification simple`}, "How the axial force amplifies moments in elastic theory.", "amplification ${1|secant,simple|}"},
+	{"gamma_M0", InBasis, []string{`gamma_M0 = NUMBER because "REASON"`}, "Replaces the partial factor for cross-sections.", `gamma_M0 = ${1:1.0} because "${2:reason}"`},
+	{"gamma_M1", InBasis, []string{`gamma_M1 = NUMBER because "REASON"`}, "Replaces the partial factor for buckling.", `gamma_M1 = ${1:1.0} because "${2:reason}"`},
+	{"gamma_G_sup", InBasis, []string{`gamma_G_sup = NUMBER because "REASON"`}, "Replaces the factor of unfavourable permanent actions.", `gamma_G_sup = ${1:1.35} because "${2:reason}"`},
+	{"gamma_G_inf", InBasis, []string{`gamma_G_inf = NUMBER because "REASON"`}, "Replaces the factor of favourable permanent actions.", `gamma_G_inf = ${1:1.0} because "${2:reason}"`},
+	{"gamma_Q", InBasis, []string{`gamma_Q = NUMBER because "REASON"`}, "Replaces the factor of variable actions.", `gamma_Q = ${1:1.5} because "${2:reason}"`},
+	{"factor_yield", InBasis, []string{`factor_yield = NUMBER`}, "Factor of safety against first yield, elastic theory.", "factor_yield = ${1:1.5}"},
+	{"factor_buckling", InBasis, []string{`factor_buckling = NUMBER`}, "Factor of safety against buckling, elastic theory.", "factor_buckling = ${1:2.0}"},
+
+	{"section", InMember, []string{`section = NAME`, `section = "DESIGNATION"`, `section = SHAPE { … }`}, "The member's cross-section.", "section = ${1:\"HEB 160\"}"},
+	{"material", InMember, []string{`material = NAME`, `material = "GRADE"`}, "What the member is made of.", "material = ${1:\"S355\"}"},
+	{"height", InMember, []string{`height = LENGTH`}, "The height of the member.", "height = ${1:3 m}"},
+	{"length", InMember, []string{`length = LENGTH`}, "The length of the member.", "length = ${1:3 m}"},
+	{"from", InMember, []string{`from LEVEL to LEVEL`}, "The levels between which the member stands.", "from ${1:ground} to ${2:roof}"},
+	{"base", InMember, []string{`base pinned|fixed|free|guided [about major|minor]`}, "How the lower end is held.", "base ${1|pinned,fixed,free,guided|}"},
+	{"top", InMember, []string{`top pinned|fixed|free|guided [about major|minor]`}, "How the upper end is held.", "top ${1|pinned,fixed,free,guided|}"},
+	{"hold", InMember, []string{`hold major|minor|both|twist at PLACE`}, "A point between the ends that is restrained.", "hold ${1|both,minor,major,twist|} at ${2:height / 2}"},
+	{"effective", InMember, []string{`effective = NUMBER [about major|minor|twist]`}, "The effective length factor, where the calculation knows better than the ends.", "effective = ${1:0.85} about ${2|minor,major,twist|}"},
+	{"load", InMember, []string{
+		`load [CASE] FORCE [at PLACE] [offset LENGTH about AXIS [and LENGTH about AXIS]]`,
+		`load [CASE] FORCE across AXIS at PLACE`,
+		`load [CASE] FORCE/LENGTH about AXIS [from PLACE to PLACE]`,
+		`load [CASE] MOMENT about AXIS [at PLACE]`,
+		`load floor AREA at LEVEL [offset LENGTH about AXIS]`,
+	}, "What the member carries: along it, across it, or turning it.", "load ${1:80 kN} at ${2:top}"},
+	{"limit", InMember, []string{`limit utilisation = NUMBER`, `limit slenderness = NUMBER`, `limit sway = LENGTH`}, "A bound that the calculation sets itself.", "limit ${1|utilisation,slenderness,sway|} = ${2:0.95}"},
+	{"require", InMember, []string{`require RESULT >= VALUE [because "REASON"]`}, "A condition on a result.", "require ${1:N_b_minor} >= ${2:400 kN} because \"${3:reason}\""},
+	{"depart", InMember, []string{`depart RULE because "REASON"`}, "A check that the member is allowed to break, with the reason.", "depart ${1:slenderness} because \"${2:reason}\""},
+	{"selfweight", InMember, []string{`selfweight on`, `selfweight off`}, "Whether this member carries its own weight.", "selfweight ${1|off,on|}"},
+	{"note", InMember, []string{`note "TEXT"`}, "A remark that goes with the results.", `note "${1:text}"`},
+
+	{"E", InMaterial, []string{`E = STRESS`}, "Young's modulus.", "E = ${1:210 GPa}"},
+	{"G", InMaterial, []string{`G = STRESS`}, "Shear modulus; from E and nu when it is not given.", "G = ${1:81 GPa}"},
+	{"nu", InMaterial, []string{`nu = NUMBER`}, "Poisson's ratio; 0.3 when it is not given.", "nu = ${1:0.3}"},
+	{"fy", InMaterial, []string{`fy = STRESS`}, "Yield strength.", "fy = ${1:355 MPa}"},
+	{"fu", InMaterial, []string{`fu = STRESS`}, "Ultimate strength.", "fu = ${1:490 MPa}"},
+	{"density", InMaterial, []string{`density = DENSITY`}, "Mass per volume, for self-weight.", "density = ${1:7850 kg/m3}"},
+
+	{"depth", InSection, []string{`depth = LENGTH`}, "Overall depth; an angle's upright leg.", "depth = ${1:200 mm}"},
+	{"width", InSection, []string{`width = LENGTH`}, "Overall width; an angle's lying leg.", "width = ${1:100 mm}"},
+	{"web", InSection, []string{`web = LENGTH`}, "Thickness of the web or stem.", "web = ${1:8 mm}"},
+	{"flange", InSection, []string{`flange = LENGTH`}, "Thickness of the flange.", "flange = ${1:12 mm}"},
+	{"wall", InSection, []string{`wall = LENGTH`}, "Thickness of a tube's, pipe's or angle's wall.", "wall = ${1:6.3 mm}"},
+	{"outside", InSection, []string{`outside = LENGTH`}, "Outside diameter of a pipe.", "outside = ${1:168.3 mm}"},
+	{"diameter", InSection, []string{`diameter = LENGTH`}, "Diameter of a rod.", "diameter = ${1:50 mm}"},
+	{"root", InSection, []string{`root = LENGTH`}, "Radius of the fillet between web and flange, or legs.", "root = ${1:12 mm}"},
+	{"toe", InSection, []string{`toe = LENGTH`}, "Radius at the free edges.", "toe = ${1:6 mm}"},
+	{"corner", InSection, []string{`corner = LENGTH`}, "Outside radius of a tube's corners.", "corner = ${1:12 mm}"},
+	{"made", InSection, []string{`made = hot|cold|welded|rolled`}, "How the section is made, which decides its buckling curve.", "made = ${1|hot,cold,welded,rolled|}"},
+	{"A", InSection, []string{`A = AREA`}, "Stated area.", "A = ${1:24.1 cm2}"},
+	{"I_major", InSection, []string{`I_major = LENGTH^4`}, "Stated second moment of area about the major axis.", "I_major = ${1:612 cm4}"},
+	{"I_minor", InSection, []string{`I_minor = LENGTH^4`}, "Stated second moment of area about the minor axis.", "I_minor = ${1:201 cm4}"},
+	{"W_major", InSection, []string{`W_major = LENGTH^3`}, "Stated elastic modulus about the major axis.", "W_major = ${1:92 cm3}"},
+	{"W_minor", InSection, []string{`W_minor = LENGTH^3`}, "Stated elastic modulus about the minor axis.", "W_minor = ${1:41 cm3}"},
+	{"Wpl_major", InSection, []string{`Wpl_major = LENGTH^3`}, "Stated plastic modulus about the major axis.", "Wpl_major = ${1:105 cm3}"},
+	{"Wpl_minor", InSection, []string{`Wpl_minor = LENGTH^3`}, "Stated plastic modulus about the minor axis.", "Wpl_minor = ${1:62 cm3}"},
+	{"A_v_major", InSection, []string{`A_v_major = AREA`}, "Stated shear area that goes with bending about the major axis.", "A_v_major = ${1:12 cm2}"},
+	{"A_v_minor", InSection, []string{`A_v_minor = AREA`}, "Stated shear area that goes with bending about the minor axis.", "A_v_minor = ${1:12 cm2}"},
+	{"I_t", InSection, []string{`I_t = LENGTH^4`}, "Stated torsion constant.", "I_t = ${1:9 cm4}"},
+	{"I_w", InSection, []string{`I_w = LENGTH^6`}, "Stated warping constant.", "I_w = ${1:12000 cm6}"},
+	{"thickness", InSection, []string{`thickness = LENGTH`}, "Stated thickness that decides the strength.", "thickness = ${1:8 mm}"},
+	{"class", InSection, []string{`class = 1|2|3`}, "Stated class of the cross-section.", "class = ${1|1,2,3|}"},
+	{"curve", InSection, []string{`curve = a0|a|b|c|d`}, "Stated buckling curve about both axes.", "curve = ${1|c,a0,a,b,d|}"},
+	{"curve_major", InSection, []string{`curve_major = a0|a|b|c|d`}, "Stated buckling curve about the major axis.", "curve_major = ${1|c,a0,a,b,d|}"},
+	{"curve_minor", InSection, []string{`curve_minor = a0|a|b|c|d`}, "Stated buckling curve about the minor axis.", "curve_minor = ${1|c,a0,a,b,d|}"},
+}
+
+// FormsIn are the forms of a context, in order.
+func FormsIn(in Context) []Form {
+	var out []Form
+	for _, f := range Forms {
+		if f.In == in {
+			out = append(out, f)
+		}
+	}
+	return out
+}
+
+// Words explains the other words of the language: those that stand inside
+// statements.
+var Words = map[string]string{
+	"tube": "square or rectangular hollow section", "pipe": "circular hollow section", "bar": "solid rectangle", "rod": "solid round",
+	"isection": "I or H section", "channel": "U section", "tee": "T section", "angle": "L section", "given": "a section whose properties are stated",
+	"pinned": "held in place, free to turn", "fixed": "held in place and against turning", "free": "not held", "guided": "free to move sideways, held against turning",
+	"major": "the section's strong axis", "minor": "the section's weak axis", "both": "both axes", "twist": "turning about the member's own axis",
+	"at": "where it acts", "about": "the axis that it bends about", "across": "across the member, bending it about an axis", "offset": "off the centroid", "and": "also about the other axis",
+	"from": "from a place", "to": "to a place", "top": "the upper end", "as": "like another member, but for what is said here", "per": "by a product standard",
+	"annex": "a set of national values", "eq": "the equation of the combinations", "because": "the reason", "floor": "an area of floor that the member carries",
+	"hot": "hot finished (EN 10210)", "cold": "cold formed (EN 10219)", "welded": "built up by welding", "rolled": "hot rolled",
+	"permanent": "acts always", "imposed": "people, goods, vehicles", "snow": "snow", "wind": "wind", "temperature": "temperature",
+	"on": "counted", "off": "not counted", "lengths": "effective lengths", "theoretical": "of ideal ends", "recommended": "recommended for design",
+	"secant": "the secant formula", "simple": "1/(1 - N/N_cr)", "utilisation": "demand over capacity", "slenderness": "effective length over radius of gyration",
+	"sway": "sideways movement of the top",
+}

@@ -1,0 +1,14 @@
+package lsp
+
+import "golang.org/x/sys/windows"
+
+// alive tells whether a process exists and has not ended.
+func alive(pid int) bool {
+	h, err := windows.OpenProcess(windows.SYNCHRONIZE, false, uint32(pid))
+	if err != nil {
+		return err == windows.ERROR_ACCESS_DENIED
+	}
+	defer windows.CloseHandle(h)
+	event, err := windows.WaitForSingleObject(h, 0)
+	return err != nil || event == uint32(windows.WAIT_TIMEOUT)
+}
