@@ -10,7 +10,6 @@ import (
 	"strconv"
 	"strings"
 	"testing"
-	"unicode/utf8"
 
 	"kern/checker"
 	"kern/checker/standard"
@@ -120,13 +119,9 @@ func checkFiles(files map[string]string) *checker.Report {
 // 1, the second behind the last letter; a span of several lines ends with a
 // line of its own.
 func at(text string, s lang.Span) string {
-	place := func(offset int32) (line, column int) {
-		before := text[:offset]
-		start := strings.LastIndexByte(before, '\n') + 1
-		return strings.Count(before, "\n") + 1, utf8.RuneCountInString(before[start:]) + 1
-	}
-	line, column := place(s.Start)
-	lastLine, lastColumn := place(s.End)
+	lines := lang.NewLines(text)
+	line, column := lines.Position(s.Start)
+	lastLine, lastColumn := lines.Position(s.End)
 	if line != lastLine {
 		return fmt.Sprintf("%d:%d-%d:%d", line, column, lastLine, lastColumn)
 	}

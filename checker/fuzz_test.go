@@ -45,10 +45,10 @@ level roof at 8.10 m { G 0.9 kN/m2; S 0.8 kN/m2 }
 	heights := []string{"3 m", "eaves", "rise + 2 m", "storey", "14 ft 6 in"}
 	for i := 1; i <= 30; i++ {
 		if i%7 == 0 {
-			fmt.Fprintf(&b, "\ncolumn C%d as C%d { height = %d m }\n", i, i-1, 2+i%4)
+			fmt.Fprintf(&b, "\ncolumn C%d as C%d { load Q %d kN; load G 20 kN }\n", i, i-1, 2+i)
 			continue
 		}
-		fmt.Fprintf(&b, "\ncolumn C%d \"Column %d\" {\n    section = %s\n    material = %s\n", i, i, sections[i%4], materials[i%3])
+		fmt.Fprintf(&b, "\ncolumn C%d \"Column %d\" {\n    section = %s\n    material = %s\n", i, i, sections[i%min(4, 1+i%5)], materials[i%3])
 		if i%5 == 0 {
 			b.WriteString("    from ground to roof\n    hold both at gallery\n    load floor 9 m2 at gallery\n    load floor 9 m2 at roof\n")
 		} else {
@@ -167,6 +167,11 @@ func TestBrokenLineBreaksItself(t *testing.T) {
 		soundMembers(t, after)
 		if after.Summary.Failed() {
 			broken++
+		}
+		read := func(name string) (string, error) { return files[name], nil }
+		again := checker.CheckAgain(whole, lang.Load([]string{"a.kern"}, read, whole.Project), nil)
+		if want, got := reported(files, after), reported(files, again); want != got {
+			t.Errorf("round %d: after the edit the report is not that of the text: %s", round, firstDifference(want, got))
 		}
 		count := map[string]int{}
 		for _, d := range whole.Project.Files["a.kern"].Decls {
@@ -356,3 +361,29 @@ func firstDifference(a, b string) string {
 	}
 	return "one is longer"
 }
+
+// TestMutatedArchives breaks a line more of every broken calculation.
+func TestMutatedArchives(t *testing.T) {
+	r := rand.New(rand.NewPCG(5, 6))
+	for _, a := range brokenArchives(t) {
+		for range mutations {
+			if strings.TrimSpace(a.files["a.kern"]) == "" {
+				continue
+			}
+			files := map[string]string{}
+			for name, text := range a.files {
+				files[name] = text
+			}
+			files["a.kern"] = mutated(a.files["a.kern"], r)
+			report := checkFiles(files)
+			spansInside(t, files, report)
+			soundMembers(t, report)
+			if t.Failed() {
+				t.Fatalf("%s, broken further:\n%s", a.name, files["a.kern"])
+			}
+		}
+	}
+}
+
+// mutations is how often each archive is broken further.
+const mutations = 10

@@ -40,8 +40,8 @@ func TestGiants(t *testing.T) {
 		name string
 		text string
 		time time.Duration // of the processor
-		heap uint64 // bytes above those before
-		most int    // diagnostics
+		heap uint64        // bytes above those before
+		most int           // diagnostics
 	}{
 		{"100,000 nested brackets", "x = " + strings.Repeat("(", 100_000) + "1" + strings.Repeat(")", 100_000), 2 * time.Second, 100 << 20, 5},
 		{"100,000 open brackets", "x = " + strings.Repeat("(", 100_000), 2 * time.Second, 100 << 20, 5},
@@ -58,7 +58,7 @@ func TestGiants(t *testing.T) {
 		{"50 MB of what is not UTF-8", strings.Repeat("\xff", 50<<20), 5 * time.Second, 600 << 20, 20},
 		{"50 MB of a comment", "# " + strings.Repeat("=", 50<<20), 5 * time.Second, 600 << 20, 5},
 		{"1,000,000 lines of rubbish", strings.Repeat("%& x\n", 1_000_000), 60 * time.Second, 4 << 30, 1_000_020},
-		{"1,000,000 lines of rubbish in a member", "column B1 {\n" + strings.Repeat("rub 1\n", 1_000_000) + "}", 60 * time.Second, 4 << 30, 1_000_020},
+		{"200,000 lines of rubbish in a member", "column B1 {\n" + strings.Repeat("rub 1\n", 200_000) + "}", 20 * time.Second, 1 << 30, 200_020},
 		{"20,000 values in a chain", chain(20_000), 5 * time.Second, 600 << 20, 20},
 		{"20,000 members in a chain", members(20_000), 20 * time.Second, 2 << 30, 50_000},
 		{"100,000 sections of one name", strings.Repeat("section b = \"HEB 200\"\n", 100_000), 10 * time.Second, 2 << 30, 100_020},

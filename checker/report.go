@@ -137,7 +137,11 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 		r.Missing = append(r.Missing, env.Refused)
 	case m.Weight && math.IsNaN(m.Material.Density):
 		r.Missing = append(r.Missing, "the density of '"+m.Material.Name+"' is not known, so its self-weight is not either: state it, or say selfweight off")
-		r.problems = append(r.problems, lang.Diagnostic{Decl: m.MaterialAt.Decl, Problem: lang.Problem{Rule: "missing-value", Span: m.MaterialAt.Span,
+		at := m.MaterialAt
+		if at.Decl != m.Decl { // a line that is taken over is right where it stands
+			at = lang.Place{Decl: m.Decl, Span: m.NameSpan}
+		}
+		r.problems = append(r.problems, lang.Diagnostic{Decl: at.Decl, Problem: lang.Problem{Rule: "missing-value", Span: at.Span,
 			Message: "the material has no density, which self-weight needs: density = 7850 kg/m3, or selfweight off"}})
 	}
 	if len(r.Missing) > 0 {

@@ -28,7 +28,7 @@ func (s *Server) handler() jsonrpc2.Handler {
 		}
 		ctx, cancel := context.WithCancel(s.ctx)
 		defer cancel()
-		request := &request{wire: wire, cancel: cancel}
+		request := &request{wire: wire, cancel: cancel, params: r.Params()}
 		if r.IsCall() {
 			id := r.ID()
 			running.add(id, request)
@@ -45,7 +45,16 @@ func (s *Server) handler() jsonrpc2.Handler {
 type request struct {
 	wire     context.Context // the library's, for Async alone
 	cancel   context.CancelFunc
+	params   []byte // as they came; they last until release
 	released bool
+}
+
+// paramsOf gives the parameters of a message as they came.
+func paramsOf(ctx context.Context) []byte {
+	if r, ok := ctx.Value(requestKey{}).(*request); ok && !r.released {
+		return r.params
+	}
+	return nil
 }
 
 // requestKey is the context's key for the request.

@@ -5,6 +5,7 @@ import (
 
 	"kern/lang"
 
+	"go.lsp.dev/jsonrpc2"
 	"go.lsp.dev/protocol"
 	"go.lsp.dev/uri"
 )
@@ -33,6 +34,9 @@ func (s *Server) Parsed(ctx context.Context, u uri.URI) (*File, error) {
 }
 
 func (s *Server) file(ctx context.Context, u uri.URI, checked bool) (*File, error) {
+	if u == "" {
+		return nil, jsonrpc2.Errorf(jsonrpc2.InvalidParams, "the request names no document")
+	}
 	s.mu.Lock()
 	d := s.docs[u]
 	var w *workspace

@@ -1,6 +1,7 @@
 package lsp
 
 import (
+	"slices"
 	"strings"
 	"sync"
 
@@ -73,6 +74,14 @@ func (f *files) forget(name string) {
 	f.mu.Lock()
 	defer f.mu.Unlock()
 	delete(f.texts, name)
+}
+
+// saved drops the text of a file that the editor has written, which may be new.
+func (f *files) saved(name string) {
+	f.mu.Lock()
+	defer f.mu.Unlock()
+	delete(f.texts, name)
+	f.stale = f.stale || !slices.Contains(f.list, name)
 }
 
 // suspect has the files looked at again: the list when it may have changed, and

@@ -27,6 +27,8 @@ type guard struct {
 	sound  chan []byte   // messages for the library
 	ended  error         // why there are no more; set before sound is closed
 	closes chan struct{} // closed by Close
+	empty  chan struct{} // closed when the last message has been handed on
+	once   sync.Once
 
 	mu     sync.Mutex
 	change *sync.Cond
@@ -43,7 +45,7 @@ const (
 )
 
 func newGuard(conn io.ReadWriteCloser) *guard {
-	g := &guard{conn: conn, in: bufio.NewReaderSize(conn, 1<<16), idle: true, sound: make(chan []byte, 16), closes: make(chan struct{})}
+	g := &guard{conn: conn, in: bufio.NewReaderSize(conn, 1<<16), idle: true, sound: make(chan []byte, 16), closes: make(chan struct{}), empty: make(chan struct{})}
 	g.change = sync.NewCond(&g.mu)
 	go g.write()
 	go g.read()
@@ -78,6 +80,7 @@ func (g *guard) Read(p []byte) (int, error) {
 		select {
 		case message, ok := <-g.sound:
 			if !ok {
+				g.once.Do(func() { close(g.empty) })
 				return 0, g.ended
 			}
 			g.left = message

@@ -25,6 +25,7 @@ func (s *Server) serve(wire io.ReadWriteCloser) int {
 	s.conn.Go(s.ctx, s.handler())
 	select {
 	case <-s.exit:
+	case <-g.empty: // requests may still wait for something; nobody waits for them
 	case <-s.conn.Done():
 	case <-s.ctx.Done():
 	}

@@ -1,6 +1,7 @@
 package lsp
 
 import (
+	"bytes"
 	"context"
 	"strings"
 	"time"
@@ -32,7 +33,7 @@ func (s *Server) DidOpen(_ context.Context, p *protocol.DidOpenTextDocumentParam
 }
 
 // DidChange applies changes to a text.
-func (s *Server) DidChange(_ context.Context, p *protocol.DidChangeTextDocumentParams) error {
+func (s *Server) DidChange(ctx context.Context, p *protocol.DidChangeTextDocumentParams) error {
 	s.mu.Lock()
 	defer s.mu.Unlock()
 	d := s.docs[p.TextDocument.URI]
@@ -40,7 +41,11 @@ func (s *Server) DidChange(_ context.Context, p *protocol.DidChangeTextDocumentP
 		s.log.warn("a change of %s, which is not open, was left out", p.TextDocument.URI)
 		return nil
 	}
-	next, edits := d.changed(p.TextDocument.Version, p.ContentChanges, s.unit)
+	changes := p.ContentChanges
+	if !readable(paramsOf(ctx), changes) {
+		changes = []protocol.TextDocumentContentChangeEvent{nil}
+	}
+	next, edits := d.changed(p.TextDocument.Version, changes, s.unit)
 	if next.lost && !d.lost {
 		s.log.warn("a change of %s could not be applied: what is said of it waits for its whole text", d.uri)
 	}
@@ -49,6 +54,28 @@ func (s *Server) DidChange(_ context.Context, p *protocol.DidChangeTextDocumentP
 	s.docs[d.uri] = next
 	s.replace(d, next)
 	return nil
+}
+
+// readable tells whether changes were written as the protocol has them. The
+// library is lenient: a change whose range it cannot read is to it a change of
+// the whole text, and what is left out is 0 or "". A key cannot be mistaken for
+// text, as quotes in a text are written with a backslash.
+func readable(raw []byte, changes []protocol.TextDocumentContentChangeEvent) bool {
+	if raw == nil {
+		return true
+	}
+	parts := 0
+	for _, c := range changes {
+		if _, ok := c.(*protocol.TextDocumentContentChangePartial); ok {
+			parts++
+		}
+	}
+	for key, want := range map[string]int{"range": parts, "start": parts, "end": parts, "line": 2 * parts, "character": 2 * parts, "text": len(changes)} {
+		if bytes.Count(raw, []byte(`"`+key+`"`)) != want {
+			return false
+		}
+	}
+	return true
 }
 
 // replace puts a new state of a document into the workspaces that read it.
@@ -91,12 +118,8 @@ func (s *Server) DidSave(_ context.Context, p *protocol.DidSaveTextDocumentParam
 	s.doubt()
 	for _, w := range s.workspaces {
 		if name, ok := w.nameOf(d); ok {
-			w.disk.forget(name)
-			if s.client.Watches {
-				w.again()
-			} else {
-				w.touch()
-			}
+			w.disk.saved(name)
+			w.touch()
 		}
 	}
 	return nil

@@ -145,6 +145,7 @@ func init() {
 	verbs["asked"] = func(s *scene, _ []string) {
 		s.mu.Lock()
 		defer s.mu.Unlock()
+		slices.Sort(s.session.asked) // requests of their own, in no order
 		for _, a := range s.session.asked {
 			s.print("%s\n", a)
 		}

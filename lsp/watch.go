@@ -24,7 +24,7 @@ func (s *Server) DidChangeWatchedFiles(_ context.Context, p *protocol.DidChangeW
 			if !ok {
 				continue
 			}
-			w.disk.forget(name)
+			w.disk.saved(name)
 			if c.Type != protocol.FileChangeTypeChanged || !strings.HasSuffix(name, disk.Extension) {
 				// a folder that came or went says nothing of the files in it
 				w.disk.suspect(true)

@@ -115,6 +115,18 @@ func (x *index) add(e Entry) {
 	}
 }
 
+// Families returns the letters of the families in the order in which All gives
+// them, each once: for completions.
+func Families() []string {
+	var out []string
+	for i := range catalogue().entries {
+		if f := catalogue().entries[i].Family; !slices.Contains(out, f) {
+			out = append(out, f)
+		}
+	}
+	return out
+}
+
 // All returns every section of the tables, by family and then size, hot finished
 // hollow sections before cold formed ones. The slice is the caller's own.
 func All() []Entry { return slices.Clone(catalogue().entries) }

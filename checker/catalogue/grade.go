@@ -31,6 +31,12 @@ type Grade struct {
 	// Recalled tells that the strengths of the product standard were set down
 	// from memory and not read in a copy of its table.
 	Recalled bool
+	// Eurocode is the part of Eurocode 3 whose scope the grade is in, "EN
+	// 1993-1-1" up to S460 and "EN 1993-1-12" above, up to S700.
+	Eurocode string
+	// Flat tells that the product standard is one of flat products alone (plate
+	// and strip), so that no rolled section and no tube is made to it.
+	Flat bool
 
 	table *strengthTable
 }

@@ -34,7 +34,8 @@ var gradeIndex = sync.OnceValue(func() *gradesIndex {
 			x.grades = append(x.grades, Grade{
 				Name: name, Standard: s.standard,
 				E: modulus, G: shearModulus, Density: density,
-				Recalled: s.recalled, table: &table,
+				Recalled: s.recalled, Eurocode: s.eurocode(), Flat: s.standard == "EN 10025-6",
+				table: &table,
 			})
 			for _, standard := range []string{"", s.standard, strings.TrimRight(s.standard, "123456")} {
 				// The last form is that without the part: "EN 10025-".

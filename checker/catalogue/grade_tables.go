@@ -9,6 +9,15 @@ type steelSeries struct {
 	table     strengthTable
 }
 
+// eurocode names the part of Eurocode 3 that covers the grade: EN 1993-1-12
+// extends EN 1993-1-1 from S460 up to S700.
+func (s steelSeries) eurocode() string {
+	if s.table.yield[0].value > 460 {
+		return "EN 1993-1-12"
+	}
+	return "EN 1993-1-1"
+}
+
 // by pairs the upper ends of thickness bands with values.
 func by(upTo []float64, values ...float64) []band {
 	b := make([]band, len(values))

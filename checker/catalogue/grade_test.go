@@ -72,6 +72,35 @@ func TestStrengthOfTheProductStandards(t *testing.T) {
 	}
 }
 
+// A checker by EN 1993-1-1 has to know which grades are beyond it, and that no
+// rolled section is made of plate.
+func TestScopeOfTheGrades(t *testing.T) {
+	beyond, flat := 0, 0
+	for _, g := range Grades() {
+		fy, _, _, _ := g.Strength(0.010)
+		want := "EN 1993-1-1"
+		if fy > 460e6 {
+			want = "EN 1993-1-12"
+			beyond++
+		}
+		if g.Eurocode != want {
+			t.Errorf("%s: %s, want %s", g.Name, g.Eurocode, want)
+		}
+		if _, _, _, ok := g.Table31(0.010); ok && g.Eurocode != "EN 1993-1-1" {
+			t.Errorf("%s is in Table 3.1 of EN 1993-1-1 and beyond it", g.Name)
+		}
+		if g.Flat != (g.Standard == "EN 10025-6") {
+			t.Errorf("%s %s: flat %v", g.Name, g.Standard, g.Flat)
+		}
+		if g.Flat {
+			flat++
+		}
+	}
+	if beyond != 16 || flat != 19 {
+		t.Errorf("%d grades beyond EN 1993-1-1, %d of flat products", beyond, flat)
+	}
+}
+
 func TestStrengthOutOfRange(t *testing.T) {
 	for _, c := range []struct {
 		name, standard string

@@ -7,8 +7,7 @@ package catalogue
 // published says. The mass in the designation is a further check.
 
 // publishedUB: seen are the lines of UK tables to EN 10365 and of a producer's
-// table to BS 4-1 (914x419, 914x305x201 to 289, and 1016x305, whose printed second
-// moments are those of the former dimensions).
+// table to BS 4-1 (914x419 and 914x305x201 to 289).
 // 914x305x238, 271, 345 and 381, 686x254x192, 762x267x220 and 838x292x251 have the
 // second moments of the same shapes in the American tables, converted.
 const publishedUB = `

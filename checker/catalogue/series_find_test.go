@@ -113,6 +113,21 @@ func TestAliasesAreNotShared(t *testing.T) {
 	}
 }
 
+func TestFamilies(t *testing.T) {
+	want := strings.Fields("IPE HEAA HEA HEB HEM HL HD HP UB UC UBP UPN UPE PFC L T SHS RHS CHS EHS")
+	if got := Families(); !slices.Equal(got, want) {
+		t.Errorf("%q", got)
+	}
+	for _, f := range want {
+		if familyWords[f] == "" {
+			t.Errorf("%s has no words for Search", f)
+		}
+		if len(Search(f)) == 0 {
+			t.Errorf("Search(%q) gives nothing", f)
+		}
+	}
+}
+
 // Half of a section has half of its area, but for the fillets' share nothing
 // else in common that could be mistaken.
 func TestTeesAreHalves(t *testing.T) {

@@ -3,9 +3,8 @@ package catalogue
 // ucLines holds the universal columns, in the columns of ubLines.
 //
 // Source: EN 10365 (before it BS 4-1). The twenty lines that the tests mark as
-// seen were read, dimensions and properties; of 152x152x44 and 51 and 203x203x100
-// depth, width and flange too; the rest is from memory. The heavy ones
-// from 356x406x509 on are the dimensions of HD 400 but for the root radius.
+// seen were read, dimensions and properties; the rest is from memory. The heavy
+// ones from 356x406x677 on have the dimensions of HD 400 but for the root radius.
 const ucLines = `
 152x152x23 152.4 152.2 5.8 6.8 7.6
 152x152x30 157.6 152.9 6.5 9.4 7.6

@@ -102,7 +102,7 @@ func loadMismatch(r *reader, e *lang.Expr, q unit.Quantity) lang.Problem {
 func (w *memberReader) loadCase(r *reader, l *Load) bool {
 	e := r.peek()
 	if e != nil && e.Kind == lang.StringExpr && w.env.Names[e.Text] != nil && w.env.Names[e.Text].Kind == CaseName {
-		r.problem(unquoted(e, "a load case"))
+		r.problem(unquoted(e, "a load case of the calculation"))
 		return false
 	}
 	if e != nil && e.Kind == lang.BinaryExpr && (e.Op == '-' || e.Op == '+') && e.Args[0].Kind == lang.NameExpr {

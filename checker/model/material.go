@@ -57,7 +57,7 @@ func readGrade(r *reader, m *Material) bool {
 	}
 	g, ok := catalogue.FindGrade(grade, standard)
 	if n := r.env.Names[e.Text]; !ok && n != nil && n.Kind == MaterialName {
-		r.problem(unquoted(e, "a material"))
+		r.problem(unquoted(e, "a material of the calculation"))
 		return false
 	}
 	if !ok {

@@ -74,13 +74,18 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules) []*
 		m.Missing = append(m.Missing, "its block has an error")
 	}
 	var out []*Member
+	owns := func(e *lang.Expr) bool {
+		n := env.Names[e.Text]
+		return n != nil && n.Place == lang.Place{Decl: d, Span: e.Span}
+	}
+	for _, e := range names {
+		if !owns(e) { // the first to give a name keeps it
+			m.Missing = append(m.Missing, "the name '"+clip(e.Text)+"' in its first line is given already")
+		}
+	}
 	for i, e := range names {
 		c := *m
 		c.Name, c.NameSpan = e.Text, e.Span
-		if n := env.Names[e.Text]; n == nil || n.Place != (lang.Place{Decl: d, Span: e.Span}) {
-			// the first one keeps the name; this one is told apart by its place
-			c.Missing = append(slices.Clone(m.Missing), "its name stands for something else")
-		}
 		if i > 0 {
 			c.Problems = nil // said once
 		}
@@ -99,12 +104,14 @@ func nil2(m *Member) []*Member {
 }
 
 type memberReader struct {
-	env   *Env
-	m     *Member
-	known DepartureRules
-	first map[string]declared // the first statement of each word that may stand once
-	said  map[string]bool     // the words of all statements, with an error or not
-	chain []*lang.Stmt        // the members that it is "as", nearest first
+	env       *Env
+	m         *Member
+	known     DepartureRules
+	first     map[string]declared // the first statement of each word that may stand once
+	said      map[string]bool     // the words of all statements, with an error or not
+	chain     []*lang.Stmt        // the members that it is "as", nearest first
+	asSpan    lang.Span           // the name behind "as"
+	ownHeight bool                // the member says its height itself, though it is "as" another
 	// headless is set when the first line could not be read: what the member
 	// lacks cannot be told then.
 	headless bool
@@ -114,8 +121,26 @@ func (w *memberReader) reader(d *lang.Decl, s *lang.Stmt) *reader {
 	return &reader{env: w.env, decl: d, stmt: s, args: s.Args, names: w.lookup, failed: s.Broken,
 		report: func(diag lang.Diagnostic) {
 			diag.Member = ""
+			if diag.Decl != w.m.Decl {
+				var news bool
+				if diag, news = w.takenOver(diag); !news {
+					return
+				}
+			}
 			w.m.Problems = append(w.m.Problems, diag)
 		}}
+}
+
+// takenOver moves a problem of a line that the member takes over to where it
+// says so: the line is right where it stands. It is false when the line's own
+// member has the same problem and reports it.
+func (w *memberReader) takenOver(d lang.Diagnostic) (lang.Diagnostic, bool) {
+	if !w.ownHeight || d.Rule != "level-without-levels" && d.Rule != "outside-the-member" {
+		return d, false
+	}
+	p := lang.Problem{Rule: d.Rule, Span: w.asSpan, Message: "a line that is taken over does not fit: " + d.Message,
+		Related: []lang.Related{{Place: lang.Place{Decl: d.Decl, Span: d.Span}, Message: "the line"}}}
+	return lang.Diagnostic{Decl: w.m.Decl, Problem: p}, true
 }
 
 // lookup finds names in the member's block: its own height, then those of the
@@ -167,6 +192,9 @@ func (w *memberReader) inherited(r *reader, s *lang.Stmt, depth int) []declared 
 		r.fail("defined-by-itself", e.Span, "more than %d members lean on one another in a row", maxLikeness)
 	default:
 		w.chain = append(w.chain, n.Stmt)
+		if depth == 0 {
+			w.asSpan, w.ownHeight = e.Span, said["height"]
+		}
 		w.m.Uses = append(w.m.Uses, n)
 		if w.m.As == nil {
 			w.m.As = n.Place.Decl

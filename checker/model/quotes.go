@@ -8,7 +8,7 @@ import (
 // unquoted is the problem of a name of the calculation that stands in quotes,
 // which name the outside world.
 func unquoted(e *lang.Expr, what string) lang.Problem {
-	return lang.Problem{Rule: "wrong-form", Span: e.Span, Message: what + " of the calculation is named without quotes: " + e.Text,
+	return lang.Problem{Rule: "wrong-form", Span: e.Span, Message: what + " is named without quotes: " + e.Text,
 		Fixes: []lang.Fix{lang.Replace("Remove the quotes", false, e.Span, e.Text)}}
 }
 

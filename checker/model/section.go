@@ -92,7 +92,7 @@ var rolled sync.Map // designation -> *section.Properties
 func fromCatalogue(r *reader, e *lang.Expr, s *Section) bool {
 	entry, ok := catalogue.Find(e.Text)
 	if n := r.env.Names[e.Text]; !ok && n != nil && n.Kind == SectionName {
-		r.problem(unquoted(e, "a section"))
+		r.problem(unquoted(e, "a section of the calculation"))
 		return false
 	}
 	if !ok {

@@ -23,7 +23,7 @@ func catalogueCommand() *cobra.Command {
 			"from nominal dimensions, root fillets counted.",
 		Example: "  kern catalogue HEB\n  kern catalogue \"SHS 100x100x5\"\n  kern catalogue S355",
 		ValidArgsFunction: func(*cobra.Command, []string, string) ([]string, cobra.ShellCompDirective) {
-			return []string{"IPE", "HEA", "HEB", "HEM", "UPN", "UPE", "SHS", "RHS", "CHS", "S235", "S275", "S355", "S460"}, cobra.ShellCompDirectiveNoFileComp
+			return append(catalogue.Families(), "S235", "S275", "S355", "S460"), cobra.ShellCompDirectiveNoFileComp
 		},
 		RunE: func(c *cobra.Command, args []string) error {
 			out := c.OutOrStdout()
@@ -79,6 +79,9 @@ func printSection(w io.Writer, e catalogue.Entry) error {
 		return fmt.Errorf("%s: %w", e.Designation, err)
 	}
 	fmt.Fprintf(w, "%s, %s, %s\n", e.Designation, e.Product, e.Standard)
+	if e.Torsion != "" {
+		fmt.Fprintf(w, "I_t by %s\n", e.Torsion)
+	}
 	if e.Assumed != "" {
 		fmt.Fprintf(w, "taken as %s\n", e.Assumed)
 	}

@@ -109,6 +109,8 @@
      (1 font-lock-keyword-face)
      (2 font-lock-type-face nil t))
     (,(concat kern-mode--start (kern-mode--words kern-mode-properties) "[ \t]*=") 1 font-lock-variable-name-face)
+    (,(concat kern-mode--start "\\_<show\\_>")
+     (,(concat "\\_<" kern-mode--unit) nil nil (0 font-lock-builtin-face)))
     (,(concat kern-mode--start (kern-mode--words kern-mode-statements)) 1 font-lock-keyword-face)
     ("^[ \t]*\\_<\\([[:alpha:]_][[:alnum:]_]*\\)\\_>[ \t]*=" 1 font-lock-variable-name-face)
     (,(concat "\\(" kern-mode--number "\\)\\(?:[ \t]?\\(" kern-mode--unit "\\)\\(?:[^[:alnum:]_]\\|$\\)\\)?")

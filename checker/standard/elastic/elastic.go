@@ -54,6 +54,7 @@ type axis struct {
 	peak                                        derivation.ID
 	ratio, uSlender, limit                      derivation.ID
 	doLe, doPcr, doU, doR, doSlender, doRatio   *derivation.Formula
+	doBuckled                                   *derivation.Formula
 	secant, sine, sway, tension, doUSlender     *derivation.Formula
 }
 
@@ -86,6 +87,7 @@ func newAxis(name string) axis {
 	x.doSlender = f(x.slender, "L_cr_"+name+" / i_"+name, "definition")
 	x.doUSlender = f(x.uSlender, "slenderness_"+name+" / limit_slenderness_"+name, "demand / limit")
 	x.doRatio = f(x.ratio, "factor_yield * N_"+name+" / P_cr_"+name, "definition")
+	x.doBuckled = f(symUy, "n_"+name, "beyond the critical load no stress can be given")
 	x.secant = f(x.a, "1 / cos(pi / 2 * sqrt(n_"+name+"))", "secant formula (equal end moments; an upper bound for others)")
 	// For a line load over the height of a column on two pins the exact factor
 	// grows to 32/pi3/(1 - n) = 1.0321/(1 - n), for a single point load to no more
@@ -382,6 +384,7 @@ type buckled struct {
 func (c *calc) buckles(rule string, b buckled) {
 	x := &axes[b.axis]
 	c.amplify(b.axis, b.combination)
+	c.s.Do(x.doBuckled)
 	c.out.Checks = append(c.out.Checks, standard.Check{Rule: rule, Clause: "first yield", Combination: b.combination, Demand: c.s.At(symNy) * c.s.At(x.n), Capacity: c.s.At(x.pcr), Dim: unit.Force,
 		Utilisation: b.ratio, Verdict: standard.Fails, Why: "the axial force times the factor of safety reaches the critical load"})
 	c.cover(rule, standard.Checked, "")

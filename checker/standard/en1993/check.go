@@ -74,6 +74,7 @@ type calc struct {
 
 	class    int    // 0 when it cannot be determined
 	why      string // then, why
+	beyond   string // why the steel is outside the standard, "" when it is not
 	slender  bool   // class 4: resistances with A_eff
 	major    curve
 	minor    curve
@@ -151,6 +152,9 @@ func (c *calc) given() {
 	if !ok {
 		fy = math.NaN()
 	}
+	if c.beyond = outOfScope(m.Material, fy); c.beyond != "" {
+		fy = math.NaN()
+	}
 	title := m.Section.Title()
 	c.s.Take(symE, standard.Known(m.Material.E), m.Material.Title()+", 3.2.6(1)")
 	c.s.Take(symG, standard.Known(m.Material.G), m.Material.Title()+", 3.2.6(1)")
@@ -206,6 +210,9 @@ func (c *calc) local() {
 	c.slender = c.class == 4
 	if math.IsNaN(c.s.At(symFy)) {
 		c.class, c.why = 0, fmt.Sprintf("the yield strength of %s is not known for this thickness", c.f.Member.Material.Title())
+		if c.beyond != "" {
+			c.why = c.beyond
+		}
 	}
 	switch {
 	case c.class == 0:

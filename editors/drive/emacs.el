@@ -1,0 +1,99 @@
+;;; emacs.el --- Drives Emacs against the built server -*- lexical-binding: t; -*-
+
+;; PROJECT is a copy of testdata with a .git folder, `kern' is on the PATH.
+
+(add-to-list 'load-path (expand-file-name "emacs" (getenv "EDITORS")))
+(require 'eglot)
+(require 'kern-mode)
+(setq eglot-sync-connect 60
+      eglot-connect-timeout 60
+      flymake-no-changes-timeout 0.1
+      create-lockfiles nil
+      make-backup-files nil)
+(add-hook 'kern-mode-hook #'eglot-ensure)
+
+(defvar drive-patience 60 "Seconds; the machine may be busy.")
+
+(defun drive-wait (what condition)
+  "Wait until CONDITION gives a value, and give it; WHAT is for the message."
+  (let ((end (+ (float-time) drive-patience)) value)
+    (while (not (setq value (funcall condition)))
+      (when (> (float-time) end) (error "Waited in vain for %s" what))
+      (accept-process-output nil 0.05)
+      (sit-for 0.01))
+    value))
+
+(defun drive-expect (what got want)
+  "Fail unless GOT is WANT; WHAT is for the message."
+  (unless (equal got want) (error "%s: got %S, want %S" what got want)))
+
+(defun drive-open (file)
+  "Open FILE of the project and have it managed."
+  (switch-to-buffer (find-file-noselect (expand-file-name file (getenv "PROJECT"))))
+  (unless (eglot-managed-p) (eglot--maybe-activate-editing-mode))
+  (drive-wait "the server" (lambda () (eglot-managed-p)))
+  (flymake-start))
+
+(defun drive-diagnostics ()
+  "The diagnostics of the buffer as \"line text\"."
+  (mapcar (lambda (d) (format "%d %s" (line-number-at-pos (flymake-diagnostic-beg d)) (flymake-diagnostic-text d)))
+          (flymake-diagnostics)))
+
+(defun drive-marked (pattern)
+  "Whether a diagnostic of the buffer matches PATTERN."
+  (seq-some (lambda (d) (string-match-p pattern d)) (drive-diagnostics)))
+
+(defun drive-face (text)
+  "The face of the first letter of TEXT, the first one in the buffer."
+  (font-lock-ensure)
+  (save-excursion
+    (goto-char (point-min))
+    (search-forward text)
+    (get-text-property (match-beginning 0) 'face)))
+
+(defvar drive-steps
+  `(("the mode is known and words, names and units are highlighted"
+     ,(lambda ()
+        (drive-open "boathouse/gallery.kern")
+        (drive-expect "mode" major-mode 'kern-mode)
+        (drive-expect "column" (drive-face "column P4") 'font-lock-keyword-face)
+        (drive-expect "P4" (drive-face "P4 ") 'font-lock-type-face)
+        (drive-expect "load" (drive-face "load G") 'font-lock-keyword-face)
+        (drive-expect "kN" (drive-face "kN\n") 'font-lock-builtin-face)))
+    ("indentation is the layout of the formatter"
+     ,(lambda ()
+        (let ((text (buffer-string)))
+          (with-temp-buffer
+            (insert text)
+            (kern-mode)
+            (goto-char (point-min))
+            (while (re-search-forward "^ +" nil t) (replace-match ""))
+            (let ((inhibit-message t)) (indent-region (point-min) (point-max)))
+            (drive-expect "text" (buffer-string) (substring-no-properties text))))))
+    ("failing members are marked"
+     ,(lambda ()
+        (drive-wait "diagnostics" #'flymake-diagnostics)
+        (drive-wait "P4" (lambda () (drive-marked "^16 .*P4 fails flexural-buckling-major")))
+        (drive-expect "P6" (and (drive-marked "^27 .*P6 fails flexural-buckling-minor") t) t)
+        (drive-expect "P1" (drive-marked "P1 fails") nil)))
+    ("a mended unit clears its mark"
+     ,(lambda ()
+        (drive-open "slips/canopy.kern")
+        (drive-wait "the mark of the unit" (lambda () (drive-marked "^18 .*'Kn' is not a unit")))
+        (goto-char (point-min))
+        (search-forward "25 Kn")
+        (replace-match "25 kN" t)
+        (eglot--signal-textDocument/didChange)
+        (drive-wait "the mark to go" (lambda () (not (drive-marked "^18 "))))
+        (drive-expect "another mark" (and (drive-marked "^16 .*needs a unit of length") t) t)))))
+
+(dolist (step drive-steps)
+  (condition-case problem
+      (progn (funcall (cadr step)) (princ (format "ok    %s\n" (car step))))
+    (error
+     (princ (format "FAIL  %s\n%s\n" (car step) (error-message-string problem)))
+     (kill-emacs 1))))
+(set-buffer-modified-p nil)
+(let ((inhibit-message t)) (eglot-shutdown-all))
+(kill-emacs 0)
+;;; emacs.el ends here
