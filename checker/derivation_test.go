@@ -276,7 +276,7 @@ func randomColumns(r *rand.Rand, n int) string {
 	pick := func(list ...string) string { return list[r.Intn(len(list))] }
 	between := func(low, high float64) float64 { return low + (high-low)*r.Float64() }
 	mm := func(low, high float64) string { return fmt.Sprintf("%.1f mm", between(low, high)) }
-	b.WriteString("\nmaterial m1 = \"" + pick("S235", "S275", "S355") + "\"\nmaterial m2 { E = 70 GPa; fy = 160 MPa; density = 2700 kg/m3 }\nmaterial m3 { E = 210 GPa; fy = 690 MPa; density = 7850 kg/m3 }\n")
+	b.WriteString("\nmaterial m1 = \"" + pick("S235", "S275", "S355") + "\"\nmaterial m2 { E = 70 GPa; fy = 160 MPa; density = 2700 kg/m3 }\nmaterial m3 { E = 210 GPa; fy = 450 MPa; density = 7850 kg/m3 }\n")
 	for i := range n {
 		size := between(60, 400)
 		switch r.Intn(10) {
