@@ -1,0 +1,217 @@
+package model
+
+import (
+	"kern/checker/derivation"
+	"kern/lang"
+	"kern/lang/unit"
+)
+
+// basis reads the design basis.
+func (b *builder) basis() {
+	env := b.env
+	env.Basis = Basis{Overrides: map[string]Override{}, Show: derivation.Units{}, SelfWeight: true}
+	for i, d := range b.of("basis") {
+		r := b.reader(d)
+		if i > 0 {
+			p := lang.Problem{Rule: "value-given-twice", Span: d.stmt.Head, Message: "a calculation has one basis", Related: []lang.Related{{Place: env.Basis.Place, Message: "the first one"}}}
+			r.problem(p)
+			continue
+		}
+		env.Basis.Stated = true
+		env.Basis.Place = lang.Place{Decl: d.decl, Span: d.stmt.Head}
+		r.end()
+		if d.stmt.Body == nil {
+			r.fail("wrong-form", d.stmt.Line, "basis opens a block: basis { standard \"…\" }")
+			continue
+		}
+		if hurt(d.decl, d.stmt) {
+			env.refuse("the basis has an error")
+		}
+		seen := map[string]*lang.Stmt{}
+		for _, s := range d.stmt.Body.Stmts {
+			r := b.reader(declared{d.decl, s})
+			if first := seen[s.Word]; first != nil && s.Word != "show" {
+				twice(r, first)
+			} else if !s.Broken {
+				seen[s.Word] = s
+				b.basisStmt(r)
+			}
+			if r.failed && s.Word != "show" {
+				// what it was to say is not known, so no member can be judged by it
+				env.refuse("a line of the basis has an error")
+			}
+		}
+	}
+}
+
+var basisWords = []string{"standard", "actions", "show", "effective", "selfweight", "strengths", "amplification",
+	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "factor_yield", "factor_buckling"}
+
+func (b *builder) basisStmt(r *reader) {
+	basis := &b.env.Basis
+	if value, ok := r.stmt.Assigned(); ok {
+		r.args = value
+		b.override(r)
+		return
+	}
+	switch r.stmt.Word {
+	case "standard":
+		e := r.peek()
+		name, ok := r.text("the design standard")
+		if !ok {
+			return
+		}
+		basis.StandardAt = r.place(e.Span)
+		if !b.standards.Known(name) {
+			p := lang.Problem{Rule: "unknown-standard", Span: e.Span, Message: "'" + name + "' is no standard that kern checks to: " + lang.OrList(b.standards.Names())}
+			for _, n := range closest(name, b.standards.Names(), 2) {
+				p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.Span, `"`+n+`"`))
+			}
+			r.problem(p)
+			return
+		}
+		basis.Standard = name
+		if _, ok := r.word("annex"); ok {
+			e := r.peek()
+			annex, ok := r.text("the annex")
+			if !ok {
+				return
+			}
+			basis.Annex = annex
+			known := b.standards.Annexes(name)
+			found := false
+			for _, k := range known {
+				found = found || k == annex
+			}
+			if !found {
+				basis.Standard = ""
+				r.fail("unknown-annex", e.Span, "the annex '%s' is not known; known is %s. Other national values are given one by one: gamma_M1 = 1.1 because \"…\"", annex, lang.OrList(known))
+				return
+			}
+		}
+	case "actions":
+		e := r.peek()
+		name, ok := r.text("the standard of actions")
+		if !ok {
+			return
+		}
+		if name != "EN 1990:2002" {
+			r.problem(lang.Problem{Rule: "unknown-standard", Span: e.Span, Message: "'" + name + "' is no standard of actions that kern combines to: \"EN 1990:2002\"",
+				Fixes: []lang.Fix{lang.Replace("Write EN 1990:2002", false, e.Span, `"EN 1990:2002"`)}})
+			b.env.refuse("the standard of actions is not known")
+			return
+		}
+		basis.Actions, basis.Equation = name, "6.10"
+		if _, ok := r.word("eq"); ok {
+			e := r.peek()
+			eq, ok := r.text("the equation")
+			if ok && eq != "6.10" {
+				r.fail("unknown-standard", e.Span, "equation '%s' is not known; known is 6.10. Other combinations are written out: combination NAME = 1.1 G + 0.5 W", eq)
+				b.env.refuse("the equation of the combinations is not known")
+			}
+		}
+	case "show":
+		b.show(r)
+		return
+	case "effective":
+		if _, ok := r.wordOf("what to set", "lengths"); ok {
+			w, _ := r.wordOf("the effective lengths", "theoretical", "recommended")
+			basis.Recommended = w == "recommended"
+		}
+	case "selfweight":
+		w, _ := r.wordOf("the setting of self-weight", "on", "off")
+		basis.SelfWeight = w != "off"
+	case "strengths":
+		e := r.peek()
+		if from, ok := r.text("where strengths come from"); ok {
+			switch from {
+			case "product standard":
+			case "EN 1993-1-1 Table 3.1":
+				basis.TableFy = true
+			default:
+				r.fail("unknown-word", e.Span, "strengths come from the \"product standard\" or from \"EN 1993-1-1 Table 3.1\"")
+			}
+		}
+	case "amplification":
+		w, _ := r.wordOf("the amplification", "secant", "simple")
+		basis.Simple = w == "simple"
+	case "":
+		return
+	default:
+		p := lang.Problem{Rule: "unknown-statement", Span: r.stmt.Head, Message: "'" + r.stmt.Word + "' is no part of a basis"}
+		near, sure := nearest(r.stmt.Word, basisWords, 1)
+		for _, n := range near {
+			p.Message += "; did you mean " + n + "?"
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, sure, r.stmt.Head, n))
+		}
+		r.problem(p)
+		return
+	}
+	r.end()
+}
+
+// override reads a number that replaces one of a standard.
+func (b *builder) override(r *reader) {
+	name := r.stmt.Word
+	needs := map[string]bool{"gamma_G_sup": true, "gamma_G_inf": true, "gamma_Q": true}
+	for _, s := range b.standards.Names() {
+		for k, v := range b.standards.Overrides(s) {
+			needs[k] = v
+		}
+	}
+	reason, known := needs[name]
+	if !known {
+		var words []string
+		for w := range needs {
+			words = append(words, w)
+		}
+		sortStrings(words)
+		p := lang.Problem{Rule: "unknown-property", Span: r.stmt.Head, Message: "'" + name + "' is no number that a basis can set: " + lang.OrList(words)}
+		near, sure := nearest(name, words, 3)
+		for _, n := range near {
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, sure && len(near) == 1, r.stmt.Head, n))
+		}
+		r.problem(p)
+		return
+	}
+	v, span, ok := r.quantity(want{what: "a factor", min: 0.1, max: 20})
+	if !ok {
+		return
+	}
+	o := Override{Value: v, Place: r.place(span)}
+	if r.may("because") || reason {
+		if o.Because, ok = r.because(); !ok {
+			return
+		}
+	}
+	if r.end() {
+		b.env.Basis.Overrides[name] = o
+	}
+}
+
+// show reads the units that results are shown in.
+func (b *builder) show(r *reader) {
+	for {
+		e := r.take()
+		if e == nil {
+			r.fail("missing-value", r.stmt.Line, "show names units: show kN, kNm, mm, MPa")
+			return
+		}
+		text := e.Span.Of(r.decl.Text)
+		u, err := unit.Parse(text)
+		if err != nil {
+			p := lang.Problem{Rule: "unknown-unit", Span: e.Span, Message: "'" + clip(text) + "' is not a unit"}
+			for _, n := range unit.Nearest(text, unit.None, true, 3) {
+				p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.Span, n))
+			}
+			r.problem(p)
+			return
+		}
+		b.env.Basis.Show[u.Dim] = u
+		if c := r.peek(); c == nil || c.Kind != lang.CommaExpr {
+			r.end()
+			return
+		}
+		r.take()
+	}
+}

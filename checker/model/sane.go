@@ -1,0 +1,95 @@
+package model
+
+import (
+	"fmt"
+	"math"
+	"sort"
+	"strings"
+
+	"kern/lang"
+	"kern/lang/unit"
+)
+
+// complete looks for what the member lacks and states what is assumed.
+func (w *memberReader) complete() {
+	m := w.m
+	missing := func(fix, what string) {
+		if len(m.Missing) > 0 && (w.headless || w.said[what]) {
+			return // reported where it lies
+		}
+		if len(m.Missing) == 0 {
+			p := lang.Problem{Rule: "missing-value", Span: m.Stmt.Line, Message: "the " + m.Kind.String() + " has no " + what}
+			if m.Stmt.Body != nil && fix != "" {
+				at := lang.Span{Start: m.Stmt.Body.Span.Start + 1, End: m.Stmt.Body.Span.Start + 1}
+				p.Fixes = append(p.Fixes, lang.Replace("Add "+what, false, at, "\n    "+fix))
+			}
+			m.Problems = append(m.Problems, lang.Diagnostic{Decl: m.Decl, Problem: p})
+		}
+		m.Missing = append(m.Missing, "it has no "+what)
+	}
+	if m.Section == nil {
+		missing("section = \"HEB 160\"", "section")
+	}
+	if m.Material == nil {
+		missing("material = \"S355\"", "material")
+	}
+	if math.IsNaN(m.Height) || m.Height == 0 {
+		m.Height = unknown
+		missing("height = 3 m", "height")
+	}
+	sort.SliceStable(m.Holds, func(i, j int) bool { return m.Holds[i].At < m.Holds[j].At })
+	for _, a := range []Axis{Major, Minor} {
+		_, base := w.first["base about "+a.String()]
+		_, top := w.first["top about "+a.String()]
+		switch {
+		case !base && !top:
+			m.Assumed = append(m.Assumed, "pinned at both ends about "+a.String())
+		case !base:
+			m.Assumed = append(m.Assumed, "pinned at the base about "+a.String())
+		case !top:
+			m.Assumed = append(m.Assumed, "pinned at the top about "+a.String())
+		}
+	}
+	if len(m.Assumed) == 2 && strings.TrimSuffix(m.Assumed[0], "major") == strings.TrimSuffix(m.Assumed[1], "minor") {
+		m.Assumed = []string{strings.TrimSuffix(m.Assumed[0], " about major")}
+	}
+	if m.Kind != Column && m.Weight {
+		m.Weight = false
+		m.Assumed = append(m.Assumed, "self-weight of the "+m.Kind.String()+" not counted (its slope is not known)")
+	}
+	if len(m.Loads) == 0 && len(m.Missing) == 0 {
+		m.Problems = append(m.Problems, lang.Diagnostic{Decl: m.Decl, Problem: lang.Problem{Rule: "member-without-load", Severity: lang.Warning, Span: m.NameSpan,
+			Message: "the " + m.Kind.String() + " carries no load"}})
+	}
+	if m.Section != nil && m.Material != nil && len(m.Missing) == 0 {
+		w.sane()
+	}
+}
+
+// sane warns of loads that are out by powers of ten beside what the section
+// can carry at all.
+func (w *memberReader) sane() {
+	m := w.m
+	fy, _, _, ok := m.Material.Strength(m.Section.Thickness, w.env.Basis.TableFy)
+	if !ok && m.Material.Grade == nil || math.IsNaN(m.Section.Area) {
+		return
+	}
+	if !ok {
+		fy = 235e6
+	}
+	squash := m.Section.Area * fy
+	for _, l := range m.Loads {
+		if l.Kind != AxialLoad {
+			continue
+		}
+		v := math.Abs(l.Value)
+		switch {
+		case v > 50*squash:
+			m.Problems = append(m.Problems, lang.Diagnostic{Decl: l.Place.Decl, Problem: lang.Problem{Rule: "implausible-load", Severity: lang.Warning, Span: l.Place.Span,
+				Message: fmt.Sprintf("a load of %s kN is %s times what the section can carry at all: is the unit meant?", unit.Short(v/1e3, 3), unit.Short(v/squash, 2))}})
+		case v < 1e-4*squash && v < 200:
+			m.Problems = append(m.Problems, lang.Diagnostic{Decl: l.Place.Decl, Problem: lang.Problem{Rule: "implausible-load", Severity: lang.Warning, Span: l.Place.Span,
+				Message: fmt.Sprintf("a load of %s N is next to nothing for this section: is the unit meant?", unit.Short(v, 3))}})
+		}
+	}
+}
