@@ -15,6 +15,7 @@ func (b *builder) basis() {
 		if i > 0 {
 			p := lang.Problem{Rule: "value-given-twice", Span: d.stmt.Head, Message: "a calculation has one basis", Related: []lang.Related{{Place: env.Basis.Place, Message: "the first one"}}}
 			r.problem(p)
+			env.refuse("the calculation has more than one basis")
 			continue
 		}
 		env.Basis.Stated = true

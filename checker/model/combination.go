@@ -128,7 +128,7 @@ func (b *builder) sum(r *reader, e *lang.Expr, sign float64, factors []float64) 
 	caseAt := func(name string, span lang.Span) (int, bool) {
 		n, ok := b.env.Names[name]
 		if ok && n.Kind == CaseName && n.Index >= 0 {
-			if b.env.Cases[n.Index].Bad {
+			if b.env.Cases[n.Index].Bad || n.Twice {
 				r.failed = true
 				return 0, false
 			}

@@ -165,6 +165,7 @@ func (b *builder) name(d declared, e *lang.Expr, kind NameKind, index int) bool 
 		return false
 	}
 	if first, twice := b.env.Names[e.Text]; twice {
+		first.Twice = first.Kind != MemberName
 		problem(fmt.Sprintf("'%s' is given twice: it is %s already", e.Text, first.Kind), lang.Related{Place: first.Place, Message: "given here first"})
 		return false
 	}

@@ -29,6 +29,7 @@ func (b *builder) levels() {
 		if d.stmt.Body == nil {
 			continue
 		}
+		seen := map[string]*lang.Stmt{}
 		for _, s := range d.stmt.Body.Stmts {
 			r := b.reader(declared{d.decl, s})
 			c, known := env.Names[s.Word]
@@ -42,6 +43,12 @@ func (b *builder) levels() {
 				l.Bad = true
 				continue
 			}
+			if first := seen[s.Word]; first != nil {
+				twice(r, first)
+				l.Bad = true
+				continue
+			}
+			seen[s.Word] = s
 			v, _, ok := r.quantity(want{what: "a load on a floor", dim: unit.Stress, unit: "kN/m2", max: 1e7, min: 0.1, signed: true, zero: true})
 			if ok && r.end() {
 				l.Pressures = append(l.Pressures, Pressure{Case: c.Index, Value: v, Place: r.place(s.Line)})

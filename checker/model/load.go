@@ -124,7 +124,7 @@ func (w *memberReader) loadCase(r *reader, l *Load) bool {
 			}
 			w.m.Uses = append(w.m.Uses, n)
 			l.Case = n.Index
-			if w.env.Cases[n.Index].Bad {
+			if w.env.Cases[n.Index].Bad || n.Twice {
 				w.m.Missing = append(w.m.Missing, "its load case '"+e.Text+"' has an error")
 				r.problem(*lang.Silent)
 				return false
@@ -305,7 +305,7 @@ func (w *memberReader) floor(r *reader, l Load) {
 	}
 	w.m.Uses = append(w.m.Uses, n)
 	level := w.env.Levels[n.Index]
-	if level.Bad {
+	if level.Bad || n.Twice {
 		w.m.Missing = append(w.m.Missing, "its level '"+level.Name+"' has an error")
 		r.problem(*lang.Silent)
 		return

@@ -31,6 +31,9 @@ func (w *memberReader) section(r *reader, d declared) {
 		}
 		w.m.Uses = append(w.m.Uses, n)
 		w.m.Section = w.env.Sections[n.Index]
+		if n.Twice {
+			w.m.Missing = append(w.m.Missing, "its section '"+e.Text+"' is given twice")
+		}
 		if w.m.Section.Bad {
 			w.m.Missing = append(w.m.Missing, "its section '"+e.Text+"' has an error")
 		}
@@ -86,6 +89,9 @@ func (w *memberReader) material(r *reader) {
 	}
 	w.m.Uses = append(w.m.Uses, n)
 	w.m.Material = w.env.Materials[n.Index]
+	if n.Twice {
+		w.m.Missing = append(w.m.Missing, "its material '"+e.Text+"' is given twice")
+	}
 	if w.m.Material.Bad {
 		w.m.Missing = append(w.m.Missing, "its material '"+e.Text+"' has an error")
 	}

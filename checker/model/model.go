@@ -74,6 +74,9 @@ type Named struct {
 	Stmt  *lang.Stmt
 	Index int // into the Env's list of its kind
 	Bad   bool
+	// Twice is set when something else claims the name: nobody can tell which is
+	// meant, so whoever uses it has no result.
+	Twice bool
 }
 
 // Basis is the design basis.

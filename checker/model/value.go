@@ -58,6 +58,9 @@ var ownWords = map[string]bool{"height": true, "length": true, "top": true, "bas
 
 // lookup finds the value of a name in an expression outside members.
 func (env *Env) lookup(e *lang.Expr) (unit.Quantity, *lang.Problem) {
+	if n := env.Names[e.Text]; n != nil && n.Twice {
+		return unit.Quantity{}, lang.Silent
+	}
 	if d, ok := env.Values.Lookup(e.Text); ok {
 		q, p := env.Values.Get(d, env.lookup)
 		if p != nil {

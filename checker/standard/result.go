@@ -125,3 +125,14 @@ func Warping(s *model.Section) float64 {
 	}
 	return s.Iw
 }
+
+// NoStrength says why the yield strength of a member is not known.
+func NoStrength(m *model.Member) string {
+	switch {
+	case m.Material.Grade == nil:
+		return "the material '" + m.Material.Title() + "' states no yield strength: fy = …"
+	case math.IsNaN(m.Section.Thickness):
+		return "the strength of " + m.Material.Title() + " follows the thickness, which the section does not state: thickness = …"
+	}
+	return "the yield strength of " + m.Material.Title() + " is not known for this thickness"
+}

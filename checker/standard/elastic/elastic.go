@@ -308,7 +308,7 @@ func (c *calc) yield() {
 		c.cover(rule, standard.NotCovered, why)
 	}
 	if math.IsNaN(c.s.At(symFy)) {
-		fail("the yield strength of " + m.Material.Title() + " is not known for this thickness")
+		fail(standard.NoStrength(m))
 		return
 	}
 	for a, b := range bends {

@@ -209,7 +209,7 @@ func (c *calc) local() {
 	c.class, c.why = c.classify()
 	c.slender = c.class == 4
 	if math.IsNaN(c.s.At(symFy)) {
-		c.class, c.why = 0, fmt.Sprintf("the yield strength of %s is not known for this thickness", c.f.Member.Material.Title())
+		c.class, c.why = 0, standard.NoStrength(c.f.Member)
 		if c.beyond != "" {
 			c.why = c.beyond
 		}
