@@ -40,8 +40,9 @@ func (f *File) DeclAt(offset int32) int {
 	return max(0, sort.Search(len(f.Starts), func(i int) bool { return f.Starts[i] > offset })-1)
 }
 
-// At finds what stands at an offset, from which a cursor behind the last letter
-// of a word still sees the word. It is false in a file without declarations.
+// At finds what stands at an offset. A cursor behind the last letter of a word
+// still sees the word, and one behind a statement on its line the statement. It
+// is false in a file without declarations.
 func (f *File) At(offset int32) (At, bool) {
 	i := f.DeclAt(offset)
 	if i < 0 {
@@ -53,7 +54,7 @@ func (f *File) At(offset int32) (At, bool) {
 		// of two statements that meet, the one that begins here counts
 		var found *Stmt
 		for _, s := range stmts {
-			if s.Span.Contains(a.Offset) {
+			if s.reaches(a.Decl.Text, a.Offset) {
 				found = s
 			}
 		}
@@ -62,7 +63,7 @@ func (f *File) At(offset int32) (At, bool) {
 		}
 		a.Stmts = append(a.Stmts, found)
 		a.Inside = false
-		if found.Body == nil || a.Offset <= found.Body.Span.Start || a.Offset >= found.Body.Span.End && closed(a.Decl.Text, found) {
+		if found.Body == nil || a.Offset <= found.Body.Span.Start || closed(a.Decl.Text, found) && a.Offset >= found.Body.Span.End {
 			break
 		}
 		a.Inside = true
@@ -72,6 +73,19 @@ func (f *File) At(offset int32) (At, bool) {
 		a.Exprs = exprsAt(s.Args, a.Offset)
 	}
 	return a, true
+}
+
+// reaches tells whether a place belongs to a statement: it lies in it, or behind
+// it with blanks alone between, as where somebody types on, or behind an opening
+// brace that nothing closes.
+func (s *Stmt) reaches(text string, offset int32) bool {
+	switch {
+	case offset < s.Span.Start:
+		return false
+	case offset <= s.Span.End, s.Body != nil && !closed(text, s):
+		return true
+	}
+	return trimBlank(Span{s.Span.End, min(offset, int32(len(text)))}.Of(text)) == ""
 }
 
 // closed tells whether the block of a statement has its closing brace.

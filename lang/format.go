@@ -27,7 +27,7 @@ func FormatFile(f *File) string {
 	// The layout is made so that it reads the same. It is read again all the
 	// same: a number that changes its meaning because of a blank must not leave
 	// this function.
-	if !sameReading(f, Parse(&FileID{Name: f.Name}, out, nil)) {
+	if !readsAs(f, out) {
 		return f.Text
 	}
 	return out

@@ -29,7 +29,7 @@ func FormatRange(f *File, within Span) []Change {
 			kept = append(kept, c)
 		}
 	}
-	if len(kept) > 0 && !sameReading(f, Parse(&FileID{Name: f.Name}, Apply(f.Text, kept), nil)) {
+	if len(kept) > 0 && !readsAs(f, Apply(f.Text, kept)) {
 		return nil
 	}
 	return kept

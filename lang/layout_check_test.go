@@ -28,6 +28,12 @@ func checkLayout(t testing.TB, text string) {
 	if !sameReading(before, after) {
 		fail("sameReading sees a difference that the test does not")
 	}
+	// the short way must come to the same answer as the long one
+	for _, other := range []string{out, text, strings.Replace(text, " ", "", 1), strings.Replace(text, " ", "  ", 1), strings.Replace(text, "\n", " ", 1)} {
+		if x, y := readsAs(before, other), sameReading(before, Parse(&FileID{}, other, nil)); x != y {
+			fail("%q reads the same: %v in short, %v in full", other, x, y)
+		}
+	}
 	if before.Unreadable != "" {
 		if out != text {
 			fail("an unreadable text was changed")

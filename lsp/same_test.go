@@ -18,12 +18,16 @@ import (
 	"golang.org/x/tools/txtar"
 )
 
+// built is the folder of the command, "" when no test needed it.
+var built string
+
 // program builds the command once.
 var program = sync.OnceValues(func() (string, error) {
 	dir, err := os.MkdirTemp("", "kern")
 	if err != nil {
 		return "", err
 	}
+	built = dir
 	path := filepath.Join(dir, "kern")
 	out, err := exec.Command("go", "build", "-o", path, "kern/cmd/kern").CombinedOutput()
 	if err != nil {
@@ -34,8 +38,8 @@ var program = sync.OnceValues(func() (string, error) {
 
 func TestMain(m *testing.M) {
 	code := m.Run()
-	if path, err := program(); err == nil {
-		os.RemoveAll(filepath.Dir(path))
+	if built != "" {
+		os.RemoveAll(built)
 	}
 	os.Exit(code)
 }

@@ -30,6 +30,8 @@
 (defun drive-open (file)
   "Open FILE of the project and have it managed."
   (switch-to-buffer (find-file-noselect (expand-file-name file (getenv "PROJECT"))))
+  ;; `eglot-ensure' waits for a command to end, which never comes in batch mode.
+  (unless (eglot-current-server) (apply #'eglot--connect (eglot--guess-contact)))
   (unless (eglot-managed-p) (eglot--maybe-activate-editing-mode))
   (drive-wait "the server" (lambda () (eglot-managed-p)))
   (flymake-start))

@@ -1,0 +1,91 @@
+// Drives the VS Code workbench with the packaged extension:
+//   node workbench-steps.mjs WORKBENCH PROJECT VSIX PICTURES
+// PROJECT is a copy of testdata.
+import assert from 'node:assert/strict';
+import { Workbench } from './workbench.mjs';
+
+const [dir, project, vsix, pictures] = process.argv.slice(2);
+const blanks = (s) => s.replaceAll('\u00a0', ' ');
+
+const steps = {
+  async 'the extension colours words, names and units'(w) {
+    await w.open('gallery.kern');
+    const colour = async (text, part) => {
+      const span = w.line(text).locator('span span', { hasText: part }).first();
+      return span.evaluate((e) => getComputedStyle(e).color);
+    };
+    await w.until('colours', async () => (await colour('column P4', 'column')) !== (await colour('section = light', 'light')));
+    const colours = [await colour('column P4', 'column'), await colour('column P4', 'P4'), await colour('column P4', '"Prop below'), await colour('load G 48', '48'), await colour('load G 48', 'load')];
+    for (const c of colours) assert.notEqual(c, await colour('section = light', 'light'), colours.join());
+  },
+
+  async 'the server comes from the extension and says so'(w) {
+    await w.command('kern: Show Status');
+    const toast = await w.there('.notification-list-item-message', 'Server: running');
+    const text = await toast.innerText();
+    assert.match(text, /Version: \d+\.\d+\.\d+/);
+    assert.match(text, /bin\/kern, from the extension/);
+    await w.command('Notifications: Clear All Notifications');
+  },
+
+  async 'failing members are underlined'(w) {
+    await w.there('.squiggly-error');
+    await w.command('View: Toggle Problems');
+    const problem = await w.there('.markers-panel .monaco-list-row', 'P4 fails flexural-buckling-major');
+    assert.match(await problem.innerText(), /kern\s*\(?flexural-buckling-major/);
+    await w.picture('1-problems');
+    await w.command('View: Toggle Problems');
+    await w.picture('2-squiggles');
+  },
+
+  async 'a mended unit clears its mark, and only its'(w) {
+    await w.open('canopy.kern');
+    await w.there('.squiggly-error');
+    const before = await w.until('five marks', async () => (await w.squiggles('error')) >= 5 && w.squiggles('error'));
+    await w.goto(18, 15);
+    await w.page.keyboard.press('Delete');
+    await w.page.keyboard.type('k');
+    await w.until('one mark less', async () => (await w.squiggles('error')) === before - 1);
+    assert.match(blanks(await w.line('load S 25').innerText()), /load S 25 kN/);
+    await w.save();
+    assert.match(w.read('slips/canopy.kern'), /load S 25 kN\n/);
+    await w.picture('3-slips');
+  },
+
+  async 'a setting of the user names another server, and a wrong one is explained'(w) {
+    w.setting('kern.server.path', '/nowhere/kern');
+    await w.there('.notification-list-item-message', "names '/nowhere/kern', which is not a program that can be run");
+    await w.picture('4-no-server');
+    w.setting('kern.server.path', '');
+    await w.command('Notifications: Clear All Notifications');
+    await w.command('kern: Show Status');
+    await w.there('.notification-list-item-message', 'Server: running');
+    await w.command('Notifications: Clear All Notifications');
+  },
+
+  async 'the server restarts, and its output can be opened'(w) {
+    await w.command('kern: Restart Server');
+    await w.open('gallery.kern');
+    await w.there('.squiggly-error');
+    await w.command('kern: Open Output');
+    await w.until('the log', async () => /server: .*bin\/kern, from the extension/.test(blanks(await w.page.locator('.panel .view-lines').innerText())));
+    await w.picture('5-output');
+    await w.command('View: Toggle Output');
+  },
+};
+
+const w = await Workbench.start({ dir, project, vsix, pictures });
+let failed = false;
+for (const [name, run] of Object.entries(steps)) {
+  try {
+    await run(w);
+    console.log(`ok    ${name}`);
+  } catch (error) {
+    console.log(`FAIL  ${name}\n${error.stack ?? error}`);
+    await w.picture('failed').catch(() => {});
+    failed = true;
+    break;
+  }
+}
+await w.stop();
+process.exitCode = failed ? 1 : 0;
