@@ -231,6 +231,14 @@ func TestDerivations(t *testing.T) {
 			d.check(m)
 		}
 	}
+	demo := 0
+	for _, m := range demoReport(t, "../testdata/boathouse").Members {
+		d.check(m)
+		demo++
+	}
+	if demo < 20 {
+		t.Errorf("the demo project has %d members, want 20", demo)
+	}
 	byHand := d.members
 	if byHand < 100 {
 		t.Errorf("%d members made by hand have a derivation, want 100", byHand)

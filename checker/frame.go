@@ -2,8 +2,10 @@ package checker
 
 import (
 	"math"
+	"slices"
 
 	"kern/checker/action"
+	"kern/checker/derivation"
 	"kern/checker/model"
 	"kern/checker/standard"
 )
@@ -55,4 +57,50 @@ func (r *Result) Critical(axis int, s action.Stretch) float64 {
 	i := [...]float64{m.Section.IMajor, m.Section.IMinor}[axis]
 	l := s.Effective()
 	return standard.Known(math.Pi * math.Pi * standard.Known(m.Material.E) * standard.Known(i) / (l * l))
+}
+
+// Symbol finds a symbol of the member's standard by its name or by the trade's
+// word for it ("N_b_minor").
+func (r *Result) Symbol(word string) (derivation.ID, bool) {
+	s := find(r.Standard)
+	if s == nil {
+		return 0, false
+	}
+	if id, ok := s.Symbols().Find(word); ok {
+		return id, true
+	}
+	return s.Symbols().Find(s.Alias(word))
+}
+
+// Rules are the checks that a design standard makes; nil for a name that is no
+// standard.
+func Rules(name string) []string {
+	if s := find(name); s != nil {
+		return s.Rules()
+	}
+	return nil
+}
+
+// Annexes are the sets of national values of a design standard, the default
+// first.
+func Annexes(name string) []string {
+	if s := find(name); s != nil {
+		return s.Annexes()
+	}
+	return nil
+}
+
+// Overrides are the numbers of a design standard that a basis may replace, by
+// name.
+func Overrides(name string) []string {
+	s := find(name)
+	if s == nil {
+		return nil
+	}
+	var out []string
+	for n := range s.Overrides() {
+		out = append(out, n)
+	}
+	slices.Sort(out)
+	return out
 }

@@ -18,13 +18,13 @@ func TestReferenceExamples(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	blocks := regexp.MustCompile("(?ms)^```kern( column)?\n(.*?)^```$").FindAllStringSubmatch(string(page), -1)
+	blocks := regexp.MustCompile("(?ms)^```kern( column| include)?\n(.*?)^```$").FindAllStringSubmatch(string(page), -1)
 	if len(blocks) < 23 {
 		t.Fatalf("only %d examples found", len(blocks))
 	}
 	for i, b := range blocks {
 		text := b[2]
-		if b[1] != "" {
+		if b[1] == " column" {
 			fill := ""
 			for word, line := range map[string]string{"section": "section = \"HEB 160\"", "material": "material = \"S355\"", "height": "height = 3 m", "load": "load 20 kN"} {
 				if !regexp.MustCompile(`(?m)^` + word + `\b`).MatchString(text) {
@@ -37,7 +37,7 @@ func TestReferenceExamples(t *testing.T) {
 			text = "basis {\n    standard \"elastic\"\n}\n" + text
 		}
 		t.Run(fmt.Sprint(i+1), func(t *testing.T) {
-			report := Check(lang.Load([]string{"example.kern"}, func(string) (string, error) { return text, nil }, nil), nil)
+			report := Check(load(map[string]string{"example.kern": text, "common.kern": "eaves = 3 m\n"}), nil)
 			for _, d := range report.Diagnostics {
 				if d.Severity == lang.Error && !strings.HasPrefix(d.Rule, "elastic-buckling") && d.Rule != "first-yield" {
 					t.Errorf("%s: %s\n%s", d.Rule, d.Message, text)

@@ -44,7 +44,8 @@ const steps = {
     const before = await w.until('five marks', async () => (await w.squiggles('error')) >= 5 && w.squiggles('error'));
     await w.goto(18, 15);
     await w.page.keyboard.press('Delete');
-    await w.page.keyboard.type('k');
+    await w.page.keyboard.press('Delete');
+    await w.page.keyboard.type('kN');
     await w.until('one mark less', async () => (await w.squiggles('error')) === before - 1);
     assert.match(blanks(await w.line('load S 25').innerText()), /load S 25 kN/);
     await w.save();

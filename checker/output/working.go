@@ -1,0 +1,362 @@
+package output
+
+import (
+	"math"
+	"strings"
+
+	"kern/checker"
+	"kern/checker/derivation"
+	"kern/checker/model"
+	"kern/checker/standard"
+	"kern/lang"
+	"kern/lang/unit"
+)
+
+// WorkingMarkdown is the working of a member as Markdown: of one check, or, for
+// an empty rule, everything: all checks step by step, what was checked and what
+// not, what is assumed and what the member departs from.
+func WorkingMarkdown(r *checker.Result, rule string) string {
+	p := NewPage(true)
+	Working(p, r, rule)
+	return p.String()
+}
+
+// Working writes what WorkingMarkdown gives to a page.
+func Working(p *Page, r *checker.Result, rule string) {
+	MemberHead(p, r)
+	record := r.Derive()
+	if rule != "" {
+		CheckWorking(p, r, record, rule, 2)
+		return
+	}
+	Checks(p, r)
+	Missing(p, r)
+	if record != nil {
+		if steps := own(record, ""); len(steps) > 0 {
+			p.Head(2, "Values that the checks share")
+			Steps(p, record.Set, r.Units(), steps)
+		}
+		for _, name := range rulesOf(r, record) {
+			if name == "requirement" {
+				continue // its value is a step of another check
+			}
+			p.Head(2, name)
+			verdictOf(p, r, name)
+			Steps(p, record.Set, r.Units(), own(record, name))
+		}
+	}
+	Coverage(p, r)
+	Assumptions(p, r)
+	Departures(p, r)
+	Notes(p, r)
+	p.Text(Words(Caution))
+}
+
+// CheckWorking writes the working of one check below a heading of the given
+// level: every value that it rests on, each step, and what it comes to.
+func CheckWorking(p *Page, r *checker.Result, record *derivation.Record, rule string, level int) {
+	p.Head(level, rule)
+	verdictOf(p, r, rule)
+	if record == nil {
+		return
+	}
+	if rule == "requirement" {
+		for _, q := range r.Member.Requires {
+			if symbol, ok := r.Symbol(q.Symbol); ok {
+				Steps(p, record.Set, r.Units(), record.Leading(symbol))
+			}
+		}
+		return
+	}
+	Steps(p, record.Set, r.Units(), record.Of(rule))
+}
+
+// MemberHead says who the member is, what it is made of, and its verdict.
+func MemberHead(p *Page, r *checker.Result) {
+	title := r.Name
+	if r.Title != "" {
+		title += ": " + r.Title
+	}
+	p.Head(1, title)
+	p.Text(VerdictLine(r))
+	var facts []Line
+	fact := func(name, text string) {
+		if text != "" {
+			facts = append(facts, Words(name+": "+text))
+		}
+	}
+	basis := r.Env().Basis
+	text := r.Standard
+	if text != "" && basis.Annex != "" {
+		text += ", annex " + basis.Annex
+	}
+	fact("standard", text)
+	if basis.Actions != "" {
+		fact("actions", basis.Actions+" ("+basis.Equation+")")
+	}
+	m := r.Member
+	if m.Section != nil {
+		fact("section", SectionTitle(m.Section))
+	}
+	if m.Material != nil {
+		fact("steel", MaterialTitle(m.Material))
+	}
+	if m.Height > 0 {
+		fact(map[bool]string{true: "height", false: "length"}[m.Kind == model.Column], r.Units().Show(m.Height, unit.Length, 4))
+	}
+	p.List(facts...)
+}
+
+// VerdictLine is the verdict with what decides it.
+func VerdictLine(r *checker.Result) Line {
+	out := Strong(r.Verdict.String())
+	if !math.IsNaN(r.Utilisation) {
+		out = Join(out, Words(": utilisation "+checker.Ratio(r.Utilisation)+", "+r.Governing))
+		if r.Combination != "" {
+			out = Join(out, Words(" under "+r.Combination))
+		}
+	}
+	return out
+}
+
+// SectionTitle names a section: its designation and product standard, or its name
+// and what it is.
+func SectionTitle(s *model.Section) string {
+	if s.Designation != "" {
+		return s.Designation + ", " + s.Standard
+	}
+	if k := s.Shape.Kind.String(); s.Name != "" && s.Name != k {
+		return s.Name + ", " + lang.Words[k]
+	}
+	return lang.Words[s.Shape.Kind.String()]
+}
+
+// MaterialTitle names a material: the grade and its product standard, or its
+// name.
+func MaterialTitle(m *model.Material) string {
+	if m.Grade != nil {
+		return m.Grade.Name + ", " + m.Grade.Standard
+	}
+	return m.Name + ", stated values"
+}
+
+// Checks writes the table of a member's checks.
+func Checks(p *Page, r *checker.Result) {
+	var rows [][]Line
+	for _, c := range r.Checks {
+		rows = append(rows, []Line{Words(checkName(c)), Words(checker.Ratio(c.Utilisation)), Words(amountText(r.Units(), c.Demand, c.Dim)), Words(amountText(r.Units(), c.Capacity, c.Dim)),
+			Words(verdictWord(c)), Words(clauseOf(c)), Words(r.CombinationName(c))})
+	}
+	p.Table([]string{"check", "utilisation", "demand", "capacity", "verdict", "clause", "under"}, "lrrrlll", rows)
+	var why []Line
+	for _, c := range r.Checks {
+		if c.Verdict == standard.Undecided && c.Why != "" {
+			why = append(why, Words(checkName(c)+": "+c.Why))
+		}
+	}
+	p.List(why...)
+}
+
+func checkName(c standard.Check) string {
+	if c.Rule == "requirement" {
+		return c.Clause // "require N_b_minor"
+	}
+	return c.Rule
+}
+
+func clauseOf(c standard.Check) string {
+	if c.Rule == "requirement" {
+		return ""
+	}
+	return c.Clause
+}
+
+func verdictWord(c standard.Check) string {
+	if c.Departed {
+		return c.Verdict.String() + ", departed from"
+	}
+	return c.Verdict.String()
+}
+
+func amountText(units derivation.Units, v float64, dim unit.Dim) string {
+	if math.IsNaN(v) || math.IsInf(v, 0) {
+		return "–"
+	}
+	return units.Show(v, dim, 4)
+}
+
+// verdictOf writes what a check comes to, in a sentence.
+func verdictOf(p *Page, r *checker.Result, rule string) {
+	for _, c := range r.Checks {
+		if c.Rule == rule {
+			l := Words(r.Sentence(c) + ".")
+			if c.Departed {
+				l = Join(l, Words(" The member departs from this check."))
+			}
+			p.Text(l)
+		}
+	}
+	for _, c := range r.Coverage {
+		if c.Rule == rule && c.Why != "" && c.State != standard.NotCovered {
+			p.Text(Words(upper(c.State.String()) + ": " + c.Why + "."))
+		}
+	}
+}
+
+func upper(s string) string {
+	if s == "" {
+		return s
+	}
+	return strings.ToUpper(s[:1]) + s[1:]
+}
+
+// rulesOf lists the checks that have steps or a row, in the order of the steps.
+func rulesOf(r *checker.Result, record *derivation.Record) []string {
+	var out []string
+	seen := map[string]bool{"": true}
+	add := func(rule string) {
+		if !seen[rule] {
+			seen[rule] = true
+			out = append(out, rule)
+		}
+	}
+	for _, s := range record.Steps {
+		add(s.Group)
+	}
+	for _, c := range r.Checks {
+		add(c.Rule)
+	}
+	return out
+}
+
+// own are the steps of one group alone.
+func own(record *derivation.Record, group string) []derivation.Step {
+	var out []derivation.Step
+	for _, s := range record.Steps {
+		if s.Group == group {
+			out = append(out, s)
+		}
+	}
+	return out
+}
+
+// Steps writes the steps of a derivation: the values that are taken as a table,
+// then what is computed, a step an item.
+func Steps(p *Page, set *derivation.Set, units derivation.Units, steps []derivation.Step) {
+	var rows [][]Line
+	var items []Line
+	for _, s := range steps {
+		switch {
+		case s.Note != "":
+			items = append(items, Words(s.Note))
+		case s.Formula == nil:
+			sym := set.At(s.Symbol)
+			rows = append(rows, []Line{Code(sym.Name), Words(sym.What), Words(Value(units, s.Value, sym.Dim)), Words(s.Clause)})
+		default:
+			items = append(items, StepLine(set, units, s))
+		}
+	}
+	p.Table([]string{"symbol", "is", "value", "from"}, "llrl", rows)
+	p.List(items...)
+}
+
+// StepLine writes a step of a derivation: what it is with its clause, then
+// symbol, formula, formula with the numbers put in, and result with its unit.
+// Put into the language, the numbers give the result.
+func StepLine(set *derivation.Set, units derivation.Units, s derivation.Step) Line {
+	if s.Note != "" {
+		return Words(s.Note)
+	}
+	sym := set.At(s.Symbol)
+	head := sym.What
+	if s.Clause != "" {
+		head += " · " + s.Clause
+	}
+	equation := sym.Name
+	if s.Formula != nil {
+		equation += " = " + s.Formula.Text
+		if numbers := tidy(s.Numbers(set, units, derivation.Digits)); numbers != s.Formula.Text {
+			equation += " = " + numbers
+		}
+	}
+	return Join(Words(head), Break(), Code(equation), Words(" = "), Strong(Value(units, s.Value, sym.Dim)))
+}
+
+// Value writes a value as derivations show it: no more digits than it takes.
+func Value(units derivation.Units, v float64, dim unit.Dim) string {
+	if math.IsNaN(v) || math.IsInf(v, 0) {
+		return "not known"
+	}
+	return tidy(units.Show(v, dim, derivation.Digits))
+}
+
+// tidy takes the zeros off the ends of decimal fractions: 1.0000 is 1.
+func tidy(text string) string {
+	var b strings.Builder
+	for _, t := range lang.Tokens(text) {
+		piece := t.Span().Of(text)
+		if t.Kind == lang.Number && strings.Contains(piece, ".") && !strings.ContainsAny(piece, "eE") {
+			piece = strings.TrimRight(strings.TrimRight(piece, "0"), ".")
+		}
+		b.WriteString(piece)
+	}
+	return b.String()
+}
+
+// Missing says why a member could not be checked at all.
+func Missing(p *Page, r *checker.Result) {
+	if len(r.Missing) == 0 {
+		return
+	}
+	p.Text(Words("It could not be checked:"))
+	p.List(plainLines(r.Missing)...)
+}
+
+// Coverage writes what the standard asks for and what became of it.
+func Coverage(p *Page, r *checker.Result) {
+	if len(r.Coverage) == 0 {
+		return
+	}
+	p.Head(2, "What was checked")
+	var rows [][]Line
+	for _, c := range r.Coverage {
+		rows = append(rows, []Line{Words(c.Rule), Words(c.State.String()), Words(c.Why)})
+	}
+	p.Table([]string{"check", "state", "why"}, "lll", rows)
+}
+
+// Assumptions lists what is assumed.
+func Assumptions(p *Page, r *checker.Result) {
+	if len(r.Assumptions) > 0 {
+		p.Head(2, "Assumptions")
+		p.List(plainLines(r.Assumptions)...)
+	}
+}
+
+// Departures lists the checks that the member may break, with the reasons.
+func Departures(p *Page, r *checker.Result) {
+	var items []Line
+	for _, d := range r.Departures {
+		items = append(items, Words(d.Rule+", because \""+d.Because+"\""))
+	}
+	if len(items) > 0 {
+		p.Head(2, "Departures")
+		p.List(items...)
+	}
+}
+
+// Notes lists the remarks that go with the member.
+func Notes(p *Page, r *checker.Result) {
+	if len(r.Member.Notes) > 0 {
+		p.Head(2, "Notes")
+		p.List(plainLines(r.Member.Notes)...)
+	}
+}
+
+func plainLines(list []string) []Line {
+	out := make([]Line, len(list))
+	for i, s := range list {
+		out[i] = Words(s)
+	}
+	return out
+}
