@@ -1,15 +1,15 @@
 package checker
 
 import (
+	"fmt"
 	"runtime"
+	"runtime/debug"
 	"slices"
-	"sort"
 	"strings"
 	"sync"
 	"sync/atomic"
 
 	"kern/checker/model"
-	"kern/checker/rule"
 	"kern/checker/standard"
 	"kern/checker/standard/elastic"
 	"kern/checker/standard/en1993"
@@ -74,29 +74,71 @@ func Check(project *lang.Project, progress Progress) *Report {
 	return CheckAgain(nil, project, progress)
 }
 
-// job is one declaration of members in one calculation.
+// job is one declaration of members in one calculation. When it has run it is
+// immutable, and later reports take it over.
 type job struct {
-	calculation  *model.Calculation
 	decl         *lang.Decl
 	combinations []model.Combination
 	members      []*model.Member
 	results      []*Result
-	done         bool // taken over from an earlier report
+
+	problems []lang.Diagnostic // of members and results
+	nameless bool              // a member has no name, or problems
+	done     bool
+	uses     []*model.Named // the sections and materials that are used, each once
+	leans    []*model.Named // the members that are leaned on
+	tally    tally
 }
 
-func (j *job) run() {
-	j.members = model.Members(j.calculation.Env, j.decl, departable)
+func (j *job) run(env *model.Env) {
+	j.done = true
+	j.members = model.Members(env, j.decl, departable)
 	for _, m := range j.members {
 		if m.Name != "" {
-			j.results = append(j.results, evaluate(j.calculation.Env, m, j.combinations))
+			j.results = append(j.results, evaluate(env, m, j.combinations))
 		}
+		j.problems = append(j.problems, m.Problems...)
+		j.nameless = j.nameless || m.Name == "" || len(m.Problems) > 0
+		for _, n := range m.Uses {
+			j.use(n)
+		}
+		if len(m.Missing) > 0 {
+			env.MarkNamed(m, j.use)
+		}
+	}
+	for _, r := range j.results {
+		j.problems = append(j.problems, r.problems...)
+		j.tally.count(r)
 	}
 }
 
-// each runs n tasks on all cores.
+// use notes a name that a member uses.
+func (j *job) use(n *model.Named) {
+	list := &j.uses
+	switch n.Kind {
+	case model.SectionName, model.MaterialName:
+	case model.MemberName:
+		list = &j.leans
+	default:
+		return
+	}
+	if !slices.Contains(*list, n) {
+		*list = append(*list, n)
+	}
+}
+
+// each runs n tasks on all cores. A panic in one of them is the caller's, who can
+// recover from it.
 func each(n int, progress Progress, task func(i int)) {
 	var next, done atomic.Int64
+	var once sync.Once
+	fault := ""
 	work := func() {
+		defer func() {
+			if p := recover(); p != nil {
+				once.Do(func() { fault = fmt.Sprintf("%v\n%s", p, debug.Stack()) })
+			}
+		}()
 		for {
 			i := int(next.Add(1)) - 1
 			if i >= n {
@@ -114,148 +156,8 @@ func each(n int, progress Progress, task func(i int)) {
 	}
 	work()
 	wait.Wait()
-}
-
-// gather collects the results in the order of the files.
-func (r *Report) gather() {
-	r.places = places{starts: map[*lang.Decl]place{}}
-	p := r.places
-	var files []string
-	for name := range r.Project.Files {
-		files = append(files, name)
-	}
-	sort.Strings(files)
-	for _, name := range files {
-		f := r.Project.Files[name]
-		for i, d := range f.Decls {
-			p.starts[d] = place{name, f.Starts[i]}
-		}
-	}
-	found := len(r.Project.Problems)
-	for _, f := range r.Project.Files {
-		for _, d := range f.Decls {
-			found += len(d.Problems)
-		}
-	}
-	r.Diagnostics = make([]Diagnostic, 0, found)
-	add := func(d lang.Diagnostic) { r.Diagnostics = append(r.Diagnostics, p.resolve(d)) }
-	for _, name := range files {
-		f := r.Project.Files[name]
-		if f.Unreadable != "" {
-			add(lang.Diagnostic{Decl: f.Decls[0], Problem: lang.Problem{Rule: "not-text", Message: f.Unreadable + "; it was not read"}})
-		}
-		for _, d := range f.Decls {
-			for _, problem := range d.Problems {
-				add(lang.Diagnostic{Decl: d, Problem: problem})
-			}
-		}
-	}
-	for _, d := range r.Project.Problems {
-		add(d)
-	}
-	for _, c := range r.calculations {
-		for _, d := range c.Env.Problems {
-			add(d)
-		}
-	}
-	type row struct {
-		file   string
-		offset int32
-	}
-	seen := map[row]*Result{}
-	for _, j := range r.jobs {
-		for _, m := range j.members {
-			for _, d := range m.Problems {
-				add(d)
-			}
-			j.calculation.Members = append(j.calculation.Members, m)
-		}
-		for _, res := range j.results {
-			for _, d := range res.problems {
-				add(d)
-			}
-			at := p.starts[res.Member.Decl]
-			key := row{at.file, at.start + res.Member.NameSpan.Start}
-			if first := seen[key]; first != nil && first.Verdict == res.Verdict && (first.Utilisation == res.Utilisation || first.Utilisation != first.Utilisation) {
-				continue // a file that two calculations include says the same in both
-			}
-			seen[key] = res
-			r.Members = append(r.Members, res)
-		}
-	}
-	r.unused(add)
-	for i := range r.Diagnostics {
-		if r.Diagnostics[i].Severity == lang.Error {
-			r.Diagnostics[i].Severity = rule.SeverityOf(r.Diagnostics[i].Rule)
-		}
-	}
-	r.Diagnostics = sortDiagnostics(r.Diagnostics)
-	sort.SliceStable(r.Members, func(i, j int) bool {
-		a, b := p.starts[r.Members[i].Member.Decl], p.starts[r.Members[j].Member.Decl]
-		if a.file != b.file {
-			return a.file < b.file
-		}
-		return a.start+r.Members[i].Member.NameSpan.Start < b.start+r.Members[j].Member.NameSpan.Start
-	})
-	r.count()
-}
-
-func (r *Report) count() {
-	s := &r.Summary
-	s.Members = len(r.Members)
-	for _, m := range r.Members {
-		switch m.Verdict {
-		case standard.Passes:
-			s.Passes++
-		case standard.Fails:
-			s.Fails++
-		default:
-			s.Undecided++
-		}
-		s.Departures += len(m.Departures)
-	}
-	for _, d := range r.Diagnostics {
-		switch d.Severity {
-		case lang.Error:
-			s.Errors++
-		case lang.Warning:
-			s.Warnings++
-		}
-	}
-}
-
-// unused warns of sections, materials and values that no calculation uses. A
-// file with definitions alone, that nothing includes, is left in peace, and so
-// is one that was read only because another includes it.
-func (r *Report) unused(add func(lang.Diagnostic)) {
-	used := map[lang.Place]bool{}
-	where := map[lang.Place]*model.Named{}
-	for _, c := range r.calculations {
-		if len(c.Members) == 0 {
-			for _, n := range c.Env.Names {
-				used[n.Place] = true
-			}
-			continue
-		}
-		for _, n := range c.Env.Names {
-			if (n.Kind == model.SectionName || n.Kind == model.MaterialName) && r.Project.Asked[n.Place.Decl.File.Name] && !c.Env.Bad(n) {
-				where[n.Place] = n
-			}
-		}
-		for _, m := range c.Members {
-			for _, n := range m.Uses {
-				used[n.Place] = true
-			}
-			if len(m.Missing) > 0 {
-				c.Env.MarkNamed(m, func(n *model.Named) { used[n.Place] = true })
-			}
-		}
-	}
-	for at, n := range where {
-		if !used[at] {
-			add(lang.Diagnostic{Decl: at.Decl, Problem: lang.Problem{Rule: "unused-definition", Severity: lang.Warning, Span: at.Span, Unused: true,
-				Message: "nothing uses " + map[model.NameKind]string{model.SectionName: "the section", model.MaterialName: "the material"}[n.Kind] + " '" + n.Name + "'"}})
-		}
+	if fault != "" {
+		panic(fault)
 	}
 }
 
@@ -268,16 +170,28 @@ func (r *Report) Place(m *Result) (string, lang.Span) {
 const maxMessage = 1600
 
 // places knows where declarations stand.
-type places struct{ starts map[*lang.Decl]place }
+type places struct{ project *lang.Project }
 
-type place struct {
-	file  string
-	start int32
+// of gives the file of a declaration and where it begins there; false for one
+// that the project does not have.
+func (p places) of(d *lang.Decl) (string, int32, bool) {
+	if d == nil || d.File == nil {
+		return "", 0, false
+	}
+	f := p.project.Files[d.File.Name]
+	if f == nil {
+		return "", 0, false
+	}
+	i := f.Index(d)
+	if i < 0 {
+		return "", 0, false
+	}
+	return f.Name, f.Starts[i], true
 }
 
 func (p places) span(decl *lang.Decl, s lang.Span) (string, lang.Span) {
-	at := p.starts[decl]
-	return at.file, lang.Span{Start: at.start + s.Start, End: at.start + s.End}
+	file, start, _ := p.of(decl)
+	return file, lang.Span{Start: start + s.Start, End: start + s.End}
 }
 
 func (p places) resolve(d lang.Diagnostic) Diagnostic {

@@ -239,6 +239,11 @@ func TestDerivations(t *testing.T) {
 	if demo < 20 {
 		t.Errorf("the demo project has %d members, want 20", demo)
 	}
+	for _, b := range bendingBases {
+		for _, m := range derivedReport(t, b+bendingMembers, true) {
+			d.check(m)
+		}
+	}
 	byHand := d.members
 	if byHand < 100 {
 		t.Errorf("%d members made by hand have a derivation, want 100", byHand)

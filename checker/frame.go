@@ -8,6 +8,7 @@ import (
 	"kern/checker/derivation"
 	"kern/checker/model"
 	"kern/checker/standard"
+	"kern/lang/unit"
 )
 
 // Frame works out again what every standard starts from: stretches between
@@ -103,4 +104,17 @@ func Overrides(name string) []string {
 	}
 	slices.Sort(out)
 	return out
+}
+
+// OwnWeight is the whole weight of the member where it counts, N; 0 where it
+// does not, NaN where it is not known.
+func (r *Result) OwnWeight() float64 {
+	m := r.Member
+	if !m.Weight {
+		return 0
+	}
+	if m.Section == nil || m.Material == nil {
+		return math.NaN()
+	}
+	return m.Material.Density * m.Section.Area * unit.StandardGravity * m.Height
 }

@@ -1,6 +1,8 @@
 package checker
 
 import (
+	"strings"
+
 	"kern/checker/model"
 	"kern/lang"
 )
@@ -72,7 +74,14 @@ func (w *mentions) declaration(s *lang.Stmt) {
 		w.first(s.Args)
 		w.properties(s)
 	case "case":
-		w.first(s.Args)
+		rest := w.first(s.Args)
+		for i, e := range rest {
+			if i > 0 && strings.HasPrefix(rest[i-1].Text, "psi_") {
+				w.value(e)
+			}
+		}
+	case "exclusive":
+		w.values(s.Args)
 	case "level":
 		rest := w.first(s.Args)
 		if len(rest) > 1 && rest[0].Is("at") {
@@ -84,6 +93,9 @@ func (w *mentions) declaration(s *lang.Stmt) {
 		}
 	case "combination":
 		rest := w.first(s.Args)
+		if len(rest) > 0 && rest[0].Kind == lang.NameExpr {
+			rest = rest[1:] // what the combination is for
+		}
 		if len(rest) > 1 && rest[0].Kind == lang.EqualsExpr {
 			for _, e := range rest[1:] {
 				w.sum(e)

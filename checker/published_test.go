@@ -20,10 +20,7 @@ import (
 // Published cases that no test here uses, because kern does not yet make the
 // check:
 //
-//	EU-06, B-06                cross-section with bending (6.2.9.1)
-//	EU-07, L-02, L-03, L-06, L-08  lateral-torsional buckling (6.3.2)
-//	B-01, B-05, EU-16, EU-18   the interaction of bending and compression: only
-//	                           their parts for compression are below
+//	EU-16                      its part in bending, to ENV 1993-1-1
 //	EU-11                      stainless steel, EN 1993-1-4
 //	US-01 to US-29             AISC 360
 //	E-03                       inelastic buckling
@@ -139,7 +136,7 @@ const eurocode31 = "basis { standard \"EN 1993-1-1:2005\"; selfweight off; stren
 const elasticBasis = "basis { standard \"elastic\"; selfweight off }\n"
 
 func publishedCases() []publishedCase {
-	return append(append(eurocodeCases(), tableCases()...), elasticCases()...)
+	return append(append(append(eurocodeCases(), bendingCases()...), tableCases()...), elasticCases()...)
 }
 
 // eurocodeCases are worked examples to EN 1993-1-1:2005.

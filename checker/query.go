@@ -25,11 +25,11 @@ func (r *Report) AllCalculations() []*model.Calculation { return r.calculations 
 // Results gives the results of the members that a declaration describes, in the
 // order of their names. What two calculations say alike stands once.
 func (r *Report) Results(decl *lang.Decl) []*Result {
-	at, ok := r.places.starts[decl]
+	file, start, ok := r.places.of(decl)
 	if !ok {
 		return nil
 	}
-	return r.between(at.file, at.start, at.start+int32(len(decl.Text)))
+	return r.between(file, start, start+int32(len(decl.Text)))
 }
 
 // ResultsIn gives the results of the members of a file, in the order of their
@@ -55,7 +55,7 @@ func (r *Report) between(file string, start, end int32) []*Result {
 // Where gives a place as a span of a file; "" for a declaration that the report
 // does not have.
 func (r *Report) Where(at lang.Place) (file string, span lang.Span) {
-	if _, ok := r.places.starts[at.Decl]; !ok {
+	if _, _, ok := r.places.of(at.Decl); !ok {
 		return "", lang.Span{}
 	}
 	return r.places.span(at.Decl, at.Span)

@@ -23,7 +23,7 @@ type Report struct {
 	Summary     Summary
 
 	calculations []*model.Calculation
-	jobs         []*job
+	work         []work // of each calculation
 	places       places
 }
 
@@ -150,7 +150,7 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 		return r
 	}
 	out := s.Check(standard.NewFrame(env, m, combinations), nil)
-	r.Checks, r.Coverage, r.Assumptions = out.Checks, out.Coverage, out.Assumptions
+	r.Checks, r.Coverage, r.Assumptions = out.Checks, out.Coverage, append(out.Assumptions, env.Assumed...)
 	r.require(s, out)
 	r.depart()
 	r.judge()

@@ -96,3 +96,30 @@ func TestAtAnywhere(t *testing.T) {
 		}
 	}
 }
+
+// TestIndex finds declarations in files that were edited, from wherever they
+// stood before.
+func TestIndex(t *testing.T) {
+	r := rand.New(rand.NewPCG(2, 2))
+	id := &FileID{Name: "a"}
+	f := Parse(id, strings.Repeat("x = 1\n", 50), nil)
+	for range 300 {
+		at := 6 * r.IntN(len(f.Text)/6+1)
+		cut := min(6*r.IntN(20), len(f.Text)-at)
+		next := Parse(id, f.Text[:at]+strings.Repeat(fmt.Sprintf("y = %d\n", r.IntN(9)), r.IntN(20))+f.Text[at+cut:], f)
+		for i, d := range next.Decls {
+			if next.Index(d) != i {
+				t.Fatalf("declaration %d is found at %d", i, next.Index(d))
+			}
+		}
+		for _, d := range f.Decls {
+			if i := next.Index(d); i >= 0 && next.Decls[i] != d {
+				t.Fatalf("another declaration is found")
+			}
+		}
+		if next.Index(&Decl{}) != -1 {
+			t.Fatal("a declaration that the file does not have is found")
+		}
+		f = next
+	}
+}

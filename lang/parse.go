@@ -3,6 +3,7 @@ package lang
 import (
 	"fmt"
 	"runtime"
+	"slices"
 	"sort"
 	"strings"
 	"sync"
@@ -57,7 +58,37 @@ func Parse(id *FileID, text string, prev *File) *File {
 		f.Starts[head+i] = int32(r[0])
 	}
 	f.read(id, head, ranges)
+	f.Flawed = f.numbers(prev, head, tail, func(f *File) []int32 { return f.Flawed }, func(d *Decl) bool { return len(d.Problems) > 0 })
+	f.includes = f.numbers(prev, head, tail, func(f *File) []int32 { return f.includes }, func(d *Decl) bool {
+		return slices.ContainsFunc(d.Stmts, func(s *Stmt) bool { return s.Word == "include" })
+	})
 	return f
+}
+
+// numbers lists the declarations of a kind, of which an earlier file has told
+// those at its head and tail apart.
+func (f *File) numbers(prev *File, head, tail int, of func(*File) []int32, is func(*Decl) bool) []int32 {
+	var out []int32
+	var before []int32
+	if prev != nil {
+		before = of(prev)
+	}
+	for _, i := range before {
+		if int(i) < head {
+			out = append(out, i)
+		}
+	}
+	for i := head; i < len(f.Decls)-tail; i++ {
+		if is(f.Decls[i]) {
+			out = append(out, int32(i))
+		}
+	}
+	for _, i := range before {
+		if from := len(prev.Decls) - tail; int(i) >= from {
+			out = append(out, i+int32(len(f.Decls)-len(prev.Decls)))
+		}
+	}
+	return out
 }
 
 // recut cuts the part of a text that differs from an earlier one into
@@ -136,6 +167,7 @@ func (f *File) read(id *FileID, head int, ranges [][2]int) {
 			for i := first; i < min(first+batch, tail); i++ {
 				r := ranges[i]
 				f.Decls[head+i] = &Decl{File: id, Syntax: parseDecl(text[r[0]:r[1]])}
+				f.Decls[head+i].index.Store(int32(head + i))
 			}
 		}
 	}

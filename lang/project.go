@@ -83,7 +83,8 @@ func Load(names []string, read Read, prev *Project) *Project {
 // inclusions are the include statements of a file with the names they mean.
 func inclusions(f *File) []inclusion {
 	var out []inclusion
-	for _, d := range f.Decls {
+	for _, i := range f.includes {
+		d := f.Decls[i]
 		for _, s := range d.Stmts {
 			if s.Word != "include" {
 				continue

@@ -1,6 +1,10 @@
 package lang
 
-import "kern/lang/unit"
+import (
+	"sync/atomic"
+
+	"kern/lang/unit"
+)
 
 // Source is one file's text under its name. Names are slash-separated paths
 // inside the workspace, or whatever name an editor gives an unsaved text.
@@ -16,6 +20,9 @@ type File struct {
 	Text   string
 	Decls  []*Decl
 	Starts []int32 // where each declaration begins in Text
+	// Flawed are the numbers of the declarations that have problems.
+	Flawed   []int32
+	includes []int32 // those that include a file
 	// Unreadable says why the text was not parsed at all ("" when it was): it is
 	// not text, or too big.
 	Unreadable string
@@ -27,6 +34,7 @@ type File struct {
 type Decl struct {
 	File *FileID
 	*Syntax
+	index atomic.Int32 // where it stood in the file last; see File.Index
 }
 
 // FileID identifies a file across the snapshots of a session.

@@ -16,7 +16,7 @@ func Joins(word string) bool { return joinWords[word] }
 // declaration breaks itself alone.
 var starters = map[string]bool{
 	"include": true, "basis": true, "material": true, "section": true, "case": true, "combination": true,
-	"level": true, "column": true, "strut": true, "tie": true, "project": true, "forces": true,
+	"exclusive": true, "level": true, "column": true, "strut": true, "tie": true, "project": true, "forces": true,
 }
 
 // verbs are the words that begin a statement inside a block.

@@ -29,6 +29,35 @@ type Client struct {
 	ApplyEdit        bool
 	ShowDocument     bool
 	DocumentChanges  bool // takes edits with versions
+
+	Hovers        bool
+	HoverMarkdown bool // shows Markdown in hovers
+	Pictures      bool // shows pictures in Markdown
+	Hints         bool
+	HintTooltips  bool // asks for the tooltip of a hint when it shows it
+	RefreshHints  bool
+	Lenses        bool
+	RefreshLenses bool
+	Commands      bool // asks the server to execute commands
+
+	Definition, DefinitionLinks         bool
+	TypeDefinition, TypeDefinitionLinks bool
+	References, Highlight               bool
+	Rename, PrepareRename               bool
+	RenameFiles                         bool // asks before it renames files
+	Symbols, SymbolTree                 bool // symbols of a document, as a tree
+	WorkspaceSymbols, LazySymbols       bool // symbols of all files, whose ranges may come later
+	Folding, FoldLines                  bool // folds, whole lines alone
+	SelectionRanges                     bool
+	Links, LinkTooltips                 bool
+	Hierarchy                           bool
+	RefreshTokens                       bool
+	Tokens                              *tokenWays // how it wants tokens, nil for not at all
+
+	Actions, PreferredActions         bool // takes code actions, and knows preferred ones
+	LazyActions                       bool // asks for the edit of an action when it is taken
+	Formatting, TypeFormatting        bool
+	RangeFormatting, RangesFormatting bool
 }
 
 func is(b *bool) bool { return b != nil && *b }
@@ -62,6 +91,9 @@ func newClient(p *protocol.InitializeParams) (*Client, error) {
 			}
 		}
 	}
+	c.navigation(caps)
+	c.readings(&caps)
+	c.changing(caps)
 	if w := caps.Workspace; w != nil {
 		c.RefreshDiagnostics = w.Diagnostics != nil && is(w.Diagnostics.RefreshSupport)
 		c.Watches = w.DidChangeWatchedFiles != nil && is(w.DidChangeWatchedFiles.DynamicRegistration)

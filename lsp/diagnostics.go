@@ -91,6 +91,24 @@ func (p printer) diagnostic(d checker.Diagnostic) protocol.Diagnostic {
 	return out
 }
 
+// write writes diagnostics as a JSON array. They are written one by one: the
+// library has written code for one of them, and none for a list.
+func (p printer) write(list []checker.Diagnostic) ([]byte, error) {
+	out := make([]byte, 0, 2+600*len(list))
+	out = append(out, '[')
+	for i, d := range list {
+		if i > 0 {
+			out = append(out, ',')
+		}
+		x := p.diagnostic(d)
+		var err error
+		if out, err = protocol.AppendMarshal(out, &x); err != nil {
+			return nil, err
+		}
+	}
+	return append(out, ']'), nil
+}
+
 // message is what the user reads: what is wrong, then the notes.
 func message(d checker.Diagnostic) string {
 	if len(d.Notes) == 0 {

@@ -11,6 +11,14 @@ var features = []feature{
 	settingsFeature,
 	diagnosticsFeature,
 	rulePagesFeature,
+	hoverFeature,
+	hintsFeature,
+	lensesFeature,
+	commandsFeature,
+	codeActionFeature,
+	formattingFeature,
+	completionFeature,
+	signatureFeature,
 }
 
 var documentsFeature = feature{

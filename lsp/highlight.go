@@ -77,18 +77,16 @@ func highlights(f *File, offset int32) []highlight {
 
 // ownHeights gives the places where a member speaks of its own height.
 func ownHeights(f *File, offset int32) []highlight {
-	_, places, ok := ownHeight(f, offset)
-	if !ok {
+	if _, _, ok := ownHeight(f, offset); !ok {
 		return nil
 	}
 	at, _ := f.Tree.At(offset)
 	var out []highlight
-	for _, p := range places {
-		if file, span := f.report.Where(p); file == f.Name {
-			out = append(out, highlight{span, true})
-		}
-	}
 	for _, s := range at.Stmts[0].Body.Stmts {
+		switch s.Word {
+		case "height", "length", "from":
+			out = append(out, highlight{moved(s.Head, at.Start), true})
+		}
 		for _, a := range s.Args {
 			a.Walk(func(e *lang.Expr) {
 				if e.Is("height") || e.Is("length") {
@@ -97,6 +95,5 @@ func ownHeights(f *File, offset int32) []highlight {
 			})
 		}
 	}
-	slices.SortFunc(out, func(a, b highlight) int { return int(a.span.Start - b.span.Start) })
 	return out
 }

@@ -43,6 +43,9 @@ func claims(d *lang.Decl, span lang.Span) bool {
 // givenNames are the spans of the names that a statement declares.
 func givenNames(s *lang.Stmt) []lang.Span {
 	if _, assigned := s.Assigned(); assigned {
+		if formWords[lang.InFile][s.Word] {
+			return nil // "section = …" between declarations gives no name
+		}
 		return []lang.Span{s.Head}
 	}
 	several := false

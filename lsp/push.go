@@ -91,11 +91,7 @@ func (s *Snapshot) sets() (map[uri.URI]fileSet, time.Time) {
 		}
 		set := fileSet{items: noItems, version: s.Version(name)}
 		if len(now) > 0 {
-			list := make([]protocol.Diagnostic, len(now))
-			for i, x := range now {
-				list[i] = p.diagnostic(x)
-			}
-			raw, err := protocol.Marshal(list)
+			raw, err := p.write(now)
 			if err != nil {
 				s.workspace.server.log.fail("the diagnostics of %s cannot be written: %v", name, err)
 				continue

@@ -52,9 +52,10 @@ type Server struct {
 	workspaces map[string]*workspace
 	exit       chan struct{} // closed by exit or the death of the parent
 
-	pushing sync.Mutex // held while diagnostics are sent
-	shown   map[uri.URI]shownSet
-	refresh refresher
+	pushing  sync.Mutex // held while diagnostics are sent
+	shown    map[uri.URI]shownSet
+	refresh  refresher
+	answered tokenMemory // the semantic tokens that documents were answered with
 }
 
 // stage is how far the session has come.

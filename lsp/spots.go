@@ -2,6 +2,7 @@ package lsp
 
 import (
 	"context"
+	"maps"
 	"slices"
 	"strings"
 
@@ -119,4 +120,9 @@ func allSpots(ctx context.Context, f *File, names []*model.Named, snapshots []*S
 		}
 	}
 	return out, nil
+}
+
+// fileNames are the names of all files of the workspace, in order.
+func (s *Snapshot) fileNames() []string {
+	return slices.Sorted(maps.Keys(s.project.Files))
 }

@@ -42,7 +42,7 @@ func (s *Server) DidChange(ctx context.Context, p *protocol.DidChangeTextDocumen
 		return nil
 	}
 	changes := p.ContentChanges
-	if !readable(paramsOf(ctx), changes) {
+	if !wellFormed(paramsOf(ctx), changes) {
 		changes = []protocol.TextDocumentContentChangeEvent{nil}
 	}
 	next, edits := d.changed(p.TextDocument.Version, changes, s.unit)
@@ -56,11 +56,11 @@ func (s *Server) DidChange(ctx context.Context, p *protocol.DidChangeTextDocumen
 	return nil
 }
 
-// readable tells whether changes were written as the protocol has them. The
+// wellFormed tells whether changes were written as the protocol has them. The
 // library is lenient: a change whose range it cannot read is to it a change of
 // the whole text, and what is left out is 0 or "". A key cannot be mistaken for
 // text, as quotes in a text are written with a backslash.
-func readable(raw []byte, changes []protocol.TextDocumentContentChangeEvent) bool {
+func wellFormed(raw []byte, changes []protocol.TextDocumentContentChangeEvent) bool {
 	if raw == nil {
 		return true
 	}

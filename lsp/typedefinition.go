@@ -95,7 +95,7 @@ func (f *File) sectionsOf(d *lang.Decl, s *lang.Stmt) []target {
 		switch {
 		case m.Stmt != s || m.SectionAt.Decl == nil:
 		case m.Section != nil && m.Section.Name != "" && m.Section.Place.Decl != nil && m.Section.Place != m.SectionAt:
-			out = append(out, f.target(m.Section.Place, f.statement(m.Section.Place)))
+			out = append(out, f.target(m.Section.Place, around(m.Section.Place)))
 		default:
 			out = append(out, f.target(m.SectionAt, m.SectionAt.Span))
 		}
@@ -103,12 +103,10 @@ func (f *File) sectionsOf(d *lang.Decl, s *lang.Stmt) []target {
 	return out
 }
 
-// statement is the span of the declaration's own statement around a place.
-func (s *Snapshot) statement(at lang.Place) lang.Span {
-	for _, stmt := range at.Decl.Stmts {
-		if stmt.Span.Start <= at.Span.Start && at.Span.End <= stmt.Span.End {
-			return stmt.Span
-		}
+// around is the span of the declaration's own statement around a place.
+func around(at lang.Place) lang.Span {
+	if s := stmtAround(at.Decl, at.Span); s != nil {
+		return s.Span
 	}
 	return at.Span
 }

@@ -1,6 +1,7 @@
 package model
 
 import (
+	"kern/checker/action"
 	"kern/checker/derivation"
 	"kern/lang"
 	"kern/lang/unit"
@@ -9,7 +10,7 @@ import (
 // basis reads the design basis.
 func (b *builder) basis() {
 	env := b.env
-	env.Basis = Basis{Overrides: map[string]Override{}, Show: derivation.Units{}, SelfWeight: true}
+	env.Basis = Basis{Overrides: map[string]Override{}, Show: derivation.Units{}, SelfWeight: true, Combining: Combining{Values: action.Recommended}}
 	for i, d := range b.of("basis") {
 		r := b.reader(d)
 		if i > 0 {
@@ -45,8 +46,8 @@ func (b *builder) basis() {
 	}
 }
 
-var basisWords = []string{"standard", "actions", "show", "effective", "selfweight", "strengths", "amplification",
-	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "factor_yield", "factor_buckling"}
+var basisWords = []string{"standard", "actions", "show", "effective", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental",
+	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "xi", "factor_yield", "factor_buckling"}
 
 func (b *builder) basisStmt(r *reader) {
 	basis := &b.env.Basis
@@ -91,26 +92,11 @@ func (b *builder) basisStmt(r *reader) {
 			}
 		}
 	case "actions":
-		e := r.peek()
-		name, ok := r.text("the standard of actions")
-		if !ok {
+		if !b.actions(r) {
 			return
 		}
-		if name != "EN 1990:2002" {
-			r.problem(lang.Problem{Rule: "unknown-standard", Span: e.Span, Message: "'" + name + "' is no standard of actions that kern combines to: \"EN 1990:2002\"",
-				Fixes: []lang.Fix{lang.Replace("Write EN 1990:2002", false, e.Span, `"EN 1990:2002"`)}})
-			b.env.refuse("the standard of actions is not known")
-			return
-		}
-		basis.Actions, basis.Equation = name, "6.10"
-		if _, ok := r.word("eq"); ok {
-			e := r.peek()
-			eq, ok := r.text("the equation")
-			if ok && eq != "6.10" {
-				r.fail("unknown-standard", e.Span, "equation '%s' is not known; known is 6.10. Other combinations are written out: combination NAME = 1.1 G + 0.5 W", eq)
-				b.env.refuse("the equation of the combinations is not known")
-			}
-		}
+	case "permanent", "roofs", "accidental":
+		b.combining(r)
 	case "show":
 		b.show(r)
 		return
@@ -154,7 +140,7 @@ func (b *builder) basisStmt(r *reader) {
 // override reads a number that replaces one of a standard.
 func (b *builder) override(r *reader) {
 	name := r.stmt.Word
-	needs := map[string]bool{"gamma_G_sup": true, "gamma_G_inf": true, "gamma_Q": true}
+	needs := map[string]bool{"gamma_G_sup": true, "gamma_G_inf": true, "gamma_Q": true, "xi": true}
 	for _, s := range b.standards.Names() {
 		for k, v := range b.standards.Overrides(s) {
 			needs[k] = v
@@ -175,7 +161,11 @@ func (b *builder) override(r *reader) {
 		r.problem(p)
 		return
 	}
-	v, span, ok := r.quantity(want{what: "a factor", min: 0.1, max: 20})
+	due := want{what: "a factor", min: 0.1, max: 20}
+	if name == "xi" {
+		due = want{what: "a reduction factor", min: 0.5, max: 1}
+	}
+	v, span, ok := r.quantity(due)
 	if !ok {
 		return
 	}

@@ -2,9 +2,11 @@ package model
 
 import (
 	"fmt"
+	"slices"
 
 	"kern/checker/action"
 	"kern/lang"
+	"kern/lang/unit"
 )
 
 // cases reads the load cases.
@@ -24,7 +26,7 @@ func (b *builder) cases() {
 		}
 		n.Index = len(env.Cases)
 		env.Cases = append(env.Cases, c)
-		kind, ok := r.wordOf("the kind of action", "permanent", "imposed", "snow", "wind", "temperature")
+		kind, ok := r.wordOf("the kind of action", "permanent", "imposed", "snow", "wind", "temperature", "accidental", "seismic")
 		if !ok {
 			c.Bad = true
 			continue
@@ -43,10 +45,11 @@ func (b *builder) cases() {
 					Fixes: []lang.Fix{lang.Replace("Remove it", false, e.Span, "")}})
 			}
 		}
+		r.psi(c)
 		r.end()
 		c.Bad = r.failed
-		if env.Basis.Actions != "" && !c.Bad && c.Kind != action.Permanent {
-			if _, ok := c.Psi0(); !ok {
+		if env.Basis.Actions != "" && !c.Bad && c.Kind.Variable() {
+			if _, ok := env.Basis.Combining.Values.Psi(c.Case); !ok {
 				c.Bad = true
 				r.problem(lang.Problem{Rule: "missing-category", Span: name.Span, Message: fmt.Sprintf("the case '%s' needs a category for the combinations of %s: %s", c.Name, env.Basis.Actions, categories[c.Kind]),
 					Fixes: []lang.Fix{lang.Replace("Add a category", false, lang.Span{Start: d.stmt.Line.End, End: d.stmt.Line.End}, map[action.Kind]string{action.Imposed: ` "B"`, action.Snow: ` "below 1000 m"`}[c.Kind])}})
@@ -86,7 +89,54 @@ var categories = map[action.Kind]string{
 	action.Permanent: "it has none",
 	action.Imposed:   `"A" homes, "B" offices, "C1" to "C5" congregation, "D1", "D2" shops, "E1", "E2" storage, "F", "G" vehicles, "H" roofs (EN 1990 Table A1.1)`,
 	action.Snow:      `"below 1000 m" or "above 1000 m" (height above sea level, EN 1990 Table A1.1)`,
-	action.Wind:      "it has none", action.Temperature: "it has none",
+	action.Wind:      "it has none", action.Temperature: "it has none", action.Accident: "it has none", action.Earthquake: "it has none",
+}
+
+// psi reads the psi values that a case states for itself.
+func (r *reader) psi(c *Case) {
+	words := []string{"psi_0", "psi_1", "psi_2"}
+	first := r.peek()
+	for {
+		at := r.peek()
+		w, ok := r.word(words...)
+		if !ok {
+			if c.Stated != [3]bool{} { // behind a comma
+				r.wordOf("the next value", words...)
+			}
+			return
+		}
+		i := slices.Index(words, w)
+		switch {
+		case !c.Kind.Variable():
+			r.fail("left-over", at.Span, "%s action has no %s: it is for variable ones", lang.A(c.Kind.String()), w)
+			return
+		case c.Stated[i]:
+			r.fail("value-given-twice", at.Span, "%s is given twice", w)
+			return
+		}
+		if e := r.peek(); e != nil && e.Kind == lang.QuantExpr && slices.Contains(words, e.Text) {
+			end := e.UnitSpan().Start
+			for end > 0 && r.decl.Text[end-1] == ' ' {
+				end--
+			}
+			r.problem(lang.Problem{Rule: "wrong-form", Span: e.UnitSpan(), Message: "psi values stand with commas between them: psi_0 0.5, psi_1 0.2",
+				Fixes: []lang.Fix{lang.Replace("Put a comma between them", false, lang.Span{Start: end, End: end}, ",")}})
+			return
+		}
+		if c.Own[i], _, ok = r.quantity(want{what: w, min: 1e-3, max: 1, zero: true}); !ok {
+			return
+		}
+		c.Stated[i] = true
+		if comma := r.peek(); comma == nil || comma.Kind != lang.CommaExpr {
+			break
+		}
+		r.take()
+	}
+	if p, ok := r.env.Basis.Combining.Values.Psi(c.Case); ok && p[2] > p[1] {
+		r.fail("impossible-value", first.Span, "psi_2 = %s is more than psi_1 = %s: what is exceeded for more of the time is less (EN 1990 4.1.3)", unit.Exact(p[2]), unit.Exact(p[1]))
+		return
+	}
+	c.Because, _ = r.because()
 }
 
 // category reads a category of EN 1990 Table A1.1, with the subdivisions of EN

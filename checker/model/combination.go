@@ -1,7 +1,10 @@
 package model
 
 import (
+	"errors"
 	"fmt"
+	"slices"
+	"sync"
 
 	"kern/checker/action"
 	"kern/lang"
@@ -26,6 +29,7 @@ func (b *builder) combinations() {
 		if n == nil || n.Stmt != d.stmt {
 			continue // given twice, or a word that the language has taken
 		}
+		situation := r.situation()
 		// a combination that was meant and cannot be read leaves members
 		// undecided: without it they would be checked for less than was asked
 		refused := "the combination '" + name.Text + "' has an error"
@@ -46,7 +50,7 @@ func (b *builder) combinations() {
 			continue
 		}
 		c := Combination{Label: name.Text, Place: r.place(name.Span)}
-		c.Factors, c.Source = factors, "combination "+name.Text
+		c.Factors, c.Source, c.Situation = factors, "combination "+name.Text, situation
 		if env.Cases[env.SelfWeight].Place.Decl == nil && factors[env.SelfWeight] == 0 {
 			factors[env.SelfWeight] = 1
 		}
@@ -54,34 +58,16 @@ func (b *builder) combinations() {
 		n.Index = len(env.Combinations)
 		env.Combinations = append(env.Combinations, c)
 	}
-	if env.Basis.Actions == "" {
-		if len(env.Combinations) > 0 || env.Refused != "" {
-			return
-		}
-		factors := make([]float64, len(plain))
-		for i := range factors {
-			factors[i] = 1
-		}
-		c := Combination{}
-		c.Name, c.Factors, c.Source = action.Sum(plain, factors), factors, "sum of all cases"
-		if !env.Declared() {
-			c.Name = "all loads"
-		}
-		env.Automatic = []Combination{c}
+	if env.Refused != "" {
 		return
 	}
-	if env.Refused != "" {
+	if env.Basis.Actions == "" {
+		env.sums(plain)
 		return
 	}
 	if !env.Declared() {
 		env.Refused = "the calculation names no load cases"
 		return
-	}
-	f := action.Recommended
-	for name, at := range map[string]*float64{"gamma_G_sup": &f.GSup, "gamma_G_inf": &f.GInf, "gamma_Q": &f.Q} {
-		if o, ok := env.Basis.Overrides[name]; ok {
-			*at = o.Value
-		}
 	}
 	// a case with an error takes no part: a member that has a load of it is
 	// undecided for that load, and the others are what they are without it
@@ -92,23 +78,97 @@ func (b *builder) combinations() {
 			good, at = append(good, c.Case), append(at, i)
 		}
 	}
-	made, ok := action.Persistent(good, f)
-	if !ok {
-		env.Refused = fmt.Sprintf("there are more than %d variable cases", action.MaxVariable)
-		c := env.Cases[len(env.Cases)-1]
-		b.report(lang.Diagnostic{Decl: env.Cases[0].Place.Decl, Problem: lang.Problem{Rule: "too-many-cases", Span: env.Cases[0].Place.Span,
-			Message: fmt.Sprintf("the calculation has more than %d variable cases: combinations are made for so many only; write them out", action.MaxVariable),
-			Related: []lang.Related{{Place: c.Place, Message: "the last case"}}}})
+	rules := env.rules(at)
+	made, err := action.Ultimate(good, rules)
+	if err != nil {
+		b.tooMany(err)
 		return
 	}
-	for _, m := range made {
+	env.Automatic = env.widen(made, at)
+	env.service = sync.OnceValue(func() []Combination {
+		made, _ := action.Service(good, rules) // it has the same limits
+		return env.widen(made, at)
+	})
+	env.assume(rules)
+}
+
+// widen gives combinations of some of the cases a factor for every case.
+func (env *Env) widen(made []action.Combination, at []int) []Combination {
+	out := make([]Combination, len(made))
+	for k, m := range made {
 		factors := make([]float64, len(env.Cases))
 		for i, factor := range m.Factors {
 			factors[at[i]] = factor
 		}
 		m.Factors = factors
-		env.Automatic = append(env.Automatic, Combination{Combination: m})
+		out[k] = Combination{Combination: m}
 	}
+	return out
+}
+
+// tooMany says which cases are too many to combine.
+func (b *builder) tooMany(err error) {
+	env := b.env
+	most, what := action.MaxVariable, "variable cases"
+	counts := action.Kind.Variable
+	if errors.Is(err, action.ErrManyIndependent) {
+		most, what = action.MaxIndependent, "independent permanent cases"
+		counts = func(k action.Kind) bool { return k == action.Permanent }
+	}
+	env.Refused = fmt.Sprintf("there are more than %d %s", most, what)
+	var of []*Case
+	for _, c := range env.Cases {
+		if counts(c.Kind) && !c.Bad && c.Place.Decl != nil {
+			of = append(of, c)
+		}
+	}
+	if len(of) == 0 {
+		return
+	}
+	b.report(lang.Diagnostic{Decl: of[0].Place.Decl, Problem: lang.Problem{Rule: "too-many-cases", Span: of[0].Place.Span,
+		Message: fmt.Sprintf("the calculation has more than %d %s: combinations are made for so many only; write them out", most, what),
+		Related: []lang.Related{{Place: of[len(of)-1].Place, Message: "the last of them"}}}})
+}
+
+// sums adds all cases up where no standard of actions combines them: once, or,
+// where cases exclude each other, for every largest selection that can act
+// together. They stand for ultimate limit states when no such combination is
+// written out, and for serviceability when none at all is.
+func (env *Env) sums(plain []action.Case) {
+	env.assumeExclusive()
+	if slices.ContainsFunc(env.Combinations, func(c Combination) bool { return c.Situation.Ultimate() }) {
+		return
+	}
+	together, ok := action.Together(plain, env.Exclusive)
+	if !ok {
+		env.Refused = fmt.Sprintf("more than %d cases exclude each other", action.MaxExclusive)
+		return
+	}
+	var service []Combination
+	for _, factors := range together {
+		c := Combination{}
+		c.Name, c.Factors, c.Source = action.Sum(plain, factors), factors, "sum of all cases"
+		if !env.Declared() {
+			c.Name = "all loads"
+		}
+		env.Automatic = append(env.Automatic, c)
+		if len(env.Combinations) == 0 {
+			c.Situation = action.Characteristic
+			service = append(service, c)
+		}
+	}
+	env.service = func() []Combination { return service }
+}
+
+// situation takes the word for the situation that a combination is for; one
+// without is for persistent situations.
+func (r *reader) situation() action.Situation {
+	if e := r.peek(); e != nil && e.Kind == lang.NameExpr {
+		w, _ := r.wordOf("what the combination is for", action.SituationNames()...)
+		s, _ := action.SituationOf(w)
+		return s
+	}
+	return action.Persistent
 }
 
 // hurt tells whether the text of a statement has a problem that belongs to none
@@ -185,7 +245,31 @@ func (b *builder) sum(r *reader, e *lang.Expr, sign float64, factors []float64) 
 	return false
 }
 
-// All are the combinations that members are checked for.
+// All are the combinations for ultimate limit states, which resistances are
+// checked in: those that are made, then those that are written out.
 func (env *Env) All() []Combination {
-	return append(append([]Combination(nil), env.Automatic...), env.Combinations...)
+	out := append([]Combination(nil), env.Automatic...)
+	for _, c := range env.Combinations {
+		if c.Situation.Ultimate() {
+			out = append(out, c)
+		}
+	}
+	return out
+}
+
+// Service are the combinations for limit states of serviceability, which
+// deflections are checked in: those that are made, then those that are written
+// out. There are none when the combinations could not be made, or when only
+// ultimate ones are written out.
+func (env *Env) Service() []Combination {
+	var out []Combination
+	if env.service != nil {
+		out = append(out, env.service()...)
+	}
+	for _, c := range env.Combinations {
+		if !c.Situation.Ultimate() {
+			out = append(out, c)
+		}
+	}
+	return out
 }

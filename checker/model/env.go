@@ -37,7 +37,7 @@ type declared struct {
 }
 
 // topWords are the words that may begin a declaration, for offers.
-var topWords = []string{"include", "basis", "material", "section", "case", "combination", "level", "column", "strut", "tie"}
+var topWords = []string{"include", "basis", "material", "section", "case", "combination", "exclusive", "level", "column", "strut", "tie"}
 
 // NewEnv reads what the members of a calculation share.
 func NewEnv(files []*lang.File, standards Standards) *Env {
@@ -46,6 +46,7 @@ func NewEnv(files []*lang.File, standards Standards) *Env {
 	b.env.offer = namesOf(b.env.Names)
 	b.basis()
 	b.cases()
+	b.exclusive()
 	b.levels()
 	b.materials()
 	b.sections()
@@ -64,15 +65,16 @@ func (b *builder) reader(d declared) *reader {
 func (b *builder) collect() {
 	for _, f := range b.files {
 		for _, d := range f.Decls {
-			member := false
+			member, other := false, false
 			for _, s := range d.Stmts {
 				item := declared{d, s}
+				other = other || !isMember(s)
 				if value, ok := s.Assigned(); ok {
 					b.value(item, value)
 					b.noBlock(item)
 					continue
 				}
-				if s.Word == "case" || s.Word == "combination" || s.Word == "include" {
+				if s.Word == "case" || s.Word == "combination" || s.Word == "exclusive" || s.Word == "include" {
 					b.noBlock(item)
 				}
 				switch s.Word {
@@ -88,7 +90,7 @@ func (b *builder) collect() {
 						b.name(item, s.Args[0], kind, -1)
 					}
 					b.stmts = append(b.stmts, item)
-				case "basis":
+				case "basis", "exclusive":
 					b.stmts = append(b.stmts, item)
 				case "include":
 				case "":
@@ -98,7 +100,9 @@ func (b *builder) collect() {
 			}
 			if member {
 				b.env.members = append(b.env.members, d)
-			} else if len(d.Stmts) > 0 {
+			}
+			// a line can hold a member and the basis behind it
+			if other {
 				b.env.decls = append(b.env.decls, d)
 			}
 		}
@@ -169,7 +173,11 @@ func (b *builder) name(d declared, e *lang.Expr, kind NameKind, index int) bool 
 		problem(fmt.Sprintf("'%s' is given twice: it is %s already", e.Text, first.Kind), lang.Related{Place: first.Place, Message: "given here first"})
 		return false
 	}
-	b.env.Names[e.Text] = &Named{Name: e.Text, Kind: kind, Place: place, Stmt: d.stmt, Index: index}
+	n := &Named{Name: e.Text, Kind: kind, Place: place, Stmt: d.stmt, Index: index}
+	b.env.Names[e.Text] = n
+	if kind == SectionName || kind == MaterialName {
+		b.env.definitions = append(b.env.definitions, n)
+	}
 	return true
 }
 

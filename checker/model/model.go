@@ -31,10 +31,15 @@ type Env struct {
 	Combinations []Combination // written out in the text, by name
 	Values       lang.Values
 
-	// Automatic are the combinations that the actions standard makes; empty when
-	// there is none or when it could not (then Refused says why).
+	// Automatic are the combinations for ultimate limit states that the actions
+	// standard makes; empty when there is none or when it could not (then Refused
+	// says why).
 	Automatic []Combination
 	Refused   string
+	// Exclusive are groups of cases, by index, of which one acts at a time.
+	Exclusive [][]int
+	// Assumed is what is assumed about the combinations, for every member.
+	Assumed []string
 	// SelfWeight is the index of the case that self-weight belongs to; it is a
 	// case of its own, the last, when the calculation has no permanent case.
 	SelfWeight int
@@ -42,6 +47,9 @@ type Env struct {
 	Problems []lang.Diagnostic
 	decls    []*lang.Decl // the declarations that made it, for comparison with a later text
 	members  []*lang.Decl
+
+	definitions []*Named
+	service     func() []Combination // made when they are asked for first
 
 	offer     map[NameKind][]string // the names of each kind, for offers
 	caseNames []*Named              // of each case; nil for those that nobody declared
@@ -88,6 +96,7 @@ type Basis struct {
 	Annex       string
 	Actions     string // "" when not stated
 	Equation    string
+	Combining   Combining
 	Show        derivation.Units
 	Overrides   map[string]Override // gamma_M0, factor_yield, …
 	Recommended bool                // effective lengths: recommended design values
@@ -167,9 +176,10 @@ func (s *Section) Title() string {
 // Case is a load case with where it was declared.
 type Case struct {
 	action.Case
-	Place lang.Place
-	Given string // the category as written
-	Bad   bool
+	Place   lang.Place
+	Given   string // the category as written
+	Because string // why the case states psi values of its own
+	Bad     bool
 }
 
 // Level is a height with the pressures on its floor.

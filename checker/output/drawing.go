@@ -16,6 +16,9 @@ const (
 	axisColour  = "#c8702a"
 )
 
+// Room around the outline for the axes and their names, in pixels.
+const left, right, above, below = 16, 44, 18, 12
+
 // Drawing draws a cross-section to scale as an SVG picture that fits a square of
 // about the given number of pixels, with its principal axes. It is "" for a
 // section whose outline is not known.
@@ -28,7 +31,6 @@ func Drawing(s section.Shape, p section.Properties, size float64) string {
 	if !(width > 0) || !(height > 0) {
 		return ""
 	}
-	const left, right, above, below = 12, 36, 18, 12 // room for the axes and their names
 	d := drawing{scale: size / max(width, height), height: height}
 	var b strings.Builder
 	w, h := width*d.scale+left+right, height*d.scale+above+below
@@ -110,8 +112,14 @@ func (d drawing) axis(b *strings.Builder, name string, x, y float64, p section.P
 	if math.Abs(y) > math.Abs(x) {
 		anchor, dx, dy = "middle", 0, -2
 	}
+	// a name half as wide as this stays inside the picture
+	const half = 16
+	at := to.X*d.scale + dx
+	if anchor == "middle" {
+		at = max(at, half-left)
+	}
 	fmt.Fprintf(b, `<text x="%s" y="%s" font-family="sans-serif" font-size="10" fill="%s" text-anchor="%s">%s</text>`,
-		pixels(to.X*d.scale+dx), pixels((d.height-to.Y)*d.scale+dy), axisColour, anchor, name)
+		pixels(at), pixels((d.height-to.Y)*d.scale+dy), axisColour, anchor, name)
 }
 
 // extent is the size of outlines whose lower-left corner is the origin, m.

@@ -306,7 +306,7 @@ func guardStart(s string) string {
 		return s
 	}
 	switch c := s[0]; {
-	case c == '#' || c == '>' || c == '=' || (c == '-' || c == '+') && (len(s) == 1 || s[1] == ' ' || s[1] == c):
+	case c == '#' || c == '>' || (c == '-' || c == '+') && (len(s) == 1 || s[1] == ' ' || s[1] == c):
 		return `\` + s
 	case c >= '0' && c <= '9':
 		n := len(s) - len(strings.TrimLeft(s, "0123456789"))

@@ -2,11 +2,13 @@ package output
 
 import (
 	"math"
+	"slices"
 	"strings"
 
 	"kern/checker"
 	"kern/checker/derivation"
 	"kern/checker/model"
+	"kern/checker/section"
 	"kern/checker/standard"
 	"kern/lang"
 	"kern/lang/unit"
@@ -32,14 +34,13 @@ func Working(p *Page, r *checker.Result, rule string) {
 	Checks(p, r)
 	Missing(p, r)
 	if record != nil {
+		p.Head(2, "Loads")
+		Loads(p, r)
 		if steps := own(record, ""); len(steps) > 0 {
 			p.Head(2, "Values that the checks share")
 			Steps(p, record.Set, r.Units(), steps)
 		}
 		for _, name := range rulesOf(r, record) {
-			if name == "requirement" {
-				continue // its value is a step of another check
-			}
 			p.Head(2, name)
 			verdictOf(p, r, name)
 			Steps(p, record.Set, r.Units(), own(record, name))
@@ -53,9 +54,12 @@ func Working(p *Page, r *checker.Result, rule string) {
 }
 
 // CheckWorking writes the working of one check below a heading of the given
-// level: every value that it rests on, each step, and what it comes to.
+// level (0 for none): every value that it rests on, each step, and what it comes
+// to.
 func CheckWorking(p *Page, r *checker.Result, record *derivation.Record, rule string, level int) {
-	p.Head(level, rule)
+	if level > 0 {
+		p.Head(level, rule)
+	}
 	verdictOf(p, r, rule)
 	if record == nil {
 		return
@@ -99,7 +103,7 @@ func MemberHead(p *Page, r *checker.Result) {
 		fact("section", SectionTitle(m.Section))
 	}
 	if m.Material != nil {
-		fact("steel", MaterialTitle(m.Material))
+		fact("material", MaterialTitle(m.Material))
 	}
 	if m.Height > 0 {
 		fact(map[bool]string{true: "height", false: "length"}[m.Kind == model.Column], r.Units().Show(m.Height, unit.Length, 4))
@@ -107,14 +111,27 @@ func MemberHead(p *Page, r *checker.Result) {
 	p.List(facts...)
 }
 
-// VerdictLine is the verdict with what decides it.
+// VerdictLine is the verdict with what decides it. What a departure allows and
+// what could not be checked is said with it.
 func VerdictLine(r *checker.Result) Line {
 	out := Strong(r.Verdict.String())
-	if !math.IsNaN(r.Utilisation) {
-		out = Join(out, Words(": utilisation "+checker.Ratio(r.Utilisation)+", "+r.Governing))
-		if r.Combination != "" {
-			out = Join(out, Words(" under "+r.Combination))
-		}
+	var departs []string
+	for _, d := range r.Departures {
+		departs = append(departs, d.Rule)
+	}
+	if len(departs) > 0 {
+		out = Join(out, Words(", departing from "+strings.Join(departs, " and ")))
+	}
+	if math.IsNaN(r.Utilisation) {
+		return out
+	}
+	out = Join(out, Words(": "))
+	if r.Verdict == standard.Undecided {
+		out = Join(out, Words("as far as it was checked, "))
+	}
+	out = Join(out, Words("utilisation "+checker.Ratio(r.Utilisation)+", "+r.Governing))
+	if r.Combination != "" {
+		out = Join(out, Words(" under "+r.Combination))
 	}
 	return out
 }
@@ -125,10 +142,29 @@ func SectionTitle(s *model.Section) string {
 	if s.Designation != "" {
 		return s.Designation + ", " + s.Standard
 	}
-	if k := s.Shape.Kind.String(); s.Name != "" && s.Name != k {
-		return s.Name + ", " + lang.Words[k]
+	what := lang.Words[s.Shape.Kind.String()]
+	if sizes := Sizes(s.Shape); sizes != "" {
+		what += " " + sizes
 	}
-	return lang.Words[s.Shape.Kind.String()]
+	if s.Name == "section" { // it has no name of its own
+		return what
+	}
+	return s.Name + ", " + what
+}
+
+// Sizes writes the main dimensions of a shape as the trade does, in millimetres:
+// depth, width, and the thicknesses of web and flange or of the wall.
+func Sizes(s section.Shape) string {
+	var sizes []string
+	for _, v := range []float64{s.Diameter, s.Depth, s.Width, s.Web, s.Flange, s.Wall} {
+		if v > 0 {
+			sizes = append(sizes, unit.Short(v*1000, 4))
+		}
+	}
+	if len(sizes) == 0 {
+		return ""
+	}
+	return strings.Join(sizes, "×") + " mm"
 }
 
 // MaterialTitle names a material: the grade and its product standard, or its
@@ -210,13 +246,25 @@ func upper(s string) string {
 	return strings.ToUpper(s[:1]) + s[1:]
 }
 
-// rulesOf lists the checks that have steps or a row, in the order of the steps.
+// rulesOf lists the checks whose steps belong on the page of a whole member, in
+// the order of the steps: those with a row, and those that a required value is
+// worked out in. What does not apply is left out.
 func rulesOf(r *checker.Result, record *derivation.Record) []string {
+	want := map[string]bool{}
+	for _, c := range r.Checks {
+		want[c.Rule] = c.Rule != "requirement" // its value is a step of another check
+	}
+	for _, q := range r.Member.Requires {
+		if symbol, ok := r.Symbol(q.Symbol); ok {
+			for _, s := range record.Leading(symbol) {
+				want[s.Group] = s.Group != ""
+			}
+		}
+	}
 	var out []string
-	seen := map[string]bool{"": true}
 	add := func(rule string) {
-		if !seen[rule] {
-			seen[rule] = true
+		if want[rule] {
+			want[rule] = false
 			out = append(out, rule)
 		}
 	}
@@ -309,7 +357,13 @@ func Missing(p *Page, r *checker.Result) {
 		return
 	}
 	p.Text(Words("It could not be checked:"))
-	p.List(plainLines(r.Missing)...)
+	var list []string
+	for _, why := range r.Missing {
+		if !slices.Contains(list, why) {
+			list = append(list, why)
+		}
+	}
+	p.List(plainLines(list)...)
 }
 
 // Coverage writes what the standard asks for and what became of it.

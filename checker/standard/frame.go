@@ -203,6 +203,19 @@ func (f *Frame) top(combination, segment int) float64 {
 	return f.axial[combination][segment] - f.weight[combination]*(f.cuts[segment+1]-f.cuts[segment])
 }
 
+// Between gives the compression of a combination just above one height and just
+// below another, N; no load may come in between the two.
+func (f *Frame) Between(combination int, from, to float64) (bottom, top float64) {
+	middle := (from + to) / 2
+	for s := len(f.cuts) - 2; s >= 0; s-- {
+		if f.cuts[s] < middle || s == 0 {
+			n, w := f.axial[combination][s], f.weight[combination]
+			return n - w*(from-f.cuts[s]), n - w*(to-f.cuts[s])
+		}
+	}
+	return math.NaN(), math.NaN()
+}
+
 // Heights are where the axial force can have its extremes.
 func (f *Frame) Heights() []float64 { return f.cuts }
 

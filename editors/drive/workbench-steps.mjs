@@ -38,26 +38,78 @@ const steps = {
     await w.picture('2-squiggles');
   },
 
-  async 'a mended unit clears its mark, and only its'(w) {
+  async 'a mended number clears its mark, and only its'(w) {
     await w.open('canopy.kern');
-    await w.there('.squiggly-error');
     const before = await w.until('five marks', async () => (await w.squiggles('error')) >= 5 && w.squiggles('error'));
-    await w.goto(18, 15);
+    await w.goto(24, 17);
     await w.page.keyboard.press('Delete');
-    await w.page.keyboard.press('Delete');
-    await w.page.keyboard.type('kN');
+    await w.page.keyboard.type('.');
     await w.until('one mark less', async () => (await w.squiggles('error')) === before - 1);
-    assert.match(blanks(await w.line('load S 25').innerText()), /load S 25 kN/);
+    await w.page.keyboard.press('Escape');
     await w.save();
-    assert.match(w.read('slips/canopy.kern'), /load S 25 kN\n/);
+    assert.match(w.read('slips/canopy.kern'), /height {3}= 3\.2 m\n {4}load G 4 t/);
     await w.picture('3-slips');
   },
 
-  async 'a setting of the user names another server, and a wrong one is explained'(w) {
-    w.setting('kern.server.path', '/nowhere/kern');
+  async 'a quick fix mends a unit, and is saved'(w) {
+    const before = await w.squiggles('error');
+    await w.goto(18, 15);
+    await w.page.keyboard.press('Control+.');
+    await w.there('.action-widget .monaco-list-row', 'Write kN');
+    await w.picture('4-quick-fix');
+    await w.page.keyboard.press('Enter');
+    await w.until('one mark less', async () => (await w.squiggles('error')) === before - 1);
+    await w.save();
+    assert.match(w.read('slips/canopy.kern'), /load S 25 kN\n/);
+  },
+
+  async 'completion knows the place'(w) {
+    await w.goto(28, 40);
+    await w.page.keyboard.press('End');
+    await w.page.keyboard.press('Enter');
+    await w.page.keyboard.type('hol');
+    await w.page.keyboard.press('Control+Space');
+    const row = await w.there('.suggest-widget.visible .monaco-list-row', 'hold');
+    assert.equal(await w.page.locator('.suggest-widget.visible .monaco-list-row', { hasText: 'column' }).count(), 0);
+    await w.details();
+    await w.picture('5-completion');
+    await row.click();
+    await w.line('hold both at height / 2').waitFor();
+    await w.page.keyboard.press('Escape');
+    await w.page.keyboard.press('Escape');
+    await w.page.keyboard.press('End');
+    await w.page.keyboard.press('Enter');
+    await w.page.keyboard.type('load G 3 k');
+    await w.there('.suggest-widget.visible .monaco-list-row', 'kN');
+    await w.picture('6-completion-units');
+    await w.revert();
+  },
+
+  async 'the form of a statement is shown while it is typed'(w) {
+    await w.goto(33, 19);
+    await w.page.keyboard.press('Enter');
+    await w.page.keyboard.type('load G 3 kN across ');
+    await w.there('.parameter-hints-widget.visible', 'across AXIS at PLACE');
+    await w.picture('7-signature');
+    await w.revert();
+  },
+
+  async 'formatting gives the one layout'(w) {
+    await w.open('gallery.kern');
+    const before = w.read('boathouse/gallery.kern');
+    await w.goto(12, 5);
+    await w.page.keyboard.type('   ');
+    await w.command('Format Document');
+    await w.until('the layout', async () => /^ {4}load G 62 kN$/.test(blanks(await w.line('load G 62').innerText())));
+    await w.save();
+    assert.equal(w.read('boathouse/gallery.kern'), before);
+  },
+
+  async 'a setting names another server, and a wrong one is explained'(w) {
+    w.settings({ 'kern.server.path': '/nowhere/kern' });
     await w.there('.notification-list-item-message', "names '/nowhere/kern', which is not a program that can be run");
-    await w.picture('4-no-server');
-    w.setting('kern.server.path', '');
+    await w.picture('8-no-server');
+    w.settings({});
     await w.command('Notifications: Clear All Notifications');
     await w.command('kern: Show Status');
     await w.there('.notification-list-item-message', 'Server: running');
@@ -70,7 +122,7 @@ const steps = {
     await w.there('.squiggly-error');
     await w.command('kern: Open Output');
     await w.until('the log', async () => /server: .*bin\/kern, from the extension/.test(blanks(await w.page.locator('.panel .view-lines').innerText())));
-    await w.picture('5-output');
+    await w.picture('9-output');
     await w.command('View: Toggle Output');
   },
 };

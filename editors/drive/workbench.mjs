@@ -94,7 +94,7 @@ export class Workbench {
   async open(file) {
     await this.page.keyboard.press('Control+p');
     await this.quickInput('', file);
-    await this.page.locator('.quick-input-list .monaco-list-row', { hasText: path.basename(file) }).first().waitFor();
+    await this.page.locator('.quick-input-list .monaco-list-row.focused', { hasText: path.basename(file) }).first().waitFor();
     await this.page.keyboard.press('Enter');
     await this.page.locator('.tabs-container .tab.active', { hasText: path.basename(file) }).waitFor();
     await this.editor.locator('.view-line').first().waitFor();
@@ -147,10 +147,25 @@ export class Workbench {
     await this.page.locator('.tabs-container .tab.active:not(.dirty)').waitFor();
   }
 
-  /** setting writes a setting of the user, as the settings editor would. */
-  setting(name, value) {
-    const file = path.join(this.profile, 'data/User/settings.json');
-    fs.writeFileSync(file, JSON.stringify({ ...JSON.parse(fs.readFileSync(file, 'utf8')), [name]: value }));
+  /** settings writes the settings of the machine, where the path of a program belongs. */
+  settings(values) {
+    const folder = path.join(this.profile, 'data/Machine');
+    fs.mkdirSync(folder, { recursive: true });
+    fs.writeFileSync(path.join(folder, 'settings.json'), JSON.stringify(values));
+  }
+
+  /** revert gives the active file its text on the disk back. */
+  async revert() {
+    await this.page.keyboard.press('Escape');
+    await this.command('File: Revert File');
+    await this.page.locator('.tabs-container .tab.active:not(.dirty)').waitFor();
+  }
+
+  /** details opens what a suggestion has to say, beside the list. */
+  async details() {
+    const pane = this.page.locator('.suggest-details-container');
+    if (!(await pane.isVisible().catch(() => false))) await this.page.keyboard.press('Control+Space');
+    await pane.waitFor();
   }
 
   read(file) { return fs.readFileSync(path.join(this.project, file), 'utf8'); }

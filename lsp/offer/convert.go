@@ -63,7 +63,7 @@ const (
 // first.
 func (l *list) convert(s site) {
 	lit, ok := l.literalAt(s)
-	if !ok || lit.quantity.Dim.IsNone() {
+	if !ok || lit.quantity.Dim.IsNone() || lit.quantity.Value == 0 {
 		return
 	}
 	var units []unit.Unit
@@ -82,10 +82,7 @@ func (l *list) convert(s site) {
 	offered := 0
 	for _, u := range units {
 		v := math.Abs(lit.quantity.In(u))
-		if lit.expr.Kind == lang.QuantExpr && u.Symbol == lit.expr.Text || offered == maxUnits || math.IsNaN(v) || math.IsInf(v, 0) {
-			continue
-		}
-		if u.Symbol != shown && v != 0 && (v < leastShown || v >= mostShown) {
+		if lit.expr.Kind == lang.QuantExpr && u.Symbol == lit.expr.Text || offered == maxUnits || !(v >= leastShown && v < mostShown) {
 			continue
 		}
 		text, exact := inUnit(lit.quantity, u)
@@ -101,15 +98,15 @@ func (l *list) convert(s site) {
 	}
 }
 
-// inUnit writes a quantity in a unit: with as few digits as give the very same
-// value, or rounded to twelve. It is "" when the language would read something
-// else.
+// inUnit writes a quantity in a unit: with as few digits as give the same value,
+// up to the last bits of a float64, or rounded to twelve. It is "" when the
+// language would read something else.
 func inUnit(q unit.Quantity, u unit.Unit) (text string, exact bool) {
 	v := q.In(u)
 	number := unit.Short(v, digits)
 	for n := 1; n <= digits; n++ {
 		short := unit.Short(v, n)
-		if x, err := strconv.ParseFloat(short, 64); err == nil && x*u.Factor == q.Value {
+		if x, err := strconv.ParseFloat(short, 64); err == nil && math.Abs(x*u.Factor-q.Value) <= 4e-16*math.Abs(q.Value) {
 			number, exact = short, true
 			break
 		}

@@ -1,6 +1,7 @@
 package offer
 
 import (
+	"errors"
 	"slices"
 
 	"kern/checker"
@@ -126,3 +127,5 @@ func with(p *lang.Project, file, text string) *lang.Project {
 		return "", errGone
 	}, p)
 }
+
+var errGone = errors.New("there is no such file")

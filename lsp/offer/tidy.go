@@ -33,7 +33,7 @@ func (l *list) tidy(edits []checker.Edit) []checker.Edit {
 			}
 			changes[i].New = withEnds(f.Text, changes[i].New)
 		}
-		for _, c := range lay(f, changes) {
+		for _, c := range l.lay(f, changes) {
 			out = append(out, checker.Edit{File: name, Span: c.Span, New: c.New})
 		}
 	}
@@ -42,10 +42,10 @@ func (l *list) tidy(edits []checker.Edit) []checker.Edit {
 
 // lay makes changes to a file and lays the result out, if the file was laid out
 // before.
-func lay(f *lang.File, changes []lang.Change) []lang.Change {
+func (l *list) lay(f *lang.File, changes []lang.Change) []lang.Change {
 	p := whole(f.Text)
 	p.apply(changes)
-	if len(f.Text) <= maxLaid && len(lang.FormatEdits(f)) == 0 {
+	if l.laidOut(f) {
 		p.apply(lang.FormatEdits(lang.Parse(&lang.FileID{Name: f.Name}, lang.Apply(f.Text, changes), f)))
 	}
 	return p.changes(f.Text)
@@ -53,7 +53,19 @@ func lay(f *lang.File, changes []lang.Change) []lang.Change {
 
 // maxLaid is the longest text, in bytes, that is laid out after a change: the
 // user waits.
-const maxLaid = 4 << 20
+const maxLaid = 1 << 20
+
+func (l *list) laidOut(f *lang.File) bool {
+	laid, known := l.laid[f]
+	if !known {
+		laid = len(f.Text) <= maxLaid && len(lang.FormatEdits(f)) == 0
+		if l.laid == nil {
+			l.laid = map[*lang.File]bool{}
+		}
+		l.laid[f] = laid
+	}
+	return laid
+}
 
 // withEnds gives a text the line ends of another.
 func withEnds(like, text string) string {

@@ -3,7 +3,6 @@ package en1993
 import (
 	"fmt"
 	"math"
-	"strings"
 
 	"kern/checker/action"
 	"kern/checker/derivation"
@@ -12,61 +11,8 @@ import (
 	"kern/lang/unit"
 )
 
-// Standard is EN 1993-1-1:2005.
-type Standard struct{}
-
-// Name implements standard.Standard.
-func (Standard) Name() string { return "EN 1993-1-1:2005" }
-
-// Annexes implements standard.Standard.
-func (Standard) Annexes() []string { return []string{"recommended"} }
-
-// Overrides implements standard.Standard.
-func (Standard) Overrides() map[string]bool {
-	return map[string]bool{"gamma_M0": true, "gamma_M1": true}
-}
-
-// Rules implements standard.Standard.
-func (Standard) Rules() []string {
-	return []string{"local-buckling", "section-compression", "section-tension", "net-section", "section-bending-major", "section-bending-minor",
-		"section-shear-major", "section-shear-minor", "section-interaction", "flexural-buckling-major", "flexural-buckling-minor",
-		"torsional-buckling", "flexural-torsional-buckling", "lateral-torsional-buckling", "member-interaction", "slenderness", "sway"}
-}
-
-// Symbols implements standard.Standard.
-func (Standard) Symbols() *derivation.Set { return set }
-
-// Alias implements standard.Standard: N_b_major for N_b_y_Rd and so on.
-func (Standard) Alias(word string) string {
-	switch word {
-	case "N_b_major":
-		return "N_b_y_Rd"
-	case "N_b_minor":
-		return "N_b_z_Rd"
-	case "N_b_twist":
-		return "N_b_T_Rd"
-	case "N_c":
-		return "N_c_Rd"
-	}
-	for from, to := range map[string]string{"_major": "_y", "_minor": "_z"} {
-		if base, ok := strings.CutSuffix(word, from); ok {
-			if _, known := set.Find(base + to); known {
-				return base + to
-			}
-		}
-	}
-	return ""
-}
-
-// Check implements standard.Standard.
-func (Standard) Check(f *standard.Frame, record *derivation.Record) *standard.Outcome {
-	c := &calc{f: f, s: derivation.NewSheet(set), record: record}
-	c.out.Value = c.value
-	c.run()
-	return &c.out
-}
-
 type calc struct {
+	ed     *edition
 	f      *standard.Frame
 	s      *derivation.Sheet
 	record *derivation.Record
@@ -81,15 +27,41 @@ type calc struct {
 	pressed  bool // some combination compresses the member
 	pulled   int  // the combination with the greatest tension, -1 for none
 	assuming []string
+
+	settings  settings
+	uniform   int // class in uniform compression, also where class is 0 as its effective section is not known
+	combs     []comb
+	intervals []interval
+	tiny      [2]float64
+	high      [2]bool // some shear force is more than half of the resistance
+	lat       lateral
+}
+
+// do computes a formula of the standard.
+func (c *calc) do(f *derivation.Formula) float64 {
+	if c.ed.own != nil {
+		if own, ok := c.ed.own[f]; ok {
+			f = own
+		}
+	}
+	return c.s.Do(f)
+}
+
+// take sets a symbol from outside the formulas.
+func (c *calc) take(id derivation.ID, value float64, source string) {
+	if c.ed.renumber != nil && source != "" {
+		source = c.ed.renumber(source)
+	}
+	c.s.Take(id, value, source)
 }
 
 func (c *calc) value(symbol string) (unit.Quantity, bool) {
-	id, ok := set.Find(symbol)
+	id, ok := c.ed.set.Find(symbol)
 	if !ok {
 		return unit.Quantity{}, false
 	}
 	v := c.s.At(id)
-	return unit.Quantity{Value: v, Dim: set.At(id).Dim}, !math.IsNaN(v)
+	return unit.Quantity{Value: v, Dim: c.ed.set.At(id).Dim}, !math.IsNaN(v)
 }
 
 func (c *calc) cover(rule string, state standard.State, why string) {
@@ -152,13 +124,13 @@ func (c *calc) given() {
 	if !ok {
 		fy = math.NaN()
 	}
-	if c.beyond = outOfScope(m.Material, fy); c.beyond != "" {
+	if c.beyond = c.ed.outOfScope(m.Material, fy); c.beyond != "" {
 		fy = math.NaN()
 	}
 	title := m.Section.Title()
-	c.s.Take(symE, standard.Known(m.Material.E), m.Material.Title()+", 3.2.6(1)")
-	c.s.Take(symG, standard.Known(m.Material.G), m.Material.Title()+", 3.2.6(1)")
-	c.s.Take(symFy, standard.Known(fy), source)
+	c.take(symE, standard.Known(m.Material.E), m.Material.Title()+", 3.2.6(1)")
+	c.take(symG, standard.Known(m.Material.G), m.Material.Title()+", 3.2.6(1)")
+	c.take(symFy, standard.Known(fy), source)
 	if m.Material.Grade != nil {
 		if basis.TableFy {
 			c.assume("strengths of %s from EN 1993-1-1 Table 3.1", m.Material.Grade.Name)
@@ -171,19 +143,20 @@ func (c *calc) given() {
 		name   string
 		clause string
 	}{{symGM0, "gamma_M0", "6.1(1) note 2B"}, {symGM1, "gamma_M1", "6.1(1) note 2B"}} {
-		v, overridden := standard.Overridden(basis, g.name, 1.0)
-		source := g.clause + ", recommended"
+		annex, from := c.settings.partial(g.name, 1.0)
+		v, overridden := standard.Overridden(basis, g.name, annex)
+		source := g.clause + ", " + from
 		if overridden {
 			source = "basis, because \"" + basis.Overrides[g.name].Because + "\""
 		} else {
-			c.assume("%s = 1.00 (recommended)", g.name)
+			c.assume("%s = %s (%s)", g.name, unit.Short(v, 3)+map[bool]string{true: ".00"}[v == 1], from)
 		}
-		c.s.Take(g.id, v, source)
+		c.take(g.id, v, source)
 	}
-	c.s.Take(symA, standard.Known(m.Section.Area), title)
-	c.s.Take(axes[0].i, standard.Known(m.Section.IMajor), title)
-	c.s.Take(axes[1].i, standard.Known(m.Section.IMinor), title)
-	c.major, c.minor = curves(m.Section, isS460(m.Material))
+	c.take(symA, standard.Known(m.Section.Area), title)
+	c.take(axes[0].i, standard.Known(m.Section.IMajor), title)
+	c.take(axes[1].i, standard.Known(m.Section.IMinor), title)
+	c.major, c.minor = c.ed.curves(m.Section, isS460(m.Material))
 	if m.Section.Shape.Kind == section.Tube && m.Section.Shape.Made == section.Welded {
 		c.assume("welds of the box are not thicker than half its wall (curve b)")
 	}
@@ -207,8 +180,13 @@ func (c *calc) loads() {
 func (c *calc) local() {
 	const rule = "local-buckling"
 	c.class, c.why = c.classify()
+	c.uniform = c.class
+	if v := c.s.At(symClass); !math.IsNaN(v) {
+		c.uniform = int(v)
+	}
 	c.slender = c.class == 4
 	if math.IsNaN(c.s.At(symFy)) {
+		c.uniform = 0
 		c.class, c.why = 0, standard.NoStrength(c.f.Member)
 		if c.beyond != "" {
 			c.why = c.beyond
@@ -230,9 +208,9 @@ func (c *calc) compression() {
 	c.group(rule)
 	if c.class > 0 {
 		if c.slender {
-			c.s.Do(doNcEff)
+			c.do(doNcEff)
 		} else {
-			c.s.Do(doNc)
+			c.do(doNc)
 		}
 	}
 	if !c.pressed {
@@ -244,8 +222,8 @@ func (c *calc) compression() {
 		return
 	}
 	worst, at := c.worst(0, c.f.Member.Height)
-	c.s.Take(symNEd, worst, c.f.Combinations[at].Name)
-	u := c.s.Do(doUc)
+	c.take(symNEd, worst, c.f.Combinations[at].Name)
+	u := c.do(doUc)
 	c.add(rule, clause, at, worst, c.s.At(symNcRd), unit.Force, u, c.f.Limit())
 }
 
@@ -269,11 +247,45 @@ func (c *calc) tension() {
 		return
 	}
 	n := c.f.Tension(c.pulled)
-	c.s.Do(doNpl)
-	c.s.Take(symNtEd, n, c.f.Combinations[c.pulled].Name)
-	u := c.s.Do(doUt)
+	c.do(doNpl)
+	c.take(symNtEd, n, c.f.Combinations[c.pulled].Name)
+	u := c.do(doUt)
 	c.add(rule, clause, c.pulled, n, c.s.At(symNpl), unit.Force, u, c.f.Limit())
-	c.cover("net-section", standard.NotCovered, "there is tension: check the net section at holes by hand (6.2.3(2)b)")
+	c.netSection(n)
+}
+
+// netSection is 6.2.3(2)b for the area that the basis says holes leave.
+func (c *calc) netSection(n float64) {
+	const rule, clause = "net-section", "EN 1993-1-1 6.2.3(2)b"
+	m, basis := c.f.Member, &c.f.Env.Basis
+	ratio, stated := basis.Overrides["net_ratio"]
+	if !stated {
+		c.cover(rule, standard.NotCovered, "there is tension: check the net section at holes by hand (6.2.3(2)b), or state net_ratio in the basis")
+		return
+	}
+	if !(ratio.Value <= 1) {
+		c.undecided(rule, clause, "net_ratio is more than 1: holes leave no more than the whole area")
+		return
+	}
+	c.group(rule)
+	_, fu, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	if !ok || !(fu > 0) {
+		c.undecided(rule, clause, "the tensile strength of "+m.Material.Title()+" is not known")
+		return
+	}
+	annex, from := c.settings.partial("gamma_M2", 1.25)
+	gamma, overridden := standard.Overridden(basis, "gamma_M2", annex)
+	if overridden {
+		from = "basis, because \"" + basis.Overrides["gamma_M2"].Because + "\""
+	}
+	c.take(symFu, standard.Known(fu), source)
+	c.take(symGM2, gamma, "6.1(1) note 2B, "+from)
+	c.take(symNet, ratio.Value, "basis, because \""+ratio.Because+"\"")
+	c.do(doAnet)
+	c.do(doNu)
+	c.take(symNtEd, n, c.f.Combinations[c.pulled].Name)
+	u := c.do(doUu)
+	c.add(rule, clause, c.pulled, n, c.s.At(symNu), unit.Force, u, c.f.Limit())
 }
 
 // flexural is 6.3.1 about one axis: every stretch under every combination.
@@ -304,8 +316,8 @@ func (c *calc) flexural(a int, curve curve) {
 				}
 				continue
 			}
-			c.s.Take(x.n, n, "")
-			if u := c.s.Do(x.doU); u > best || combination < 0 {
+			c.take(x.n, n, "")
+			if u := c.do(x.doU); u > best || combination < 0 {
 				best, governing, combination = u, i, k
 			}
 		}
@@ -327,8 +339,8 @@ func (c *calc) flexural(a int, curve curve) {
 	if c.s.Recorded() {
 		source = c.f.Combinations[combination].Name
 	}
-	c.s.Take(x.n, n, source)
-	u := c.s.Do(x.doU)
+	c.take(x.n, n, source)
+	u := c.do(x.doU)
 	c.add(rule, clause, combination, n, c.s.At(x.nb), unit.Force, u, c.f.Limit())
 }
 
@@ -340,143 +352,22 @@ func (c *calc) resistance(x *axis, a int, s action.Stretch, alpha float64, curve
 	if c.s.Recorded() {
 		source = fmt.Sprintf("%s, %s–%s", c.f.StretchName(a, s), s.Base, s.Top)
 	}
-	c.s.Take(x.l, s.Length(), source)
-	c.s.Take(x.k, s.K, source)
-	c.s.Do(x.doLcr)
-	c.s.Do(x.doNcr)
+	c.take(x.l, s.Length(), source)
+	c.take(x.k, s.K, source)
+	c.do(x.doLcr)
+	c.do(x.doNcr)
 	if c.slender {
-		c.s.Do(x.doLamEff)
+		c.do(x.doLamEff)
 	} else {
-		c.s.Do(x.doLam)
+		c.do(x.doLam)
 	}
-	c.s.Take(x.alpha, alpha, curveSource)
-	c.s.Do(x.doPhi)
-	c.s.Do(x.doChi)
+	c.take(x.alpha, alpha, curveSource)
+	c.do(x.doPhi)
+	c.do(x.doChi)
 	if c.slender {
-		c.s.Do(x.doNbEff)
+		c.do(x.doNbEff)
 	} else {
-		c.s.Do(x.doNb)
-	}
-}
-
-// torsional is 6.3.1.4: torsional buckling of doubly symmetric open sections
-// and solid bars, flexural-torsional buckling of sections whose shear centre is
-// not their centroid.
-func (c *calc) torsional() {
-	const clause = "EN 1993-1-1 6.3.1.4"
-	sec := c.f.Member.Section
-	torsion, coupled := "torsional-buckling", "flexural-torsional-buckling"
-	rule := torsion
-	switch sec.Shape.Kind {
-	case section.Tube, section.Pipe, section.Rod:
-		c.cover(torsion, standard.NotApplicable, "closed and round sections do not buckle in torsion")
-		c.cover(coupled, standard.NotApplicable, "the shear centre is the centroid")
-		return
-	case section.ISection, section.Bar:
-		c.cover(coupled, standard.NotApplicable, "the shear centre is the centroid")
-	case section.Given:
-		if math.IsNaN(sec.It) {
-			if c.pressed {
-				c.undecided(torsion, clause, "state I_t and I_w of the section, or check torsional buckling by hand")
-			} else {
-				c.cover(torsion, standard.NotApplicable, "no combination compresses the member")
-			}
-			return
-		}
-		c.cover(coupled, standard.NotApplicable, "taken as doubly symmetric")
-		c.assume("the section '%s' is doubly symmetric", sec.Name)
-	default:
-		rule = coupled
-		c.cover(torsion, standard.NotApplicable, "torsion goes with bending: see "+coupled)
-	}
-	c.group(rule)
-	unequal := sec.Shape.Kind == section.Angle && math.Abs(sec.Shape.Depth-sec.Shape.Width) > 1e-9
-	switch {
-	case !c.pressed:
-		c.cover(rule, standard.NotApplicable, "no combination compresses the member")
-		return
-	case c.class == 0:
-		c.undecided(rule, clause, c.why)
-		return
-	case !c.f.Stands[0] || !c.f.Stands[1]:
-		c.undecided(rule, clause, "the ends and holds do not keep the member in place")
-		return
-	case c.minor.letter == "":
-		c.undecided(rule, clause, c.minor.row)
-		return
-	case unequal:
-		c.undecided(rule, clause, "sections without an axis of symmetry are not covered: solve the cubic of flexural-torsional buckling by hand")
-		return
-	}
-	c.torsionalResistance(rule)
-	n, k := c.worst(0, c.f.Member.Height)
-	c.s.Take(symNEdT, n, c.f.Combinations[k].Name)
-	u := c.s.Do(doUT)
-	c.add(rule, clause, k, n, c.s.At(symNbT), unit.Force, u, c.f.Limit())
-}
-
-func (c *calc) torsionalResistance(rule string) {
-	sec := c.f.Member.Section
-	title := sec.Title()
-	iw := standard.Warping(sec)
-	if math.IsNaN(iw) {
-		iw = 0
-		c.assume("I_w = 0, as it is not stated")
-	}
-	c.s.Take(symIt, standard.KnownOrZero(sec.It), title)
-	c.s.Take(symIw, standard.KnownOrZero(iw), title)
-	offset := math.Hypot(sec.SMajor, sec.SMinor)
-	if rule == "torsional-buckling" {
-		offset = 0
-	}
-	c.s.Take(symY0, offset, title)
-	c.s.Do(doI0)
-	if c.f.TwistFree {
-		c.assume("an end is free to twist: warping not counted")
-		c.s.Do(doNTFree)
-	} else {
-		held := "twist held at both ends"
-		for _, h := range c.f.Member.Holds {
-			if h.Twist {
-				held = "twist held at both ends and at the holds against twist"
-			}
-		}
-		switch {
-		case c.f.TwistK != 1:
-			c.assume("K = %s for twist (stated)", unit.Number(c.f.TwistK, 3))
-		default:
-			c.assume("%s, warping free", held)
-		}
-		c.s.Take(symLT, c.f.Twist*c.f.TwistK, held)
-		c.s.Do(doNT)
-	}
-	if rule == "flexural-torsional-buckling" {
-		// the shear centre lies on an axis of symmetry: buckling about that axis
-		// goes with torsion
-		c.s.Do(doBeta)
-		if math.Abs(sec.SMajor) >= math.Abs(sec.SMinor) {
-			c.criticalOf(0)
-			c.s.Do(doNTFy)
-		} else {
-			c.criticalOf(1)
-			c.s.Do(doNTFz)
-		}
-		c.s.Do(doNcrTF)
-	} else {
-		c.s.Do(doNcrT)
-	}
-	if c.slender {
-		c.s.Do(doLamTEff)
-	} else {
-		c.s.Do(doLamT)
-	}
-	c.s.Take(symAlT, alphas[c.minor.letter], "curve "+c.minor.letter+" of z–z, 6.3.1.4(3)")
-	c.s.Do(doPhiT)
-	c.s.Do(doChiT)
-	if c.slender {
-		c.s.Do(doNbTEff)
-	} else {
-		c.s.Do(doNbT)
+		c.do(x.doNb)
 	}
 }
 
@@ -494,38 +385,10 @@ func (c *calc) criticalOf(a int) {
 	if c.s.Recorded() {
 		source = c.f.StretchName(a, longest)
 	}
-	c.s.Take(x.l, longest.Length(), source)
-	c.s.Take(x.k, longest.K, source)
-	c.s.Do(x.doLcr)
-	c.s.Do(x.doNcr)
-}
-
-// bending says what is left to a person when the member bends.
-func (c *calc) bending() {
-	type line struct {
-		rule, hand string
-		axes       []int
-	}
-	lines := []line{
-		{"section-bending-major", "bending about y–y: check 6.2.5 by hand", []int{0}},
-		{"section-bending-minor", "bending about z–z: check 6.2.5 by hand", []int{1}},
-		{"section-shear-major", "shear with bending about y–y: check 6.2.6 by hand", []int{0}},
-		{"section-shear-minor", "shear with bending about z–z: check 6.2.6 by hand", []int{1}},
-		{"section-interaction", "bending with axial force: check 6.2.9 by hand", []int{0, 1}},
-		{"lateral-torsional-buckling", "bending about y–y: check 6.3.2 by hand", []int{0}},
-		{"member-interaction", "bending with axial force: check 6.3.3 by hand", []int{0, 1}},
-	}
-	for _, l := range lines {
-		bends := false
-		for _, a := range l.axes {
-			bends = bends || c.f.Bends[a]
-		}
-		if bends {
-			c.cover(l.rule, standard.NotCovered, l.hand)
-		} else {
-			c.cover(l.rule, standard.NotApplicable, "the loads do not bend the member")
-		}
-	}
+	c.take(x.l, longest.Length(), source)
+	c.take(x.k, longest.K, source)
+	c.do(x.doLcr)
+	c.do(x.doNcr)
 }
 
 // slenderness compares L_cr/i with the limit that the member sets itself.
@@ -540,10 +403,10 @@ func (c *calc) slenderness() {
 	run := func(a int) float64 {
 		x := axes[a]
 		c.criticalOf(a)
-		c.s.Do(x.doR)
-		c.s.Do(x.doSlender)
-		c.s.Take(x.limit, limit, "limit of the member")
-		return c.s.Do(x.doLimitU)
+		c.do(x.doR)
+		c.do(x.doSlender)
+		c.take(x.limit, limit, "limit of the member")
+		return c.do(x.doLimitU)
 	}
 	worst, at := math.Inf(-1), 0
 	for a := range axes {

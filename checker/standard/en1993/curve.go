@@ -26,7 +26,11 @@ func isS460(m *model.Material) bool {
 // curves chooses the buckling curves about the major and the minor axis by
 // Table 6.2. The rows of I sections speak of the axis along the flanges (y–y)
 // and the axis along the web (z–z), whichever of them is the stronger.
-func curves(s *model.Section, s460 bool) (major, minor curve) {
+func curves(s *model.Section, s460 bool) (major, minor curve) { return curvesOf(s, s460, nil) }
+
+// curvesOf is curves; rolled gives the second column for rolled I sections where
+// an edition has its own.
+func curvesOf(s *model.Section, s460 bool, rolled func(slim bool, tf float64) (y, z string)) (major, minor curve) {
 	if s.CurveMajor != "" || s.CurveMinor != "" {
 		state := func(letter string) curve {
 			if letter == "" {
@@ -68,6 +72,9 @@ func curves(s *model.Section, s460 bool) (major, minor curve) {
 		return same("b", "L sections")
 	case section.ISection:
 		y, z := curvesI(sh, pick)
+		if s460 && rolled != nil && sh.Made != section.Welded {
+			y.letter, z.letter = rolled(sh.Depth > 1.2*sh.Width*(1+1e-9), sh.Flange)
+		}
 		if s.Turned {
 			return z, y
 		}

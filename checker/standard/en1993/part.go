@@ -109,37 +109,37 @@ func (c *calc) classify() (int, string) {
 	sh := m.Section.Shape
 	title := m.Section.Title()
 	if stated := m.Section.Class; stated > 0 {
-		c.s.Take(symClass, float64(stated), "stated with the section")
+		c.take(symClass, float64(stated), "stated with the section")
 		if stated == 4 {
 			return 0, "the section is stated as class 4, whose effective area cannot be found without its plates"
 		}
 		return stated, ""
 	}
-	c.s.Do(doEps)
+	c.do(doEps)
 	var kind *shape
 	switch sh.Kind {
 	case section.Bar, section.Rod:
-		c.s.Take(symClass, 1, "a solid section has no plates that could buckle")
+		c.take(symClass, 1, "a solid section has no plates that could buckle")
 		return 1, ""
 	case section.Pipe:
-		c.s.Take(symD, sh.Diameter, title)
-		c.s.Take(symT, sh.Wall, title)
-		class := c.classOf(c.s.Do(doDt), c.s.Do(doDt1), c.s.Do(doDt2), c.s.Do(doDt3))
-		c.s.Take(symClass, float64(class), "Table 5.2 sheet 3")
+		c.take(symD, sh.Diameter, title)
+		c.take(symT, sh.Wall, title)
+		class := c.classOf(c.do(doDt), c.do(doDt1), c.do(doDt2), c.do(doDt3))
+		c.take(symClass, float64(class), "Table 5.2 sheet 3")
 		if class == 4 {
 			return 0, "circular hollow sections of class 4 are outside EN 1993-1-1; see EN 1993-1-6"
 		}
 		return class, ""
 	case section.Angle:
-		c.s.Take(symH, sh.Depth, title)
-		c.s.Take(symB, sh.Width, title)
-		c.s.Take(symT, sh.Wall, title)
-		ht, bht := c.s.Do(doHt), c.s.Do(doBht)
+		c.take(symH, sh.Depth, title)
+		c.take(symB, sh.Width, title)
+		c.take(symT, sh.Wall, title)
+		ht, bht := c.do(doHt), c.do(doBht)
 		class := 4
-		if ht <= c.s.Do(doHt3) && bht <= c.s.Do(doBht3) {
+		if ht <= c.do(doHt3) && bht <= c.do(doBht3) {
 			class = 3
 		}
-		c.s.Take(symClass, float64(class), "Table 5.2 sheet 3")
+		c.take(symClass, float64(class), "Table 5.2 sheet 3")
 		if class == 4 {
 			return 0, "angles of class 4: the effective section shifts its centroid, which brings bending"
 		}
@@ -149,7 +149,7 @@ func (c *calc) classify() (int, string) {
 		if sh.OuterRadius == 0 {
 			kind = &shapeBox
 		}
-		c.s.Take(symT, sh.Wall, title)
+		c.take(symT, sh.Wall, title)
 	case section.ISection:
 		kind = &shapeI
 	case section.Channel:
@@ -159,38 +159,38 @@ func (c *calc) classify() (int, string) {
 	default:
 		return 0, "the class of a section whose plates are not known must be stated: class = 1, 2 or 3"
 	}
-	c.s.Take(symH, sh.Depth, title)
-	c.s.Take(symB, sh.Width, title)
+	c.take(symH, sh.Depth, title)
+	c.take(symB, sh.Width, title)
 	if sh.Kind != section.Tube {
-		c.s.Take(symTw, sh.Web, title)
-		c.s.Take(symTf, sh.Flange, title)
-		c.s.Take(symR, sh.Root, title)
+		c.take(symTw, sh.Web, title)
+		c.take(symTf, sh.Flange, title)
+		c.take(symR, sh.Root, title)
 	}
 	worst := 1
 	for _, p := range kind.parts {
-		c.s.Do(p.doC)
-		class := c.classOf(c.s.Do(p.doRatio), c.s.Do(p.do1), c.s.Do(p.do2), c.s.Do(p.do3))
-		c.s.Take(p.class, float64(class), "Table 5.2")
+		c.do(p.doC)
+		class := c.classOf(c.do(p.doRatio), c.do(p.do1), c.do(p.do2), c.do(p.do3))
+		c.take(p.class, float64(class), "Table 5.2")
 		worst = max(worst, class)
 	}
-	c.s.Take(symClass, float64(worst), "5.5.2(6)")
+	c.take(symClass, float64(worst), "5.5.2(6)")
 	if worst < 4 {
 		return worst, ""
 	}
 	for _, p := range kind.parts {
-		lam := c.s.Do(p.doLamP)
+		lam := c.do(p.doLamP)
 		// no reduction up to 0.673 (internal, psi = 1) and 0.748 (outstand)
 		limit := 0.748
 		if p.internal {
 			limit = 0.5 + 0.173205080756887729 // 0.5 + sqrt(0.085 - 0.055)
 		}
 		if lam <= limit {
-			c.s.Do(p.doRhoFull)
+			c.do(p.doRhoFull)
 		} else {
-			c.s.Do(p.doRho)
+			c.do(p.doRho)
 		}
 	}
-	c.s.Do(kind.doArea)
+	c.do(kind.doArea)
 	if sh.Kind == section.Channel || sh.Kind == section.Tee {
 		return 0, fmt.Sprintf("%ss of class 4: the effective section shifts its centroid, which brings bending (6.2.4(4))", sh.Kind)
 	}

@@ -33,20 +33,30 @@ function settings(params, token, next) {
   return Promise.resolve(next(params, token)).then((values) => (Array.isArray(values) ? values.map(own) : values));
 }
 
+/** explain tells what is wrong; it is not waited for, since a message stays open until somebody answers it. */
+async function explain(problem) {
+  const answer = await vscode.window.showErrorMessage(`kern: ${problem}`, 'Open Settings');
+  if (answer) await vscode.commands.executeCommand('workbench.action.openSettings', 'kern.server.path');
+}
+
 async function start(context) {
   found = server.find(vscode.workspace.getConfiguration('kern').get('server.path', ''), context.extensionPath, process.env.PATH);
   if (found.problem) {
     output.error(found.problem);
     showState();
-    const answer = await vscode.window.showErrorMessage(`kern: ${found.problem}`, 'Open Settings');
-    if (answer) await vscode.commands.executeCommand('workbench.action.openSettings', 'kern.server.path');
+    explain(found.problem);
     return;
   }
   output.info(`server: ${found.command}, from ${found.from}`);
   client = new LanguageClient('kern', 'kern', { command: found.command, args: ['lsp'] }, {
     documentSelector: [{ language: 'kern', scheme: 'file' }, { language: 'kern', scheme: 'untitled' }],
     outputChannel: output,
-    middleware: { workspace: { configuration: settings } },
+    middleware: {
+      workspace: {
+        configuration: settings,
+        didChangeConfiguration: (sections, next) => (stopping ? Promise.resolve() : next(sections)),
+      },
+    },
   });
   client.onDidChangeState(showState);
   showState();
@@ -66,9 +76,14 @@ async function stop() {
 }
 
 let turn = Promise.resolve(); // starts and stops, one after the other
+let stopping = false; // the server is about to go: it is told nothing more
 
 function restart(context) {
-  turn = turn.then(stop).then(() => start(context));
+  stopping = true;
+  turn = turn.then(stop).then(() => {
+    stopping = false;
+    return start(context);
+  });
   return turn;
 }
 
@@ -95,7 +110,6 @@ function activate(context) {
   context.subscriptions.push(output, item, vscode.workspace.onDidChangeConfiguration((e) => {
     if (e.affectsConfiguration('kern.server.path')) restart(context);
   }));
-  // Not waited for: an error message stays open until somebody answers it.
   turn = start(context);
 }
 

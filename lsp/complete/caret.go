@@ -1,4 +1,4 @@
-package lsp
+package complete
 
 import (
 	"strings"
@@ -113,7 +113,9 @@ func (c *caret) read(from int32) bool {
 		}
 		switch t.Kind {
 		case lang.Comment:
-			return false
+			if t.End >= c.offset {
+				return false
+			}
 		case lang.OpenBrace, lang.CloseBrace, lang.Semicolon:
 			c.start = t.End
 		}
@@ -128,15 +130,15 @@ func (c *caret) read(from int32) bool {
 			if c.offset == t.End && t.Flaw != lang.OpenString {
 				break
 			}
-			quote := quoteLength(c.text[t.Start:])
-			if c.offset < t.Start+quote || t.Flaw == lang.CurlyQuotes && c.offset > t.End-quote {
+			quote := openingQuote(c.text[t.Start:])
+			if c.offset < t.Start+quote || t.Flaw == lang.CurlyQuotes && c.offset > t.End-closingQuote(c.text[:t.End]) {
 				return false
 			}
 			c.quoted, c.closed = true, t.Flaw != lang.OpenString
 			c.word.Start = t.Start + quote
 			c.whole = lang.Span{Start: c.word.Start, End: c.offset}
 			if c.closed {
-				c.whole.End = t.End - quoteLength(c.text[:t.End])
+				c.whole.End = t.End - closingQuote(c.text[:t.End])
 			}
 		case lang.Number, lang.Operator, lang.Newline:
 			if c.offset < t.End {
@@ -151,13 +153,28 @@ func (c *caret) read(from int32) bool {
 	return true
 }
 
-func quoteLength(s string) int32 {
-	for _, q := range []string{"“", "”", "„", "«", "»"} {
-		if strings.HasPrefix(s, q) || strings.HasSuffix(s, q) {
+// quotes are the quotation marks that a text may stand between; only straight
+// ones are right.
+var quotes = []string{`"`, "“", "”", "„", "«", "»"}
+
+// openingQuote is the length of the mark that a text begins with.
+func openingQuote(s string) int32 {
+	for _, q := range quotes {
+		if strings.HasPrefix(s, q) {
 			return int32(len(q))
 		}
 	}
-	return 1
+	return 0
+}
+
+// closingQuote is the length of the mark that a text ends with.
+func closingQuote(s string) int32 {
+	for _, q := range quotes {
+		if strings.HasSuffix(s, q) {
+			return int32(len(q))
+		}
+	}
+	return 0
 }
 
 // joined stretches the word over the signs that belong to it: a unit behind a
@@ -215,30 +232,23 @@ func (c *caret) stretch(from int32, signs string) {
 func (c *caret) parts(end int32) {
 	stop := c.word.Start
 	if c.quoted {
-		stop -= quoteLength(c.text[:stop])
+		stop -= closingQuote(c.text[:stop])
 	}
-	stmt := lineOf(c.text[c.start:max(c.start, stop)])
-	if stmt == nil {
-		return
+	if stmt := lineOf(c.text[c.start:max(c.start, stop)]); stmt != nil {
+		c.head, c.before = stmt.Word, stmt.Args
 	}
-	c.head, c.before = stmt.Word, stmt.Args
 	rest := max(c.whole.End, c.offset)
 	if c.quoted && c.closed {
-		rest += quoteLength(c.text[c.whole.End:])
+		rest += openingQuote(c.text[c.whole.End:])
 	}
-	tail := lang.Tokens(c.text[rest:end])
-	to := rest
-	for _, t := range tail {
+	for _, t := range lang.Tokens(c.text[rest:end]) {
 		switch t.Kind {
 		case lang.OpenBrace, lang.CloseBrace, lang.Semicolon, lang.Comment:
-			end = rest + t.Start
-		}
-		if to = rest + t.End; to > end {
-			break
+			end = min(end, rest+t.Start)
 		}
 	}
-	// a word before the rest makes it read as parts of a statement
-	if text := strings.TrimSpace(c.text[rest:max(rest, end)]); text != "" {
+	// a word before the rest makes it read as the parts of a statement
+	if text := strings.TrimSpace(c.text[rest:end]); text != "" {
 		if s := lineOf("x " + text); s != nil {
 			c.after = s.Args
 		}
