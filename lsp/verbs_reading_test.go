@@ -16,7 +16,7 @@ func init() {
 	verbs["hover"] = func(s *scene, args []string) {
 		for _, name := range args {
 			m := s.mark(name)
-			raw, err := s.ask("textDocument/hover", s.at(m.file, m.span.Start))
+			raw, err := s.ask("textDocument/hover", s.place(m.file, m.span.Start))
 			if len(args) > 1 {
 				s.print("%s: ", name)
 			}
@@ -127,8 +127,8 @@ func init() {
 	}
 }
 
-// at is the parameters of a request about a place.
-func (s *scene) at(file string, offset int32) string {
+// place is the parameters of a request about a place.
+func (s *scene) place(file string, offset int32) string {
 	return string(remarshal(s.t, map[string]any{"textDocument": map[string]any{"uri": s.uri(file)}, "position": slowPosition(s.texts[file], offset, s.unit)}))
 }
 

@@ -243,12 +243,8 @@ func (env *Env) assume(r action.Rules) {
 	if len(psi) > 0 {
 		say("psi_0, psi_1, psi_2: %s", strings.Join(psi, "; "))
 	}
-	if national := action.NationalsOf(r.Annex); r.Annex != action.Recommended.Annex {
-		var rows []string
-		for _, n := range national {
-			rows = append(rows, n.What+" "+n.Value+" ("+n.Source+")")
-		}
-		say("annex %s: %s; all else as recommended", r.Annex, strings.Join(rows, ", "))
+	if r.Annex != action.Recommended.Annex {
+		say("annex %s: %s; all else as recommended", r.Annex, sourced(action.NationalsOf(r.Annex)))
 	}
 	switch {
 	case permanent > 1 && r.Independent:
@@ -275,6 +271,23 @@ func (env *Env) assume(r action.Rules) {
 	env.assumeExclusive()
 }
 
+// sourced writes national values, those of one source together.
+func sourced(rows []action.National) string {
+	var sources []string
+	values := map[string][]string{}
+	for _, n := range rows {
+		if values[n.Source] == nil {
+			sources = append(sources, n.Source)
+		}
+		values[n.Source] = append(values[n.Source], n.What+" "+n.Value)
+	}
+	for i, s := range sources {
+		sources[i] = strings.Join(values[s], ", ") + " (" + s + ")"
+	}
+	return strings.Join(sources, "; ")
+}
+
+// assumeExclusive lists the groups of which one acts at a time.
 func (env *Env) assumeExclusive() {
 	for _, group := range env.Exclusive {
 		var names []string

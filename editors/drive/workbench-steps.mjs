@@ -105,10 +105,56 @@ const steps = {
     assert.equal(w.read('boathouse/gallery.kern'), before);
   },
 
+  async 'results stand at the ends of lines'(w) {
+    const hint = await w.there('.view-line span[class*="dyn-rule"]', /^.?fails \d\.\d\d/);
+    assert.match(blanks(await w.line('column P4').innerText()), /column P4 "Prop below the stair landing" as P1 \{.*fails 1\.\d\d flexural-buckling-m/);
+    assert.match(blanks(await w.line('column P1').innerText()), /\{.*0\.\d\d flexural-buckling-m/);
+    assert.ok(hint);
+    await w.picture('8-hints');
+  },
+
+  async 'a lens leads to the working, which follows the text'(w) {
+    await w.goto(16, 1);
+    const verdict = await w.there('.codelens-decoration', /P4: fails 1\.\d\d/);
+    const top = (await verdict.boundingBox()).y;
+    const links = w.page.locator('.codelens-decoration a', { hasText: 'show working' });
+    let link;
+    for (const l of await links.all()) if (Math.abs((await l.boundingBox()).y - top) < 10) link = l;
+    await link.click();
+    await w.there('.tabs-container .tab', 'P4.md');
+    const page = w.page.locator('.editor-group-container', { has: w.page.locator('.tab', { hasText: 'P4.md' }) }).locator('.view-lines').first();
+    const shown = async () => blanks(await page.innerText());
+    await w.until('the working', async () => /P4/.test(await shown()) && /SHS 90x90x5/.test(await shown()));
+    assert.match(await shown(), /fails/);
+    await w.picture('9-working');
+    await w.goto(17, 13); // 96 kN becomes 6 kN
+    await w.page.keyboard.press('Delete');
+    await w.until('the working to follow', async () => /passes/.test(await shown()) && !/fails/.test(await shown()));
+    await w.revert();
+    await w.until('the working to follow back', async () => /fails/.test(await shown()));
+    await w.command('View: Close All Editors in Group');
+  },
+
+  async 'a hover shows verdicts, derivations and drawings'(w) {
+    await w.open('gallery.kern');
+    await w.goto(16, 8);
+    await w.hover();
+    const table = await w.there('.monaco-hover:not(.hidden) .hover-row table', 'flexural-buckling-major');
+    assert.match(await table.innerText(), /1\.18/);
+    await w.picture('10-hover-member');
+    await w.page.keyboard.press('Escape');
+    await w.goto(9, 17);
+    await w.hover();
+    const drawing = await w.there('.monaco-hover:not(.hidden) .hover-row img');
+    await w.until('the drawing', () => drawing.evaluate((e) => e.complete && e.naturalWidth > 50));
+    await w.picture('11-hover-section');
+    await w.page.keyboard.press('Escape');
+  },
+
   async 'a setting names another server, and a wrong one is explained'(w) {
     w.settings({ 'kern.server.path': '/nowhere/kern' });
     await w.there('.notification-list-item-message', "names '/nowhere/kern', which is not a program that can be run");
-    await w.picture('8-no-server');
+    await w.picture('12-no-server');
     w.settings({});
     await w.command('Notifications: Clear All Notifications');
     await w.command('kern: Show Status');
@@ -122,7 +168,7 @@ const steps = {
     await w.there('.squiggly-error');
     await w.command('kern: Open Output');
     await w.until('the log', async () => /server: .*bin\/kern, from the extension/.test(blanks(await w.page.locator('.panel .view-lines').innerText())));
-    await w.picture('9-output');
+    await w.picture('13-output');
     await w.command('View: Toggle Output');
   },
 };

@@ -161,6 +161,13 @@ export class Workbench {
     await this.page.locator('.tabs-container .tab.active:not(.dirty)').waitFor();
   }
 
+  /** hover shows what is said at the cursor. */
+  async hover() {
+    await this.page.keyboard.press('Control+k');
+    await this.page.keyboard.press('Control+i');
+    await this.page.locator('.monaco-hover:not(.hidden) .hover-row').first().waitFor();
+  }
+
   /** details opens what a suggestion has to say, beside the list. */
   async details() {
     const pane = this.page.locator('.suggest-details-container');

@@ -107,6 +107,10 @@ function activate(context) {
   command('kern.openOutput', () => output.show(true));
   command('kern.showWorkingHere', () => vscode.window.activeTextEditor && working.at(vscode.window.activeTextEditor));
   command(working.command, working.open);
+  context.subscriptions.push(working.provide((file, member) => {
+    if (!client) throw new Error('The server does not run.');
+    return client.sendRequest('workspace/executeCommand', { command: 'kern.working', arguments: [file, member] });
+  }));
   context.subscriptions.push(output, item, vscode.workspace.onDidChangeConfiguration((e) => {
     if (e.affectsConfiguration('kern.server.path')) restart(context);
   }));

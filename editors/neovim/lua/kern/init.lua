@@ -40,6 +40,18 @@ local function attached(client, buffer)
   end
 end
 
+-- capabilities adds what Neovim does but says of itself only in later releases.
+local function capabilities()
+  return vim.tbl_deep_extend('keep', vim.lsp.protocol.make_client_capabilities(), {
+    textDocument = {
+      formatting = { dynamicRegistration = false },
+      rangeFormatting = { dynamicRegistration = false },
+      codeLens = { dynamicRegistration = false },
+    },
+    workspace = { executeCommand = { dynamicRegistration = false } },
+  })
+end
+
 local running = {} -- client by root
 
 -- attach gives the buffer a server, one for each root.
@@ -57,6 +69,7 @@ function M.attach(buffer)
       root_dir = dir,
       workspace_folders = { { uri = vim.uri_from_fname(dir), name = vim.fn.fnamemodify(dir, ':t') } },
       settings = { kern = options.settings },
+      capabilities = capabilities(),
       on_attach = attached,
     }
     running[dir] = id
