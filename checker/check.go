@@ -13,6 +13,7 @@ import (
 	"kern/checker/standard"
 	"kern/checker/standard/elastic"
 	"kern/checker/standard/en1993"
+	"kern/checker/standard/en1993_2022"
 	"kern/lang"
 )
 
@@ -20,6 +21,7 @@ import (
 var standards = []standard.Standard{
 	elastic.Standard{},
 	en1993.Standard{},
+	en1993_2022.Standard,
 }
 
 func find(name string) standard.Standard {

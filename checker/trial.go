@@ -1,7 +1,6 @@
 package checker
 
 import (
-	"maps"
 	"math"
 
 	"kern/checker/model"
@@ -26,7 +25,15 @@ func Trial(c *model.Calculation, decl *lang.Decl, text string) []*Result {
 	}
 	d := f.Decls[0]
 	env := *c.Env
-	env.Names = maps.Clone(env.Names)
+	env.Names = map[string]*model.Named{}
+	for name, n := range c.Env.Names {
+		if n.Kind != model.MemberName {
+			env.Names[name] = n
+		}
+	}
+	for _, name := range leaning(c.Env, decl) {
+		env.Names[name] = c.Env.Names[name]
+	}
 	for i, s := range decl.Stmts {
 		if i >= len(d.Stmts) || d.Stmts[i].Word != s.Word {
 			return nil
@@ -49,6 +56,30 @@ func Trial(c *model.Calculation, decl *lang.Decl, text string) []*Result {
 	for _, m := range model.Members(&env, d, departable) {
 		if m.Name != "" {
 			out = append(out, evaluate(&env, m, combinations))
+		}
+	}
+	return out
+}
+
+// leaning are the members of a declaration and those that they are like, which
+// are all the members that matter to it.
+func leaning(env *model.Env, decl *lang.Decl) []string {
+	var out []string
+	seen := map[*lang.Decl]bool{}
+	for queue := []*lang.Decl{decl}; len(queue) > 0; {
+		d := queue[0]
+		queue = queue[1:]
+		if seen[d] {
+			continue
+		}
+		seen[d] = true
+		for _, s := range d.Stmts {
+			for _, e := range s.Args {
+				if n := env.Names[e.Text]; n != nil && e.Kind == lang.NameExpr && n.Kind == model.MemberName {
+					out = append(out, n.Name)
+					queue = append(queue, n.Place.Decl)
+				}
+			}
 		}
 	}
 	return out

@@ -19,6 +19,19 @@ var features = []feature{
 	formattingFeature,
 	completionFeature,
 	signatureFeature,
+	definitionFeature,
+	typeDefinitionFeature,
+	referencesFeature,
+	highlightFeature,
+	renameFeature,
+	renameFilesFeature,
+	symbolsFeature,
+	workspaceSymbolsFeature,
+	foldingFeature,
+	selectionFeature,
+	documentLinksFeature,
+	tokensFeature,
+	hierarchyFeature,
 }
 
 var documentsFeature = feature{

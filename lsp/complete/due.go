@@ -18,6 +18,8 @@ type scope struct {
 	tree   *lang.File
 	calc   *model.Calculation // nil for a file that no calculation reads
 	env    *model.Env
+
+	collected []use // see uses
 }
 
 // newScope reads a place. It is false where nothing can be offered.

@@ -136,29 +136,54 @@ type usage struct {
 	others []string // in other statements nearby
 }
 
-// usedUnits are the units of some dimensions that are used nearby.
-func (s *scope) usedUnits(dims []unit.Dim, word string) usage {
-	same, block, others := map[string]int{}, map[string]int{}, map[string]int{}
+// use is a unit in a statement near the place.
+type use struct {
+	word   string // of the statement
+	block  bool   // in the same block
+	symbol string
+	dim    unit.Dim
+}
+
+// uses are the units in the statements near the place; they are collected once.
+func (s *scope) uses() []use {
+	if s.collected != nil {
+		return s.collected
+	}
+	s.collected = []use{}
 	var own []*lang.Stmt
 	if s.parent != nil && s.parent.Body != nil {
 		own = s.parent.Body.Stmts
 	}
 	s.near(func(stmt *lang.Stmt) {
-		count := others
-		switch {
-		case stmt.Word == word:
-			count = same
-		case slices.Contains(own, stmt):
-			count = block
-		}
+		block := slices.Contains(own, stmt)
 		for _, a := range stmt.Args {
 			a.Walk(func(e *lang.Expr) {
-				if e.Kind == lang.QuantExpr && e.Unit.Symbol != "" && (dims == nil || slices.Contains(dims, e.Unit.Dim)) {
-					count[e.Unit.Symbol]++
+				if e.Kind == lang.QuantExpr && e.Unit.Symbol != "" {
+					s.collected = append(s.collected, use{stmt.Word, block, e.Unit.Symbol, e.Unit.Dim})
 				}
 			})
 		}
 	})
+	return s.collected
+}
+
+// usedUnits are the units of some dimensions that are used nearby; nil for all
+// dimensions.
+func (s *scope) usedUnits(dims []unit.Dim, word string) usage {
+	same, block, others := map[string]int{}, map[string]int{}, map[string]int{}
+	for _, u := range s.uses() {
+		if dims != nil && !slices.Contains(dims, u.dim) {
+			continue
+		}
+		switch {
+		case u.word == word:
+			same[u.symbol]++
+		case u.block:
+			block[u.symbol]++
+		default:
+			others[u.symbol]++
+		}
+	}
 	ordered := func(count map[string]int) []string {
 		var out []string
 		for symbol := range count {

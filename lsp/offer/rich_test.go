@@ -79,7 +79,7 @@ const more = "material s235 = \"S235\"\nover = 0.3 m ; under = over * 2\n\ncolum
 // everything: as it is, laid out, with other line ends, and with every blank line
 // taken out.
 func TestRich(t *testing.T) {
-	step := 3
+	step := 5
 	if testing.Short() {
 		step = 17
 	}
