@@ -58,7 +58,7 @@ func TestRefresh(t *testing.T) {
 		if c.Capabilities.Workspace == nil {
 			return ""
 		}
-		return protocol.MethodWorkspaceInlayHintRefresh
+		return protocol.MethodWorkspaceFoldingRangeRefresh
 	}})
 	s := start(t, t.TempDir())
 	s.initialize(`{}`, "", ".")
@@ -68,7 +68,7 @@ func TestRefresh(t *testing.T) {
 		defer s.mu.Unlock()
 		n := 0
 		for _, m := range s.asked {
-			if m == protocol.MethodWorkspaceInlayHintRefresh {
+			if m == protocol.MethodWorkspaceFoldingRangeRefresh {
 				n++
 			}
 		}

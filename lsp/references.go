@@ -6,7 +6,6 @@ import (
 	"kern/lang"
 
 	"go.lsp.dev/protocol"
-	"go.lsp.dev/uri"
 )
 
 var referencesFeature = feature{
@@ -78,7 +77,6 @@ func includers(ctx context.Context, f *File, name string, snapshots []*Snapshot)
 // that it leads to.
 type including struct {
 	file  string
-	uri   uri.URI
 	span  lang.Span
 	path  string // as written
 	leads string
@@ -102,7 +100,7 @@ func (s *Snapshot) includesOf(name string) []including {
 		for _, stmt := range d.Stmts {
 			if leads := s.project.Included(name, stmt); leads != "" {
 				arg := stmt.Args[0]
-				out = append(out, including{name, s.URI(name), moved(arg.Span, f.Starts[i]), arg.Text, leads})
+				out = append(out, including{name, moved(arg.Span, f.Starts[i]), arg.Text, leads})
 			}
 		}
 	}

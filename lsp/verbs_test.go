@@ -141,10 +141,11 @@ func init() {
 		s.published = 0
 	}
 	verbs["pull"] = func(s *scene, args []string) { s.pull(args) }
-	// asked: what the server asked since this was asked last
-	verbs["asked"] = func(s *scene, _ []string) {
+	// asked [METHOD]: what the server asked since this was asked last
+	verbs["asked"] = func(s *scene, args []string) {
 		s.mu.Lock()
 		defer s.mu.Unlock()
+		s.session.asked = slices.DeleteFunc(s.session.asked, func(m string) bool { return len(args) > 0 && m != args[0] })
 		slices.Sort(s.session.asked) // requests of their own, in no order
 		for _, a := range s.session.asked {
 			s.print("%s\n", a)

@@ -55,7 +55,7 @@ func (s *scope) texts(d duty) (out []Item, more bool) {
 			x.Text, x.Snippet = `"`+text, `"`+text+`$1"`
 		case !s.quoted && !strings.HasPrefix(text, `"`):
 			x.Text = `"` + text + `"`
-		case !s.closed && x.Kind != FamilyItem:
+		case s.quoted && !s.closed && x.Kind != FamilyItem:
 			x.Text = text + `"`
 		}
 	}

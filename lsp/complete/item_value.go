@@ -55,7 +55,10 @@ func (s *scope) valuesFor(d duty) (list []Item, more bool) {
 	case "PLACE":
 		return s.places(), false
 	case "LEVEL":
-		return append(s.levels(s.head == "load"), s.operands(d.dims)...), false
+		if s.head == "load" {
+			return s.levels(true), false // a floor lies at a level, not at a height
+		}
+		return append(s.levels(false), s.operands(d.dims)...), false
 	}
 	return s.operands(d.dims), false
 }
