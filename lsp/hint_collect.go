@@ -43,6 +43,9 @@ type collector struct {
 	within   lang.Span
 	out      []hint
 
+	used     *usage          // nil until somebody asks
+	familiar map[string]bool // whether a unit is a customary one, by symbol
+
 	decl  *lang.Decl // the one being read
 	start int32      // where it begins in the file
 }
@@ -71,10 +74,8 @@ func hintsIn(f *File, within lang.Span, settings Settings) []hint {
 // add adds a hint at an offset of the declaration, if it lies in the part that
 // was asked for.
 func (c *collector) add(at int32, kind hintKind, label string, tip func(p *output.Page)) {
-	on := map[hintKind]bool{resultHint: c.settings.HintResults, sectionHint: c.settings.HintSections, strengthHint: c.settings.HintStrengths,
-		valueHint: c.settings.HintValues, unitHint: c.settings.HintUnits, assumptionHint: c.settings.HintAssumptions}[kind]
 	offset := c.start + at
-	if !on || label == "" || offset < c.within.Start || offset > c.within.End {
+	if !c.shows(kind) || label == "" || offset < c.within.Start || offset > c.within.End {
 		return
 	}
 	h := hint{offset: offset, kind: kind, label: label}
@@ -86,6 +87,23 @@ func (c *collector) add(at int32, kind hintKind, label string, tip func(p *outpu
 		}
 	}
 	c.out = append(c.out, h)
+}
+
+// shows tells whether the settings want a kind of hint.
+func (c *collector) shows(kind hintKind) bool {
+	switch kind {
+	case resultHint:
+		return c.settings.HintResults
+	case sectionHint:
+		return c.settings.HintSections
+	case strengthHint:
+		return c.settings.HintStrengths
+	case valueHint:
+		return c.settings.HintValues
+	case unitHint:
+		return c.settings.HintUnits
+	}
+	return c.settings.HintAssumptions
 }
 
 // units are the units that results of the file are shown in.
@@ -187,6 +205,9 @@ func (c *collector) named(s *lang.Stmt, value []*lang.Expr) {
 // mixed converts quantities whose units are of the other system than those that
 // results are shown in.
 func (c *collector) mixed(s *lang.Stmt) {
+	if !c.shows(unitHint) {
+		return
+	}
 	units := c.units()
 	var look func(s *lang.Stmt)
 	look = func(s *lang.Stmt) {
@@ -196,14 +217,14 @@ func (c *collector) mixed(s *lang.Stmt) {
 				switch {
 				case e.Kind == lang.BinaryExpr && e.Text == "ft-in":
 					inches = true
-					if target := units.For(unit.Length); !customary(target) {
+					if target := units.For(unit.Length); !c.customary(target) {
 						if q, p := lang.Eval(e, nil); p == nil {
 							c.converted(e, q, target)
 						}
 					}
 				case e.Kind == lang.QuantExpr && e.Unit.Symbol != "" && !inches:
 					q := unit.Quantity{Value: e.Value * e.Unit.Factor, Dim: e.Unit.Dim}
-					if target := suitable(units, q); customary(e.Unit) != customary(target) && target.Dim == e.Unit.Dim {
+					if target := suitable(units, q); c.customary(e.Unit) != c.customary(target) && target.Dim == e.Unit.Dim {
 						c.converted(e, q, target)
 					}
 				case e.Kind == lang.QuantExpr && e.Text == "in":
@@ -220,6 +241,20 @@ func (c *collector) mixed(s *lang.Stmt) {
 	look(s)
 }
 
+// customary is the function of that name, with a memory.
+func (c *collector) customary(u unit.Unit) bool {
+	is, known := c.familiar[u.Symbol]
+	if !known {
+		if c.familiar == nil {
+			c.familiar = map[string]bool{}
+		}
+		is = customary(u)
+		c.familiar[u.Symbol] = is
+	}
+	return is
+}
+
+// converted gives a quantity in a unit of the results' system.
 func (c *collector) converted(e *lang.Expr, q unit.Quantity, target unit.Unit) {
 	c.add(e.Span.End, unitHint, "= "+unit.Short(q.Value/target.Factor, 4)+" "+target.Symbol, func(p *output.Page) {
 		written := c.decl.Text[e.Span.Start:e.Span.End]
@@ -253,12 +288,9 @@ func (c *collector) basis(s *lang.Stmt) {
 // assumedOfAll are the assumptions of the first member of the calculation that
 // was checked.
 func (c *collector) assumedOfAll() []string {
-	own := map[*model.Member]bool{}
-	for _, m := range c.calc.Members {
-		own[m] = true
-	}
 	for _, r := range c.report.Members {
-		if own[r.Member] && len(r.Assumptions) > 0 {
+		own := slices.ContainsFunc(c.calc.Files, func(f *lang.File) bool { return f.Name == r.Member.Decl.File.Name })
+		if own && len(r.Assumptions) > 0 {
 			return r.Assumptions
 		}
 	}

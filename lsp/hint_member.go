@@ -28,7 +28,7 @@ func (c *collector) member(s *lang.Stmt) {
 	}
 	c.results(s, own)
 	r := own[0] // several names of one block differ in their names alone
-	if len(r.Missing) == 0 {
+	if len(r.Missing) == 0 && c.shows(assumptionHint) {
 		c.assumptions(s, r)
 	}
 	if s.Body == nil {
@@ -168,8 +168,9 @@ func (c *collector) said(s *lang.Stmt, m *model.Member, words string) *lang.Stmt
 	if s.Body == nil {
 		return nil
 	}
+	first, _, _ := strings.Cut(words, " ")
 	for _, b := range s.Body.Stmts {
-		if strings.HasPrefix(strings.Join(strings.Fields(b.Line.Of(c.decl.Text)), " ")+" ", words+" ") {
+		if b.Word == first && strings.HasPrefix(strings.Join(strings.Fields(b.Line.Of(c.decl.Text)), " ")+" ", words+" ") {
 			return b
 		}
 	}

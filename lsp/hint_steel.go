@@ -18,7 +18,42 @@ func (c *collector) declaredSection(s *lang.Stmt) {
 	if n == nil {
 		return
 	}
-	c.section(s, c.calc.Env.Sections[n.Index], densityOf(c.report, n))
+	density, known := c.usage().densities[n.Place]
+	if !known {
+		density = steelDensity
+	}
+	c.section(s, c.calc.Env.Sections[n.Index], density)
+}
+
+// usage is what the members of a report make of the sections and materials that
+// calculations name, by where these are named.
+type usage struct {
+	densities   map[lang.Place]float64   // of a section's materials; NaN where they differ
+	thicknesses map[lang.Place][]float64 // of a material's sections, each once
+}
+
+// usage goes through the members once.
+func (c *collector) usage() *usage {
+	if c.used != nil {
+		return c.used
+	}
+	u := &usage{densities: map[lang.Place]float64{}, thicknesses: map[lang.Place][]float64{}}
+	c.used = u
+	for _, r := range c.report.Members {
+		sec, m := r.Member.Section, r.Member.Material
+		if sec == nil || m == nil {
+			continue
+		}
+		if d, seen := u.densities[sec.Place]; !seen {
+			u.densities[sec.Place] = m.Density
+		} else if d != m.Density {
+			u.densities[sec.Place] = math.NaN()
+		}
+		if list := u.thicknesses[m.Place]; !slices.Contains(list, sec.Thickness) {
+			u.thicknesses[m.Place] = append(list, sec.Thickness)
+		}
+	}
+	return u
 }
 
 // section gives the properties of a section and what is assumed about it.
@@ -76,17 +111,10 @@ func (c *collector) declaredMaterial(s *lang.Stmt) {
 		return
 	}
 	table31 := c.calc.Env.Basis.TableFy
-	var used []float64 // strengths, ascending
-	thick := map[float64]float64{}
-	for _, r := range c.report.Users(n) {
-		if r.Member.Material == nil || r.Member.Material.Name != m.Name || r.Member.Section == nil {
-			continue
-		}
-		if fy, _, _, ok := m.Strength(r.Member.Section.Thickness, table31); ok {
-			if _, seen := thick[fy]; !seen {
-				used = append(used, fy)
-			}
-			thick[fy] = max(thick[fy], r.Member.Section.Thickness)
+	var used []float64 // strengths, each once
+	for _, t := range c.usage().thicknesses[n.Place] {
+		if fy, _, _, ok := m.Strength(t, table31); ok && !slices.Contains(used, fy) {
+			used = append(used, fy)
 		}
 	}
 	slices.Sort(used)

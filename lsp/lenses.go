@@ -46,14 +46,18 @@ type lens struct {
 // lensesOf gives the lenses of a file: two above each member. Members of one
 // block that say the same share them.
 func lensesOf(f *File) []lens {
-	var out []lens
 	own := f.Report().ResultsIn(f.Name)
+	out := make([]lens, 0, 2*len(own))
 	for len(own) > 0 {
 		n := 1
 		for n < len(own) && own[n].Member.Stmt == own[0].Member.Stmt {
 			n++
 		}
-		for _, g := range groupsOf(own[:n], lensTitle) {
+		groups := []group{{results: own[:1]}}
+		if n > 1 {
+			groups = groupsOf(own[:n], lensTitle)
+		}
+		for _, g := range groups {
 			var names []string
 			for _, r := range g.results {
 				names = append(names, r.Name)

@@ -319,7 +319,7 @@ func (f *Frame) Assumptions() []string {
 		out = append(out, "self-weight not counted")
 	}
 	if f.Env.Basis.Actions == "" {
-		if len(f.Env.Combinations) > 0 {
+		if len(f.Env.Automatic) == 0 {
 			out = append(out, "only the combinations written out are checked (no actions standard is stated)")
 		} else {
 			out = append(out, "all cases summed with factor 1 (no actions standard is stated)")

@@ -5,6 +5,8 @@ import assert from 'node:assert/strict';
 import { Workbench } from './workbench.mjs';
 
 const [dir, project, vsix, pictures] = process.argv.slice(2);
+const gallery = 'boathouse/gallery.kern';
+const canopy = 'slips/canopy.kern';
 const blanks = (s) => s.replaceAll('\u00a0', ' ');
 
 const steps = {
@@ -41,30 +43,30 @@ const steps = {
   async 'a mended number clears its mark, and only its'(w) {
     await w.open('canopy.kern');
     const before = await w.until('five marks', async () => (await w.squiggles('error')) >= 5 && w.squiggles('error'));
-    await w.goto(24, 17);
+    await w.cursor(canopy, '3,2 m', 1);
     await w.page.keyboard.press('Delete');
     await w.page.keyboard.type('.');
     await w.until('one mark less', async () => (await w.squiggles('error')) === before - 1);
     await w.page.keyboard.press('Escape');
     await w.save();
-    assert.match(w.read('slips/canopy.kern'), /height {3}= 3\.2 m\n {4}load G 4 t/);
+    assert.match(w.read(canopy), /height {3}= 3\.2 m\n {4}load G 4 t/);
     await w.picture('3-slips');
   },
 
   async 'a quick fix mends a unit, and is saved'(w) {
     const before = await w.squiggles('error');
-    await w.goto(18, 15);
+    await w.cursor(canopy, 'Kn');
     await w.page.keyboard.press('Control+.');
     await w.there('.action-widget .monaco-list-row', 'Write kN');
     await w.picture('4-quick-fix');
     await w.page.keyboard.press('Enter');
     await w.until('one mark less', async () => (await w.squiggles('error')) === before - 1);
     await w.save();
-    assert.match(w.read('slips/canopy.kern'), /load S 25 kN\n/);
+    assert.match(w.read(canopy), /load S 25 kN\n/);
   },
 
   async 'completion knows the place'(w) {
-    await w.goto(28, 40);
+    await w.cursor(canopy, 'column K3');
     await w.page.keyboard.press('End');
     await w.page.keyboard.press('Enter');
     await w.page.keyboard.type('hol');
@@ -86,7 +88,7 @@ const steps = {
   },
 
   async 'the form of a statement is shown while it is typed'(w) {
-    await w.goto(33, 19);
+    await w.cursor(canopy, 'load S 14 kN', 12);
     await w.page.keyboard.press('Enter');
     await w.page.keyboard.type('load G 3 kN across ');
     await w.there('.parameter-hints-widget.visible', 'across AXIS at PLACE');
@@ -96,13 +98,13 @@ const steps = {
 
   async 'formatting gives the one layout'(w) {
     await w.open('gallery.kern');
-    const before = w.read('boathouse/gallery.kern');
-    await w.goto(12, 5);
+    const before = w.read(gallery);
+    await w.cursor(gallery, 'load G 62 kN');
     await w.page.keyboard.type('   ');
     await w.command('Format Document');
     await w.until('the layout', async () => /^ {4}load G 62 kN$/.test(blanks(await w.line('load G 62').innerText())));
     await w.save();
-    assert.equal(w.read('boathouse/gallery.kern'), before);
+    assert.equal(w.read(gallery), before);
   },
 
   async 'results stand at the ends of lines'(w) {
@@ -115,7 +117,7 @@ const steps = {
   },
 
   async 'a lens leads to the working, which follows the text'(w) {
-    await w.goto(16, 1);
+    await w.cursor(gallery, 'column P4');
     const verdict = await w.there('.codelens-decoration', /P4: fails 1\.\d\d/);
     const top = (await verdict.boundingBox()).y;
     const links = w.page.locator('.codelens-decoration a', { hasText: 'show working' });
@@ -128,7 +130,7 @@ const steps = {
     await w.until('the working', async () => /P4/.test(await shown()) && /SHS 90x90x5/.test(await shown()));
     assert.match(await shown(), /fails/);
     await w.picture('9-working');
-    await w.goto(17, 13); // 96 kN becomes 6 kN
+    await w.cursor(gallery, '96 kN'); // becomes 6 kN
     await w.page.keyboard.press('Delete');
     await w.until('the working to follow', async () => /passes/.test(await shown()) && !/fails/.test(await shown()));
     await w.revert();
@@ -138,13 +140,13 @@ const steps = {
 
   async 'a hover shows verdicts, derivations and drawings'(w) {
     await w.open('gallery.kern');
-    await w.goto(16, 8);
+    await w.cursor(gallery, 'P4 "');
     await w.hover();
     const table = await w.there('.monaco-hover:not(.hidden) .hover-row table', 'flexural-buckling-major');
     assert.match(await table.innerText(), /1\.18/);
     await w.picture('10-hover-member');
     await w.page.keyboard.press('Escape');
-    await w.goto(9, 17);
+    await w.cursor(gallery, '= prop', 3);
     await w.hover();
     const drawing = await w.there('.monaco-hover:not(.hidden) .hover-row img');
     await w.until('the drawing', () => drawing.evaluate((e) => e.complete && e.naturalWidth > 50));

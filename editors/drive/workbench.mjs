@@ -108,6 +108,15 @@ export class Workbench {
     await this.page.locator('.quick-input-widget').waitFor({ state: 'hidden' });
   }
 
+  /** cursor puts the cursor before a text of a file as it is on the disk, or some characters further on. */
+  async cursor(file, text, further = 0) {
+    const whole = this.read(file);
+    const at = whole.indexOf(text);
+    if (at < 0) throw new Error(`${file} has no '${text}'`);
+    const before = whole.slice(0, at + further).split('\n');
+    await this.goto(before.length, before.at(-1).length + 1);
+  }
+
   /** command runs a command of the palette by its title. */
   async command(title) {
     await this.page.keyboard.press('F1');

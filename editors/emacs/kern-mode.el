@@ -30,15 +30,17 @@
 
 ;; generated: declarations
 (defconst kern-mode-declarations
-  '("basis" "case" "column" "combination" "include" "level" "material" "section" "strut" "tie")
+  '("basis" "case" "column" "combination" "exclusive" "include" "level" "material" "section" "strut"
+    "tie")
   "Words that begin a declaration.")
 ;; end of declarations
 
 ;; generated: statements
 (defconst kern-mode-statements
-  '("actions" "amplification" "base" "depart" "effective" "factor_buckling" "factor_yield" "from"
-    "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height" "hold" "length" "limit"
-    "load" "material" "note" "require" "section" "selfweight" "show" "standard" "strengths" "top")
+  '("accidental" "actions" "amplification" "base" "depart" "effective" "factor_buckling"
+    "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
+    "hold" "length" "limit" "load" "material" "note" "permanent" "require" "roofs" "section"
+    "selfweight" "show" "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -59,10 +61,12 @@
 
 ;; generated: particles
 (defconst kern-mode-particles
-  '("about" "across" "and" "annex" "as" "at" "because" "both" "cold" "eq" "fixed" "floor" "free"
-    "from" "guided" "hot" "imposed" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent"
-    "pinned" "recommended" "rolled" "secant" "simple" "slenderness" "snow" "sway" "temperature"
-    "theoretical" "to" "top" "twist" "utilisation" "welded" "wind")
+  '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "cases"
+    "characteristic" "cold" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
+    "independent" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent" "persistent"
+    "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic"
+    "simple" "slenderness" "snow" "sway" "temperature" "theoretical" "to" "together" "top" "twist"
+    "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 

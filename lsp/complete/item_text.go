@@ -34,12 +34,12 @@ func (s *scope) texts(d duty) (out []Item, more bool) {
 		out = s.categories(action.Snow)
 	case d.name == "NAME" && d.lead == "annex" && s.head == "actions":
 		for _, a := range action.Annexes() {
-			out = append(out, Item{Label: a, Detail: "partial factors and psi values", Kind: TextItem, Eager: true})
+			out = append(out, Item{Label: a, Detail: annexWords(a), Kind: TextItem, Eager: true})
 		}
 	case d.name == "NAME" && d.lead == "annex":
 		if standard := checker.StandardNamed(s.text1()); standard != nil {
 			for _, a := range standard.Annexes() {
-				out = append(out, Item{Label: a, Detail: "the recommended values of the standard", Kind: TextItem, Eager: true})
+				out = append(out, Item{Label: a, Detail: annexWords(a), Kind: TextItem, Eager: true})
 			}
 		}
 	case d.name == "NAME" && s.head == "standard":
@@ -72,6 +72,14 @@ func (s *scope) text1() string {
 	return ""
 }
 
+// annexWords say what a set of values is.
+func annexWords(name string) string {
+	if strings.HasPrefix(name, "recommended") {
+		return "the values that the standard recommends"
+	}
+	return "national values"
+}
+
 // standardWords say what a design standard is.
 var standardWords = map[string]string{
 	"elastic":          "first yield and Euler buckling, with factors of safety of the calculation",
@@ -86,7 +94,7 @@ var fixedWords = map[string]string{
 }
 
 // category is a category of EN 1990 Table A1.1 with the subdivisions of EN
-// 1991-1-1 Tables 6.1 and 6.3.
+// 1991-1-1 Tables 6.1, 6.3 and 6.7; their words are from memory.
 type category struct{ name, words string }
 
 var imposed = []category{

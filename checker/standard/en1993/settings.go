@@ -16,14 +16,7 @@ type settings struct {
 
 // annexes are the sets of values and methods that a basis can name. The words
 // behind the first choose the method where the standard leaves a choice.
-var annexes = []string{"recommended", "recommended with 6.3.2.3", "recommended with Annex A", "recommended with 6.3.2.3 and Annex A", "United Kingdom", "Germany"}
-
-// national are the partial factors of the annexes that differ from the
-// recommended values (from memory).
-var national = map[string]map[string]float64{
-	"United Kingdom": {"gamma_M2": 1.10},
-	"Germany":        {"gamma_M1": 1.10},
-}
+var annexes = []string{"recommended", "recommended with 6.3.2.3", "recommended with Annex A", "recommended with 6.3.2.3 and Annex A", "United Kingdom"}
 
 func settingsOf(basis *model.Basis) settings {
 	s := settings{basis: basis}
@@ -45,10 +38,8 @@ func (s settings) numberOr(name string, standard float64) float64 {
 
 func (s settings) because(name string) string { return s.basis.Overrides[name].Because }
 
-// partial is a recommended partial factor or that of the annex, with its source.
-func (s settings) partial(name string, recommended float64) (float64, string) {
-	if v, ok := national[s.basis.Annex][name]; ok {
-		return v, "National Annex, " + s.basis.Annex + " (from memory)"
-	}
+// partial is a recommended partial factor, with its source. The annexes that are
+// known have the recommended ones; a calculation states others with its reason.
+func (s settings) partial(_ string, recommended float64) (float64, string) {
 	return recommended, "recommended"
 }
