@@ -217,6 +217,10 @@ func (w *mentions) load(args []*lang.Expr) {
 	i := 0
 	if args[0].Is("floor") && w.c.Env.Names["floor"] == nil {
 		i = 1
+		if len(args) > 1 && !joins(args[1]) {
+			w.value(args[1])
+			i = 2
+		}
 	} else if args[0].Kind == lang.NameExpr {
 		w.value(args[0])
 		i = 1

@@ -44,12 +44,14 @@ func (c *Client) signatures() signatureClient {
 // SignatureHelp answers with the forms of the statement or the function at a
 // place.
 func (s *Server) SignatureHelp(ctx context.Context, p *protocol.SignatureHelpParams) (*protocol.SignatureHelp, error) {
+	// a blank opens no help in a text; help that is open stays
+	opens := p.Context.TriggerKind == protocol.SignatureHelpTriggerKindTriggerCharacter && !p.Context.IsRetrigger
 	f, err := s.File(ctx, p.TextDocument.URI)
 	if f == nil || err != nil {
 		return nil, err
 	}
 	h, ok := complete.SignatureAt(f.Report(), f.Name, f.Offset(p.Position))
-	if !ok {
+	if !ok || opens && h.Quoted {
 		return nil, nil
 	}
 	return signatures(h, s.client.signatures()), nil

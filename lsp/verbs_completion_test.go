@@ -117,9 +117,9 @@ func init() {
 		}
 		s.print("%s is not offered\n", args[1])
 	}
-	// signature MARK: the forms, with the part that is due
+	// signature MARK ["sign"]: the forms, with the part that is due
 	verbs["signature"] = func(s *scene, args []string) {
-		raw, err := s.ask("textDocument/signatureHelp", s.position(args[0], ""))
+		raw, err := s.ask("textDocument/signatureHelp", s.position(args[0], append(args, "")[1]))
 		if err != nil {
 			s.print("error: %v\n", err)
 			return

@@ -21,7 +21,11 @@ func (w *memberReader) complete() {
 			p := lang.Problem{Rule: "missing-value", Span: m.Stmt.Line, Message: "the " + m.Kind.String() + " has no " + what}
 			if m.Stmt.Body != nil && fix != "" {
 				at := lang.Span{Start: m.Stmt.Body.Span.Start + 1, End: m.Stmt.Body.Span.Start + 1}
-				p.Fixes = append(p.Fixes, lang.Replace("Add "+what, false, at, "\n    "+fix))
+				text := "\n    " + fix
+				if !strings.Contains(m.Stmt.Body.Span.Of(m.Decl.Text), "\n") {
+					text = " " + fix + ";" // a block on one line stays there
+				}
+				p.Fixes = append(p.Fixes, lang.Replace("Add "+what, false, at, text))
 			}
 			m.Problems = append(m.Problems, lang.Diagnostic{Decl: m.Decl, Problem: p})
 		}

@@ -15,6 +15,8 @@ type Help struct {
 	Active int
 	// Param is the part of the active form that is due, -1 for none.
 	Param int
+	// Quoted is set inside a quoted text, where blanks are part of it.
+	Quoted bool
 }
 
 // Signature is one form.
@@ -106,7 +108,7 @@ func SignatureAt(r *checker.Report, file string, offset int32) (Help, bool) {
 
 // help makes the forms of a statement.
 func (s *scope) help(list []*pattern, active, param int) Help {
-	h := Help{Active: active, Param: param}
+	h := Help{Active: active, Param: param, Quoted: s.quoted}
 	for _, p := range list {
 		x := Signature{Syntax: p.syntax, Summary: p.form.Summary}
 		for i, span := range p.params {
