@@ -11,7 +11,7 @@ import (
 // Factors printed in NIST Special Publication 811 (2008), Appendix B.8, with
 // seven significant digits, or all of them where the factor is exact (bold in
 // the table). Known from memory; in4, ft4, in2, ft2, ft, in and yd were also
-// seen in a transcription of the table, and TestGNUUnits holds all of them
+// seen in a copy of the table, and TestGNUUnits holds all of them
 // against another source.
 var nist = []struct {
 	texts   string

@@ -13,10 +13,15 @@ function address(file, member) {
   return vscode.Uri.from({ scheme, path: `/${member}.md`, query: file });
 }
 
-/** open shows the working of a member beside the text. */
+/** open shows the working of a member beside the text: laid out, or as Markdown where nothing lays it out. */
 async function open(file, member) {
   const document = await vscode.workspace.openTextDocument(address(file, member));
-  await vscode.window.showTextDocument(document, { viewColumn: vscode.ViewColumn.Beside, preserveFocus: true, preview: true });
+  const commands = await vscode.commands.getCommands(true);
+  if (commands.includes('markdown.showPreviewToSide')) {
+    await vscode.commands.executeCommand('markdown.showPreviewToSide', document.uri);
+  } else {
+    await vscode.window.showTextDocument(document, { viewColumn: vscode.ViewColumn.Beside, preserveFocus: true, preview: true });
+  }
 }
 
 /** at opens the working of the member at or above the cursor. */
