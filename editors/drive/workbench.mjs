@@ -88,14 +88,15 @@ export class Workbench {
     const input = this.page.locator('.quick-input-widget input[type="text"]');
     await input.waitFor();
     await input.fill(prefix + text);
+    return input;
   }
 
   /** open opens a file of the project by its name. */
   async open(file) {
     await this.page.keyboard.press('Control+p');
-    await this.quickInput('', file);
+    const input = await this.quickInput('', file);
     await this.page.locator('.quick-input-list .monaco-list-row.focused', { hasText: path.basename(file) }).first().waitFor();
-    await this.page.keyboard.press('Enter');
+    await input.press('Enter');
     await this.page.locator('.tabs-container .tab.active', { hasText: path.basename(file) }).waitFor();
     await this.editor.locator('.view-line').first().waitFor();
   }
@@ -103,8 +104,7 @@ export class Workbench {
   /** goto puts the cursor at a line and column, from 1. */
   async goto(line, column = 1) {
     await this.page.keyboard.press('Control+g');
-    await this.quickInput(':', `${line}:${column}`);
-    await this.page.keyboard.press('Enter');
+    await (await this.quickInput(':', `${line}:${column}`)).press('Enter');
     await this.page.locator('.quick-input-widget').waitFor({ state: 'hidden' });
   }
 
@@ -120,9 +120,9 @@ export class Workbench {
   /** command runs a command of the palette by its title. */
   async command(title) {
     await this.page.keyboard.press('F1');
-    await this.quickInput('>', title);
+    const input = await this.quickInput('>', title);
     await this.page.locator('.quick-input-list .monaco-list-row.focused', { hasText: title.split(': ').pop() }).first().waitFor();
-    await this.page.keyboard.press('Enter');
+    await input.press('Enter');
     await this.page.locator('.quick-input-widget').waitFor({ state: 'hidden' });
   }
 
