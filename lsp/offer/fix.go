@@ -3,6 +3,7 @@ package offer
 import (
 	"errors"
 	"slices"
+	"strings"
 
 	"kern/checker"
 	"kern/lang"
@@ -28,9 +29,13 @@ func (l *list) fixes() {
 	}
 }
 
-// adds tells whether a fix puts a line into a block.
+// adds tells whether a fix puts a line into a block, be it a block on one line.
 func adds(f checker.Fix) bool {
-	return len(f.Edits) == 1 && f.Edits[0].Span.Len() == 0 && len(f.Edits[0].New) > 0 && f.Edits[0].New[0] == '\n'
+	if len(f.Edits) != 1 || f.Edits[0].Span.Len() > 0 {
+		return false
+	}
+	text := f.Edits[0].New
+	return strings.HasPrefix(text, "\n") || strings.HasPrefix(text, " ") && strings.HasSuffix(text, ";")
 }
 
 // safe is the number of a diagnostic's safe fix, -1 when it has none or several.

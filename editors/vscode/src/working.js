@@ -15,14 +15,12 @@ function address(file, member) {
 
 /** open shows the working of a member beside the text: laid out, or as Markdown where nothing lays it out. */
 async function open(file, member) {
-  const text = vscode.window.activeTextEditor;
   const document = await vscode.workspace.openTextDocument(address(file, member));
-  if (!vscode.extensions.getExtension('vscode.markdown-language-features')) {
+  if (vscode.extensions.getExtension('vscode.markdown-language-features')) {
+    await vscode.commands.executeCommand('markdown.showPreviewToSide', document.uri);
+  } else {
     await vscode.window.showTextDocument(document, { viewColumn: vscode.ViewColumn.Beside, preserveFocus: true, preview: true });
-    return;
   }
-  await vscode.commands.executeCommand('markdown.showPreviewToSide', document.uri);
-  if (text) await vscode.window.showTextDocument(text.document, { viewColumn: text.viewColumn }); // the cursor stays where it was
 }
 
 /** at opens the working of the member at or above the cursor. */
