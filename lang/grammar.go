@@ -32,7 +32,7 @@ func (l *line) Parse(lex *lexer.PeekingLexer) error {
 
 func (l *line) expr(e Expr) *Expr {
 	if len(l.slab) == cap(l.slab) {
-		l.slab = make([]Expr, 0, 6)
+		l.slab = make([]Expr, 0, min(8, 2*cap(l.slab)+2)) // most lines are short
 	}
 	l.slab = append(l.slab, e)
 	return &l.slab[len(l.slab)-1]

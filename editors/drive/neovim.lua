@@ -138,9 +138,37 @@ local steps = {
     end)
     expect('offered first', offered[1], 'Write kN')
   end },
-  { 'formatting gives the one layout', function()
+  { 'a hover shows the verdicts of a member', function()
     vim.cmd 'write'
-    local buffer = open 'boathouse/gallery.kern'
+    open 'boathouse/gallery.kern'
+    vim.api.nvim_win_set_cursor(0, { vim.fn.search '^column P4', 7 })
+    vim.lsp.buf.hover()
+    local text = wait('the hover', function()
+      for _, window in ipairs(vim.api.nvim_list_wins()) do
+        if vim.api.nvim_win_get_config(window).relative ~= '' then
+          local lines = vim.api.nvim_buf_get_lines(vim.api.nvim_win_get_buf(window), 0, -1, true)
+          vim.api.nvim_win_close(window, true)
+          return table.concat(lines, '\n')
+        end
+      end
+    end)
+    assert(text:find 'fails', text)
+    assert(text:find 'flexural%-buckling%-minor.*1%.18.*6%.3%.1', text)
+  end },
+  { 'a name is renamed in every file', function()
+    vim.api.nvim_win_set_cursor(0, { vim.fn.search 'section  = prop', 16 })
+    vim.lsp.buf.rename 'small_post'
+    local steel = vim.fn.bufadd(project .. '/boathouse/steel.kern')
+    wait('the names', function()
+      return vim.fn.bufloaded(steel) == 1 and vim.api.nvim_buf_get_lines(steel, 0, -1, true)
+        and table.concat(vim.api.nvim_buf_get_lines(steel, 0, -1, true), '\n'):find 'section small_post *= "SHS 90x90x5"'
+    end)
+    local here = table.concat(vim.api.nvim_buf_get_lines(0, 0, -1, true), '\n')
+    assert(here:find 'section  = small_post' and not here:find '= prop', here)
+    vim.cmd 'wall'
+  end },
+  { 'formatting gives the one layout', function()
+    local buffer = vim.api.nvim_get_current_buf()
     local before = vim.api.nvim_buf_get_lines(buffer, 0, -1, true)
     vim.cmd [[silent! %s/^    /  /]]
     vim.cmd [[silent! %s/ *= / =/]]

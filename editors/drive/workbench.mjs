@@ -97,7 +97,7 @@ export class Workbench {
     const input = await this.quickInput('', file);
     await this.page.locator('.quick-input-list .monaco-list-row.focused', { hasText: path.basename(file) }).first().waitFor();
     await input.press('Enter');
-    await this.page.locator('.tabs-container .tab.active', { hasText: path.basename(file) }).waitFor();
+    await this.page.locator('.editor-group-container.active .tab.active', { hasText: path.basename(file) }).waitFor();
     await this.editor.locator('.view-line').first().waitFor();
   }
 
@@ -153,7 +153,7 @@ export class Workbench {
   /** save saves the active file and waits until it is on the disk. */
   async save() {
     await this.page.keyboard.press('Control+s');
-    await this.page.locator('.tabs-container .tab.active:not(.dirty)').waitFor();
+    await this.page.locator('.editor-group-container.active .tab.active:not(.dirty)').waitFor();
   }
 
   /** settings writes the settings of the machine, where the path of a program belongs. */
@@ -167,7 +167,7 @@ export class Workbench {
   async revert() {
     await this.page.keyboard.press('Escape');
     await this.command('File: Revert File');
-    await this.page.locator('.tabs-container .tab.active:not(.dirty)').waitFor();
+    await this.page.locator('.editor-group-container.active .tab.active:not(.dirty)').waitFor();
   }
 
   /** hover shows what is said at the cursor. */
