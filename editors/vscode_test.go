@@ -33,7 +33,7 @@ func vscodeParts() []part {
 	return []part{
 		match("declarations", fmt.Sprintf(`^\s*(%s)\b(?!\s*=)(?:[ \t]+(%s(?:[ \t]*,[ \t]*%s)*))?`, alternation(declarations()), tmName, tmName)),
 		match("statements", fmt.Sprintf(tmStart+`(%s)\b`, alternation(statements()))),
-		match("properties", fmt.Sprintf(tmStart+`(%s)\b(?=\s*=)`, alternation(properties()))),
+		match("properties", fmt.Sprintf(tmStart+`(%s)\b(?=\s*=)`, alternation(sorted(append(properties(), statements()...))))),
 		match("shapes", fmt.Sprintf(`(?<![\p{L}\p{N}_])(?:%s)\b`, alternation(shapes()))),
 		match("particles", fmt.Sprintf(`(?<![\p{L}\p{N}_])(?:%s)\b`, alternation(particles()))),
 		match("functions", fmt.Sprintf(`(?<![\p{L}\p{N}_])(?:%s)(?=\s*\()`, alternation(functions()))),

@@ -66,10 +66,28 @@ function! s:Failing() abort
   endfor
 endfunction
 
+" s:Hints gives the inlay hints of a line as one text: they are virtual text.
+function! s:Hints(line) abort
+  return join(map(filter(prop_list(a:line), 'has_key(v:val, "text")'), 'v:val.text'), '|')
+endfunction
+
+function! s:Results() abort
+  let l:line = search('^column P4')
+  let l:hints = s:Wait('hints', {-> s:Hints(l:line)})
+  if l:hints !~# '^fails 1\.\d\d flexural-buckling-m'
+    throw 'hints of P4: ' . l:hints
+  endif
+  let l:hints = s:Hints(search('^column P1'))
+  if l:hints !~# '^0\.\d\d flexural-buckling-m'
+    throw 'hints of P1: ' . l:hints
+  endif
+endfunction
+
 let s:steps = [
       \ ['words, names and units are highlighted', function('s:Highlight')],
       \ ['indentation is the layout of the formatter', function('s:Indent')],
       \ ['failing members are marked', function('s:Failing')],
+      \ ['results stand at the ends of lines', function('s:Results')],
       \ ]
 
 function! s:Run() abort
