@@ -4,6 +4,6 @@ let g:ycm_language_server = get(g:, 'ycm_language_server', []) + [{
       \ 'cmdline': ['kern', 'lsp'],
       \ 'filetypes': ['kern'],
       \ 'project_root_files': ['.git'],
+      \ 'capabilities': {'textDocument': {'inlayHint': {}}},
       \ }]
 let g:ycm_enable_inlay_hints = 1
-let g:ycm_enable_semantic_highlighting = 1
