@@ -38,7 +38,13 @@ cp -R "$here/src" "$here/package.json" "$here/package-lock.json" "$build/"
   cd "$build"
   npm ci --ignore-scripts --no-audit --no-fund --loglevel=error
   node node_modules/esbuild/bin/esbuild src/extension.js --bundle --platform=node --target=node18 --format=cjs \
-    --external:vscode --minify --legal-comments=linked --log-level=warning --outfile=extension/dist/extension.js
+    --external:vscode --minify --legal-comments=none --log-level=warning --outfile=extension/dist/extension.js
+  # The licences of what was bundled.
+  for licence in $(find node_modules -maxdepth 2 -iname 'licen[cs]e*' -not -path '*/esbuild/*' -not -path '*/@esbuild/*' | sort); do
+    printf '=== %s\n\n' "$(basename "$(dirname "$licence")")"
+    cat "$licence"
+    printf '\n'
+  done >extension/NOTICES.txt
 )
 cp -R "$here/package.json" "$here/language-configuration.json" "$here/README.md" "$here/syntaxes" "$build/extension/"
 cp "$here/../../LICENSE" "$build/extension/LICENSE.txt"

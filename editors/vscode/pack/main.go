@@ -17,6 +17,7 @@ import (
 	"path/filepath"
 	"sort"
 	"strings"
+	"time"
 )
 
 func main() {
@@ -38,6 +39,10 @@ type extension struct {
 	Categories, Keywords                               []string
 	Engines                                            struct{ VSCode string }
 }
+
+// epoch is the time of every file, the first that the format knows: the same
+// files give the same bytes.
+var epoch = time.Date(1980, 1, 1, 0, 0, 0, 0, time.UTC)
 
 // pack writes the package and gives its name.
 func pack(target, from, to string) (name string, err error) {
@@ -72,7 +77,7 @@ func pack(target, from, to string) (name string, err error) {
 	defer func() { err = errors.Join(err, out.Close()) }()
 	z := zip.NewWriter(out)
 	entry := func(name string, mode fs.FileMode, content io.Reader) error {
-		h := &zip.FileHeader{Name: name, Method: zip.Deflate} // no time: the same files give the same bytes
+		h := &zip.FileHeader{Name: name, Method: zip.Deflate, Modified: epoch}
 		h.SetMode(mode)
 		w, err := z.CreateHeader(h)
 		if err != nil {
