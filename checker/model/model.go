@@ -44,6 +44,9 @@ type Env struct {
 	// case of its own, the last, when the calculation has no permanent case.
 	SelfWeight int
 
+	// Linked is set when a member may use the result of another.
+	Linked bool
+
 	Problems []lang.Diagnostic
 	decls    []*lang.Decl // the declarations that made it, for comparison with a later text
 	members  []*lang.Decl
@@ -52,7 +55,10 @@ type Env struct {
 	service     func() []Combination // made when they are asked for first
 
 	offer     map[NameKind][]string // the names of each kind, for offers
-	caseNames []*Named              // of each case; nil for those that nobody declared
+	late      []*lang.Value         // values that lean on results of members
+	settled   map[*lang.Value]unit.Quantity
+	results   Results
+	caseNames []*Named // of each case; nil for those that nobody declared
 }
 
 // NameKind is what a name stands for.

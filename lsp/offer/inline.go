@@ -43,7 +43,7 @@ func short(text string) string {
 // stand: it can be read, has no comment in it, and names no level, as a place
 // that names one counts from datum and no longer from the member's base.
 func (l *list) plain(c *model.Calculation, v *lang.Value) bool {
-	if q, p := c.Env.Values.Get(v, nil); p != nil || q.Value != q.Value {
+	if q, ok := c.Env.Value(v); !ok || q.Value != q.Value || v.Late {
 		return false
 	}
 	file, span := l.Report.Where(lang.Place{Decl: v.Decl, Span: v.Stmt.Line})
