@@ -27,9 +27,6 @@ type mentions struct {
 // name tells of a name, if it has a meaning.
 func (w *mentions) name(text string, span lang.Span) {
 	if name, _, dot := strings.Cut(text, "."); dot { // A1.N_Ed speaks of A1
-		if n := w.c.Env.Names[name]; n == nil || n.Kind != model.MemberName {
-			return
-		}
 		text, span.End = name, span.Start+int32(len(name))
 	}
 	n := w.c.Env.Names[text]

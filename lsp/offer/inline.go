@@ -18,6 +18,11 @@ func (l *list) inline(s site) {
 	if !ok || !l.plain(m.Calculation, v) {
 		return
 	}
+	for _, other := range l.Report.References(m.Named) { // a slip: a dot stands behind members alone
+		if at := other.Place; strings.HasPrefix(at.Decl.Text[at.Span.End:], ".") {
+			return
+		}
+	}
 	if !m.Declares {
 		if text, ok := l.written(v, m.Place); ok {
 			l.add(Offer{Kind: Inline, Title: "Write " + short(text) + " for " + v.Name + " here", edits: func() []checker.Edit {
