@@ -192,7 +192,7 @@ func (w *mentions) statement(s *lang.Stmt) {
 		}
 	}
 	switch s.Word {
-	case "section", "material", "height", "length", "effective":
+	case "section", "material", "height", "length", "effective", "net":
 		if assigned {
 			at(0)
 			w.properties(s)

@@ -10,7 +10,7 @@ import (
 
 // memberWords are the words that may begin a statement in a member's block.
 var memberWords = []string{"section", "material", "height", "length", "from", "base", "top", "hold", "effective", "load", "limit",
-	"require", "depart", "note", "selfweight"}
+	"require", "depart", "note", "selfweight", "net"}
 
 // DepartureRules are the rules that a member may depart from; the checker fills
 // in the rules of its standards.
@@ -34,7 +34,7 @@ func Members(env *Env, d *lang.Decl, known DepartureRules, results Results) []*M
 
 func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, results Results) []*Member {
 	m := &Member{Decl: d, Stmt: s, NameSpan: s.Head, Kind: map[string]Kind{"column": Column, "strut": Strut, "tie": Tie}[s.Word],
-		Height: unknown, Weight: env.Basis.SelfWeight}
+		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight}
 	w := &memberReader{env: env, m: m, known: known, results: results}
 	r := w.reader(d, s)
 	names := memberNames(s)
@@ -213,7 +213,7 @@ func (w *memberReader) statement(d declared) {
 		}
 		w.first[key] = d
 	}
-	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true}
+	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true, "net": true}
 	if needsSign[s.Word] != assigned {
 		if needsSign[s.Word] {
 			noSign(r)
@@ -247,6 +247,9 @@ func (w *memberReader) statement(d declared) {
 		w.limit(r)
 	case "require":
 		w.require(r)
+	case "net":
+		w.m.Net, _, _ = r.quantity(want{what: "the net area", dim: unit.Area, unit: "cm2", max: 10})
+		w.m.NetAt = r.place(s.Line)
 	case "depart":
 		w.depart(r)
 	case "note":
