@@ -245,8 +245,13 @@ type Member struct {
 	MaterialAt,
 	HeightAt lang.Place
 
+	// Lifts are the parts of the height with a section and material of their own,
+	// from the base up and without gaps; none for a member of one section.
+	Lifts []Lift
+
 	Height    float64 // m
 	From      float64 // height of the base above datum, m
+	Levels    bool    // it stands between levels: From is known
 	Base, Top [2]action.End
 	Holds     []Hold
 	Factor    [3]float64 // effective length factors of the user: major, minor, twist; 0 for none
