@@ -1,5 +1,7 @@
 package lang
 
+import "slices"
+
 // Context is a place where statements stand.
 type Context string
 
@@ -66,11 +68,12 @@ var Forms = []Form{
 	{"height", InMember, []string{`height = LENGTH`}, "The height of the member.", "height = ${1:3 m}"},
 	{"length", InMember, []string{`length = LENGTH`}, "The length of the member.", "length = ${1:3 m}"},
 	{"from", InMember, []string{`from LEVEL to LEVEL`}, "The levels between which the member stands.", "from ${1:ground} to ${2:roof}"},
+	{"lift", InMember, []string{`lift PLACE to PLACE { section = …; material = … }`}, "A part of the height with a section or a material of its own.", "lift ${1:ground} to ${2:first} { section = ${3:\"HEB 200\"} }"},
 	{"base", InMember, []string{`base pinned|fixed|free|guided [about major|minor]`}, "How the lower end is held.", "base ${1|pinned,fixed,free,guided|}"},
 	{"top", InMember, []string{`top pinned|fixed|free|guided [about major|minor]`}, "How the upper end is held.", "top ${1|pinned,fixed,free,guided|}"},
 	{"hold", InMember, []string{`hold major|minor|both|twist at PLACE`}, "A point between the ends that is restrained.", "hold ${1|both,minor,major,twist|} at ${2:height / 2}"},
 	{"effective", InMember, []string{`effective = NUMBER [about major|minor|twist]`}, "The effective length factor, where the calculation knows better than the ends.", "effective = ${1:0.85} about ${2|minor,major,twist|}"},
-	{"lift", InMember, []string{`lift PLACE to PLACE { section = …; material = … }`}, "A part of the height with a section or a material of its own.", "lift ${1:ground} to ${2:first} { section = ${3:\"HEB 200\"} }"},
+	{"net", InMember, []string{`net = AREA`}, "The area that holes leave across the path of failure in tension.", "net = ${1:17.2 cm2}"},
 	{"load", InMember, []string{
 		`load [CASE] FORCE [at PLACE] [offset LENGTH about AXIS [and LENGTH about AXIS]]`,
 		`load [CASE] FORCE across AXIS at PLACE`,
@@ -132,6 +135,18 @@ func FormsIn(in Context) []Form {
 	for _, f := range Forms {
 		if f.In == in {
 			out = append(out, f)
+		}
+	}
+	return out
+}
+
+// WordsIn lists the words that begin the statements of a context, each once, in
+// the order of the table.
+func WordsIn(in Context) []string {
+	var out []string
+	for _, f := range Forms {
+		if f.In == in && !slices.Contains(out, f.Word) {
+			out = append(out, f.Word)
 		}
 	}
 	return out

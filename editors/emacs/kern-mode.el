@@ -39,7 +39,7 @@
 (defconst kern-mode-statements
   '("accidental" "actions" "amplification" "base" "depart" "effective" "factor_buckling"
     "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
-    "hold" "length" "lift" "limit" "load" "material" "moments" "note" "permanent" "reduce"
+    "hold" "length" "lift" "limit" "load" "material" "moments" "net" "note" "permanent" "reduce"
     "reduction" "require" "roofs" "section" "selfweight" "show" "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
