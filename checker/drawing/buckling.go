@@ -50,7 +50,6 @@ type buckling struct {
 // bar is the whole member about an axis under the combination.
 func (b *buckling) bar(axis int) *action.Bar {
 	out := &action.Bar{Base: b.m.Base[axis], Top: b.m.Top[axis]}
-	ei := b.m.Material.E * [...]float64{b.m.Section.IMajor, b.m.Section.IMinor}[axis]
 	holds := b.holdHeights(axis)
 	held := func(z float64) bool {
 		for _, h := range holds {
@@ -63,7 +62,7 @@ func (b *buckling) bar(axis int) *action.Bar {
 	cuts := b.f.Heights()
 	out.Nodes, out.Held = []float64{0}, []bool{false}
 	for i := range len(cuts) - 1 {
-		n := 1
+		n, ei := 1, b.f.Stiffness(axis, (cuts[i]+cuts[i+1])/2)
 		if b.m.Weight { // the force grows all along
 			n = 1 + int(12*(cuts[i+1]-cuts[i])/b.m.Height)
 		}
