@@ -2,10 +2,23 @@ package checker
 
 import (
 	"math"
+	"slices"
 
 	"kern/checker/model"
 	"kern/checker/standard"
 )
+
+// With judges the member as it would be after a change. The change is given a
+// copy whose loads and holds it may alter, and nothing else that is shared. A
+// member that lacks something is judged as it is.
+func (r *Result) With(change func(m *model.Member)) *Result {
+	m := *r.Member
+	m.Loads, m.Holds = slices.Clone(m.Loads), slices.Clone(m.Holds)
+	if len(m.Missing) == 0 {
+		change(&m)
+	}
+	return evaluate(r.env, &m, r.combinations)
+}
 
 // Probe judges the member under one of its combinations, by its index, with the
 // forces along the member times axial and all that bends it times bending. The
