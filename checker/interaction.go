@@ -43,8 +43,13 @@ func (r *Result) Interaction() (*Interaction, bool) {
 	for a := range i.Moments {
 		i.Moments[a] = r.moment(f, a, c.Combination)
 	}
-	// the axis that is bent harder for its modulus
+	// the axis that is bent harder for its modulus, that of the lift which decides
 	w := [2]float64{r.Member.Section.WelMajor, r.Member.Section.WelMinor}
+	for _, l := range r.Member.Lifts {
+		if l.Name() == r.Lift {
+			w = [2]float64{l.Section.WelMajor, l.Section.WelMinor}
+		}
+	}
 	if !(w[0] > 0) || !(w[1] > 0) {
 		w = [2]float64{1, 1}
 	}

@@ -9,11 +9,11 @@ import (
 )
 
 // With judges the member as it would be after a change. The change is given a
-// copy whose loads and holds it may alter, and nothing else that is shared. A
+// copy whose loads, holds and lifts it may alter, and nothing else that is shared. A
 // member that lacks something is judged as it is.
 func (r *Result) With(change func(m *model.Member)) *Result {
 	m := *r.Member
-	m.Loads, m.Holds = slices.Clone(m.Loads), slices.Clone(m.Holds)
+	m.Loads, m.Holds, m.Lifts = slices.Clone(m.Loads), slices.Clone(m.Holds), slices.Clone(m.Lifts)
 	if len(m.Missing) == 0 {
 		change(&m)
 	}
@@ -50,12 +50,18 @@ func (r *Result) Probe(combination int, axial, bending float64) (utilisation flo
 		}
 	}
 	if m.Weight {
-		material := *m.Material
-		material.Density *= axial
-		m.Material = &material
-		m.Weight = material.Density > 0
+		scaled := func(of *model.Material) *model.Material {
+			material := *of
+			material.Density *= axial
+			return &material
+		}
+		m.Material, m.Lifts = scaled(m.Material), slices.Clone(m.Lifts)
+		for i := range m.Lifts {
+			m.Lifts[i].Material = scaled(m.Lifts[i].Material)
+		}
+		m.Weight = axial > 0
 	}
-	out := s.Check(standard.NewFrame(r.env, &m, r.combinations[combination:combination+1]), nil)
+	out := standard.Run(s, standard.NewFrame(r.env, &m, r.combinations[combination:combination+1]), nil)
 	return r.worst(out.Checks)
 }
 

@@ -183,9 +183,12 @@ func height(report *checker.Report, r *checker.Result) *varied {
 			for i := range m.Holds {
 				move(&m.Holds[i].At)
 			}
+			for i := range m.Lifts {
+				move(&m.Lifts[i].To)
+			}
 			m.Height = h
 			if !fits {
-				m.Height, m.Loads, m.Holds = now, nil, nil
+				m.Height, m.Loads, m.Holds, m.Lifts = now, nil, nil, nil
 			}
 		})
 		if !fits {

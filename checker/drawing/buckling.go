@@ -50,7 +50,17 @@ type buckling struct {
 // bar is the whole member about an axis under the combination.
 func (b *buckling) bar(axis int) *action.Bar {
 	out := &action.Bar{Base: b.m.Base[axis], Top: b.m.Top[axis]}
-	ei := b.m.Material.E * [...]float64{b.m.Section.IMajor, b.m.Section.IMinor}[axis]
+	stiffness := func(z float64) float64 {
+		parts := b.m.Parts()
+		l := parts[len(parts)-1]
+		for _, p := range parts {
+			if z < p.To {
+				l = p
+				break
+			}
+		}
+		return l.Material.E * [...]float64{l.Section.IMajor, l.Section.IMinor}[axis]
+	}
 	holds := b.holdHeights(axis)
 	held := func(z float64) bool {
 		for _, h := range holds {
@@ -76,7 +86,7 @@ func (b *buckling) bar(axis int) *action.Bar {
 			}
 			out.Nodes, out.Held = append(out.Nodes, z), append(out.Held, j == n-1 && held(z))
 			out.Force = append(out.Force, bottom+(top-bottom)*(t-0.5/float64(n)))
-			out.Stiffness = append(out.Stiffness, ei)
+			out.Stiffness = append(out.Stiffness, stiffness((cuts[i]+cuts[i+1])/2))
 		}
 	}
 	return out
@@ -130,7 +140,10 @@ func (b *buckling) lines(axis int) []string {
 		if s.Overridden {
 			k += " stated"
 		}
-		out = append(out, "checked: N_cr "+b.show(b.r.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length)+", "+k)
+		if b.f.Stepped(s.From, s.To) { // each lift has an effective length of its own
+			return append(out, "checked lift by lift")
+		}
+		out = append(out, "checked: N_cr "+b.show(b.f.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length)+", "+k)
 	}
 	return out
 }

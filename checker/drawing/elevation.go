@@ -21,9 +21,13 @@ func Elevation(r *checker.Result) *Scene {
 		return nil
 	}
 	e := elevation{subject: s, groups: groupLoads(s.m)}
-	e.half = depths(s.m.Section)
-	for a := range e.half {
-		e.half[a] = min(max(e.half[a]/2*stature/s.m.Height, 0.7), 5)
+	for _, p := range s.m.Parts() {
+		d := depths(p.Section)
+		for a := range d {
+			d[a] = min(max(d[a]/2*stature/s.m.Height, 0.7), 5)
+			e.half[a] = max(e.half[a], d[a])
+		}
+		e.parts = append(e.parts, d)
 	}
 	e.layOut()
 	e.levels()
@@ -41,10 +45,11 @@ func Elevation(r *checker.Result) *Scene {
 type elevation struct {
 	subject
 	pen
-	half   [2]float64 // half the width of the member in each view, mm
-	at     [2]float64 // where the views stand
-	room   [2]float64 // for the words behind each
-	width  float64    // of the sheet
+	half   [2]float64   // half the greatest width of the member in each view, mm
+	parts  [][2]float64 // half the width of each lift
+	at     [2]float64   // where the views stand
+	room   [2]float64   // for the words behind each
+	width  float64      // of the sheet
 	groups []loadGroup
 	left   []entry // words at the left of the first view
 }
@@ -148,8 +153,7 @@ func (e *elevation) lines(g loadGroup, axis int) []Text {
 
 // levels draws the levels that the member stands between, and notes their names.
 func (e *elevation) levels() {
-	at := e.m.HeightAt
-	if at.Decl == nil || !strings.HasPrefix(at.Span.Of(at.Decl.Text), "from") {
+	if !e.m.Levels {
 		return
 	}
 	for _, l := range e.r.Env().Levels {
@@ -218,7 +222,9 @@ func (e *elevation) view(axis int) {
 	x, w := e.at[axis], e.half[axis]
 	top, base := e.y(e.m.Height), e.y(0)
 	e.text(Text{At: Point{x, 4}, Words: "about " + model.Axis(axis).String(), Bold: true, Anchor: Middle, Size: normal})
-	e.rect(Fill, Box{x - w, top, x + w, base})
+	for i, p := range e.m.Parts() {
+		e.rect(Fill, Box{x - e.parts[i][axis], e.y(p.To), x + e.parts[i][axis], e.y(p.From)})
+	}
 	e.base(e.m.Base[axis], x, base, w)
 	e.top(e.m.Top[axis], x, top, w)
 	foot := map[action.End]float64{action.Pinned: 8, action.Fixed: 4.6, action.Guided: 7, action.Free: 3.4}[e.m.Base[axis]]
@@ -241,6 +247,9 @@ func (e *elevation) view(axis int) {
 	edge := x - w - beforeHold
 	e.column(near, edge, holdWords, 8, tallSheet-6, End)
 	if axis == 0 {
+		for _, l := range e.m.Lifts {
+			e.left = append(e.left, entry{want: (e.y(l.From) + e.y(l.To)) / 2, lines: []Text{{Words: l.Section.Title(), Size: small}}, to: Point{-1, -1}})
+		}
 		e.column(e.left, 11.5, edge-holdWords-1-11.5, 8, tallSheet-6, Start)
 	}
 	var right []entry
