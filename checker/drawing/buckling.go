@@ -103,7 +103,7 @@ func (b *buckling) view(axis int, x float64, weak int) {
 	for _, z := range b.holdHeights(axis) {
 		b.hold(x-0.4, b.y(z), -1)
 	}
-	style, tone := Strong, Plain
+	style, tone := Outline, Plain
 	if axis == weak {
 		style, tone = Accent, Loud
 	}
@@ -117,9 +117,9 @@ func (b *buckling) view(axis int, x float64, weak int) {
 		b.polyline(style, pts...)
 	}
 	for i, l := range lines {
-		t := Text{At: Point{x, 10 + pitch*float64(i)}, Words: clip(l, small, 31.5, i == 0), Size: small, Anchor: Middle}
+		t := Text{At: Point{x, 10 + pitch*float64(i)}, Words: clip(l, small, 31.5, i == 0 && axis == weak), Size: small, Anchor: Middle}
 		if i == 0 {
-			t.Tone, t.Bold = tone, true
+			t.Tone, t.Bold = tone, axis == weak
 		}
 		b.text(t)
 	}

@@ -47,7 +47,8 @@ func (i *interaction) draw() *Scene {
 
 	i.line(at)
 	governing := at(i.Force, i.Moments[i.Axis])
-	i.add(Path{Style: Dashed, Steps: steps([]Point{at(0, 0), governing}, false)})
+	i.polyline(Dashed, at(0, 0), governing)
+	i.mind(at(0, 0), governing)
 	drawn := map[Point]bool{}
 	round := func(q Point) Point { return Point{math.Round(q.X * 5), math.Round(q.Y * 5)} }
 	drawn[round(governing)] = true

@@ -200,7 +200,7 @@ column A { section = "HEB 160"; material = "S355"; height = 5 m; selfweight off;
 	s := drawing.Buckling(r)
 	curves := 0
 	for _, x := range partsOf(s).paths {
-		if (x.Style == drawing.Accent || x.Style == drawing.Strong) && len(x.Steps) > 50 {
+		if len(x.Steps) > 50 {
 			curves++
 			b := box(x)
 			from := x.Steps[0].To
