@@ -134,14 +134,18 @@ func TestVaryCrossing(t *testing.T) {
 	}
 }
 
-// TestVaryLevels: a member between levels is varied in its text, and heights at
-// which a hold would stand outside it have no point.
+// TestVaryLevels: a member between levels is varied with its upper level and what
+// stands on it, as if the level were elsewhere, and heights at which a hold would
+// stand outside it have no point.
 func TestVaryLevels(t *testing.T) {
-	r := check(`basis { standard "EN 1993-1-1:2005"; show m }
+	text := func(h float64) string {
+		return `basis { standard "EN 1993-1-1:2005"; show m }
 case G permanent
 level ground at 0 m
-level roof at 6 m
-column A { section = "HEB 160"; material = "S355"; from ground to roof; hold minor at 3.1 m; load G 200 kN at top }`)
+level roof at ` + exact(h) + ` m { G 2 kN/m2 }
+column A { section = "HEB 160"; material = "S355"; from ground to roof; hold minor at 3.1 m; load floor 100 m2 at roof offset 50 mm about major }`
+	}
+	r := check(text(6))
 	c, err := chart.Vary(r, r.Members[0], "height", chart.Range{From: 2, To: 10, Points: 9})
 	if err != nil {
 		t.Fatal(err)
@@ -150,6 +154,9 @@ column A { section = "HEB 160"; material = "S355"; from ground to roof; hold min
 	for i, h := range l.X {
 		if got, want := !math.IsNaN(l.Y[i]), h > 3.1; got != want {
 			t.Errorf("a point at %g m: %v, want %v", h, got, want)
+		}
+		if want := check(text(h)).Members[0].Utilisation; h > 3.1 && !(math.Abs(l.Y[i]-want) < 1e-9) {
+			t.Errorf("%g m: %g, want %g", h, l.Y[i], want)
 		}
 	}
 	if !strings.Contains(strings.Join(c.Notes, " "), "would lie outside") {

@@ -149,7 +149,7 @@ func offset(r *checker.Result, axis model.Axis) (*varied, error) {
 func height(report *checker.Report, r *checker.Result) *varied {
 	now := r.Member.Height
 	v := &varied{name: "height", dim: unit.Length, now: now, where: Range{From: 0.25 * now, To: 2 * now}}
-	if c := calculation(report, r); c != nil {
+	if c := calculation(report, r); c != nil && !r.Member.Levels {
 		if _, ok := withHeight(c, r, now*1.01); ok {
 			v.note = "The height is changed in the text of " + r.Name + "; what stands at a height of its own stays there."
 			v.at = func(h float64) *checker.Result {
@@ -224,7 +224,8 @@ func withHeight(c *model.Calculation, r *checker.Result, h float64) (*checker.Re
 	return nil, false
 }
 
-// heightText is the declaration of a member with another height.
+// heightText is the declaration of a member with another height; false for one
+// that does not state a height.
 func heightText(m *model.Member, h float64) (string, bool) {
 	if m.Decl == nil || m.Stmt == nil {
 		return "", false
@@ -239,12 +240,7 @@ func heightText(m *model.Member, h float64) (string, bool) {
 		case "height", "length":
 			return text[:s.Line.Start] + s.Word + " = " + exact(h) + " m" + text[s.Line.End:], true
 		case "from":
-			// the levels that the member stands between have names in its text
-			if len(s.Args) == 3 && s.Args[1].Is("to") {
-				lower := s.Args[0].Span.Of(text)
-				return text[:s.Line.Start] + "from " + lower + " to (" + lower + ") + " + exact(h) + " m" + text[s.Line.End:], true
-			}
-			return "", false
+			return "", false // its top is a level, which moves with what stands on it
 		}
 	}
 	at := m.Stmt.Body.Span.Start + 1
@@ -311,9 +307,13 @@ func (v *varied) chart(r *checker.Result, where Range) *Chart {
 	}
 	c.fit(limit)
 	c.Y.Most = min(c.Y.Most, max(2*limit, 1.2*r.Utilisation))
+	known := ""
+	if none || len(gaps) > 0 {
+		known = ", where it is known,"
+	}
 	switch {
 	case math.IsNaN(first):
-		c.Notes = append(c.Notes, fmt.Sprintf("The utilisation stays below %s up to %s.", checker.Ratio(limit), amount(c.X, where.To/u.Factor)))
+		c.Notes = append(c.Notes, fmt.Sprintf("The utilisation%s stays below %s up to %s.", known, checker.Ratio(limit), amount(c.X, where.To/u.Factor)))
 	case first <= where.From:
 		c.Notes = append(c.Notes, fmt.Sprintf("The utilisation is above %s from %s on.", checker.Ratio(limit), amount(c.X, where.From/u.Factor)))
 	default:
