@@ -57,7 +57,7 @@ type elevation struct {
 const (
 	beforeWords = 8.0 // from the member to the words about its loads, mm
 	beforeHold  = 5.2 // from the member to the words about what holds it
-	holdWords   = 8.5
+	holdWords   = 9.8
 )
 
 // layOut finds out how much room the words of both views need.
