@@ -157,4 +157,4 @@ func short(v float64) string {
 	return unit.Short(v, 4)
 }
 
-func words(rule string) string { return strings.ReplaceAll(rule, "-", " ") }
+func words(name string) string { return strings.ReplaceAll(name, "-", " ") }

@@ -36,8 +36,11 @@ func Elevation(r *checker.Result) *Scene {
 		e.view(a)
 	}
 	if own := r.OwnWeight(); own > 0 {
-		e.text(Text{At: Point{1, tallSheet - 1.2}, Size: small, Tone: Quiet,
-			Words: clip("own weight "+s.show(own, unit.Force)+" in "+r.Env().Cases[r.Env().SelfWeight].Name, small, e.width-2, false)})
+		words := "own weight " + s.show(own, unit.Force)
+		if r.Env().Declared() {
+			words += " in " + r.Env().Cases[r.Env().SelfWeight].Name
+		}
+		e.text(Text{At: Point{1, tallSheet - 1.2}, Size: small, Tone: Quiet, Words: clip(words, small, e.width-2, false)})
 	}
 	return &Scene{Width: e.width, Height: tallSheet, Title: s.title("elevation"), Description: e.describe(), Items: e.items}
 }

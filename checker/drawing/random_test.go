@@ -40,7 +40,7 @@ func randomMembers(n int, seed uint64) string {
 			}
 		}
 		crowd := 1 + r.IntN(3)
-		if r.IntN(12) == 0 {
+		if r.IntN(25) == 0 {
 			crowd = 30
 		}
 		at := func() string { return fmt.Sprintf("%.3f m", height*(0.001+0.998*r.Float64())) }

@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"io"
 	"os"
+	"path/filepath"
 	"slices"
 	"strings"
 
@@ -51,6 +52,9 @@ func chartCommand() *cobra.Command {
 		RunE: func(c *cobra.Command, paths []string) error {
 			if !slices.Contains([]string{"text", "svg", "csv"}, o.form) {
 				return fmt.Errorf("--output is text, svg or csv, not '%s'", o.form)
+			}
+			if strings.EqualFold(filepath.Ext(o.file), extension) {
+				return fmt.Errorf("--file is where the chart goes, and %s would be a calculation", o.file)
 			}
 			var b strings.Builder
 			if err := o.write(&b, paths, style(c.OutOrStdout()).Width); err != nil {
