@@ -2,6 +2,7 @@ package checker
 
 import (
 	"math"
+	"slices"
 
 	"kern/checker/model"
 	"kern/checker/standard"
@@ -16,6 +17,9 @@ type Interaction struct {
 	Moments     [2]float64 // its greatest moments about both axes, first order, Nm
 	Points      []Forces   // of every combination, by index
 	Envelope    *Envelope
+	// Undecided are the checks that the line leaves out, as the member has no answer
+	// to them: inside the line it passes the others alone.
+	Undecided []string
 }
 
 // Forces are the greatest compression and the greatest moment of a combination,
@@ -62,6 +66,16 @@ func (r *Result) Interaction() (*Interaction, bool) {
 	var ok bool
 	if i.Envelope, ok = r.Envelope(c.Combination); !ok {
 		return nil, false
+	}
+	for _, c := range r.Checks {
+		if r.silentOn(c.Rule) && !r.departs(c.Rule) && !slices.Contains(i.Undecided, c.Rule) {
+			i.Undecided = append(i.Undecided, c.Rule)
+		}
+	}
+	for _, c := range r.Coverage {
+		if c.State == standard.NotCovered && !r.departs(c.Rule) && !slices.Contains(i.Undecided, c.Rule) {
+			i.Undecided = append(i.Undecided, c.Rule)
+		}
 	}
 	for k := range r.combinations {
 		i.Points = append(i.Points, Forces{f.Compression(k, 0, r.Member.Height), r.moment(f, int(i.Axis), k)})

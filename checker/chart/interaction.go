@@ -2,6 +2,7 @@ package chart
 
 import (
 	"fmt"
+	"strings"
 
 	"kern/checker"
 	"kern/lang/unit"
@@ -41,8 +42,12 @@ func Interaction(r *checker.Result) (*Chart, error) {
 		fmt.Sprintf("%s has %s and %s: utilisation %s, by %s.", r.Combinations()[i.Combination].Name, units.Show(i.Force, unit.Force, 4), units.Show(i.Moments[i.Axis], unit.Moment, 4), checker.Ratio(r.Utilisation), words(r.Governing)),
 		"The line is for the moment diagrams of this combination; the points of others lie beside it for comparison.",
 	}
+	if len(i.Undecided) > 0 {
+		c.Lines[0].Name = "limit of the checks that are decided"
+		c.Notes = append(c.Notes, "Undecided, and left out of the line: "+words(strings.Join(i.Undecided, ", "))+".")
+	}
 	if other := 1 - i.Axis; i.Moments[other] > 0 {
-		c.Notes = append(c.Notes, fmt.Sprintf("The moment about %s grows in proportion, %s of the one shown.", other.String(), unit.Short(i.Moments[other]/i.Moments[i.Axis], 3)))
+		c.Notes = append(c.Notes, fmt.Sprintf("The moment about %s grows with it, %s times as large.", other.String(), unit.Short(i.Moments[other]/i.Moments[i.Axis], 3)))
 	}
 	return c, nil
 }

@@ -331,6 +331,11 @@ func (e *elevation) axial(g loadGroup, axis int, x, w float64) entry {
 		at = x + w + 1.6
 		e.line(Outline, x+w, y, at, y)
 	}
+	// loads at one place stand beside each other
+	if n := e.before(g, axis); n > 0 {
+		at += 2.6 * float64(n)
+		e.line(Outline, x, y, at, y)
+	}
 	lift := 0.0
 	if atTop && e.m.Top[axis].String() == "guided" && g.Offset[axis] == 0 {
 		lift = 0.4
@@ -342,6 +347,22 @@ func (e *elevation) axial(g loadGroup, axis int, x, w float64) entry {
 	e.arrow(Outline, from, to)
 	out.want, out.to = y-5, Point{at + 0.6, y - 5}
 	return out
+}
+
+// before is how many groups of loads along the member come before one and are
+// drawn at the same place in a view.
+func (e *elevation) before(g loadGroup, axis int) int {
+	n := 0
+	for _, o := range e.groups {
+		if o.Kind != model.AxialLoad || math.Abs(o.At-g.At) > 1e-6*e.m.Height || math.Abs(o.Offset[axis]-g.Offset[axis]) > 1e-9 {
+			continue
+		}
+		if o.Offset == g.Offset {
+			break
+		}
+		n++
+	}
+	return min(n, 2)
 }
 
 // describe says in words what the picture shows.

@@ -2,6 +2,7 @@ package drawing
 
 import (
 	"math"
+	"strings"
 
 	"kern/checker"
 	"kern/lang/unit"
@@ -81,23 +82,39 @@ func (i *interaction) draw() *Scene {
 	if len(i.Points) > 1 {
 		note("the rings are the other combinations")
 	}
+	if len(i.Undecided) > 0 {
+		var list []string
+		for _, u := range i.Undecided {
+			list = append(list, words(u))
+		}
+		for _, line := range wrap("undecided: "+strings.Join(list, ", "), small, 94) {
+			note(line)
+		}
+	}
 	other := 1 - i.Axis
 	if i.Moments[other] > 0 {
-		note("the moment about " + other.String() + " grows in proportion, " + unit.Short(i.Moments[other]/i.Moments[i.Axis], 3) + " of this one")
+		note("the moment about " + other.String() + " grows with it, " + unit.Short(i.Moments[other]/i.Moments[i.Axis], 3) + " times as large")
 	}
 	return &Scene{Width: 96, Height: y - 2, Title: i.title("compression and bending"),
 		Description: "The governing combination " + name + " has " + i.show(i.Force, unit.Force) + " and " + i.show(i.Moments[i.Axis], unit.Moment) +
-			" about " + i.Axis.String() + "; without moments the member carries " + i.show(i.Envelope.Axial*i.Force, unit.Force) + ", without compression " + i.show(i.Envelope.Bending*i.Moments[i.Axis], unit.Moment) + ".",
+			" about " + i.Axis.String() + "; without moments the member carries " + i.show(i.Envelope.Axial*i.Force, unit.Force) + ", without compression " + i.show(i.Envelope.Bending*i.Moments[i.Axis], unit.Moment) + "." + i.open(),
 		Items: i.items}
 }
 
 // line draws the envelope, interrupted where the standard cannot decide, and
 // writes on it what it is.
 func (i *interaction) line(at func(n, m float64) Point) {
+	style, words := Strong, "inside this line all checks pass"
+	if l := i.Envelope.Limit; l != 1 {
+		words = "all checks reach the limit " + checker.Ratio(l) + " here"
+	}
+	if len(i.Undecided) > 0 { // what is not decided is no pass
+		style, words = Dashed, "inside this line the other checks pass"
+	}
 	var run []Point
 	flush := func() {
 		if len(run) > 1 {
-			i.polyline(Strong, run...)
+			i.polyline(style, run...)
 			i.mind(run...)
 		}
 		run = nil
@@ -111,10 +128,6 @@ func (i *interaction) line(at func(n, m float64) Point) {
 		run = append(run, at(p.Compression, p.Moment))
 	}
 	flush()
-	words := "inside this line all checks pass"
-	if l := i.Envelope.Limit; l != 1 {
-		words = "all checks reach the limit " + checker.Ratio(l) + " here"
-	}
 	var spots []spot
 	for _, k := range []int{7, 5, 9, 3, 12, 15} {
 		if q := at(line[k].Compression, line[k].Moment); !math.IsNaN(q.X) && !math.IsNaN(q.Y) {
@@ -122,6 +135,14 @@ func (i *interaction) line(at func(n, m float64) Point) {
 		}
 	}
 	i.place(Box{14, 9, 92, 69}, Text{Words: words, Size: small}, spots...)
+}
+
+// open says what is undecided.
+func (i *interaction) open() string {
+	if len(i.Undecided) == 0 {
+		return ""
+	}
+	return " Left out, as it is undecided: " + words(strings.Join(i.Undecided, ", ")) + "."
 }
 
 // beside are the places around a point.
