@@ -29,6 +29,9 @@ func randomMembers(n int, seed uint64) string {
 		} else {
 			fmt.Fprintf(&b, "height = %.3f m\n", height)
 		}
+		if r.IntN(6) == 0 {
+			fmt.Fprintf(&b, "lift base to %.3f m { section = %s }\n", height*(0.1+0.8*r.Float64()), pick(`"HEB 300"`, `"IPE 200"`))
+		}
 		for _, end := range []string{"base", "top"} {
 			if r.IntN(2) == 0 {
 				fmt.Fprintf(&b, "%s %s\n", end, pick("pinned", "fixed", "free", "guided"))
@@ -37,7 +40,7 @@ func randomMembers(n int, seed uint64) string {
 			}
 		}
 		crowd := 1 + r.IntN(3)
-		if r.IntN(12) == 0 {
+		if r.IntN(25) == 0 {
 			crowd = 30
 		}
 		at := func() string { return fmt.Sprintf("%.3f m", height*(0.001+0.998*r.Float64())) }
