@@ -37,7 +37,7 @@ type declared struct {
 }
 
 // topWords are the words that may begin a declaration, for offers.
-var topWords = []string{"include", "basis", "material", "section", "case", "combination", "exclusive", "level", "column", "strut", "tie"}
+var topWords = []string{"include", "basis", "material", "section", "case", "combination", "exclusive", "level", "project", "column", "strut", "tie"}
 
 // NewEnv reads what the members of a calculation share.
 func NewEnv(files []*lang.File, standards Standards) *Env {
@@ -45,6 +45,7 @@ func NewEnv(files []*lang.File, standards Standards) *Env {
 	b.collect()
 	b.env.offer = namesOf(b.env.Names)
 	b.basis()
+	b.project()
 	b.cases()
 	b.exclusive()
 	b.levels()
@@ -90,7 +91,7 @@ func (b *builder) collect() {
 						b.name(item, s.Args[0], kind, -1)
 					}
 					b.stmts = append(b.stmts, item)
-				case "basis", "exclusive":
+				case "basis", "exclusive", "project":
 					b.stmts = append(b.stmts, item)
 				case "include":
 				case "":

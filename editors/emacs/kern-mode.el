@@ -30,17 +30,18 @@
 
 ;; generated: declarations
 (defconst kern-mode-declarations
-  '("basis" "case" "column" "combination" "exclusive" "include" "level" "material" "section" "strut"
-    "tie")
+  '("basis" "case" "column" "combination" "exclusive" "include" "level" "material" "project"
+    "section" "strut" "tie")
   "Words that begin a declaration.")
 ;; end of declarations
 
 ;; generated: statements
 (defconst kern-mode-statements
-  '("accidental" "actions" "amplification" "base" "depart" "effective" "factor_buckling"
-    "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
-    "hold" "length" "limit" "load" "material" "note" "permanent" "require" "roofs" "section"
-    "selfweight" "show" "standard" "strengths" "top" "xi")
+  '("accidental" "actions" "amplification" "base" "checked" "date" "depart" "effective"
+    "factor_buckling" "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1"
+    "gamma_Q" "height" "hold" "length" "limit" "load" "material" "name" "note" "number" "permanent"
+    "prepared" "require" "revision" "roofs" "section" "selfweight" "show" "standard" "strengths"
+    "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -61,7 +62,7 @@
 
 ;; generated: particles
 (defconst kern-mode-particles
-  '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "cases"
+  '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "by" "cases"
     "characteristic" "cold" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
     "independent" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent" "persistent"
     "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic"
