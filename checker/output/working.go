@@ -36,21 +36,27 @@ func Working(p *Page, r *checker.Result, rule string) {
 	if record != nil {
 		p.Head(2, "Loads")
 		Loads(p, r)
-		if steps := own(record, ""); len(steps) > 0 {
-			p.Head(2, "Values that the checks share")
-			Steps(p, record.Set, r.Units(), steps)
-		}
-		for _, name := range rulesOf(r, record) {
-			p.Head(2, name)
-			verdictOf(p, r, name)
-			Steps(p, record.Set, r.Units(), own(record, name))
-		}
+		AllWorking(p, r, record)
 	}
 	Coverage(p, r)
 	Assumptions(p, r)
 	Departures(p, r)
 	Notes(p, r)
 	p.Text(Words(Caution))
+}
+
+// AllWorking writes the working of every check, step by step: first the values
+// that they share.
+func AllWorking(p *Page, r *checker.Result, record *derivation.Record) {
+	if steps := own(record, ""); len(steps) > 0 {
+		p.Head(2, "Values that the checks share")
+		Steps(p, record.Set, r.Units(), steps)
+	}
+	for _, name := range rulesOf(r, record) {
+		p.Head(2, name)
+		verdictOf(p, r, name)
+		Steps(p, record.Set, r.Units(), own(record, name))
+	}
 }
 
 // CheckWorking writes the working of one check below a heading of the given
@@ -183,7 +189,7 @@ func Checks(p *Page, r *checker.Result) {
 		rows = append(rows, []Line{Words(checkName(c)), Words(checker.Ratio(c.Utilisation)), Words(amountText(r.Units(), c.Demand, c.Dim)), Words(amountText(r.Units(), c.Capacity, c.Dim)),
 			Words(verdictWord(c)), Words(clauseOf(c)), Words(r.CombinationName(c))})
 	}
-	p.Table([]string{"check", "utilisation", "demand", "capacity", "verdict", "clause", "under"}, "lrrrlll", rows)
+	p.Table([]string{"check", "utilisation", "demand", "capacity", "verdict", "clause", "under"}, "lnnnlll", rows)
 	var why []Line
 	for _, c := range r.Checks {
 		if c.Verdict == standard.Undecided && c.Why != "" {
