@@ -2,6 +2,7 @@ package sheet
 
 import (
 	"math"
+	"strings"
 
 	"kern/checker"
 	"kern/checker/output"
@@ -20,7 +21,7 @@ func (c *composer) member(group []*checker.Result) []output.Block {
 
 	line := output.VerdictLine(r).String()
 	word := r.Verdict.String()
-	out = append(out, Verdict{word, line[len(word):]})
+	out = append(out, Verdict{word, strings.TrimLeft(line[len(word):], ":, ")})
 	if len(group) > 1 {
 		out = append(out, output.Paragraph{Text: output.Words("These members differ in nothing but their names. The working is written for " + r.Name + ".")})
 	}
