@@ -60,7 +60,7 @@ func TestModeClosed(t *testing.T) {
 
 // TestModeEquation: the shape of random bars satisfies the differential equation
 // of the beam-column, its holds and its springs, whose forces balance: at every
-// height the moment E I v'' and the axial forces are in equilibrium with the
+// height the moment E I v” and the axial forces are in equilibrium with the
 // forces of the supports below. What is tested is computed from the deflection
 // alone.
 func TestModeEquation(t *testing.T) {

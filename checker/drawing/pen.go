@@ -13,6 +13,9 @@ type pen struct {
 	items []Item
 	// taken are the boxes of the texts so far, which later ones keep clear of.
 	taken []Box
+	// ink are points on lines, close together, which words found by place keep
+	// clear of where they can.
+	ink []Point
 }
 
 func (p *pen) add(it Item) { p.items = append(p.items, it) }
@@ -90,19 +93,47 @@ func (p *pen) clear(b Box) bool {
 }
 
 // place writes words at the first of several places that keeps inside the
-// bounds and clear of all words so far. It is false when there is none.
+// bounds, clear of all words so far and, if there is such a place, of lines. It
+// is false when there is none.
 func (p *pen) place(bounds Box, t Text, places ...spot) bool {
 	if t.Size == 0 {
 		t.Size = normal
 	}
-	for _, s := range places {
-		t.At, t.Anchor = s.at, s.anchor
-		if b := t.Box(); b.Inside(bounds) && p.clear(b.grow(0.2)) {
-			p.text(t)
+	for _, strict := range []bool{true, false} {
+		for _, s := range places {
+			t.At, t.Anchor = s.at, s.anchor
+			if b := t.Box(); b.Inside(bounds) && p.clear(b.grow(0.2)) && !(strict && p.crossed(b)) {
+				p.text(t)
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// crossed tells whether a line runs through a box.
+func (p *pen) crossed(b Box) bool {
+	for _, q := range p.ink {
+		if q.X > b.Left && q.X < b.Right && q.Y > b.Top && q.Y < b.Bottom {
 			return true
 		}
 	}
 	return false
+}
+
+// mind notes the points of a line for place.
+func (p *pen) mind(pts ...Point) {
+	for i := range len(pts) - 1 {
+		a, b := pts[i], pts[i+1]
+		n := 1 + int(math.Hypot(b.X-a.X, b.Y-a.Y))
+		if n > 1000 {
+			continue
+		}
+		for j := range n + 1 {
+			t := float64(j) / float64(n)
+			p.ink = append(p.ink, Point{a.X + t*(b.X-a.X), a.Y + t*(b.Y-a.Y)})
+		}
+	}
 }
 
 // spot is a place for words.

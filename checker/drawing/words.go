@@ -2,6 +2,7 @@ package drawing
 
 import (
 	"math"
+	"strconv"
 
 	"kern/checker/derivation"
 	"kern/lang/unit"
@@ -31,3 +32,5 @@ func clip(words string, size, width float64, bold bool) string {
 	}
 	return string(r) + "…"
 }
+
+func decimal(n int) string { return strconv.Itoa(n) }
