@@ -146,8 +146,7 @@ func (c *composer) sections(p part) {
 	var assumed []output.Line
 	for _, s := range list {
 		title := output.SectionTitle(s)
-		if scene := drawing.Section(s.Shape, s.Properties, drawing.Sized{Side: 34}); scene != nil {
-			scene.Title = s.Title()
+		if scene := drawing.Section(s.Shape, s.Properties, drawing.Sized{Title: "section " + s.Title(), Side: 34, Dimensions: true, Units: units}); scene != nil {
 			pictures = append(pictures, scene)
 		}
 		mass := output.Words("–")

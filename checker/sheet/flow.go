@@ -262,10 +262,10 @@ func (f *flow) signatures(s Signatures) {
 
 // figures puts pictures side by side while there is room.
 func (f *flow) figures(list Figures) {
-	const between = 18
+	const between, shrink = 12, 0.88 // pictures may be made a little smaller to stand side by side
 	for len(list) > 0 {
 		n, w, h := 0, 0.0, 0.0
-		for n < len(list) && (n == 0 || w+between+list[n].Width*point <= f.measure()) {
+		for n < len(list) && (n == 0 || (w+between+list[n].Width*point)*shrink <= f.measure()) {
 			if n > 0 {
 				w += between
 			}
@@ -273,14 +273,16 @@ func (f *flow) figures(list Figures) {
 			h = max(h, list[n].Height*point)
 			n++
 		}
+		by := min(1, f.measure()/w)
+		h *= by
 		f.room(h + aside.leading + 8)
 		x := leftEdge
 		for _, s := range list[:n] {
-			f.draw(op{kind: sceneOp, x: x, y: f.y + h - s.Height*point, scene: s})
-			for _, b := range aside.lines(output.Words(s.Title), max(s.Width*point, 60))[:1] {
+			f.draw(op{kind: sceneOp, x: x, y: f.y + h - s.Height*point*by, w: by, scene: s})
+			for _, b := range aside.lines(output.Words(s.Title), max(s.Width*point*by, 60))[:1] {
 				f.draw(shifted(b.ops, x, f.y+h+aside.leading)...)
 			}
-			x += s.Width*point + between
+			x += (s.Width*point + between) * by
 		}
 		f.y += h + aside.leading + 9
 		list = list[n:]

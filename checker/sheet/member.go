@@ -5,6 +5,7 @@ import (
 	"strings"
 
 	"kern/checker"
+	"kern/checker/drawing"
 	"kern/checker/output"
 	"kern/checker/standard"
 )
@@ -29,7 +30,7 @@ func (c *composer) member(group []*checker.Result) []output.Block {
 	head := blocks(0, func(p *output.Page) { output.MemberHead(p, r) })
 	for _, b := range head {
 		if l, ok := b.(output.List); ok {
-			out = append(out, l)
+			out = append(out, factsOf(l))
 		}
 	}
 	add(1, func(p *output.Page) { output.Missing(p, r) })
@@ -85,4 +86,23 @@ func greatestMoment(f *standard.Frame, axis int, factors []float64) float64 {
 	return most
 }
 
-func pictures(r *checker.Result) Figures { return nil }
+// pictures are those of the member; its section is drawn with the basis.
+func pictures(r *checker.Result) Figures {
+	var out Figures
+	for _, draw := range []func(*checker.Result) *drawing.Scene{drawing.Elevation, drawing.Buckling, drawing.Diagrams, drawing.Interaction, drawing.Bars} {
+		if s := draw(r); s != nil {
+			out = append(out, s)
+		}
+	}
+	return out
+}
+
+// factsOf turns items of the form "name: value" into facts.
+func factsOf(l output.List) Facts {
+	var out Facts
+	for _, x := range l.Items {
+		name, value, _ := strings.Cut(x.String(), ": ")
+		out = append(out, Fact{name, output.Words(value)})
+	}
+	return out
+}

@@ -170,7 +170,7 @@ func (p *pdfWriter) op(o op) {
 	case sceneOp:
 		s := o.scene.(*drawing.Scene)
 		p.read(strings.TrimSuffix(s.Title+". "+s.Description, ". "), "Figure")
-		s.Paint(&scenePainter{p, o.x, o.y})
+		s.Paint(&scenePainter{p, o.x, o.y, o.w * point})
 		p.end()
 	case readOp:
 		p.read(o.text, "Span")
@@ -225,6 +225,7 @@ func (p *pdfWriter) stroke(o op, c [3]int) {
 type scenePainter struct {
 	p    *pdfWriter
 	x, y float64
+	unit float64 // a millimetre of the picture, points
 }
 
 // Open begins a group, which a page does not show.
@@ -234,7 +235,7 @@ func (s *scenePainter) Open(string) {}
 func (s *scenePainter) Close() {}
 
 func (s *scenePainter) at(p drawing.Point) (x, y float64) {
-	return s.x + p.X*point, s.y + p.Y*point
+	return s.x + p.X*s.unit, s.y + p.Y*s.unit
 }
 
 // Path draws a path. Areas that let the ground show through are mixed with white
@@ -266,12 +267,12 @@ func (s *scenePainter) Path(path drawing.Path) {
 	if look.Line != drawing.None {
 		c := colour(look.Line)
 		doc.SetDrawColor(c[0], c[1], c[2])
-		doc.SetLineWidth(look.Width * point)
+		doc.SetLineWidth(look.Width * s.unit)
 		doc.SetLineJoinStyle("miter")
 		doc.SetLineCapStyle("butt")
 		dashes := make([]float64, len(look.Dashes))
 		for i, d := range look.Dashes {
-			dashes[i] = round(d * point)
+			dashes[i] = round(d * s.unit)
 		}
 		doc.SetDashPattern(dashes, 0)
 		how += "D"
@@ -294,7 +295,7 @@ func (s *scenePainter) Text(t drawing.Text) {
 	if t.Bold {
 		f = bold
 	}
-	size := t.Size * point
+	size := t.Size * s.unit
 	b := words(f, size, clean(t.Words))
 	x, y := s.at(t.At)
 	dx := map[drawing.Anchor]float64{drawing.Middle: -b.width / 2, drawing.End: -b.width}[t.Anchor]
