@@ -113,6 +113,9 @@ func (l Line) String() string {
 
 func (p *Page) add(b Block) { p.blocks = append(p.blocks, b) }
 
+// Add puts blocks of other pages behind what was written.
+func (p *Page) Add(b ...Block) { p.blocks = append(p.blocks, b...) }
+
 // Head writes a heading of level 1 to 4.
 func (p *Page) Head(level int, text string) { p.add(Heading{min(max(level, 1), 4), text}) }
 

@@ -136,9 +136,10 @@ func (c *composer) cover() {
 	fact("made by", c.options.Program)
 	facts = append(facts, Fact{"inputs, SHA-256", output.Code(c.sheet.Inputs.Digest)})
 	c.add(facts)
-	c.add(c.tally())
+	c.sheet.Tally = c.tally()
+	c.add(c.sheet.Tally)
 	c.add(Signatures{{"prepared by", output.Words(p.PreparedBy)}, {"checked by", output.Words(p.CheckedBy)}})
-	c.add(output.Paragraph{Text: output.Join(output.Strong("Caution. "), output.Words(output.Caution+
+	c.add(output.Paragraph{Text: output.Join(output.Strong("Caution."), output.Words(" "+output.Caution+
 		" This sheet shows what was checked and lists, member by member, what was not."))})
 }
 

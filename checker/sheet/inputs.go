@@ -33,13 +33,17 @@ type Input struct {
 // checkout on another platform has the same digest.
 func normal(text string) string { return strings.ReplaceAll(text, "\r\n", "\n") }
 
+// DigestOf is the digest of a file's text.
+func DigestOf(text string) string {
+	sum := sha256.Sum256([]byte(normal(text)))
+	return hex.EncodeToString(sum[:])
+}
+
 // inputsOf takes the digest of files: their texts by name, in order.
 func inputsOf(files map[string]string, asked func(name string) bool) Inputs {
 	var in Inputs
 	for name, text := range files {
-		text = normal(text)
-		sum := sha256.Sum256([]byte(text))
-		in.Files = append(in.Files, Input{Name: name, Bytes: len(text), Digest: hex.EncodeToString(sum[:]), Asked: asked(name)})
+		in.Files = append(in.Files, Input{Name: name, Bytes: len(normal(text)), Digest: DigestOf(text), Asked: asked(name)})
 	}
 	slices.SortFunc(in.Files, func(a, b Input) int { return strings.Compare(a.Name, b.Name) })
 	whole := sha256.New()

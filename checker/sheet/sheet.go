@@ -44,6 +44,7 @@ type Sheet struct {
 	Project                     ProjectFacts
 	Blocks                      []output.Block
 	Inputs                      Inputs
+	Tally                       Verdict
 	Results                     string // digest of the verdicts and utilisations
 
 	options    Options

@@ -17,5 +17,3 @@ func (s *Sheet) Write(w io.Writer, form string) error {
 	}
 	return fmt.Errorf("a sheet is html, pdf or markdown, not '%s'", form)
 }
-
-func (s *Sheet) Markdown(w io.Writer) error { return nil }

@@ -9,9 +9,7 @@ import (
 	"path/filepath"
 	"strings"
 
-	"kern/checker"
 	"kern/checker/sheet"
-	"kern/lang"
 
 	"github.com/spf13/cobra"
 	"golang.org/x/term"
@@ -94,7 +92,7 @@ func printSheet(out io.Writer, f sheetFlags, paths []string) error {
 	if err := os.WriteFile(f.file, data.Bytes(), 0o666); err != nil {
 		return fmt.Errorf("%s: %w", f.file, reason(err))
 	}
-	fmt.Fprintf(os.Stderr, "%s: %s\n", f.file, tallied(report.Summary))
+	fmt.Fprintf(os.Stderr, "%s: %s\n", f.file, s.Tally.Rest)
 	return nil
 }
 
@@ -116,16 +114,3 @@ func (f sheetFlags) formOf() (string, error) {
 	}
 	return "html", nil
 }
-
-func tallied(s checker.Summary) string {
-	out := fmt.Sprintf("%d members: %d pass, %d fail, %d undecided", s.Members, s.Passes, s.Fails, s.Undecided)
-	if s.Members == 1 {
-		out = strings.Replace(out, "members", "member", 1)
-	}
-	if s.Errors > 0 {
-		out += fmt.Sprintf("; %d errors", s.Errors)
-	}
-	return out
-}
-
-var _ = lang.Format
