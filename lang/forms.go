@@ -75,6 +75,7 @@ var Forms = []Form{
 	{"top", InMember, []string{`top pinned|fixed|free|guided [about major|minor]`}, "How the upper end is held.", "top ${1|pinned,fixed,free,guided|}"},
 	{"hold", InMember, []string{`hold major|minor|both|twist at PLACE`}, "A point between the ends that is restrained.", "hold ${1|both,minor,major,twist|} at ${2:height / 2}"},
 	{"effective", InMember, []string{`effective = NUMBER [about major|minor|twist]`}, "The effective length factor, where the calculation knows better than the ends.", "effective = ${1:0.85} about ${2|minor,major,twist|}"},
+	{"net", InMember, []string{`net = AREA`}, "The area that holes leave across the path of failure in tension.", "net = ${1:17.2 cm2}"},
 	{"load", InMember, []string{
 		`load [CASE] FORCE [at PLACE] [offset LENGTH about AXIS [and LENGTH about AXIS]]`,
 		`load [CASE] FORCE across AXIS at PLACE`,
