@@ -56,6 +56,7 @@ type Stretch struct {
 	K          float64 // effective length factor
 	Exact      bool    // K was solved for the whole column, see Stretches
 	Overridden bool    // K is the user's
+	Stepped    bool    // the section changes in it; K is for one of its sections and one combination
 }
 
 // Length is the stretch's own length.

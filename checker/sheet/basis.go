@@ -85,12 +85,31 @@ func value(units derivation.Units, v float64, dim unit.Dim) output.Line {
 	return output.Words(strings.TrimSpace(unit.Short(v/u.Factor, 4) + " " + u.Symbol))
 }
 
+// madeOf is what a member, or a lift of it, is made of; either may be unknown.
+type madeOf struct {
+	section  *model.Section
+	material *model.Material
+}
+
+func made(results []*checker.Result) []madeOf {
+	var out []madeOf
+	for _, r := range results {
+		if len(r.Member.Lifts) == 0 {
+			out = append(out, madeOf{r.Member.Section, r.Member.Material})
+		}
+		for _, l := range r.Member.Lifts {
+			out = append(out, madeOf{l.Section, l.Material})
+		}
+	}
+	return out
+}
+
 func (c *composer) materials(p part) {
 	units := p.calculation.Env.Basis.Show
 	var rows [][]output.Line
 	var seen []string
-	for _, r := range p.results {
-		m := r.Member.Material
+	for _, x := range made(p.results) {
+		m := x.material
 		if m == nil || contains(seen, output.MaterialTitle(m)) {
 			continue
 		}
@@ -102,8 +121,8 @@ func (c *composer) materials(p part) {
 	}
 	c.add(output.Heading{Level: 3, Text: "Materials"}, output.Table{Head: []string{"material", "E", "G", "density"}, Align: "lnnn", Rows: rows})
 	seen, rows = nil, nil
-	for _, r := range p.results {
-		m, s := r.Member.Material, r.Member.Section
+	for _, x := range made(p.results) {
+		m, s := x.material, x.section
 		if m == nil || s == nil {
 			continue
 		}
@@ -124,16 +143,16 @@ func (c *composer) sections(p part) {
 	units := p.calculation.Env.Basis.Show
 	var list []*model.Section
 	density := map[string]float64{}
-	for _, r := range p.results {
-		s := r.Member.Section
+	for _, x := range made(p.results) {
+		s := x.section
 		if s == nil {
 			continue
 		}
 		title := output.SectionTitle(s)
 		if !slices.ContainsFunc(list, func(x *model.Section) bool { return output.SectionTitle(x) == title }) {
 			list = append(list, s)
-			if r.Member.Material != nil {
-				density[title] = r.Member.Material.Density
+			if x.material != nil {
+				density[title] = x.material.Density
 			}
 		}
 	}

@@ -226,9 +226,15 @@ func (c *composer) overview() {
 	}
 	var rows [][]output.Line
 	for _, r := range c.chosen {
+		var titles []string
+		for _, x := range made([]*checker.Result{r}) {
+			if x.section != nil && !contains(titles, x.section.Title()) {
+				titles = append(titles, x.section.Title())
+			}
+		}
 		section := "–"
-		if r.Member.Section != nil {
-			section = r.Member.Section.Title()
+		if len(titles) > 0 {
+			section = strings.Join(titles, ", ")
 		}
 		verdict := output.Words(r.Verdict.String())
 		if r.Verdict != standard.Passes {

@@ -39,7 +39,7 @@
 (defconst kern-mode-statements
   '("accidental" "actions" "amplification" "base" "checked" "date" "depart" "effective"
     "factor_buckling" "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1"
-    "gamma_Q" "height" "hold" "length" "limit" "load" "material" "name" "net" "note" "number"
+    "gamma_Q" "height" "hold" "length" "lift" "limit" "load" "material" "name" "net" "note" "number"
     "permanent" "prepared" "require" "revision" "roofs" "section" "selfweight" "show" "standard"
     "strengths" "top" "xi")
   "Words that begin a line in a block.")
