@@ -69,7 +69,7 @@ func (c *composer) basis(env *model.Env) {
 		rows = append(rows, []output.Line{output.Code(name), output.Words(unit.Exact(o.Value)), output.Words(o.Because)})
 	}
 	if len(rows) > 0 {
-		c.add(output.Heading{Level: 4, Text: "Numbers that the calculation sets itself"}, output.Table{Head: []string{"number", "value", "because"}, Align: "lnl", Rows: rows})
+		c.add(output.Heading{Level: 3, Text: "Numbers that the calculation sets itself"}, output.Table{Head: []string{"number", "value", "because"}, Align: "lnl", Rows: rows})
 	}
 	if env.Refused != "" {
 		c.add(output.Paragraph{Text: output.Join(output.Strong("No member can be judged: "), output.Words(env.Refused+"."))})

@@ -83,20 +83,39 @@ func New(r *checker.Report, o Options) (*Sheet, error) {
 		return nil, err
 	}
 	c := composer{report: r, options: o, chosen: chosen, sheet: &Sheet{Program: o.Program, options: o}}
-	for _, x := range r.AllCalculations() {
-		var results []*checker.Result
-		for _, m := range chosen {
-			if m.Env() == x.Env {
-				results = append(results, m)
-			}
-		}
-		if len(results) > 0 || len(o.Members) == 0 {
-			c.parts = append(c.parts, part{calculation: x, results: results})
-		}
+	if c.parts, err = partsOf(r, chosen); err != nil {
+		return nil, err
+	}
+	if len(o.Members) > 0 {
+		c.parts = slices.DeleteFunc(c.parts, func(p part) bool { return len(p.results) == 0 })
 	}
 	c.inputs()
 	c.compose()
 	return c.sheet, nil
+}
+
+// partsOf puts every result with a calculation that has it. Results that an edit
+// left alone were worked out in an earlier state of their calculation: those are
+// known by their file.
+func partsOf(r *checker.Report, results []*checker.Result) ([]part, error) {
+	var out []part
+	for _, x := range r.AllCalculations() {
+		out = append(out, part{calculation: x})
+	}
+	for _, m := range results {
+		i := slices.IndexFunc(out, func(p part) bool { return p.calculation.Env == m.Env() })
+		if i < 0 {
+			file, _ := r.Place(m)
+			i = slices.IndexFunc(out, func(p part) bool {
+				return slices.ContainsFunc(p.calculation.Files, func(f *lang.File) bool { return f.Name == file })
+			})
+		}
+		if i < 0 { // a sheet that leaves a member out must not be
+			return nil, fmt.Errorf("the member '%s' belongs to no calculation of the report", m.Name)
+		}
+		out[i].results = append(out[i].results, m)
+	}
+	return out, nil
 }
 
 // choose gives the results of the members that are asked for.
