@@ -8,6 +8,7 @@ type Context string
 // The contexts of the language.
 const (
 	InFile     Context = "file"     // between declarations
+	InProject  Context = "project"  // in what the cover says
 	InBasis    Context = "basis"    // in the design basis
 	InLevel    Context = "level"    // in a level's block
 	InMember   Context = "member"   // in a column, strut or tie
@@ -30,6 +31,7 @@ type Form struct {
 var Forms = []Form{
 	{"include", InFile, []string{`include "FILE"`}, "Brings in the declarations of another file of the workspace.", `include "${1:common.kern}"`},
 	{"forces", InFile, []string{`forces "FILE" compression positive|negative`}, "Takes the forces of members from a table of an analysis.", `forces "${1:frame.csv}" compression ${2|positive,negative|}`},
+	{"project", InFile, []string{`project { … }`}, "What the cover of a printed sheet says: the project, who prepared and checked the calculation, revision and date.", "project {\n    name        \"${1:name}\"\n    number      \"${2:number}\"\n    prepared by \"${3:name}\"\n    revision    \"${4:A}\"\n    $0\n}"},
 	{"basis", InFile, []string{`basis { … }`}, "The design basis, once in a calculation.", "basis {\n    standard \"${1:EN 1993-1-1:2005}\"\n    actions  \"${2:EN 1990:2002}\"\n    $0\n}"},
 	{"material", InFile, []string{`material NAME = "GRADE" [per "STANDARD"]`, `material NAME { E = …; fy = …; density = … }`}, "A steel grade, or a material with stated values.", `material ${1:s355} = "${2:S355}"`},
 	{"section", InFile, []string{`section NAME = "DESIGNATION"`, `section NAME = SHAPE { … }`}, "A cross-section: from the catalogue, or a shape with its dimensions.", `section ${1:post} = "${2:HEB 160}"`},
@@ -41,6 +43,13 @@ var Forms = []Form{
 	{"column", InFile, []string{`column NAME[, NAME …] ["TITLE"] { … }`, `column NAME ["TITLE"] as NAME { … }`}, "A column: what it is made of, how it is held, what it carries.", "column ${1:A1} \"${2:title}\" {\n    section  = ${3:\"HEB 160\"}\n    material = ${4:\"S355\"}\n    height   = ${5:3 m}\n    load ${6:80 kN} at top\n}"},
 	{"strut", InFile, []string{`strut NAME[, NAME …] ["TITLE"] { … }`}, "A member of any slope in compression; its own weight is not counted.", "strut ${1:D1} \"${2:title}\" {\n    section  = ${3:\"CHS 114.3x5\"}\n    material = ${4:\"S355H\"}\n    length   = ${5:3 m}\n    load ${6:40 kN}\n}"},
 	{"tie", InFile, []string{`tie NAME[, NAME …] ["TITLE"] { … }`}, "A member in tension; its own weight is not counted.", "tie ${1:T1} \"${2:title}\" {\n    section  = ${3:\"CHS 114.3x5\"}\n    material = ${4:\"S355H\"}\n    length   = ${5:3 m}\n    load ${6:-40 kN}\n}"},
+
+	{"name", InProject, []string{`name "TEXT"`}, "What the project is called.", `name "${1:name}"`},
+	{"number", InProject, []string{`number "TEXT"`}, "The number of the project or the job.", `number "${1:number}"`},
+	{"prepared", InProject, []string{`prepared by "TEXT"`}, "Who made the calculation.", `prepared by "${1:name}"`},
+	{"checked", InProject, []string{`checked by "TEXT"`}, "Who checked the calculation.", `checked by "${1:name}"`},
+	{"revision", InProject, []string{`revision "TEXT"`}, "The revision of the calculation.", `revision "${1:A}"`},
+	{"date", InProject, []string{`date "DATE"`}, "The date of the revision, year-month-day.", `date "${1:2026-03-31}"`},
 
 	{"standard", InBasis, []string{`standard "NAME" [annex "NAME"]`}, "The design standard that members are checked to.", `standard "${1:EN 1993-1-1:2005}"`},
 	{"actions", InBasis, []string{`actions "EN 1990:2002" [annex "NAME"] [eq "6.10"]`, `actions "EN 1990:2002" [annex "NAME"] eq "6.10a/b"`}, "The standard that combinations are made by.", `actions "${1:EN 1990:2002}"`},
@@ -162,7 +171,7 @@ var Words = map[string]string{
 	"major": "the section's strong axis", "minor": "the section's weak axis", "both": "both axes", "twist": "turning about the member's own axis",
 	"at": "where it acts", "about": "the axis that it bends about", "across": "across the member, bending it about an axis", "offset": "off the centroid", "and": "also about the other axis",
 	"from": "from a place", "to": "to a place", "top": "the upper end", "as": "like another member, but for what is said here", "per": "by a product standard",
-	"annex": "a set of national values", "eq": "the equation of the combinations", "because": "the reason", "floor": "an area of floor that the member carries",
+	"annex": "a set of national values", "by": "who did it", "eq": "the equation of the combinations", "because": "the reason", "floor": "an area of floor that the member carries",
 	"hot": "hot finished (EN 10210)", "cold": "cold formed (EN 10219)", "welded": "built up by welding", "rolled": "hot rolled",
 	"compression": "pressing along the member", "positive": "more than zero", "negative": "less than zero",
 	"permanent": "acts always", "imposed": "people, goods, vehicles", "snow": "snow", "wind": "wind", "temperature": "temperature",

@@ -22,6 +22,7 @@ type Calculation struct {
 
 // Env is what the members of a calculation share.
 type Env struct {
+	Project      Project
 	Basis        Basis
 	Names        map[string]*Named
 	Cases        []*Case

@@ -45,6 +45,6 @@ func root() *cobra.Command {
 		Version:       version(),
 	}
 	c.SetVersionTemplate("kern {{.Version}}\n")
-	c.AddCommand(checkCommand(), formatCommand(), rulesCommand(), catalogueCommand(), chartCommand(), lspCommand(), versionCommand())
+	c.AddCommand(checkCommand(), sheetCommand(), formatCommand(), rulesCommand(), catalogueCommand(), chartCommand(), lspCommand(), versionCommand())
 	return c
 }
