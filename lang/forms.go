@@ -38,7 +38,7 @@ var Forms = []Form{
 	{"strut", InFile, []string{`strut NAME[, NAME …] ["TITLE"] { … }`}, "A member of any slope in compression; its own weight is not counted.", "strut ${1:D1} \"${2:title}\" {\n    section  = ${3:\"CHS 114.3x5\"}\n    material = ${4:\"S355H\"}\n    length   = ${5:3 m}\n    load ${6:40 kN}\n}"},
 	{"tie", InFile, []string{`tie NAME[, NAME …] ["TITLE"] { … }`}, "A member in tension; its own weight is not counted.", "tie ${1:T1} \"${2:title}\" {\n    section  = ${3:\"CHS 114.3x5\"}\n    material = ${4:\"S355H\"}\n    length   = ${5:3 m}\n    load ${6:-40 kN}\n}"},
 
-	{"standard", InBasis, []string{`standard "NAME" [annex "NAME"]`}, "The design standard that members are checked to.", `standard "${1:EN 1993-1-1:2005}"`},
+	{"standard", InBasis, []string{`standard "NAME" [by LRFD|ASD] [annex "NAME"]`}, "The design standard that members are checked to.", `standard "${1:EN 1993-1-1:2005}"`},
 	{"actions", InBasis, []string{`actions "EN 1990:2002" [annex "NAME"] [eq "6.10"]`, `actions "EN 1990:2002" [annex "NAME"] eq "6.10a/b"`}, "The standard that combinations are made by.", `actions "${1:EN 1990:2002}"`},
 	{"permanent", InBasis, []string{`permanent cases together`, `permanent cases independent`}, "Whether all permanent cases have the upper or the lower factor together, or each by itself.", "permanent cases ${1|independent,together|}"},
 	{"roofs", InBasis, []string{`roofs alone`, `roofs together`}, "Whether imposed loads on roofs (category H) act together with snow and wind.", "roofs ${1|together,alone|}"},
@@ -135,6 +135,7 @@ var Words = map[string]string{
 	"major": "the section's strong axis", "minor": "the section's weak axis", "both": "both axes", "twist": "turning about the member's own axis",
 	"at": "where it acts", "about": "the axis that it bends about", "across": "across the member, bending it about an axis", "offset": "off the centroid", "and": "also about the other axis",
 	"from": "from a place", "to": "to a place", "top": "the upper end", "as": "like another member, but for what is said here", "per": "by a product standard",
+	"by": "the method of the standard", "LRFD": "load and resistance factor design", "ASD": "allowable strength design",
 	"annex": "a set of national values", "eq": "the equation of the combinations", "because": "the reason", "floor": "an area of floor that the member carries",
 	"hot": "hot finished (EN 10210)", "cold": "cold formed (EN 10219)", "welded": "built up by welding", "rolled": "hot rolled",
 	"permanent": "acts always", "imposed": "people, goods, vehicles", "snow": "snow", "wind": "wind", "temperature": "temperature",

@@ -1,6 +1,8 @@
 package model
 
 import (
+	"fmt"
+
 	"kern/checker/action"
 	"kern/checker/derivation"
 	"kern/lang"
@@ -73,6 +75,10 @@ func (b *builder) basisStmt(r *reader) {
 			return
 		}
 		basis.Standard = name
+		if !b.method(r, name, e) {
+			basis.Standard = ""
+			return
+		}
 		if _, ok := r.word("annex"); ok {
 			e := r.peek()
 			annex, ok := r.text("the annex")
@@ -81,6 +87,11 @@ func (b *builder) basisStmt(r *reader) {
 			}
 			basis.Annex = annex
 			known := b.standards.Annexes(name)
+			if len(known) == 0 {
+				basis.Standard = ""
+				r.fail("unknown-annex", e.Span, "%s has no annexes", name)
+				return
+			}
 			found := false
 			for _, k := range known {
 				found = found || k == annex
@@ -135,6 +146,39 @@ func (b *builder) basisStmt(r *reader) {
 		return
 	}
 	r.end()
+}
+
+// method reads by which method of a standard strengths are found: "by LRFD". A
+// standard that has methods needs one, since none of them is the usual one.
+func (b *builder) method(r *reader, name string, at *lang.Expr) bool {
+	methods := b.standards.Methods(name)
+	by := r.peek()
+	if len(methods) == 0 {
+		if !by.Is("by") {
+			return true
+		}
+		span := by.Span
+		if r.take(); r.peek() != nil && r.peek().Kind == lang.NameExpr {
+			span = span.Join(r.peek().Span)
+		}
+		r.problem(lang.Problem{Rule: "left-over", Span: span, Message: name + " has one method alone: 'by' does not belong here",
+			Fixes: []lang.Fix{lang.Replace("Remove it", false, span, "")}})
+		return false
+	}
+	if _, ok := r.word("by"); !ok {
+		if r.slip() {
+			return false
+		}
+		p := lang.Problem{Rule: "missing-method", Span: at.Span, Message: fmt.Sprintf("%s is used by one of several methods; say which: by %s", name, lang.OrList(methods))}
+		for _, m := range methods {
+			p.Fixes = append(p.Fixes, lang.Replace("Add by "+m, false, lang.Span{Start: at.Span.End, End: at.Span.End}, " by "+m))
+		}
+		r.problem(p)
+		return false
+	}
+	w, ok := r.wordOf("the method", methods...)
+	b.env.Basis.Method = w
+	return ok
 }
 
 // override reads a number that replaces one of a standard.

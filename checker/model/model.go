@@ -93,6 +93,7 @@ type Basis struct {
 	Place       lang.Place
 	Standard    string // "" when not stated
 	StandardAt  lang.Place
+	Method      string // of a standard that has several: "LRFD" or "ASD"
 	Annex       string
 	Actions     string // "" when not stated
 	Equation    string

@@ -61,12 +61,12 @@
 
 ;; generated: particles
 (defconst kern-mode-particles
-  '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "cases"
-    "characteristic" "cold" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
-    "independent" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent" "persistent"
-    "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic"
-    "simple" "slenderness" "snow" "sway" "temperature" "theoretical" "to" "together" "top" "twist"
-    "utilisation" "welded" "wind")
+  '("ASD" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "by"
+    "cases" "characteristic" "cold" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot"
+    "imposed" "independent" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent"
+    "persistent" "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant"
+    "seismic" "simple" "slenderness" "snow" "sway" "temperature" "theoretical" "to" "together" "top"
+    "twist" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 

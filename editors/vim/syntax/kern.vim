@@ -8,7 +8,7 @@ syn spell toplevel
 syn match kernOperator /[-+*\/^=<>]/
 syn match kernDefinition /\v^\s*\zs[[:alpha:]_\u0370-\u03ff]\k*\ze\s*\=/
 " generated: words
-syn match kernParticle /\v<%(about|accidental|across|alone|and|annex|as|at|because|both|cases|characteristic|cold|eq|fixed|floor|free|frequent|from|guided|hot|imposed|independent|lengths|major|minor|off|offset|on|per|permanent|persistent|pinned|psi_0|psi_1|psi_2|quasipermanent|recommended|rolled|secant|seismic|simple|slenderness|snow|sway|temperature|theoretical|to|together|top|twist|utilisation|welded|wind)>/
+syn match kernParticle /\v<%(ASD|LRFD|about|accidental|across|alone|and|annex|as|at|because|both|by|cases|characteristic|cold|eq|fixed|floor|free|frequent|from|guided|hot|imposed|independent|lengths|major|minor|off|offset|on|per|permanent|persistent|pinned|psi_0|psi_1|psi_2|quasipermanent|recommended|rolled|secant|seismic|simple|slenderness|snow|sway|temperature|theoretical|to|together|top|twist|utilisation|welded|wind)>/
 syn match kernShape /\v<%(angle|bar|channel|given|isection|pipe|rod|tee|tube)>/
 syn match kernFunction /\v<%(abs|cos|max|min|sin|sqrt|tan)>\ze\s*\(/
 syn match kernConstant /\v<%(g|pi)>/
