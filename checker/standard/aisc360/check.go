@@ -3,6 +3,7 @@ package aisc360
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"kern/checker/derivation"
 	"kern/checker/standard"
@@ -22,12 +23,14 @@ type calc struct {
 	pulled   int    // the combination with the greatest tension, -1 for none
 	assuming []string
 
-	elements []*element // the plates that can buckle in compression
-	slender  bool       // one of them has a width-to-thickness ratio above lambda_r
+	shape   *shape // the plates that can buckle in compression; nil for solid, round and stated sections
+	slender bool   // a plate, or the round wall, has a width-to-thickness ratio above lambda_r
 	// nominal is the least nominal compressive strength that was found, of which
 	// rule; NaN while it is not known.
 	nominal     float64
 	nominalRule string
+
+	bend bendState
 }
 
 // do computes a formula of the standard.
@@ -57,7 +60,10 @@ func (c *calc) cover(rule string, state standard.State, why string) {
 }
 
 func (c *calc) assume(format string, args ...any) {
-	c.assuming = append(c.assuming, fmt.Sprintf(format, args...))
+	line := fmt.Sprintf(format, args...)
+	if !slices.Contains(c.assuming, line) {
+		c.assuming = append(c.assuming, line)
+	}
 }
 
 func (c *calc) group(rule string) {

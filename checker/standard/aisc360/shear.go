@@ -1,0 +1,3 @@
+package aisc360
+
+func (c *calc) shears() {}
