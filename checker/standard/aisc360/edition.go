@@ -46,7 +46,11 @@ func init() {
 		old.set.Symbol(old.letter(s.Name), s.Dim, s.What)
 	}
 	for _, f := range set.Formulas() {
-		old.own[f] = old.set.Formula(f.Symbol, old.letter(f.Text), f.Clause)
+		text := f.Text
+		if t, ok := changed2016[f]; ok {
+			text = t
+		}
+		old.own[f] = old.set.Formula(f.Symbol, old.letter(text), f.Clause)
 	}
 	old.set.Seal()
 	Edition2016 = Standard{old}

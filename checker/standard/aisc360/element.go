@@ -183,8 +183,8 @@ func (c *calc) local() {
 		if sh.Made == section.Welded {
 			c.shape = &shapeBox
 		}
-		c.take(symD, sh.Depth, title)
-		c.take(symB, sh.Width, title)
+		c.take(symD, max(sh.Depth, sh.Width), title) // the longer side is upright, whichever way it was written
+		c.take(symB, min(sh.Depth, sh.Width), title)
 		c.take(symT, sh.Wall, title)
 		c.take(symRin, sh.InnerRadius, title)
 	case section.Given:
