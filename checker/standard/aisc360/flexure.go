@@ -135,6 +135,12 @@ func (c *calc) moduli() {
 	c.take(flexures[0].s, known(sec.WelMajor), title)
 	c.take(flexures[1].z, known(sec.WplMinor), title)
 	c.take(flexures[1].s, known(sec.WelMinor), title)
+	if sh := sec.Shape; sh.Kind == section.Bar {
+		c.take(symD, max(sh.Depth, sh.Width), title)
+		c.take(symT, min(sh.Depth, sh.Width), title)
+	} else if sh.Kind == section.Rod {
+		c.take(symDia, sh.Diameter, title)
+	}
 	c.take(symJ, standard.KnownOrZero(sec.It), title)
 	c.take(symCw, standard.KnownOrZero(standard.Warping(sec)), title)
 	for a, w := range []float64{sec.WelMajor, sec.WelMinor} {

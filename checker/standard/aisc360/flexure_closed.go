@@ -3,7 +3,7 @@ package aisc360
 // tubeStrength is F7: rectangular hollow sections and boxes about either axis.
 func (c *calc) tubeStrength(a int) string {
 	x := flexures[a]
-	box := c.f.Member.Section.Shape.OuterRadius == 0
+	box := c.shape == &shapeBox
 	if box {
 		c.do(doHBox)
 		c.do(doBBox)

@@ -1,3 +1,178 @@
 package aisc360
 
-func (c *calc) shears() {}
+import (
+	"fmt"
+	"math"
+
+	"kern/checker/derivation"
+	"kern/checker/section"
+	"kern/checker/standard"
+	"kern/lang/unit"
+)
+
+// Areas and ratios of the parts that resist shear, chapter G; the axis is that
+// about which the force bends.
+var (
+	symLv   = sym("L_v", unit.Length, "distance from the greatest to no shear force")
+	symFcrV = sym("F_cr_V", unit.Stress, "critical stress in shear")
+
+	doFcrV = formula(symFcrV, "min(0.6 * F_y, max(1.60 * E / (sqrt(L_v / D) * (D / t)^1.25), 0.78 * E / (D / t)^1.5))", "G5 (G5-2a), (G5-2b)")
+
+	resisting = [2]*shearParts{newShearParts(0), newShearParts(1)}
+)
+
+// shearParts are the texts of A_w and of the width-to-thickness ratio for each
+// kind of section.
+type shearParts struct {
+	web, flanges, stem, leg, tube, solid                          *derivation.Formula
+	ratioWeb, ratioFlange, ratioU, ratioStem, ratioLeg, ratioTube *derivation.Formula
+	pipe                                                          *derivation.Formula
+}
+
+func newShearParts(a int) *shearParts {
+	x := flexures[a]
+	area := func(text, clause string) *derivation.Formula { return formula(x.aw, text, clause) }
+	ratio := func(text, clause string) *derivation.Formula { return formula(x.lamV, text, clause) }
+	side := map[string]string{"x": "h", "y": "b"}[x.letter]
+	p := &shearParts{}
+	if a == 0 {
+		p.web = area("d * t_w", "G2.1")
+		p.ratioWeb = ratio("h / t_w", "G2.1")
+	} else {
+		p.flanges = area("2 * b_f * t_f", "G6, both flanges")
+		p.ratioFlange = ratio("b_f / (2 * t_f)", "G6")
+		p.ratioU = ratio("b_f / t_f", "G6")
+	}
+	p.stem = area("d * t_w", "G3")
+	p.ratioStem = ratio("d / t_w", "G3")
+	p.leg = area("min(b_1, b_2) * t", "G3, the shorter leg by itself, on the safe side")
+	p.ratioLeg = ratio("max(b_1, b_2) / t", "G3, of the longer leg, on the safe side")
+	p.tube = area("2 * "+side+" * t", "G4")
+	p.ratioTube = ratio(side+" / t", "G4")
+	p.solid = area("A_g", "J4.2, the gross area")
+	p.pipe = formula(x.vn, "F_cr_V * A_g / 2", "G5 (G5-1)")
+	return p
+}
+
+// shears is chapter G about both axes.
+func (c *calc) shears() {
+	for a, x := range flexures {
+		rule := "section-shear-" + x.word
+		clause := bendingClauses[rule].clause
+		if !c.f.Bends[a] {
+			c.cover(rule, standard.NotApplicable, "the loads do not bend the member about this axis")
+			continue
+		}
+		at, worst := c.greatest(c.bend.tiny[a]/c.f.Member.Height, func(b *comb) float64 { return b.shear[a] })
+		if at < 0 {
+			c.cover(rule, standard.NotApplicable, "the moments come without shear force")
+			continue
+		}
+		c.group(rule)
+		if why := c.shearStrength(a); why != "" {
+			c.undecidedIn(rule, clause, unit.Force, why)
+			continue
+		}
+		c.available(x.shear)
+		c.take(x.v, worst, c.combination(at))
+		u := c.do(x.doUv)
+		c.add(rule, clause, at, worst, c.s.At(x.shear.c), unit.Force, u, c.f.Limit())
+	}
+}
+
+// shearStrength computes the nominal strength for the force that bends about an
+// axis, or says why it cannot.
+func (c *calc) shearStrength(a int) string {
+	x, p, sec := flexures[a], resisting[a], c.f.Member.Section
+	sh := sec.Shape
+	c.factor(factorV)
+	plate := func(area, ratio *derivation.Formula, kv float64, clause string) {
+		c.do(area)
+		c.do(ratio)
+		c.take(x.kv, kv, clause)
+		c.shearBuckling(x)
+		c.do(x.doVn)
+	}
+	switch sh.Kind {
+	case section.ISection, section.Channel:
+		switch {
+		case sec.Turned:
+			return "the flanges are so wide that the strong axis is the web's: check chapter G by hand"
+		case a == 1 && sh.Kind == section.Channel:
+			plate(p.flanges, p.ratioU, 1.2, "G6")
+		case a == 1:
+			plate(p.flanges, p.ratioFlange, 1.2, "G6")
+		default:
+			c.do(doHI)
+			c.do(p.web)
+			c.webShear(x)
+			c.do(x.doVn)
+		}
+	case section.Tee:
+		if a == c.squareToStem() {
+			plate(p.stem, p.ratioStem, 1.2, "G3")
+			return ""
+		}
+		return "G6 gives the flange of a tee in shear across its stem, F no bending there: check by hand"
+	case section.Angle:
+		plate(p.leg, p.ratioLeg, 1.2, "G3")
+	case section.Tube:
+		if c.shape == &shapeBox {
+			c.do(doHBox)
+			c.do(doBBox)
+		} else {
+			c.do(doHHSS)
+			c.do(doBHSS)
+		}
+		plate(p.tube, p.ratioTube, 5, "G4")
+	case section.Pipe:
+		c.take(symLv, c.f.Member.Height, "the whole height, on the safe side")
+		c.do(doFcrV)
+		c.do(p.pipe)
+	case section.Bar, section.Rod:
+		c.do(p.solid)
+		c.do(x.doVnSolid)
+	case section.Given:
+		return "the web of a section with stated properties is not known: check chapter G by hand"
+	default:
+		return fmt.Sprintf("chapter G has no section for %ss: check shear by hand", sh.Kind)
+	}
+	return ""
+}
+
+// webShear is G2.1 for the web of an I section or channel without transverse
+// stiffeners.
+func (c *calc) webShear(x *flexure) {
+	sh := c.f.Member.Section.Shape
+	ratio := c.do(resisting[0].ratioWeb)
+	es := c.s.At(symE) / c.s.At(symFy)
+	if sh.Kind == section.ISection && sh.Made != section.Welded && ratio <= 2.24*math.Sqrt(es) {
+		id, v := factorV.phi, 1.00
+		if c.asd {
+			id, v = factorV.omega, 1.50
+		}
+		c.take(id, v, "G2.1(a), rolled, h/t_w ≤ 2.24 sqrt(E/F_y)")
+		c.do(x.doCv1)
+		return
+	}
+	c.take(x.kv, 5.34, "G2.1(b)(2), without transverse stiffeners")
+	if ratio <= 1.10*math.Sqrt(5.34*es) {
+		c.do(x.doCv1)
+	} else {
+		c.do(x.doCv1Long)
+	}
+}
+
+// shearBuckling is C_v2 of G2.2.
+func (c *calc) shearBuckling(x *flexure) {
+	ratio := c.s.At(x.lamV)
+	root := math.Sqrt(c.s.At(x.kv) * c.s.At(symE) / c.s.At(symFy))
+	switch {
+	case ratio <= 1.10*root:
+		c.do(x.doCv1)
+	case ratio <= 1.37*root:
+		c.do(x.doCv1Long)
+	default:
+		c.do(x.doCv2Long)
+	}
+}
