@@ -197,6 +197,9 @@ func (w *mentions) statement(s *lang.Stmt) {
 	case "from": // from A to B
 		at(0)
 		at(2)
+	case "joints": // joints RATIO at base, RATIO at top about AXIS
+		at(0)
+		at(4)
 	case "hold": // hold minor at PLACE
 		at(2)
 	case "limit": // limit sway = VALUE

@@ -45,6 +45,7 @@ var Forms = []Form{
 	{"accidental", InBasis, []string{`accidental psi_1`, `accidental psi_2`}, "The value of the leading variable action in accidental situations.", "accidental ${1|psi_2,psi_1|}"},
 	{"show", InBasis, []string{`show UNIT[, UNIT …]`}, "Units that results are shown in.", "show ${1:kN, kNm, mm, MPa}"},
 	{"effective", InBasis, []string{`effective lengths theoretical`, `effective lengths recommended`}, "Effective length factors of ideal ends, or those recommended for design.", "effective lengths ${1|recommended,theoretical|}"},
+	{"stability", InBasis, []string{`stability direct`, `stability effective`}, "The method of stability of ANSI/AISC 360: direct analysis (chapter C) or effective lengths (Appendix 7).", "stability ${1|direct,effective|}"},
 	{"selfweight", InBasis, []string{`selfweight on`, `selfweight off`}, "Whether members carry their own weight.", "selfweight ${1|off,on|}"},
 	{"strengths", InBasis, []string{`strengths "product standard"`, `strengths "EN 1993-1-1 Table 3.1"`}, "Where the strength of a grade comes from.", `strengths "${1|product standard,EN 1993-1-1 Table 3.1|}"`},
 	{"amplification", InBasis, []string{`amplification secant`, `amplification simple`}, "How the axial force amplifies moments in elastic theory.", "amplification ${1|secant,simple|}"},
@@ -66,6 +67,8 @@ var Forms = []Form{
 	{"top", InMember, []string{`top pinned|fixed|free|guided [about major|minor]`}, "How the upper end is held.", "top ${1|pinned,fixed,free,guided|}"},
 	{"hold", InMember, []string{`hold major|minor|both|twist at PLACE`}, "A point between the ends that is restrained.", "hold ${1|both,minor,major,twist|} at ${2:height / 2}"},
 	{"effective", InMember, []string{`effective = NUMBER [about major|minor|twist]`}, "The effective length factor, where the calculation knows better than the ends.", "effective = ${1:0.85} about ${2|minor,major,twist|}"},
+	{"joints", InMember, []string{`joints NUMBER at base|top, NUMBER at base|top about major|minor sway|braced`}, "Stiffness ratios of the joints of a rigid frame (columns over beams), from which the effective length factor follows.", "joints ${1:1.2} at base, ${2:2.0} at top about ${3|major,minor|} ${4|sway,braced|}"},
+	{"connected", InMember, []string{`connected by long|short leg [space]`}, "The leg by which a single angle is connected at both ends; space for web members of box and space trusses.", "connected by ${1|long,short|} leg"},
 	{"load", InMember, []string{
 		`load [CASE] FORCE [at PLACE] [offset LENGTH about AXIS [and LENGTH about AXIS]]`,
 		`load [CASE] FORCE across AXIS at PLACE`,
@@ -145,5 +148,6 @@ var Words = map[string]string{
 	"cases": "load cases", "together": "at the same time", "alone": "not at the same time", "independent": "each by itself",
 	"on": "counted", "off": "not counted", "lengths": "effective lengths", "theoretical": "of ideal ends", "recommended": "recommended for design",
 	"secant": "the secant formula", "simple": "1/(1 - N/N_cr)", "utilisation": "demand over capacity", "slenderness": "effective length over radius of gyration",
-	"sway": "sideways movement of the top",
+	"sway": "sideways movement of the top", "braced": "the joints cannot move sideways against each other", "direct": "the direct analysis method", "effective": "effective lengths",
+	"long": "the longer leg of an angle", "short": "the shorter leg of an angle", "leg": "one of the two plates of an angle", "space": "web member of a box or space truss",
 }

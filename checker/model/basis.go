@@ -45,10 +45,15 @@ func (b *builder) basis() {
 				env.refuse("a line of the basis has an error")
 			}
 		}
+		if basis := &env.Basis; basis.Direct && basis.Standard != "" && len(b.standards.Methods(basis.Standard)) == 0 {
+			r := b.reader(declared{basis.DirectAt.Decl, d.stmt})
+			r.fail("wrong-form", basis.DirectAt.Span, "direct analysis is a method of ANSI/AISC 360; %s has none of that name", basis.Standard)
+			env.refuse("a line of the basis has an error")
+		}
 	}
 }
 
-var basisWords = []string{"standard", "actions", "show", "effective", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental",
+var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental",
 	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "xi", "factor_yield", "factor_buckling"}
 
 func (b *builder) basisStmt(r *reader) {
@@ -130,6 +135,9 @@ func (b *builder) basisStmt(r *reader) {
 				r.fail("unknown-word", e.Span, "strengths come from the \"product standard\" or from \"EN 1993-1-1 Table 3.1\"")
 			}
 		}
+	case "stability":
+		w, _ := r.wordOf("the method of stability", "direct", "effective")
+		basis.Direct, basis.DirectAt = w == "direct", r.place(r.stmt.Line)
 	case "amplification":
 		w, _ := r.wordOf("the amplification", "secant", "simple")
 		basis.Simple = w == "simple"

@@ -8,7 +8,7 @@ import (
 )
 
 // memberWords are the words that may begin a statement in a member's block.
-var memberWords = []string{"section", "material", "height", "length", "from", "base", "top", "hold", "effective", "load", "limit",
+var memberWords = []string{"section", "material", "height", "length", "from", "base", "top", "hold", "effective", "joints", "connected", "load", "limit",
 	"require", "depart", "note", "selfweight"}
 
 // DepartureRules are the rules that a member may depart from; the checker fills
@@ -183,7 +183,7 @@ func (w *memberReader) statement(d declared) {
 		r.args = value
 	}
 	switch s.Word {
-	case "load", "hold", "require", "depart", "note", "limit", "effective", "base", "top":
+	case "load", "hold", "require", "depart", "note", "limit", "effective", "joints", "base", "top":
 	default:
 		key := sameWord(s.Word)
 		if first, again := w.first[key]; again {
@@ -222,6 +222,10 @@ func (w *memberReader) statement(d declared) {
 		w.hold(r)
 	case "effective":
 		w.effective(r)
+	case "joints":
+		w.joints(r)
+	case "connected":
+		w.connected(r)
 	case "load":
 		w.load(r)
 	case "limit":

@@ -103,6 +103,8 @@ type Basis struct {
 	Recommended bool                // effective lengths: recommended design values
 	SelfWeight  bool
 	TableFy     bool // strengths from EN 1993-1-1 Table 3.1 rather than the product standard
+	Direct      bool // stability by the direct analysis method of ANSI/AISC 360 chapter C
+	DirectAt    lang.Place
 	Simple      bool // amplification 1/(1 - N/N_cr) for every moment diagram
 }
 
@@ -250,7 +252,9 @@ type Member struct {
 	From      float64 // height of the base above datum, m
 	Base, Top [2]action.End
 	Holds     []Hold
-	Factor    [3]float64 // effective length factors of the user: major, minor, twist; 0 for none
+	Joints    [2]*action.Joints // stiffness ratios of rigid joints: major, minor; nil for none
+	Leg       Leg               // the leg by which a single angle is connected
+	Factor    [3]float64        // effective length factors of the user: major, minor, twist; 0 for none
 	Loads     []Load
 	Weight    bool // self-weight counts
 
@@ -267,6 +271,16 @@ type Member struct {
 
 	Problems []lang.Diagnostic
 }
+
+// Leg is the leg by which a single angle is connected at both ends.
+type Leg struct {
+	Long, Short bool
+	Space       bool // web member of a box or space truss
+	Place       lang.Place
+}
+
+// Stated tells whether the member is an angle that is connected by one leg.
+func (l Leg) Stated() bool { return l.Long || l.Short }
 
 // Hold is a point between the ends where the member is restrained.
 type Hold struct {

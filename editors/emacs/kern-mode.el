@@ -37,10 +37,10 @@
 
 ;; generated: statements
 (defconst kern-mode-statements
-  '("accidental" "actions" "amplification" "base" "depart" "effective" "factor_buckling"
+  '("accidental" "actions" "amplification" "base" "connected" "depart" "effective" "factor_buckling"
     "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
-    "hold" "length" "limit" "load" "material" "note" "permanent" "require" "roofs" "section"
-    "selfweight" "show" "standard" "strengths" "top" "xi")
+    "hold" "joints" "length" "limit" "load" "material" "note" "permanent" "require" "roofs"
+    "section" "selfweight" "show" "stability" "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -61,12 +61,13 @@
 
 ;; generated: particles
 (defconst kern-mode-particles
-  '("ASD" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "by"
-    "cases" "characteristic" "cold" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot"
-    "imposed" "independent" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent"
-    "persistent" "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant"
-    "seismic" "simple" "slenderness" "snow" "sway" "temperature" "theoretical" "to" "together" "top"
-    "twist" "utilisation" "welded" "wind")
+  '("ASD" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both"
+    "braced" "by" "cases" "characteristic" "cold" "direct" "effective" "eq" "fixed" "floor" "free"
+    "frequent" "from" "guided" "hot" "imposed" "independent" "leg" "lengths" "long" "major" "minor"
+    "off" "offset" "on" "per" "permanent" "persistent" "pinned" "psi_0" "psi_1" "psi_2"
+    "quasipermanent" "recommended" "rolled" "secant" "seismic" "short" "simple" "slenderness" "snow"
+    "space" "sway" "temperature" "theoretical" "to" "together" "top" "twist" "utilisation" "welded"
+    "wind")
   "Words inside statements.")
 ;; end of particles
 

@@ -112,6 +112,7 @@ func (c *calc) run() {
 	c.local()
 	c.tension()
 	c.compression()
+	c.stability()
 	c.bending()
 	c.slenderness()
 	c.sway()

@@ -72,8 +72,10 @@ var (
 func (c *calc) compression() {
 	c.group("")
 	c.factor(factorC)
-	c.flexural(0)
-	c.flexural(1)
+	if !c.byLeg() {
+		c.flexural(0)
+		c.flexural(1)
+	}
 	c.torsional()
 	c.group("")
 	source := ""
@@ -178,8 +180,13 @@ func (c *calc) longest(a int) action.Stretch {
 
 // flexuralStrength computes the strength of a stretch.
 func (c *calc) flexuralStrength(x *axis, a int, s action.Stretch) {
-	fe := c.elasticStress(a, s)
-	if c.s.At(symFy) <= inelastic*fe {
+	c.elasticStress(a, s)
+	c.nominalStrength(x)
+}
+
+// nominalStrength computes the strength from the elastic buckling stress.
+func (c *calc) nominalStrength(x *axis) {
+	if c.s.At(symFy) <= inelastic*c.s.At(x.fe) {
 		c.do(x.doFn)
 	} else {
 		c.do(x.doFnElastic)

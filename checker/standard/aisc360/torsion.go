@@ -86,13 +86,15 @@ func (c *calc) torsional() {
 	const clause, torsion, coupled = "ANSI/AISC 360 E4", "torsional-buckling", "flexural-torsional-buckling"
 	sec := c.f.Member.Section
 	c.group(coupled)
-	rule, why := c.torsionRule()
-	switch rule {
+	mode, why := c.torsionRule()
+	rule := coupled
+	switch mode {
 	case "":
 		c.cover(torsion, standard.NotApplicable, why)
 		c.cover(coupled, standard.NotApplicable, why)
 		return
 	case torsion:
+		rule = torsion
 		c.cover(coupled, standard.NotApplicable, "the shear centre is the centroid")
 	default:
 		c.cover(torsion, standard.NotApplicable, "torsion goes with bending: see "+coupled)

@@ -135,6 +135,9 @@ func (Standard) Check(f *standard.Frame, record *derivation.Record) *standard.Ou
 	for a := range axes {
 		c.buckling(a)
 	}
+	if c.f.Member.Leg.Stated() {
+		c.cover("elastic-buckling-minor", standard.NotCovered, standard.ByLeg)
+	}
 	c.torsion()
 	c.yield()
 	c.shear()
