@@ -88,6 +88,9 @@ type job struct {
 	combinations []model.Combination
 	members      []*model.Member
 	results      []*Result
+	linked       bool     // uses results of other members
+	refs         []string // the members whose results were asked for
+	named        string   // its first member
 
 	problems []lang.Diagnostic // of members and results
 	nameless bool              // a member has no name, or problems
@@ -97,9 +100,10 @@ type job struct {
 	tally    tally
 }
 
-func (j *job) run(env *model.Env) {
+func (j *job) run(env *model.Env, results model.Results) {
+	j.named = model.FirstName(j.decl)
+	j.members = model.Members(env, j.decl, departable, results)
 	j.done = true
-	j.members = model.Members(env, j.decl, departable)
 	for _, m := range j.members {
 		if m.Name != "" {
 			j.results = append(j.results, evaluate(env, m, j.combinations))

@@ -26,6 +26,9 @@ type mentions struct {
 
 // name tells of a name, if it has a meaning.
 func (w *mentions) name(text string, span lang.Span) {
+	if name, _, dot := strings.Cut(text, "."); dot { // A1.N_Ed speaks of A1
+		text, span.End = name, span.Start+int32(len(name))
+	}
 	n := w.c.Env.Names[text]
 	if n == nil {
 		return
@@ -189,7 +192,7 @@ func (w *mentions) statement(s *lang.Stmt) {
 		}
 	}
 	switch s.Word {
-	case "section", "material", "height", "length", "effective":
+	case "section", "material", "height", "length", "effective", "net":
 		if assigned {
 			at(0)
 			w.properties(s)

@@ -53,7 +53,7 @@ func Trial(c *model.Calculation, decl *lang.Decl, text string) []*Result {
 	}
 	var out []*Result
 	combinations := env.All()
-	for _, m := range model.Members(&env, d, departable) {
+	for _, m := range model.Members(&env, d, departable, env.Results()) {
 		if m.Name != "" {
 			out = append(out, evaluate(&env, m, combinations))
 		}

@@ -69,6 +69,7 @@ var Forms = []Form{
 	{"effective", InMember, []string{`effective = NUMBER [about major|minor|twist]`}, "The effective length factor, where the calculation knows better than the ends.", "effective = ${1:0.85} about ${2|minor,major,twist|}"},
 	{"joints", InMember, []string{`joints NUMBER at base|top, NUMBER at base|top about major|minor sway|braced`}, "Stiffness ratios of the joints of a rigid frame (columns over beams), from which the effective length factor follows.", "joints ${1:1.2} at base, ${2:2.0} at top about ${3|major,minor|} ${4|sway,braced|}"},
 	{"connected", InMember, []string{`connected by long|short leg [space]`}, "The leg by which a single angle is connected at both ends; space for web members of box and space trusses.", "connected by ${1|long,short|} leg"},
+	{"net", InMember, []string{`net = AREA`}, "The area that holes leave across the path of failure in tension.", "net = ${1:17.2 cm2}"},
 	{"load", InMember, []string{
 		`load [CASE] FORCE [at PLACE] [offset LENGTH about AXIS [and LENGTH about AXIS]]`,
 		`load [CASE] FORCE across AXIS at PLACE`,

@@ -184,9 +184,25 @@ func parseDecl(text string) *Syntax {
 	b := builders.Get().(*builder)
 	b.reset(s)
 	s.Stmts = b.stmts(nil, 0)
+	s.Dotted = dotted(text)
 	b.syntax = nil
 	builders.Put(b)
 	return s
+}
+
+// dotted tells whether a dot stands between a letter, digit or _ and a letter.
+func dotted(text string) bool {
+	for i := strings.IndexByte(text, '.'); i >= 0 && i+1 < len(text); {
+		if i > 0 && (text[i-1] >= utf8.RuneSelf || nameLength("_"+text[i-1:i]) == 2) && nameLength(text[i+1:]) > 0 {
+			return true
+		}
+		next := strings.IndexByte(text[i+1:], '.')
+		if next < 0 {
+			return false
+		}
+		i += 1 + next
+	}
+	return false
 }
 
 var builders = sync.Pool{New: func() any { return new(builder) }}

@@ -47,6 +47,8 @@ type Syntax struct {
 	Stmts    []*Stmt
 	Problems []Problem // spans relative to Text, maxReport at most
 	found    int       // problems found, those beyond maxReport too
+	// Dotted is set when the text may hold a name with a dot in it: "A1.N_Ed".
+	Dotted bool
 }
 
 // Stmt is one statement: a word, what follows it on its line, and the block

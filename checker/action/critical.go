@@ -132,11 +132,19 @@ func (b *Bar) stands() bool {
 
 // stable tells whether the bar's stiffness matrix is positive definite under
 // the reference forces times factor: a factorisation without a pivot at or
-// below zero. The matrix has a half band of three besides the diagonal.
+// below zero.
 func (b *Bar) stable(factor float64) bool {
+	k, _ := b.matrix(factor)
+	return factorise(k)
+}
+
+// matrix is the stiffness matrix under the reference forces times factor, with
+// the movements that a support prevents. It has a half band of three besides the
+// diagonal: k[i][d] is the entry (i, i+d).
+func (b *Bar) matrix(factor float64) (k [][4]float64, fixed []bool) {
 	nodes := len(b.Nodes)
 	size := 2 * nodes
-	k := make([][4]float64, size) // k[i][d] is the entry (i, i+d)
+	k = make([][4]float64, size)
 	for i := range b.Force {
 		l := b.Nodes[i+1] - b.Nodes[i]
 		s, c, t := stability(factor * b.Force[i] * l * l / b.Stiffness[i])
@@ -162,7 +170,7 @@ func (b *Bar) stable(factor float64) bool {
 			k[2*i+1][0] += b.Turning[i]
 		}
 	}
-	fixed := make([]bool, size)
+	fixed = make([]bool, size)
 	for i := range nodes {
 		fixed[2*i] = b.holds(i)
 	}
@@ -178,6 +186,13 @@ func (b *Bar) stable(factor float64) bool {
 			k[i][0] = 1
 		}
 	}
+	return k, fixed
+}
+
+// factorise brings a banded symmetric matrix to triangular form in place; false
+// where a pivot is not positive.
+func factorise(k [][4]float64) bool {
+	size := len(k)
 	for i := range size {
 		p := k[i][0]
 		if !(p > 0) {

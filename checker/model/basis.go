@@ -73,7 +73,7 @@ func (b *builder) basisStmt(r *reader) {
 		basis.StandardAt = r.place(e.Span)
 		if !b.standards.Known(name) {
 			p := lang.Problem{Rule: "unknown-standard", Span: e.Span, Message: "'" + name + "' is no standard that kern checks to: " + lang.OrList(b.standards.Names())}
-			for _, n := range closest(name, b.standards.Names(), 2) {
+			for _, n := range Closest(name, b.standards.Names(), 2) {
 				p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.Span, `"`+n+`"`))
 			}
 			r.problem(p)

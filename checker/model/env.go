@@ -46,6 +46,7 @@ var topWords = []string{"include", "basis", "material", "section", "case", "comb
 func NewEnv(files []*lang.File, standards Standards) *Env {
 	b := &builder{env: &Env{Names: map[string]*Named{}}, standards: standards, files: files}
 	b.collect()
+	b.late()
 	b.env.offer = namesOf(b.env.Names)
 	b.basis()
 	b.cases()

@@ -2,6 +2,7 @@ package model
 
 import (
 	"math"
+	"strings"
 
 	"kern/lang"
 	"kern/lang/unit"
@@ -9,32 +10,32 @@ import (
 
 // memberWords are the words that may begin a statement in a member's block.
 var memberWords = []string{"section", "material", "height", "length", "from", "base", "top", "hold", "effective", "joints", "connected", "load", "limit",
-	"require", "depart", "note", "selfweight"}
+	"require", "depart", "note", "selfweight", "net"}
 
 // DepartureRules are the rules that a member may depart from; the checker fills
 // in the rules of its standards.
 type DepartureRules []string
 
 // Members reads the members that a declaration describes. The result depends on
-// the Env, the declaration and the declarations it leans on with "as", and on
-// nothing else.
-func Members(env *Env, d *lang.Decl, known DepartureRules) []*Member {
+// the Env, the declaration and the declarations it leans on with "as", and
+// on the results of the members that it names.
+func Members(env *Env, d *lang.Decl, known DepartureRules, results Results) []*Member {
 	var out []*Member
 	for _, s := range d.Stmts {
 		switch s.Word {
 		case "column", "strut", "tie":
 			if _, assigned := s.Assigned(); !assigned {
-				out = append(out, readMembers(env, d, s, known)...)
+				out = append(out, readMembers(env, d, s, known, results)...)
 			}
 		}
 	}
 	return out
 }
 
-func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules) []*Member {
+func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, results Results) []*Member {
 	m := &Member{Decl: d, Stmt: s, NameSpan: s.Head, Kind: map[string]Kind{"column": Column, "strut": Strut, "tie": Tie}[s.Word],
-		Height: unknown, Weight: env.Basis.SelfWeight}
-	w := &memberReader{env: env, m: m, known: known}
+		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight}
+	w := &memberReader{env: env, m: m, known: known, results: results}
 	r := w.reader(d, s)
 	names := memberNames(s)
 	if len(names) == 0 {
@@ -102,6 +103,7 @@ type memberReader struct {
 	env       *Env
 	m         *Member
 	known     DepartureRules
+	results   Results
 	first     map[string]declared // the first statement of each word that may stand once
 	said      map[string]bool     // the words of all statements, with an error or not
 	chain     []*lang.Stmt        // the members that it is "as", nearest first
@@ -137,8 +139,25 @@ func (w *memberReader) lookup(e *lang.Expr) (unit.Quantity, *lang.Problem) {
 			return unit.Quantity{Value: w.m.Height, Dim: unit.Length}, nil
 		}
 	}
+	if strings.Contains(e.Text, ".") {
+		q, p, n := w.env.Result(e, w.results)
+		if n != nil {
+			w.m.Uses = append(w.m.Uses, n)
+		}
+		if p == lang.Silent {
+			w.m.Missing = append(w.m.Missing, "'"+clip(e.Text)+"' is not known")
+		}
+		return q, p
+	}
 	if n, ok := w.env.Names[e.Text]; ok {
 		w.m.Uses = append(w.m.Uses, n)
+	}
+	if v, ok := w.env.Values.Lookup(e.Text); ok && v.Late && w.results != nil {
+		q, p := w.env.lateOf(e, v, w.results)
+		if p == lang.Silent {
+			w.m.Missing = append(w.m.Missing, "'"+clip(e.Text)+"' is not known")
+		}
+		return q, p
 	}
 	return w.env.lookup(e)
 }
@@ -194,7 +213,7 @@ func (w *memberReader) statement(d declared) {
 		}
 		w.first[key] = d
 	}
-	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true}
+	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true, "net": true}
 	if needsSign[s.Word] != assigned {
 		if needsSign[s.Word] {
 			noSign(r)
@@ -232,6 +251,9 @@ func (w *memberReader) statement(d declared) {
 		w.limit(r)
 	case "require":
 		w.require(r)
+	case "net":
+		w.m.Net, _, _ = r.quantity(want{what: "the net area", dim: unit.Area, unit: "cm2", max: 10})
+		w.m.NetAt = r.place(s.Line)
 	case "depart":
 		w.depart(r)
 	case "note":

@@ -44,6 +44,9 @@ type Env struct {
 	// case of its own, the last, when the calculation has no permanent case.
 	SelfWeight int
 
+	// Linked is set when a member may use the result of another.
+	Linked bool
+
 	Problems []lang.Diagnostic
 	decls    []*lang.Decl // the declarations that made it, for comparison with a later text
 	members  []*lang.Decl
@@ -52,7 +55,10 @@ type Env struct {
 	service     func() []Combination // made when they are asked for first
 
 	offer     map[NameKind][]string // the names of each kind, for offers
-	caseNames []*Named              // of each case; nil for those that nobody declared
+	late      []*lang.Value         // values that lean on results of members
+	settled   map[*lang.Value]unit.Quantity
+	results   Results
+	caseNames []*Named // of each case; nil for those that nobody declared
 }
 
 // NameKind is what a name stands for.
@@ -248,8 +254,12 @@ type Member struct {
 	MaterialAt,
 	HeightAt lang.Place
 
-	Height    float64 // m
-	From      float64 // height of the base above datum, m
+	Height float64 // m
+	From   float64 // height of the base above datum, m
+	// Net is the area that holes leave, m2 (EN 1993-1-1 6.2.2.2); NaN when it is not
+	// stated.
+	Net       float64
+	NetAt     lang.Place
 	Base, Top [2]action.End
 	Holds     []Hold
 	Joints    [2]*action.Joints // stiffness ratios of rigid joints: major, minor; nil for none

@@ -7,16 +7,16 @@ import (
 	"github.com/agnivade/levenshtein"
 )
 
-// closest gives up to n of the names that a person may have meant, the likeliest
+// Closest gives up to n of the names that a person may have meant, the likeliest
 // first: those that the text begins, as it may be half typed, then those that
 // differ from it by a slip. A name that shares less than two thirds of its
 // letters is not offered.
-func closest(text string, names []string, n int) []string {
+func Closest(text string, names []string, n int) []string {
 	near, _ := nearest(text, names, n)
 	return near
 }
 
-// nearest is closest, and tells whether the first name is the only one that can
+// nearest is Closest, and tells whether the first name is the only one that can
 // have been meant: one letter away (two in a long word) where the next name is
 // farther, and not half typed.
 func nearest(text string, names []string, n int) (near []string, sure bool) {

@@ -41,6 +41,15 @@ func (w *memberReader) complete() {
 		m.Height = unknown
 		missing("height = 3 m", "height")
 	}
+	if s := m.Section; s != nil && m.Net > s.Area*(1+1e-9) {
+		at := m.NetAt
+		if at.Decl != m.Decl { // a line that is taken over is right where it stands
+			at = lang.Place{Decl: m.Decl, Span: m.NameSpan}
+		}
+		m.Problems = append(m.Problems, lang.Diagnostic{Decl: at.Decl, Problem: lang.Problem{Rule: "impossible-value", Span: at.Span,
+			Message: fmt.Sprintf("the net area of %s cm2 is more than that of the section %s, %s cm2: holes leave no more than the whole area", unit.Short(m.Net*1e4, 4), s.Title(), unit.Short(s.Area*1e4, 4))}})
+		m.Missing = append(m.Missing, "its net area cannot be")
+	}
 	sort.SliceStable(m.Holds, func(i, j int) bool { return m.Holds[i].At < m.Holds[j].At })
 	for _, a := range []Axis{Major, Minor} {
 		_, base := w.first["base about "+a.String()]

@@ -126,6 +126,9 @@ func (c *caret) read(from int32) bool {
 		switch t.Kind {
 		case lang.Name, lang.Unit, lang.Bad:
 			c.word.Start, c.whole = t.Start, t.Span()
+			if dot := t.Kind == lang.Bad && c.text[t.Start:t.End] == "."; dot && i > 0 && tokens[i-1].Kind == lang.Name && tokens[i-1].End == t.Start {
+				c.word.Start, c.whole.Start = tokens[i-1].Start, tokens[i-1].Start // A1. on its way to A1.N_Ed
+			}
 		case lang.String:
 			if c.offset == t.End && t.Flaw != lang.OpenString {
 				break

@@ -108,6 +108,16 @@ func fitting(dims []unit.Dim, dim unit.Dim) bool { return dims == nil || slices.
 // of which a product could be made, once a letter has been typed.
 func (s *scope) operands(dims []unit.Dim) []Item {
 	var out []Item
+	if name, _, dot := strings.Cut(s.typed(), "."); dot {
+		return s.resultsOfMember(name, dims)
+	}
+	if s.takesResults() && s.typed() != "" {
+		list, _ := s.members()
+		for _, x := range list {
+			x.Detail, x.Text, x.Group, x.Eager = "a result of "+x.Detail, x.Label+".", 8, false
+			out = append(out, x)
+		}
+	}
 	var names []string
 	for name, n := range s.env.Names {
 		if n.Kind == model.ValueName && name != s.head {

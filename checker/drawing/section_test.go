@@ -1,7 +1,8 @@
-package output_test
+package drawing_test
 
 import (
 	"encoding/xml"
+	"flag"
 	"io"
 	"math"
 	"os"
@@ -11,9 +12,11 @@ import (
 	"testing"
 
 	"kern/checker/catalogue"
-	"kern/checker/output"
+	"kern/checker/drawing"
 	"kern/checker/section"
 )
+
+var update = flag.Bool("update", false, "write the golden files anew")
 
 // shapes are one of each kind that has an outline.
 func shapes(t *testing.T) map[string]section.Shape {
@@ -32,15 +35,15 @@ func shapes(t *testing.T) map[string]section.Shape {
 	return out
 }
 
-// TestDrawingGolden compares each drawing with testdata/drawing.
-func TestDrawingGolden(t *testing.T) {
+// TestSectionGolden compares each drawing with testdata/section.
+func TestSectionGolden(t *testing.T) {
 	for name, s := range shapes(t) {
 		p, err := section.Compute(s)
 		if err != nil {
 			t.Fatal(err)
 		}
-		got := output.Drawing(s, p, 120) + "\n"
-		path := filepath.Join("testdata", "drawing", name+".svg")
+		got := drawing.Section(s, p, drawing.Sized{Title: name, Side: 40, Dimensions: true}).SVG(drawing.Alone) + "\n"
+		path := filepath.Join("testdata", "section", name+".svg")
 		if *update {
 			if err := os.WriteFile(path, []byte(got), 0o666); err != nil {
 				t.Fatal(err)
@@ -57,15 +60,15 @@ func TestDrawingGolden(t *testing.T) {
 	}
 }
 
-// TestDrawingToScale reads drawings back: they are XML, and the area inside the
+// TestSectionToScale reads drawings back: they are XML, and the area inside the
 // drawn path, at its scale, is the area of the section.
-func TestDrawingToScale(t *testing.T) {
+func TestSectionToScale(t *testing.T) {
 	for name, s := range shapes(t) {
 		p, err := section.Compute(s)
 		if err != nil {
 			t.Fatal(err)
 		}
-		svg := output.Drawing(s, p, 1200)
+		svg := drawing.Section(s, p, drawing.Sized{Side: 1200}).SVG(drawing.OnAnyGround)
 		d, paths := xml.NewDecoder(strings.NewReader(svg)), []string{}
 		for {
 			token, err := d.Token()
@@ -84,7 +87,7 @@ func TestDrawingToScale(t *testing.T) {
 			continue
 		}
 		area, low, high := pathArea(t, paths[0])
-		scale := 1200 / max(high[0]-low[0], high[1]-low[1]) // pixels in the greater side
+		scale := 1200 / max(high[0]-low[0], high[1]-low[1]) // mm in the greater side
 		side := max(s.Width, s.Depth, s.Diameter)
 		if got := area * (side * side) / (1200 * 1200); math.Abs(scale-1) > 1e-3 || math.Abs(got/p.Area-1) > 2e-3 {
 			t.Errorf("%s: the drawing has %g m2, the section %g m2 (scale off by %g)", name, got, p.Area, scale-1)
@@ -158,8 +161,8 @@ func pathArea(t *testing.T, d string) (area float64, low, high [2]float64) {
 	return math.Abs(area), low, high
 }
 
-func TestDrawingOfNothing(t *testing.T) {
-	if s := output.Drawing(section.Shape{Kind: section.Given}, section.Properties{}, 120); s != "" {
-		t.Errorf("a section without outline is drawn as %s", s)
+func TestSectionOfNothing(t *testing.T) {
+	if s := drawing.Section(section.Shape{Kind: section.Given}, section.Properties{}, drawing.Sized{Side: 40}); s != nil {
+		t.Errorf("a section without outline is drawn as %s", s.SVG(drawing.Alone))
 	}
 }
