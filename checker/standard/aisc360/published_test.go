@@ -73,7 +73,7 @@ func (p post) frame(t *testing.T) *standard.Frame {
 	c.Name = "load"
 	env := &model.Env{Cases: []*model.Case{c}, Basis: basis}
 	ends := [2]action.End{action.Pinned, action.Pinned}
-	m := &model.Member{Name: "A1", Height: p.height * foot, Base: ends, Top: ends,
+	m := &model.Member{Name: "A1", Net: math.NaN(), Height: p.height * foot, Base: ends, Top: ends,
 		Section:  &model.Section{Name: "section", Shape: shape, Properties: props, Thickness: max(shape.Web, shape.Flange, shape.Wall)},
 		Material: &model.Material{Name: "steel", E: 29000 * ksi, G: 11200 * ksi, Density: 7850, Fy: p.fy * ksi, Fu: math.NaN()}}
 	if p.fu > 0 {

@@ -1,6 +1,8 @@
 package aisc360
 
 import (
+	"math"
+
 	"kern/checker/standard"
 	"kern/lang/unit"
 )
@@ -66,7 +68,7 @@ func (c *calc) netSection(n float64) {
 	const rule, clause = "net-section", "ANSI/AISC 360 D2(b)"
 	c.group(rule)
 	if why := c.ruptureStrength(); why != "" {
-		if _, stated := c.f.Env.Basis.Overrides["net_ratio"]; stated {
+		if _, stated := c.f.Env.Basis.Overrides["net_ratio"]; stated || !math.IsNaN(c.f.Member.Net) {
 			c.undecided(rule, clause, why)
 		} else {
 			c.cover(rule, standard.NotCovered, why)
@@ -83,12 +85,13 @@ func (c *calc) ruptureStrength() string {
 	m, basis := c.f.Member, &c.f.Env.Basis
 	ratio, stated := basis.Overrides["net_ratio"]
 	lag, lagStated := basis.Overrides["U"]
+	own := !math.IsNaN(m.Net)
 	switch {
-	case !stated:
-		return "there is tension: check rupture of the net section by hand (D2(b), D3), or state net_ratio and U in the basis"
+	case !stated && !own:
+		return "there is tension: check rupture of the net section by hand (D2(b), D3), or state the net area, net = …, and U in the basis"
 	case !lagStated:
 		return "the shear lag factor is not stated: U = … because \"Table D3.1, case …\" (1.0 where each part of the section is connected)"
-	case !(ratio.Value <= 1):
+	case !own && !(ratio.Value <= 1):
 		return "net_ratio is more than 1: holes leave no more than the whole area"
 	case !(lag.Value <= 1):
 		return "U is more than 1: the shear lag factor is at most 1 (Table D3.1)"
@@ -99,9 +102,13 @@ func (c *calc) ruptureStrength() string {
 	}
 	c.factor(factorR)
 	c.take(symFu, standard.Known(fu), source)
-	c.take(symNet, ratio.Value, "basis, because \""+ratio.Because+"\"")
+	if own {
+		c.take(symAn, standard.Known(m.Net), "given, B4.3b")
+	} else {
+		c.take(symNet, ratio.Value, "basis, because \""+ratio.Because+"\"")
+		c.do(doAn)
+	}
 	c.take(symU, lag.Value, "basis, because \""+lag.Because+"\"")
-	c.do(doAn)
 	c.do(doAet)
 	c.do(doPnR)
 	c.available(rupture)
