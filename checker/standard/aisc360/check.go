@@ -114,6 +114,7 @@ func (c *calc) run() {
 	c.compression()
 	c.stability()
 	c.bending()
+	c.bracing()
 	c.slenderness()
 	c.sway()
 	c.out.Assumptions = append(c.f.Assumptions(), c.assuming...)

@@ -20,10 +20,11 @@ var (
 
 // bendState is what the member is in bending.
 type bendState struct {
-	combs []comb
-	tiny  [2]float64 // a moment that counts as none, Nm
-	why   [2]string  // why the flexural strength about an axis is not known, "" when it is
-	lat   lateralState
+	combs  []comb
+	tiny   [2]float64 // a moment that counts as none, Nm
+	why    [2]string  // why the flexural strength about an axis is not known, "" when it is
+	lat    lateralState
+	twists bool // E4 asks for buckling in torsion
 }
 
 // comb is what a combination does to the member.

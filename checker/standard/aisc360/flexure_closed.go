@@ -1,5 +1,7 @@
 package aisc360
 
+import "kern/checker/standard"
+
 // tubeStrength is F7: rectangular hollow sections and boxes about either axis.
 func (c *calc) tubeStrength(a int) string {
 	x := flexures[a]
@@ -81,13 +83,25 @@ func (c *calc) pipeStrength(a int) string {
 }
 
 // angleStrength is F10.1 and F10.3 about a principal axis. Which side a moment
-// compresses is not said, so that the toes are taken in compression, with the
-// smaller modulus.
+// compresses is not said, so that the toes are taken in compression. About the
+// major axis they are on both sides; about the minor axis on that away from the
+// heel, near which the shear center lies.
 func (c *calc) angleStrength(a int) {
-	x := flexures[a]
+	x, sec := flexures[a], c.f.Member.Section
+	toes := sec.WelMajor
+	switch {
+	case a == 1 && sec.SMajor < 0:
+		toes = sec.WelMinorPos
+	case a == 1:
+		toes = sec.WelMinorNeg
+	}
 	c.do(x.doMy)
 	c.do(x.doY15)
-	switch grade(c.do(doLamFL), c.do(doPLeg), c.do(doRLeg)) {
+	leg := grade(c.do(doLamFL), c.do(doPLeg), c.do(doRLeg))
+	if leg != compact {
+		c.take(x.sc, standard.Known(toes), sec.Title())
+	}
+	switch leg {
 	case compact:
 		c.do(x.doMns)
 		return

@@ -125,12 +125,13 @@ func (c *calc) segmentGiven(s segment) {
 	c.take(symLb, (s.to-s.from)*max(1, c.f.TwistK), source)
 }
 
-// factorB computes C_b of a segment for a combination, with the tension beside the
+// factorCb computes C_b of a segment for a combination, with the tension beside the
 // moment (H1.2) where it is not zero.
 func (c *calc) factorCb(k int, s segment, peak, tension float64) {
 	l := &c.bend.lat
 	c.take(symMmax, peak, c.combination(k))
-	angle := c.f.Member.Section.Shape.Kind == section.Angle
+	kind := c.f.Member.Section.Shape.Kind
+	angle := kind == section.Angle
 	switch {
 	case !l.cb:
 		return
@@ -149,7 +150,7 @@ func (c *calc) factorCb(k int, s segment, peak, tension float64) {
 	switch {
 	case angle:
 		c.do(doCbL)
-	case tension > 0:
+	case tension > 0 && kind != section.Channel: // H1.2: doubly symmetric members
 		c.do(doCb0)
 		c.do(doPey)
 		c.take(symPt, tension, c.combination(k))

@@ -24,7 +24,7 @@ var (
 // shearParts are the texts of A_w and of the width-to-thickness ratio for each
 // kind of section.
 type shearParts struct {
-	web, flanges, stem, leg, tube, solid                          *derivation.Formula
+	web, flanges, stem, leg, tube, box, solid                     *derivation.Formula
 	ratioWeb, ratioFlange, ratioU, ratioStem, ratioLeg, ratioTube *derivation.Formula
 	pipe                                                          *derivation.Formula
 }
@@ -33,7 +33,10 @@ func newShearParts(a int) *shearParts {
 	x := flexures[a]
 	area := func(text, clause string) *derivation.Formula { return formula(x.aw, text, clause) }
 	ratio := func(text, clause string) *derivation.Formula { return formula(x.lamV, text, clause) }
-	side := map[string]string{"x": "h", "y": "b"}[x.letter]
+	side, outside := "h", "d"
+	if x.letter == "y" {
+		side, outside = "b", "B"
+	}
 	p := &shearParts{}
 	if a == 0 {
 		p.web = area("d * t_w", "G2.1")
@@ -47,7 +50,8 @@ func newShearParts(a int) *shearParts {
 	p.ratioStem = ratio("d / t_w", "G3")
 	p.leg = area("min(b_1, b_2) * t", "G3, the shorter leg by itself, on the safe side")
 	p.ratioLeg = ratio("max(b_1, b_2) / t", "G3, of the longer leg, on the safe side")
-	p.tube = area("2 * "+side+" * t", "G4")
+	p.tube = area("2 * ("+outside+" - 2 * t - 2 * max(r_in, 0.5 * t)) * t", "G4: 3 t off where the radius is not more")
+	p.box = area("2 * "+side+" * t", "G4")
 	p.ratioTube = ratio(side+" / t", "G4")
 	p.solid = area("A_g", "J4.2, the gross area")
 	p.pipe = formula(x.vn, "F_cr_V * A_g / 2", "G5 (G5-1)")
@@ -117,14 +121,16 @@ func (c *calc) shearStrength(a int) string {
 	case section.Angle:
 		plate(p.leg, p.ratioLeg, 1.2, "G3")
 	case section.Tube:
+		area := p.tube
 		if c.shape == &shapeBox {
+			area = p.box
 			c.do(doHBox)
 			c.do(doBBox)
 		} else {
 			c.do(doHHSS)
 			c.do(doBHSS)
 		}
-		plate(p.tube, p.ratioTube, 5, "G4")
+		plate(area, p.ratioTube, 5, "G4")
 	case section.Pipe:
 		c.take(symLv, c.f.Member.Height, "the whole height, on the safe side")
 		c.do(doFcrV)

@@ -16,7 +16,7 @@ var (
 type flexure struct {
 	letter, word string
 
-	z, s                       derivation.ID // moduli
+	z, s, sc                   derivation.ID // moduli
 	mp, my, mnY, mnF, mnW, mns derivation.ID
 	mr, u                      derivation.ID // section check
 	section                    *available
@@ -64,9 +64,9 @@ var (
 
 	doHI   = formula(symH, "d - 2 * t_f - 2 * r_root", "B4.1b(a), (b)")
 	doHBox = formula(symH, "d - 2 * t", "B4.1b(e)")
-	doHHSS = formula(symH, "d - 2 * t - 2 * r_in", "B4.1b(d)")
+	doHHSS = formula(symH, "d - 2 * t - 2 * min(r_in, 0.5 * t)", "B4.1b(d)")
 	doBBox = formula(symBF, "B - 2 * t", "B4.1b(e)")
-	doBHSS = formula(symBF, "B - 2 * t - 2 * r_in", "B4.1b(d)")
+	doBHSS = formula(symBF, "B - 2 * t - 2 * min(r_in, 0.5 * t)", "B4.1b(d)")
 	doKc   = formula(symKc, "min(0.76, max(0.35, 4 / sqrt(h / t_w)))", "Table B4.1b note [a]")
 	doFL   = formula(symFL, "0.7 * F_y", "Table B4.1b note [b], F4.2(3)")
 
@@ -115,6 +115,7 @@ type define func(id derivation.ID, text, clause string) *derivation.Formula
 func (x *flexure) moduli(s declare, f define) {
 	x.z = s("Z", unit.Volume, "plastic section modulus")
 	x.s = s("S", unit.Volume, "elastic section modulus")
+	x.sc = s("S_c", unit.Volume, "elastic section modulus referred to the toes")
 	x.mp = s("M_p", unit.Moment, "plastic moment")
 	x.my = s("M_y", unit.Moment, "yield moment")
 	x.mnY = s("M_n_Y", unit.Moment, "nominal flexural strength, yielding")
@@ -145,8 +146,8 @@ func (x *flexure) moduli(s declare, f define) {
 
 	x.doPipeF = f(x.mnF, "(0.021 * E / lambda_w + F_y) * S_?", "F8.2(b) (F8-2)")
 	x.doPipeFSlender = f(x.mnF, "0.33 * E / lambda_w * S_?", "F8.2(c) (F8-3), (F8-4)")
-	x.doLegF = f(x.mnF, "F_y * S_? * (2.43 - 1.72 * lambda_f * sqrt(F_y / E))", "F10.3(b) (F10-6)")
-	x.doLegFSlender = f(x.mnF, "0.71 * E / lambda_f^2 * S_?", "F10.3(c) (F10-7), (F10-8)")
+	x.doLegF = f(x.mnF, "F_y * S_c_? * (2.43 - 1.72 * lambda_f * sqrt(F_y / E))", "F10.3(b) (F10-6)")
+	x.doLegFSlender = f(x.mnF, "0.71 * E / lambda_f^2 * S_c_?", "F10.3(c) (F10-7), (F10-8)")
 }
 
 // tube is F7: about x–x the longer sides are the webs, about y–y the shorter.
@@ -158,8 +159,10 @@ func (x *flexure) tube(s declare, f define) {
 	x.shift = s("e_e", unit.Length, "shift of the neutral axis to the effective section")
 	x.ie = s("I_e", unit.Length4, "moment of inertia of the effective section")
 	x.se = s("S_e", unit.Volume, "effective section modulus")
-	x.areaW = s("a_w", unit.None, "webs over compression flange")
-	x.rpg = s("R_pg", unit.None, "bending strength reduction factor")
+	if x.letter == "x" {
+		x.areaW = s("a_w", unit.None, "webs over compression flange")
+		x.rpg = s("R_pg", unit.None, "bending strength reduction factor")
+	}
 	flange, web, depth := "b", "h", "d"
 	if x.letter == "y" {
 		flange, web, depth = "h", "b", "B"
@@ -176,6 +179,9 @@ func (x *flexure) tube(s declare, f define) {
 	x.doSe = f(x.se, "I_e_? / ("+depth+" / 2 + e_e_?)", "F7.2(c)")
 	x.doTubeFSlender = f(x.mnF, "F_y * S_e_?", "F7.2(c) (F7-3)")
 	x.doTubeW = f(x.mnW, "min(M_p_?, M_p_? - (M_p_? - F_y * S_?) * (lambda_w_? - lambda_pw) / (lambda_rw - lambda_pw))", "F7.3(b) (F7-6)")
+	if x.letter == "y" {
+		return // a shorter side that is slender goes with slender flanges, which F7 does not have
+	}
 	x.doAreaW = f(x.areaW, "min(10, 2 * "+web+" / "+flange+")", "F7.3(c), F5.2")
 	x.doRpg = f(x.rpg, "min(1, 1 - a_w_? / (1200 + 300 * a_w_?) * (lambda_w_? - 5.70 * sqrt(E / F_y)))", "F5.2 (F5-6)")
 	x.doTubeWSlender = f(x.mnW, "R_pg_? * F_y * S_?", "F7.3(c) (F7-7)")
