@@ -120,6 +120,13 @@ func (c *calc) run() {
 	c.out.Assumptions = append(c.f.Assumptions(), c.assuming...)
 }
 
+// Moduli of steel, E3 and E4: 29000 and 11200 ksi. The standard prints 200000 and
+// 77200 MPa beside them.
+const (
+	modulusE = 29000 * 4448.2216152605 / (0.0254 * 0.0254)
+	modulusG = 11200 * 4448.2216152605 / (0.0254 * 0.0254)
+)
+
 // given takes what does not depend on the loads.
 func (c *calc) given() {
 	m, basis := c.f.Member, &c.f.Env.Basis
@@ -130,8 +137,15 @@ func (c *calc) given() {
 		c.why = standard.NoStrength(m)
 	}
 	title := m.Section.Title()
-	c.take(symE, standard.Known(m.Material.E), m.Material.Title())
-	c.take(symG, standard.Known(m.Material.G), m.Material.Title())
+	e, g, from := standard.Known(m.Material.E), standard.Known(m.Material.G), m.Material.Title()
+	if m.Material.Grade != nil {
+		e, g, from = modulusE, modulusG, "E3, E4"
+		c.assume("E = 29000 ksi and G = 11200 ksi, which the standard has for every steel")
+	} else if math.Abs(e/modulusE-1) > 1e-3 {
+		c.assume("E of %s as it is stated; the standard has 29000 ksi", m.Material.Title())
+	}
+	c.take(symE, e, from)
+	c.take(symG, g, from)
 	c.take(symFy, standard.Known(fy), source)
 	c.take(symAg, standard.Known(m.Section.Area), title)
 	c.take(axes[0].i, standard.Known(m.Section.IMajor), title)
