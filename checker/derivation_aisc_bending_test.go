@@ -10,7 +10,7 @@ var aiscBendingBases = []string{
 // 6 and 8 of ANSI/AISC 360.
 const aiscBending = `
 section bwide  = isection { depth = 300 mm; width = 400 mm; web = 10 mm; flange = 12 mm; made = welded }
-section bslim  = isection { depth = 300 mm; width = 600 mm; web = 10 mm; flange = 8 mm; made = welded }
+section bslim  = isection { depth = 500 mm; width = 500 mm; web = 12 mm; flange = 8 mm; made = welded }
 section bnc    = isection { depth = 900 mm; width = 300 mm; web = 8 mm; flange = 20 mm; made = welded }
 section bncf   = isection { depth = 900 mm; width = 400 mm; web = 8 mm; flange = 18 mm; made = welded }
 section bncs   = isection { depth = 900 mm; width = 600 mm; web = 8 mm; flange = 10 mm; made = welded }

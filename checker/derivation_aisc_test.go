@@ -72,7 +72,7 @@ func TestDerivationsAISC(t *testing.T) {
 	set := aisc360.Standard{}.Symbols()
 	for _, f := range set.Formulas() {
 		if d.formulas[f] == 0 {
-			t.Errorf("no member comes to %s = %s", set.At(f.Symbol).Name, f.Text)
+			t.Errorf("no member comes to %s = %s (%s)", set.At(f.Symbol).Name, f.Text, f.Clause)
 		}
 	}
 }

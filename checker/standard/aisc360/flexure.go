@@ -196,7 +196,7 @@ func (c *calc) greatest(floor float64, of func(*comb) float64) (int, float64) {
 func (c *calc) flexural2(a int) {
 	x := flexures[a]
 	rule := "section-bending-" + x.word
-	clause := bendingClauses[rule].clause
+	clause := "ANSI/AISC 360 " + c.flexureClause(a)
 	if !c.f.Bends[a] {
 		c.cover(rule, standard.NotApplicable, "the loads do not bend the member about this axis")
 		return
@@ -215,6 +215,38 @@ func (c *calc) flexural2(a int) {
 	c.available(x.section)
 	u := c.do(x.doU)
 	c.add(rule, clause, at, worst, c.s.At(x.section.c), unit.Moment, u, c.f.Limit())
+}
+
+// flexureClause is the section of chapter F for bending about an axis.
+func (c *calc) flexureClause(a int) string {
+	sec := c.f.Member.Section
+	switch sec.Shape.Kind {
+	case section.ISection, section.Channel:
+		if a == 1 {
+			return "F6"
+		}
+		switch grade(c.s.At(symLamW), c.s.At(symLamPw), c.s.At(symLamRw)) {
+		case noncompact:
+			return "F4"
+		case slender:
+			return "F5"
+		}
+		if grade(c.s.At(symLamF), c.s.At(symLamPf), c.s.At(symLamRf)) == compact {
+			return "F2"
+		}
+		return "F3"
+	case section.Tube:
+		return "F7"
+	case section.Pipe:
+		return "F8"
+	case section.Tee:
+		return "F9"
+	case section.Angle:
+		return "F10"
+	case section.Bar, section.Rod:
+		return "F11"
+	}
+	return "F12"
 }
 
 // sectionStrength computes the nominal strength of the section about an axis, by
@@ -241,13 +273,15 @@ func (c *calc) sectionStrength(a int) string {
 		c.angleStrength(a)
 	case section.Bar:
 		x := flexures[a]
-		c.do(x.doMp15)
-		c.do(x.doMy)
+		c.do(x.doMpBar)
+		if a == 0 {
+			c.do(doF11y)
+		}
 		c.do(x.doY)
 		c.do(x.doMns)
 	case section.Rod:
 		x := flexures[a]
-		c.do(x.doMp16)
+		c.do(x.doMpRod)
 		c.do(x.doY)
 		c.do(x.doMns)
 	case section.Given:

@@ -13,7 +13,7 @@ func (c *calc) tubeStrength(a int) string {
 		c.do(doHHSS)
 		c.do(doBHSS)
 	}
-	c.do(x.doMp)
+	c.do(x.doMpTube)
 	c.do(x.doY)
 	limit := doRfHSS
 	if box {
@@ -67,7 +67,7 @@ func (c *calc) pipeStrength(a int) string {
 	if !(ratio < 0.45*c.s.At(symE)/c.s.At(symFy)) {
 		return "F8 is for round tubes with D/t below 0.45 E/F_y"
 	}
-	c.do(x.doMp)
+	c.do(x.doMpPipe)
 	c.do(x.doY)
 	switch grade(ratio, c.do(doPDt), c.do(doRDt)) {
 	case compact:
@@ -95,7 +95,7 @@ func (c *calc) angleStrength(a int) {
 	case a == 1:
 		toes = sec.WelMinorNeg
 	}
-	c.do(x.doMy)
+	c.do(x.doMyLeg)
 	c.do(x.doY15)
 	leg := grade(c.do(doLamFL), c.do(doPLeg), c.do(doRLeg))
 	if leg != compact {

@@ -57,7 +57,7 @@ func (c *calc) openMajor() string {
 	}
 	switch web {
 	case compact:
-		c.do(x.doMp)
+		c.do(doF2p)
 		c.do(x.doY)
 		c.openLimits()
 		switch flange {
@@ -71,8 +71,8 @@ func (c *calc) openMajor() string {
 		}
 		c.do(x.doMnsF)
 	case noncompact:
-		c.do(x.doMp16)
-		c.do(x.doMy)
+		c.do(doF4p)
+		c.do(doF4my)
 		c.do(doFL)
 		c.do(doRpc)
 		c.do(doF4y)
@@ -86,7 +86,7 @@ func (c *calc) openMajor() string {
 		case noncompact:
 			c.do(doF4nc)
 		default:
-			c.do(doF3s)
+			c.do(doF4s)
 		}
 		c.do(x.doMnsF)
 	default:
@@ -142,7 +142,7 @@ func (c *calc) openMinor() string {
 	} else {
 		c.do(doLamFI)
 	}
-	c.do(x.doMp16)
+	c.do(doF6p)
 	c.do(x.doY)
 	switch grade(c.s.At(symLamF), c.do(doPf), c.do(doRf)) {
 	case compact:
@@ -165,7 +165,7 @@ func (c *calc) teeStrength(a int) string {
 		return "F9 is for tees bent in the plane of the stem: check bending across it by hand (F12)"
 	}
 	x, t, sec := flexures[a], tees[a], c.f.Member.Section
-	c.do(x.doMy)
+	c.do(x.doMyTee)
 	c.do(t.doY)
 	stem := grade(c.do(doLamWT), c.do(doPStem), c.do(doRStem))
 	switch stem {

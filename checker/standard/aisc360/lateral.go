@@ -110,6 +110,18 @@ func (c *calc) unbraced() (out []segment, why string) {
 	return out, ""
 }
 
+// lateralClause is the section of chapter F for lateral-torsional buckling.
+func (c *calc) lateralClause() string {
+	switch clause := c.flexureClause(c.bend.lat.axis); clause {
+	case "F3":
+		return "F2.2"
+	case "F7":
+		return "F7.4"
+	default:
+		return clause + ".2"
+	}
+}
+
 // segmentGiven takes what a segment has whatever the combination.
 func (c *calc) segmentGiven(s segment) {
 	source := ""
@@ -163,8 +175,8 @@ func (c *calc) factorCb(k int, s segment, peak, tension float64) {
 // lateralTorsional checks every segment under every combination.
 func (c *calc) lateralTorsional() {
 	const rule = "lateral-torsional-buckling"
-	clause := bendingClauses[rule].clause
 	l := &c.bend.lat
+	clause := "ANSI/AISC 360 " + c.lateralClause()
 	switch {
 	case !l.prone:
 		c.cover(rule, standard.NotApplicable, l.why)
@@ -243,9 +255,9 @@ func (c *calc) lateralOpen() {
 func (c *calc) lateralTube() {
 	switch lb := c.s.At(symLb); {
 	case lb <= c.s.At(symLp):
-		c.do(doLTp)
+		c.do(doLTpT)
 	case lb <= c.s.At(symLr):
-		c.do(doLTi)
+		c.do(doLTiT)
 	default:
 		c.do(doLTeT)
 	}
@@ -256,12 +268,12 @@ func (c *calc) lateralBar() {
 	ratio, limit := c.do(doLdt), c.s.At(symE)/c.s.At(symFy)
 	switch {
 	case ratio <= 0.08*limit:
-		c.do(doLTp)
+		c.do(doLTpB)
 	case ratio <= 1.9*limit:
 		c.do(doLTiB)
 	default:
 		c.do(doFcrB)
-		c.do(doLTe)
+		c.do(doLTeB)
 	}
 }
 

@@ -26,7 +26,7 @@ var (
 type shearParts struct {
 	web, flanges, stem, leg, tube, box, solid                     *derivation.Formula
 	ratioWeb, ratioFlange, ratioU, ratioStem, ratioLeg, ratioTube *derivation.Formula
-	pipe                                                          *derivation.Formula
+	vnWeb, vnFlange, cvWeb, cvWebLong, pipe                       *derivation.Formula
 }
 
 func newShearParts(a int) *shearParts {
@@ -41,7 +41,11 @@ func newShearParts(a int) *shearParts {
 	if a == 0 {
 		p.web = area("d * t_w", "G2.1")
 		p.ratioWeb = ratio("h / t_w", "G2.1")
+		p.vnWeb = formula(x.vn, "0.6 * F_y * A_w_x * C_v_x", "G2.1 (G2-1)")
+		p.cvWeb = formula(x.cv, "1.0", "G2.1 (G2-2), (G2-3)")
+		p.cvWebLong = formula(x.cv, "1.10 * sqrt(k_v_x * E / F_y) / h_t_x", "G2.1(b) (G2-4)")
 	} else {
+		p.vnFlange = formula(x.vn, "0.6 * F_y * A_w_y * C_v_y", "G6 (G6-1)")
 		p.flanges = area("2 * b_f * t_f", "G6, both flanges")
 		p.ratioFlange = ratio("b_f / (2 * t_f)", "G6")
 		p.ratioU = ratio("b_f / t_f", "G6")
@@ -62,7 +66,7 @@ func newShearParts(a int) *shearParts {
 func (c *calc) shears() {
 	for a, x := range flexures {
 		rule := "section-shear-" + x.word
-		clause := bendingClauses[rule].clause
+		clause := "ANSI/AISC 360 " + c.shearClause(a)
 		if !c.f.Bends[a] {
 			c.cover(rule, standard.NotApplicable, "the loads do not bend the member about this axis")
 			continue
@@ -84,18 +88,37 @@ func (c *calc) shears() {
 	}
 }
 
+// shearClause is the section of chapter G for the force that bends about an axis.
+func (c *calc) shearClause(a int) string {
+	switch kind := c.f.Member.Section.Shape.Kind; {
+	case (kind == section.ISection || kind == section.Channel) && a == 0:
+		return "G2.1"
+	case kind == section.ISection || kind == section.Channel || kind == section.Tee && a != c.squareToStem():
+		return "G6"
+	case kind == section.Tee || kind == section.Angle:
+		return "G3"
+	case kind == section.Tube:
+		return "G4"
+	case kind == section.Pipe:
+		return "G5"
+	case kind == section.Bar || kind == section.Rod:
+		return "J4.2"
+	}
+	return "G1"
+}
+
 // shearStrength computes the nominal strength for the force that bends about an
 // axis, or says why it cannot.
 func (c *calc) shearStrength(a int) string {
 	x, p, sec := flexures[a], resisting[a], c.f.Member.Section
 	sh := sec.Shape
 	c.factor(factorV)
-	plate := func(area, ratio *derivation.Formula, kv float64, clause string) {
+	plate := func(area, ratio, vn *derivation.Formula, kv float64, clause string) {
 		c.do(area)
 		c.do(ratio)
 		c.take(x.kv, kv, clause)
 		c.shearBuckling(x)
-		c.do(x.doVn)
+		c.do(vn)
 	}
 	switch sh.Kind {
 	case section.ISection, section.Channel:
@@ -103,23 +126,23 @@ func (c *calc) shearStrength(a int) string {
 		case sec.Turned:
 			return "the flanges are so wide that the strong axis is the web's: check chapter G by hand"
 		case a == 1 && sh.Kind == section.Channel:
-			plate(p.flanges, p.ratioU, 1.2, "G6")
+			plate(p.flanges, p.ratioU, p.vnFlange, 1.2, "G6")
 		case a == 1:
-			plate(p.flanges, p.ratioFlange, 1.2, "G6")
+			plate(p.flanges, p.ratioFlange, p.vnFlange, 1.2, "G6")
 		default:
 			c.do(doHI)
 			c.do(p.web)
 			c.webShear(x)
-			c.do(x.doVn)
+			c.do(p.vnWeb)
 		}
 	case section.Tee:
 		if a == c.squareToStem() {
-			plate(p.stem, p.ratioStem, 1.2, "G3")
+			plate(p.stem, p.ratioStem, x.doVnLeg, 1.2, "G3")
 			return ""
 		}
 		return "G6 gives the flange of a tee in shear across its stem, F no bending there: check by hand"
 	case section.Angle:
-		plate(p.leg, p.ratioLeg, 1.2, "G3")
+		plate(p.leg, p.ratioLeg, x.doVnLeg, 1.2, "G3")
 	case section.Tube:
 		area := p.tube
 		if c.shape == &shapeBox {
@@ -130,7 +153,7 @@ func (c *calc) shearStrength(a int) string {
 			c.do(doHHSS)
 			c.do(doBHSS)
 		}
-		plate(area, p.ratioTube, 5, "G4")
+		plate(area, p.ratioTube, x.doVnTube, 5, "G4")
 	case section.Pipe:
 		c.take(symLv, c.f.Member.Height, "the whole height, on the safe side")
 		c.do(doFcrV)
@@ -158,14 +181,14 @@ func (c *calc) webShear(x *flexure) {
 			id, v = factorV.omega, 1.50
 		}
 		c.take(id, v, "G2.1(a), rolled, h/t_w ≤ 2.24 sqrt(E/F_y)")
-		c.do(x.doCv1)
+		c.do(resisting[0].cvWeb)
 		return
 	}
 	c.take(x.kv, 5.34, "G2.1(b)(2), without transverse stiffeners")
 	if ratio <= 1.10*math.Sqrt(5.34*es) {
-		c.do(x.doCv1)
+		c.do(resisting[0].cvWeb)
 	} else {
-		c.do(x.doCv1Long)
+		c.do(resisting[0].cvWebLong)
 	}
 }
 
@@ -175,9 +198,9 @@ func (c *calc) shearBuckling(x *flexure) {
 	root := math.Sqrt(c.s.At(x.kv) * c.s.At(symE) / c.s.At(symFy))
 	switch {
 	case ratio <= 1.10*root:
-		c.do(x.doCv1)
+		c.do(x.doCv2)
 	case ratio <= 1.37*root:
-		c.do(x.doCv1Long)
+		c.do(x.doCv2Mid)
 	default:
 		c.do(x.doCv2Long)
 	}

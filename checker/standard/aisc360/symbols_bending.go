@@ -16,34 +16,38 @@ var (
 type flexure struct {
 	letter, word string
 
-	z, s, sc                   derivation.ID // moduli
-	mp, my, mnY, mnF, mnW, mns derivation.ID
-	mr, u                      derivation.ID // section check
-	section                    *available
-	mn, mrH, mnt               derivation.ID // interaction
-	whole                      *available
+	// moduli, limit states, and what they come to
+	z, s, sc                             derivation.ID
+	mp, my, mnY, mnF, mnW, mns           derivation.ID
+	doMpTube, doMpPipe, doMpRod, doMpBar *derivation.Formula
+	doMyTee, doMyLeg                     *derivation.Formula
+	doY, doY15                           *derivation.Formula
+	doPipeF, doPipeFSlender              *derivation.Formula
+	doLegF, doLegFSlender                *derivation.Formula
+	doMns, doMnsF, doMnsW, doMnsFW       *derivation.Formula
 
-	doMp, doMp16, doMp15, doMy               *derivation.Formula
-	doY, doY15                               *derivation.Formula
-	doMns, doMnsF, doMnsW, doMnsFW           *derivation.Formula
-	doU                                      *derivation.Formula
-	doMnS, doMnLT                            *derivation.Formula
-	lamF, lamW                               derivation.ID // of tubes
-	flat, ae, shift, ie, se, rpg             derivation.ID
-	areaW                                    derivation.ID
-	doLamF, doLamW                           *derivation.Formula
-	doTubeF, doTubeFSlender, doTubeW         *derivation.Formula
-	doTubeWSlender, doAreaW                  *derivation.Formula
-	doBe, doBeBox, doAe, doShift, doIe, doSe *derivation.Formula
-	doRpg                                    *derivation.Formula
-	doPipeF, doPipeFSlender                  *derivation.Formula
-	doLegF, doLegFSlender                    *derivation.Formula
-	v, vn, uv, aw, lamV, kv, cv              derivation.ID
-	shear                                    *available
-	doVn, doUv                               *derivation.Formula
-	doCv1, doCv1Long                         *derivation.Formula
-	doCv2Long                                *derivation.Formula
-	doVnSolid                                *derivation.Formula
+	// the check of the section, and the strength beside axial force
+	mr, u         derivation.ID
+	section       *available
+	doU           *derivation.Formula
+	mn, mrH, mnt  derivation.ID
+	whole         *available
+	doMnS, doMnLT *derivation.Formula
+
+	// tubes
+	lamF, lamW, areaW, rpg           derivation.ID
+	flat, ae, shift, ie, se          derivation.ID
+	doLamF, doLamW                   *derivation.Formula
+	doTubeF, doTubeFSlender, doTubeW *derivation.Formula
+	doTubeWSlender, doAreaW, doRpg   *derivation.Formula
+	doBe, doBeBox, doAe, doShift     *derivation.Formula
+	doIe, doSe                       *derivation.Formula
+
+	// shear
+	v, vn, uv, aw, lamV, kv, cv        derivation.ID
+	shear                              *available
+	doVnLeg, doVnTube, doVnSolid, doUv *derivation.Formula
+	doCv2, doCv2Mid, doCv2Long         *derivation.Formula
 }
 
 var flexures = [2]*flexure{newFlexure("x", "major"), newFlexure("y", "minor")}
@@ -130,19 +134,21 @@ func (x *flexure) moduli(s declare, f define) {
 	x.mnt = s("M_nt", unit.Moment, "greatest moment in the part, first order, without its sign")
 	x.mrH = s("M_r", unit.Moment, "required flexural strength, second order")
 
-	x.doMp = f(x.mp, "F_y * Z_?", "F2.1 (F2-1), F7.1 (F7-1), F8.1 (F8-1)")
-	x.doMp16 = f(x.mp, "min(F_y * Z_?, 1.6 * F_y * S_?)", "F4.2(6), F6.1 (F6-1), F11.1 (F11-2)")
-	x.doMp15 = f(x.mp, "min(F_y * Z_?, 1.5 * F_y * S_?)", "F11.1 (F11-1)")
-	x.doMy = f(x.my, "F_y * S_?", "F4.1, F9.1 (F9-3), F10")
-	x.doY = f(x.mnY, "M_p_?", "F2.1, F6.1, F7.1, F8.1, F11.1")
+	x.doMpTube = f(x.mp, "F_y * Z_?", "F7.1 (F7-1)")
+	x.doMpPipe = f(x.mp, "F_y * Z_?", "F8.1 (F8-1)")
+	x.doMpRod = f(x.mp, "min(F_y * Z_?, 1.6 * F_y * S_?)", "F11.1 (F11-2)")
+	x.doMpBar = f(x.mp, "min(F_y * Z_?, 1.5 * F_y * S_?)", "F11.1 (F11-1)")
+	x.doMyTee = f(x.my, "F_y * S_?", "F9.1 (F9-3)")
+	x.doMyLeg = f(x.my, "F_y * S_?", "F10, about the principal axis")
+	x.doY = f(x.mnY, "M_p_?", "limit state of yielding")
 	x.doY15 = f(x.mnY, "1.5 * M_y_?", "F10.1 (F10-1)")
-	x.doMns = f(x.mns, "M_n_Y_?", "the least of the limit states of chapter F")
-	x.doMnsF = f(x.mns, "min(M_n_Y_?, M_n_F_?)", "the least of the limit states of chapter F")
-	x.doMnsW = f(x.mns, "min(M_n_Y_?, M_n_W_?)", "the least of the limit states of chapter F")
-	x.doMnsFW = f(x.mns, "min(M_n_Y_?, M_n_F_?, M_n_W_?)", "the least of the limit states of chapter F")
+	x.doMns = f(x.mns, "M_n_Y_?", "chapter F, the least of its limit states")
+	x.doMnsF = f(x.mns, "min(M_n_Y_?, M_n_F_?)", "chapter F, the least of its limit states")
+	x.doMnsW = f(x.mns, "min(M_n_Y_?, M_n_W_?)", "chapter F, the least of its limit states")
+	x.doMnsFW = f(x.mns, "min(M_n_Y_?, M_n_F_?, M_n_W_?)", "chapter F, the least of its limit states")
 	x.doU = f(x.u, "M_? / M_c_s_?", "B3")
 	x.doMnS = f(x.mn, "M_n_s_?", "chapter F, no lateral-torsional buckling about this axis")
-	x.doMnLT = f(x.mn, "min(M_n_s_?, M_n_LT)", "the least of the limit states of chapter F")
+	x.doMnLT = f(x.mn, "min(M_n_s_?, M_n_LT)", "chapter F, the least of its limit states")
 
 	x.doPipeF = f(x.mnF, "(0.021 * E / lambda_w + F_y) * S_?", "F8.2(b) (F8-2)")
 	x.doPipeFSlender = f(x.mnF, "0.33 * E / lambda_w * S_?", "F8.2(c) (F8-3), (F8-4)")
@@ -201,10 +207,11 @@ func (x *flexure) shears(s declare, f define) {
 	x.cv = t("C_v", unit.None, "shear strength coefficient")
 	x.uv = t("u_V", unit.None, "utilisation")
 	x.shear = newAvailable(x.vn, "V_c_"+x.letter, "phi_v", "Omega_v", "G1")
-	x.doVn = f(x.vn, "0.6 * F_y * A_w_? * C_v_?", "G2.1 (G2-1), G3 (G3-1), G4 (G4-1), G6 (G6-1)")
+	x.doVnLeg = f(x.vn, "0.6 * F_y * A_w_? * C_v_?", "G3 (G3-1)")
+	x.doVnTube = f(x.vn, "0.6 * F_y * A_w_? * C_v_?", "G4 (G4-1)")
 	x.doUv = f(x.uv, "V_r_? / V_c_?", "B3")
-	x.doCv1 = f(x.cv, "1.0", "G2.1 (G2-2), (G2-3), G2.2 (G2-9)")
-	x.doCv1Long = f(x.cv, "1.10 * sqrt(k_v_? * E / F_y) / h_t_?", "G2.1(b) (G2-4), G2.2 (G2-10)")
+	x.doCv2 = f(x.cv, "1.0", "G2.2 (G2-9)")
+	x.doCv2Mid = f(x.cv, "1.10 * sqrt(k_v_? * E / F_y) / h_t_?", "G2.2 (G2-10)")
 	x.doCv2Long = f(x.cv, "1.51 * k_v_? * E / (h_t_?^2 * F_y)", "G2.2 (G2-11)")
 	x.doVnSolid = f(x.vn, "0.6 * F_y * A_w_?", "J4.2(a) (J4-3), with the factors of G1")
 }
