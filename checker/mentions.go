@@ -203,6 +203,12 @@ func (w *mentions) statement(s *lang.Stmt) {
 	case "joints": // joints RATIO at base, RATIO at top about AXIS
 		at(0)
 		at(4)
+	case "lift": // lift A to B { section = … }
+		at(0)
+		at(2)
+		for _, b := range block(s) {
+			w.statement(b)
+		}
 	case "hold": // hold minor at PLACE
 		at(2)
 	case "limit": // limit sway = VALUE

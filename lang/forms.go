@@ -1,5 +1,7 @@
 package lang
 
+import "slices"
+
 // Context is a place where statements stand.
 type Context string
 
@@ -9,6 +11,7 @@ const (
 	InBasis    Context = "basis"    // in the design basis
 	InLevel    Context = "level"    // in a level's block
 	InMember   Context = "member"   // in a column, strut or tie
+	InLift     Context = "lift"     // in the block of a lift of a member
 	InMaterial Context = "material" // in a material's block
 	InSection  Context = "section"  // in the block of a shape
 )
@@ -63,6 +66,7 @@ var Forms = []Form{
 	{"height", InMember, []string{`height = LENGTH`}, "The height of the member.", "height = ${1:3 m}"},
 	{"length", InMember, []string{`length = LENGTH`}, "The length of the member.", "length = ${1:3 m}"},
 	{"from", InMember, []string{`from LEVEL to LEVEL`}, "The levels between which the member stands.", "from ${1:ground} to ${2:roof}"},
+	{"lift", InMember, []string{`lift PLACE to PLACE { section = …; material = … }`}, "A part of the height with a section or a material of its own.", "lift ${1:ground} to ${2:first} { section = ${3:\"HEB 200\"} }"},
 	{"base", InMember, []string{`base pinned|fixed|free|guided [about major|minor]`}, "How the lower end is held.", "base ${1|pinned,fixed,free,guided|}"},
 	{"top", InMember, []string{`top pinned|fixed|free|guided [about major|minor]`}, "How the upper end is held.", "top ${1|pinned,fixed,free,guided|}"},
 	{"hold", InMember, []string{`hold major|minor|both|twist at PLACE`}, "A point between the ends that is restrained.", "hold ${1|both,minor,major,twist|} at ${2:height / 2}"},
@@ -82,6 +86,9 @@ var Forms = []Form{
 	{"depart", InMember, []string{`depart RULE because "REASON"`}, "A check that the member is allowed to break, with the reason.", "depart ${1:slenderness} because \"${2:reason}\""},
 	{"selfweight", InMember, []string{`selfweight on`, `selfweight off`}, "Whether this member carries its own weight.", "selfweight ${1|off,on|}"},
 	{"note", InMember, []string{`note "TEXT"`}, "A remark that goes with the results.", `note "${1:text}"`},
+
+	{"section", InLift, []string{`section = NAME`, `section = "DESIGNATION"`, `section = SHAPE { … }`}, "The cross-section of the lift.", "section = ${1:\"HEB 200\"}"},
+	{"material", InLift, []string{`material = NAME`, `material = "GRADE"`}, "What the lift is made of.", "material = ${1:\"S355\"}"},
 
 	{"E", InMaterial, []string{`E = STRESS`}, "Young's modulus.", "E = ${1:210 GPa}"},
 	{"G", InMaterial, []string{`G = STRESS`}, "Shear modulus; from E and nu when it is not given.", "G = ${1:81 GPa}"},
@@ -125,6 +132,18 @@ func FormsIn(in Context) []Form {
 	for _, f := range Forms {
 		if f.In == in {
 			out = append(out, f)
+		}
+	}
+	return out
+}
+
+// WordsIn lists the words that begin the statements of a context, each once, in
+// the order of the table.
+func WordsIn(in Context) []string {
+	var out []string
+	for _, f := range Forms {
+		if f.In == in && !slices.Contains(out, f.Word) {
+			out = append(out, f.Word)
 		}
 	}
 	return out

@@ -97,6 +97,9 @@ func (w *memberReader) fits() {
 	if m.Leg.Stated() && m.Section != nil && m.Section.Shape.Kind != section.Angle {
 		problem(m.Leg.Place, lang.Problem{Rule: "wrong-kind", Message: "a single angle is connected by one leg; this member is " + lang.A(m.Section.Shape.Kind.String())})
 	}
+	if m.Leg.Stated() && len(m.Lifts) > 0 {
+		problem(m.Leg.Place, lang.Problem{Rule: "wrong-form", Message: "a member that is connected by one leg has one section from end to end, without lifts"})
+	}
 	for a, j := range m.Joints {
 		if j == nil {
 			continue
@@ -106,6 +109,9 @@ func (w *memberReader) fits() {
 		place := lang.Place{Decl: at.decl, Span: at.stmt.Line}
 		if m.Factor[a] > 0 {
 			problem(place, lang.Problem{Rule: "value-given-twice", Message: "the effective length factor about " + Axis(a).String() + " is given by 'effective' too"})
+		}
+		if len(m.Lifts) > 0 {
+			problem(place, lang.Problem{Rule: "wrong-form", Message: "stiffness ratios of joints hold for a column of one section from joint to joint, without lifts"})
 		}
 		for _, h := range m.Holds {
 			if a == 0 && h.Major || a == 1 && h.Minor {

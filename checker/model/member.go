@@ -9,8 +9,7 @@ import (
 )
 
 // memberWords are the words that may begin a statement in a member's block.
-var memberWords = []string{"section", "material", "height", "length", "from", "base", "top", "hold", "effective", "joints", "connected", "load", "limit",
-	"require", "depart", "note", "selfweight", "net"}
+var memberWords = lang.WordsIn(lang.InMember)
 
 // DepartureRules are the rules that a member may depart from; the checker fills
 // in the rules of its standards.
@@ -202,7 +201,7 @@ func (w *memberReader) statement(d declared) {
 		r.args = value
 	}
 	switch s.Word {
-	case "load", "hold", "require", "depart", "note", "limit", "effective", "joints", "base", "top":
+	case "load", "hold", "lift", "require", "depart", "note", "limit", "effective", "joints", "base", "top":
 	default:
 		key := sameWord(s.Word)
 		if first, again := w.first[key]; again {
@@ -227,9 +226,11 @@ func (w *memberReader) statement(d declared) {
 	}
 	switch s.Word {
 	case "section":
-		w.section(r, d)
+		w.m.Section, w.m.SectionAt = w.section(r, d)
 	case "material":
-		w.material(r)
+		w.m.Material, w.m.MaterialAt = w.material(r)
+	case "lift":
+		w.lift(r, d)
 	case "height", "length":
 		w.m.Height, _, _ = w.height(r)
 		w.m.HeightAt = r.place(s.Line)
@@ -269,7 +270,7 @@ func (w *memberReader) statement(d declared) {
 	default:
 		w.unknown(r)
 	}
-	if s.Body != nil && s.Word != "section" && !r.failed {
+	if s.Body != nil && s.Word != "section" && s.Word != "lift" && !r.failed {
 		r.fail("left-over", s.Body.Span, "'%s' takes no block", s.Word)
 	}
 	r.end()

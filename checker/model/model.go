@@ -254,12 +254,16 @@ type Member struct {
 	MaterialAt,
 	HeightAt lang.Place
 
-	Height float64 // m
-	From   float64 // height of the base above datum, m
 	// Net is the area that holes leave, m2 (EN 1993-1-1 6.2.2.2); NaN when it is not
 	// stated.
-	Net       float64
-	NetAt     lang.Place
+	Net   float64
+	NetAt lang.Place
+	// Lifts are the parts of the height with a section and material of their own,
+	// from the base up and without gaps; none for a member of one section.
+	Lifts     []Lift
+	Height    float64 // m
+	From      float64 // height of the base above datum, m
+	Levels    bool    // it stands between levels: From is known
 	Base, Top [2]action.End
 	Holds     []Hold
 	Joints    [2]*action.Joints // stiffness ratios of rigid joints: major, minor; nil for none

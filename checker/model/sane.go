@@ -31,6 +31,7 @@ func (w *memberReader) complete() {
 		}
 		m.Missing = append(m.Missing, "it has no "+what)
 	}
+	w.lifts(missing)
 	if m.Section == nil {
 		missing("section = \"HEB 160\"", "section")
 	}

@@ -39,8 +39,8 @@
 (defconst kern-mode-statements
   '("accidental" "actions" "amplification" "base" "connected" "depart" "effective" "factor_buckling"
     "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
-    "hold" "joints" "length" "limit" "load" "material" "net" "note" "permanent" "require" "roofs"
-    "section" "selfweight" "show" "stability" "standard" "strengths" "top" "xi")
+    "hold" "joints" "length" "lift" "limit" "load" "material" "net" "note" "permanent" "require"
+    "roofs" "section" "selfweight" "show" "stability" "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 

@@ -141,12 +141,12 @@ func (c *calc) torsional() {
 func (c *calc) torsionalStrength(rule string) {
 	sec := c.f.Member.Section
 	title := sec.Title()
-	cw := standard.Warping(sec)
+	j, cw := c.f.Twisting()
 	if math.IsNaN(cw) {
 		cw = 0
 		c.assume("C_w = 0, as it is not stated")
 	}
-	c.take(symJ, standard.KnownOrZero(sec.It), title)
+	c.take(symJ, standard.KnownOrZero(j), title)
 	c.take(symCw, standard.KnownOrZero(cw), title)
 	if !c.f.TwistFree {
 		held := "twist held at both ends"
