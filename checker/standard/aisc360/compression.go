@@ -157,8 +157,8 @@ func (c *calc) elasticStress(a int, s action.Stretch) float64 {
 	if c.s.Recorded() {
 		source = fmt.Sprintf("%s, %s–%s", c.f.StretchName(a, s), s.Base, s.Top)
 	}
-	c.take(x.l, s.Length(), source)
-	c.take(x.k, s.K, source)
+	c.take(x.l, standard.Known(s.Length()), source)
+	c.take(x.k, standard.Known(s.K), source)
 	c.do(x.doLc)
 	c.do(x.doSlender)
 	return c.do(x.doFe)

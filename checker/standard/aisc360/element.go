@@ -128,7 +128,7 @@ var (
 	doDt     = formula(symDt, "D / t", "B4.1b(g)")
 	doDtR    = formula(symDtR, "0.11 * E / F_y", "Table B4.1a case 9")
 	doDtMax  = formula(symDtMax, "0.45 * E / F_y", "E7.2")
-	doAeD    = formula(symAe, "(0.038 * E / (F_y * lambda_c_D) + 2 / 3) * A_g", "E7.2(b) (E7-7)")
+	doAeD    = formula(symAe, "min(1, 0.038 * E / (F_y * lambda_c_D) + 2 / 3) * A_g", "E7.2(b) (E7-7), no more than A_g, which it passes by 1 % at its lower end")
 )
 
 // local compares the plates with Table B4.1a.

@@ -104,8 +104,12 @@ func (p post) frame(t *testing.T) *standard.Frame {
 // that several checks compute, that of each check under RULE/SYMBOL too.
 func (p post) values(t *testing.T, s Standard) (map[string]float64, *standard.Outcome) {
 	t.Helper()
+	return valuesOf(s, p.frame(t))
+}
+
+func valuesOf(s Standard, f *standard.Frame) (map[string]float64, *standard.Outcome) {
 	record := &derivation.Record{Set: s.Symbols()}
-	out := s.Check(p.frame(t), record)
+	out := s.Check(f, record)
 	v := map[string]float64{}
 	for _, step := range record.Steps {
 		if step.Note == "" {

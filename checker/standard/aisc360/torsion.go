@@ -160,7 +160,7 @@ func (c *calc) torsionalStrength(rule string) {
 		} else {
 			c.assume("%s, warping free", held)
 		}
-		c.take(symLz, c.f.Twist, held)
+		c.take(symLz, standard.Known(c.f.Twist), held)
 		c.take(symKz, c.f.TwistK, held)
 		c.do(doLcz)
 	} else {
