@@ -13,11 +13,11 @@ var symB2 = sym("B_2", unit.None, "multiplier for the translation of the story")
 
 // amplifier holds B_1 about one axis.
 type amplifier struct {
-	letter                   string
-	m1, m2, cm, lc1, pe1, b1 derivation.ID
-	doCm, doLc1, doPe1       *derivation.Formula
-	doB1                     *derivation.Formula
-	doMr, doMrSway, doMrPull *derivation.Formula
+	letter                        string
+	m1, m2, cm, lc1, pe1, b1      derivation.ID
+	doCm, doLc1, doLc1Step, doPe1 *derivation.Formula
+	doB1                          *derivation.Formula
+	doMr, doMrSway, doMrPull      *derivation.Formula
 }
 
 var amplifiers = [2]*amplifier{newAmplifier(0), newAmplifier(1)}
@@ -39,6 +39,7 @@ func newAmplifier(a int) *amplifier {
 	m.b1 = s("B_1", unit.None, "multiplier for the curvature of the member")
 	m.doCm = f(m.cm, "0.6 - 0.4 * M_1_? / M_2_?", "App. 8.1.2(a) (A-8-4)")
 	m.doLc1 = f(m.lc1, "min(1, K_?) * L_?", "App. 8.1.2: the factor of ends that stay in place, at most 1")
+	m.doLc1Step = f(m.lc1, "K_? * L_?", "App. 8.1.2: of the lift in a stretch in which the section changes")
 	m.doPe1 = f(m.pe1, "pi^2 * EI_? / L_c1_?^2", "App. 8.1.2 (A-8-5)")
 	m.doB1 = f(m.b1, "max(1, C_m_? / (1 - alpha * P_r_? / P_e1_?))", "App. 8.1.2 (A-8-3)")
 	m.doMr = f(x.mrH, "B_1_? * M_nt_?", "App. 8.1.1 (A-8-1)")
@@ -64,7 +65,7 @@ func (c *calc) swaying() string {
 // amplified computes the required moment about an axis of a stretch from the
 // greatest of first order. It is false where the compression reaches P_e1, and
 // nothing can be in equilibrium. P_r, L and K are in the sheet.
-func (c *calc) amplified(a, k int, d action.Diagram) bool {
+func (c *calc) amplified(a, k int, s action.Stretch, d action.Diagram) bool {
 	m := amplifiers[a]
 	x := axes[a]
 	p := c.s.At(x.pr)
@@ -73,7 +74,11 @@ func (c *calc) amplified(a, k int, d action.Diagram) bool {
 		return true
 	}
 	c.rigidity(a, p, c.combination(k))
-	c.do(m.doLc1)
+	if s.Stepped {
+		c.do(m.doLc1Step)
+	} else {
+		c.do(m.doLc1)
+	}
 	if !(c.s.At(symAlphaFactor)*p < c.do(m.doPe1)) {
 		return false
 	}

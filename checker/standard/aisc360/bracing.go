@@ -43,9 +43,14 @@ func (c *calc) bracing() {
 	const rule = "bracing"
 	held := [2]bool{}
 	for a := range held {
-		held[a] = len(c.f.Stretches[a]) > 1 && c.f.Stands[a]
+		for _, s := range c.f.Stretches[a] { // one that ends at a hold
+			held[a] = held[a] || c.f.Stands[a] && s.Length() < c.f.Member.Height*(1-1e-9)
+		}
 	}
 	switch {
+	case !held[0] && !held[1] && len(c.f.Member.Holds) > 0 && (c.f.Stretches[0][0].Exact || c.f.Stretches[1][0].Exact):
+		c.cover(rule, standard.NotApplicable, "beside a free end the column is worked out as a whole: what its holds need is to be found by analysis (App. 6.1)")
+		return
 	case !held[0] && !held[1]:
 		c.cover(rule, standard.NotApplicable, "there are no holds between the ends")
 		return

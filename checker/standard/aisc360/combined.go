@@ -45,17 +45,17 @@ type strip struct {
 func (c *calc) strips() []strip {
 	var out []strip
 	eps := 1e-9 * c.f.Member.Height
-	overlap := func(a, b, from, to float64) bool { return min(b, to)-max(a, from) > eps }
 	for i, x := range c.f.Stretches[0] {
 		for j, y := range c.f.Stretches[1] {
-			if !overlap(x.From, x.To, y.From, y.To) {
+			from, to := max(x.From, y.From, c.f.From), min(x.To, y.To, c.f.To)
+			if to-from <= eps {
 				continue
 			}
 			if len(c.bend.lat.segments) == 0 {
 				out = append(out, strip{[2]int{i, j}, -1})
 			}
 			for s, g := range c.bend.lat.segments {
-				if overlap(max(x.From, y.From), min(x.To, y.To), g.from, g.to) {
+				if min(to, g.to)-max(from, g.from) > eps {
 					out = append(out, strip{[2]int{i, j}, s})
 				}
 			}
@@ -73,21 +73,20 @@ func (c *calc) interaction() {
 		clause = "ANSI/AISC 360 H2"
 	}
 	refuse := func(why string) { c.undecidedIn(rule, clause, unit.None, why) }
-	axial, bent := false, false
+	bent, pressed, pulled := false, false, false
 	for k := range c.bend.combs {
 		b := &c.bend.combs[k]
-		bent = bent || b.bends[0] || b.bends[1]
-		axial = axial || (b.bends[0] || b.bends[1]) && (c.f.Compression(k, 0, c.f.Member.Height) > 0 || c.f.Tension(k) > 0)
-	}
-	pressed := false
-	for k := range c.bend.combs {
-		pressed = pressed || (c.bend.combs[k].bends[0] || c.bend.combs[k].bends[1]) && c.f.Compression(k, 0, c.f.Member.Height) > 0
+		if b.bends[0] || b.bends[1] {
+			bent = true
+			pressed = pressed || !(c.f.Compression(k, 0, c.f.Member.Height) <= 0)
+			pulled = pulled || !(c.f.Tension(k) <= 0)
+		}
 	}
 	switch {
 	case !bent:
 		c.cover(rule, standard.NotApplicable, "no combination bends the member")
 		return
-	case !axial && !(c.f.Bends[0] && c.f.Bends[1]):
+	case !pressed && !pulled && !(c.f.Bends[0] && c.f.Bends[1]):
 		c.cover(rule, standard.NotApplicable, "neither axial force nor bending about a second axis")
 		return
 	case !c.f.Stands[0] || !c.f.Stands[1]:
@@ -124,7 +123,7 @@ func (c *calc) interaction() {
 					}
 				}
 				t := c.f.Tension(k)
-				if t <= 0 || c.pressure(s, k) > 0 {
+				if !(t > 0) || c.pressure(s, k) > 0 {
 					try(false)
 				}
 				if t > 0 {
@@ -226,7 +225,7 @@ func (c *calc) interactionAt(s strip, k int, pull bool) float64 {
 			continue
 		}
 		c.take(x.mnt, peak[a], source)
-		if !c.amplified(a, k, d[a]) {
+		if !c.amplified(a, k, stretch[a], d[a]) {
 			if ratio > 1 {
 				return c.do(doOver)
 			}

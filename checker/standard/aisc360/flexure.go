@@ -31,8 +31,8 @@ type bendState struct {
 type comb struct {
 	pieces [2][]action.Piece // moments about x–x and y–y
 	bends  [2]bool           // more than next to nothing
-	peak   [2]float64        // greatest moments, Nm
-	shear  [2]float64        // greatest shear forces, N
+	peak   [2]float64        // greatest moments in the lift, Nm
+	shear  [2]float64        // greatest shear forces in the lift, N
 }
 
 var bendingClauses = map[string]struct {
@@ -121,7 +121,7 @@ func (c *calc) torsion() {
 	const rule = "torsion"
 	switch c.f.Member.Section.Shape.Kind {
 	case section.Channel, section.Tee, section.Angle:
-		c.cover(rule, standard.NotApplicable, "loads across the member and eccentric loads are taken to act through the shear center: what they twist is for a person (H3)")
+		c.cover(rule, standard.NotApplicable, "loads across the member and eccentric loads are taken to act through the shear centre: what they twist is for a person (H3)")
 	default:
 		c.cover(rule, standard.NotApplicable, "loads act in the planes of symmetry: nothing twists the member (H3)")
 	}
@@ -144,9 +144,10 @@ func (c *calc) moduli() {
 	}
 	c.take(symJ, standard.KnownOrZero(sec.It), title)
 	c.take(symCw, standard.KnownOrZero(standard.Warping(sec)), title)
-	for a, w := range []float64{sec.WelMajor, sec.WelMinor} {
+	for a, x := range flexures {
+		w := c.s.At(x.s)
 		if math.IsNaN(w) {
-			w = sec.Area * []float64{sec.RMajor, sec.RMinor}[a]
+			w = known(sec.Area) * known([]float64{sec.RMajor, sec.RMinor}[a])
 		}
 		// moments below this are rounding of the analysis
 		c.bend.tiny[a] = 1e-9 * c.s.At(symFy) * w
@@ -169,12 +170,17 @@ func (c *calc) combine() {
 				}
 				b.pieces[a] = b.pieces[a][:n:n]
 			}
+			beyond := 0.0 // in other lifts: a stretch can go on there
 			for _, p := range b.pieces[a] {
 				m, _ := p.Largest()
-				b.peak[a] = max(b.peak[a], math.Abs(m))
-				b.shear[a] = max(b.shear[a], math.Abs(p.V), math.Abs(p.Shear(p.To-p.From)))
+				beyond = max(beyond, math.Abs(m))
+				if p, ok := c.f.Cut(p); ok {
+					m, _ := p.Largest()
+					b.peak[a] = max(b.peak[a], math.Abs(m))
+					b.shear[a] = max(b.shear[a], math.Abs(p.V), math.Abs(p.Shear(p.To-p.From)))
+				}
 			}
-			b.bends[a] = !(b.peak[a] <= c.bend.tiny[a])
+			b.bends[a] = !(beyond <= c.bend.tiny[a])
 		}
 	}
 }

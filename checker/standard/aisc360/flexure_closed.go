@@ -85,7 +85,7 @@ func (c *calc) pipeStrength(a int) string {
 // angleStrength is F10.1 and F10.3 about a principal axis. Which side a moment
 // compresses is not said, so that the toes are taken in compression. About the
 // major axis they are on both sides; about the minor axis on that away from the
-// heel, near which the shear center lies.
+// heel, near which the shear centre lies.
 func (c *calc) angleStrength(a int) {
 	x, sec := flexures[a], c.f.Member.Section
 	toes := sec.WelMajor

@@ -27,7 +27,8 @@ type lateralState struct {
 // segment is an unbraced length.
 type segment struct {
 	from, to float64
-	free     bool // one end is free: a cantilever
+	factor   float64 // on its length, where the section changes in it: Frame.Lateral
+	free     bool    // one end is free: a cantilever
 }
 
 // lateralOf decides whether and how the member can buckle sideways.
@@ -82,31 +83,52 @@ func (c *calc) lateralOf() lateralState {
 // whether it is at the compression flange and counts for nothing.
 func (c *calc) unbraced() (out []segment, why string) {
 	m := c.f.Member
-	from := 0.0
+	from, eps := 0.0, 1e-6*m.Height
+	add := func(to float64) {
+		if from < c.f.To-eps && to > c.f.From+eps { // the frame has a share in it
+			out = append(out, segment{from: from, to: to, factor: 1})
+		}
+		from = to
+	}
 	for _, h := range m.Holds {
-		if h.Twist && h.At-from > 1e-6*m.Height {
-			out = append(out, segment{from: from, to: h.At})
-			from = h.At
+		if h.Twist && h.At-from > eps {
+			add(h.At)
 		}
 	}
-	out = append(out, segment{from: from, to: m.Height})
+	add(m.Height)
+	for i := range out {
+		s := &out[i]
+		if !c.f.Stepped(s.from, s.to) {
+			continue
+		}
+		s.factor = math.NaN()
+		for _, g := range c.f.Lateral() {
+			if math.Abs(g.From-s.from) <= eps && math.Abs(g.To-s.to) <= eps {
+				s.factor = g.Factor
+			}
+		}
+		if math.IsNaN(s.factor) || m.Section.Shape.Kind != section.ISection {
+			return nil, "the section changes between points held against twist: hold the member both sideways and against twist where it changes, or find the lateral-torsional buckling moment by analysis"
+		}
+	}
 	if !c.f.TwistFree {
 		return out, ""
 	}
 	free := func(ends [2]action.End) bool { return ends[0] == action.Free || ends[1] == action.Free }
 	base, top := free(m.Base), free(m.Top)
 	last := &out[len(out)-1]
+	whole := len(out) == 1 && last.from == 0 && last.to == m.Height && last.factor == 1
 	switch {
 	case base && top:
 		return nil, "both ends are free: find the lateral-torsional buckling moment by analysis"
-	case top && len(out) == 1 && m.Base[1] == action.Fixed:
+	case top && whole && m.Base[1] == action.Fixed:
 		last.free = true
-	case base && len(out) == 1 && m.Top[1] == action.Fixed:
+	case base && whole && m.Top[1] == action.Fixed:
 		last.free = true
 	default:
 		return nil, "an end is free and warping is not prevented where the free part begins: F1(c) does not give C_b, find the lateral-torsional buckling moment by analysis"
 	}
-	c.assume("warping is prevented at the fixed end of the cantilever (F1(c), C_b = 1.0), loads act at the shear center")
+	c.assume("warping is prevented at the fixed end of the cantilever (F1(c), C_b = 1.0), loads act at the shear centre")
 	return out, ""
 }
 
@@ -134,7 +156,10 @@ func (c *calc) segmentGiven(s segment) {
 			source = fmt.Sprintf("from %s m to %s m, %s", unit.Number(s.from, 4), unit.Number(s.to, 4), source)
 		}
 	}
-	c.take(symLb, (s.to-s.from)*max(1, c.f.TwistK), source)
+	if s.factor != 1 && c.s.Recorded() {
+		source += fmt.Sprintf(", times %s: the section changes there, and the least stiffness counts", unit.Number(s.factor, 4))
+	}
+	c.take(symLb, (s.to-s.from)*s.factor*max(1, c.f.TwistK), source)
 }
 
 // factorCb computes C_b of a segment for a combination, with the tension beside the
@@ -311,7 +336,7 @@ func (c *calc) unequalLegs() {
 //	beta_w = 1/I_w ∫ z (w² + z²) dA - 2 z_0
 //
 // with w along the major and z along the minor principal axis and z_0 that of the
-// shear center, where the legs meet (commentary of F10.2). The integrand is a cubic
+// shear centre, where the legs meet (commentary of F10.2). The integrand is a cubic
 // along a leg, for which Gauss's rule with two points is exact.
 func betaW(upright, lying, t float64) float64 {
 	type point struct{ x, y, area float64 }
