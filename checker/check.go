@@ -11,6 +11,7 @@ import (
 
 	"kern/checker/model"
 	"kern/checker/standard"
+	"kern/checker/standard/aisc360"
 	"kern/checker/standard/elastic"
 	"kern/checker/standard/en1993"
 	"kern/checker/standard/en1993_2022"
@@ -22,6 +23,8 @@ var standards = []standard.Standard{
 	elastic.Standard{},
 	en1993.Standard{},
 	en1993_2022.Standard,
+	aisc360.Standard{},
+	aisc360.Edition2016,
 }
 
 func find(name string) standard.Standard {
@@ -47,6 +50,8 @@ func (registry) Names() []string {
 }
 
 func (registry) Annexes(name string) []string { return find(name).Annexes() }
+
+func (registry) Methods(name string) []string { return find(name).Methods() }
 
 func (registry) Overrides(name string) map[string]bool { return find(name).Overrides() }
 

@@ -76,6 +76,8 @@ var places = map[string]string{
 	"basis { standard \"¦\" }": "elastic EN_1993-1-1:2005",
 	"basis { standard ¦ }":     "elastic EN_1993-1-1:2005",
 	"basis { standard \"EN 1993-1-1:2005\" ¦ }":         "annex",
+	"basis { standard \"ANSI/AISC 360-22\" ¦ }":         "by",
+	"basis { standard \"ANSI/AISC 360-22\" by ¦ }":      "LRFD ASD",
 	"basis { standard \"EN 1993-1-1:2005\" annex \"¦ }": "recommended",
 	"basis { actions \"EN 1990:2002\" eq \"¦\" }":       "6.10",
 	"basis { show kN, ¦ }":                              "kNm Nm",
