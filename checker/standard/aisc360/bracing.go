@@ -41,14 +41,15 @@ func newBrace(letter string) *brace {
 // nothing of what holds the member: a person compares.
 func (c *calc) bracing() {
 	const rule = "bracing"
-	held := [2]bool{}
+	held, whole := [2]bool{}, false
 	for a := range held {
+		whole = whole || len(c.f.Stretches[a]) > 0 && c.f.Stretches[a][0].Exact // none of a mechanism
 		for _, s := range c.f.Stretches[a] { // one that ends at a hold
 			held[a] = held[a] || c.f.Stands[a] && s.Length() < c.f.Member.Height*(1-1e-9)
 		}
 	}
 	switch {
-	case !held[0] && !held[1] && len(c.f.Member.Holds) > 0 && (c.f.Stretches[0][0].Exact || c.f.Stretches[1][0].Exact):
+	case !held[0] && !held[1] && len(c.f.Member.Holds) > 0 && whole:
 		c.cover(rule, standard.NotApplicable, "beside a free end the column is worked out as a whole: what its holds need is to be found by analysis (App. 6.1)")
 		return
 	case !held[0] && !held[1]:
