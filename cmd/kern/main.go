@@ -45,6 +45,6 @@ func root() *cobra.Command {
 		Version:       version(),
 	}
 	c.SetVersionTemplate("kern {{.Version}}\n")
-	c.AddCommand(checkCommand(), sheetCommand(), formatCommand(), rulesCommand(), catalogueCommand(), lspCommand(), versionCommand())
+	c.AddCommand(checkCommand(), sheetCommand(), scheduleCommand(), formatCommand(), rulesCommand(), catalogueCommand(), lspCommand(), versionCommand())
 	return c
 }
