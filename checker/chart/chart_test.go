@@ -116,7 +116,7 @@ column A1 { section = "HEB 160"; material = "S355"; height = 4 m; load G ` + exa
 // TestVaryCrossing: where the note says that the limit is reached, a calculation
 // with that height passes, and one with a little more fails.
 func TestVaryCrossing(t *testing.T) {
-	r := check(post("EN 1993-1-1:2005", "4.8 m"))
+	r := check(post(`"EN 1993-1-1:2005"`, "4.8 m"))
 	c, err := chart.Vary(r, named(t, r, "A1"), "height", chart.Range{From: 1, To: 15, Points: 40})
 	if err != nil {
 		t.Fatal(err)
@@ -127,8 +127,8 @@ func TestVaryCrossing(t *testing.T) {
 	if !found || err != nil {
 		t.Fatalf("the note is '%s'", c.Notes[0])
 	}
-	below := named(t, check(post("EN 1993-1-1:2005", exact(h*0.999)+" m")), "A1").Utilisation
-	above := named(t, check(post("EN 1993-1-1:2005", exact(h*1.001)+" m")), "A1").Utilisation
+	below := named(t, check(post(`"EN 1993-1-1:2005"`, exact(h*0.999)+" m")), "A1").Utilisation
+	above := named(t, check(post(`"EN 1993-1-1:2005"`, exact(h*1.001)+" m")), "A1").Utilisation
 	if !(below <= 1 && above > 1) {
 		t.Errorf("at %g m: %g below, %g above", h, below, above)
 	}
@@ -194,7 +194,7 @@ column A { section = "HEB 160"; material = "S355"; height = ` + exact(h) + ` m; 
 
 // TestInteraction: the deciding combination is the main mark.
 func TestInteraction(t *testing.T) {
-	r := check(post("EN 1993-1-1:2005", "4.8 m"))
+	r := check(post(`"EN 1993-1-1:2005"`, "4.8 m"))
 	c, err := chart.Interaction(named(t, r, "A1"))
 	if err != nil {
 		t.Fatal(err)
@@ -241,7 +241,7 @@ func TestErrors(t *testing.T) {
 // TestTextGolden compares the plots with testdata; none is wider than it should
 // be, and the table says the same as the CSV.
 func TestTextGolden(t *testing.T) {
-	r := check(post("EN 1993-1-1:2005", "4.8 m"))
+	r := check(post(`"EN 1993-1-1:2005"`, "4.8 m"))
 	resistance, err := chart.Resistance(chart.Plain{Section: "HEB 160", Material: "S355", Standard: "EN 1993-1-1:2005", Points: 50})
 	if err != nil {
 		t.Fatal(err)

@@ -189,7 +189,7 @@ func (c *composer) tally() Verdict {
 	if departs > 0 {
 		rest += fmt.Sprintf("; %s", plural(departs, "departure"))
 	}
-	if n := c.report.Summary.Errors - c.failures(); n > 0 && len(c.options.Members) == 0 {
+	if n := c.errors(); n > 0 && len(c.options.Members) == 0 {
 		rest += fmt.Sprintf("; %s in the files", plural(n, "error"))
 		if worst == standard.Passes {
 			worst = standard.Undecided
@@ -198,16 +198,28 @@ func (c *composer) tally() Verdict {
 	return Verdict{worst.String(), rest}
 }
 
-// failures counts the errors that are failing checks, which stand with their
-// members.
-func (c *composer) failures() int {
+// errors counts the errors in the files of the sheet, failing checks apart, which
+// stand with their members.
+func (c *composer) errors() int {
 	n := 0
 	for _, d := range c.report.Diagnostics {
-		if d.Severity == lang.Error && d.Member != "" && checked(d.Rule) {
+		if d.Severity == lang.Error && c.has(d.File) && !(d.Member != "" && checked(d.Rule)) {
 			n++
 		}
 	}
 	return n
+}
+
+// has tells whether the sheet follows from a file.
+func (c *composer) has(file string) bool {
+	for _, p := range c.parts {
+		for _, f := range p.calculation.Files {
+			if f.Name == file {
+				return true
+			}
+		}
+	}
+	return false
 }
 
 func plural(n int, what string) string {
@@ -258,7 +270,7 @@ func (c *composer) findings() {
 	lines := map[string]*lang.Lines{}
 	var items []output.Line
 	for _, d := range c.report.Diagnostics {
-		if d.Severity > lang.Warning || d.Member != "" && (checked(d.Rule) || d.Rule == "undecided") {
+		if d.Severity > lang.Warning || !c.has(d.File) || d.Member != "" && (checked(d.Rule) || d.Rule == "undecided") {
 			continue
 		}
 		at := placeOf(lines, c.report, d.File, d.Span, func(name string) string { return relative(c.dir, name) })

@@ -26,6 +26,7 @@ const (
 type Options struct {
 	Program string   // name and version of the program
 	Asked   []string // the files that were asked for, as the project names them
+	Roots   []string // the calculations to show, by their first files; all when empty
 	Members []string // the members to show, all when empty
 	Full    bool     // the working of every check, not of the governing one alone
 	Paper   Paper
@@ -78,12 +79,15 @@ func New(r *checker.Report, o Options) (*Sheet, error) {
 	if o.Paper == "" {
 		o.Paper = A4
 	}
-	chosen, err := choose(r, o.Members)
-	if err != nil {
+	c := composer{report: r, options: o, sheet: &Sheet{Program: o.Program, options: o}}
+	var err error
+	if c.parts, err = partsOf(r); err != nil {
 		return nil, err
 	}
-	c := composer{report: r, options: o, chosen: chosen, sheet: &Sheet{Program: o.Program, options: o}}
-	if c.parts, err = partsOf(r, chosen); err != nil {
+	if len(o.Roots) > 0 {
+		c.parts = slices.DeleteFunc(c.parts, func(p part) bool { return !slices.Contains(o.Roots, p.calculation.Root) })
+	}
+	if err := c.choose(); err != nil {
 		return nil, err
 	}
 	if len(o.Members) > 0 {
@@ -97,12 +101,12 @@ func New(r *checker.Report, o Options) (*Sheet, error) {
 // partsOf puts every result with a calculation that has it. Results that an edit
 // left alone were worked out in an earlier state of their calculation: those are
 // known by their file.
-func partsOf(r *checker.Report, results []*checker.Result) ([]part, error) {
+func partsOf(r *checker.Report) ([]part, error) {
 	var out []part
 	for _, x := range r.AllCalculations() {
 		out = append(out, part{calculation: x})
 	}
-	for _, m := range results {
+	for _, m := range r.Members {
 		i := slices.IndexFunc(out, func(p part) bool { return p.calculation.Env == m.Env() })
 		if i < 0 {
 			file, _ := r.Place(m)
@@ -118,35 +122,46 @@ func partsOf(r *checker.Report, results []*checker.Result) ([]part, error) {
 	return out, nil
 }
 
-// choose gives the results of the members that are asked for.
-func choose(r *checker.Report, names []string) ([]*checker.Result, error) {
-	if len(names) == 0 {
-		return r.Members, nil
-	}
-	var out []*checker.Result
-	for _, m := range r.Members {
-		if slices.Contains(names, m.Name) {
-			out = append(out, m)
+// choose keeps the members that are asked for, and lists them in the order of the
+// report.
+func (c *composer) choose() error {
+	here := map[*checker.Result]bool{}
+	known := map[string]bool{}
+	for i, p := range c.parts {
+		c.parts[i].results = nil
+		for _, m := range p.results {
+			known[m.Name] = true
+			if len(c.options.Members) == 0 || slices.Contains(c.options.Members, m.Name) {
+				here[m] = true
+				c.parts[i].results = append(c.parts[i].results, m)
+			}
 		}
 	}
-	for _, n := range names {
-		if !slices.ContainsFunc(out, func(m *checker.Result) bool { return m.Name == n }) {
-			var known []string
-			for _, m := range r.Members {
-				if !slices.Contains(known, m.Name) {
-					known = append(known, m.Name)
-				}
-			}
-			if len(known) > 12 {
-				known = append(known[:12:12], "…")
-			}
-			if len(known) == 0 {
-				return nil, fmt.Errorf("there is no member '%s': the files describe none", n)
-			}
-			return nil, fmt.Errorf("there is no member '%s'; the files have %s", n, strings.Join(known, ", "))
+	if len(c.options.Members) > 0 {
+		c.parts = slices.DeleteFunc(c.parts, func(p part) bool { return len(p.results) == 0 })
+	}
+	var names []string
+	for _, m := range c.report.Members {
+		if here[m] {
+			c.chosen = append(c.chosen, m)
+		}
+		if known[m.Name] && !slices.Contains(names, m.Name) && len(names) < 13 {
+			names = append(names, m.Name)
 		}
 	}
-	return out, nil
+	for _, n := range c.options.Members {
+		switch {
+		case known[n]:
+		case len(names) == 0:
+			return fmt.Errorf("there is no member '%s': the files describe none", n)
+		default:
+			if len(names) > 12 {
+				names[12] = "…"
+			}
+			return fmt.Errorf("there is no member '%s'; the files have %s", n, strings.Join(names, ", "))
+		}
+	}
+	return nil
 }
 
 // headings are the headings of the sheet, in order.
