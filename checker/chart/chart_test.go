@@ -216,7 +216,7 @@ column A { section = "HEB 160"; material = "S355"; height = 4 m; load 20 kN }`).
 
 // TestErrors: what cannot be drawn is refused with the reason.
 func TestErrors(t *testing.T) {
-	r := check(post("elastic", "4.8 m"))
+	r := check(post(`"elastic"`, "4.8 m"))
 	for parameter, want := range map[string]string{
 		"weight": "nothing that can be varied", "load:X": "no load case", "offset:both": "nothing that can be varied",
 	} {

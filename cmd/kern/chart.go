@@ -21,11 +21,11 @@ import (
 // charting is what the flags of the command say.
 type charting struct {
 	section, material, standard, annex, method, effective string
-	member, vary, picture                         string
-	interaction                                   bool
-	from, to                                      string
-	points                                        int
-	form, file                                    string
+	member, vary, picture                                 string
+	interaction                                           bool
+	from, to                                              string
+	points                                                int
+	form, file                                            string
 }
 
 // pictures are the drawings of a member by the words of --picture.

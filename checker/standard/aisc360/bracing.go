@@ -44,7 +44,7 @@ func (c *calc) bracing() {
 	held, whole := [2]bool{}, false
 	for a := range held {
 		whole = whole || len(c.f.Stretches[a]) > 0 && c.f.Stretches[a][0].Exact // none of a mechanism
-		for _, s := range c.f.Stretches[a] { // one that ends at a hold
+		for _, s := range c.f.Stretches[a] {                                    // one that ends at a hold
 			held[a] = held[a] || c.f.Stands[a] && s.Length() < c.f.Member.Height*(1-1e-9)
 		}
 	}
