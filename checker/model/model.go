@@ -104,7 +104,8 @@ type Basis struct {
 	StandardAt  lang.Place
 	Method      string // of a standard that has several: "LRFD" or "ASD"
 	Annex       string
-	Actions     string // "" when not stated
+	Actions     string     // "" when not stated
+	ActionsAt   lang.Place // of ASCE/SEI 7 alone; Equation is its method
 	Equation    string
 	Combining   Combining
 	Show        derivation.Units
@@ -118,6 +119,9 @@ type Basis struct {
 	DirectAt    lang.Place
 	Simple      bool // amplification 1/(1 - N/N_cr) for every moment diagram
 }
+
+// Basic tells whether loads are combined by ASCE/SEI 7.
+func (b *Basis) Basic() bool { return b.Actions == basicStandard }
 
 // Override is a number of the standard that the calculation replaces.
 type Override struct {

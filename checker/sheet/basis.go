@@ -202,7 +202,7 @@ func (c *composer) cases(env *model.Env) {
 		v, ok := env.Basis.Combining.Values.Psi(x.Case)
 		for i := range v {
 			psi := output.Words("–")
-			if ok && x.Kind.Variable() && env.Basis.Actions != "" {
+			if ok && x.Kind.Variable() && env.Basis.Actions != "" && !env.Basis.Basic() {
 				psi = output.Words(unit.Exact(v[i]))
 			}
 			row = append(row, psi)

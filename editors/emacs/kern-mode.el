@@ -63,12 +63,12 @@
 ;; generated: particles
 (defconst kern-mode-particles
   '("ASD" "K_LL" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "area" "as" "at"
-    "because" "both" "braced" "by" "cases" "characteristic" "cold" "compression" "continuous"
+    "because" "both" "braced" "by" "cases" "characteristic" "cold" "compression" "continuous" "dead"
     "direct" "effective" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
     "independent" "leg" "lengths" "live" "long" "major" "minor" "negative" "nominal" "off" "offset"
     "on" "per" "permanent" "persistent" "pinned" "positive" "psi_0" "psi_1" "psi_2" "quasipermanent"
-    "recommended" "rolled" "secant" "seismic" "short" "simple" "slenderness" "snow" "space"
-    "storeys" "sway" "temperature" "theoretical" "to" "together" "top" "tributary" "twist"
+    "rain" "recommended" "rolled" "roof" "secant" "seismic" "short" "simple" "slenderness" "snow"
+    "space" "storeys" "sway" "temperature" "theoretical" "to" "together" "top" "tributary" "twist"
     "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles

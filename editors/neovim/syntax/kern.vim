@@ -8,7 +8,7 @@ syn spell toplevel
 syn match kernOperator /[-+*\/^=<>]/
 syn match kernDefinition /\v^\s*\zs[[:alpha:]_\u0370-\u03ff]\k*\ze\s*\=/
 " generated: words
-syn match kernParticle /\v<%(ASD|K_LL|LRFD|about|accidental|across|alone|and|annex|area|as|at|because|both|braced|by|cases|characteristic|cold|compression|continuous|direct|effective|eq|fixed|floor|free|frequent|from|guided|hot|imposed|independent|leg|lengths|live|long|major|minor|negative|nominal|off|offset|on|per|permanent|persistent|pinned|positive|psi_0|psi_1|psi_2|quasipermanent|recommended|rolled|secant|seismic|short|simple|slenderness|snow|space|storeys|sway|temperature|theoretical|to|together|top|tributary|twist|utilisation|welded|wind)>/
+syn match kernParticle /\v<%(ASD|K_LL|LRFD|about|accidental|across|alone|and|annex|area|as|at|because|both|braced|by|cases|characteristic|cold|compression|continuous|dead|direct|effective|eq|fixed|floor|free|frequent|from|guided|hot|imposed|independent|leg|lengths|live|long|major|minor|negative|nominal|off|offset|on|per|permanent|persistent|pinned|positive|psi_0|psi_1|psi_2|quasipermanent|rain|recommended|rolled|roof|secant|seismic|short|simple|slenderness|snow|space|storeys|sway|temperature|theoretical|to|together|top|tributary|twist|utilisation|welded|wind)>/
 syn match kernShape /\v<%(angle|bar|channel|given|isection|pipe|rod|tee|tube)>/
 syn match kernFunction /\v<%(abs|cos|max|min|sin|sqrt|tan)>\ze\s*\(/
 syn match kernConstant /\v<%(g|pi)>/
