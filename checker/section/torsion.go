@@ -31,11 +31,15 @@ const (
 //	          times TorsionElDarwishJohnston, or the latter; welded:
 //	          TorsionPlates
 //	Channel, Tee, Angle  rolled: TorsionElDarwishJohnston; welded: TorsionPlates
+//	DoubleAngle  twice that of one angle: the connectors are left out
 //
 // "Rolled" is what was made so, has a root fillet or has a taper. A rolled
 // shape with tw/tf above 1.5 is treated as welded.
 func (s Shape) torsionConstant(polar float64) float64 {
 	switch s.Kind {
+	case DoubleAngle:
+		one := s.oneAngle()
+		return 2 * one.torsionConstant(polar)
 	case Tube:
 		return min(s.torsionTube(), TorsionRectangle(s.Depth, s.Width), polar)
 	case Ellipse:
@@ -65,6 +69,12 @@ func (s Shape) torsionConstant(polar float64) float64 {
 	}
 	// The plates alone are a lower bound of the exact value.
 	return math.Max(formula, plates)
+}
+
+// oneAngle is one of the angles of a DoubleAngle.
+func (s Shape) oneAngle() Shape {
+	s.Kind, s.Gap = Angle, 0
+	return s
 }
 
 // torsionTube is the formula of EN 10210-2 and EN 10219-2 for hollow sections:
@@ -110,14 +120,19 @@ func (s Shape) TorsionPlates() float64 {
 	h, b, tw, tf, t := s.Depth, s.Width, s.Web, s.Flange, s.Wall
 	switch s.Kind {
 	case ISection:
+		if s.Taper > 0 {
+			tf = s.flangeAt(b / 2)
+		}
 		return 2*TorsionRectangle(b, tf) + TorsionRectangle(h-2*tf, tw)
 	case Channel:
-		tip := tf
 		if s.Taper > 0 {
-			tip = s.flangeAt(b)
+			tf = s.flangeAt(b)
 		}
-		return 2*TorsionRectangle(b, tip) + TorsionRectangle(h-2*tip, tw)
+		return 2*TorsionRectangle(b, tf) + TorsionRectangle(h-2*tf, tw)
 	case Tee:
+		if s.Taper > 0 {
+			tf = s.flangeAt(b / 2)
+		}
 		return TorsionRectangle(b, tf) + TorsionRectangle(h-tf, tw)
 	case Angle:
 		return TorsionRectangle(b, t) + TorsionRectangle(h-t, t)

@@ -120,7 +120,7 @@ func Overridden(basis *model.Basis, name string, standard float64) (float64, boo
 // alone; by common practice that little is left out.
 func Warping(s *model.Section) float64 {
 	switch s.Shape.Kind {
-	case section.Tee, section.Angle:
+	case section.Tee, section.Angle, section.DoubleAngle:
 		return 0
 	}
 	return s.Iw
