@@ -5,6 +5,7 @@ package standard
 import (
 	"math"
 
+	"kern/checker/catalogue"
 	"kern/checker/derivation"
 	"kern/checker/model"
 	"kern/checker/section"
@@ -133,6 +134,9 @@ func NoStrength(m *model.Member) string {
 		return "the material '" + m.Material.Title() + "' states no yield strength: fy = …"
 	case math.IsNaN(m.Section.Thickness):
 		return "the strength of " + m.Material.Title() + " follows the thickness, which the section does not state: thickness = …"
+	}
+	if _, ok := m.Material.Grade.For(m.Section.Shape); !ok {
+		return m.Material.Grade.Standard + " is not a standard of " + catalogue.FormOf(m.Section.Shape).String() + ": name another grade"
 	}
 	return "the yield strength of " + m.Material.Title() + " is not known for this thickness"
 }
