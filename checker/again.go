@@ -12,6 +12,7 @@ import (
 type work struct {
 	calculation *model.Calculation
 	jobs        []*job
+	problems    []lang.Diagnostic // of values that lean on results
 }
 
 // CheckAgain is Check for a project that grew out of an earlier one by an edit:
@@ -24,17 +25,25 @@ func CheckAgain(before *Report, project *lang.Project, progress Progress) *Repor
 		job *job
 	}
 	var todo []task
+	ran := map[*job]bool{}
 	for _, root := range project.Roots {
 		w := before.of(root).again(root, project.Closure(root))
 		r.calculations = append(r.calculations, w.calculation)
 		r.work = append(r.work, w)
 		for _, j := range w.jobs {
-			if !j.done {
+			if j.done {
+				continue
+			}
+			ran[j] = true
+			if j.linked = linked(w.calculation.Env, j.decl); !j.linked {
 				todo = append(todo, task{w.calculation.Env, j})
 			}
 		}
 	}
-	each(len(todo), progress, func(i int) { todo[i].job.run(todo[i].env) })
+	each(len(todo), progress, func(i int) { todo[i].job.run(todo[i].env, nil) })
+	for i := range r.work {
+		r.work[i].link(ran)
+	}
 	r.gather()
 	return r
 }
@@ -59,11 +68,11 @@ func (old *work) again(root string, files []*lang.File) work {
 	if old != nil {
 		var changed []model.Change
 		if c.Env, changed = old.calculation.Env.Again(old.calculation.Files, files); c.Env != nil {
-			return work{c, old.replace(c.Env, changed)}
+			return work{calculation: c, jobs: old.replace(c.Env, changed)}
 		}
 	}
 	c.Env = model.NewEnv(files, registry{})
-	w := work{c, make([]*job, 0, len(c.Env.MemberDecls()))}
+	w := work{calculation: c, jobs: make([]*job, 0, len(c.Env.MemberDecls()))}
 	done := map[*lang.Decl]*job{}
 	if old != nil && c.Env.Shares(old.calculation.Env) {
 		for _, j := range old.jobs {

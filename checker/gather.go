@@ -47,6 +47,9 @@ func (r *Report) gather() {
 		for _, d := range w.calculation.Env.Problems {
 			add(d)
 		}
+		for _, d := range w.problems {
+			add(d)
+		}
 		for _, d := range crops[i].problems {
 			add(d)
 		}

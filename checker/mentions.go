@@ -26,6 +26,9 @@ type mentions struct {
 
 // name tells of a name, if it has a meaning.
 func (w *mentions) name(text string, span lang.Span) {
+	if name, _, dot := strings.Cut(text, "."); dot { // A1.N_Ed speaks of A1
+		text, span.End = name, span.Start+int32(len(name))
+	}
 	n := w.c.Env.Names[text]
 	if n == nil {
 		return
@@ -189,7 +192,7 @@ func (w *mentions) statement(s *lang.Stmt) {
 		}
 	}
 	switch s.Word {
-	case "section", "material", "height", "length", "effective":
+	case "section", "material", "height", "length", "effective", "net", "reduction":
 		if assigned {
 			at(0)
 			w.properties(s)
@@ -197,6 +200,17 @@ func (w *mentions) statement(s *lang.Stmt) {
 	case "from": // from A to B
 		at(0)
 		at(2)
+	case "reduce": // reduce live by tributary area K_LL NUMBER
+		at(5)
+	case "joints": // joints RATIO at base, RATIO at top about AXIS
+		at(0)
+		at(4)
+	case "lift": // lift A to B { section = … }
+		at(0)
+		at(2)
+		for _, b := range block(s) {
+			w.statement(b)
+		}
 	case "hold": // hold minor at PLACE
 		at(2)
 	case "limit": // limit sway = VALUE

@@ -53,7 +53,7 @@ func Trial(c *model.Calculation, decl *lang.Decl, text string) []*Result {
 	}
 	var out []*Result
 	combinations := env.All()
-	for _, m := range model.Members(&env, d, departable) {
+	for _, m := range model.Members(&env, d, departable, env.Results()) {
 		if m.Name != "" {
 			out = append(out, evaluate(&env, m, combinations))
 		}
@@ -94,7 +94,7 @@ func (r *Result) Values() func(symbol string) (unit.Quantity, bool) {
 	if s == nil || len(r.Missing) > 0 {
 		return func(string) (unit.Quantity, bool) { return unit.Quantity{}, false }
 	}
-	out := s.Check(standard.NewFrame(r.env, r.Member, r.combinations), nil)
+	out := standard.Run(s, standard.NewFrame(r.env, r.Member, r.combinations), nil)
 	return func(symbol string) (unit.Quantity, bool) {
 		if symbol == "utilisation" {
 			u := r.greatest()

@@ -22,7 +22,10 @@ type File struct {
 	Starts []int32 // where each declaration begins in Text
 	// Flawed are the numbers of the declarations that have problems.
 	Flawed   []int32
-	includes []int32 // those that include a file
+	includes []int32 // those that name a file
+	// Data is set for a table of figures that a forces statement names: one
+	// declaration without statements.
+	Data bool
 	// Unreadable says why the text was not parsed at all ("" when it was): it is
 	// not text, or too big.
 	Unreadable string
@@ -47,6 +50,8 @@ type Syntax struct {
 	Stmts    []*Stmt
 	Problems []Problem // spans relative to Text, maxReport at most
 	found    int       // problems found, those beyond maxReport too
+	// Dotted is set when the text may hold a name with a dot in it: "A1.N_Ed".
+	Dotted bool
 }
 
 // Stmt is one statement: a word, what follows it on its line, and the block

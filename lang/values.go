@@ -19,6 +19,9 @@ type Value struct {
 	Decl *Decl
 	Stmt *Stmt
 	Expr *Expr
+	// Late is set for a value that leans on the result of a member: it is worked
+	// out after that member, by whoever knows the results.
+	Late bool
 
 	state    evalState
 	quantity unit.Quantity

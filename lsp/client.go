@@ -43,6 +43,7 @@ type Client struct {
 	Definition, DefinitionLinks         bool
 	TypeDefinition, TypeDefinitionLinks bool
 	References, Highlight               bool
+	LinkedEditing                       bool
 	Rename, PrepareRename               bool
 	RenameFiles                         bool // asks before it renames files
 	Symbols, SymbolTree                 bool // symbols of a document, as a tree

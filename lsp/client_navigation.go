@@ -17,6 +17,7 @@ func (c *Client) navigation(caps protocol.ClientCapabilities) {
 			c.TypeDefinition, c.TypeDefinitionLinks = true, is(d.LinkSupport)
 		}
 		c.References, c.Highlight = t.References != nil, t.DocumentHighlight != nil
+		c.LinkedEditing = t.LinkedEditingRange != nil
 		if r := t.Rename; r != nil {
 			c.Rename, c.PrepareRename = true, is(r.PrepareSupport)
 		}

@@ -16,7 +16,7 @@ import (
 // completionTriggers are the signs after which the editor asks by itself: a
 // quote and the sign of a value, a blank where few words can follow, a slash in
 // a path or a unit.
-var completionTriggers = []string{`"`, "=", " ", "/"}
+var completionTriggers = []string{`"`, "=", " ", "/", "."}
 
 var completionFeature = feature{
 	name:    "completion",

@@ -80,9 +80,9 @@ func valueDetail(env *model.Env, n *model.Named, show func(unit.Quantity) string
 	if !ok || n.Twice || v.Stmt != n.Stmt {
 		return ""
 	}
-	q, problem := env.Values.Get(v, nil) // worked out with the calculation
+	q, ok := env.Value(v)
 	switch {
-	case problem != nil:
+	case !ok:
 		return ""
 	case literal(v.Expr):
 		return v.Expr.Span.Of(v.Decl.Text)

@@ -23,6 +23,7 @@ var features = []feature{
 	typeDefinitionFeature,
 	referencesFeature,
 	highlightFeature,
+	linkedEditingFeature,
 	renameFeature,
 	renameFilesFeature,
 	symbolsFeature,

@@ -18,8 +18,12 @@ type fileSet struct {
 	version *int32
 }
 
-// shownSet is what the client was told last of a file.
-type shownSet []byte
+// shownSet is what the client was told last of a file, and whether it was open
+// then.
+type shownSet struct {
+	items []byte
+	open  bool
+}
 
 var noItems = []byte("[]")
 
@@ -109,7 +113,8 @@ func (s *Server) push(w *workspace, sets map[uri.URI]fileSet) {
 	defer s.pushing.Unlock()
 	touched := map[uri.URI]bool{}
 	for u, set := range sets {
-		if !bytes.Equal(set.items, w.sets[u].items) {
+		before := w.sets[u]
+		if !bytes.Equal(set.items, before.items) || (set.version != nil) != (before.version != nil) {
 			touched[u] = true
 		}
 	}
@@ -149,10 +154,12 @@ func (s *Server) send(touched map[uri.URI]bool) {
 		case empty && set.version == nil:
 			delete(s.shown, u) // nothing to say of a file that is not open
 		default:
-			s.shown[u] = set.items
+			s.shown[u] = shownSet{set.items, set.version != nil}
 		}
-		// that an open document is right is worth saying once
-		if told && bytes.Equal(before, set.items) || !told && empty && set.version == nil {
+		// That an open document is right is worth saying once; and some clients
+		// forget what they were told of a file before they opened it.
+		opened := set.version != nil && !before.open
+		if told && bytes.Equal(before.items, set.items) && !opened || !told && empty && set.version == nil {
 			continue
 		}
 		s.notify(protocol.MethodTextDocumentPublishDiagnostics, s.publication(u, set))

@@ -54,7 +54,10 @@ func TestRandom(t *testing.T) {
 	}
 	s.initialize(`{"general": {"positionEncodings": ["utf-`+[]string{"8", "16", "32"}[r.IntN(3)]+`"]}}`, "", ".")
 	requests := []string{"textDocument/hover", "textDocument/completion", "textDocument/inlayHint", "textDocument/diagnostic", "workspace/diagnostic", "textDocument/documentSymbol", "textDocument/codeAction",
-		"textDocument/semanticTokens/full", "textDocument/formatting", "textDocument/rename", "textDocument/references", "textDocument/definition", "no/such"}
+		"textDocument/semanticTokens/full", "textDocument/formatting", "textDocument/rename", "textDocument/references", "textDocument/definition", "no/such",
+		"textDocument/typeDefinition", "textDocument/documentHighlight", "textDocument/linkedEditingRange", "textDocument/prepareRename", "textDocument/foldingRange",
+		"textDocument/selectionRange", "textDocument/documentLink", "textDocument/codeLens", "textDocument/signatureHelp", "textDocument/rangeFormatting",
+		"textDocument/onTypeFormatting", "textDocument/semanticTokens/range", "textDocument/semanticTokens/full/delta", "textDocument/prepareCallHierarchy", "workspace/symbol"}
 	started, calls, checks := 0, make(chan struct{}, 64), 0
 	var early runtime.MemStats
 	var goroutines int
@@ -95,7 +98,7 @@ func TestRandom(t *testing.T) {
 			calls <- struct{}{}
 			method := requests[r.IntN(len(requests))]
 			position := slowPosition(text, int32(r.IntN(len(text)+1)), s.unit)
-			params := fmt.Sprintf(`{"textDocument":{"uri":%q},"position":{"line":%d,"character":%d},"range":{"start":{"line":0,"character":0},"end":{"line":9,"character":0}},"context":{"diagnostics":[],"includeDeclaration":true},"newName":"q","options":{"tabSize":4,"insertSpaces":true},"previousResultIds":[]}`, s.uri(name), position.Line, position.Character)
+			params := fmt.Sprintf(`{"textDocument":{"uri":%[1]q},"position":{"line":%[2]d,"character":%[3]d},"range":{"start":{"line":0,"character":0},"end":{"line":9,"character":0}},"context":{"diagnostics":[],"includeDeclaration":true},"newName":"q","query":"a","ch":"}","positions":[{"line":%[2]d,"character":%[3]d}],"previousResultId":"1","options":{"tabSize":4,"insertSpaces":true},"previousResultIds":[]}`, s.uri(name), position.Line, position.Character)
 			started++
 			go func() { // answered or refused: one answer in any case
 				s.ask(method, params)

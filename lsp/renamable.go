@@ -140,8 +140,16 @@ func alike(before, after []*lang.Stmt, name string) bool {
 	})
 }
 
+// sameResult tells whether two names with dots speak of the same result of a
+// member that was renamed.
+func sameResult(before, after, name string) bool {
+	_, what, was := strings.Cut(before, ".")
+	head, now, is := strings.Cut(after, ".")
+	return was && is && head == name && what == now
+}
+
 func alikeParts(before, after []*lang.Expr, name string) bool {
 	return slices.EqualFunc(before, after, func(a, b *lang.Expr) bool {
-		return a.Kind == b.Kind && a.Op == b.Op && a.Value == b.Value && (a.Text == b.Text || b.Text == name) && alikeParts(a.Args, b.Args, name)
+		return a.Kind == b.Kind && a.Op == b.Op && a.Value == b.Value && (a.Text == b.Text || b.Text == name || sameResult(a.Text, b.Text, name)) && alikeParts(a.Args, b.Args, name)
 	})
 }

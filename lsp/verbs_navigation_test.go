@@ -33,6 +33,14 @@ func init() {
 			}
 		}
 	}
+	verbs["linked"] = func(s *scene, args []string) {
+		var linked *protocol.LinkedEditingRanges
+		if s.answer("textDocument/linkedEditingRange", s.at(args[0], nil), &linked) && linked != nil {
+			for _, r := range linked.Ranges {
+				s.print("%s\n", s.marked(s.uri(s.mark(args[0]).file), r))
+			}
+		}
+	}
 	verbs["prepare"] = func(s *scene, args []string) {
 		var p protocol.PrepareRenamePlaceholder
 		if s.answer("textDocument/prepareRename", s.at(args[0], nil), &p) {

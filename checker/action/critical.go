@@ -11,18 +11,40 @@ func sqrt(x float64) float64 { return math.Sqrt(x) }
 // (ascending, strictly inside): multiply by E I. Zero when the column is a
 // mechanism.
 func CriticalUniform(base, top End, holds []float64, height float64) float64 {
-	bar := Bar{Base: base, Top: top}
-	bar.Nodes = append(append([]float64{0}, holds...), height)
-	for i := range bar.Nodes {
-		inner := i > 0 && i < len(bar.Nodes)-1
-		bar.Held = append(bar.Held, inner)
-	}
-	n := len(bar.Nodes) - 1
-	bar.Force, bar.Stiffness = make([]float64, n), make([]float64, n)
-	for i := range bar.Force {
-		bar.Force[i], bar.Stiffness[i] = 1, 1
+	return CriticalStepped(base, top, holds, []Step{{To: height, Stiffness: 1}})
+}
+
+// CriticalStepped is the elastic critical axial force, N, of a column of several
+// stiffnesses under a force that does not change with height, on rigid holds
+// (ascending, strictly inside). Zero when the column is a mechanism or a step has
+// no positive height and stiffness.
+func CriticalStepped(base, top End, holds []float64, steps []Step) float64 {
+	bar := Bar{Base: base, Top: top, Nodes: []float64{0}, Held: []bool{false}}
+	from := 0.0
+	for i, s := range steps {
+		inner := holds
+		for len(inner) > 0 && inner[0] <= from*(1+1e-9) {
+			inner = inner[1:]
+		}
+		for _, h := range inner {
+			if h < s.To*(1-1e-9) {
+				bar.node(h, true, s.Stiffness)
+			}
+		}
+		held := false
+		for _, h := range holds {
+			held = held || math.Abs(h-s.To) <= 1e-9*s.To
+		}
+		bar.node(s.To, held && i < len(steps)-1, s.Stiffness)
+		from = s.To
 	}
 	return bar.Critical()
+}
+
+// node adds a part under a force of 1 N, up to a height.
+func (b *Bar) node(z float64, held bool, stiffness float64) {
+	b.Nodes, b.Held = append(b.Nodes, z), append(b.Held, held)
+	b.Force, b.Stiffness = append(b.Force, 1), append(b.Stiffness, stiffness)
 }
 
 // Bar is a straight column cut at its nodes, with an axial force and a bending
@@ -132,11 +154,19 @@ func (b *Bar) stands() bool {
 
 // stable tells whether the bar's stiffness matrix is positive definite under
 // the reference forces times factor: a factorisation without a pivot at or
-// below zero. The matrix has a half band of three besides the diagonal.
+// below zero.
 func (b *Bar) stable(factor float64) bool {
+	k, _ := b.matrix(factor)
+	return factorise(k)
+}
+
+// matrix is the stiffness matrix under the reference forces times factor, with
+// the movements that a support prevents. It has a half band of three besides the
+// diagonal: k[i][d] is the entry (i, i+d).
+func (b *Bar) matrix(factor float64) (k [][4]float64, fixed []bool) {
 	nodes := len(b.Nodes)
 	size := 2 * nodes
-	k := make([][4]float64, size) // k[i][d] is the entry (i, i+d)
+	k = make([][4]float64, size)
 	for i := range b.Force {
 		l := b.Nodes[i+1] - b.Nodes[i]
 		s, c, t := stability(factor * b.Force[i] * l * l / b.Stiffness[i])
@@ -162,7 +192,7 @@ func (b *Bar) stable(factor float64) bool {
 			k[2*i+1][0] += b.Turning[i]
 		}
 	}
-	fixed := make([]bool, size)
+	fixed = make([]bool, size)
 	for i := range nodes {
 		fixed[2*i] = b.holds(i)
 	}
@@ -178,6 +208,13 @@ func (b *Bar) stable(factor float64) bool {
 			k[i][0] = 1
 		}
 	}
+	return k, fixed
+}
+
+// factorise brings a banded symmetric matrix to triangular form in place; false
+// where a pivot is not positive.
+func factorise(k [][4]float64) bool {
+	size := len(k)
 	for i := range size {
 		p := k[i][0]
 		if !(p > 0) {

@@ -44,6 +44,7 @@ func (env *Env) Again(before, files []*lang.File) (*Env, []Change) {
 		return nil, nil
 	}
 	next := *env
+	next.Linked = env.Linked || slices.ContainsFunc(changed, func(c Change) bool { return c.Now.Dotted })
 	next.Names = maps.Clone(env.Names)
 	next.members = slices.Clone(env.members)
 	for _, c := range changed {

@@ -52,7 +52,7 @@ func (b *builder) actionsAnnex(r *reader) bool {
 	if !ok {
 		p := lang.Problem{Rule: "unknown-annex", Span: e.Span, Message: fmt.Sprintf("the annex '%s' to %s is not known; known is %s. Other national values are given one by one: "+
 			"gamma_G_sup = 1.2 because \"…\", and for a case psi_0 0.6, psi_1 0.2 because \"…\"", annex, actionsStandard, lang.OrList(action.Annexes()))}
-		for _, n := range closest(annex, action.Annexes(), 1) {
+		for _, n := range Closest(annex, action.Annexes(), 1) {
 			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.Span, `"`+n+`"`))
 		}
 		r.problem(p)

@@ -96,7 +96,7 @@ func (w *memberReader) depart(r *reader) {
 	}
 	if !contains(w.known, rule) {
 		p := lang.Problem{Rule: "unknown-rule", Span: span, Message: "'" + clip(rule) + "' is no check that a member can depart from"}
-		near := closest(rule, w.known, 2)
+		near := Closest(rule, w.known, 2)
 		if len(near) > 0 {
 			p.Message += "; did you mean " + lang.OrList(near) + "?"
 		}

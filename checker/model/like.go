@@ -11,7 +11,13 @@ import (
 // says so: the line is right where it stands. It is false when the line's own
 // member has the same problem and reports it.
 func (w *memberReader) takenOver(d lang.Diagnostic) (lang.Diagnostic, bool) {
-	if !w.ownHeight || d.Rule != "level-without-levels" && d.Rule != "outside-the-member" {
+	switch d.Rule {
+	case "level-without-levels", "outside-the-member":
+		if !w.ownHeight {
+			return d, false
+		}
+	case "defined-by-itself": // a line about another member's result, which is this member's own
+	default:
 		return d, false
 	}
 	p := lang.Problem{Rule: d.Rule, Span: w.asSpan, Message: "a line that is taken over does not fit: " + d.Message,

@@ -2,6 +2,7 @@ package model
 
 import (
 	"math"
+	"strings"
 
 	"kern/lang"
 	"kern/lang/unit"
@@ -16,8 +17,24 @@ func (env *Env) Quantity(name string) (unit.Quantity, bool) {
 // Eval computes an expression as it stands outside of members, in coherent SI
 // units. It is false when it has no value.
 func (env *Env) Eval(e *lang.Expr) (unit.Quantity, bool) {
-	q, p := lang.Eval(e, env.lookup)
+	q, p := lang.Eval(e, env.settledLookup)
 	return q, p == nil
+}
+
+// settledLookup finds names when members are worked out already: their results
+// too.
+func (env *Env) settledLookup(e *lang.Expr) (unit.Quantity, *lang.Problem) {
+	if strings.Contains(e.Text, ".") {
+		q, p, _ := env.Result(e, env.results)
+		return q, p
+	}
+	if v, ok := env.Values.Lookup(e.Text); ok && v.Late {
+		if q, ok := env.Value(v); ok {
+			return q, nil
+		}
+		return unit.Quantity{}, lang.Silent
+	}
+	return env.lookup(e)
 }
 
 // EvalIn computes an expression as it stands in a member's block: height and
@@ -30,7 +47,7 @@ func (env *Env) EvalIn(m *Member, e *lang.Expr) (unit.Quantity, bool) {
 			}
 			return unit.Quantity{Value: m.Height, Dim: unit.Length}, nil
 		}
-		return env.lookup(n)
+		return env.settledLookup(n)
 	})
 	return q, p == nil
 }

@@ -2,39 +2,39 @@ package model
 
 import (
 	"math"
+	"strings"
 
 	"kern/lang"
 	"kern/lang/unit"
 )
 
 // memberWords are the words that may begin a statement in a member's block.
-var memberWords = []string{"section", "material", "height", "length", "from", "base", "top", "hold", "effective", "load", "limit",
-	"require", "depart", "note", "selfweight"}
+var memberWords = lang.WordsIn(lang.InMember)
 
 // DepartureRules are the rules that a member may depart from; the checker fills
 // in the rules of its standards.
 type DepartureRules []string
 
 // Members reads the members that a declaration describes. The result depends on
-// the Env, the declaration and the declarations it leans on with "as", and on
-// nothing else.
-func Members(env *Env, d *lang.Decl, known DepartureRules) []*Member {
+// the Env, the declaration and the declarations it leans on with "as", and
+// on the results of the members that it names.
+func Members(env *Env, d *lang.Decl, known DepartureRules, results Results) []*Member {
 	var out []*Member
 	for _, s := range d.Stmts {
 		switch s.Word {
 		case "column", "strut", "tie":
 			if _, assigned := s.Assigned(); !assigned {
-				out = append(out, readMembers(env, d, s, known)...)
+				out = append(out, readMembers(env, d, s, known, results)...)
 			}
 		}
 	}
 	return out
 }
 
-func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules) []*Member {
+func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, results Results) []*Member {
 	m := &Member{Decl: d, Stmt: s, NameSpan: s.Head, Kind: map[string]Kind{"column": Column, "strut": Strut, "tie": Tie}[s.Word],
-		Height: unknown, Weight: env.Basis.SelfWeight}
-	w := &memberReader{env: env, m: m, known: known}
+		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight, Nominal: env.Basis.Nominal, Reduction: env.Basis.Reduction}
+	w := &memberReader{env: env, m: m, known: known, results: results}
 	r := w.reader(d, s)
 	names := memberNames(s)
 	if len(names) == 0 {
@@ -84,6 +84,9 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules) []*
 		if i > 0 {
 			c.Problems = nil // said once
 		}
+		if in := env.imported[e.Text]; in != nil {
+			c.imports(in)
+		}
 		out = append(out, &c)
 	}
 	if len(out) == 0 && len(m.Problems) > 0 {
@@ -102,6 +105,7 @@ type memberReader struct {
 	env       *Env
 	m         *Member
 	known     DepartureRules
+	results   Results
 	first     map[string]declared // the first statement of each word that may stand once
 	said      map[string]bool     // the words of all statements, with an error or not
 	chain     []*lang.Stmt        // the members that it is "as", nearest first
@@ -137,16 +141,36 @@ func (w *memberReader) lookup(e *lang.Expr) (unit.Quantity, *lang.Problem) {
 			return unit.Quantity{Value: w.m.Height, Dim: unit.Length}, nil
 		}
 	}
+	if strings.Contains(e.Text, ".") {
+		q, p, n := w.env.Result(e, w.results)
+		if n != nil {
+			w.m.Uses = append(w.m.Uses, n)
+		}
+		if p == lang.Silent {
+			w.m.Missing = append(w.m.Missing, "'"+clip(e.Text)+"' is not known")
+		}
+		return q, p
+	}
 	if n, ok := w.env.Names[e.Text]; ok {
 		w.m.Uses = append(w.m.Uses, n)
+	}
+	if v, ok := w.env.Values.Lookup(e.Text); ok && v.Late && w.results != nil {
+		q, p := w.env.lateOf(e, v, w.results)
+		if p == lang.Silent {
+			w.m.Missing = append(w.m.Missing, "'"+clip(e.Text)+"' is not known")
+		}
+		return q, p
 	}
 	return w.env.lookup(e)
 }
 
 // sameWord groups words that say the same thing in two ways.
 func sameWord(word string) string {
-	if word == "from" || word == "length" {
+	switch word {
+	case "from", "length":
 		return "height"
+	case "reduction":
+		return "reduce"
 	}
 	return word
 }
@@ -183,10 +207,14 @@ func (w *memberReader) statement(d declared) {
 		r.args = value
 	}
 	switch s.Word {
-	case "load", "hold", "require", "depart", "note", "limit", "effective", "base", "top":
+	case "load", "hold", "lift", "require", "depart", "note", "limit", "effective", "joints", "base", "top":
 	default:
 		key := sameWord(s.Word)
-		if first, again := w.first[key]; again {
+		if first, again := w.first[key]; again && key == "reduce" {
+			r.reducedTwice(first)
+			w.m.Missing = append(w.m.Missing, "how its imposed loads are reduced is said twice")
+			return
+		} else if again {
 			r.problem(lang.Problem{Rule: "value-given-twice", Span: s.Line, Message: "'" + s.Word + "' is given twice",
 				Related: []lang.Related{{Place: lang.Place{Decl: first.decl, Span: first.stmt.Line}, Message: "given here first"}}})
 			w.m.Missing = append(w.m.Missing, "'"+s.Word+"' is given twice")
@@ -194,7 +222,7 @@ func (w *memberReader) statement(d declared) {
 		}
 		w.first[key] = d
 	}
-	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true}
+	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true, "net": true, "reduction": true}
 	if needsSign[s.Word] != assigned {
 		if needsSign[s.Word] {
 			noSign(r)
@@ -208,9 +236,11 @@ func (w *memberReader) statement(d declared) {
 	}
 	switch s.Word {
 	case "section":
-		w.section(r, d)
+		w.m.Section, w.m.SectionAt = w.section(r, d)
 	case "material":
-		w.material(r)
+		w.m.Material, w.m.MaterialAt = w.material(r)
+	case "lift":
+		w.lift(r, d)
 	case "height", "length":
 		w.m.Height, _, _ = w.height(r)
 		w.m.HeightAt = r.place(s.Line)
@@ -222,18 +252,31 @@ func (w *memberReader) statement(d declared) {
 		w.hold(r)
 	case "effective":
 		w.effective(r)
+	case "joints":
+		w.joints(r)
+	case "connected":
+		w.connected(r)
 	case "load":
 		w.load(r)
 	case "limit":
 		w.limit(r)
 	case "require":
 		w.require(r)
+	case "net":
+		w.m.Net, _, _ = r.quantity(want{what: "the net area", dim: unit.Area, unit: "cm2", max: 10})
+		w.m.NetAt = r.place(s.Line)
 	case "depart":
 		w.depart(r)
 	case "note":
 		if text, ok := r.text("the note"); ok {
 			w.m.Notes = append(w.m.Notes, text)
 		}
+	case "moments":
+		w.m.Nominal = r.moments()
+	case "reduce":
+		w.m.Reduction, _ = r.reduce()
+	case "reduction":
+		w.m.Reduction, _ = r.reduction()
 	case "selfweight":
 		word, _ := r.wordOf("the setting of self-weight", "on", "off")
 		w.m.Weight = word != "off"
@@ -243,7 +286,7 @@ func (w *memberReader) statement(d declared) {
 	default:
 		w.unknown(r)
 	}
-	if s.Body != nil && s.Word != "section" && !r.failed {
+	if s.Body != nil && s.Word != "section" && s.Word != "lift" && !r.failed {
 		r.fail("left-over", s.Body.Span, "'%s' takes no block", s.Word)
 	}
 	r.end()

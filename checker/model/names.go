@@ -43,7 +43,7 @@ func (env *Env) unknownName(e *lang.Expr, what string, kinds []NameKind, more ..
 	for _, k := range kinds {
 		names = append(names, env.offer[k]...)
 	}
-	near := closest(e.Text, names, 3)
+	near := Closest(e.Text, names, 3)
 	if len(near) > 0 {
 		p.Message += "; did you mean " + lang.OrList(near) + "?"
 	}

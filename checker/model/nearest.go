@@ -7,16 +7,16 @@ import (
 	"github.com/agnivade/levenshtein"
 )
 
-// closest gives up to n of the names that a person may have meant, the likeliest
+// Closest gives up to n of the names that a person may have meant, the likeliest
 // first: those that the text begins, as it may be half typed, then those that
 // differ from it by a slip. A name that shares less than two thirds of its
 // letters is not offered.
-func closest(text string, names []string, n int) []string {
+func Closest(text string, names []string, n int) []string {
 	near, _ := nearest(text, names, n)
 	return near
 }
 
-// nearest is closest, and tells whether the first name is the only one that can
+// nearest is Closest, and tells whether the first name is the only one that can
 // have been meant: one letter away (two in a long word) where the next name is
 // farther, and not half typed.
 func nearest(text string, names []string, n int) (near []string, sure bool) {
@@ -54,6 +54,9 @@ func nearest(text string, names []string, n int) (near []string, sure bool) {
 		case a.distance != b.distance:
 			return a.distance < b.distance
 		}
+		if p, q := common(lower, a.name), common(lower, b.name); p != q {
+			return p > q
+		}
 		return a.name < b.name
 	})
 	if len(found) > 0 {
@@ -65,6 +68,15 @@ func nearest(text string, names []string, n int) (near []string, sure bool) {
 		near = append(near, found[i].name)
 	}
 	return near, sure
+}
+
+// common is how many letters two words begin with together.
+func common(a, b string) int {
+	n := 0
+	for n < len(a) && n < len(b) && a[n] == b[n] {
+		n++
+	}
+	return n
 }
 
 // distance is the number of letters to change, leave out or put in; two

@@ -2,6 +2,7 @@ package model
 
 import (
 	"fmt"
+	"strings"
 
 	"kern/lang"
 	"kern/lang/unit"
@@ -12,7 +13,7 @@ func (b *builder) value(d declared, value []*lang.Expr) {
 	if contains(topWords, s.Word) {
 		if !s.Broken {
 			p := lang.Problem{Rule: "wrong-form", Span: s.Head, Message: "a declared " + s.Word + " has a name: " + s.Word + " NAME = …"}
-			if s.Word == "include" || s.Word == "basis" {
+			if s.Word == "include" || s.Word == "basis" || s.Word == "forces" || s.Word == "project" {
 				p.Message = "'" + s.Word + "' takes no sign ="
 			}
 			if contains(memberWords, s.Word) {
@@ -61,7 +62,15 @@ func (env *Env) lookup(e *lang.Expr) (unit.Quantity, *lang.Problem) {
 	if n := env.Names[e.Text]; n != nil && n.Twice {
 		return unit.Quantity{}, lang.Silent
 	}
+	if strings.Contains(e.Text, ".") {
+		q, p, _ := env.Result(e, nil)
+		return q, p
+	}
 	if d, ok := env.Values.Lookup(e.Text); ok {
+		if d.Late {
+			return unit.Quantity{}, &lang.Problem{Rule: "wrong-kind", Span: e.Span, Message: "'" + clip(e.Text) + "' leans on the result of a member and cannot be used here: members lean on what stands here",
+				Related: []lang.Related{{Place: lang.Place{Decl: d.Decl, Span: d.Stmt.Head}, Message: "given here"}}}
+		}
 		q, p := env.Values.Get(d, env.lookup)
 		if p != nil {
 			return q, lang.Silent
@@ -92,7 +101,7 @@ func (b *builder) values() {
 		for _, d := range f.Decls {
 			for _, s := range d.Stmts {
 				v, ok := b.env.Values.Lookup(s.Word)
-				if !ok || v.Stmt != s || v.Decl != d {
+				if !ok || v.Stmt != s || v.Decl != d || v.Late {
 					continue
 				}
 				if _, p := b.env.Values.Get(v, b.env.lookup); p != nil && p.Rule != "" {

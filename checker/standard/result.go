@@ -16,7 +16,11 @@ import (
 type Standard interface {
 	// Name is the name that a basis states.
 	Name() string
-	// Annexes are the sets of national values; the first is the default.
+	// Methods are the methods of which a basis must state one ("LRFD"); nil when
+	// there is one alone.
+	Methods() []string
+	// Annexes are the sets of national values, the first is the default; nil when
+	// there are none.
 	Annexes() []string
 	// Overrides are the numbers that a basis may replace, with whether it must
 	// say why.
@@ -58,6 +62,7 @@ type Check struct {
 	Verdict     Verdict
 	Why         string // of an undecided check, or what a failing one is about
 	Departed    bool   // the member departs from this rule
+	Lift        string // the lift that it is about, "" for a member of one section
 }
 
 // State says whether a check that the standard asks for was made.
@@ -88,6 +93,9 @@ type Outcome struct {
 	// Value gives the result of a symbol for requirements; false when the
 	// calculation did not come to it.
 	Value func(symbol string) (unit.Quantity, bool)
+	// Lifts are the outcomes of the lifts that a requirement must hold in, under
+	// the combination that compresses each most; none for a member of one section.
+	Lifts []LiftOutcome
 }
 
 // Known gives a value that must be finite and positive, NaN for any other: what

@@ -80,12 +80,16 @@ func (c *caret) surroundings(outer []*lang.Stmt) {
 	}
 	c.parent = outer[len(outer)-1]
 	switch c.parent.Word {
+	case "project":
+		c.in = lang.InProject
 	case "basis":
 		c.in = lang.InBasis
 	case "level":
 		c.in = lang.InLevel
 	case "column", "strut", "tie":
 		c.in = lang.InMember
+	case "lift":
+		c.in = lang.InLift
 	case "material":
 		c.in = lang.InMaterial
 	case "section":
@@ -126,6 +130,9 @@ func (c *caret) read(from int32) bool {
 		switch t.Kind {
 		case lang.Name, lang.Unit, lang.Bad:
 			c.word.Start, c.whole = t.Start, t.Span()
+			if dot := t.Kind == lang.Bad && c.text[t.Start:t.End] == "."; dot && i > 0 && tokens[i-1].Kind == lang.Name && tokens[i-1].End == t.Start {
+				c.word.Start, c.whole.Start = tokens[i-1].Start, tokens[i-1].Start // A1. on its way to A1.N_Ed
+			}
 		case lang.String:
 			if c.offset == t.End && t.Flaw != lang.OpenString {
 				break

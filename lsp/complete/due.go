@@ -92,8 +92,7 @@ func (s *scope) named(name string) (unit.Quantity, bool) {
 	switch n.Kind {
 	case model.ValueName:
 		if v, ok := s.env.Values.Lookup(name); ok {
-			q, p := s.env.Values.Get(v, nil)
-			return q, p == nil
+			return s.env.Value(v)
 		}
 	case model.LevelName:
 		if n.Index >= 0 && !s.env.Levels[n.Index].Bad {

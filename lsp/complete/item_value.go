@@ -32,9 +32,9 @@ func (s *scope) valuesFor(d duty) (list []Item, more bool) {
 		switch {
 		case d.lead == "as":
 			return s.members()
-		case s.in == lang.InMember && s.head == "section":
+		case (s.in == lang.InMember || s.in == lang.InLift) && s.head == "section":
 			return s.sections(), false
-		case s.in == lang.InMember && s.head == "material":
+		case (s.in == lang.InMember || s.in == lang.InLift) && s.head == "material":
 			return s.materials(), false
 		}
 		return nil, false // a new name
@@ -108,6 +108,16 @@ func fitting(dims []unit.Dim, dim unit.Dim) bool { return dims == nil || slices.
 // of which a product could be made, once a letter has been typed.
 func (s *scope) operands(dims []unit.Dim) []Item {
 	var out []Item
+	if name, _, dot := strings.Cut(s.typed(), "."); dot {
+		return s.resultsOfMember(name, dims)
+	}
+	if s.takesResults() && s.typed() != "" {
+		list, _ := s.members()
+		for _, x := range list {
+			x.Detail, x.Text, x.Group, x.Eager = "a result of "+x.Detail, x.Label+".", 8, false
+			out = append(out, x)
+		}
+	}
 	var names []string
 	for name, n := range s.env.Names {
 		if n.Kind == model.ValueName && name != s.head {

@@ -70,6 +70,16 @@ func TestRecall(t *testing.T) {
 				if fresh(text, tokens, i) {
 					continue
 				}
+				if dot := strings.IndexByte(word, '.'); dot >= 0 && tok.Kind == lang.Name {
+					// the result of a member is offered behind the dot
+					cut := text[:start] + word[:dot+1] + text[tok.End:]
+					asked++
+					if l := At(edited(whole, files, name, cut), name, start+int32(dot)+1, ByUser); !has(l, word, false) {
+						missed++
+						t.Errorf("%s: %s lacks %q; has %.120s", name, word[:dot+1], word, labels(l))
+					}
+					continue
+				}
 				word = strings.ReplaceAll(word, "²", "2")
 				for _, typed := range []int{0, 1} {
 					if typed > len(word) || typed == 0 && word == "basis" {
@@ -166,6 +176,8 @@ func fresh(text string, tokens []lang.Token, i int) bool {
 		return len(before) == 1
 	case "note":
 		return true
+	case "name", "number", "prepared", "checked", "revision", "date":
+		return tok.Kind == lang.String
 	}
 	return false
 }

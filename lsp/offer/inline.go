@@ -18,6 +18,11 @@ func (l *list) inline(s site) {
 	if !ok || !l.plain(m.Calculation, v) {
 		return
 	}
+	for _, other := range l.Report.References(m.Named) { // a slip: a dot stands behind members alone
+		if at := other.Place; strings.HasPrefix(at.Decl.Text[at.Span.End:], ".") {
+			return
+		}
+	}
 	if !m.Declares {
 		if text, ok := l.written(v, m.Place); ok {
 			l.add(Offer{Kind: Inline, Title: "Write " + short(text) + " for " + v.Name + " here", edits: func() []checker.Edit {
@@ -43,7 +48,7 @@ func short(text string) string {
 // stand: it can be read, has no comment in it, and names no level, as a place
 // that names one counts from datum and no longer from the member's base.
 func (l *list) plain(c *model.Calculation, v *lang.Value) bool {
-	if q, p := c.Env.Values.Get(v, nil); p != nil || q.Value != q.Value {
+	if q, ok := c.Env.Value(v); !ok || q.Value != q.Value || v.Late {
 		return false
 	}
 	file, span := l.Report.Where(lang.Place{Decl: v.Decl, Span: v.Stmt.Line})

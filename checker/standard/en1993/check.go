@@ -109,6 +109,9 @@ func (c *calc) run() {
 	c.tension()
 	c.flexural(0, c.major)
 	c.flexural(1, c.minor)
+	if c.f.Member.Leg.Stated() {
+		c.cover("flexural-buckling-minor", standard.NotCovered, standard.ByLeg+" (EN 1993-1-1 BB.1.2)")
+	}
 	c.torsional()
 	c.bending()
 	c.slenderness()
@@ -259,11 +262,12 @@ func (c *calc) netSection(n float64) {
 	const rule, clause = "net-section", "EN 1993-1-1 6.2.3(2)b"
 	m, basis := c.f.Member, &c.f.Env.Basis
 	ratio, stated := basis.Overrides["net_ratio"]
-	if !stated {
-		c.cover(rule, standard.NotCovered, "there is tension: check the net section at holes by hand (6.2.3(2)b), or state net_ratio in the basis")
+	own := !math.IsNaN(m.Net)
+	if !stated && !own {
+		c.cover(rule, standard.NotCovered, "there is tension: check the net section at holes by hand (6.2.3(2)b), or state the net area: net = …")
 		return
 	}
-	if !(ratio.Value <= 1) {
+	if !own && !(ratio.Value <= 1) {
 		c.undecided(rule, clause, "net_ratio is more than 1: holes leave no more than the whole area")
 		return
 	}
@@ -280,8 +284,12 @@ func (c *calc) netSection(n float64) {
 	}
 	c.take(symFu, standard.Known(fu), source)
 	c.take(symGM2, gamma, "6.1(1) note 2B, "+from)
-	c.take(symNet, ratio.Value, "basis, because \""+ratio.Because+"\"")
-	c.do(doAnet)
+	if own {
+		c.take(symAnet, standard.Known(m.Net), "given, 6.2.2.2")
+	} else {
+		c.take(symNet, ratio.Value, "basis, because \""+ratio.Because+"\"")
+		c.do(doAnet)
+	}
 	c.do(doNu)
 	c.take(symNtEd, n, c.f.Combinations[c.pulled].Name)
 	u := c.do(doUu)
