@@ -253,7 +253,7 @@ func TestAllIsSortedAndOwn(t *testing.T) {
 }
 
 func FuzzFind(f *testing.F) {
-	for _, s := range []string{"HEB 200", "SHS 100x100x5.5 cold", "CFRHS 100x200x8", "CHS 114,3×5", "EN 10219-2", "\xff\xfe", "HE 200 B", "xxx", "....", "1-1-1", "SHS 0x0x0"} {
+	for _, s := range []string{"W14x90", "HSS8x8x.500 A1085", "HSS6.625x0.280", "Pipe 1-1/2 STD", "L3½x3½x¼", "2L4x3x3/8x3/8 LLBB", "A572 Gr 50", "HEB 200", "SHS 100x100x5.5 cold", "CFRHS 100x200x8", "CHS 114,3×5", "EN 10219-2", "\xff\xfe", "HE 200 B", "xxx", "....", "1-1-1", "SHS 0x0x0"} {
 		f.Add(s)
 	}
 	f.Fuzz(func(t *testing.T, text string) {
