@@ -277,7 +277,7 @@ func suitsAmerican(standard string, x *model.Section) int {
 // section is made of. A grade that several product standards have stands once,
 // as the one that it means without saying which.
 func (s *scope) grades() []Item {
-	x := s.ownSection()
+	x, home := s.ownSection(), s.american()
 	var out []Item
 	seen := map[string]bool{}
 	for _, g := range catalogue.Grades() {
@@ -291,6 +291,9 @@ func (s *scope) grades() []Item {
 			g, item.Text = own, `"`+g.Name+`" per "EN 10219-1"`
 		}
 		fit := suits(g.Standard, x)
+		if x == nil && home { // no section to go by
+			fit = map[bool]int{true: 0, false: 3}[g.American()]
+		}
 		item.Detail, item.Group, item.Eager = s.gradeWords(&g, x), 1+fit, fit < 3
 		out = append(out, item)
 	}
