@@ -267,15 +267,26 @@ func americanHollow() []Entry {
 		}
 		for i, weight := range pipeWeights {
 			if wall := d[1+i]; wall > 0 {
+				part := coldWall
+				if weight == "XS" && d[0] >= largePipe {
+					part = largePipeWall
+				}
 				pipes = append(pipes, Entry{
 					Designation: "Pipe " + name + " " + weight, Family: "PIPE", Standard: astmPipe, Product: SteelPipe, Listed: true, Torsion: torsionExact,
-					Shape: section.Shape{Kind: section.Pipe, Made: section.Cold, Diameter: d[0] * inch, Wall: coldWall * wall * inch},
+					Shape: section.Shape{Kind: section.Pipe, Made: section.Cold, Diameter: d[0] * inch, Wall: part * wall * inch},
 				})
 			}
 		}
 	}
 	return append(out, bySize(pipes)...)
 }
+
+// What AISC's list prints of the pipes XS from 14 in. up belongs to 0.90 of the
+// nominal wall, though it states 0.93 as the standard does: the lower one is taken.
+const (
+	largePipe     = 14 // in
+	largePipeWall = 0.90
+)
 
 // pipeWeights are the weights of a pipe: standard, extra strong and double
 // extra strong.

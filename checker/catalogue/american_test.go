@@ -161,3 +161,12 @@ func TestPairsAreSymmetric(t *testing.T) {
 		}
 	}
 }
+
+// AISC's list prints the pipes XS from 14 in. up for 0.90 of the nominal wall.
+func TestLargePipes(t *testing.T) {
+	for text, want := range map[string]float64{"Pipe 14 XS": 0.45, "Pipe 26 XS": 0.45, "Pipe 12 XS": 0.465, "Pipe 26 STD": 0.34875} {
+		if e, ok := Find(text); !ok || math.Abs(e.Shape.Wall/inch-want) > 1e-12 {
+			t.Errorf("%s: wall %.5f in, want %g", text, e.Shape.Wall/inch, want)
+		}
+	}
+}

@@ -49,7 +49,7 @@ const (
 	whyAngleJ = "the printed constant belongs to other radii than the printed area"
 	whyPlate  = "printed for legs without toes"
 	whyWeight = "the printed mass is not that of the printed area"
-	whyPipe   = "printed for another wall than the 0.93 of the nominal that the line states: A of 10 STD, and of the sizes from 12 XS and 18 STD on with I, S, Z and J"
+	whyPipe   = "printed for another wall than the 0.93 of the nominal that the line states: too much for 10 and 12 XXS, A of 10 STD and of a few small ones; too little for A of 12 XS. Of XS from 14 in. up, printed for 0.90 of the wall, so much is taken here"
 )
 
 // comparisons lists the tables. What is known to leave the tolerance has the
