@@ -120,6 +120,7 @@ var Forms = []Form{
 	{"wall", InSection, []string{`wall = LENGTH`}, "Thickness of a tube's, pipe's or angle's wall.", "wall = ${1:6.3 mm}"},
 	{"outside", InSection, []string{`outside = LENGTH`}, "Outside diameter of a pipe.", "outside = ${1:168.3 mm}"},
 	{"diameter", InSection, []string{`diameter = LENGTH`}, "Diameter of a rod.", "diameter = ${1:50 mm}"},
+	{"gap", InSection, []string{`gap = LENGTH`}, "Clear distance between the backs of a double angle; 0 when they touch.", "gap = ${1:10 mm}"},
 	{"root", InSection, []string{`root = LENGTH`}, "Radius of the fillet between web and flange, or legs.", "root = ${1:12 mm}"},
 	{"toe", InSection, []string{`toe = LENGTH`}, "Radius at the free edges.", "toe = ${1:6 mm}"},
 	{"corner", InSection, []string{`corner = LENGTH`}, "Outside radius of a tube's corners.", "corner = ${1:12 mm}"},
@@ -169,7 +170,7 @@ func WordsIn(in Context) []string {
 // statements.
 var Words = map[string]string{
 	"tube": "square or rectangular hollow section", "pipe": "circular hollow section", "bar": "solid rectangle", "rod": "solid round",
-	"isection": "I or H section", "channel": "U section", "tee": "T section", "angle": "L section", "given": "a section whose properties are stated",
+	"isection": "I or H section", "channel": "U section", "tee": "T section", "angle": "L section", "doubleangle": "two equal L sections back to back", "given": "a section whose properties are stated",
 	"pinned": "held in place, free to turn", "fixed": "held in place and against turning", "free": "not held", "guided": "free to move sideways, held against turning",
 	"major": "the section's strong axis", "minor": "the section's weak axis", "both": "both axes", "twist": "turning about the member's own axis",
 	"at": "where it acts", "about": "the axis that it bends about", "across": "across the member, bending it about an axis", "offset": "off the centroid", "and": "also about the other axis",

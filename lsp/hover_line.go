@@ -236,7 +236,7 @@ func (h *hovering) strength(r *checker.Result) {
 	if m.Material == nil || m.Section == nil {
 		return
 	}
-	fy, fu, source, ok := m.Material.Strength(m.Section.Thickness, r.Env().Basis.TableFy)
+	fy, fu, source, ok := m.Material.StrengthOf(m.Section, r.Env().Basis.TableFy)
 	if !ok {
 		h.page.Text(output.Words(standard.NoStrength(m) + "."))
 		return

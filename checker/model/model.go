@@ -143,8 +143,24 @@ type Material struct {
 	Bad     bool
 }
 
+// StrengthOf is Strength for a section: an American grade depends on the form of
+// the product besides the thickness.
+func (m *Material) StrengthOf(s *Section, table31 bool) (fy, fu float64, source string, ok bool) {
+	if m.Grade == nil || !m.Grade.American() {
+		return m.Strength(s.Thickness, table31)
+	}
+	own, ok := m.Grade.For(s.Shape)
+	if !ok {
+		return unknown, unknown, "", false
+	}
+	of := *m
+	of.Grade = &own
+	return of.Strength(s.Thickness, table31)
+}
+
 // Strength is the yield and ultimate strength for a thickness in metres, and
-// the row of the table it comes from. It is false when there is none.
+// the row of the table it comes from. It is false when there is none. See
+// StrengthOf for the strength in a section.
 func (m *Material) Strength(thickness float64, table31 bool) (fy, fu float64, source string, ok bool) {
 	if m.Grade == nil {
 		return m.Fy, m.Fu, "stated", m.Fy > 0

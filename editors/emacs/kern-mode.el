@@ -49,14 +49,14 @@
 (defconst kern-mode-properties
   '("A" "A_v_major" "A_v_minor" "E" "G" "I_major" "I_minor" "I_t" "I_w" "W_major" "W_minor"
     "Wpl_major" "Wpl_minor" "class" "corner" "curve" "curve_major" "curve_minor" "density" "depth"
-    "diameter" "flange" "fu" "fy" "made" "nu" "outside" "root" "thickness" "toe" "wall" "web"
+    "diameter" "flange" "fu" "fy" "gap" "made" "nu" "outside" "root" "thickness" "toe" "wall" "web"
     "width")
   "Words before an equals sign in the block of a material or shape.")
 ;; end of properties
 
 ;; generated: shapes
 (defconst kern-mode-shapes
-  '("angle" "bar" "channel" "given" "isection" "pipe" "rod" "tee" "tube")
+  '("angle" "bar" "channel" "doubleangle" "given" "isection" "pipe" "rod" "tee" "tube")
   "Words for cross-sections.")
 ;; end of shapes
 

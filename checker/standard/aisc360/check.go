@@ -131,7 +131,7 @@ const (
 func (c *calc) given() {
 	m, basis := c.f.Member, &c.f.Env.Basis
 	c.group("")
-	fy, _, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	fy, _, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok || !(fy > 0) {
 		fy = math.NaN()
 		c.why = standard.NoStrength(m)

@@ -51,7 +51,7 @@ func (c *calc) torsion() {
 			c.cover(coupled, standard.NotApplicable, "the section is taken as doubly symmetric")
 			return
 		}
-	case section.Channel, section.Tee, section.Angle:
+	case section.Channel, section.Tee, section.Angle, section.DoubleAngle:
 		rule, other = coupled, torsional
 	}
 	c.cover(other, standard.NotApplicable, map[string]string{torsional: "torsion goes with bending: see " + coupled, coupled: "the shear centre is the centroid"}[other])
