@@ -65,12 +65,12 @@ func (c *calc) byLeg() bool {
 	c.group(rule)
 	c.cover(major, standard.NotApplicable, "connected by one leg: see "+rule+" (E5)")
 	if !c.pressed {
-		c.least(math.NaN(), rule)
+		c.least(unknown(rule))
 		c.cover(rule, standard.NotApplicable, notPressed)
 		return true
 	}
 	if why := c.legRefused(); why != "" {
-		c.least(math.NaN(), rule)
+		c.least(unknown(rule))
 		c.undecided(rule, eccentric, why)
 		return true
 	}
@@ -97,14 +97,15 @@ func (c *calc) byLeg() bool {
 	x := axes[1]
 	slope := c.do(legs[legKey{m.Leg.Short && unequal, m.Leg.Space, c.s.At(symLen)/c.s.At(symRa) <= bound}])
 	if !(slope <= mostSlope) {
-		c.least(math.NaN(), rule)
+		c.least(unknown(rule))
 		c.undecided(rule, eccentric, fmt.Sprintf("L_c/r by E5 is %s, above 200: the eccentricity is to be counted as bending (chapter H), by hand", unit.Short(slope, 3)))
 		return true
 	}
 	c.assume("connected by one leg at both ends, the same one, by welds or at least two bolts (E5)")
 	c.do(x.doFe)
+	c.do(x.doPe)
 	c.nominalStrength(x)
-	c.least(c.s.At(x.pn), rule)
+	c.least(c.of(x, rule))
 	n, k := c.worst(0, m.Height)
 	c.take(x.pr, n, c.combination(k))
 	u := c.do(x.doU)

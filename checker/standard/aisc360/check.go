@@ -25,10 +25,12 @@ type calc struct {
 
 	shape   *shape // the plates that can buckle in compression; nil for solid, round and stated sections
 	slender bool   // a plate, or the round wall, has a width-to-thickness ratio above lambda_r
-	// nominal is the least nominal compressive strength that was found, of which
-	// rule; NaN while it is not known.
-	nominal     float64
-	nominalRule string
+	// governing is the mode of buckling with the least nominal strength; its rule is ""
+	// while none was found.
+	governing mode
+	// compressed are the values after the checks of tension and compression, which
+	// those of combined forces compute again for other stretches.
+	compressed []float64
 
 	bend bendState
 }
@@ -52,6 +54,9 @@ func (c *calc) value(symbol string) (unit.Quantity, bool) {
 		return unit.Quantity{}, false
 	}
 	v := c.s.At(id)
+	if int(id) < len(c.compressed) && !math.IsNaN(c.compressed[id]) {
+		v = c.compressed[id]
+	}
 	return unit.Quantity{Value: v, Dim: c.ed.set.At(id).Dim}, !math.IsNaN(v)
 }
 
@@ -105,7 +110,7 @@ func (c *calc) combination(k int) string {
 
 // run makes the checks in the order in which they lean on each other.
 func (c *calc) run() {
-	c.nominal = math.NaN()
+	c.governing = unknown("")
 	c.s.Recording(c.record)
 	c.given()
 	c.loads()
@@ -113,6 +118,10 @@ func (c *calc) run() {
 	c.tension()
 	c.compression()
 	c.stability()
+	c.compressed = make([]float64, c.ed.set.Len())
+	for i := range c.compressed {
+		c.compressed[i] = c.s.At(derivation.ID(i))
+	}
 	c.bending()
 	c.bracing()
 	c.slenderness()
@@ -178,6 +187,10 @@ func (c *calc) loads() {
 		if t := c.f.Tension(k); t > most*(1+1e-12) && t > 1e-6 {
 			most, c.pulled = t, k
 		}
+	}
+	if c.pressed {
+		n, k := c.worst(0, c.f.Member.Height)
+		c.take(symPr, n, c.combination(k))
 	}
 }
 
