@@ -30,8 +30,8 @@
 
 ;; generated: declarations
 (defconst kern-mode-declarations
-  '("basis" "case" "column" "combination" "exclusive" "include" "level" "material" "section" "strut"
-    "tie")
+  '("basis" "case" "column" "combination" "exclusive" "forces" "include" "level" "material"
+    "section" "strut" "tie")
   "Words that begin a declaration.")
 ;; end of declarations
 
@@ -62,12 +62,12 @@
 ;; generated: particles
 (defconst kern-mode-particles
   '("ASD" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both"
-    "braced" "by" "cases" "characteristic" "cold" "direct" "effective" "eq" "fixed" "floor" "free"
-    "frequent" "from" "guided" "hot" "imposed" "independent" "leg" "lengths" "long" "major" "minor"
-    "off" "offset" "on" "per" "permanent" "persistent" "pinned" "psi_0" "psi_1" "psi_2"
-    "quasipermanent" "recommended" "rolled" "secant" "seismic" "short" "simple" "slenderness" "snow"
-    "space" "sway" "temperature" "theoretical" "to" "together" "top" "twist" "utilisation" "welded"
-    "wind")
+    "braced" "by" "cases" "characteristic" "cold" "compression" "direct" "effective" "eq" "fixed"
+    "floor" "free" "frequent" "from" "guided" "hot" "imposed" "independent" "leg" "lengths" "long"
+    "major" "minor" "negative" "off" "offset" "on" "per" "permanent" "persistent" "pinned"
+    "positive" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic"
+    "short" "simple" "slenderness" "snow" "space" "sway" "temperature" "theoretical" "to" "together"
+    "top" "twist" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 
