@@ -125,6 +125,9 @@ func (c *calc) legRefused() string {
 	case c.f.Pushed[0] || c.f.Pushed[1]:
 		return "there are loads across the member: count the eccentricity as bending (E5(3), chapter H), by hand"
 	}
+	if m.Imported != nil {
+		return "its forces come from a table: whether they come in at the ends is not known, count the eccentricity as bending (E5(1), chapter H), by hand"
+	}
 	for _, l := range m.Loads {
 		if l.At > 1e-6*m.Height && l.At < m.Height*(1-1e-6) {
 			return "there are loads between the ends: count the eccentricity as bending (E5(1), chapter H), by hand"

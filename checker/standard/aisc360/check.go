@@ -3,6 +3,7 @@ package aisc360
 import (
 	"fmt"
 	"math"
+	"strings"
 	"slices"
 
 	"kern/checker/derivation"
@@ -167,9 +168,15 @@ func (c *calc) given() {
 	}
 	c.take(symAlphaFactor, alpha, "C2.3, "+method)
 	if c.asd {
-		c.assume("by ASD: allowable strengths (B3.2)")
+		c.assume("by ASD: allowable strengths (B3.2), with combinations of ASD")
 	} else {
-		c.assume("by LRFD: design strengths (B3.1)")
+		c.assume("by LRFD: design strengths (B3.1), with combinations of LRFD")
+	}
+	switch {
+	case basis.Actions == "" && len(c.f.Env.Automatic) > 0 && !c.asd && m.Imported == nil:
+		c.assume("the loads bear the load factors of LRFD already, as no combinations are stated")
+	case strings.HasPrefix(basis.Actions, "EN "):
+		c.assume("combinations of %s with strengths of %s: the safety of the two is not of one kind", basis.Actions, c.ed.name)
 	}
 	if m.Material.Grade != nil {
 		c.assume("strengths of %s from its product standard %s", m.Material.Grade.Name, m.Material.Grade.Standard)
