@@ -3,8 +3,8 @@ package aisc360
 import (
 	"fmt"
 	"math"
-	"strings"
 	"slices"
+	"strings"
 
 	"kern/checker/derivation"
 	"kern/checker/standard"
