@@ -178,6 +178,9 @@ func (c *calc) factorCb(k int, s segment, peak, tension float64) {
 	case s.free:
 		c.take(symCb, 1, "F1(c), a cantilever")
 		return
+	case !(peak > c.bend.tiny[l.axis]):
+		c.take(symCb, 1, "hardly any moment in the segment")
+		return
 	}
 	pieces := c.bend.combs[k].pieces[l.axis]
 	for i, id := range []int{0, 1, 2} {
