@@ -48,7 +48,7 @@ func (c *calc) bracing() {
 		}
 	}
 	switch {
-	case !held[0] && !held[1] && len(c.f.Member.Holds) > 0 && (c.f.Stretches[0][0].Exact || c.f.Stretches[1][0].Exact):
+	case !held[0] && !held[1] && len(c.f.Member.Holds) > 0 && (c.whole(0) || c.whole(1)):
 		c.cover(rule, standard.NotApplicable, "beside a free end the column is worked out as a whole: what its holds need is to be found by analysis (App. 6.1)")
 		return
 	case !held[0] && !held[1]:
@@ -103,3 +103,6 @@ func (c *calc) bracing() {
 	}
 	c.cover(rule, standard.Checked, why)
 }
+
+// whole tells whether a column beyond a hold is worked out as one.
+func (c *calc) whole(a int) bool { return len(c.f.Stretches[a]) == 1 && c.f.Stretches[a][0].Exact }
