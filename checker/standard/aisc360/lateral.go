@@ -153,7 +153,7 @@ func (c *calc) segmentGiven(s segment) {
 			source = "from the fixed end to the free end"
 		}
 		if len(c.bend.lat.segments) > 1 {
-			source = fmt.Sprintf("from %s m to %s m, %s", unit.Number(s.from, 4), unit.Number(s.to, 4), source)
+			source = fmt.Sprintf("from %s to %s, %s", c.f.Place(s.from), c.f.Place(s.to), source)
 		}
 	}
 	if s.factor != 1 && c.s.Recorded() {
