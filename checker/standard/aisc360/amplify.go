@@ -95,7 +95,7 @@ func (c *calc) amplified(a, k int, s action.Stretch, d action.Diagram, part floa
 			small, large = large, small
 		}
 		c.take(m.m2, math.Abs(large), c.combination(k))
-		c.take(m.m1, -small*math.Copysign(1, large), c.combination(k))
+		c.take(m.m1, 0-small*math.Copysign(1, large), c.combination(k)) // no negative zero
 		c.do(m.doCm)
 	default:
 		c.take(m.cm, 1, "App. 8.1.2(b), loads between the points held")
