@@ -5,6 +5,7 @@ import (
 	"runtime"
 	"runtime/debug"
 	"slices"
+	"strconv"
 	"strings"
 	"sync"
 	"sync/atomic"
@@ -70,6 +71,22 @@ var departable = func() model.DepartureRules {
 
 // Standards lists the names of the design standards.
 func Standards() []string { return registry{}.Names() }
+
+// Stated lists how a basis can state the design standards, one for each of their
+// methods: "ANSI/AISC 360-22" by LRFD, with the quotes.
+func Stated() []string {
+	var out []string
+	for _, s := range standards {
+		name := strconv.Quote(s.Name())
+		if len(s.Methods()) == 0 {
+			out = append(out, name)
+		}
+		for _, m := range s.Methods() {
+			out = append(out, name+" by "+m)
+		}
+	}
+	return out
+}
 
 // Progress is told how many of the members have been worked out. It is called
 // from several goroutines.

@@ -23,7 +23,7 @@ var starters = map[string]bool{
 var verbs = map[string]bool{
 	"section": true, "material": true, "height": true, "from": true, "base": true, "top": true, "hold": true,
 	"effective": true, "joints": true, "connected": true, "load": true, "limit": true, "require": true, "depart": true, "note": true, "selfweight": true,
-	"standard": true, "actions": true, "show": true, "length": true, "lift": true, "slope": true, "net": true,
+	"standard": true, "actions": true, "show": true, "length": true, "lift": true, "moments": true, "reduce": true, "reduction": true, "slope": true, "net": true,
 }
 
 // blockAssigned are starters that are also properties inside a member's block:

@@ -77,7 +77,7 @@ func (m *tokenMarks) head(s *lang.Stmt, in lang.Context, assigned bool) {
 }
 
 // blockContexts are the contexts in the blocks of declarations.
-var blockContexts = map[string]lang.Context{"basis": lang.InBasis, "level": lang.InLevel, "material": lang.InMaterial, "section": lang.InSection,
+var blockContexts = map[string]lang.Context{"project": lang.InProject, "basis": lang.InBasis, "level": lang.InLevel, "material": lang.InMaterial, "section": lang.InSection,
 	"column": lang.InMember, "strut": lang.InMember, "tie": lang.InMember}
 
 func (m *tokenMarks) declaration(s *lang.Stmt) {

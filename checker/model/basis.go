@@ -34,10 +34,12 @@ func (b *builder) basis() {
 		seen := map[string]*lang.Stmt{}
 		for _, s := range d.stmt.Body.Stmts {
 			r := b.reader(declared{d.decl, s})
-			if first := seen[s.Word]; first != nil && s.Word != "show" {
+			if first := seen[sameWord(s.Word)]; first != nil && sameWord(s.Word) == "reduce" {
+				r.reducedTwice(declared{d.decl, first})
+			} else if first != nil && s.Word != "show" {
 				twice(r, first)
 			} else if !s.Broken {
-				seen[s.Word] = s
+				seen[sameWord(s.Word)] = s
 				b.basisStmt(r)
 			}
 			if r.failed && s.Word != "show" {
@@ -53,13 +55,17 @@ func (b *builder) basis() {
 	}
 }
 
-var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental",
+var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental", "moments", "reduce", "reduction",
 	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "xi", "factor_yield", "factor_buckling"}
 
 func (b *builder) basisStmt(r *reader) {
 	basis := &b.env.Basis
 	if value, ok := r.stmt.Assigned(); ok {
 		r.args = value
+		if r.stmt.Word == "reduction" {
+			basis.Reduction, _ = r.reduction()
+			return
+		}
 		b.override(r)
 		return
 	}
@@ -135,6 +141,12 @@ func (b *builder) basisStmt(r *reader) {
 				r.fail("unknown-word", e.Span, "strengths come from the \"product standard\" or from \"EN 1993-1-1 Table 3.1\"")
 			}
 		}
+	case "moments":
+		basis.Nominal = r.moments()
+	case "reduce":
+		basis.Reduction, _ = r.reduce()
+	case "reduction":
+		noSign(r)
 	case "stability":
 		w, _ := r.wordOf("the method of stability", "direct", "effective")
 		basis.Direct, basis.DirectAt = w == "direct", r.place(r.stmt.Line)

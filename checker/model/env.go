@@ -50,6 +50,7 @@ func NewEnv(files []*lang.File, standards Standards) *Env {
 	b.late()
 	b.env.offer = namesOf(b.env.Names)
 	b.basis()
+	b.project()
 	b.cases()
 	b.exclusive()
 	b.levels()
@@ -100,7 +101,7 @@ func (b *builder) collect() {
 						b.name(item, s.Args[0], kind, -1)
 					}
 					b.stmts = append(b.stmts, item)
-				case "basis", "exclusive", "forces":
+				case "basis", "exclusive", "forces", "project":
 					b.stmts = append(b.stmts, item)
 				case "include":
 				case "":

@@ -22,6 +22,7 @@ type Calculation struct {
 
 // Env is what the members of a calculation share.
 type Env struct {
+	Project      Project
 	Basis        Basis
 	Names        map[string]*Named
 	Cases        []*Case
@@ -111,6 +112,8 @@ type Basis struct {
 	Recommended bool                // effective lengths: recommended design values
 	SelfWeight  bool
 	TableFy     bool // strengths from EN 1993-1-1 Table 3.1 rather than the product standard
+	Nominal     bool // moments of loads off the centroid are nominal ones
+	Reduction   Reduction
 	Direct      bool // stability by the direct analysis method of ANSI/AISC 360 chapter C
 	DirectAt    lang.Place
 	Simple      bool // amplification 1/(1 - N/N_cr) for every moment diagram
@@ -274,6 +277,8 @@ type Member struct {
 	Loads     []Load
 	Imported  *Imported // forces from a table in place of loads; nil for none
 	Weight    bool      // self-weight counts
+	Nominal   bool      // moments of loads off the centroid are those of simple construction
+	Reduction Reduction
 
 	Limits   Limits
 	Requires []Require
@@ -327,7 +332,11 @@ type Load struct {
 	// Offset is the distance of an axial load from the centroid: it bends the
 	// member about the major and the minor axis, m.
 	Offset [2]float64
-	Place  lang.Place
+	// Level and Area are the floor that an axial load comes from, m2; nil for a
+	// load that is given as a force.
+	Level *Level
+	Area  float64
+	Place lang.Place
 }
 
 // Limits are the bounds that a calculation sets itself; zero for none.

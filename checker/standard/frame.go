@@ -48,6 +48,7 @@ type Frame struct {
 
 	parts  []model.Lift // neighbouring lifts of one section and material taken as one
 	twists []Segment    // between points held against twist
+	floors []floors     // [case][segment] what floors bring, for reductions; nil for none
 	lift   *liftView    // of a frame of one lift
 }
 
@@ -155,6 +156,7 @@ func (f *Frame) forces() {
 	segments := len(f.cuts) - 1
 	f.last = segments - 1
 	of := f.byCase()
+	f.reduce()
 	f.own = make([]float64, segments)
 	if m.Weight {
 		for s := range f.own {
@@ -170,7 +172,7 @@ func (f *Frame) forces() {
 		for k, factor := range combination.Factors {
 			if factor != 0 {
 				for s := range row {
-					row[s] += factor * of[k*segments+s]
+					row[s] += factor * (of[k*segments+s] - f.relief(c, k, s))
 				}
 			}
 		}
@@ -345,7 +347,9 @@ func (f *Frame) moments() {
 			p := action.Push{From: l.At}
 			switch {
 			case l.Kind == model.AxialLoad && l.Offset[axis] != 0:
-				p.Moment = l.Value * l.Offset[axis]
+				if !m.Nominal {
+					p.Moment = l.Value * l.Offset[axis]
+				}
 			case l.Kind == model.AxialLoad || int(l.Axis) != axis:
 				continue
 			case l.Kind == model.EndMoment:
@@ -358,6 +362,11 @@ func (f *Frame) moments() {
 			loadings[l.Case] = append(loadings[l.Case], p)
 		}
 		pieces, err := beam.Solve(loadings)
+		if m.Nominal {
+			for c := range pieces {
+				f.nominal(axis, c, pieces[c])
+			}
+		}
 		f.beams[axis], f.beamOK[axis] = pieces, err == nil
 	}
 }
@@ -441,6 +450,10 @@ func (f *Frame) Assumptions() []string {
 		out = append(out, fmt.Sprintf("self-weight %s in all, in case %s", own, c))
 	case m.Kind == model.Column:
 		out = append(out, "self-weight not counted")
+	}
+	out = append(out, f.reductions()...)
+	if m.Nominal && (f.Bends[0] || f.Bends[1]) {
+		out = append(out, "nominal moments of simple construction: each load off the centroid bends the lengths of column above and below its level alone, in proportion to I/L, or in halves where these differ by no more than 1.5 (common practice, from memory)")
 	}
 	if f.Env.Basis.Actions == "" {
 		if len(f.Env.Automatic) == 0 {

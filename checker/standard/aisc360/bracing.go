@@ -3,6 +3,7 @@ package aisc360
 import (
 	"strings"
 
+	"kern/checker/action"
 	"kern/checker/derivation"
 	"kern/checker/standard"
 	"kern/lang/unit"
@@ -36,6 +37,9 @@ func newBrace(letter string) *brace {
 	b.doBetaASD = f(b.beta, "Omega_br * 8 * P_r_s_? / L_br_?", "App. 6.2.2 (A-6-4b)")
 	return b
 }
+
+// fewHolds is up to how many holds are listed one by one.
+const fewHolds = 4
 
 // bracing works out what appendix 6 asks of the holds. The calculation knows
 // nothing of what holds the member: a person compares.
@@ -78,24 +82,45 @@ func (c *calc) bracing() {
 				fullest = i
 			}
 		}
-		most, k := c.worst(stretches[fullest].From, stretches[fullest].To)
-		if most <= 0 {
+		if most, _ := c.worst(stretches[fullest].From, stretches[fullest].To); most <= 0 {
 			continue
 		}
-		c.take(b.pr, most, c.combination(k))
-		c.do(b.doPbr)
-		n, k := c.worst(stretches[steepest].From, stretches[steepest].To)
-		c.take(b.prs, n, c.combination(k))
-		c.take(b.lbr, stretches[steepest].Length(), c.f.StretchName(a, stretches[steepest]))
-		if c.asd {
-			c.do(b.doBetaASD)
-		} else {
-			c.do(b.doBetaLRFD)
+		work := func(fullest, steepest action.Stretch) string {
+			most, k := c.worst(fullest.From, fullest.To)
+			c.take(b.pr, most, c.combination(k))
+			c.do(b.doPbr)
+			n, k := c.worst(steepest.From, steepest.To)
+			c.take(b.prs, n, c.combination(k))
+			c.take(b.lbr, steepest.Length(), c.f.StretchName(a, steepest))
+			if c.asd {
+				c.do(b.doBetaASD)
+			} else {
+				c.do(b.doBetaLRFD)
+			}
+			return "a strength of at least " + show.Show(c.s.At(b.pbr), unit.Force, 3) + " and a stiffness of at least " + show.Show(c.s.At(b.beta), unit.ForcePerLength, 3)
 		}
-		need := "each hold " + flexures[a].word + " has a strength of at least " + show.Show(c.s.At(b.pbr), unit.Force, 3) +
-			" and a stiffness of at least " + show.Show(c.s.At(b.beta), unit.ForcePerLength, 3)
+		if n := len(stretches) - 1; n > 1 && n <= fewHolds {
+			c.silently(func() {
+				for i := range n {
+					below, above := stretches[i], stretches[i+1]
+					full, steep := above, above
+					p, _ := c.worst(below.From, below.To)
+					q, _ := c.worst(above.From, above.To)
+					if p > q {
+						full = below
+					}
+					if p/below.Length() > q/above.Length() {
+						steep = below
+					}
+					c.assume("the hold %s at %s has %s (point bracing, App. 6.2.2)", flexures[a].word, c.f.Place(below.To), work(full, steep))
+				}
+			})
+		}
+		need := "each hold " + flexures[a].word + " has " + work(stretches[fullest], stretches[steepest])
+		if n := len(stretches) - 1; n <= 1 || n > fewHolds {
+			c.assume("%s (point bracing, App. 6.2.2)", need)
+		}
 		needs = append(needs, need)
-		c.assume("%s (point bracing, App. 6.2.2)", need)
 	}
 	why := "worked out, to be compared with what holds the member: " + strings.Join(needs, "; ")
 	if c.f.Bends[0] {
