@@ -183,6 +183,9 @@ func (c *calc) elasticStress(a int, s action.Stretch) float64 {
 	}
 	c.take(x.l, standard.Known(s.Length()), source)
 	c.take(x.k, standard.Known(s.K), source)
+	if s.Joints {
+		c.joints(a)
+	}
 	c.do(x.doLc)
 	c.do(x.doSlender)
 	fe := c.do(x.doFe)

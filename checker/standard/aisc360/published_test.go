@@ -228,7 +228,7 @@ func TestPublishedExamples(t *testing.T) {
 		// about y–y; the chart's equations give 1.459 and 2.033
 		{"E.4A W14x82, storey BC", post{shape: w14x82, area: 24.0, rx: 6.05, ry: 2.48, fy: 50, height: 14, ky: 0.01, force: 100,
 			more: func(m *model.Member) { m.Joints[0] = &action.Joints{Top: 1.38, Base: 1.63, Sway: true} }},
-			[]row{{"K_x", 1.5, 1, 0.034}, {"phi_P_n_x", 940, kip, 0.02}}, []row{{"P_n_x_over_Omega", 626, kip, 0.02}}},
+			[]row{{"K_x", 1.5, 1, 0.034}, {"chart_x", 1, 1, 1e-9}, {"phi_P_n_x", 940, kip, 0.02}}, []row{{"P_n_x_over_Omega", 626, kip, 0.02}}},
 		{"E.4B W14x82, storey AB, pinned base", post{shape: w14x82, area: 24.0, rx: 6.05, ry: 2.48, fy: 50, height: 14, ky: 0.01, force: 100,
 			more: func(m *model.Member) { m.Joints[0] = &action.Joints{Top: 1.62, Base: 10, Sway: true} }},
 			[]row{{"K_x", 2.0, 1, 0.025}, {"phi_P_n_x", 861, kip, 0.01}}, []row{{"P_n_x_over_Omega", 573, kip, 0.01}}},
