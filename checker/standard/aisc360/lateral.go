@@ -68,6 +68,9 @@ func (c *calc) lateralOf() lateralState {
 		l.segments, l.why = c.unbraced()
 	}
 	l.unknown = l.why != ""
+	if !l.unknown && c.f.Pushed[l.axis] {
+		c.assume("loads across the member act at the height of the shear centre; on a flange in compression they lower the lateral-torsional buckling moment, which is for a person")
+	}
 	if o, ok := c.f.Env.Basis.Overrides["C_b"]; ok {
 		l.stated, l.because = o.Value, o.Because
 	}
