@@ -3,6 +3,7 @@ package lsp
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"kern/checker"
@@ -31,6 +32,10 @@ func (h *hovering) line(s *lang.Stmt) {
 		h.end(r, s.Word)
 	case "effective":
 		h.stretches(r, func(_ int, t action.Stretch) bool { return t.Overridden })
+	case "joints":
+		h.stretches(r, func(axis int, t action.Stretch) bool {
+			return t.Joints && slices.ContainsFunc(s.Args, func(e *lang.Expr) bool { return e.Is(model.Axis(axis).String()) })
+		})
 	case "section":
 		if sec := r.Member.Section; sec != nil {
 			h.page.Text(output.Strong(output.SectionTitle(sec)), output.Words(": "+sectionShort(r.Units(), sec, densityFor(r))))
