@@ -36,6 +36,7 @@ func Working(p *Page, r *checker.Result, rule string) {
 	if record != nil {
 		p.Head(2, "Loads")
 		Loads(p, r)
+		Takedown(p, r)
 		for _, lift := range liftsOf(record) {
 			title := "Values that the checks share"
 			if lift != "" {

@@ -9,8 +9,10 @@ import (
 
 // liftView is what a frame of one lift knows beside the member's own frame.
 type liftView struct {
-	whole *Frame
-	part  int
+	whole   *Frame
+	part    int
+	twisted bool // the section changes in the part that is worst for torsional buckling
+	it, iw  float64
 }
 
 // merged takes neighbouring lifts as one where neither section nor material
@@ -44,7 +46,7 @@ func (f *Frame) Part(i, combination int) *Frame {
 	p := *f
 	m := *f.Member
 	m.Section, m.Material = l.Section, l.Material
-	p.Member, p.From, p.To, p.lift = &m, l.From, l.To, &liftView{f, i}
+	p.Member, p.From, p.To, p.lift = &m, l.From, l.To, &liftView{whole: f, part: i}
 	eps := 1e-9 * m.Height
 	for p.first < p.last && p.cuts[p.first+1] <= l.From+eps {
 		p.first++
@@ -76,6 +78,9 @@ func (f *Frame) Part(i, combination int) *Frame {
 		if t.From < l.To-eps && t.To > l.From+eps {
 			p.Twist = max(p.Twist, t.To-t.From)
 		}
+	}
+	if combination >= 0 && !f.Alone(i) {
+		p.twist()
 	}
 	return &p
 }
@@ -242,24 +247,51 @@ func (f *Frame) Critical(axis int, s action.Stretch) float64 {
 }
 
 // Twisting gives the torsion constant (m4) and the warping constant (m6) that a
-// check of torsional buckling over the length Twist may count on: the section's
-// own, and where the section changes between points held against twist so much of
-// them that the critical force is a lower bound for the stepped member (the least
-// G I_t and E I_w of the lifts, the greatest product of axial force and squared
-// polar radius, under the combination of the frame).
-func (f *Frame) Twisting() (it, iw float64) {
-	sec := f.Member.Section
-	it, iw = sec.It, Warping(sec)
-	if f.lift == nil {
-		return it, iw
+// check of torsional buckling over the length Twist may count on, under the
+// greatest compression in the frame, and where they come from: the section's own,
+// or what stands for a part between points held against twist in which the section
+// changes, where that is worse.
+func (f *Frame) Twisting() (it, iw float64, source string) {
+	if f.lift != nil && f.lift.twisted {
+		return f.lift.it, f.lift.iw, f.Member.Section.Title() + ", times what the change of section leaves of it"
 	}
+	return f.Member.Section.It, Warping(f.Member.Section), f.Member.Section.Title()
+}
+
+// twist chooses the part between points held against twist that is worst for a
+// frame of one lift and one combination. Where the section changes in it the
+// critical force is a lower bound for the stepped member: the least G I_t and E I_w of
+// the lifts there, over the greatest product of axial force and squared polar radius.
+// The force in that part may be less than the greatest in the lift, which the check
+// is made with; the constants grow by the quotient, which is on the safe side, as the
+// resistance grows less than the critical force.
+func (f *Frame) twist() {
 	w, me := f.lift.whole, &f.parts[f.lift.part]
 	eps := 1e-9 * f.Member.Height
-	gi, ew, load, own := me.Material.G*it, me.Material.E*iw, 0.0, 0.0
+	sec := f.Member.Section
+	most := f.Compression(0, f.From, f.To)
+	critical := func(it, iw, length float64) float64 {
+		warping := math.Pi * math.Pi * me.Material.E * iw / (length * length)
+		if f.TwistFree || math.IsNaN(iw) {
+			warping = 0
+		}
+		return me.Material.G*it + warping
+	}
+	plain := 0.0 // the longest part of one section
+	for _, t := range w.twists {
+		if t.From < f.To-eps && t.To > f.From+eps && !w.Stepped(t.From, t.To) {
+			plain = max(plain, t.To-t.From)
+		}
+	}
+	worst := math.Inf(1)
+	if plain > 0 {
+		worst, f.Twist = critical(sec.It, Warping(sec), plain), plain
+	}
 	for _, t := range w.twists {
 		if t.From >= f.To-eps || t.To <= f.From+eps || !w.Stepped(t.From, t.To) {
 			continue
 		}
+		gi, ew, load, own := math.Inf(1), math.Inf(1), 0.0, 0.0
 		for seg := range w.own {
 			if w.cuts[seg+1] <= t.From+eps || w.cuts[seg] >= t.To-eps {
 				continue
@@ -267,20 +299,22 @@ func (f *Frame) Twisting() (it, iw float64) {
 			l := w.partAt((w.cuts[seg] + w.cuts[seg+1]) / 2)
 			gi = math.Min(gi, l.Material.G*l.Section.It)
 			ew = math.Min(ew, l.Material.E*Warping(l.Section))
-			for k := range f.axial {
-				n := max(f.axial[k][seg], f.top(k, seg), 0)
-				load = max(load, n*polar2(l.Section))
-				if l == me {
-					own = max(own, n)
-				}
+			n := max(f.axial[0][seg], f.top(0, seg), 0)
+			load = max(load, n*polar2(l.Section))
+			if l == me {
+				own = max(own, n)
 			}
 		}
+		if !(own > 0) {
+			continue // nothing in the lift to buckle here
+		}
+		share := most * polar2(sec) / load
+		it, iw := gi/me.Material.G*share, ew/me.Material.E*share
+		if c := critical(it, iw, t.To-t.From); !(c >= worst) {
+			worst, f.Twist = c, t.To-t.From
+			f.lift.it, f.lift.iw, f.lift.twisted = it, iw, true
+		}
 	}
-	if !(own > 0) || !(load > 0) {
-		return it, iw
-	}
-	share := own * polar2(sec) / load
-	return gi / me.Material.G * share, ew / me.Material.E * share
 }
 
 // polar2 is the square of the polar radius of gyration about the shear centre, m2.
