@@ -36,10 +36,10 @@ type Reaction struct {
 }
 
 // Takedown adds the loads of the member up from the top down; nil for one that
-// could not be checked. Forces are not reduced: Factor says by how much they may be.
+// could not be checked and for one with forces from a table. Forces are not reduced: Factor says by how much they may be.
 func (r *Result) Takedown() *Takedown {
 	f := r.Frame()
-	if f == nil {
+	if f == nil || r.Member.Imported != nil { // whose forces are known by combination alone
 		return nil
 	}
 	m := r.Member

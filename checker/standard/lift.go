@@ -57,6 +57,9 @@ func (f *Frame) Part(i, combination int) *Frame {
 	if combination >= 0 {
 		p.Combinations = f.Combinations[combination : combination+1]
 		p.axial, p.weight = f.axial[combination:combination+1], f.weight[combination:combination+1]
+		if f.slope != nil {
+			p.slope = f.slope[combination : combination+1]
+		}
 	}
 	for axis, all := range f.Stretches {
 		p.Stretches[axis] = nil

@@ -30,8 +30,8 @@
 
 ;; generated: declarations
 (defconst kern-mode-declarations
-  '("basis" "case" "column" "combination" "exclusive" "include" "level" "material" "section" "strut"
-    "tie")
+  '("basis" "case" "column" "combination" "exclusive" "forces" "include" "level" "material"
+    "section" "strut" "tie")
   "Words that begin a declaration.")
 ;; end of declarations
 
@@ -62,12 +62,12 @@
 ;; generated: particles
 (defconst kern-mode-particles
   '("K_LL" "about" "accidental" "across" "alone" "and" "annex" "area" "as" "at" "because" "both"
-    "by" "cases" "characteristic" "cold" "continuous" "eq" "fixed" "floor" "free" "frequent" "from"
-    "guided" "hot" "imposed" "independent" "lengths" "live" "major" "minor" "nominal" "off" "offset"
-    "on" "per" "permanent" "persistent" "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent"
-    "recommended" "rolled" "secant" "seismic" "simple" "slenderness" "snow" "storeys" "sway"
-    "temperature" "theoretical" "to" "together" "top" "tributary" "twist" "utilisation" "welded"
-    "wind")
+    "by" "cases" "characteristic" "cold" "compression" "continuous" "eq" "fixed" "floor" "free"
+    "frequent" "from" "guided" "hot" "imposed" "independent" "lengths" "live" "major" "minor"
+    "negative" "nominal" "off" "offset" "on" "per" "permanent" "persistent" "pinned" "positive"
+    "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic" "simple"
+    "slenderness" "snow" "storeys" "sway" "temperature" "theoretical" "to" "together" "top"
+    "tributary" "twist" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 
