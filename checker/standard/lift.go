@@ -5,6 +5,7 @@ import (
 
 	"kern/checker/action"
 	"kern/checker/model"
+	"kern/checker/section"
 )
 
 // liftView is what a frame of one lift knows beside the member's own frame.
@@ -274,11 +275,10 @@ func (f *Frame) twist() {
 	sec := f.Member.Section
 	most := f.Compression(0, f.From, f.To)
 	critical := func(it, iw, length float64) float64 {
-		warping := math.Pi * math.Pi * me.Material.E * iw / (length * length)
-		if f.TwistFree || math.IsNaN(iw) {
-			warping = 0
+		if f.TwistFree {
+			return me.Material.G * it
 		}
-		return me.Material.G*it + warping
+		return me.Material.G*it + math.Pi*math.Pi*me.Material.E*iw/(length*length)
 	}
 	plain := 0.0 // the longest part of one section
 	for _, t := range w.twists {
@@ -288,7 +288,7 @@ func (f *Frame) twist() {
 	}
 	worst := math.Inf(1)
 	if plain > 0 {
-		worst, f.Twist = critical(sec.It, Warping(sec), plain), plain
+		worst, f.Twist = critical(sec.It, warping(sec), plain), plain
 	}
 	for _, t := range w.twists {
 		if t.From >= f.To-eps || t.To <= f.From+eps || !w.Stepped(t.From, t.To) {
@@ -300,8 +300,8 @@ func (f *Frame) twist() {
 				continue
 			}
 			l := w.partAt((w.cuts[seg] + w.cuts[seg+1]) / 2)
-			gi = math.Min(gi, l.Material.G*l.Section.It)
-			ew = math.Min(ew, l.Material.E*Warping(l.Section))
+			gi = math.Min(gi, l.Material.G*doubly(l.Section)*l.Section.It)
+			ew = math.Min(ew, l.Material.E*warping(l.Section))
 			n := max(f.axial[0][seg], f.top(0, seg), 0)
 			load = max(load, n*polar2(l.Section))
 			if l == me {
@@ -318,6 +318,24 @@ func (f *Frame) twist() {
 			f.lift.it, f.lift.iw, f.lift.twisted = it, iw, true
 		}
 	}
+}
+
+// doubly is 1 for a section with two axes of symmetry, NaN for any other: what
+// twists the one bends the other, and no bound is known for a member of both.
+func doubly(s *model.Section) float64 {
+	switch s.Shape.Kind {
+	case section.Channel, section.Tee, section.Angle:
+		return math.NaN()
+	}
+	return 1
+}
+
+// warping is the warping constant of a section, m6, 0 where it is not stated.
+func warping(s *model.Section) float64 {
+	if math.IsNaN(s.Iw) {
+		return 0
+	}
+	return s.Iw
 }
 
 // polar2 is the square of the polar radius of gyration about the shear centre, m2.
@@ -364,18 +382,12 @@ func (f *Frame) lateralFactor(from, to float64) float64 {
 		return 1
 	}
 	eps := 1e-9 * f.Member.Height
-	warping := func(s *model.Section) float64 {
-		if math.IsNaN(s.Iw) {
-			return 0
-		}
-		return s.Iw
-	}
 	me := &f.parts[f.lift.part]
 	a, b, g := math.Inf(1), math.Inf(1), math.Inf(1)
 	for i := range f.parts {
 		l := &f.parts[i]
 		if l.From < to-eps && l.To > from+eps {
-			a, b, g = math.Min(a, bending(l, 1)), math.Min(b, l.Material.E*warping(l.Section)), math.Min(g, l.Material.G*l.Section.It)
+			a, b, g = math.Min(a, bending(l, 1)), math.Min(b, l.Material.E*warping(l.Section)), math.Min(g, l.Material.G*doubly(l.Section)*l.Section.It)
 		}
 	}
 	// M_cr² = E I_z x (E I_w x + G I_t) with x = (pi/L)²; solved for the length of

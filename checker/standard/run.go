@@ -209,7 +209,7 @@ func (r *lifts) outcome() *Outcome {
 		}
 	}
 	r.out.Coverage = append(r.out.Coverage, Coverage{Rule: "splices", State: NotApplicable,
-		Why: "no such check is made: lifts are taken to go on stiffly into one another; a splice must carry the forces and moments there, and a pinned one is not covered"})
+		Why: "no such check is made: lifts are taken to go on stiffly into one another, their centroids in one line and their major axes parallel; a splice must carry the forces and moments there, and a pinned one is not covered"})
 	// a result of the member is what all its lifts agree on
 	r.out.Value = func(symbol string) (unit.Quantity, bool) {
 		var out unit.Quantity
