@@ -8,6 +8,18 @@ import (
 	"kern/checker/standard"
 )
 
+// With judges the member as it would be after a change. The change is given a
+// copy whose loads, holds and lifts it may alter, and nothing else that is shared. A
+// member that lacks something is judged as it is.
+func (r *Result) With(change func(m *model.Member)) *Result {
+	m := *r.Member
+	m.Loads, m.Holds, m.Lifts = slices.Clone(m.Loads), slices.Clone(m.Holds), slices.Clone(m.Lifts)
+	if len(m.Missing) == 0 {
+		change(&m)
+	}
+	return evaluate(r.env, &m, r.combinations)
+}
+
 // Probe judges the member under one of its combinations, by its index, with the
 // forces along the member times axial and all that bends it times bending. The
 // diagrams keep their form. It gives the greatest utilisation of the checks that

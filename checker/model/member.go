@@ -207,7 +207,7 @@ func (w *memberReader) statement(d declared) {
 		r.args = value
 	}
 	switch s.Word {
-	case "load", "hold", "lift", "require", "depart", "note", "limit", "effective", "base", "top":
+	case "load", "hold", "lift", "require", "depart", "note", "limit", "effective", "joints", "base", "top":
 	default:
 		key := sameWord(s.Word)
 		if first, again := w.first[key]; again && key == "reduce" {
@@ -252,6 +252,10 @@ func (w *memberReader) statement(d declared) {
 		w.hold(r)
 	case "effective":
 		w.effective(r)
+	case "joints":
+		w.joints(r)
+	case "connected":
+		w.connected(r)
 	case "load":
 		w.load(r)
 	case "limit":

@@ -74,6 +74,7 @@ func (w *memberReader) complete() {
 	if len(m.Assumed) == 2 && strings.TrimSuffix(m.Assumed[0], "major") == strings.TrimSuffix(m.Assumed[1], "minor") {
 		m.Assumed = []string{strings.TrimSuffix(m.Assumed[0], " about major")}
 	}
+	w.fits()
 	if m.Kind != Column && m.Weight {
 		m.Weight = false
 		m.Assumed = append(m.Assumed, "self-weight of the "+m.Kind.String()+" not counted (its slope is not known)")

@@ -80,6 +80,16 @@ func (f *Frame) split() {
 			}
 		}
 		f.Stretches[axis], f.Stands[axis] = action.Stretches(m.Base[axis], m.Top[axis], holds, m.Height, f.Env.Basis.Recommended)
+		if j := m.Joints[axis]; j != nil {
+			f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: j.Factor(), Joints: true}}
+			f.Stands[axis] = true
+		}
+		if f.Env.Basis.Direct && f.Stands[axis] {
+			for i := range f.Stretches[axis] {
+				s := &f.Stretches[axis][i]
+				s.K, s.Exact, s.Joints, s.Direct = 1, false, false, true
+			}
+		}
 		if k := m.Factor[axis]; k > 0 {
 			if !f.Stands[axis] || len(f.Stretches[axis]) == 1 && f.Stretches[axis][0].Exact {
 				f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis]}}
@@ -87,7 +97,7 @@ func (f *Frame) split() {
 			}
 			for i := range f.Stretches[axis] {
 				s := &f.Stretches[axis][i]
-				s.K, s.Overridden, s.Exact = k, true, false
+				s.K, s.Overridden, s.Exact, s.Direct = k, true, false, false
 			}
 		}
 	}
@@ -417,6 +427,15 @@ func (f *Frame) Assumptions() []string {
 			switch {
 			case s.Overridden:
 				kind = "stated"
+			case s.Direct:
+				kind = "the unbraced length, by direct analysis"
+			case s.Joints:
+				j := m.Joints[axis]
+				sway := "without sway"
+				if j.Sway {
+					sway = "with sway"
+				}
+				kind = fmt.Sprintf("alignment chart %s, stiffness ratios %s at the base and %s at the top", sway, number(j.Base), number(j.Top))
 			case s.Exact:
 				kind = "solved for the whole column, as its free end stands beyond a hold"
 			case f.Env.Basis.Recommended:
@@ -448,6 +467,10 @@ func (f *Frame) Assumptions() []string {
 	}
 	return out
 }
+
+// ByLeg is why a standard that takes an angle as loaded in its centroid leaves one
+// undecided that is connected by one leg.
+const ByLeg = "the angle is connected by one leg: allow for the eccentricity by hand"
 
 // OwnWeight is the whole weight of the member where it counts, N.
 func (f *Frame) OwnWeight() float64 {

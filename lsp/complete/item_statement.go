@@ -51,7 +51,7 @@ func (s *scope) statements() []Item {
 		switch {
 		case s.in == lang.InMember && known[once[f.Word]], s.in != lang.InMember && s.in != lang.InFile && said[f.Word] && f.Word != "show":
 			continue
-		case s.in == lang.InFile && f.Word == "basis" && s.env.Basis.Stated:
+		case s.in == lang.InFile && (f.Word == "basis" && s.env.Basis.Stated || f.Word == "project" && s.env.Project.Stated):
 			continue
 		case s.in == lang.InMember && (f.Word == "base" || f.Word == "top") && said[f.Word]:
 			group = 1 // once more, about the other axis
