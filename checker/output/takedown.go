@@ -51,9 +51,11 @@ func Takedown(p *Page, r *checker.Result) {
 			base = append(base, nil)
 		}
 	}
-	p.Head(2, "Axial force by level and case")
-	p.Table(head, align, append(rows, base))
-	p.Text(Words("Characteristic values, not reduced; compression is positive."))
+	if len(t.Levels) > 1 {
+		p.Head(2, "Axial force by level and case")
+		p.Table(head, align, append(rows, base))
+		p.Text(Words("Characteristic values, not reduced; compression is positive."))
+	}
 	reactions(p, r, t)
 }
 
