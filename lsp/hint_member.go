@@ -195,7 +195,7 @@ func (c *collector) factors(s *lang.Stmt, r *checker.Result) map[*lang.Stmt]stri
 		}
 		for _, t := range frame.Stretches[axis] {
 			line := c.cause(s, m, axis, t)
-			if t.Overridden || line == nil {
+			if t.Overridden || line == nil || frame.Stepped(t.From, t.To) {
 				continue
 			}
 			if rows[line] == nil {

@@ -123,7 +123,7 @@ func (h *hovering) share(r *checker.Result, own []model.Load) {
 	for _, l := range own {
 		if l.Kind == model.AxialLoad {
 			axial = true
-			sum += combination.Factors[l.Case] * l.Value
+			sum += combination.Factors[l.Case] * l.Value * frame.Reduced(c.Combination, l)
 		}
 	}
 	if !axial {

@@ -85,6 +85,31 @@ type (
 		Section  string `json:"section"`
 		Material string `json:"material"`
 	}
+	takedown struct {
+		Levels []storey `json:"levels"`
+		Base   []base   `json:"base"`
+	}
+	storey struct {
+		Level string  `json:"level"`
+		At    amount  `json:"at"`
+		Cases []share `json:"cases"`
+	}
+	share struct {
+		Case      string   `json:"case"`
+		Load      amount   `json:"load"`
+		Force     amount   `json:"force"`
+		Reduction *float64 `json:"reduction,omitempty"`
+	}
+	base struct {
+		Case  string `json:"case"`
+		Axial amount `json:"axial"`
+		Major *bent  `json:"major,omitempty"`
+		Minor *bent  `json:"minor,omitempty"`
+	}
+	bent struct {
+		Shear  amount `json:"shear"`
+		Moment amount `json:"moment"`
+	}
 	coverage struct {
 		Rule  string `json:"rule"`
 		State string `json:"state"`
@@ -107,6 +132,7 @@ type (
 		Lift        string      `json:"lift,omitempty"`
 		Lifts       []lift      `json:"lifts,omitempty"`
 		Checks      []check     `json:"checks"`
+		Takedown    *takedown   `json:"takedown,omitempty"`
 		Quantities  []quantity  `json:"quantities"`
 		Coverage    []coverage  `json:"coverage"`
 		Assumptions []string    `json:"assumptions"`
@@ -195,6 +221,7 @@ func buildMember(m *checker.Result, r *checker.Report, lines *index, names Names
 			out.Quantities = append(out.Quantities, quantity{sym.Name, a.Value, a.Unit, s.Clause, s.Lift})
 		}
 	}
+	out.Takedown = buildTakedown(m)
 	for _, c := range m.Coverage {
 		out.Coverage = append(out.Coverage, coverage{c.Rule, c.State.String(), c.Why})
 	}

@@ -36,6 +36,7 @@ func Working(p *Page, r *checker.Result, rule string) {
 	if record != nil {
 		p.Head(2, "Loads")
 		Loads(p, r)
+		Takedown(p, r)
 		AllWorking(p, r, record)
 	}
 	Coverage(p, r)

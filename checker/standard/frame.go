@@ -204,6 +204,24 @@ func (f *Frame) byCase() []float64 {
 	return of
 }
 
+// CaseForce is the axial force just below a height from one case, without factors
+// and reductions, N, compression positive; self-weight counts in its case.
+func (f *Frame) CaseForce(c int, z float64) float64 {
+	eps := 1e-9 * f.Member.Height
+	n := 0.0
+	for _, l := range f.Member.Loads {
+		if l.Kind == model.AxialLoad && l.Case == c && l.At >= z-eps {
+			n += l.Value
+		}
+	}
+	if c == f.Env.SelfWeight {
+		for s, own := range f.own {
+			n += own * max(0, f.cuts[s+1]-max(z, f.cuts[s]))
+		}
+	}
+	return n
+}
+
 // partAt is the part of the member that a height lies in.
 func (f *Frame) partAt(z float64) *model.Lift {
 	for i := range f.parts {

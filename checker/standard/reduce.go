@@ -90,6 +90,16 @@ func (f *Frame) relief(combination, c, segment int) float64 {
 	return x.force * (1 - x.factor)
 }
 
+// Reduced is the factor that a combination takes a load along the member with at
+// the base beside that of its case: the reduction of imposed loads of floors, 1 for
+// any other.
+func (f *Frame) Reduced(combination int, l model.Load) float64 {
+	if l.Level == nil || f.relief(combination, l.Case, 0) == 0 {
+		return 1
+	}
+	return f.floors[l.Case*(len(f.cuts)-1)].factor
+}
+
 // Reduction is the factor of the imposed loads of floors of a case just below a
 // height, and the number of storeys and the area (m2) that it comes from; 1 where
 // nothing is reduced.

@@ -140,8 +140,7 @@ func (c *calc) torsional() {
 // torsionalStrength computes P_c_T in the group that is open.
 func (c *calc) torsionalStrength(rule string) {
 	sec := c.f.Member.Section
-	title := sec.Title()
-	j, cw := c.f.Twisting()
+	j, cw, title := c.f.Twisting()
 	if math.IsNaN(cw) {
 		cw = 0
 		c.assume("C_w = 0, as it is not stated")
