@@ -31,6 +31,7 @@ type Form struct {
 var Forms = []Form{
 	{"include", InFile, []string{`include "FILE"`}, "Brings in the declarations of another file of the workspace.", `include "${1:common.kern}"`},
 	{"project", InFile, []string{`project { … }`}, "What the cover of a printed sheet says: the project, who prepared and checked the calculation, revision and date.", "project {\n    name        \"${1:name}\"\n    number      \"${2:number}\"\n    prepared by \"${3:name}\"\n    revision    \"${4:A}\"\n    $0\n}"},
+	{"forces", InFile, []string{`forces "FILE" compression positive|negative`}, "Takes the forces of members from a table of an analysis.", `forces "${1:frame.csv}" compression ${2|positive,negative|}`},
 	{"basis", InFile, []string{`basis { … }`}, "The design basis, once in a calculation.", "basis {\n    standard \"${1:EN 1993-1-1:2005}\"\n    actions  \"${2:EN 1990:2002}\"\n    $0\n}"},
 	{"material", InFile, []string{`material NAME = "GRADE" [per "STANDARD"]`, `material NAME { E = …; fy = …; density = … }`}, "A steel grade, or a material with stated values.", `material ${1:s355} = "${2:S355}"`},
 	{"section", InFile, []string{`section NAME = "DESIGNATION"`, `section NAME = SHAPE { … }`}, "A cross-section: from the catalogue, or a shape with its dimensions.", `section ${1:post} = "${2:HEB 160}"`},
@@ -166,6 +167,7 @@ var Words = map[string]string{
 	"from": "from a place", "to": "to a place", "top": "the upper end", "as": "like another member, but for what is said here", "per": "by a product standard",
 	"annex": "a set of national values", "by": "who did it", "eq": "the equation of the combinations", "because": "the reason", "floor": "an area of floor that the member carries",
 	"hot": "hot finished (EN 10210)", "cold": "cold formed (EN 10219)", "welded": "built up by welding", "rolled": "hot rolled",
+	"compression": "pressing along the member", "positive": "more than zero", "negative": "less than zero",
 	"permanent": "acts always", "imposed": "people, goods, vehicles", "snow": "snow", "wind": "wind", "temperature": "temperature",
 	"accidental": "impact, explosion or another accident", "seismic": "earthquake", "persistent": "for persistent and transient situations",
 	"characteristic": "for deflections that do not go back", "frequent": "for deflections that go back", "quasipermanent": "for deflections that last",

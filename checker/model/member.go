@@ -84,6 +84,9 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, res
 		if i > 0 {
 			c.Problems = nil // said once
 		}
+		if in := env.imported[e.Text]; in != nil {
+			c.imports(in)
+		}
 		out = append(out, &c)
 	}
 	if len(out) == 0 && len(m.Problems) > 0 {

@@ -56,6 +56,8 @@ type Env struct {
 	service     func() []Combination // made when they are asked for first
 
 	offer     map[NameKind][]string // the names of each kind, for offers
+	imported  map[string]*Imported  // by member
+	unread    []string              // forces statements whose tables could not be read
 	late      []*lang.Value         // values that lean on results of members
 	settled   map[*lang.Value]unit.Quantity
 	results   Results
@@ -266,7 +268,8 @@ type Member struct {
 	Holds     []Hold
 	Factor    [3]float64 // effective length factors of the user: major, minor, twist; 0 for none
 	Loads     []Load
-	Weight    bool // self-weight counts
+	Imported  *Imported // forces from a table in place of loads; nil for none
+	Weight    bool      // self-weight counts
 
 	Limits   Limits
 	Requires []Require

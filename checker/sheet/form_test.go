@@ -271,6 +271,26 @@ func TestMark(t *testing.T) {
 	}
 }
 
+// TestTable: a table of forces is an input like any other.
+func TestTable(t *testing.T) {
+	files := map[string]string{"job/a.kern": "basis { standard \"elastic\" }\nforces \"f.csv\" compression positive\ncolumn A1 { section = \"HEB 200\"; material = \"S355\"; height = 4 m }\n",
+		"job/f.csv": "member,combination,N [kN]\nA1,one,412.5\nA1,two,300\n"}
+	r := check(files)
+	s, err := sheet.New(r, sheet.Options{Asked: []string{"job/a.kern"}})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if len(s.Inputs.Files) != 2 || s.Inputs.Files[1].Name != "f.csv" || s.Inputs.Files[1].Asked {
+		t.Errorf("the inputs are %+v", s.Inputs.Files)
+	}
+	page := string(printed(t, r, "markdown", sheet.Options{Full: true}))
+	for _, due := range []string{"| one ", "| two ", "412.5 kN", "Forces from the table"} {
+		if !strings.Contains(page, due) {
+			t.Errorf("the sheet lacks %q", due)
+		}
+	}
+}
+
 // TestDigest: line ends and the place of the folder change nothing; a letter, a name
 // and a file do.
 func TestDigest(t *testing.T) {

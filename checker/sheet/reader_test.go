@@ -225,7 +225,7 @@ func (c *chapter) table(head ...string) [][]string {
 }
 
 var (
-	stream = regexp.MustCompile(`(?s)stream\r?\n(.*?)\r?\nendstream`)
+	stream = regexp.MustCompile(`(?s)stream\n(.*?)\nendstream`)
 	actual = regexp.MustCompile(`/ActualText <FEFF([0-9A-F]*)>`)
 	shown  = regexp.MustCompile(`(?s)BT ([-\d.]+) ([-\d.]+) Td \(((?:\\.|[^\\)])*)\) Tj`)
 )

@@ -42,6 +42,7 @@ type Frame struct {
 	axial       [][]float64 // [combination][segment] compression at the segment's bottom
 	own         []float64   // [segment] self-weight per length
 	weight      []float64   // [combination] the factor of self-weight
+	slope       [][]float64 // [combination][segment] loss of compression per length, of imported forces alone
 	beams       [2][][]action.Piece
 	beamOK      [2]bool
 
@@ -133,6 +134,13 @@ func (f *Frame) forces() {
 		if l.Kind == model.AxialLoad {
 			insert(l.At)
 		}
+	}
+	if in := m.Imported; in != nil {
+		for _, z := range in.Positions[1 : len(in.Positions)-1] {
+			insert(z)
+		}
+		f.importedForces(in)
+		return
 	}
 	segments := len(f.cuts) - 1
 	f.last = segments - 1
@@ -248,8 +256,12 @@ func (f *Frame) At(combination int, z float64) float64 {
 	return math.NaN()
 }
 
-// perLength is the self-weight per length of a segment under a combination, N/m.
+// perLength is what compression loses per length from the base up in a segment
+// under a combination, N/m: the self-weight.
 func (f *Frame) perLength(combination, segment int) float64 {
+	if f.slope != nil {
+		return f.slope[combination][segment]
+	}
 	return f.weight[combination] * f.own[segment]
 }
 
@@ -288,6 +300,10 @@ func (f *Frame) Cut(p action.Piece) (action.Piece, bool) {
 // moments analyses the member as a beam about each axis that is bent.
 func (f *Frame) moments() {
 	m := f.Member
+	if m.Imported != nil {
+		f.importedMoments(m.Imported)
+		return
+	}
 	for _, l := range m.Loads {
 		switch l.Kind {
 		case model.AxialLoad:
@@ -381,6 +397,9 @@ func (f *Frame) Assumptions() []string {
 			}
 			out = append(out, fmt.Sprintf("K = %s %s over %s (%s–%s, %s)", unit.Short(s.K, 3), name, f.StretchName(axis, s), s.Base, s.Top, kind))
 		}
+	}
+	if m.Imported != nil {
+		return append(out, importedAssumptions(m.Imported)...)
 	}
 	switch {
 	case m.Weight:

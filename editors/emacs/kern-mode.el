@@ -30,8 +30,8 @@
 
 ;; generated: declarations
 (defconst kern-mode-declarations
-  '("basis" "case" "column" "combination" "exclusive" "include" "level" "material" "project"
-    "section" "strut" "tie")
+  '("basis" "case" "column" "combination" "exclusive" "forces" "include" "level" "material"
+    "project" "section" "strut" "tie")
   "Words that begin a declaration.")
 ;; end of declarations
 
@@ -63,11 +63,11 @@
 ;; generated: particles
 (defconst kern-mode-particles
   '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "by" "cases"
-    "characteristic" "cold" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
-    "independent" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent" "persistent"
-    "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic"
-    "simple" "slenderness" "snow" "sway" "temperature" "theoretical" "to" "together" "top" "twist"
-    "utilisation" "welded" "wind")
+    "characteristic" "cold" "compression" "eq" "fixed" "floor" "free" "frequent" "from" "guided"
+    "hot" "imposed" "independent" "lengths" "major" "minor" "negative" "off" "offset" "on" "per"
+    "permanent" "persistent" "pinned" "positive" "psi_0" "psi_1" "psi_2" "quasipermanent"
+    "recommended" "rolled" "secant" "seismic" "simple" "slenderness" "snow" "sway" "temperature"
+    "theoretical" "to" "together" "top" "twist" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 

@@ -69,7 +69,7 @@ func TestDue(t *testing.T) {
 // places are places with what is offered there first; blanks of labels are
 // written _.
 var places = map[string]string{
-	"¦":                        "include project basis material section case combination exclusive level column strut tie",
+	"¦":                        "include project forces basis material section case combination exclusive level column strut tie",
 	"project { ¦ }":            "name number prepared checked revision date",
 	"project { prepared ¦ }":   "by",
 	"basis { ¦ }":              "standard actions permanent roofs accidental show effective",
