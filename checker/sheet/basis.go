@@ -247,7 +247,7 @@ func (c *composer) levels(env *model.Env) {
 func (c *composer) combinations(p part) {
 	var list []model.Combination
 	for _, r := range p.results {
-		if len(r.Combinations()) > 0 {
+		if len(r.Combinations()) > 0 && r.Member.Imported == nil {
 			list = r.Combinations()
 			break
 		}
