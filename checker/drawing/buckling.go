@@ -74,7 +74,7 @@ func (b *buckling) bar(axis int) *action.Bar {
 	out.Nodes, out.Held = []float64{0}, []bool{false}
 	for i := range len(cuts) - 1 {
 		n := 1
-		if b.m.Weight { // the force grows all along
+		if bottom, top := b.f.Between(b.combination, cuts[i], cuts[i+1]); bottom != top { // the force changes all along
 			n = 1 + int(12*(cuts[i+1]-cuts[i])/b.m.Height)
 		}
 		bottom, top := b.f.Between(b.combination, cuts[i], cuts[i+1])
