@@ -42,6 +42,13 @@ func (r *Result) Probe(combination int, axial, bending float64) (utilisation flo
 			}
 			continue
 		}
+		if m.Nominal { // the moment must stay with its level
+			axial = max(axial, 1e-9)
+			l.Value *= axial
+			l.Offset[0], l.Offset[1] = l.Offset[0]*bending/axial, l.Offset[1]*bending/axial
+			m.Loads = append(m.Loads, l)
+			continue
+		}
 		for a, e := range l.Offset {
 			if moment := l.Value * e * bending; moment != 0 {
 				m.Loads = append(m.Loads, model.Load{Case: l.Case, Kind: model.EndMoment, Value: moment, At: l.At, Axis: model.Axis(a), Place: l.Place})
@@ -53,19 +60,22 @@ func (r *Result) Probe(combination int, axial, bending float64) (utilisation flo
 		}
 	}
 	if m.Weight {
-		scaled := func(of *model.Material) *model.Material {
-			material := *of
-			material.Density *= axial
-			return &material
-		}
-		m.Material, m.Lifts = scaled(m.Material), slices.Clone(m.Lifts)
+		m.Material = heavier(m.Material, axial)
+		m.Lifts = slices.Clone(m.Lifts)
 		for i := range m.Lifts {
-			m.Lifts[i].Material = scaled(m.Lifts[i].Material)
+			m.Lifts[i].Material = heavier(m.Lifts[i].Material, axial)
 		}
 		m.Weight = axial > 0
 	}
 	out := standard.Run(s, standard.NewFrame(r.env, &m, r.combinations[combination:combination+1]), nil)
 	return r.worst(out.Checks)
+}
+
+// heavier is a material of so many times the density.
+func heavier(m *model.Material, times float64) *model.Material {
+	out := *m
+	out.Density *= times
+	return &out
 }
 
 // worst is the greatest utilisation of checks that depend on loads, but for

@@ -16,6 +16,7 @@ import (
 type Plain struct {
 	Section, Material string // as they stand in quotes in a calculation
 	Standard, Annex   string // Annex "" for the standard's own
+	Method            string // of the standard, "" where it has one alone
 	K                 [2]float64
 	From, To          float64 // heights, m; To 0 to find one
 	Points            int
@@ -29,6 +30,9 @@ const probeLoad = 1000.0
 func (p Plain) text(height float64) string {
 	var b strings.Builder
 	fmt.Fprintf(&b, "basis { standard %q", p.Standard)
+	if p.Method != "" {
+		b.WriteString(" by " + p.Method)
+	}
 	if p.Annex != "" {
 		fmt.Fprintf(&b, " annex %q", p.Annex)
 	}

@@ -49,17 +49,6 @@ type buckling struct {
 // bar is the whole member about an axis under the combination.
 func (b *buckling) bar(axis int) *action.Bar {
 	out := &action.Bar{Base: b.m.Base[axis], Top: b.m.Top[axis]}
-	stiffness := func(z float64) float64 {
-		parts := b.m.Parts()
-		l := parts[len(parts)-1]
-		for _, p := range parts {
-			if z < p.To {
-				l = p
-				break
-			}
-		}
-		return l.Material.E * [...]float64{l.Section.IMajor, l.Section.IMinor}[axis]
-	}
 	holds := b.holdHeights(axis)
 	held := func(z float64) bool {
 		for _, h := range holds {
@@ -72,11 +61,11 @@ func (b *buckling) bar(axis int) *action.Bar {
 	cuts := b.f.Heights()
 	out.Nodes, out.Held = []float64{0}, []bool{false}
 	for i := range len(cuts) - 1 {
-		n := 1
-		if bottom, top := b.f.Between(b.combination, cuts[i], cuts[i+1]); bottom != top { // the force changes all along
+		n, ei := 1, b.f.Stiffness(axis, (cuts[i]+cuts[i+1])/2)
+		bottom, top := b.f.Between(b.combination, cuts[i], cuts[i+1])
+		if bottom != top { // the force changes all along
 			n = 1 + int(12*(cuts[i+1]-cuts[i])/b.m.Height)
 		}
-		bottom, top := b.f.Between(b.combination, cuts[i], cuts[i+1])
 		for j := range n {
 			t := (float64(j) + 1) / float64(n)
 			z := cuts[i] + t*(cuts[i+1]-cuts[i])
@@ -85,7 +74,7 @@ func (b *buckling) bar(axis int) *action.Bar {
 			}
 			out.Nodes, out.Held = append(out.Nodes, z), append(out.Held, j == n-1 && held(z))
 			out.Force = append(out.Force, bottom+(top-bottom)*(t-0.5/float64(n)))
-			out.Stiffness = append(out.Stiffness, stiffness((cuts[i]+cuts[i+1])/2))
+			out.Stiffness = append(out.Stiffness, ei)
 		}
 	}
 	return out

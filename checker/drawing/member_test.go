@@ -275,9 +275,9 @@ func TestNothingToDraw(t *testing.T) {
 // texts with the loads of the points on the axes have the utilisation 1, by each
 // standard.
 func TestInteractionLine(t *testing.T) {
-	for _, standard := range checker.Standards() {
+	for _, standard := range checker.Stated() {
 		text := func(n, m float64) string {
-			return `basis { standard "` + standard + `"; show kN, kNm, mm, MPa }
+			return `basis { standard ` + standard + `; show kN, kNm, mm, MPa }
 column A { section = "HEB 160"; material = "S355"; height = 4 m; selfweight off
 load ` + exact(n) + ` N at top
 load ` + exact(m) + ` Nm about major at top

@@ -20,12 +20,12 @@ import (
 
 // charting is what the flags of the command say.
 type charting struct {
-	section, material, standard, annex, effective string
-	member, vary, picture                         string
-	interaction                                   bool
-	from, to                                      string
-	points                                        int
-	form, file                                    string
+	section, material, standard, annex, method, effective string
+	member, vary, picture                                 string
+	interaction                                           bool
+	from, to                                              string
+	points                                                int
+	form, file                                            string
 }
 
 // pictures are the drawings of a member by the words of --picture.
@@ -74,6 +74,7 @@ func chartCommand() *cobra.Command {
 	f.StringVar(&o.section, "section", "", "a section of the catalogue, for its resistance")
 	f.StringVar(&o.material, "material", "S355", "the grade of steel, with --section")
 	f.StringVar(&o.standard, "standard", "EN 1993-1-1:2005", "the design standard, with --section: "+strings.Join(checker.Standards(), ", "))
+	f.StringVar(&o.method, "by", "", "the method of the standard where it has several (LRFD, ASD), with --section")
 	f.StringVar(&o.annex, "annex", "", "the annex of the standard, with --section")
 	f.StringVar(&o.effective, "effective", "1", "effective length factor about both axes, or major,minor, with --section")
 	f.StringVar(&o.member, "member", "", "the member to draw")
@@ -207,7 +208,7 @@ func (o *charting) resistance() (*chart.Chart, error) {
 	if !slices.Contains(checker.Standards(), o.standard) {
 		return nil, fmt.Errorf("'%s' is no design standard that is known: say %s", o.standard, lang.OrList(checker.Standards()))
 	}
-	p := chart.Plain{Section: o.section, Material: o.material, Standard: o.standard, Annex: o.annex, Points: o.points}
+	p := chart.Plain{Section: o.section, Material: o.material, Standard: o.standard, Annex: o.annex, Method: o.method, Points: o.points}
 	major, minor, two := strings.Cut(o.effective, ",")
 	if !two {
 		minor = major
