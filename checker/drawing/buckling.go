@@ -11,9 +11,8 @@ import (
 )
 
 // Buckling draws the shapes in which a member buckles about both axes under the
-// combination that its checks of buckling are decided by, each with its factor
-// for the whole member and with what the checks took. It is nil for a member that
-// is not compressed.
+// combination that compresses it most, each with its factor for the whole member
+// and with what the checks took. It is nil for a member that is not compressed.
 func Buckling(r *checker.Result) *Scene {
 	s, ok := about(r)
 	if !ok || s.f == nil {
@@ -63,10 +62,10 @@ func (b *buckling) bar(axis int) *action.Bar {
 	out.Nodes, out.Held = []float64{0}, []bool{false}
 	for i := range len(cuts) - 1 {
 		n, ei := 1, b.f.Stiffness(axis, (cuts[i]+cuts[i+1])/2)
-		if b.m.Weight { // the force grows all along
+		bottom, top := b.f.Between(b.combination, cuts[i], cuts[i+1])
+		if bottom != top { // the force changes all along
 			n = 1 + int(12*(cuts[i+1]-cuts[i])/b.m.Height)
 		}
-		bottom, top := b.f.Between(b.combination, cuts[i], cuts[i+1])
 		for j := range n {
 			t := (float64(j) + 1) / float64(n)
 			z := cuts[i] + t*(cuts[i+1]-cuts[i])
