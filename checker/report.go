@@ -96,6 +96,9 @@ func (r *Result) Units() derivation.Units { return r.env.Basis.Show }
 
 // CombinationName names the combination of a check, "" for none.
 func (r *Result) CombinationName(c standard.Check) string {
+	if c.Under != "" {
+		return c.Under
+	}
 	if c.Combination < 0 || c.Combination >= len(r.combinations) {
 		return ""
 	}
@@ -124,6 +127,7 @@ func (r *Result) Derive() *derivation.Record {
 
 // evaluate judges one member.
 func evaluate(env *model.Env, m *model.Member, combinations []model.Combination) *Result {
+	combinations = standard.Imperfections(env, m, combinations)
 	r := &Result{Name: m.Name, Title: m.Title, Member: m, Standard: env.Basis.Standard, Utilisation: math.NaN(),
 		env: env, combinations: combinations, Departures: m.Departs, Missing: m.Missing}
 	s := find(env.Basis.Standard)

@@ -10,7 +10,7 @@ import (
 
 // memberWords are the words that may begin a statement in a member's block.
 var memberWords = []string{"section", "material", "height", "length", "from", "base", "top", "hold", "effective", "load", "limit",
-	"require", "depart", "note", "selfweight", "net"}
+	"require", "depart", "note", "selfweight", "net", "critical", "imperfection"}
 
 // DepartureRules are the rules that a member may depart from; the checker fills
 // in the rules of its standards.
@@ -34,7 +34,8 @@ func Members(env *Env, d *lang.Decl, known DepartureRules, results Results) []*M
 
 func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, results Results) []*Member {
 	m := &Member{Decl: d, Stmt: s, NameSpan: s.Head, Kind: map[string]Kind{"column": Column, "strut": Strut, "tie": Tie}[s.Word],
-		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight}
+		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight,
+		Exact: env.Basis.Exact, Imperfect: env.Basis.Imperfect}
 	w := &memberReader{env: env, m: m, known: known, results: results}
 	r := w.reader(d, s)
 	names := memberNames(s)
@@ -108,6 +109,7 @@ type memberReader struct {
 	said      map[string]bool     // the words of all statements, with an error or not
 	chain     []*lang.Stmt        // the members that it is "as", nearest first
 	asSpan    lang.Span           // the name behind "as"
+	spans     func()              // works out the limits of deflection once all holds are known; nil for none
 	ownHeight bool                // the member says its height itself, though it is "as" another
 	// headless is set when the first line could not be read: what the member
 	// lacks cannot be told then.
@@ -259,6 +261,11 @@ func (w *memberReader) statement(d declared) {
 	case "selfweight":
 		word, _ := r.wordOf("the setting of self-weight", "on", "off")
 		w.m.Weight = word != "off"
+	case "critical":
+		w.m.Exact = r.critical()
+	case "imperfection":
+		word, _ := r.wordOf("the setting of the sway imperfection", "on", "off")
+		w.m.Imperfect = word == "on"
 	case "":
 		w.m.Missing = append(w.m.Missing, fault)
 		return

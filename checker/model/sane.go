@@ -50,10 +50,15 @@ func (w *memberReader) complete() {
 			Message: fmt.Sprintf("the net area of %s cm2 is more than that of the section %s, %s cm2: holes leave no more than the whole area", unit.Short(m.Net*1e4, 4), s.Title(), unit.Short(s.Area*1e4, 4))}})
 		m.Missing = append(m.Missing, "its net area cannot be")
 	}
+	w.settleEnds()
 	sort.SliceStable(m.Holds, func(i, j int) bool { return m.Holds[i].At < m.Holds[j].At })
+	if w.spans != nil && m.Height > 0 {
+		w.spans()
+	}
 	for _, a := range []Axis{Major, Minor} {
 		_, base := w.first["base about "+a.String()]
 		_, top := w.first["top about "+a.String()]
+		base, top = base || m.BaseSpring[a] != Spring{}, top || m.TopSpring[a] != Spring{}
 		switch {
 		case !base && !top:
 			m.Assumed = append(m.Assumed, "pinned at both ends about "+a.String())

@@ -18,9 +18,13 @@ type Frame struct {
 	Combinations []model.Combination
 
 	// Stretches between points held against buckling about major and minor;
-	// Stands is false about an axis for a mechanism.
+	// Stands is false about an axis for a mechanism, and where effective lengths
+	// cannot tell: NotHeld says why. Where Exact is set, the critical load is that of
+	// the whole member and depends on the combination: the stretches have no factor
+	// (NaN) until Under gives it.
 	Stretches [2][]action.Stretch
 	Stands    [2]bool
+	Exact     [2]bool
 	// Twist is the greatest distance between points held against twist; with
 	// TwistFree an end can turn about the member's own axis.
 	Twist     float64
@@ -36,6 +40,8 @@ type Frame struct {
 	weight []float64   // [combination] self-weight per length times its factor
 	beams  [2][][]action.Piece
 	beamOK [2]bool
+	factor [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
+	sprung [2]bool      // a spring leaves effective lengths without an answer
 }
 
 // NewFrame works out the mechanics of a member that lacks nothing.
@@ -43,6 +49,7 @@ func NewFrame(env *model.Env, m *model.Member, combinations []model.Combination)
 	f := &Frame{Member: m, Env: env, Combinations: combinations, TwistK: 1}
 	f.split()
 	f.forces()
+	f.critical()
 	f.moments()
 	return f
 }
@@ -51,11 +58,11 @@ func NewFrame(env *model.Env, m *model.Member, combinations []model.Combination)
 func (f *Frame) split() {
 	m := f.Member
 	for axis := range f.Stretches {
-		var holds []float64
-		for _, h := range m.Holds {
-			if axis == 0 && h.Major || axis == 1 && h.Minor {
-				holds = append(holds, h.At)
-			}
+		holds := m.RigidHolds(model.Axis(axis))
+		f.Exact[axis] = m.Exact && m.Factor[axis] == 0
+		if f.Exact[axis] {
+			f.Stretches[axis] = f.spans(axis)
+			continue
 		}
 		f.Stretches[axis], f.Stands[axis] = action.Stretches(m.Base[axis], m.Top[axis], holds, m.Height, f.Env.Basis.Recommended)
 		if k := m.Factor[axis]; k > 0 {
@@ -67,6 +74,8 @@ func (f *Frame) split() {
 				s := &f.Stretches[axis][i]
 				s.K, s.Overridden, s.Exact = k, true, false
 			}
+		} else if m.Sprung(model.Axis(axis)) {
+			f.Stands[axis], f.sprung[axis] = false, true
 		}
 	}
 	last := 0.0
@@ -131,7 +140,7 @@ func (f *Frame) forces() {
 	for c, combination := range f.Combinations {
 		row := flat[c*segments : (c+1)*segments]
 		for k, factor := range combination.Factors {
-			if factor != 0 {
+			if factor != 0 && k < cases { // behind the cases stand forces of imperfections
 				for s := range row {
 					row[s] += factor * of[k*segments+s]
 				}
@@ -235,16 +244,18 @@ func (f *Frame) moments() {
 			f.Pushed[l.Axis] = f.Pushed[l.Axis] || l.Value != 0
 		}
 	}
+	for axis := range f.Bends {
+		if f.Imperfect() && m.Sways(model.Axis(axis)) {
+			f.Bends[axis], f.Pushed[axis] = true, true
+		}
+	}
 	for axis, bends := range f.Bends {
 		if !bends {
 			continue
 		}
 		beam := action.Beam{Base: m.Base[axis], Top: m.Top[axis], Height: m.Height}
-		for _, h := range m.Holds {
-			if axis == 0 && h.Major || axis == 1 && h.Minor {
-				beam.Holds = append(beam.Holds, h.At)
-			}
-		}
+		beam.Holds = m.RigidHolds(model.Axis(axis))
+		beam.Springs = f.springs(axis)
 		loadings := make([][]action.Push, len(f.Env.Cases))
 		for _, l := range m.Loads {
 			p := action.Push{From: l.At}
@@ -261,6 +272,9 @@ func (f *Frame) moments() {
 				p.Line, p.To = l.Value, l.To
 			}
 			loadings[l.Case] = append(loadings[l.Case], p)
+		}
+		if f.Imperfect() {
+			loadings = append(loadings, f.notional(axis)...)
 		}
 		pieces, err := beam.Solve(loadings)
 		f.beams[axis], f.beamOK[axis] = pieces, err == nil
@@ -297,6 +311,10 @@ func (f *Frame) Assumptions() []string {
 	out = append(out, m.Section.Assumed...)
 	out = append(out, m.Material.Assumed...)
 	for axis, name := range []string{"major", "minor"} {
+		if f.Exact[axis] {
+			out = append(out, "critical loads about "+name+" of the whole member under each combination, by its stiffness matrix with its holds, springs and stepped forces (critical exact)")
+			continue
+		}
 		for _, s := range f.Stretches[axis] {
 			kind := "theoretical"
 			switch {
@@ -318,6 +336,7 @@ func (f *Frame) Assumptions() []string {
 	case m.Kind == model.Column:
 		out = append(out, "self-weight not counted")
 	}
+	out = append(out, f.swayAssumptions()...)
 	if f.Env.Basis.Actions == "" {
 		if len(f.Env.Automatic) == 0 {
 			out = append(out, "only the combinations written out are checked (no actions standard is stated)")

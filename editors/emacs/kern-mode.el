@@ -37,10 +37,10 @@
 
 ;; generated: statements
 (defconst kern-mode-statements
-  '("accidental" "actions" "amplification" "base" "depart" "effective" "factor_buckling"
+  '("accidental" "actions" "amplification" "base" "critical" "depart" "effective" "factor_buckling"
     "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
-    "hold" "length" "limit" "load" "material" "net" "note" "permanent" "require" "roofs" "section"
-    "selfweight" "show" "standard" "strengths" "top" "xi")
+    "hold" "imperfection" "length" "limit" "load" "material" "net" "note" "permanent" "require"
+    "roofs" "section" "selfweight" "show" "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -62,11 +62,11 @@
 ;; generated: particles
 (defconst kern-mode-particles
   '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "cases"
-    "characteristic" "cold" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
-    "independent" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent" "persistent"
-    "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic"
-    "simple" "slenderness" "snow" "sway" "temperature" "theoretical" "to" "together" "top" "twist"
-    "utilisation" "welded" "wind")
+    "characteristic" "cold" "deflection" "effective" "eq" "exact" "fixed" "floor" "free" "frequent"
+    "from" "guided" "hot" "imposed" "independent" "lengths" "major" "minor" "off" "offset" "on"
+    "per" "permanent" "persistent" "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended"
+    "rolled" "secant" "seismic" "simple" "slenderness" "snow" "span" "spring" "stiffness" "sway"
+    "temperature" "theoretical" "to" "together" "top" "twist" "under" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 

@@ -11,7 +11,7 @@ import (
 
 // order is the place of a statement in a member's block: lines are put behind
 // those that come before them in most calculations.
-var order = [][]string{{"section"}, {"material"}, {"height", "length", "from"}, {"base"}, {"top"}, {"hold"}, {"effective"}, {"net"}, {"load"}, {"limit"}, {"require"}, {"depart"}, {"selfweight"}, {"note"}}
+var order = [][]string{{"section"}, {"material"}, {"height", "length", "from"}, {"base"}, {"top"}, {"hold"}, {"effective"}, {"critical"}, {"imperfection"}, {"net"}, {"load"}, {"limit"}, {"require"}, {"depart"}, {"selfweight"}, {"note"}}
 
 func rank(word string) int {
 	return slices.IndexFunc(order, func(words []string) bool { return slices.Contains(words, word) })
