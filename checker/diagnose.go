@@ -87,11 +87,11 @@ func (r *Result) Sentence(c standard.Check) string {
 	var b strings.Builder
 	switch c.Verdict {
 	case standard.Fails:
-		fmt.Fprintf(&b, "%s fails %s", r.Name, c.Rule)
+		fmt.Fprintf(&b, "%s fails %s%s", r.Name, c.Rule, c.InLift())
 	case standard.Passes:
-		fmt.Fprintf(&b, "%s passes %s", r.Name, c.Rule)
+		fmt.Fprintf(&b, "%s passes %s%s", r.Name, c.Rule, c.InLift())
 	default:
-		fmt.Fprintf(&b, "%s is undecided in %s: %s", r.Name, c.Rule, c.Why)
+		fmt.Fprintf(&b, "%s is undecided in %s%s: %s", r.Name, c.Rule, c.InLift(), c.Why)
 		return b.String()
 	}
 	b.WriteString(numbers(r, c))
@@ -128,6 +128,17 @@ func Ratio(u float64) string {
 	return fmt.Sprintf("%.2f", u)
 }
 
+// liftPlace is the line of the lift that a check is about; nothing for a member of
+// one section and for what no line says.
+func (r *Result) liftPlace(name string) lang.Place {
+	for _, l := range r.Member.Lifts {
+		if name != "" && (l.Name() == name || strings.HasPrefix(name, l.Low+" to ")) {
+			return l.Place
+		}
+	}
+	return lang.Place{}
+}
+
 // governs points at the lines that decide a failing check: the section, and the
 // greatest load of the governing combination.
 func (r *Result) governs(c standard.Check) []lang.Related {
@@ -144,7 +155,9 @@ func (r *Result) governs(c standard.Check) []lang.Related {
 	if c.Rule == "slenderness" && m.Limits.SlendernessAt.Decl != nil {
 		out = append(out, lang.Related{Place: m.Limits.SlendernessAt, Message: "the limit that it breaks"})
 	}
-	if m.SectionAt.Decl != nil {
+	if at := r.liftPlace(c.Lift); at.Decl != nil {
+		out = append(out, lang.Related{Place: at, Message: "the lift that governs"})
+	} else if m.SectionAt.Decl != nil {
 		out = append(out, lang.Related{Place: m.SectionAt, Message: "its section"})
 	}
 	if c.Combination >= 0 {

@@ -52,7 +52,7 @@ func (r *Result) CombinationOf(c standard.Check) (model.Combination, bool) {
 // none could be made.
 func (r *Result) GoverningCheck() (standard.Check, bool) {
 	for _, c := range r.Checks {
-		if c.Rule == r.Governing && c.Utilisation == r.Utilisation {
+		if c.Rule == r.Governing && c.Lift == r.Lift && c.Utilisation == r.Utilisation {
 			return c, true
 		}
 	}
@@ -60,16 +60,14 @@ func (r *Result) GoverningCheck() (standard.Check, bool) {
 }
 
 // Critical is the elastic critical force of a stretch of the member about an
-// axis (0 major, 1 minor), N: Euler's load for its effective length. It is NaN
-// when a value that it needs is not known.
+// axis (0 major, 1 minor), N: Euler's load for its effective length, and for a
+// stretch in which the section changes that of the stepped bar under one force
+// throughout. It is NaN when a value that it needs is not known.
 func (r *Result) Critical(axis int, s action.Stretch) float64 {
-	m := r.Member
-	if m.Section == nil || m.Material == nil {
-		return math.NaN()
+	if f := r.Frame(); f != nil {
+		return f.Critical(axis, s)
 	}
-	i := [...]float64{m.Section.IMajor, m.Section.IMinor}[axis]
-	l := s.Effective()
-	return standard.Known(math.Pi * math.Pi * standard.Known(m.Material.E) * standard.Known(i) / (l * l))
+	return math.NaN()
 }
 
 // Symbol finds a symbol of the member's standard by its name or by the trade's
@@ -125,8 +123,12 @@ func (r *Result) OwnWeight() float64 {
 	if !m.Weight {
 		return 0
 	}
-	if m.Section == nil || m.Material == nil {
-		return math.NaN()
+	w := 0.0
+	for _, l := range m.Parts() {
+		if l.Section == nil || l.Material == nil {
+			return math.NaN()
+		}
+		w += l.Material.Density * l.Section.Area * unit.StandardGravity * (l.To - l.From)
 	}
-	return m.Material.Density * m.Section.Area * unit.StandardGravity * m.Height
+	return w
 }

@@ -200,6 +200,12 @@ func (w *mentions) statement(s *lang.Stmt) {
 	case "from": // from A to B
 		at(0)
 		at(2)
+	case "lift": // lift A to B { section = … }
+		at(0)
+		at(2)
+		for _, b := range block(s) {
+			w.statement(b)
+		}
 	case "hold": // hold minor at PLACE stiffness VALUE
 		at(2)
 		if len(args) > 3 && args[3].Is("stiffness") {

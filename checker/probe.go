@@ -18,6 +18,9 @@ func (r *Result) Probe(combination int, axial, bending float64) (utilisation flo
 		return math.NaN(), ""
 	}
 	m := *r.Member
+	if m.Imported != nil {
+		m.Imported = m.Imported.Scaled(axial, bending)
+	}
 	m.Loads = nil
 	for _, l := range r.Member.Loads {
 		if l.Kind != model.AxialLoad {

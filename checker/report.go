@@ -78,6 +78,7 @@ type Result struct {
 	// made; Governing is its rule.
 	Utilisation float64
 	Governing   string
+	Lift        string // the lift that governs, "" for a member of one section
 	Combination string
 	Checks      []standard.Check
 	Coverage    []standard.Coverage
@@ -121,12 +122,15 @@ func (r *Result) Derive() *derivation.Record {
 		return nil
 	}
 	record := &derivation.Record{Set: s.Symbols()}
-	s.Check(standard.NewFrame(r.env, r.Member, r.combinations), record)
+	standard.Run(s, standard.NewFrame(r.env, r.Member, r.combinations), record)
 	return record
 }
 
 // evaluate judges one member.
 func evaluate(env *model.Env, m *model.Member, combinations []model.Combination) *Result {
+	if m.Imported != nil {
+		combinations = m.Imported.List()
+	}
 	combinations = standard.Imperfections(env, m, combinations)
 	r := &Result{Name: m.Name, Title: m.Title, Member: m, Standard: env.Basis.Standard, Utilisation: math.NaN(),
 		env: env, combinations: combinations, Departures: m.Departs, Missing: m.Missing}
@@ -137,10 +141,10 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 		r.Missing = append(r.Missing, "its design standard is not known")
 	case s == nil:
 		r.Missing = append(r.Missing, "the calculation states no design standard")
-	case env.Refused != "":
+	case env.Refused != "" && m.Imported == nil:
 		r.Missing = append(r.Missing, env.Refused)
-	case m.Weight && math.IsNaN(m.Material.Density):
-		r.Missing = append(r.Missing, "the density of '"+m.Material.Name+"' is not known, so its self-weight is not either: state it, or say selfweight off")
+	case m.Weight && weightless(m) != nil:
+		r.Missing = append(r.Missing, "the density of '"+weightless(m).Name+"' is not known, so its self-weight is not either: state it, or say selfweight off")
 		at := m.MaterialAt
 		if at.Decl != m.Decl { // a line that is taken over is right where it stands
 			at = lang.Place{Decl: m.Decl, Span: m.NameSpan}
@@ -153,8 +157,11 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 		r.undecided()
 		return r
 	}
-	out := s.Check(standard.NewFrame(env, m, combinations), nil)
-	r.Checks, r.Coverage, r.Assumptions = out.Checks, out.Coverage, append(out.Assumptions, env.Assumed...)
+	out := standard.Run(s, standard.NewFrame(env, m, combinations), nil)
+	r.Checks, r.Coverage, r.Assumptions = out.Checks, out.Coverage, out.Assumptions
+	if m.Imported == nil {
+		r.Assumptions = append(r.Assumptions, env.Assumed...)
+	}
 	r.require(s, out)
 	r.depart()
 	r.judge()
@@ -162,54 +169,82 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 	return r
 }
 
-// require checks the conditions that the member sets on its results.
-func (r *Result) require(s standard.Standard, out *standard.Outcome) {
-	for _, q := range r.Member.Requires {
-		symbol := q.Symbol
-		v, ok := out.Value(symbol)
-		known := false
-		if _, found := s.Symbols().Find(symbol); found {
-			known = true
-		} else if alias := s.Alias(symbol); alias != "" {
-			symbol = alias
-			v, ok = out.Value(symbol)
-			known = true
-		} else if symbol == "utilisation" {
-			v, ok, known = unit.Quantity{Value: r.greatest()}, !math.IsNaN(r.greatest()), true
+// weightless is a material of the member whose density is not known, nil for none.
+func weightless(m *model.Member) *model.Material {
+	for _, l := range m.Parts() {
+		if math.IsNaN(l.Material.Density) {
+			return l.Material
 		}
-		check := standard.Check{Rule: "requirement", Clause: "require " + q.Symbol, Combination: -1, Demand: q.Quantity.Value, Capacity: v.Value, Dim: q.Quantity.Dim, Utilisation: math.NaN()}
-		problem := func(rule, message string, span lang.Span) {
-			check.Why = message
-			r.problems = append(r.problems, lang.Diagnostic{Decl: q.Place.Decl, Problem: lang.Problem{Rule: rule, Span: span, Message: message, Member: r.Name}})
-		}
-		switch {
-		case !known:
-			problem("unknown-name", "'"+q.Symbol+"' is no result of "+s.Name(), q.SymbolAt)
-		case !ok:
-			check.Why = "the calculation does not come to " + q.Symbol
-			check.Capacity = math.NaN()
-		case v.Dim != q.Quantity.Dim:
-			p := model.Unlike(q.Symbol, q.Value, q.Quantity, v.Dim)
-			p.Member, check.Why = r.Name, p.Message
-			r.problems = append(r.problems, lang.Diagnostic{Decl: q.Place.Decl, Problem: p})
-		default:
-			holds := map[string]bool{"<": v.Value < q.Quantity.Value, "<=": v.Value <= q.Quantity.Value, ">": v.Value > q.Quantity.Value, ">=": v.Value >= q.Quantity.Value}[q.Compare]
-			check.Verdict = standard.Fails
-			if holds {
-				check.Verdict = standard.Passes
-			}
-			check.Utilisation = q.Quantity.Value / v.Value
-			if strings.HasPrefix(q.Compare, "<") {
-				check.Demand, check.Capacity = v.Value, q.Quantity.Value
-				check.Utilisation = v.Value / q.Quantity.Value
-			}
-			if math.IsInf(check.Utilisation, 0) || check.Utilisation < 0 {
-				check.Utilisation = math.NaN()
-			}
-			check.Why = q.Because
-		}
-		r.Checks = append(r.Checks, check)
 	}
+	return nil
+}
+
+// require checks the conditions that the member sets on its results. A member of
+// several lifts must meet them in each.
+func (r *Result) require(s standard.Standard, out *standard.Outcome) {
+	lifts := out.Lifts
+	if len(lifts) == 0 {
+		lifts = []standard.LiftOutcome{{Outcome: out}}
+	}
+	for _, q := range r.Member.Requires {
+		var worst standard.Check
+		var problem *lang.Problem
+		for i, l := range lifts {
+			c, p := r.requirement(s, l, q)
+			if i == 0 || c.Verdict == standard.Undecided && worst.Verdict != standard.Undecided || worst.Verdict != standard.Undecided && c.Utilisation > worst.Utilisation {
+				worst, problem = c, p
+			}
+		}
+		if problem != nil {
+			problem.Member, worst.Why = r.Name, problem.Message
+			r.problems = append(r.problems, lang.Diagnostic{Decl: q.Place.Decl, Problem: *problem})
+		}
+		r.Checks = append(r.Checks, worst)
+	}
+}
+
+// requirement checks one condition in one lift; the problem is that of a condition
+// that makes no sense.
+func (r *Result) requirement(s standard.Standard, l standard.LiftOutcome, q model.Require) (standard.Check, *lang.Problem) {
+	symbol := q.Symbol
+	v, ok := l.Value(symbol)
+	known := false
+	if _, found := s.Symbols().Find(symbol); found {
+		known = true
+	} else if alias := s.Alias(symbol); alias != "" {
+		symbol = alias
+		v, ok = l.Value(symbol)
+		known = true
+	} else if symbol == "utilisation" {
+		v, ok, known = unit.Quantity{Value: r.greatest()}, !math.IsNaN(r.greatest()), true
+	}
+	check := standard.Check{Rule: "requirement", Clause: "require " + q.Symbol, Combination: -1, Demand: q.Quantity.Value, Capacity: v.Value, Dim: q.Quantity.Dim, Utilisation: math.NaN(), Lift: l.Lift}
+	switch {
+	case !known:
+		return check, &lang.Problem{Rule: "unknown-name", Span: q.SymbolAt, Message: "'" + q.Symbol + "' is no result of " + s.Name()}
+	case !ok:
+		check.Why = "the calculation does not come to " + q.Symbol
+		check.Capacity = math.NaN()
+	case v.Dim != q.Quantity.Dim:
+		p := model.Unlike(q.Symbol, q.Value, q.Quantity, v.Dim)
+		return check, &p
+	default:
+		holds := map[string]bool{"<": v.Value < q.Quantity.Value, "<=": v.Value <= q.Quantity.Value, ">": v.Value > q.Quantity.Value, ">=": v.Value >= q.Quantity.Value}[q.Compare]
+		check.Verdict = standard.Fails
+		if holds {
+			check.Verdict = standard.Passes
+		}
+		check.Utilisation = q.Quantity.Value / v.Value
+		if strings.HasPrefix(q.Compare, "<") {
+			check.Demand, check.Capacity = v.Value, q.Quantity.Value
+			check.Utilisation = v.Value / q.Quantity.Value
+		}
+		if math.IsInf(check.Utilisation, 0) || check.Utilisation < 0 {
+			check.Utilisation = math.NaN()
+		}
+		check.Why = q.Because
+	}
+	return check, nil
 }
 
 func (r *Result) greatest() float64 {
@@ -267,7 +302,7 @@ func (r *Result) judge() {
 	}
 	if best >= 0 {
 		c := r.Checks[best]
-		r.Utilisation, r.Governing, r.Combination = c.Utilisation, c.Rule, r.CombinationName(c)
+		r.Utilisation, r.Governing, r.Lift, r.Combination = c.Utilisation, c.Rule, c.Lift, r.CombinationName(c)
 	} else if len(r.Checks) == 0 {
 		worse(standard.Undecided) // nothing was checked, so nothing passes
 		if len(r.Member.Loads) == 0 && !r.Member.Weight {

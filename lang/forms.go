@@ -1,5 +1,7 @@
 package lang
 
+import "slices"
+
 // Context is a place where statements stand.
 type Context string
 
@@ -9,6 +11,7 @@ const (
 	InBasis    Context = "basis"    // in the design basis
 	InLevel    Context = "level"    // in a level's block
 	InMember   Context = "member"   // in a column, strut or tie
+	InLift     Context = "lift"     // in the block of a lift of a member
 	InMaterial Context = "material" // in a material's block
 	InSection  Context = "section"  // in the block of a shape
 )
@@ -26,6 +29,7 @@ type Form struct {
 // Forms are the statements of the language, by context.
 var Forms = []Form{
 	{"include", InFile, []string{`include "FILE"`}, "Brings in the declarations of another file of the workspace.", `include "${1:common.kern}"`},
+	{"forces", InFile, []string{`forces "FILE" compression positive|negative`}, "Takes the forces of members from a table of an analysis.", `forces "${1:frame.csv}" compression ${2|positive,negative|}`},
 	{"basis", InFile, []string{`basis { … }`}, "The design basis, once in a calculation.", "basis {\n    standard \"${1:EN 1993-1-1:2005}\"\n    actions  \"${2:EN 1990:2002}\"\n    $0\n}"},
 	{"material", InFile, []string{`material NAME = "GRADE" [per "STANDARD"]`, `material NAME { E = …; fy = …; density = … }`}, "A steel grade, or a material with stated values.", `material ${1:s355} = "${2:S355}"`},
 	{"section", InFile, []string{`section NAME = "DESIGNATION"`, `section NAME = SHAPE { … }`}, "A cross-section: from the catalogue, or a shape with its dimensions.", `section ${1:post} = "${2:HEB 160}"`},
@@ -64,6 +68,7 @@ var Forms = []Form{
 	{"height", InMember, []string{`height = LENGTH`}, "The height of the member.", "height = ${1:3 m}"},
 	{"length", InMember, []string{`length = LENGTH`}, "The length of the member.", "length = ${1:3 m}"},
 	{"from", InMember, []string{`from LEVEL to LEVEL`}, "The levels between which the member stands.", "from ${1:ground} to ${2:roof}"},
+	{"lift", InMember, []string{`lift PLACE to PLACE { section = …; material = … }`}, "A part of the height with a section or a material of its own.", "lift ${1:ground} to ${2:first} { section = ${3:\"HEB 200\"} }"},
 	{"base", InMember, []string{`base pinned|fixed|free|guided [about major|minor]`, `base spring MOMENT/ANGLE [about major|minor]`, `base spring FORCE/LENGTH [about major|minor]`}, "How the lower end is held.", "base ${1|pinned,fixed,free,guided|}"},
 	{"top", InMember, []string{`top pinned|fixed|free|guided [about major|minor]`, `top spring MOMENT/ANGLE [about major|minor]`, `top spring FORCE/LENGTH [about major|minor]`}, "How the upper end is held.", "top ${1|pinned,fixed,free,guided|}"},
 	{"hold", InMember, []string{`hold major|minor|both|twist at PLACE`, `hold major|minor|both at PLACE stiffness FORCE/LENGTH`}, "A point between the ends that is restrained.", "hold ${1|both,minor,major,twist|} at ${2:height / 2}"},
@@ -83,6 +88,9 @@ var Forms = []Form{
 	{"imperfection", InMember, []string{`imperfection on`, `imperfection off`}, "Whether this member carries the forces of a sway imperfection where it can sway.", "imperfection ${1|on,off|}"},
 	{"selfweight", InMember, []string{`selfweight on`, `selfweight off`}, "Whether this member carries its own weight.", "selfweight ${1|off,on|}"},
 	{"note", InMember, []string{`note "TEXT"`}, "A remark that goes with the results.", `note "${1:text}"`},
+
+	{"section", InLift, []string{`section = NAME`, `section = "DESIGNATION"`, `section = SHAPE { … }`}, "The cross-section of the lift.", "section = ${1:\"HEB 200\"}"},
+	{"material", InLift, []string{`material = NAME`, `material = "GRADE"`}, "What the lift is made of.", "material = ${1:\"S355\"}"},
 
 	{"E", InMaterial, []string{`E = STRESS`}, "Young's modulus.", "E = ${1:210 GPa}"},
 	{"G", InMaterial, []string{`G = STRESS`}, "Shear modulus; from E and nu when it is not given.", "G = ${1:81 GPa}"},
@@ -131,6 +139,18 @@ func FormsIn(in Context) []Form {
 	return out
 }
 
+// WordsIn lists the words that begin the statements of a context, each once, in
+// the order of the table.
+func WordsIn(in Context) []string {
+	var out []string
+	for _, f := range Forms {
+		if f.In == in && !slices.Contains(out, f.Word) {
+			out = append(out, f.Word)
+		}
+	}
+	return out
+}
+
 // Words explains the other words of the language: those that stand inside
 // statements.
 var Words = map[string]string{
@@ -142,6 +162,7 @@ var Words = map[string]string{
 	"from": "from a place", "to": "to a place", "top": "the upper end", "as": "like another member, but for what is said here", "per": "by a product standard",
 	"annex": "a set of national values", "eq": "the equation of the combinations", "because": "the reason", "floor": "an area of floor that the member carries",
 	"hot": "hot finished (EN 10210)", "cold": "cold formed (EN 10219)", "welded": "built up by welding", "rolled": "hot rolled", "effective": "by effective length factors",
+	"compression": "pressing along the member", "positive": "more than zero", "negative": "less than zero",
 	"permanent": "acts always", "imposed": "people, goods, vehicles", "snow": "snow", "wind": "wind", "temperature": "temperature",
 	"accidental": "impact, explosion or another accident", "seismic": "earthquake", "persistent": "for persistent and transient situations",
 	"characteristic": "for deflections that do not go back", "frequent": "for deflections that go back", "quasipermanent": "for deflections that last",

@@ -132,7 +132,7 @@ func (h *hovering) context() lang.Context {
 // contextOf is the kind of block that a statement opens.
 func contextOf(s *lang.Stmt) lang.Context {
 	return map[string]lang.Context{"basis": lang.InBasis, "level": lang.InLevel, "column": lang.InMember, "strut": lang.InMember, "tie": lang.InMember,
-		"material": lang.InMaterial, "section": lang.InSection}[s.Word]
+		"lift": lang.InLift, "material": lang.InMaterial, "section": lang.InSection}[s.Word]
 }
 
 // units are the units that the file's results are shown in.

@@ -37,6 +37,13 @@ func (h *hovering) line(s *lang.Stmt) {
 		}
 	case "material":
 		h.strength(r)
+	case "lift":
+		for _, l := range r.Member.Lifts {
+			if l.Place == (lang.Place{Decl: h.at.Decl, Span: s.Line}) && l.Section != nil && l.Material != nil {
+				h.page.Text(output.Strong(output.SectionTitle(l.Section)), output.Words(": "+output.MaterialTitle(l.Material)+", from "+display(r.Units(), l.From, unit.Length)+" to "+display(r.Units(), l.To, unit.Length)))
+				h.sentences(r, func(c standard.Check) bool { return c.Lift == l.Name() })
+			}
+		}
 	case "limit":
 		h.limit(r, s)
 	case "require":
@@ -222,8 +229,12 @@ func (h *hovering) stretches(r *checker.Result, which func(axis int, t action.St
 			if !which(axis, t) || frame.Exact[axis] {
 				continue
 			}
+			k, effective := factor(t.K), display(units, t.Effective(), unit.Length)
+			if frame.Stepped(t.From, t.To) {
+				k, effective = "–", "by lift" // the section changes in it
+			}
 			rows = append(rows, []output.Line{output.Words(model.Axis(axis).String()), output.Words(display(units, t.From, unit.Length) + " to " + display(units, t.To, unit.Length)),
-				output.Words(t.Base.String() + "–" + t.Top.String()), output.Words(factor(t.K)), output.Words(display(units, t.Effective(), unit.Length)), output.Words(display(units, r.Critical(axis, t), unit.Force))})
+				output.Words(t.Base.String() + "–" + t.Top.String()), output.Words(k), output.Words(effective), output.Words(display(units, frame.Critical(axis, t), unit.Force))})
 		}
 	}
 	h.page.Table([]string{"axis", "stretch", "ends", "K", "L_cr", "N_cr"}, "lllrrr", rows)

@@ -128,9 +128,9 @@ func (m *tokenMarks) statement(s *lang.Stmt, in lang.Context) {
 	default:
 		m.parts(parts, s.Word)
 	}
-	if s.Body != nil && s.Word == "section" {
+	if in, ok := map[string]lang.Context{"section": lang.InSection, "lift": lang.InLift}[s.Word]; ok && s.Body != nil {
 		for _, b := range s.Body.Stmts {
-			m.statement(b, lang.InSection)
+			m.statement(b, in)
 		}
 	}
 }

@@ -14,31 +14,41 @@ type Push struct {
 	To     float64 // height, m; of a line load
 }
 
-// Beam is a uniform column as a beam about one axis, on its ends and holds.
+// Beam is a column as a beam about one axis, on its ends and holds.
 type Beam struct {
 	Base, Top End
 	Holds     []float64 // heights of rigid lateral holds, strictly inside
 	Springs   []Spring
 	Height    float64 // m
+	// Steps are the parts of different stiffness, from the base up; none for a
+	// uniform column.
+	Steps []Step
 }
 
-// Spring is an elastic support of a beam with E I = 1: its stiffnesses are those
-// of the real one divided by E I.
+// Spring is an elastic support of a beam: its stiffnesses are those of the real one
+// divided by E I, where the section changes by that of the base.
 type Spring struct {
 	At      float64 // height, m; a spring against turning stands at an end
 	Lateral float64 // against moving sideways, 1/m3; 0 for none
 	Turning float64 // against turning, 1/m; 0 for none
 }
 
+// Step is a part of a column with a stiffness of its own. It begins at the top of
+// the one below, the first at the base; the last ends at the top of the column.
+type Step struct {
+	To        float64 // height, m
+	Stiffness float64 // E I, Nm2
+}
+
 // Piece is a part of a beam in which nothing but a constant line load acts.
 // With x the distance from From, the bending moment is
-// M + V x + Line x²/2 and the deflection times E I is
+// M + V x + Line x²/2 and the deflection times the piece's own E I is
 // D + R x + M x²/2 + V x³/6 + Line x⁴/24.
 type Piece struct {
 	From, To float64
 	M, V     float64 // bending moment and shear at From
 	Line     float64
-	D, R     float64 // deflection and slope at From, times E I
+	D, R     float64 // deflection and slope at From, times E I of the piece
 }
 
 // Moment is the bending moment at x above From.
@@ -50,6 +60,12 @@ func (p Piece) Shear(x float64) float64 { return p.V + x*p.Line }
 // Deflection is the deflection times E I at x above From.
 func (p Piece) Deflection(x float64) float64 {
 	return p.D + x*(p.R+x*(p.M/2+x*(p.V/6+x*p.Line/24)))
+}
+
+// Cut is the part of the piece between two heights inside it.
+func (p Piece) Cut(from, to float64) Piece {
+	x := from - p.From
+	return Piece{From: from, To: to, M: p.Moment(x), V: p.Shear(x), Line: p.Line, D: p.Deflection(x), R: p.slope(x)}
 }
 
 // slope is the slope times E I at x above From.
@@ -90,11 +106,11 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 	}
 	nodes := b.nodes(loadings)
 	n := len(nodes)
-	// Only the ends, holds and springs take part in the equations: loads that lie
-	// close together would cost digits there.
-	at := []int{0} // the supports among the nodes
+	// Only the ends, holds, springs and changes of section take part in the
+	// equations: loads that lie close together would cost digits there.
+	at := []int{0} // these among the nodes
 	for i := 1; i < n-1; i++ {
-		if b.holdAt(nodes[i]) || b.springAt(nodes[i]) {
+		if b.holdAt(nodes[i]) || b.springAt(nodes[i]) || b.stepAt(nodes[i]) {
 			at = append(at, i)
 		}
 	}
@@ -106,6 +122,7 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 	}
 	for i := range len(at) - 1 {
 		l := nodes[at[i+1]] - nodes[at[i]]
+		ei := b.stiffness(nodes[at[i]], nodes[at[i+1]])
 		e := [4][4]float64{
 			{12 / (l * l * l), 6 / (l * l), -12 / (l * l * l), 6 / (l * l)},
 			{6 / (l * l), 4 / l, -6 / (l * l), 2 / l},
@@ -114,7 +131,7 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 		}
 		for r := range 4 {
 			for c := range 4 {
-				k[2*i+r][2*i+c] += e[r][c]
+				k[2*i+r][2*i+c] += ei * e[r][c]
 			}
 		}
 	}
@@ -155,7 +172,8 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 	for j, load := range cases {
 		for i := range len(at) - 1 {
 			l := nodes[at[i+1]] - nodes[at[i]]
-			v1, r1, v2, r2 := u[2*i][j], u[2*i+1][j], u[2*i+2][j], u[2*i+3][j]
+			ei := b.stiffness(nodes[at[i]], nodes[at[i+1]])
+			v1, r1, v2, r2 := ei*u[2*i][j], ei*u[2*i+1][j], ei*u[2*i+2][j], ei*u[2*i+3][j]
 			p := Piece{D: v1, R: r1}
 			p.V = 12/(l*l*l)*(v1-v2) + 6/(l*l)*(r1+r2) - load.span[i][0]
 			p.M = -(6/(l*l)*(v1-v2) + (4*r1+2*r2)/l - load.span[i][1])
@@ -173,6 +191,28 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 		}
 	}
 	return out, nil
+}
+
+// stepAt tells whether the stiffness changes at a height.
+func (b Beam) stepAt(z float64) bool {
+	for i, s := range b.Steps {
+		if i < len(b.Steps)-1 && math.Abs(s.To-z) <= 1e-9*b.Height {
+			return true
+		}
+	}
+	return false
+}
+
+// stiffness is E I between two neighbouring heights in question, over that of the
+// base.
+func (b Beam) stiffness(from, to float64) float64 {
+	middle := (from + to) / 2
+	for i, s := range b.Steps {
+		if middle < s.To || i == len(b.Steps)-1 {
+			return s.Stiffness / b.Steps[0].Stiffness
+		}
+	}
+	return 1
 }
 
 // holdAt tells whether a hold is at a height.
@@ -284,6 +324,11 @@ func (b Beam) check(loadings [][]Push) error {
 			return ErrLoading
 		}
 	}
+	for i, s := range b.Steps {
+		if !inside(s.To) || i > 0 && !(s.To > b.Steps[i-1].To) || !finite(s.Stiffness) || !(s.Stiffness > 0) {
+			return ErrLoading
+		}
+	}
 	for _, pushes := range loadings {
 		for _, p := range pushes {
 			if !finite(p.Force, p.Moment, p.Line) || !inside(p.From) {
@@ -312,6 +357,9 @@ func (b Beam) nodes(loadings [][]Push) []float64 {
 	z := append([]float64{0, b.Height}, b.Holds...)
 	for _, s := range b.Springs {
 		z = append(z, s.At)
+	}
+	for _, s := range b.Steps {
+		z = append(z, s.To)
 	}
 	for _, pushes := range loadings {
 		for _, p := range pushes {

@@ -11,18 +11,40 @@ func sqrt(x float64) float64 { return math.Sqrt(x) }
 // (ascending, strictly inside): multiply by E I. Zero when the column is a
 // mechanism.
 func CriticalUniform(base, top End, holds []float64, height float64) float64 {
-	bar := Bar{Base: base, Top: top}
-	bar.Nodes = append(append([]float64{0}, holds...), height)
-	for i := range bar.Nodes {
-		inner := i > 0 && i < len(bar.Nodes)-1
-		bar.Held = append(bar.Held, inner)
-	}
-	n := len(bar.Nodes) - 1
-	bar.Force, bar.Stiffness = make([]float64, n), make([]float64, n)
-	for i := range bar.Force {
-		bar.Force[i], bar.Stiffness[i] = 1, 1
+	return CriticalStepped(base, top, holds, []Step{{To: height, Stiffness: 1}})
+}
+
+// CriticalStepped is the elastic critical axial force, N, of a column of several
+// stiffnesses under a force that does not change with height, on rigid holds
+// (ascending, strictly inside). Zero when the column is a mechanism or a step has
+// no positive height and stiffness.
+func CriticalStepped(base, top End, holds []float64, steps []Step) float64 {
+	bar := Bar{Base: base, Top: top, Nodes: []float64{0}, Held: []bool{false}}
+	from := 0.0
+	for i, s := range steps {
+		inner := holds
+		for len(inner) > 0 && inner[0] <= from*(1+1e-9) {
+			inner = inner[1:]
+		}
+		for _, h := range inner {
+			if h < s.To*(1-1e-9) {
+				bar.node(h, true, s.Stiffness)
+			}
+		}
+		held := false
+		for _, h := range holds {
+			held = held || math.Abs(h-s.To) <= 1e-9*s.To
+		}
+		bar.node(s.To, held && i < len(steps)-1, s.Stiffness)
+		from = s.To
 	}
 	return bar.Critical()
+}
+
+// node adds a part under a force of 1 N, up to a height.
+func (b *Bar) node(z float64, held bool, stiffness float64) {
+	b.Nodes, b.Held = append(b.Nodes, z), append(b.Held, held)
+	b.Force, b.Stiffness = append(b.Force, 1), append(b.Stiffness, stiffness)
 }
 
 // Bar is a straight column cut at its nodes, with an axial force and a bending

@@ -62,6 +62,7 @@ type Stretch struct {
 	Exact      bool    // K was solved for the whole column, see Stretches
 	Overridden bool    // K is the user's
 	Sprung     bool    // a spring keeps it from moving sideways somewhere
+	Stepped    bool    // the section changes in it; K is for one of its sections and one combination
 }
 
 // Length is the stretch's own length.

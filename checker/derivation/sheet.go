@@ -28,9 +28,15 @@ func (r *Record) Of(rule string) []Step {
 	if rule == "" {
 		return r.Steps
 	}
+	lift := ""
+	for _, s := range r.Steps {
+		if s.Group == rule {
+			lift = s.Lift
+		}
+	}
 	var out []Step
 	for _, s := range r.Steps {
-		if s.Group == rule || s.Group == "" {
+		if (s.Group == rule || s.Group == "") && s.Lift == lift {
 			out = append(out, s)
 		}
 	}
@@ -66,6 +72,7 @@ type Step struct {
 	Clause  string   // the clause of a computed step, the source of a taken value
 	Note    string   // a remark that stands by itself; the other fields are empty
 	Group   string   // the rule of the check that it belongs to, "" for shared steps
+	Lift    string   // the lift of the member that it is about, "" for a member of one section
 }
 
 // Input is a value that a formula read.

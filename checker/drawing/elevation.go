@@ -132,7 +132,7 @@ func (e *elevation) lines(g loadGroup, axis int) []Text {
 		}
 		w := e.show(v, dim)
 		if e.r.Env().Declared() {
-			w = e.r.Env().Cases[l.Case].Name + " " + w
+			w += " " + e.r.Env().Cases[l.Case].Name // the value stays where the name is too long
 		}
 		out = append(out, Text{Words: w, Size: small})
 	}

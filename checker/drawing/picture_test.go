@@ -4,12 +4,14 @@ import (
 	"encoding/xml"
 	"io"
 	"math"
+	"strconv"
 	"strings"
 	"testing"
 
 	"kern/checker"
 	"kern/checker/drawing"
 	"kern/lang"
+	"kern/lang/unit"
 )
 
 // check works out a calculation of one file.
@@ -129,3 +131,7 @@ func TestRandom(t *testing.T) {
 	}
 	t.Logf("%d pictures of %d members", pictures, members)
 }
+
+// shortly writes a number as pictures do; exact writes every digit.
+func shortly(v float64) string { return unit.Short(v, 4) }
+func exact(v float64) string   { return strconv.FormatFloat(v, 'f', -1, 64) }

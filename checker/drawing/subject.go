@@ -94,7 +94,7 @@ func SectionOf(r *checker.Result) *Scene {
 }
 
 // words turns the name of a rule into words.
-func words(rule string) string { return strings.ReplaceAll(rule, "-", " ") }
+func words(name string) string { return strings.ReplaceAll(name, "-", " ") }
 
 // depths are the sizes of the section that are seen where the member bends about
 // the major and the minor axis, m; zero for a section without a shape.

@@ -3,6 +3,7 @@ package model
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"kern/lang"
 )
@@ -37,7 +38,7 @@ type declared struct {
 }
 
 // topWords are the words that may begin a declaration, for offers.
-var topWords = []string{"include", "basis", "material", "section", "case", "combination", "exclusive", "level", "column", "strut", "tie"}
+var topWords = slices.DeleteFunc(lang.WordsIn(lang.InFile), func(w string) bool { return w == "" })
 
 // NewEnv reads what the members of a calculation share.
 func NewEnv(files []*lang.File, standards Standards) *Env {
@@ -51,6 +52,7 @@ func NewEnv(files []*lang.File, standards Standards) *Env {
 	b.levels()
 	b.materials()
 	b.sections()
+	b.forces()
 	b.values()
 	b.combinations()
 	return b.env
@@ -65,6 +67,10 @@ func (b *builder) reader(d declared) *reader {
 // collect registers every name, so that definitions may stand in any order.
 func (b *builder) collect() {
 	for _, f := range b.files {
+		if f.Data {
+			b.env.decls = append(b.env.decls, f.Decls...) // its members lean on it
+			continue
+		}
 		for _, d := range f.Decls {
 			member, other := false, false
 			for _, s := range d.Stmts {
@@ -75,7 +81,7 @@ func (b *builder) collect() {
 					b.noBlock(item)
 					continue
 				}
-				if s.Word == "case" || s.Word == "combination" || s.Word == "exclusive" || s.Word == "include" {
+				if s.Word == "case" || s.Word == "combination" || s.Word == "exclusive" || s.Word == "include" || s.Word == "forces" {
 					b.noBlock(item)
 				}
 				switch s.Word {
@@ -91,7 +97,7 @@ func (b *builder) collect() {
 						b.name(item, s.Args[0], kind, -1)
 					}
 					b.stmts = append(b.stmts, item)
-				case "basis", "exclusive":
+				case "basis", "exclusive", "forces":
 					b.stmts = append(b.stmts, item)
 				case "include":
 				case "":

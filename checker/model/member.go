@@ -9,8 +9,7 @@ import (
 )
 
 // memberWords are the words that may begin a statement in a member's block.
-var memberWords = []string{"section", "material", "height", "length", "from", "base", "top", "hold", "effective", "load", "limit",
-	"require", "depart", "note", "selfweight", "net", "critical", "imperfection"}
+var memberWords = lang.WordsIn(lang.InMember)
 
 // DepartureRules are the rules that a member may depart from; the checker fills
 // in the rules of its standards.
@@ -85,6 +84,9 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, res
 		c.Name, c.NameSpan = e.Text, e.Span
 		if i > 0 {
 			c.Problems = nil // said once
+		}
+		if in := env.imported[e.Text]; in != nil {
+			c.imports(in)
 		}
 		out = append(out, &c)
 	}
@@ -204,7 +206,7 @@ func (w *memberReader) statement(d declared) {
 		r.args = value
 	}
 	switch s.Word {
-	case "load", "hold", "require", "depart", "note", "limit", "effective", "base", "top":
+	case "load", "hold", "lift", "require", "depart", "note", "limit", "effective", "base", "top":
 	default:
 		key := sameWord(s.Word)
 		if first, again := w.first[key]; again {
@@ -229,9 +231,11 @@ func (w *memberReader) statement(d declared) {
 	}
 	switch s.Word {
 	case "section":
-		w.section(r, d)
+		w.m.Section, w.m.SectionAt = w.section(r, d)
 	case "material":
-		w.material(r)
+		w.m.Material, w.m.MaterialAt = w.material(r)
+	case "lift":
+		w.lift(r, d)
 	case "height", "length":
 		w.m.Height, _, _ = w.height(r)
 		w.m.HeightAt = r.place(s.Line)
@@ -272,7 +276,7 @@ func (w *memberReader) statement(d declared) {
 	default:
 		w.unknown(r)
 	}
-	if s.Body != nil && s.Word != "section" && !r.failed {
+	if s.Body != nil && s.Word != "section" && s.Word != "lift" && !r.failed {
 		r.fail("left-over", s.Body.Span, "'%s' takes no block", s.Word)
 	}
 	r.end()

@@ -55,6 +55,8 @@ type Env struct {
 	service     func() []Combination // made when they are asked for first
 
 	offer     map[NameKind][]string // the names of each kind, for offers
+	imported  map[string]*Imported  // by member
+	unread    []string              // forces statements whose tables could not be read
 	late      []*lang.Value         // values that lean on results of members
 	settled   map[*lang.Value]unit.Quantity
 	results   Results
@@ -253,12 +255,16 @@ type Member struct {
 	MaterialAt,
 	HeightAt lang.Place
 
-	Height float64 // m
-	From   float64 // height of the base above datum, m
 	// Net is the area that holes leave, m2 (EN 1993-1-1 6.2.2.2); NaN when it is not
 	// stated.
-	Net       float64
-	NetAt     lang.Place
+	Net   float64
+	NetAt lang.Place
+	// Lifts are the parts of the height with a section and material of their own,
+	// from the base up and without gaps; none for a member of one section.
+	Lifts     []Lift
+	Height    float64 // m
+	From      float64 // height of the base above datum, m
+	Levels    bool    // it stands between levels: From is known
 	Base, Top [2]action.End
 	// BaseSpring and TopSpring hold the ends besides Base and Top, about each axis.
 	BaseSpring, TopSpring [2]Spring
@@ -267,7 +273,8 @@ type Member struct {
 	Imperfect             bool       // carries the forces of a sway imperfection where it can sway
 	Factor                [3]float64 // effective length factors of the user: major, minor, twist; 0 for none
 	Loads                 []Load
-	Weight                bool // self-weight counts
+	Imported              *Imported // forces from a table in place of loads; nil for none
+	Weight                bool      // self-weight counts
 
 	Limits   Limits
 	Requires []Require

@@ -54,6 +54,9 @@ func nearest(text string, names []string, n int) (near []string, sure bool) {
 		case a.distance != b.distance:
 			return a.distance < b.distance
 		}
+		if p, q := common(lower, a.name), common(lower, b.name); p != q {
+			return p > q
+		}
 		return a.name < b.name
 	})
 	if len(found) > 0 {
@@ -65,6 +68,15 @@ func nearest(text string, names []string, n int) (near []string, sure bool) {
 		near = append(near, found[i].name)
 	}
 	return near, sure
+}
+
+// common is how many letters two words begin with together.
+func common(a, b string) int {
+	n := 0
+	for n < len(a) && n < len(b) && a[n] == b[n] {
+		n++
+	}
+	return n
 }
 
 // distance is the number of letters to change, leave out or put in; two

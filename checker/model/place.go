@@ -32,7 +32,7 @@ func (w *memberReader) fromTo(r *reader) {
 		r.fail("impossible-value", span, "from %s m to %s m is no height of a member", unit.Short(from, 4), unit.Short(to, 4))
 		return
 	}
-	w.m.From, w.m.Height = from, to-from
+	w.m.From, w.m.Height, w.m.Levels = from, to-from, true
 }
 
 func (w *memberReader) axis(r *reader) (Axis, bool) {

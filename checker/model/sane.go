@@ -31,6 +31,7 @@ func (w *memberReader) complete() {
 		}
 		m.Missing = append(m.Missing, "it has no "+what)
 	}
+	w.lifts(missing)
 	if m.Section == nil {
 		missing("section = \"HEB 160\"", "section")
 	}
@@ -75,7 +76,10 @@ func (w *memberReader) complete() {
 		m.Weight = false
 		m.Assumed = append(m.Assumed, "self-weight of the "+m.Kind.String()+" not counted (its slope is not known)")
 	}
-	if len(m.Loads) == 0 && len(m.Missing) == 0 {
+	if unread := w.env.unread; len(m.Loads) == 0 && len(unread) > 0 && !w.tabled() {
+		m.Missing = append(m.Missing, "its forces may stand in a table that could not be read: "+clip(unread[0]))
+	}
+	if len(m.Loads) == 0 && len(m.Missing) == 0 && !w.tabled() {
 		m.Problems = append(m.Problems, lang.Diagnostic{Decl: m.Decl, Problem: lang.Problem{Rule: "member-without-load", Severity: lang.Warning, Span: m.NameSpan,
 			Message: "the " + m.Kind.String() + " carries no load"}})
 	}

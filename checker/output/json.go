@@ -63,6 +63,7 @@ type (
 		Rule        string   `json:"rule"`
 		Clause      string   `json:"clause"`
 		Combination string   `json:"combination"`
+		Lift        string   `json:"lift,omitempty"`
 		Demand      amount   `json:"demand"`
 		Capacity    amount   `json:"capacity"`
 		Utilisation *float64 `json:"utilisation"`
@@ -75,6 +76,14 @@ type (
 		Value  *float64 `json:"value"`
 		Unit   string   `json:"unit"`
 		Clause string   `json:"clause"`
+		Lift   string   `json:"lift,omitempty"`
+	}
+	lift struct {
+		Name     string `json:"name"`
+		From     amount `json:"from"`
+		To       amount `json:"to"`
+		Section  string `json:"section"`
+		Material string `json:"material"`
 	}
 	hold struct {
 		At              amount `json:"at"`
@@ -107,6 +116,8 @@ type (
 		Utilisation *float64    `json:"utilisation"`
 		Governing   string      `json:"governing"`
 		Combination string      `json:"combination"`
+		Lift        string      `json:"lift,omitempty"`
+		Lifts       []lift      `json:"lifts,omitempty"`
 		Checks      []check     `json:"checks"`
 		Quantities  []quantity  `json:"quantities"`
 		Holds       []hold      `json:"holds,omitempty"`
@@ -165,26 +176,36 @@ func buildMember(m *checker.Result, r *checker.Report, lines *index, names Names
 	file, at := r.Place(m)
 	units := m.Units()
 	out := member{Name: m.Name, Title: m.Title, File: names(file), Line: lines.span(file, at).Start.Line, Standard: m.Standard, Verdict: m.Verdict.String(),
-		Utilisation: finite(m.Utilisation), Governing: m.Governing, Combination: m.Combination,
+		Utilisation: finite(m.Utilisation), Governing: m.Governing, Combination: m.Combination, Lift: m.Lift,
 		Checks: []check{}, Quantities: []quantity{}, Coverage: []coverage{}, Assumptions: m.Assumptions, Departures: []departure{}, Missing: m.Missing}
 	if out.Assumptions == nil {
 		out.Assumptions = []string{}
 	}
+	for _, l := range m.Member.Lifts {
+		if l.Section != nil && l.Material != nil {
+			out.Lifts = append(out.Lifts, lift{l.Name(), amountOf(units, l.From, unit.Length), amountOf(units, l.To, unit.Length), l.Section.Title(), l.Material.Title()})
+		}
+	}
 	for _, c := range m.Checks {
-		out.Checks = append(out.Checks, check{Rule: c.Rule, Clause: c.Clause, Combination: m.CombinationName(c),
+		out.Checks = append(out.Checks, check{Rule: c.Rule, Clause: c.Clause, Combination: m.CombinationName(c), Lift: c.Lift,
 			Demand: amountOf(units, c.Demand, c.Dim), Capacity: amountOf(units, c.Capacity, c.Dim), Utilisation: finite(c.Utilisation), Verdict: c.Verdict.String(),
 			Why: why(c), Departed: c.Departed})
 	}
 	if record := m.Derive(); record != nil {
-		seen := map[derivation.ID]bool{}
+		type key struct {
+			symbol derivation.ID
+			lift   string
+		}
+		seen := map[key]bool{}
 		for _, s := range record.Steps {
-			if s.Note != "" || seen[s.Symbol] {
+			k := key{s.Symbol, s.Lift}
+			if s.Note != "" || seen[k] {
 				continue
 			}
-			seen[s.Symbol] = true
+			seen[k] = true
 			sym := record.Set.At(s.Symbol)
 			a := amountOf(units, s.Value, sym.Dim)
-			out.Quantities = append(out.Quantities, quantity{sym.Name, a.Value, a.Unit, s.Clause})
+			out.Quantities = append(out.Quantities, quantity{sym.Name, a.Value, a.Unit, s.Clause, s.Lift})
 		}
 	}
 	for _, h := range m.Holds() {

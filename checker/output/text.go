@@ -8,6 +8,7 @@ import (
 	"unicode/utf8"
 
 	"kern/checker"
+	"kern/checker/model"
 	"kern/checker/standard"
 	"kern/lang"
 
@@ -185,11 +186,11 @@ func (p *printer) table(r *checker.Report) {
 	head := []string{"member", "section", "verdict", "utilisation", "governing check", "under"}
 	rows := make([][]string, len(r.Members))
 	for i, m := range r.Members {
-		section := "–"
-		if m.Member.Section != nil {
-			section = m.Member.Section.Title()
+		governing := m.Governing
+		if m.Lift != "" {
+			governing += ", " + m.Lift
 		}
-		rows[i] = []string{m.Name, section, m.Verdict.String(), checker.Ratio(m.Utilisation), dash(m.Governing), dash(m.Combination)}
+		rows[i] = []string{m.Name, sectionsOf(m.Member), m.Verdict.String(), checker.Ratio(m.Utilisation), dash(governing), dash(m.Combination)}
 		if len(m.Departures) > 0 {
 			rows[i][2] += ", departs"
 		}
@@ -234,6 +235,17 @@ func (p *printer) table(r *checker.Report) {
 		})
 	}
 	fmt.Fprintln(p.w)
+}
+
+// sectionsOf names the sections of a member from the base up.
+func sectionsOf(m *model.Member) string {
+	var names []string
+	for _, l := range m.Parts() {
+		if l.Section != nil && (len(names) == 0 || names[len(names)-1] != l.Section.Title()) {
+			names = append(names, l.Section.Title())
+		}
+	}
+	return dash(strings.Join(names, ", "))
 }
 
 func dash(s string) string {

@@ -36,9 +36,15 @@ func Working(p *Page, r *checker.Result, rule string) {
 	if record != nil {
 		p.Head(2, "Loads")
 		Loads(p, r)
-		if steps := own(record, ""); len(steps) > 0 {
-			p.Head(2, "Values that the checks share")
-			Steps(p, record.Set, r.Units(), steps)
+		for _, lift := range liftsOf(record) {
+			title := "Values that the checks share"
+			if lift != "" {
+				title += ", lift " + lift
+			}
+			if steps := shared(record, lift); len(steps) > 0 {
+				p.Head(2, title)
+				Steps(p, record.Set, r.Units(), steps)
+			}
 		}
 		for _, name := range rulesOf(r, record) {
 			p.Head(2, name)
@@ -100,10 +106,15 @@ func MemberHead(p *Page, r *checker.Result) {
 		fact("actions", basis.Actions+" ("+basis.Equation+")")
 	}
 	m := r.Member
-	if m.Section != nil {
+	for _, l := range m.Lifts {
+		if l.Section != nil && l.Material != nil {
+			fact("lift "+l.Name(), SectionTitle(l.Section)+"; "+MaterialTitle(l.Material))
+		}
+	}
+	if m.Section != nil && len(m.Lifts) == 0 {
 		fact("section", SectionTitle(m.Section))
 	}
-	if m.Material != nil {
+	if m.Material != nil && len(m.Lifts) == 0 {
 		fact("material", MaterialTitle(m.Material))
 	}
 	if m.Height > 0 {
@@ -131,6 +142,9 @@ func VerdictLine(r *checker.Result) Line {
 		out = Join(out, Words("as far as it was checked, "))
 	}
 	out = Join(out, Words("utilisation "+checker.Ratio(r.Utilisation)+", "+r.Governing))
+	if r.Lift != "" {
+		out = Join(out, Words(" in lift "+r.Lift))
+	}
 	if r.Combination != "" {
 		out = Join(out, Words(" under "+r.Combination))
 	}
@@ -180,15 +194,24 @@ func MaterialTitle(m *model.Material) string {
 // Checks writes the table of a member's checks.
 func Checks(p *Page, r *checker.Result) {
 	var rows [][]Line
-	for _, c := range r.Checks {
-		rows = append(rows, []Line{Words(checkName(c)), Words(checker.Ratio(c.Utilisation)), Words(amountText(r.Units(), c.Demand, c.Dim)), Words(amountText(r.Units(), c.Capacity, c.Dim)),
-			Words(verdictWord(c)), Words(clauseOf(c)), Words(r.CombinationName(c))})
+	head, align := []string{"check", "utilisation", "demand", "capacity", "verdict", "clause", "under"}, "lrrrlll"
+	lifts := slices.ContainsFunc(r.Checks, func(c standard.Check) bool { return c.Lift != "" })
+	if lifts {
+		head, align = append(head, "lift"), align+"l"
 	}
-	p.Table([]string{"check", "utilisation", "demand", "capacity", "verdict", "clause", "under"}, "lrrrlll", rows)
+	for _, c := range r.Checks {
+		row := []Line{Words(checkName(c)), Words(checker.Ratio(c.Utilisation)), Words(amountText(r.Units(), c.Demand, c.Dim)), Words(amountText(r.Units(), c.Capacity, c.Dim)),
+			Words(verdictWord(c)), Words(clauseOf(c)), Words(r.CombinationName(c))}
+		if lifts {
+			row = append(row, Words(c.Lift))
+		}
+		rows = append(rows, row)
+	}
+	p.Table(head, align, rows)
 	var why []Line
 	for _, c := range r.Checks {
 		if c.Verdict == standard.Undecided && c.Why != "" {
-			why = append(why, Words(checkName(c)+": "+c.Why))
+			why = append(why, Words(checkName(c)+c.InLift()+": "+c.Why))
 		}
 	}
 	p.List(why...)
@@ -287,6 +310,23 @@ func own(record *derivation.Record, group string) []derivation.Step {
 		}
 	}
 	return out
+}
+
+// liftsOf are the lifts that the steps of a record are about; one without a name
+// for a member of one section.
+func liftsOf(record *derivation.Record) []string {
+	var out []string
+	for _, s := range record.Steps {
+		if !slices.Contains(out, s.Lift) {
+			out = append(out, s.Lift)
+		}
+	}
+	return out
+}
+
+// shared are the steps of a lift that several checks share.
+func shared(record *derivation.Record, lift string) []derivation.Step {
+	return slices.DeleteFunc(own(record, ""), func(s derivation.Step) bool { return s.Lift != lift })
 }
 
 // Steps writes the steps of a derivation: the values that are taken as a table,

@@ -40,6 +40,16 @@ const (
 // up: the greatest of all combinations. Holds against twist are left out, and so
 // is an axis about which no combination compresses the member.
 func (f *Frame) Holds() []HoldDemand {
+	if f.lift != nil {
+		return f.lift.whole.Holds()
+	}
+	if f.needs == nil {
+		f.needs = f.holdDemands()
+	}
+	return f.needs
+}
+
+func (f *Frame) holdDemands() []HoldDemand {
 	var out []HoldDemand
 	for i, h := range f.Member.Holds {
 		for _, a := range []model.Axis{model.Major, model.Minor} {
@@ -59,7 +69,7 @@ func (f *Frame) Holds() []HoldDemand {
 			f.demands(a, here)
 		}
 	}
-	var pressed []HoldDemand
+	pressed := []HoldDemand{}
 	for _, d := range out {
 		if d.Combination >= 0 {
 			pressed = append(pressed, d)

@@ -59,7 +59,9 @@ func NewCommon(set *derivation.Set) *Common {
 
 // Check makes the common checks. do computes a formula of the standard, and group
 // begins the working of a rule.
+// They are made of the whole member, whatever lift the frame is of.
 func (x *Common) Check(f *Frame, s *derivation.Sheet, out *Outcome, group func(rule string), do func(*derivation.Formula) float64) {
+	f = f.root()
 	if f.Imperfect() {
 		group("")
 		s.Take(x.phi0, swayBasic, "EN 1993-1-1 5.3.2(3)")

@@ -7,13 +7,25 @@ import (
 	"kern/checker/model"
 )
 
-// stiffness is E I about an axis, Nm2; NaN where it is not known.
+// stiffness is E I about an axis, Nm2, of the lift of the frame or of the lowest
+// one; NaN where it is not known.
 func (f *Frame) stiffness(axis int) float64 {
-	s := f.Member.Section
-	return Known(Known(f.Member.Material.E) * Known([2]float64{s.IMajor, s.IMinor}[axis]))
+	if f.lift != nil {
+		return Known(bending(&f.parts[f.lift.part], axis))
+	}
+	return Known(bending(&f.parts[0], axis))
 }
 
-// springs are the elastic supports about an axis, divided by E I.
+// root is the frame of the whole member.
+func (f *Frame) root() *Frame {
+	if f.lift != nil {
+		return f.lift.whole
+	}
+	return f
+}
+
+// springs are the elastic supports about an axis, divided by E I of the lowest
+// lift.
 func (f *Frame) springs(axis int) []action.Spring {
 	m, a := f.Member, model.Axis(axis)
 	if !m.Sprung(a) {
@@ -61,7 +73,7 @@ const weightParts = 12
 func (f *Frame) Bar(axis, combination int) *action.Bar {
 	m, a := f.Member, model.Axis(axis)
 	cuts := f.Heights()
-	holds, ei := m.RigidHolds(a), f.stiffness(axis)
+	holds := m.RigidHolds(a)
 	b := &action.Bar{Base: m.Base[a], Top: m.Top[a], Nodes: []float64{0}, Held: []bool{false}}
 	for i := range len(cuts) - 1 {
 		n := 1
@@ -84,9 +96,10 @@ func (f *Frame) Bar(axis, combination int) *action.Bar {
 			}
 			b.Nodes, b.Held = append(b.Nodes, z), append(b.Held, held)
 			b.Force = append(b.Force, bottom+(top-bottom)*(t-0.5/float64(n)))
-			b.Stiffness = append(b.Stiffness, ei)
+			b.Stiffness = append(b.Stiffness, Known(bending(f.partAt(z-(cuts[i+1]-cuts[i])/float64(2*n)), axis)))
 		}
 	}
+	ei := f.stiffness(axis)
 	for _, s := range f.springs(axis) {
 		if b.Lateral == nil {
 			b.Lateral, b.Turning = make([]float64, len(b.Nodes)), make([]float64, len(b.Nodes))
@@ -111,7 +124,11 @@ func (f *Frame) critical() {
 		}
 		f.factor[axis] = make([]float64, len(f.Combinations))
 		f.Stands[axis] = true
-		if math.IsNaN(f.stiffness(axis)) {
+		known := true
+		for i := range f.parts {
+			known = known && !math.IsNaN(Known(bending(&f.parts[i], axis)))
+		}
+		if !known {
 			for k := range f.factor[axis] {
 				f.factor[axis][k] = math.NaN()
 			}
@@ -126,6 +143,36 @@ func (f *Frame) critical() {
 			f.Stands[axis] = f.Stands[axis] && f.factor[axis][k] > 0
 		}
 	}
+}
+
+// partFactors are the load factors that the frame of a lift counts with under all
+// combinations, or under one (of at least 0). Interaction with bending is known for
+// uniform members: in a member that bends a lift gets no help from a stiffer one.
+func (f *Frame) partFactors(part, combination int) (out [2][]float64) {
+	for axis := range f.Exact {
+		if !f.Exact[axis] {
+			continue
+		}
+		out[axis] = f.factor[axis]
+		from := 0
+		if combination >= 0 {
+			from = combination
+			out[axis] = out[axis][combination : combination+1]
+		}
+		if !f.Bends[0] && !f.Bends[1] {
+			continue
+		}
+		own := make([]float64, len(out[axis]))
+		for k := range own {
+			b := f.Bar(axis, from+k)
+			for i := range b.Stiffness {
+				b.Stiffness[i] = Known(bending(&f.parts[part], axis))
+			}
+			own[k] = min(out[axis][k], b.Critical())
+		}
+		out[axis] = own
+	}
+	return out
 }
 
 // Factor is the factor by which the axial forces of a combination must grow
@@ -151,6 +198,7 @@ func (f *Frame) Under(axis int, s action.Stretch, combination int) action.Stretc
 		s.K = 1
 		return s
 	}
+	s.Stepped = f.root().Stepped(s.From, s.To)
 	s.K = math.Pi * math.Sqrt(f.stiffness(axis)/(f.Factor(axis, combination)*n)) / s.Length()
 	return s
 }

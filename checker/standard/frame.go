@@ -11,11 +11,17 @@ import (
 )
 
 // Frame is a member as every standard starts from it: its stretches between
-// holds, and the axial force and moments of each combination.
+// holds, and the axial force and moments of each combination. Of a member of
+// several lifts a standard sees one frame a lift: the member then has the section
+// of the lift, and forces and heights are those within it.
 type Frame struct {
 	Member       *model.Member
 	Env          *model.Env
 	Combinations []model.Combination
+
+	// From and To are the heights above the base between which the frame looks at
+	// the member, m: 0 and the height for a member of one section.
+	From, To float64
 
 	// Stretches between points held against buckling about major and minor;
 	// Stands is false about an axis for a mechanism, and where effective lengths
@@ -35,18 +41,34 @@ type Frame struct {
 	// from loads across the member.
 	Bends, Pushed [2]bool
 
-	cuts   []float64   // heights where the axial force changes, from 0 to the height
-	axial  [][]float64 // [combination][segment] compression at the segment's bottom
-	weight []float64   // [combination] self-weight per length times its factor
-	beams  [2][][]action.Piece
-	beamOK [2]bool
-	factor [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
-	sprung [2]bool      // a spring leaves effective lengths without an answer
+	cuts        []float64   // heights where the axial force or the section changes, from 0 to the height
+	first, last int         // the segments between From and To
+	axial       [][]float64 // [combination][segment] compression at the segment's bottom
+	own         []float64   // [segment] self-weight per length
+	weight      []float64   // [combination] the factor of self-weight
+	slope       [][]float64 // [combination][segment] loss of compression per length, of imported forces alone
+	beams       [2][][]action.Piece
+	beamOK      [2]bool
+	factor      [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
+	sprung      [2]bool      // a spring leaves effective lengths without an answer
+
+	parts  []model.Lift // neighbouring lifts of one section and material taken as one
+	twists []Segment    // between points held against twist
+	lift   *liftView    // of a frame of one lift
+	needs  []HoldDemand // what Holds found, nil before
+}
+
+// Segment is a part of the height between two points that are held, m.
+type Segment struct {
+	From, To float64
+	// Factor is what its length is to be multiplied with where the section
+	// changes in it, 1 elsewhere; see Frame.Lateral.
+	Factor float64
 }
 
 // NewFrame works out the mechanics of a member that lacks nothing.
 func NewFrame(env *model.Env, m *model.Member, combinations []model.Combination) *Frame {
-	f := &Frame{Member: m, Env: env, Combinations: combinations, TwistK: 1}
+	f := &Frame{Member: m, Env: env, Combinations: combinations, TwistK: 1, To: m.Height, parts: merged(m.Parts())}
 	f.split()
 	f.forces()
 	f.critical()
@@ -81,11 +103,14 @@ func (f *Frame) split() {
 	last := 0.0
 	for _, h := range m.Holds {
 		if h.Twist {
-			f.Twist = max(f.Twist, h.At-last)
+			f.twists = append(f.twists, Segment{last, h.At, 1})
 			last = h.At
 		}
 	}
-	f.Twist = max(f.Twist, m.Height-last)
+	f.twists = append(f.twists, Segment{last, m.Height, 1})
+	for _, t := range f.twists {
+		f.Twist = max(f.Twist, t.To-t.From)
+	}
 	f.TwistFree = m.Top[0] == action.Free || m.Top[1] == action.Free || m.Base[0] == action.Free || m.Base[1] == action.Free
 	if k := m.Factor[2]; k > 0 {
 		f.TwistK, f.TwistFree = k, false
@@ -112,14 +137,58 @@ func (f *Frame) forces() {
 	for _, h := range m.Holds {
 		insert(h.At)
 	}
+	for _, l := range f.parts[1:] {
+		insert(l.From)
+	}
 	for _, l := range m.Loads {
 		if l.Kind == model.AxialLoad {
 			insert(l.At)
 		}
 	}
-	cases := len(f.Env.Cases)
+	if in := m.Imported; in != nil {
+		for _, z := range in.Positions[1 : len(in.Positions)-1] {
+			insert(z)
+		}
+		f.importedForces(in)
+		return
+	}
 	segments := len(f.cuts) - 1
-	of := make([]float64, cases*segments) // [case][segment]
+	f.last = segments - 1
+	of := f.byCase()
+	f.own = make([]float64, segments)
+	if m.Weight {
+		for s := range f.own {
+			l := f.partAt((f.cuts[s] + f.cuts[s+1]) / 2)
+			f.own[s] = l.Material.Density * l.Section.Area * unit.StandardGravity
+		}
+	}
+	f.axial = make([][]float64, len(f.Combinations))
+	f.weight = make([]float64, len(f.Combinations))
+	flat := make([]float64, len(f.Combinations)*segments)
+	for c, combination := range f.Combinations {
+		row := flat[c*segments : (c+1)*segments]
+		for k, factor := range combination.Factors {
+			if factor != 0 && k < len(f.Env.Cases) { // behind the cases stand forces of imperfections
+				for s := range row {
+					row[s] += factor * of[k*segments+s]
+				}
+			}
+		}
+		f.weight[c] = f.ownFactor(combination)
+		above := 0.0
+		for s := segments - 1; s >= 0; s-- {
+			above += f.weight[c] * f.own[s] * (f.cuts[s+1] - f.cuts[s])
+			row[s] += above
+		}
+		f.axial[c] = row
+	}
+}
+
+// byCase adds up the loads along the member by case: [case][segment], N.
+func (f *Frame) byCase() []float64 {
+	m := f.Member
+	segments := len(f.cuts) - 1
+	of := make([]float64, len(f.Env.Cases)*segments)
 	for _, l := range m.Loads {
 		if l.Kind != model.AxialLoad {
 			continue
@@ -130,28 +199,17 @@ func (f *Frame) forces() {
 			}
 		}
 	}
-	own := 0.0
-	if m.Weight {
-		own = m.Material.Density * m.Section.Area * unit.StandardGravity
-	}
-	f.axial = make([][]float64, len(f.Combinations))
-	f.weight = make([]float64, len(f.Combinations))
-	flat := make([]float64, len(f.Combinations)*segments)
-	for c, combination := range f.Combinations {
-		row := flat[c*segments : (c+1)*segments]
-		for k, factor := range combination.Factors {
-			if factor != 0 && k < cases { // behind the cases stand forces of imperfections
-				for s := range row {
-					row[s] += factor * of[k*segments+s]
-				}
-			}
+	return of
+}
+
+// partAt is the part of the member that a height lies in.
+func (f *Frame) partAt(z float64) *model.Lift {
+	for i := range f.parts {
+		if z < f.parts[i].To || i == len(f.parts)-1 {
+			return &f.parts[i]
 		}
-		f.weight[c] = f.ownFactor(combination) * own
-		for s := range row {
-			row[s] += f.weight[c] * (m.Height - f.cuts[s])
-		}
-		f.axial[c] = row
 	}
+	return nil
 }
 
 // ownFactor is the factor that self-weight has in a combination: that of the
@@ -178,9 +236,9 @@ func (f *Frame) ownFactor(c model.Combination) float64 {
 func (f *Frame) Compression(combination int, from, to float64) float64 {
 	most := math.Inf(-1)
 	eps := 1e-9 * f.Member.Height
-	for s, n := range f.axial[combination] {
+	for s := f.first; s <= f.last; s++ {
 		if f.cuts[s+1] > from+eps && f.cuts[s] < to-eps {
-			most = max(most, n, f.top(combination, s))
+			most = max(most, f.axial[combination][s], f.top(combination, s))
 		}
 	}
 	return most
@@ -190,8 +248,8 @@ func (f *Frame) Compression(combination int, from, to float64) float64 {
 // there is compression throughout.
 func (f *Frame) Tension(combination int) float64 {
 	most := math.Inf(-1)
-	for s, n := range f.axial[combination] {
-		most = max(most, -n, -f.top(combination, s))
+	for s := f.first; s <= f.last; s++ {
+		most = max(most, -f.axial[combination][s], -f.top(combination, s))
 	}
 	return most
 }
@@ -200,25 +258,34 @@ func (f *Frame) Tension(combination int) float64 {
 // load comes in, the value below it.
 func (f *Frame) At(combination int, z float64) float64 {
 	eps := 1e-9 * f.Member.Height
-	for s := len(f.cuts) - 2; s >= 0; s-- {
-		if f.cuts[s] < z-eps || s == 0 {
-			return f.axial[combination][s] - f.weight[combination]*(max(z, f.cuts[s])-f.cuts[s])
+	for s := f.last; s >= f.first; s-- {
+		if f.cuts[s] < z-eps || s == f.first {
+			return f.axial[combination][s] - f.perLength(combination, s)*(max(z, f.cuts[s])-f.cuts[s])
 		}
 	}
 	return math.NaN()
 }
 
+// perLength is what compression loses per length from the base up in a segment
+// under a combination, N/m: the self-weight.
+func (f *Frame) perLength(combination, segment int) float64 {
+	if f.slope != nil {
+		return f.slope[combination][segment]
+	}
+	return f.weight[combination] * f.own[segment]
+}
+
 func (f *Frame) top(combination, segment int) float64 {
-	return f.axial[combination][segment] - f.weight[combination]*(f.cuts[segment+1]-f.cuts[segment])
+	return f.axial[combination][segment] - f.perLength(combination, segment)*(f.cuts[segment+1]-f.cuts[segment])
 }
 
 // Between gives the compression of a combination just above one height and just
 // below another, N; no load may come in between the two.
 func (f *Frame) Between(combination int, from, to float64) (bottom, top float64) {
 	middle := (from + to) / 2
-	for s := len(f.cuts) - 2; s >= 0; s-- {
-		if f.cuts[s] < middle || s == 0 {
-			n, w := f.axial[combination][s], f.weight[combination]
+	for s := f.last; s >= f.first; s-- {
+		if f.cuts[s] < middle || s == f.first {
+			n, w := f.axial[combination][s], f.perLength(combination, s)
 			return n - w*(from-f.cuts[s]), n - w*(to-f.cuts[s])
 		}
 	}
@@ -226,11 +293,27 @@ func (f *Frame) Between(combination int, from, to float64) (bottom, top float64)
 }
 
 // Heights are where the axial force can have its extremes.
-func (f *Frame) Heights() []float64 { return f.cuts }
+func (f *Frame) Heights() []float64 { return f.cuts[f.first : f.last+2] }
+
+// Cut is what of a piece of the moments lies within the frame, false for nothing.
+func (f *Frame) Cut(p action.Piece) (action.Piece, bool) {
+	eps := 1e-9 * f.Member.Height
+	if p.From >= f.From-eps && p.To <= f.To+eps {
+		return p, true
+	}
+	if p.To <= f.From+eps || p.From >= f.To-eps {
+		return p, false
+	}
+	return p.Cut(max(p.From, f.From), min(p.To, f.To)), true
+}
 
 // moments analyses the member as a beam about each axis that is bent.
 func (f *Frame) moments() {
 	m := f.Member
+	if m.Imported != nil {
+		f.importedMoments(m.Imported)
+		return
+	}
 	for _, l := range m.Loads {
 		switch l.Kind {
 		case model.AxialLoad:
@@ -256,6 +339,9 @@ func (f *Frame) moments() {
 		beam := action.Beam{Base: m.Base[axis], Top: m.Top[axis], Height: m.Height}
 		beam.Holds = m.RigidHolds(model.Axis(axis))
 		beam.Springs = f.springs(axis)
+		if len(f.parts) > 1 {
+			beam.Steps = f.steps(axis, 0, m.Height)
+		}
 		loadings := make([][]action.Push, len(f.Env.Cases))
 		for _, l := range m.Loads {
 			p := action.Push{From: l.At}
@@ -296,7 +382,7 @@ func (f *Frame) Bending(axis int, factors []float64, into []action.Piece) ([]act
 
 // StretchName says in words which part of the member a stretch is.
 func (f *Frame) StretchName(axis int, s action.Stretch) string {
-	if len(f.Stretches[axis]) == 1 {
+	if s.From <= 0 && s.To >= f.Member.Height {
 		return "the whole height"
 	}
 	return fmt.Sprintf("the stretch from %s m to %s m", number(s.From), number(s.To))
@@ -316,6 +402,9 @@ func (f *Frame) Assumptions() []string {
 			continue
 		}
 		for _, s := range f.Stretches[axis] {
+			if f.Stepped(s.From, s.To) {
+				continue // said for the lift
+			}
 			kind := "theoretical"
 			switch {
 			case s.Overridden:
@@ -328,11 +417,14 @@ func (f *Frame) Assumptions() []string {
 			out = append(out, fmt.Sprintf("K = %s %s over %s (%s–%s, %s)", unit.Short(s.K, 3), name, f.StretchName(axis, s), s.Base, s.Top, kind))
 		}
 	}
+	if m.Imported != nil {
+		out = append(out, importedAssumptions(m.Imported)...)
+		return append(out, f.swayAssumptions()...)
+	}
 	switch {
 	case m.Weight:
 		c := f.Env.Cases[f.Env.SelfWeight].Name
-		w := m.Material.Density * m.Section.Area * unit.StandardGravity
-		out = append(out, fmt.Sprintf("self-weight %s kN in all, in case %s", unit.Short(w*m.Height/1e3, 3), c))
+		out = append(out, fmt.Sprintf("self-weight %s kN in all, in case %s", unit.Short(f.OwnWeight()/1e3, 3), c))
 	case m.Kind == model.Column:
 		out = append(out, "self-weight not counted")
 	}
@@ -345,6 +437,15 @@ func (f *Frame) Assumptions() []string {
 		}
 	}
 	return out
+}
+
+// OwnWeight is the whole weight of the member where it counts, N.
+func (f *Frame) OwnWeight() float64 {
+	w := 0.0
+	for s, own := range f.own {
+		w += own * (f.cuts[s+1] - f.cuts[s])
+	}
+	return w
 }
 
 // Utilisation judges a demand against a capacity: undecided unless both are

@@ -25,7 +25,7 @@ func Inclination(height float64) float64 {
 func (f *Frame) Imperfect() bool { return imperfect(f.Member) }
 
 func imperfect(m *model.Member) bool {
-	return m.Imperfect && (m.Sways(model.Major) || m.Sways(model.Minor))
+	return m.Imperfect && m.Imported == nil && (m.Sways(model.Major) || m.Sways(model.Minor))
 }
 
 // Imperfections gives the combinations that a member is checked under: those
@@ -79,8 +79,10 @@ func (f *Frame) notional(axis int) [][]action.Push {
 			own[l.Case] = append(own[l.Case], action.Push{Force: phi * l.Value, From: l.At})
 		}
 	}
-	if m.Weight {
-		own[cases] = append(own[cases], action.Push{Line: phi * m.Material.Density * m.Section.Area * unit.StandardGravity, To: m.Height})
+	for s, w := range f.own {
+		if w != 0 {
+			own[cases] = append(own[cases], action.Push{Line: phi * w, From: f.cuts[s], To: f.cuts[s+1]})
+		}
 	}
 	return out
 }
@@ -91,6 +93,9 @@ func (f *Frame) swayAssumptions() []string {
 	m := f.Member
 	if !m.Sways(model.Major) && !m.Sways(model.Minor) {
 		return nil
+	}
+	if m.Imported != nil {
+		return []string{"sway imperfections are those of the analysis that the table comes from (EN 1993-1-1 5.3.2)"}
 	}
 	if !m.Imperfect {
 		return []string{"no sway imperfection is counted (EN 1993-1-1 5.3.2): say imperfection on, or give its forces as loads"}

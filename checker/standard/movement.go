@@ -38,6 +38,9 @@ func (f *Frame) served(under action.Situation) ([]model.Combination, string) {
 // none.
 func (f *Frame) greatest(rule string, l model.Movement) (moved, string) {
 	m := f.Member
+	if m.Imported != nil {
+		return moved{}, "forces from a table say nothing of movements: compare those of the analysis with the limit by hand"
+	}
 	combinations, why := f.served(l.Under)
 	if why != "" {
 		return moved{}, why
@@ -68,18 +71,18 @@ func (f *Frame) greatest(rule string, l model.Movement) (moved, string) {
 			}
 			continue
 		}
-		ei := f.stiffness(axis)
+		ei := func(z float64) float64 { return Known(bending(f.partAt(z), axis)) }
 		for _, c := range combinations {
 			pieces, ok := f.Bending(axis, c.Factors, nil)
 			if !ok {
 				return moved{}, f.NotHeld(axis)
 			}
 			if rule == "sway" {
-				try(math.Abs(across(pieces, m.Height)-across(pieces, 0))/ei, l.Limit, c.Name, "about "+a.String())
+				try(math.Abs(across(pieces, m.Height, ei)-across(pieces, 0, ei)), l.Limit, c.Name, "about "+a.String())
 				continue
 			}
 			for i, s := range m.Spans(a) {
-				try(FromChord(pieces, s[0], s[1])/ei, f.spanLimit(l, axis, i), c.Name, "about "+a.String()+", "+between(s))
+				try(FromChord(pieces, s[0], s[1], ei), f.spanLimit(l, axis, i), c.Name, "about "+a.String()+", "+between(s))
 			}
 		}
 	}
@@ -101,29 +104,30 @@ func (f *Frame) spanLimit(l model.Movement, axis, i int) float64 {
 
 func between(s [2]float64) string { return "from " + number(s[0]) + " m to " + number(s[1]) + " m" }
 
-// across is the deflection times E I at a height.
-func across(pieces []action.Piece, z float64) float64 {
+// across is the deflection at a height, m; ei gives E I at a height.
+func across(pieces []action.Piece, z float64, ei func(z float64) float64) float64 {
 	for i, p := range pieces {
 		if z <= p.To || i == len(pieces)-1 {
-			return p.Deflection(z - p.From)
+			return p.Deflection(z-p.From) / ei((p.From+p.To)/2)
 		}
 	}
 	return 0
 }
 
-// FromChord is the greatest deflection times E I between two heights, measured
-// from the line through the points there: exact but for the halving that finds
-// it.
-func FromChord(pieces []action.Piece, from, to float64) float64 {
-	first, l := across(pieces, from), to-from
-	slope := (across(pieces, to) - first) / l
+// FromChord is the greatest deflection between two heights, m, measured from the
+// line through the points there: exact but for the halving that finds it. ei gives
+// E I at a height, Nm2.
+func FromChord(pieces []action.Piece, from, to float64, ei func(z float64) float64) float64 {
+	first, l := across(pieces, from, ei), to-from
+	slope := (across(pieces, to, ei) - first) / l
 	most := 0.0
 	for _, p := range pieces {
 		low, high := max(from, p.From), min(to, p.To)
 		if !(high > low) {
 			continue
 		}
-		off := func(z float64) float64 { return math.Abs(p.Deflection(z-p.From) - first - slope*(z-from)) }
+		stiff := ei((p.From + p.To) / 2)
+		off := func(z float64) float64 { return math.Abs(p.Deflection(z-p.From)/stiff - first - slope*(z-from)) }
 		const n = 16
 		at := low
 		for i := range n + 1 {

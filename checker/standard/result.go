@@ -58,6 +58,7 @@ type Check struct {
 	Verdict     Verdict
 	Why         string // of an undecided check, or what a failing one is about
 	Departed    bool   // the member departs from this rule
+	Lift        string // the lift that it is about, "" for a member of one section
 }
 
 // State says whether a check that the standard asks for was made.
@@ -88,6 +89,9 @@ type Outcome struct {
 	// Value gives the result of a symbol for requirements; false when the
 	// calculation did not come to it.
 	Value func(symbol string) (unit.Quantity, bool)
+	// Lifts are the outcomes of the lifts that a requirement must hold in, under
+	// the combination that compresses each most; none for a member of one section.
+	Lifts []LiftOutcome
 }
 
 // Known gives a value that must be finite and positive, NaN for any other: what

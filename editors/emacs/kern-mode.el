@@ -30,8 +30,8 @@
 
 ;; generated: declarations
 (defconst kern-mode-declarations
-  '("basis" "case" "column" "combination" "exclusive" "include" "level" "material" "section" "strut"
-    "tie")
+  '("basis" "case" "column" "combination" "exclusive" "forces" "include" "level" "material"
+    "section" "strut" "tie")
   "Words that begin a declaration.")
 ;; end of declarations
 
@@ -39,8 +39,8 @@
 (defconst kern-mode-statements
   '("accidental" "actions" "amplification" "base" "critical" "depart" "effective" "factor_buckling"
     "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
-    "hold" "imperfection" "length" "limit" "load" "material" "net" "note" "permanent" "require"
-    "roofs" "section" "selfweight" "show" "standard" "strengths" "top" "xi")
+    "hold" "imperfection" "length" "lift" "limit" "load" "material" "net" "note" "permanent"
+    "require" "roofs" "section" "selfweight" "show" "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -62,11 +62,12 @@
 ;; generated: particles
 (defconst kern-mode-particles
   '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "cases"
-    "characteristic" "cold" "deflection" "effective" "eq" "exact" "fixed" "floor" "free" "frequent"
-    "from" "guided" "hot" "imposed" "independent" "lengths" "major" "minor" "off" "offset" "on"
-    "per" "permanent" "persistent" "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended"
-    "rolled" "secant" "seismic" "simple" "slenderness" "snow" "span" "spring" "stiffness" "sway"
-    "temperature" "theoretical" "to" "together" "top" "twist" "under" "utilisation" "welded" "wind")
+    "characteristic" "cold" "compression" "deflection" "effective" "eq" "exact" "fixed" "floor"
+    "free" "frequent" "from" "guided" "hot" "imposed" "independent" "lengths" "major" "minor"
+    "negative" "off" "offset" "on" "per" "permanent" "persistent" "pinned" "positive" "psi_0"
+    "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic" "simple"
+    "slenderness" "snow" "span" "spring" "stiffness" "sway" "temperature" "theoretical" "to"
+    "together" "top" "twist" "under" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 

@@ -86,6 +86,8 @@ func (c *caret) surroundings(outer []*lang.Stmt) {
 		c.in = lang.InLevel
 	case "column", "strut", "tie":
 		c.in = lang.InMember
+	case "lift":
+		c.in = lang.InLift
 	case "material":
 		c.in = lang.InMaterial
 	case "section":

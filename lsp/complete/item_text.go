@@ -137,7 +137,7 @@ func (s *scope) files() []Item {
 	}
 	var out []Item
 	for name, f := range p.Files {
-		if name == s.tree.Name || reached[name] || f.Unreadable != "" {
+		if name == s.tree.Name || reached[name] || f.Unreadable != "" || f.Data != (s.head == "forces") {
 			continue
 		}
 		back := false

@@ -32,9 +32,9 @@ func (s *scope) valuesFor(d duty) (list []Item, more bool) {
 		switch {
 		case d.lead == "as":
 			return s.members()
-		case s.in == lang.InMember && s.head == "section":
+		case (s.in == lang.InMember || s.in == lang.InLift) && s.head == "section":
 			return s.sections(), false
-		case s.in == lang.InMember && s.head == "material":
+		case (s.in == lang.InMember || s.in == lang.InLift) && s.head == "material":
 			return s.materials(), false
 		}
 		return nil, false // a new name

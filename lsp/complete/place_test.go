@@ -69,7 +69,7 @@ func TestDue(t *testing.T) {
 // places are places with what is offered there first; blanks of labels are
 // written _.
 var places = map[string]string{
-	"¦":                        "include basis material section case combination exclusive level column strut tie",
+	"¦":                        "include forces basis material section case combination exclusive level column strut tie",
 	"basis { ¦ }":              "standard actions permanent roofs accidental show effective",
 	"basis { standard \"¦\" }": "elastic EN_1993-1-1:2005",
 	"basis { standard ¦ }":     "elastic EN_1993-1-1:2005",

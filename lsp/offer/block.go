@@ -10,11 +10,14 @@ import (
 )
 
 // order is the place of a statement in a member's block: lines are put behind
-// those that come before them in most calculations.
-var order = [][]string{{"section"}, {"material"}, {"height", "length", "from"}, {"base"}, {"top"}, {"hold"}, {"effective"}, {"critical"}, {"imperfection"}, {"net"}, {"load"}, {"limit"}, {"require"}, {"depart"}, {"selfweight"}, {"note"}}
+// those that come before them in the table of forms.
+var order = lang.WordsIn(lang.InMember)
 
 func rank(word string) int {
-	return slices.IndexFunc(order, func(words []string) bool { return slices.Contains(words, word) })
+	if word == "length" || word == "from" {
+		word = "height" // one or the other
+	}
+	return slices.Index(order, word)
 }
 
 // owner is a statement with the declaration that it stands in.

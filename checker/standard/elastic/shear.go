@@ -54,6 +54,10 @@ func (c *calc) shear() {
 				break
 			}
 			for _, p := range pieces {
+				p, ok := c.f.Cut(p)
+				if !ok {
+					continue
+				}
 				if v := math.Max(math.Abs(p.V), math.Abs(p.Shear(p.To-p.From))); v > worst {
 					worst, at = v, k
 				}

@@ -83,8 +83,9 @@ func (c *calc) torsion() {
 	group(c.record, rule)
 	title := sec.Title()
 	c.s.Take(symG, standard.Known(c.f.Member.Material.G), c.f.Member.Material.Title())
-	c.s.Take(symIt, standard.KnownOrZero(sec.It), title)
-	c.s.Take(symIw, standard.KnownOrZero(standard.Warping(sec)), title)
+	it, iw := c.f.Twisting()
+	c.s.Take(symIt, standard.KnownOrZero(it), title)
+	c.s.Take(symIw, standard.KnownOrZero(iw), title)
 	offset := 0.0
 	if rule == coupled {
 		offset = math.Hypot(sec.SMajor, sec.SMinor)

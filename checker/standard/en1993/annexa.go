@@ -120,7 +120,8 @@ func (c *calc) cm0(a int, d diagram, pieces []action.Piece) {
 	case d.lower && d.upper && !d.line && d.points == 1 && d.pointMiddle:
 		c.do(t.doPoint)
 	default:
-		c.take(t.delta, standard.FromChord(pieces, d.from, d.to)/(c.s.At(symE)*c.s.At(axes[a].i)), "beam analysis")
+		ei := c.s.At(symE) * c.s.At(axes[a].i)
+		c.take(t.delta, standard.FromChord(pieces, d.from, d.to, func(float64) float64 { return ei }), "beam analysis")
 		c.do(t.doCommon)
 	}
 }

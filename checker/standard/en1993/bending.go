@@ -13,6 +13,7 @@ import (
 type comb struct {
 	pieces [2][]action.Piece // moments about y–y and z–z
 	bends  [2]bool           // more than next to nothing
+	inside [2]bool           // the same of what lies within the frame
 	peak   [2]float64        // greatest moments, Nm
 	shear  [2]float64        // greatest shear forces with them, N
 	push   float64           // greatest compression, at least 0, N
@@ -181,15 +182,20 @@ func (c *calc) combine() {
 					}
 					b.pieces[a] = b.pieces[a][:n:n]
 				}
+				beyond := 0.0 // in other lifts: a stretch can go on there
 				for _, p := range b.pieces[a] {
 					m, _ := p.Largest()
-					b.peak[a] = max(b.peak[a], math.Abs(m))
-					b.shear[a] = max(b.shear[a], math.Abs(p.V), math.Abs(p.Shear(p.To-p.From)))
+					beyond = max(beyond, math.Abs(m))
+					if p, ok := c.f.Cut(p); ok {
+						m, _ := p.Largest()
+						b.peak[a] = max(b.peak[a], math.Abs(m))
+						b.shear[a] = max(b.shear[a], math.Abs(p.V), math.Abs(p.Shear(p.To-p.From)))
+					}
 				}
-				b.bends[a] = !(b.peak[a] <= c.tiny[a])
+				b.bends[a], b.inside[a] = !(beyond <= c.tiny[a]), !(b.peak[a] <= c.tiny[a])
 			}
 			b.push = max(0, c.f.Compression(k, 0, c.f.Member.Height))
-			b.class = c.classUnder(b.push, b.bends, "")
+			b.class = c.classUnder(b.push, b.inside, "")
 		}
 	})
 	c.intervals = c.intervals[:0]
@@ -199,7 +205,9 @@ func (c *calc) combine() {
 	for a := range c.f.Bends {
 		if len(c.combs) > 0 {
 			for _, p := range c.combs[0].pieces[a] {
-				cuts = append(cuts, p.From, p.To)
+				if p, ok := c.f.Cut(p); ok {
+					cuts = append(cuts, p.From, p.To)
+				}
 			}
 		}
 	}
@@ -233,7 +241,7 @@ func (c *calc) combine() {
 // governs.
 func (c *calc) underCombination(k int) {
 	if c.s.Recorded() {
-		c.classUnder(c.combs[k].push, c.combs[k].bends, c.f.Combinations[k].Name)
+		c.classUnder(c.combs[k].push, c.combs[k].inside, c.f.Combinations[k].Name)
 	}
 }
 

@@ -112,6 +112,9 @@ func (c *calc) memberInteraction() {
 	case c.lat.zgh > 0 && c.lat.c2 == 0 && c.f.Bends[0]:
 		undecided("the basis states z_g_h: state C_2 with it")
 		return
+	case c.settings.annexA && c.f.Coupled():
+		undecided("Annex A is for members of one section between points held: use Annex B, or change the section at a point held both ways and against twist")
+		return
 	case c.settings.annexA && c.swayAny():
 		undecided("Annex A is for members whose ends stay in place: use Annex B, or second-order moments")
 		return

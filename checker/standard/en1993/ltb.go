@@ -66,7 +66,7 @@ var tableC1 = [9]float64{2.55, 2.57, 2.33, 2.05, 1.77, 1.52, 1.31, 1.14, 1.00}
 
 // segment is a part of the member between points that are held sideways and
 // against twist.
-type segment struct{ from, to float64 }
+type segment struct{ from, to, factor float64 }
 
 // lateral is what the member is for lateral-torsional buckling.
 type lateral struct {
@@ -115,23 +115,12 @@ func (c *calc) lateralOf() lateral {
 	if sh.Kind == section.Given && math.IsNaN(sec.It) {
 		return cannot("state I_t and I_w of the section, or check lateral-torsional buckling by hand")
 	}
-	last := 0.0
-	for _, h := range m.Holds {
-		if h.At <= last {
-			continue
-		}
-		var minor, twist bool
-		for _, o := range m.Holds {
-			if math.Abs(o.At-h.At) <= 1e-6*m.Height {
-				minor, twist = minor || o.Minor, twist || o.Twist
-			}
-		}
-		if minor && twist && h.At-last > 1e-6*m.Height {
-			l.segments = append(l.segments, segment{last, h.At})
-			last = h.At
+	for _, g := range c.f.Lateral() {
+		l.segments = append(l.segments, segment{g.From, g.To, g.Factor})
+		if g.Factor != 1 && c.settings.number("z_g_h") > 0 {
+			return cannot("the section changes between points held sideways and against twist: z_g_h is for members of one section, check lateral-torsional buckling by hand")
 		}
 	}
-	l.segments = append(l.segments, segment{last, m.Height})
 	c.lateralCurve(&l)
 	return l
 }
@@ -197,7 +186,10 @@ func (c *calc) segmentGiven(s segment) {
 			source = fmt.Sprintf("from %s m to %s m, %s", unit.Number(s.from, 4), unit.Number(s.to, 4), source)
 		}
 	}
-	c.take(symLLT, (s.to-s.from)*max(1, c.f.TwistK), source)
+	if s.factor != 1 && c.s.Recorded() {
+		source += fmt.Sprintf(", times %s: the section changes there, and the least stiffness counts", unit.Number(s.factor, 4))
+	}
+	c.take(symLLT, (s.to-s.from)*s.factor*max(1, c.f.TwistK), source)
 	c.do(doMcr0)
 }
 

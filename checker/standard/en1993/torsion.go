@@ -69,12 +69,12 @@ func (c *calc) torsional() {
 func (c *calc) torsionalResistance(rule string, unequal bool) {
 	sec := c.f.Member.Section
 	title := sec.Title()
-	iw := standard.Warping(sec)
+	it, iw := c.f.Twisting()
 	if math.IsNaN(iw) {
 		iw = 0
 		c.assume("I_w = 0, as it is not stated")
 	}
-	c.take(symIt, standard.KnownOrZero(sec.It), title)
+	c.take(symIt, standard.KnownOrZero(it), title)
 	c.take(symIw, standard.KnownOrZero(iw), title)
 	offset := math.Hypot(sec.SMajor, sec.SMinor)
 	if rule == "torsional-buckling" {
