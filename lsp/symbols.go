@@ -124,6 +124,14 @@ func (f *File) symbol(calculations []*model.Calculation, d *lang.Decl, s *lang.S
 				break
 			}
 		}
+	case s.Word == "project":
+		x.kind = always(protocol.SymbolKindPackage)
+		for _, c := range calculations {
+			if p := c.Env.Project; p.Place.Decl == d {
+				x.detail = p.Name
+				break
+			}
+		}
 	case s.Word == "basis":
 		x.kind = always(protocol.SymbolKindPackage)
 		for _, c := range calculations {

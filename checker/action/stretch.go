@@ -62,6 +62,9 @@ type Stretch struct {
 	Exact      bool    // K was solved for the whole column, see Stretches
 	Overridden bool    // K is the user's
 	Sprung     bool    // a spring keeps it from moving sideways somewhere
+	Whole      bool    // K follows from the critical load of the whole column under a combination
+	Joints     bool    // K follows from the stiffness ratios of rigid joints
+	Direct     bool    // K is 1 by the direct analysis method
 	Stepped    bool    // the section changes in it; K is for one of its sections and one combination
 }
 
@@ -72,19 +75,19 @@ func (s Stretch) Length() float64 { return s.To - s.From }
 func (s Stretch) Effective() float64 { return s.K * s.Length() }
 
 // Spans splits a column at its rigid holds (ascending, strictly inside) without
-// effective length factors: K is NaN until the critical load of the whole column
-// gives it. A column with a free end beyond a hold stays whole.
+// effective length factors: the critical load of the whole column gives them, and
+// K is NaN until then. A column with a free end beyond a hold stays whole.
 func Spans(base, top End, holds []float64, height float64) []Stretch {
 	if len(holds) > 0 && (base == Free || top == Free) {
-		return []Stretch{{To: height, Base: base, Top: top, K: math.NaN(), Exact: true}}
+		return []Stretch{{To: height, Base: base, Top: top, K: math.NaN(), Exact: true, Whole: true}}
 	}
 	var out []Stretch
 	from, end := 0.0, base
 	for _, h := range holds {
-		out = append(out, Stretch{From: from, To: h, Base: end, Top: Pinned, K: math.NaN()})
+		out = append(out, Stretch{From: from, To: h, Base: end, Top: Pinned, K: math.NaN(), Whole: true})
 		from, end = h, Pinned
 	}
-	return append(out, Stretch{From: from, To: height, Base: end, Top: top, K: math.NaN()})
+	return append(out, Stretch{From: from, To: height, Base: end, Top: top, K: math.NaN(), Whole: true})
 }
 
 // Stretches splits a column of the given height at its holds (ascending,

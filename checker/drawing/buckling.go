@@ -31,13 +31,13 @@ func Buckling(r *checker.Result) *Scene {
 			weak = a
 		}
 	}
-	b.view(0, 17, weak)
-	b.view(1, 49, weak)
+	b.view(0, 15.5, weak)
+	b.view(1, 45.5, weak)
 	b.text(Text{At: Point{1, tallSheet - 1.2}, Words: clip("under "+r.Combinations()[k].Name, small, bucklingWidth-2, false), Size: small, Tone: Quiet})
 	return &Scene{Width: bucklingWidth, Height: tallSheet, Title: s.title("buckled shapes"), Description: b.describe(), Items: b.items}
 }
 
-const bucklingWidth = 66.0
+const bucklingWidth = 61.0
 
 type buckling struct {
 	subject
@@ -58,7 +58,7 @@ func (b *buckling) view(axis int, x float64, weak int) {
 	for _, z := range b.holdHeights(axis) {
 		b.hold(x-0.4, b.y(z), -1)
 	}
-	style, tone := Strong, Plain
+	style, tone := Outline, Plain
 	if axis == weak {
 		style, tone = Accent, Loud
 	}
@@ -72,9 +72,9 @@ func (b *buckling) view(axis int, x float64, weak int) {
 		b.polyline(style, pts...)
 	}
 	for i, l := range lines {
-		t := Text{At: Point{x, 10 + pitch*float64(i)}, Words: clip(l, small, 31.5, i == 0), Size: small, Anchor: Middle}
+		t := Text{At: Point{x, 9 + pitch*float64(i)}, Words: clip(l, small, 29.5, i == 0 && axis == weak), Size: small, Anchor: Middle}
 		if i == 0 {
-			t.Tone, t.Bold = tone, true
+			t.Tone, t.Bold = tone, axis == weak
 		}
 		b.text(t)
 	}
@@ -91,11 +91,14 @@ func (b *buckling) lines(axis int) []string {
 		out[0] = "not known"
 	}
 	if s, ok := b.checked(axis); ok {
-		k := "K " + unit.Short(s.K, 3)
-		if s.Overridden {
-			k += " stated"
+		if b.f.Stepped(s.From, s.To) { // each lift has an effective length of its own
+			return append(out, "checked lift by lift")
 		}
-		out = append(out, "checked: N_cr "+b.show(b.r.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length)+", "+k)
+		with := "checked with"
+		if s.Overridden {
+			with += " the stated K"
+		}
+		out = append(out, with, "N_cr "+b.show(b.f.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length)+", K "+unit.Short(s.K, 3))
 	}
 	return out
 }

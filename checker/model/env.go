@@ -18,6 +18,9 @@ type Standards interface {
 	// Annexes lists the annexes of a standard that are known; the first is the
 	// default.
 	Annexes(name string) []string
+	// Methods lists the methods of a standard, of which a basis must state one;
+	// nil when there is one alone.
+	Methods(name string) []string
 	// Overrides lists the numbers of a standard that a basis may replace, with
 	// whether a reason must be given.
 	Overrides(name string) map[string]bool
@@ -47,6 +50,7 @@ func NewEnv(files []*lang.File, standards Standards) *Env {
 	b.late()
 	b.env.offer = namesOf(b.env.Names)
 	b.basis()
+	b.project()
 	b.cases()
 	b.exclusive()
 	b.levels()
@@ -97,7 +101,7 @@ func (b *builder) collect() {
 						b.name(item, s.Args[0], kind, -1)
 					}
 					b.stmts = append(b.stmts, item)
-				case "basis", "exclusive", "forces":
+				case "basis", "exclusive", "forces", "project":
 					b.stmts = append(b.stmts, item)
 				case "include":
 				case "":

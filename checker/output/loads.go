@@ -23,7 +23,7 @@ func Loads(p *Page, r *checker.Result) {
 	if w := r.OwnWeight(); w > 0 {
 		rows = append(rows, []Line{Words(cases[r.Env().SelfWeight].Name), Words("along, the member's own weight"), Words(units.Show(w, unit.Force, 4)), Words("over its height")})
 	}
-	p.Table([]string{"case", "acts", "value", "at"}, "llrl", rows)
+	p.Table([]string{"case", "acts", "value", "at"}, "llnl", rows)
 }
 
 // Acts says how a load acts.

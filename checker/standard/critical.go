@@ -122,15 +122,15 @@ func (f *Frame) critical() {
 		if !f.Exact[axis] {
 			continue
 		}
-		f.factor[axis] = make([]float64, len(f.Combinations))
+		f.loadFactor[axis] = make([]float64, len(f.Combinations))
 		f.Stands[axis] = true
 		known := true
 		for i := range f.parts {
 			known = known && !math.IsNaN(Known(bending(&f.parts[i], axis)))
 		}
 		if !known {
-			for k := range f.factor[axis] {
-				f.factor[axis][k] = math.NaN()
+			for k := range f.loadFactor[axis] {
+				f.loadFactor[axis][k] = math.NaN()
 			}
 			continue
 		}
@@ -139,9 +139,27 @@ func (f *Frame) critical() {
 			continue
 		}
 		for k := range f.Combinations {
-			f.factor[axis][k] = f.Bar(axis, k).Critical()
-			f.Stands[axis] = f.Stands[axis] && f.factor[axis][k] > 0
+			f.loadFactor[axis][k] = f.Bar(axis, k).Critical()
+			f.Stands[axis] = f.Stands[axis] && f.loadFactor[axis][k] > 0
 		}
+		f.longest(axis)
+	}
+}
+
+// longest gives stretches of a member whose critical load is that of the whole the
+// greatest factor of all combinations, which is on the safe side under any.
+func (f *Frame) longest(axis int) {
+	for i, s := range f.Stretches[axis] {
+		k := math.Inf(-1)
+		for c := range f.Combinations {
+			if n := f.Compression(c, s.From, s.To); n > 0 {
+				k = math.Max(k, f.Under(axis, s, c).K) // NaN stays
+			}
+		}
+		if math.IsInf(k, -1) {
+			k = 1 // nothing compresses it
+		}
+		f.Stretches[axis][i].K = k
 	}
 }
 
@@ -153,7 +171,7 @@ func (f *Frame) partFactors(part, combination int) (out [2][]float64) {
 		if !f.Exact[axis] {
 			continue
 		}
-		out[axis] = f.factor[axis]
+		out[axis] = f.loadFactor[axis]
 		from := 0
 		if combination >= 0 {
 			from = combination
@@ -179,10 +197,10 @@ func (f *Frame) partFactors(part, combination int) (out [2][]float64) {
 // until the whole member buckles about an axis; +Inf where nothing is
 // compressed, NaN where it was not asked for or is not known.
 func (f *Frame) Factor(axis, combination int) float64 {
-	if !f.Exact[axis] || combination < 0 || combination >= len(f.factor[axis]) {
+	if !f.Exact[axis] || combination < 0 || combination >= len(f.loadFactor[axis]) {
 		return math.NaN()
 	}
-	return f.factor[axis][combination]
+	return f.loadFactor[axis][combination]
 }
 
 // Under is a stretch as it counts under a combination: where critical loads are
@@ -223,12 +241,15 @@ func (f *Frame) Weakest(axis int) int {
 // Whole is the member as one stretch about an axis.
 func (f *Frame) Whole(axis int) action.Stretch {
 	m := f.Member
-	return action.Stretch{To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: math.NaN()}
+	return action.Stretch{To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: math.NaN(), Whole: true}
 }
 
 // NotHeld says why a member does not stand about an axis.
 func (f *Frame) NotHeld(axis int) string {
 	name := model.Axis(axis).String()
+	if f.sprung[axis] && f.Env.Basis.Direct {
+		return "the direct analysis method is not covered for members with springs: say stability effective and critical exact"
+	}
 	if f.sprung[axis] {
 		return "effective lengths do not count the springs about " + name + ": say critical exact, or effective = … about " + name
 	}

@@ -26,8 +26,8 @@ type Frame struct {
 	// Stretches between points held against buckling about major and minor;
 	// Stands is false about an axis for a mechanism, and where effective lengths
 	// cannot tell: NotHeld says why. Where Exact is set, the critical load is that of
-	// the whole member and depends on the combination: the stretches have no factor
-	// (NaN) until Under gives it.
+	// the whole member and depends on the combination: Under gives the stretches
+	// their factors, and here they have the greatest of all combinations.
 	Stretches [2][]action.Stretch
 	Stands    [2]bool
 	Exact     [2]bool
@@ -49,11 +49,12 @@ type Frame struct {
 	slope       [][]float64 // [combination][segment] loss of compression per length, of imported forces alone
 	beams       [2][][]action.Piece
 	beamOK      [2]bool
-	factor      [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
+	loadFactor  [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
 	sprung      [2]bool      // a spring leaves effective lengths without an answer
 
 	parts  []model.Lift // neighbouring lifts of one section and material taken as one
 	twists []Segment    // between points held against twist
+	floors []floors     // [case][segment] what floors bring, for reductions; nil for none
 	lift   *liftView    // of a frame of one lift
 	needs  []HoldDemand // what Holds found, nil before
 }
@@ -81,12 +82,22 @@ func (f *Frame) split() {
 	m := f.Member
 	for axis := range f.Stretches {
 		holds := m.RigidHolds(model.Axis(axis))
-		f.Exact[axis] = m.Exact && m.Factor[axis] == 0
+		f.Exact[axis] = m.Exact && m.Factor[axis] == 0 && m.Joints[axis] == nil && !f.Env.Basis.Direct // each says K
 		if f.Exact[axis] {
 			f.Stretches[axis] = f.spans(axis)
 			continue
 		}
 		f.Stretches[axis], f.Stands[axis] = action.Stretches(m.Base[axis], m.Top[axis], holds, m.Height, f.Env.Basis.Recommended)
+		if j := m.Joints[axis]; j != nil {
+			f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: j.Factor(), Joints: true}}
+			f.Stands[axis] = true
+		}
+		if f.Env.Basis.Direct && f.Stands[axis] {
+			for i := range f.Stretches[axis] {
+				s := &f.Stretches[axis][i]
+				s.K, s.Exact, s.Joints, s.Direct = 1, false, false, true
+			}
+		}
 		if k := m.Factor[axis]; k > 0 {
 			if !f.Stands[axis] || len(f.Stretches[axis]) == 1 && f.Stretches[axis][0].Exact {
 				f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis]}}
@@ -94,7 +105,7 @@ func (f *Frame) split() {
 			}
 			for i := range f.Stretches[axis] {
 				s := &f.Stretches[axis][i]
-				s.K, s.Overridden, s.Exact = k, true, false
+				s.K, s.Overridden, s.Exact, s.Direct = k, true, false, false
 			}
 		} else if m.Sprung(model.Axis(axis)) {
 			f.Stands[axis], f.sprung[axis] = false, true
@@ -155,6 +166,7 @@ func (f *Frame) forces() {
 	segments := len(f.cuts) - 1
 	f.last = segments - 1
 	of := f.byCase()
+	f.reduce()
 	f.own = make([]float64, segments)
 	if m.Weight {
 		for s := range f.own {
@@ -170,7 +182,7 @@ func (f *Frame) forces() {
 		for k, factor := range combination.Factors {
 			if factor != 0 && k < len(f.Env.Cases) { // behind the cases stand forces of imperfections
 				for s := range row {
-					row[s] += factor * of[k*segments+s]
+					row[s] += factor * (of[k*segments+s] - f.relief(c, k, s))
 				}
 			}
 		}
@@ -347,7 +359,9 @@ func (f *Frame) moments() {
 			p := action.Push{From: l.At}
 			switch {
 			case l.Kind == model.AxialLoad && l.Offset[axis] != 0:
-				p.Moment = l.Value * l.Offset[axis]
+				if !m.Nominal {
+					p.Moment = l.Value * l.Offset[axis]
+				}
 			case l.Kind == model.AxialLoad || int(l.Axis) != axis:
 				continue
 			case l.Kind == model.EndMoment:
@@ -363,6 +377,11 @@ func (f *Frame) moments() {
 			loadings = append(loadings, f.notional(axis)...)
 		}
 		pieces, err := beam.Solve(loadings)
+		if m.Nominal {
+			for c := range min(len(pieces), len(f.Env.Cases)) {
+				f.nominal(axis, c, pieces[c])
+			}
+		}
 		f.beams[axis], f.beamOK[axis] = pieces, err == nil
 	}
 }
@@ -409,6 +428,15 @@ func (f *Frame) Assumptions() []string {
 			switch {
 			case s.Overridden:
 				kind = "stated"
+			case s.Direct:
+				kind = "the unbraced length, by direct analysis"
+			case s.Joints:
+				j := m.Joints[axis]
+				sway := "without sway"
+				if j.Sway {
+					sway = "with sway"
+				}
+				kind = fmt.Sprintf("alignment chart %s, stiffness ratios %s at the base and %s at the top", sway, number(j.Base), number(j.Top))
 			case s.Exact:
 				kind = "solved for the whole column, as its free end stands beyond a hold"
 			case f.Env.Basis.Recommended:
@@ -429,6 +457,10 @@ func (f *Frame) Assumptions() []string {
 		out = append(out, "self-weight not counted")
 	}
 	out = append(out, f.swayAssumptions()...)
+	out = append(out, f.reductions()...)
+	if m.Nominal && (f.Bends[0] || f.Bends[1]) {
+		out = append(out, "nominal moments of simple construction: each load off the centroid bends the lengths of column above and below its level alone, in proportion to I/L, or in halves where these differ by no more than 1.5 (common practice, from memory)")
+	}
 	if f.Env.Basis.Actions == "" {
 		if len(f.Env.Automatic) == 0 {
 			out = append(out, "only the combinations written out are checked (no actions standard is stated)")
@@ -438,6 +470,10 @@ func (f *Frame) Assumptions() []string {
 	}
 	return out
 }
+
+// ByLeg is why a standard that takes an angle as loaded in its centroid leaves one
+// undecided that is connected by one leg.
+const ByLeg = "the angle is connected by one leg: allow for the eccentricity by hand"
 
 // OwnWeight is the whole weight of the member where it counts, N.
 func (f *Frame) OwnWeight() float64 {

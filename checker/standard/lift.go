@@ -59,7 +59,7 @@ func (f *Frame) Part(i, combination int) *Frame {
 			p.slope = f.slope[combination : combination+1]
 		}
 	}
-	p.factor = f.partFactors(i, combination)
+	p.loadFactor = f.partFactors(i, combination)
 	for axis, all := range f.Stretches {
 		p.Stretches[axis] = nil
 		for _, s := range all {
@@ -73,6 +73,11 @@ func (f *Frame) Part(i, combination int) *Frame {
 				}
 			}
 			p.Stretches[axis] = append(p.Stretches[axis], s)
+		}
+	}
+	for axis := range p.Exact {
+		if p.Exact[axis] {
+			p.longest(axis)
 		}
 	}
 	p.Twist = 0
@@ -126,6 +131,9 @@ func (f *Frame) Coupled() bool { return f.lift != nil && !f.lift.whole.Alone(f.l
 func bending(l *model.Lift, axis int) float64 {
 	return l.Material.E * [...]float64{l.Section.IMajor, l.Section.IMinor}[axis]
 }
+
+// Stiffness is E I about an axis at a height, Nm2.
+func (f *Frame) Stiffness(axis int, z float64) float64 { return bending(f.partAt(z), axis) }
 
 // steps are the stiffnesses between two heights, counted from the lower one.
 func (f *Frame) steps(axis int, from, to float64) []action.Step {

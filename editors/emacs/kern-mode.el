@@ -31,16 +31,18 @@
 ;; generated: declarations
 (defconst kern-mode-declarations
   '("basis" "case" "column" "combination" "exclusive" "forces" "include" "level" "material"
-    "section" "strut" "tie")
+    "project" "section" "strut" "tie")
   "Words that begin a declaration.")
 ;; end of declarations
 
 ;; generated: statements
 (defconst kern-mode-statements
-  '("accidental" "actions" "amplification" "base" "critical" "depart" "effective" "factor_buckling"
-    "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
-    "hold" "imperfection" "length" "lift" "limit" "load" "material" "net" "note" "permanent"
-    "require" "roofs" "section" "selfweight" "show" "standard" "strengths" "top" "xi")
+  '("accidental" "actions" "amplification" "base" "checked" "connected" "critical" "date" "depart"
+    "effective" "factor_buckling" "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0"
+    "gamma_M1" "gamma_Q" "height" "hold" "imperfection" "joints" "length" "lift" "limit" "load"
+    "material" "moments" "name" "net" "note" "number" "permanent" "prepared" "reduce" "reduction"
+    "require" "revision" "roofs" "section" "selfweight" "show" "stability" "standard" "strengths"
+    "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -61,13 +63,14 @@
 
 ;; generated: particles
 (defconst kern-mode-particles
-  '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "cases"
-    "characteristic" "cold" "compression" "deflection" "effective" "eq" "exact" "fixed" "floor"
-    "free" "frequent" "from" "guided" "hot" "imposed" "independent" "lengths" "major" "minor"
-    "negative" "off" "offset" "on" "per" "permanent" "persistent" "pinned" "positive" "psi_0"
-    "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic" "simple"
-    "slenderness" "snow" "span" "spring" "stiffness" "sway" "temperature" "theoretical" "to"
-    "together" "top" "twist" "under" "utilisation" "welded" "wind")
+  '("ASD" "K_LL" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "area" "as" "at"
+    "because" "both" "braced" "by" "cases" "characteristic" "cold" "compression" "continuous"
+    "deflection" "direct" "effective" "eq" "exact" "fixed" "floor" "free" "frequent" "from" "guided"
+    "hot" "imposed" "independent" "leg" "lengths" "live" "long" "major" "minor" "negative" "nominal"
+    "off" "offset" "on" "per" "permanent" "persistent" "pinned" "positive" "psi_0" "psi_1" "psi_2"
+    "quasipermanent" "recommended" "rolled" "secant" "seismic" "short" "simple" "slenderness" "snow"
+    "space" "span" "spring" "stiffness" "storeys" "sway" "temperature" "theoretical" "to" "together"
+    "top" "tributary" "twist" "under" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 

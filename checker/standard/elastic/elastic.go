@@ -115,6 +115,9 @@ func (Standard) Name() string { return "elastic" }
 // Annexes implements standard.Standard.
 func (Standard) Annexes() []string { return nil }
 
+// Methods implements standard.Standard: there is one alone.
+func (Standard) Methods() []string { return nil }
+
 // Overrides implements standard.Standard: the two factors of safety. They
 // replace no published value, so they need no reason.
 func (Standard) Overrides() map[string]bool {
@@ -143,6 +146,9 @@ func (Standard) Check(f *standard.Frame, record *derivation.Record) *standard.Ou
 	for a := range axes {
 		c.buckling(a)
 		c.critical[a] = c.s.At(axes[a].pcr)
+	}
+	if c.f.Member.Leg.Stated() {
+		c.cover("elastic-buckling-minor", standard.NotCovered, standard.ByLeg)
 	}
 	c.torsion()
 	c.yield()
@@ -319,7 +325,7 @@ func (c *calc) weakest(a int) {
 // combination.
 func (c *calc) stretch(a int, s action.Stretch, k int) {
 	x := &axes[a]
-	whole := c.f.Exact[a] && math.IsNaN(s.K)
+	whole := c.f.Exact[a] && s.Whole
 	if n := 0.0; whole && k >= 0 {
 		if n = c.f.Compression(k, s.From, s.To); !(n <= 0) {
 			source := ""
