@@ -190,7 +190,7 @@ func (c *collector) factors(s *lang.Stmt, r *checker.Result) map[*lang.Stmt]stri
 	type row struct{ factors [2][]string }
 	rows := map[*lang.Stmt]*row{}
 	for axis := range frame.Stretches {
-		if !frame.Stands[axis] {
+		if !frame.Stands[axis] || frame.Exact[axis] {
 			continue
 		}
 		for _, t := range frame.Stretches[axis] {

@@ -56,7 +56,7 @@ func (b *builder) basis() {
 	b.methods()
 }
 
-var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental", "moments", "reduce", "reduction",
+var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "critical", "imperfection", "permanent", "roofs", "accidental", "moments", "reduce", "reduction",
 	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "xi", "companion_live", "factor_yield", "factor_buckling"}
 
 func (b *builder) basisStmt(r *reader) {
@@ -154,6 +154,11 @@ func (b *builder) basisStmt(r *reader) {
 	case "amplification":
 		w, _ := r.wordOf("the amplification", "secant", "simple")
 		basis.Simple = w == "simple"
+	case "critical":
+		basis.Exact = r.critical()
+	case "imperfection":
+		w, _ := r.wordOf("the setting of the sway imperfection", "on", "off")
+		basis.Imperfect = w == "on"
 	case "":
 		return
 	default:

@@ -59,10 +59,15 @@ func (w *memberReader) complete() {
 		m.Missing = append(m.Missing, "its net area cannot be")
 		break
 	}
+	w.settleEnds()
 	sort.SliceStable(m.Holds, func(i, j int) bool { return m.Holds[i].At < m.Holds[j].At })
+	if w.spans != nil && m.Height > 0 {
+		w.spans()
+	}
 	for _, a := range []Axis{Major, Minor} {
 		_, base := w.first["base about "+a.String()]
 		_, top := w.first["top about "+a.String()]
+		base, top = base || m.BaseSpring[a] != Spring{}, top || m.TopSpring[a] != Spring{}
 		switch {
 		case !base && !top:
 			m.Assumed = append(m.Assumed, "pinned at both ends about "+a.String())

@@ -55,6 +55,7 @@ type Check struct {
 	Rule        string
 	Clause      string
 	Combination int     // index into the frame's combinations, -1 when it does not depend on one
+	Under       string  // the name of a combination that is none of the frame's, such as one of serviceability
 	Demand      float64 // SI units of Dim
 	Capacity    float64
 	Dim         unit.Dim

@@ -146,6 +146,9 @@ func (s *scope) operands(dims []unit.Dim) []Item {
 	}
 	if s.member != nil && s.in == lang.InMember && dims != nil && fitting(dims, unit.Length) && s.head != "height" && s.head != "length" && s.head != "from" {
 		out = append(out, Item{Label: "height", Detail: "the member's own height", Kind: WordItem, Group: 3, Eager: true})
+		if s.head == "limit" && len(s.before) > 0 && s.before[0].Is("deflection") && s.env.Names["span"] == nil {
+			out = append(out, Item{Label: "span", Detail: lang.Words["span"], Kind: WordItem, Group: 3, Eager: true})
+		}
 	}
 	for _, f := range functionNames() {
 		group := 5

@@ -116,10 +116,10 @@ func (c *calc) torsional() {
 		refuse("state I_t and I_w of the section, or check torsional buckling by hand")
 		return
 	case !c.f.Stands[0]:
-		refuse(notInPlace + "major")
+		refuse(c.f.NotHeld(0))
 		return
 	case !c.f.Stands[1]:
-		refuse(notInPlace + "minor")
+		refuse(c.f.NotHeld(1))
 		return
 	}
 	if sec.Shape.Kind == section.Given {

@@ -65,7 +65,7 @@ func (c *calc) bending() {
 	}
 	for a := range bends {
 		if _, ok := c.f.Bending(a, nil, nil); !ok || bends[a] && !c.f.Stands[a] {
-			why = "the ends and holds do not keep the member in place about " + axes[a].word
+			why = c.f.NotHeld(a)
 		}
 	}
 	if why == "" && c.uniform == 4 && c.class == 0 {
