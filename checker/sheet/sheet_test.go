@@ -100,7 +100,7 @@ type jsonMember struct {
 func jsonOf(t *testing.T, r *checker.Report) map[string]jsonMember {
 	t.Helper()
 	var b bytes.Buffer
-	if err := output.JSON(&b, r, "kern test", func(s string) string { return s }); err != nil {
+	if err := output.JSON(&b, r, "kern test", func(s string) string { return s }, nil); err != nil {
 		t.Fatal(err)
 	}
 	var doc struct{ Members []jsonMember }
