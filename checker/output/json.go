@@ -110,6 +110,18 @@ type (
 		Shear  amount `json:"shear"`
 		Moment amount `json:"moment"`
 	}
+	hold struct {
+		At              amount `json:"at"`
+		Axis            string `json:"axis"`
+		Compression     amount `json:"compression"`
+		Combination     string `json:"combination"`
+		Force           amount `json:"force"`
+		Clause          string `json:"clause"`
+		Practice        amount `json:"force_common_practice"`
+		Stiffness       amount `json:"stiffness"`
+		StiffnessSource string `json:"stiffness_source"`
+		Stated          amount `json:"stiffness_stated"`
+	}
 	coverage struct {
 		Rule  string `json:"rule"`
 		State string `json:"state"`
@@ -134,6 +146,7 @@ type (
 		Checks      []check     `json:"checks"`
 		Takedown    *takedown   `json:"takedown,omitempty"`
 		Quantities  []quantity  `json:"quantities"`
+		Holds       []hold      `json:"holds,omitempty"`
 		Coverage    []coverage  `json:"coverage"`
 		Assumptions []string    `json:"assumptions"`
 		Departures  []departure `json:"departures"`
@@ -222,6 +235,15 @@ func buildMember(m *checker.Result, r *checker.Report, lines *index, names Names
 		}
 	}
 	out.Takedown = buildTakedown(m)
+	for _, h := range m.Holds() {
+		stated := h.Stated
+		if stated == 0 {
+			stated = math.NaN()
+		}
+		out.Holds = append(out.Holds, hold{At: amountOf(units, h.At, unit.Length), Axis: h.Axis.String(), Compression: amountOf(units, h.Compression, unit.Force),
+			Combination: m.Combinations()[h.Combination].Name, Force: amountOf(units, h.Force, unit.Force), Clause: standard.HoldForceClause, Practice: amountOf(units, h.Practice, unit.Force),
+			Stiffness: amountOf(units, h.Stiffness, unit.ForcePerLength), StiffnessSource: h.How, Stated: amountOf(units, stated, unit.ForcePerLength)})
+	}
 	for _, c := range m.Coverage {
 		out.Coverage = append(out.Coverage, coverage{c.Rule, c.State.String(), c.Why})
 	}

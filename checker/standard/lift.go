@@ -62,19 +62,25 @@ func (f *Frame) Part(i, combination int) *Frame {
 			p.slope = f.slope[combination : combination+1]
 		}
 	}
+	p.loadFactor = f.partFactors(i, combination)
 	for axis, all := range f.Stretches {
 		p.Stretches[axis] = nil
 		for _, s := range all {
 			if s.From >= l.To-eps || s.To <= l.From+eps {
 				continue
 			}
-			if f.Stepped(s.From, s.To) && combination >= 0 {
+			if f.Stepped(s.From, s.To) && combination >= 0 && !f.Exact[axis] {
 				var ok bool
 				if s, ok = f.within(axis, s, i, combination); !ok {
 					p.Stands[axis] = false
 				}
 			}
 			p.Stretches[axis] = append(p.Stretches[axis], s)
+		}
+	}
+	for axis := range p.Exact {
+		if p.Exact[axis] {
+			p.longest(axis)
 		}
 	}
 	p.Twist = 0
@@ -204,7 +210,7 @@ func (f *Frame) within(axis int, s action.Stretch, part, combination int) (actio
 	}
 	// Interaction with bending is known for uniform members: there a lift gets no
 	// help from a stiffer one. A stated factor is never made smaller either.
-	if s.Overridden || f.Bends[0] || f.Bends[1] {
+	if s.Overridden || s.Joints || s.Direct || f.Bends[0] || f.Bends[1] {
 		s.K = max(s.K, stated)
 	}
 	s.Stepped = true
@@ -217,10 +223,10 @@ func (f *Frame) mechanism(s action.Stretch) bool {
 	return !ok
 }
 
-// holds tells whether a hold about an axis is at a height.
+// holds tells whether a rigid hold about an axis is at a height.
 func (f *Frame) holds(axis int, z float64) bool {
 	for _, h := range f.Member.Holds {
-		if (axis == 0 && h.Major || axis == 1 && h.Minor) && math.Abs(h.At-z) <= 1e-9*f.Member.Height {
+		if h.About(model.Axis(axis)) && h.Stiffness == 0 && math.Abs(h.At-z) <= 1e-9*f.Member.Height {
 			return true
 		}
 	}
@@ -366,7 +372,7 @@ func (f *Frame) Lateral() []Segment {
 		var minor, twist bool
 		for _, o := range m.Holds {
 			if math.Abs(o.At-h.At) <= 1e-6*m.Height {
-				minor, twist = minor || o.Minor, twist || o.Twist
+				minor, twist = minor || o.Minor && o.Stiffness == 0, twist || o.Twist
 			}
 		}
 		if minor && twist && h.At-last > 1e-6*m.Height {

@@ -45,11 +45,19 @@ func (f *Frame) reduce() {
 				x.force += l.Value
 				x.pressure = max(x.pressure, l.Value/l.Area)
 			}
-			if x.storeys > 0 && k.Reducible() && x.force > 0 {
+			if x.storeys > 0 && f.reducible(k) && x.force > 0 {
 				x.factor = f.factor(c, x)
 			}
 		}
 	}
+}
+
+// reducible tells whether the member's reduction may be used on a case.
+func (f *Frame) reducible(c *model.Case) bool {
+	if f.Member.Reduction.Kind == model.ByTributaryArea || f.Env.Basis.Basic() {
+		return c.ReducibleLive()
+	}
+	return c.Reducible()
 }
 
 // factor is the reduction of what the floors above bring of a case.
@@ -61,9 +69,6 @@ func (f *Frame) factor(c int, x *floors) float64 {
 	case model.ByArea:
 		return values.AreaFactor(f.Env.Cases[c].Category, x.area, f.Env.PsiOf(c))
 	case model.ByTributaryArea:
-		if f.Env.Cases[c].Category == "C" {
-			return 1 // places of assembly, 4.7.5
-		}
 		return action.LiveFactor(r.Element, x.area, x.storeys, x.pressure)
 	case model.StatedReduction:
 		return r.Value
@@ -138,7 +143,7 @@ func (f *Frame) reductions() []string {
 		case !any || k.Kind != action.Imposed:
 		case len(parts) > 0:
 			list = append(list, k.Name+": "+strings.Join(parts, ", "))
-		case k.Reducible():
+		case f.reducible(k):
 			kept = append(kept, k.Name)
 		default:
 			kept = append(kept, k.Name+" (category "+k.Category+")")
@@ -230,7 +235,7 @@ func (f *Frame) lengths(axis int, z float64) (below, above [2]float64) {
 	eps := 1e-9 * m.Height
 	below, above = [2]float64{0, z}, [2]float64{z, m.Height}
 	for _, h := range m.Holds {
-		if (axis == 0 && h.Major || axis == 1 && h.Minor) && math.Abs(h.At-z) > eps {
+		if h.About(model.Axis(axis)) && h.Stiffness == 0 && math.Abs(h.At-z) > eps {
 			if h.At < z {
 				below[0] = max(below[0], h.At)
 			} else {

@@ -102,10 +102,14 @@ func (r *lifts) add(out *Outcome, part, combination int, main bool) {
 			c.Demand, c.Capacity, c.Utilisation, c.Verdict, c.Combination = nan, nan, nan, Undecided, -1
 			c.Why = steppedTwist
 		}
+		own := c.Combination // of checks of the whole member
 		if c.Combination >= 0 && combination >= 0 {
 			c.Combination = combination
 		}
 		c.Lift = name
+		if slices.Contains(CommonRules, c.Rule) {
+			c.Lift, c.Combination = "", own
+		}
 		w := r.row(c.Rule)
 		one := &run{c, part, combination}
 		switch {
@@ -131,7 +135,7 @@ func (r *lifts) add(out *Outcome, part, combination int, main bool) {
 		}
 		w.whyLift = w.covered || part > 0
 		w.state, w.why, w.covered = c.State, c.Why, true
-		if w.why != "" && c.State == NotCovered {
+		if w.why != "" && c.State == NotCovered && !slices.Contains(CommonRules, c.Rule) {
 			w.why = "lift " + name + ": " + w.why
 		}
 	}
@@ -202,7 +206,7 @@ func (r *lifts) outcome() *Outcome {
 		}
 		if w.covered {
 			c := Coverage{Rule: rule, State: w.state, Why: w.why}
-			if c.State == Checked && c.Why != "" && w.whyLift {
+			if c.State == Checked && c.Why != "" && w.whyLift && !slices.Contains(CommonRules, rule) {
 				c.Why = "each lift by itself"
 			}
 			r.out.Coverage = append(r.out.Coverage, c)
@@ -254,7 +258,9 @@ func (r *lifts) derive(record *derivation.Record) {
 			if s.Group == "" && shared[k.part] || s.Group != "" && !slices.Contains(rules[k], s.Group) {
 				continue
 			}
-			s.Lift = r.frame.parts[k.part].Name()
+			if s.Lift = r.frame.parts[k.part].Name(); slices.Contains(CommonRules, s.Group) {
+				s.Lift = ""
+			}
 			record.Steps = append(record.Steps, s)
 		}
 		shared[k.part] = true

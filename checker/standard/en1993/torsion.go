@@ -47,8 +47,11 @@ func (c *calc) torsional() {
 	case c.class == 0:
 		c.undecided(rule, clause, c.why)
 		return
-	case !c.f.Stands[0] || !c.f.Stands[1]:
-		c.undecided(rule, clause, "the ends and holds do not keep the member in place")
+	case !c.f.Stands[0]:
+		c.undecided(rule, clause, c.f.NotHeld(0))
+		return
+	case !c.f.Stands[1]:
+		c.undecided(rule, clause, c.f.NotHeld(1))
 		return
 	case c.minor.letter == "":
 		c.undecided(rule, clause, c.minor.row)
