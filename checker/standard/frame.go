@@ -475,6 +475,9 @@ func (f *Frame) Assumptions() []string {
 		}
 	}
 	if m.Imported != nil {
+		if m.Reduction.Kind != model.NoReduction {
+			out = append(out, "forces of a table are not reduced, whatever the calculation says of imposed loads")
+		}
 		out = append(out, importedAssumptions(m.Imported)...)
 		return append(out, f.swayAssumptions()...)
 	}
