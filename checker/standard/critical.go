@@ -65,8 +65,14 @@ func (f *Frame) spans(axis int) []action.Stretch {
 }
 
 // weightParts is how many parts of the whole height a member is cut into where
-// its own weight makes the axial force grow all along.
-const weightParts = 12
+// its own weight makes the axial force grow all along, for a critical load within
+// 0.03 %: few where the weight is next to nothing beside the greatest force.
+func weightParts(grows, most float64) float64 {
+	if math.Abs(grows) < 0.02*most {
+		return 6
+	}
+	return 40
+}
 
 // Bar is the whole member about an axis under a combination, on its ends, holds
 // and springs: what its critical load and its buckled shape are found from.
@@ -79,7 +85,10 @@ func (f *Frame) bar(axis, combination int, more []float64) *action.Bar {
 	if len(more) > 0 {
 		cuts = action.Merge(append(append([]float64(nil), cuts...), more...), m.Height)
 	}
-	holds := m.RigidHolds(a)
+	holds, most := m.RigidHolds(a), 0.0
+	if combination >= 0 {
+		most = math.Max(f.Compression(combination, 0, m.Height), f.Tension(combination))
+	}
 	b := &action.Bar{Base: m.Base[a], Top: m.Top[a], Nodes: []float64{0}, Held: []bool{false}}
 	for i := range len(cuts) - 1 {
 		n := 1
@@ -88,7 +97,7 @@ func (f *Frame) bar(axis, combination int, more []float64) *action.Bar {
 			bottom, top = f.Between(combination, cuts[i], cuts[i+1])
 		}
 		if bottom != top {
-			n = 1 + int(weightParts*(cuts[i+1]-cuts[i])/m.Height)
+			n = 1 + int(weightParts((bottom-top)*m.Height/(cuts[i+1]-cuts[i]), most)*(cuts[i+1]-cuts[i])/m.Height)
 		}
 		for j := range n {
 			t := (float64(j) + 1) / float64(n)
