@@ -3,6 +3,7 @@ package lsp
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"kern/checker"
@@ -31,6 +32,10 @@ func (h *hovering) line(s *lang.Stmt) {
 		h.end(r, s.Word)
 	case "effective":
 		h.stretches(r, func(_ int, t action.Stretch) bool { return t.Overridden })
+	case "joints":
+		h.stretches(r, func(axis int, t action.Stretch) bool {
+			return t.Joints && slices.ContainsFunc(s.Args, func(e *lang.Expr) bool { return e.Is(model.Axis(axis).String()) })
+		})
 	case "section":
 		if sec := r.Member.Section; sec != nil {
 			h.page.Text(output.Strong(output.SectionTitle(sec)), output.Words(": "+sectionShort(r.Units(), sec, densityFor(r))))
@@ -118,7 +123,7 @@ func (h *hovering) share(r *checker.Result, own []model.Load) {
 	for _, l := range own {
 		if l.Kind == model.AxialLoad {
 			axial = true
-			sum += combination.Factors[l.Case] * l.Value
+			sum += combination.Factors[l.Case] * l.Value * frame.Reduced(c.Combination, l)
 		}
 	}
 	if !axial {
@@ -274,7 +279,7 @@ func (h *hovering) strength(r *checker.Result) {
 	if m.Material == nil || m.Section == nil {
 		return
 	}
-	fy, fu, source, ok := m.Material.Strength(m.Section.Thickness, r.Env().Basis.TableFy)
+	fy, fu, source, ok := m.Material.StrengthOf(m.Section, r.Env().Basis.TableFy)
 	if !ok {
 		h.page.Text(output.Words(standard.NoStrength(m) + "."))
 		return

@@ -11,9 +11,8 @@ import (
 )
 
 // Buckling draws the shapes in which a member buckles about both axes under the
-// combination that its checks of buckling are decided by, each with its factor
-// for the whole member and with what the checks took. It is nil for a member that
-// is not compressed.
+// combination that compresses it most, each with its factor for the whole member
+// and with what the checks took. It is nil for a member that is not compressed.
 func Buckling(r *checker.Result) *Scene {
 	s, ok := about(r)
 	if !ok || s.f == nil {

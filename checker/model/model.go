@@ -104,7 +104,8 @@ type Basis struct {
 	StandardAt  lang.Place
 	Method      string // of a standard that has several: "LRFD" or "ASD"
 	Annex       string
-	Actions     string // "" when not stated
+	Actions     string     // "" when not stated
+	ActionsAt   lang.Place // of ASCE/SEI 7 alone; Equation is its method
 	Equation    string
 	Combining   Combining
 	Show        derivation.Units
@@ -120,6 +121,9 @@ type Basis struct {
 	Exact       bool // critical loads of the whole member instead of effective lengths
 	Imperfect   bool // members that can sway carry the forces of a sway imperfection
 }
+
+// Basic tells whether loads are combined by ASCE/SEI 7.
+func (b *Basis) Basic() bool { return b.Actions == basicStandard }
 
 // Override is a number of the standard that the calculation replaces.
 type Override struct {
@@ -141,8 +145,24 @@ type Material struct {
 	Bad     bool
 }
 
+// StrengthOf is Strength for a section: an American grade depends on the form of
+// the product besides the thickness.
+func (m *Material) StrengthOf(s *Section, table31 bool) (fy, fu float64, source string, ok bool) {
+	if m.Grade == nil || !m.Grade.American() {
+		return m.Strength(s.Thickness, table31)
+	}
+	own, ok := m.Grade.For(s.Shape)
+	if !ok {
+		return unknown, unknown, "", false
+	}
+	of := *m
+	of.Grade = &own
+	return of.Strength(s.Thickness, table31)
+}
+
 // Strength is the yield and ultimate strength for a thickness in metres, and
-// the row of the table it comes from. It is false when there is none.
+// the row of the table it comes from. It is false when there is none. See
+// StrengthOf for the strength in a section.
 func (m *Material) Strength(thickness float64, table31 bool) (fy, fu float64, source string, ok bool) {
 	if m.Grade == nil {
 		return m.Fy, m.Fu, "stated", m.Fy > 0

@@ -85,6 +85,31 @@ type (
 		Section  string `json:"section"`
 		Material string `json:"material"`
 	}
+	takedown struct {
+		Levels []storey `json:"levels"`
+		Base   []base   `json:"base"`
+	}
+	storey struct {
+		Level string  `json:"level"`
+		At    amount  `json:"at"`
+		Cases []share `json:"cases"`
+	}
+	share struct {
+		Case      string   `json:"case"`
+		Load      amount   `json:"load"`
+		Force     amount   `json:"force"`
+		Reduction *float64 `json:"reduction,omitempty"`
+	}
+	base struct {
+		Case  string `json:"case"`
+		Axial amount `json:"axial"`
+		Major *bent  `json:"major,omitempty"`
+		Minor *bent  `json:"minor,omitempty"`
+	}
+	bent struct {
+		Shear  amount `json:"shear"`
+		Moment amount `json:"moment"`
+	}
 	hold struct {
 		At              amount `json:"at"`
 		Axis            string `json:"axis"`
@@ -119,6 +144,7 @@ type (
 		Lift        string      `json:"lift,omitempty"`
 		Lifts       []lift      `json:"lifts,omitempty"`
 		Checks      []check     `json:"checks"`
+		Takedown    *takedown   `json:"takedown,omitempty"`
 		Quantities  []quantity  `json:"quantities"`
 		Holds       []hold      `json:"holds,omitempty"`
 		Coverage    []coverage  `json:"coverage"`
@@ -208,6 +234,7 @@ func buildMember(m *checker.Result, r *checker.Report, lines *index, names Names
 			out.Quantities = append(out.Quantities, quantity{sym.Name, a.Value, a.Unit, s.Clause, s.Lift})
 		}
 	}
+	out.Takedown = buildTakedown(m)
 	for _, h := range m.Holds() {
 		stated := h.Stated
 		if stated == 0 {

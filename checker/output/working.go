@@ -36,6 +36,7 @@ func Working(p *Page, r *checker.Result, rule string) {
 	if record != nil {
 		p.Head(2, "Loads")
 		Loads(p, r)
+		Takedown(p, r)
 		AllWorking(p, r, record)
 	}
 	Holds(p, r)
@@ -280,12 +281,15 @@ func upper(s string) string {
 }
 
 // rulesOf lists the checks whose steps belong on the page of a whole member, in
-// the order of the steps: those with a row, and those that a required value is
-// worked out in. What does not apply is left out.
+// the order of the steps: those with a row, those that are worked out without one, and
+// those that a required value is worked out in. What does not apply is left out.
 func rulesOf(r *checker.Result, record *derivation.Record) []string {
 	want := map[string]bool{}
 	for _, c := range r.Checks {
 		want[c.Rule] = c.Rule != "requirement" // its value is a step of another check
+	}
+	for _, c := range r.Coverage { // worked out, with nothing to compare: what bracing needs
+		want[c.Rule] = want[c.Rule] || c.State == standard.Checked
 	}
 	for _, q := range r.Member.Requires {
 		if symbol, ok := r.Symbol(q.Symbol); ok {

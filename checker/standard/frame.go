@@ -215,6 +215,24 @@ func (f *Frame) byCase() []float64 {
 	return of
 }
 
+// CaseForce is the axial force just below a height from one case, without factors
+// and reductions, N, compression positive; self-weight counts in its case.
+func (f *Frame) CaseForce(c int, z float64) float64 {
+	eps := 1e-9 * f.Member.Height
+	n := 0.0
+	for _, l := range f.Member.Loads {
+		if l.Kind == model.AxialLoad && l.Case == c && l.At >= z-eps {
+			n += l.Value
+		}
+	}
+	if c == f.Env.SelfWeight {
+		for s, own := range f.own {
+			n += own * max(0, f.cuts[s+1]-max(z, f.cuts[s]))
+		}
+	}
+	return n
+}
+
 // partAt is the part of the member that a height lies in.
 func (f *Frame) partAt(z float64) *model.Lift {
 	for i := range f.parts {
@@ -406,8 +424,19 @@ func (f *Frame) StretchName(axis int, s action.Stretch) string {
 	if s.From <= 0 && s.To >= f.Member.Height {
 		return "the whole height"
 	}
-	return fmt.Sprintf("the stretch from %s m to %s m", number(s.From), number(s.To))
+	return fmt.Sprintf("the stretch from %s to %s", f.Place(s.From), f.Place(s.To))
 }
+
+// Place is a height in words: in metres, or in feet where the basis shows US
+// customary units.
+func (f *Frame) Place(z float64) string {
+	if f.Env.Basis.Show.American() {
+		return number(z/foot) + " ft"
+	}
+	return number(z) + " m"
+}
+
+const foot = 0.3048
 
 func number(x float64) string { return unit.Exact(math.Round(x*1e4) / 1e4) }
 
@@ -454,7 +483,11 @@ func (f *Frame) Assumptions() []string {
 	switch {
 	case m.Weight:
 		c := f.Env.Cases[f.Env.SelfWeight].Name
-		out = append(out, fmt.Sprintf("self-weight %s kN in all, in case %s", unit.Short(f.OwnWeight()/1e3, 3), c))
+		own := unit.Short(f.OwnWeight()/1e3, 3) + " kN"
+		if show := f.Env.Basis.Show; show.American() {
+			own = show.Show(f.OwnWeight(), unit.Force, 3)
+		}
+		out = append(out, fmt.Sprintf("self-weight %s in all, in case %s", own, c))
 	case m.Kind == model.Column:
 		out = append(out, "self-weight not counted")
 	}

@@ -45,7 +45,7 @@ func (s *scope) valuesFor(d duty) (list []Item, more bool) {
 	case "SHAPE":
 		return s.shapes(), false
 	case "KIND":
-		return s.words(duty{element: &element{kind: wordElement, words: []string{"imposed", "snow", "wind", "temperature"}}}), false
+		return s.words(duty{element: &element{kind: wordElement, words: []string{"imposed", "live", "roof", "snow", "rain", "wind", "temperature"}}}), false
 	case "SITUATION":
 		return s.words(duty{element: &element{kind: wordElement, words: action.SituationNames()}}), false
 	case "RESULT":
@@ -204,6 +204,9 @@ func (s *scope) caseWords(c *model.Case) string {
 
 // psiWords are the factors of a variable action by the annex of the calculation.
 func (s *scope) psiWords(c action.Case) string {
+	if s.env.Basis.Basic() {
+		return ""
+	}
 	values := action.Recommended
 	if s.env.Basis.Combining.Values.Annex != "" {
 		values = s.env.Basis.Combining.Values

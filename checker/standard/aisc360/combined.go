@@ -199,7 +199,11 @@ func (c *calc) interactionAt(s strip, k int, pull bool) float64 {
 			peak[a] = action.DiagramOf(b.pieces[a], max(g.from, stretch[a].From), min(g.to, stretch[a].To), c.bend.tiny[a]).Peak
 		}
 	}
+	// compression spreads the moment of a stretch over all of its segments
 	with := [2]bool{peak[0] > c.bend.tiny[0], peak[1] > c.bend.tiny[1]}
+	if !pull {
+		with = [2]bool{d[0].Peak > c.bend.tiny[0], d[1].Peak > c.bend.tiny[1]}
+	}
 	if !with[0] && !with[1] {
 		return -1
 	}
@@ -227,8 +231,7 @@ func (c *calc) interactionAt(s strip, k int, pull bool) float64 {
 		if !with[a] {
 			continue
 		}
-		c.take(x.mnt, peak[a], source)
-		if !c.amplified(a, k, stretch[a], d[a]) {
+		if !c.amplified(a, k, stretch[a], d[a], peak[a]) {
 			if ratio > 1 {
 				return c.do(doOver)
 			}

@@ -220,7 +220,7 @@ func (c *calc) given() {
 	m, basis := c.f.Member, &c.f.Env.Basis
 	c.s.Recording(c.record)
 	group(c.record, "")
-	fy, _, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	fy, _, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok {
 		fy = math.NaN()
 	}

@@ -51,7 +51,7 @@ func (c *calc) torsion() {
 			c.cover(coupled, standard.NotApplicable, "the section is taken as doubly symmetric")
 			return
 		}
-	case section.Channel, section.Tee, section.Angle:
+	case section.Channel, section.Tee, section.Angle, section.DoubleAngle:
 		rule, other = coupled, torsional
 	}
 	c.cover(other, standard.NotApplicable, map[string]string{torsional: "torsion goes with bending: see " + coupled, coupled: "the shear centre is the centroid"}[other])
@@ -83,9 +83,9 @@ func (c *calc) torsion() {
 	group(c.record, rule)
 	title := sec.Title()
 	c.s.Take(symG, standard.Known(c.f.Member.Material.G), c.f.Member.Material.Title())
-	it, iw := c.f.Twisting()
-	c.s.Take(symIt, standard.KnownOrZero(it), title)
-	c.s.Take(symIw, standard.KnownOrZero(iw), title)
+	it, iw, from := c.f.Twisting()
+	c.s.Take(symIt, standard.KnownOrZero(it), from)
+	c.s.Take(symIw, standard.KnownOrZero(iw), from)
 	offset := 0.0
 	if rule == coupled {
 		offset = math.Hypot(sec.SMajor, sec.SMinor)

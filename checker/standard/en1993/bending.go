@@ -113,7 +113,7 @@ func (c *calc) undecidedIn(rule, clause string, dim unit.Dim, why string) {
 func (c *calc) torsion() {
 	const rule = "torsion"
 	switch c.f.Member.Section.Shape.Kind {
-	case section.Channel, section.Tee, section.Angle:
+	case section.Channel, section.Tee, section.Angle, section.DoubleAngle:
 		c.cover(rule, standard.NotApplicable, "loads across the member and eccentric loads are taken to act through the shear centre: what they twist is for a person (6.2.7)")
 	default:
 		c.cover(rule, standard.NotApplicable, "loads act in the planes of symmetry: nothing twists the member (6.2.7)")

@@ -123,7 +123,7 @@ func (c *calc) run() {
 func (c *calc) given() {
 	m, basis := c.f.Member, &c.f.Env.Basis
 	c.group("")
-	fy, _, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	fy, _, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok {
 		fy = math.NaN()
 	}
@@ -272,7 +272,7 @@ func (c *calc) netSection(n float64) {
 		return
 	}
 	c.group(rule)
-	_, fu, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	_, fu, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok || !(fu > 0) {
 		c.undecided(rule, clause, "the tensile strength of "+m.Material.Title()+" is not known")
 		return

@@ -94,7 +94,7 @@ func (c *calc) memberInteraction() {
 	case !pressed && !both:
 		c.cover(rule, standard.NotApplicable, "no combination presses and bends the member at once")
 		return
-	case sec.Shape.Kind == section.Channel || sec.Shape.Kind == section.Tee || sec.Shape.Kind == section.Angle || sec.Shape.Kind == section.Ellipse:
+	case sec.Shape.Kind == section.Channel || sec.Shape.Kind == section.Tee || sec.Shape.Kind == section.Angle || sec.Shape.Kind == section.DoubleAngle || sec.Shape.Kind == section.Ellipse:
 		undecided("6.3.3 is for doubly symmetric sections: check compression with bending by hand (6.3.4 or second order)")
 		return
 	case c.f.Bends[0] && c.lat.prone && c.lat.unknown:
