@@ -34,7 +34,7 @@ func stable(t *testing.T, basis, members string) map[string]*checker.Result {
 	return out
 }
 
-func critical(t *testing.T, r *checker.Result, axis string) float64 {
+func criticalOf(t *testing.T, r *checker.Result, axis string) float64 {
 	t.Helper()
 	q, ok := r.Values()("N_cr_" + axis)
 	if !ok {
@@ -75,7 +75,7 @@ func TestCriticalExact(t *testing.T) {
 	} {
 		r := stable(t, "", "column A1 { section = s; material = m; height = 10 m; "+c.ends+"; "+c.loads+" }")["A1"]
 		for _, axis := range []string{"major", "minor"} {
-			if got := critical(t, r, axis) / euler; !(math.Abs(got/c.want-1) < 1e-6) {
+			if got := criticalOf(t, r, axis) / euler; !(math.Abs(got/c.want-1) < 1e-6) {
 				t.Errorf("case %d, %s, %s, about %s: %.9g, want %.9g", i, c.ends, c.loads, axis, got, c.want)
 			}
 		}

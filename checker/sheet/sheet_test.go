@@ -383,7 +383,11 @@ func TestBlindReaderOfPaper(t *testing.T) {
 				}
 			}
 		}
-		if due := *want[name].Utilisation; steps < 3 || math.Abs(got-due) > 2e-3*due {
+		least := 3
+		if want[name].Governing == "sway" {
+			least = 1 // a movement over its limit
+		}
+		if due := *want[name].Utilisation; steps < least || math.Abs(got-due) > 2e-3*due {
 			t.Errorf("%s: the paper comes to %g in %d steps, the JSON has %g", name, got, steps, due)
 		}
 	}
@@ -467,7 +471,7 @@ func TestNothingIsLost(t *testing.T) {
 				}
 			}
 		}
-		for _, due := range []string{"Local codes govern; a licensed engineer decides.", "kern test", "26 members: 20 pass, 5 fail, 1 undecided"} {
+		for _, due := range []string{"Local codes govern; a licensed engineer decides.", "kern test", "26 members: 21 pass, 5 fail, 0 undecided"} {
 			if !strings.Contains(text, squeeze.Replace(due)) {
 				t.Errorf("%s lacks %q", form, due)
 			}

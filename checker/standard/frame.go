@@ -50,8 +50,8 @@ type Frame struct {
 	beams       [2][][]action.Piece
 	beamOK      [2]bool
 	pushes      [2][][]action.Push // [axis][case] what acts across, with the forces of imperfections behind
-	loadFactor  [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
-	sprung      [2]bool      // a spring leaves effective lengths without an answer
+	loadFactor  [2][]float64       // [axis][combination] load factor at which the whole member buckles, where Exact
+	sprung      [2]bool            // a spring leaves effective lengths without an answer
 
 	parts  []model.Lift // neighbouring lifts of one section and material taken as one
 	twists []Segment    // between points held against twist
