@@ -383,7 +383,11 @@ func TestBlindReaderOfPaper(t *testing.T) {
 				}
 			}
 		}
-		if due := *want[name].Utilisation; steps == 0 || math.Abs(got-due) > 2e-3*due {
+		least := 3
+		if want[name].Governing == "sway" {
+			least = 1 // a movement over its limit
+		}
+		if due := *want[name].Utilisation; steps < least || math.Abs(got-due) > 2e-3*due {
 			t.Errorf("%s: the paper comes to %g in %d steps, the JSON has %g", name, got, steps, due)
 		}
 	}

@@ -49,8 +49,9 @@ type Frame struct {
 	slope       [][]float64 // [combination][segment] loss of compression per length, of imported forces alone
 	beams       [2][][]action.Piece
 	beamOK      [2]bool
-	loadFactor  [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
-	sprung      [2]bool      // a spring leaves effective lengths without an answer
+	pushes      [2][][]action.Push // [axis][case] what acts across, with the forces of imperfections behind
+	loadFactor  [2][]float64       // [axis][combination] load factor at which the whole member buckles, where Exact
+	sprung      [2]bool            // a spring leaves effective lengths without an answer
 
 	parts  []model.Lift // neighbouring lifts of one section and material taken as one
 	twists []Segment    // between points held against twist
@@ -394,6 +395,7 @@ func (f *Frame) moments() {
 		if f.Imperfect() {
 			loadings = append(loadings, f.notional(axis)...)
 		}
+		f.pushes[axis] = loadings
 		pieces, err := beam.Solve(loadings)
 		if m.Nominal {
 			for c := range min(len(pieces), len(f.Env.Cases)) {
