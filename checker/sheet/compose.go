@@ -52,21 +52,28 @@ func (c *composer) compose() {
 	c.sheet.contentsAt = len(c.sheet.Blocks)
 	c.overview()
 	c.findings()
-	for _, p := range c.parts {
-		c.part(p)
-	}
+	c.bases()
 	c.members()
 	c.files()
 }
 
-// facts puts the project's words together: those of the first part that has any.
+// facts puts the words about the project together. Where calculations say different
+// things, all stand there: nothing is picked.
 func (c *composer) facts() model.Project {
-	for _, p := range c.parts {
-		if x := p.calculation.Env.Project; x.Stated {
-			return x
+	var out model.Project
+	join := func(to *string, s string) {
+		if s != "" && !contains(strings.Split(*to, "; "), s) {
+			*to = strings.TrimPrefix(*to+"; "+s, "; ")
 		}
 	}
-	return model.Project{}
+	for _, p := range c.parts {
+		x := p.calculation.Env.Project
+		for _, f := range []struct{ to, from *string }{{&out.Name, &x.Name}, {&out.Number, &x.Number}, {&out.PreparedBy, &x.PreparedBy},
+			{&out.CheckedBy, &x.CheckedBy}, {&out.Revision, &x.Revision}, {&out.Date, &x.Date}} {
+			join(f.to, *f.from)
+		}
+	}
+	return out
 }
 
 // head composes title and running lines.

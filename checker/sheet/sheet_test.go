@@ -503,3 +503,28 @@ func ExampleReadMark() {
 	fmt.Println(ok)
 	// Output: false
 }
+
+// TestSharedBasis: calculations that include one basis have it written once, unless a
+// name means different things in them.
+func TestSharedBasis(t *testing.T) {
+	count := func(files map[string]string) int {
+		return strings.Count(string(printed(t, check(files), "markdown", sheet.Options{})), "\n## Basis of ")
+	}
+	column := func(name, section string) string {
+		return "include \"basis.kern\"\n" + section + "\ncolumn " + name + " { section = post; material = \"S355\"; height = 3 m; load 10 kN }\n"
+	}
+	files := map[string]string{"basis.kern": "basis { standard \"elastic\" }\n"}
+	same, other := "section post = bar { width = 50 mm }", "section post = bar { width = 60 mm }"
+	files["a.kern"], files["b.kern"] = column("A1", same), column("B1", same)
+	if n := count(files); n != 1 {
+		t.Errorf("one basis is written %d times", n)
+	}
+	files["b.kern"] = column("B1", other)
+	if n := count(files); n != 2 {
+		t.Errorf("two sections of one name stand below %d headings", n)
+	}
+	files["b.kern"] = strings.Replace(column("B1", same), "include \"basis.kern\"", "basis { standard \"elastic\"; factor_yield = 1.5 }", 1)
+	if n := count(files); n != 2 {
+		t.Errorf("two bases stand below %d headings", n)
+	}
+}
