@@ -164,7 +164,7 @@ func (m *tokenMarks) word(e *lang.Expr) {
 		return
 	}
 	switch e.Text {
-	case "at", "about", "across", "offset", "and", "from", "to", "as", "per", "annex", "eq", "because", "floor", "lengths":
+	case "at", "about", "across", "offset", "and", "from", "to", "as", "per", "by", "annex", "eq", "because", "floor", "lengths":
 		m.add(e.Span, keywordToken, 0)
 		return
 	case "height", "length", "utilisation", "slenderness", "sway":

@@ -18,6 +18,9 @@ type Standards interface {
 	// Annexes lists the annexes of a standard that are known; the first is the
 	// default.
 	Annexes(name string) []string
+	// Methods lists the methods of a standard, of which a basis must state one;
+	// nil when there is one alone.
+	Methods(name string) []string
 	// Overrides lists the numbers of a standard that a basis may replace, with
 	// whether a reason must be given.
 	Overrides(name string) map[string]bool

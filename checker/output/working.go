@@ -103,6 +103,9 @@ func MemberHead(p *Page, r *checker.Result) {
 	}
 	basis := r.Env().Basis
 	text := r.Standard
+	if text != "" && basis.Method != "" {
+		text += " by " + basis.Method
+	}
 	if text != "" && basis.Annex != "" {
 		text += ", annex " + basis.Annex
 	}

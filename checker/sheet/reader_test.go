@@ -248,8 +248,9 @@ type run struct {
 func pdfPages(t testing.TB, data []byte) []pageText {
 	t.Helper()
 	var out []pageText
-	for _, m := range stream.FindAllSubmatch(data, -1) {
-		r, err := zlib.NewReader(bytes.NewReader(m[1]))
+	for _, m := range stream.FindAllSubmatchIndex(data, -1) {
+		// from where the stream begins: its last byte may look like a line end
+		r, err := zlib.NewReader(bytes.NewReader(data[m[2]:]))
 		if err != nil {
 			continue
 		}

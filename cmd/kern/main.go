@@ -45,6 +45,16 @@ func root() *cobra.Command {
 		Version:       version(),
 	}
 	c.SetVersionTemplate("kern {{.Version}}\n")
-	c.AddCommand(checkCommand(), sheetCommand(), scheduleCommand(), formatCommand(), rulesCommand(), catalogueCommand(), lspCommand(), versionCommand())
+	c.AddCommand(
+		checkCommand(),
+		sheetCommand(),
+		scheduleCommand(),
+		formatCommand(),
+		rulesCommand(),
+		catalogueCommand(),
+		chartCommand(),
+		lspCommand(),
+		versionCommand(),
+	)
 	return c
 }
