@@ -276,7 +276,7 @@ func follow(t *testing.T, c *chapter, equations []string) (last float64) {
 // they are set in HTML, and from the words of the PDF.
 func TestBlindReader(t *testing.T) {
 	members, read := 0, 0
-	for _, files := range []map[string]string{boathouse(t), generate.Project(8, 3), generate.BentProject(6, 9)} {
+	for _, files := range []map[string]string{boathouse(t), generate.Project(8, 3), generate.BentProject(6, 9), american("LRFD"), american("ASD")} {
 		m, p := readBlind(t, check(files))
 		members, read = members+m, read+p
 	}
@@ -286,6 +286,17 @@ func TestBlindReader(t *testing.T) {
 	if read < 100 {
 		t.Errorf("only %d formulas of the PDF were read", read)
 	}
+}
+
+// american is a calculation to ANSI/AISC 360 in US units.
+func american(method string) map[string]string {
+	return map[string]string{"us.kern": `basis { standard "ANSI/AISC 360-22" by ` + method + `; show kip, ksi, in, kip-ft }
+material a992 { E = 29000 ksi; fy = 50 ksi; fu = 65 ksi; density = 490 pcf }
+section w = isection { depth = 10 in; width = 10 in; web = 0.34 in; flange = 0.56 in; root = 0.5 in; made = rolled }
+column A1 "Post" { section = w; material = a992; height = 15 ft; load 150 kip; load 4 kip across major at 7.5 ft }
+column A2 { section = w; material = a992; height = 15 ft; load 170 kip }
+column A3 { section = tube { width = 5 in; wall = 0.25 in; made = cold }; material = a992; height = 12 ft; load 60 kip }
+`}
 }
 
 func readBlind(t *testing.T, r *checker.Report) (members, read int) {
@@ -321,6 +332,9 @@ func readBlind(t *testing.T, r *checker.Report) (members, read int) {
 			t.Errorf("the PDF says %s", e)
 		}
 		read++
+	}
+	if members == 0 || read == 0 {
+		t.Errorf("of %d members %d were worked out, %d formulas of the PDF read", len(r.Members), members, read)
 	}
 	return members, read
 }
