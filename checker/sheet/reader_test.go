@@ -81,6 +81,8 @@ func formulaText(n *html.Node) string {
 		switch s := n.FirstChild.Data; s {
 		case "·":
 			return " * "
+		case "/":
+			return " / "
 		case "−":
 			if attribute(n, "form") == "prefix" {
 				return "-"
