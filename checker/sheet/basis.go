@@ -252,7 +252,7 @@ func cases(env *model.Env) (out []output.Block) {
 		v, ok := env.Basis.Combining.Values.Psi(x.Case)
 		for i := range v {
 			psi := output.Words("–")
-			if ok && x.Kind.Variable() && env.Basis.Actions != "" {
+			if ok && x.Kind.Variable() && env.Basis.Actions != "" && !env.Basis.Basic() {
 				psi = output.Words(unit.Exact(v[i]))
 			}
 			row = append(row, psi)

@@ -182,7 +182,7 @@ func TestBlindReaderOfPaper(t *testing.T) {
 				}
 			}
 		}
-		if due := *want[name].Utilisation; steps < 3 || math.Abs(got-due) > 2e-3*due {
+		if due := *want[name].Utilisation; steps < 1 || math.Abs(got-due) > 2e-3*due {
 			t.Errorf("%s: the paper comes to %g in %d steps, the JSON has %g", name, got, steps, due)
 		}
 	}

@@ -42,6 +42,7 @@ func (c *composer) member(group []*checker.Result) []output.Block {
 		add(1, func(p *output.Page) {
 			p.Head(2, "Loads")
 			output.Loads(p, r)
+			output.Takedown(p, r)
 		})
 		out = append(out, c.forces(r)...)
 	}

@@ -298,12 +298,12 @@ func TestNothingIsLost(t *testing.T) {
 				due = append(due, c.Rule, c.Why)
 			}
 			for _, d := range due {
-				if !strings.Contains(text, squeeze.Replace(strings.NewReplacer("mm2", "mm²").Replace(d))) && !strings.Contains(text, squeeze.Replace(d)) {
+				if !strings.Contains(text, squeeze.Replace(strings.NewReplacer("mm2", "mm²", " m2", " m²").Replace(d))) && !strings.Contains(text, squeeze.Replace(d)) {
 					t.Errorf("%s: %s: %q is not there", form, m.Name, d)
 				}
 			}
 		}
-		for _, due := range []string{"Local codes govern; a licensed engineer decides.", "kern test", "24 members: 18 pass, 5 fail, 1 undecided"} {
+		for _, due := range []string{"Local codes govern; a licensed engineer decides.", "kern test", fmt.Sprintf("%d members: %d pass, %d fail, %d undecided", r.Summary.Members, r.Summary.Passes, r.Summary.Fails, r.Summary.Undecided)} {
 			if !strings.Contains(text, squeeze.Replace(due)) {
 				t.Errorf("%s lacks %q", form, due)
 			}
