@@ -21,9 +21,13 @@ import (
 	"kern/lang/unit"
 
 	"github.com/google/go-cmp/cmp"
+	"golang.org/x/tools/txtar"
 )
 
-var update = flag.Bool("update", false, "write the golden files anew")
+var (
+	update = flag.Bool("update", false, "write the golden files anew")
+	all    = flag.Bool("all", false, "print all broken files, not a few")
+)
 
 // check works out a set of files.
 func check(files map[string]string) *checker.Report {
@@ -362,5 +366,42 @@ func TestSharedBasis(t *testing.T) {
 	files["b.kern"] = strings.Replace(column("B1", same), "include \"basis.kern\"", "basis { standard \"elastic\"; factor_yield = 1.5 }", 1)
 	if n := count(files); n != 2 {
 		t.Errorf("two bases stand below %d headings", n)
+	}
+}
+
+// TestBrokenFiles prints the broken files of the language in every form: nothing
+// stops the printer, and no cover says that broken files pass. A few are taken,
+// all with -all.
+func TestBrokenFiles(t *testing.T) {
+	paths, err := filepath.Glob("../../testdata/broken/*.txtar")
+	if err != nil || len(paths) < 100 {
+		t.Fatal(len(paths), err)
+	}
+	step := 40
+	if *all {
+		step = 1
+	}
+	for i := 0; i < len(paths); i += step {
+		data, err := os.ReadFile(paths[i])
+		if err != nil {
+			t.Fatal(err)
+		}
+		files := map[string]string{}
+		for _, f := range txtar.Parse(data).Files {
+			if f.Name != "want" {
+				files[f.Name] = string(f.Data)
+			}
+		}
+		r := check(files)
+		for _, form := range forms {
+			printed(t, r, form, sheet.Options{Full: true})
+		}
+		s, err := sheet.New(r, sheet.Options{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		if r.Summary.Errors > 0 && s.Tally.Word == "passes" {
+			t.Errorf("%s has %d errors, and the cover says it passes", paths[i], r.Summary.Errors)
+		}
 	}
 }
