@@ -254,6 +254,9 @@ func (e *elevation) view(axis int) {
 	e.column(near, edge, holdWords, 8, tallSheet-6, End)
 	if axis == 0 {
 		for _, l := range e.m.Lifts {
+			if l.Section == nil { // its line has an error
+				continue
+			}
 			e.left = append(e.left, entry{want: (e.y(l.From) + e.y(l.To)) / 2, lines: []Text{{Words: l.Section.Title(), Size: small}}, to: Point{-1, -1}})
 		}
 		e.column(e.left, 11.5, edge-holdWords-1-11.5, 8, tallSheet-6, Start)

@@ -88,6 +88,9 @@ func set(m mark, size float64, heavy bool, inner int) box {
 		if m.text == "·" { // it stands high in this font
 			space, down = 0.14*size, 0.09*size
 		}
+		if m.text == "/" {
+			space = 0.06 * size
+		}
 		return box{width: b.width + 2*space, above: b.above, below: b.below, ops: shifted(b.ops, space, down)}
 	case commaMark:
 		b := words(upright, size, m.text)
