@@ -127,11 +127,11 @@ func (b *buckling) lines(axis int) []string {
 		if b.f.Stepped(s.From, s.To) { // each lift has an effective length of its own
 			return append(out, "checked lift by lift")
 		}
-		with := "checked with"
+		k := "checked with K "
 		if s.Overridden {
-			with += " the stated K"
+			k = "with the stated K "
 		}
-		out = append(out, with, "N_cr "+b.show(b.f.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length)+", K "+unit.Short(s.K, 3))
+		out = append(out, k+unit.Short(s.K, 3), "N_cr "+b.show(b.f.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length))
 	}
 	return out
 }
