@@ -54,8 +54,8 @@ func (b *buckling) view(axis int, x float64, weak int) {
 	b.line(Dashed, x, top, x, base)
 	b.base(b.m.Base[axis], x, base, 0.7)
 	b.top(b.m.Top[axis], x, top, 0.7)
-	for _, z := range b.holdHeights(axis) {
-		b.hold(x-0.4, b.y(z), -1)
+	for _, s := range b.supports(axis) {
+		b.support(s, x, b.y(s.at), 0.4, -1)
 	}
 	style, tone := Outline, Plain
 	if axis == weak {
