@@ -58,6 +58,7 @@ type Frame struct {
 	floors []floors     // [case][segment] what floors bring, for reductions; nil for none
 	lift   *liftView    // of a frame of one lift
 	needs  []HoldDemand // what Holds found, nil before
+	stated []HoldDemand // what statedHolds found, nil before
 }
 
 // Segment is a part of the height between two points that are held, m.
