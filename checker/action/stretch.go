@@ -57,6 +57,7 @@ type Stretch struct {
 	Exact      bool    // K was solved for the whole column, see Stretches
 	Overridden bool    // K is the user's
 	Joints     bool    // K follows from the stiffness ratios of rigid joints
+	Sway       bool    // then, its joints can move sideways against each other
 	Direct     bool    // K is 1 by the direct analysis method
 	Stepped    bool    // the section changes in it; K is for one of its sections and one combination
 }
