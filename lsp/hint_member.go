@@ -190,12 +190,12 @@ func (c *collector) factors(s *lang.Stmt, r *checker.Result) map[*lang.Stmt]stri
 	type row struct{ factors [2][]string }
 	rows := map[*lang.Stmt]*row{}
 	for axis := range frame.Stretches {
-		if !frame.Stands[axis] {
+		if !frame.Stands[axis] || frame.Exact[axis] {
 			continue
 		}
 		for _, t := range frame.Stretches[axis] {
 			line := c.cause(s, m, axis, t)
-			if t.Overridden || line == nil {
+			if t.Overridden || line == nil || frame.Stepped(t.From, t.To) {
 				continue
 			}
 			if rows[line] == nil {

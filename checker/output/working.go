@@ -36,8 +36,10 @@ func Working(p *Page, r *checker.Result, rule string) {
 	if record != nil {
 		p.Head(2, "Loads")
 		Loads(p, r)
+		Takedown(p, r)
 		AllWorking(p, r, record)
 	}
+	Holds(p, r)
 	Coverage(p, r)
 	Assumptions(p, r)
 	Departures(p, r)
@@ -438,6 +440,33 @@ func Missing(p *Page, r *checker.Result) {
 		}
 	}
 	p.List(plainLines(list)...)
+}
+
+// Holds writes what each hold must be able to do so that the member can count on
+// it.
+func Holds(p *Page, r *checker.Result) {
+	list := r.Holds()
+	if len(list) == 0 {
+		return
+	}
+	p.Head(2, "What the holds need")
+	var rows [][]Line
+	var from []string
+	units := r.Units()
+	for _, h := range list {
+		stated := "rigid"
+		if h.Stated > 0 {
+			stated = amountText(units, h.Stated, unit.ForcePerLength)
+		}
+		rows = append(rows, []Line{Words(amountText(units, h.At, unit.Length)), Words(h.Axis.String()), Words(amountText(units, h.Compression, unit.Force)), Words(amountText(units, h.Force, unit.Force)),
+			Words(amountText(units, h.Practice, unit.Force)), Words(amountText(units, h.Stiffness, unit.ForcePerLength)), Words(stated), Words(r.Combinations()[h.Combination].Name)})
+		if s := "stiffness: " + h.How; !slices.Contains(from, s) {
+			from = append(from, s)
+		}
+	}
+	p.Table([]string{"at", "about", "compression", "force", "2.5 %", "stiffness needed", "stiffness", "under"}, "llrrrrrl", rows)
+	p.List(plainLines(append([]string{"force: " + standard.HoldForceClause + ", of a bow of L/500 for the one member and the movement of the hold under it; what else pushes on the hold is added",
+		"2.5 %: " + standard.HoldPractice}, from...))...)
 }
 
 // Coverage writes what the standard asks for and what became of it.

@@ -126,7 +126,7 @@ func (c *calc) run() {
 	c.bending()
 	c.bracing()
 	c.slenderness()
-	c.sway()
+	c.shared()
 	c.out.Assumptions = append(c.f.Assumptions(), c.assuming...)
 }
 
@@ -141,7 +141,7 @@ const (
 func (c *calc) given() {
 	m, basis := c.f.Member, &c.f.Env.Basis
 	c.group("")
-	fy, _, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	fy, _, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok || !(fy > 0) {
 		fy = math.NaN()
 		c.why = standard.NoStrength(m)
@@ -212,10 +212,9 @@ func (c *calc) worst(from, to float64) (float64, int) {
 	return most, at
 }
 
-func (c *calc) sway() {
-	if c.f.Member.Limits.Sway > 0 {
-		c.undecided("sway", "limit of the member", "sway is not worked out: compare the frame's sway with the limit by hand")
-		return
-	}
-	c.cover("sway", standard.NotApplicable, "the member sets no limit")
+// common are the checks that all standards share.
+var common = standard.NewCommon(set)
+
+func (c *calc) shared() {
+	common.Check(c.f, c.s, &c.out, c.group, c.do)
 }

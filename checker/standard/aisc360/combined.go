@@ -89,8 +89,11 @@ func (c *calc) interaction() {
 	case !pressed && !pulled && !(c.f.Bends[0] && c.f.Bends[1]):
 		c.cover(rule, standard.NotApplicable, "neither axial force nor bending about a second axis")
 		return
-	case !c.f.Stands[0] || !c.f.Stands[1]:
-		refuse("the ends and holds do not keep the member in place")
+	case !c.f.Stands[0]:
+		refuse(c.f.NotHeld(0))
+		return
+	case !c.f.Stands[1]:
+		refuse(c.f.NotHeld(1))
 		return
 	case c.f.Bends[0] && c.bend.why[0] != "":
 		refuse(c.bend.why[0])

@@ -68,7 +68,6 @@ var (
 	symPn       = sym("P_n", unit.Force, "nominal compressive strength, the least of all modes of buckling")
 	compressive = newAvailable(symPn, "P_c", "phi_c", "Omega_c", "E1")
 	inelastic   = 2.25 // greatest F_y/F_e of inelastic buckling, E3(a)
-	notInPlace  = "the ends and holds do not keep the member in place about "
 	notPressed  = "no combination compresses the member"
 )
 
@@ -105,7 +104,7 @@ func (c *calc) flexural(a int) {
 	switch {
 	case !c.f.Stands[a]:
 		c.least(unknown(rule))
-		c.undecided(rule, clause, notInPlace+x.word)
+		c.undecided(rule, clause, c.f.NotHeld(a))
 		return
 	case c.why != "":
 		c.least(unknown(rule))
@@ -182,6 +181,9 @@ func (c *calc) elasticStress(a int, s action.Stretch) float64 {
 		source = fmt.Sprintf("%s, %s–%s", c.f.StretchName(a, s), s.Base, s.Top)
 	}
 	c.take(x.l, standard.Known(s.Length()), source)
+	if s.Whole {
+		source = "from the critical load of the whole member, the greatest of all combinations"
+	}
 	c.take(x.k, standard.Known(s.K), source)
 	if s.Joints {
 		c.joints(a)
@@ -267,7 +269,7 @@ func (c *calc) slenderness() {
 	worst, at := math.Inf(-1), 0
 	for a := range axes {
 		if !c.f.Stands[a] {
-			c.undecided(rule, "limit of the member", notInPlace+axes[a].word)
+			c.undecided(rule, "limit of the member", c.f.NotHeld(a))
 			return
 		}
 		c.silently(func() {

@@ -97,7 +97,7 @@ func (c *calc) ruptureStrength() string {
 	case !(lag.Value <= 1):
 		return "U is more than 1: the shear lag factor is at most 1 (Table D3.1)"
 	}
-	_, fu, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	_, fu, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok || !(fu > 0) {
 		return "the tensile strength of " + m.Material.Title() + " is not known"
 	}

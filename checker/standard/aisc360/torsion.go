@@ -116,10 +116,10 @@ func (c *calc) torsional() {
 		refuse("state I_t and I_w of the section, or check torsional buckling by hand")
 		return
 	case !c.f.Stands[0]:
-		refuse(notInPlace + "major")
+		refuse(c.f.NotHeld(0))
 		return
 	case !c.f.Stands[1]:
-		refuse(notInPlace + "minor")
+		refuse(c.f.NotHeld(1))
 		return
 	}
 	if sec.Shape.Kind == section.Given {
@@ -140,8 +140,7 @@ func (c *calc) torsional() {
 // torsionalStrength computes P_c_T in the group that is open.
 func (c *calc) torsionalStrength(rule string) {
 	sec := c.f.Member.Section
-	title := sec.Title()
-	j, cw := c.f.Twisting()
+	j, cw, title := c.f.Twisting()
 	if math.IsNaN(cw) {
 		cw = 0
 		c.assume("C_w = 0, as it is not stated")
