@@ -93,9 +93,9 @@ func (c *calc) shearClause(a int) string {
 	switch kind := c.f.Member.Section.Shape.Kind; {
 	case (kind == section.ISection || kind == section.Channel) && a == 0:
 		return "G2.1"
-	case kind == section.ISection || kind == section.Channel || kind == section.Tee && a != c.squareToStem():
+	case kind == section.ISection || kind == section.Channel || (kind == section.Tee || kind == section.DoubleAngle) && a != c.squareToStem():
 		return "G6"
-	case kind == section.Tee || kind == section.Angle:
+	case kind == section.Tee || kind == section.Angle || kind == section.DoubleAngle:
 		return "G3"
 	case kind == section.Tube:
 		return "G4"
@@ -140,7 +140,13 @@ func (c *calc) shearStrength(a int) string {
 			plate(p.stem, p.ratioStem, x.doVnLeg, 1.2, "G3")
 			return ""
 		}
-		return "G6 gives the flange of a tee in shear across its stem, F no bending there: check by hand"
+		return "chapter F has no bending of tees across the stem: check bending and shear there by hand"
+	case section.DoubleAngle:
+		if a == c.squareToStem() {
+			plate(pairs[a].area, pairs[a].ratio, x.doVnLeg, 1.2, "G3")
+			return ""
+		}
+		return "F has no bending of double angles across their web legs: check bending and shear there by hand"
 	case section.Angle:
 		plate(p.leg, p.ratioLeg, x.doVnLeg, 1.2, "G3")
 	case section.Tube:
