@@ -76,6 +76,8 @@ column T6 as F1 { section = bnon }
 column T7 as F1 { section = bdeep }
 column T8 as F1 { section = blow }
 column T9 as F1 { section = bbox }
+section bround = tube { depth = 200 mm; width = 150 mm; wall = 8 mm; corner = 24 mm; made = cold }
+column T12 as F1 { section = bround }
 column T11 as F1 { section = bwalls }
 column T10 as F1 { section = bnarrow }
 column P1 as F1 { section = bpipe }

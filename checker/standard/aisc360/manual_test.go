@@ -48,3 +48,32 @@ func TestSelectionTable(t *testing.T) {
 		}
 	}
 }
+
+// TestStrengthTables holds phi M_n and phi V_n of channels, HSS and pipes of the
+// catalogue against what AISC Design Examples v16.0 print (F.2-1A, F.6, F.7A, F.8A,
+// F.9A, G.2A, G.4; read in the source).
+func TestStrengthTables(t *testing.T) {
+	for _, r := range []struct {
+		name, symbol      string
+		fy, printed, unit float64 // ksi
+	}{
+		{"C15X33.9", "phi_M_n_s_x", 50, 191, kipft}, {"HSS3-1/2X3-1/2X1/8", "phi_M_n_s_x", 50, 7.20, kipft}, {"HSS10X6X3/16", "phi_M_n_s_x", 50, 59.7, kipft},
+		{"HSS8X8X3/16", "phi_M_n_s_x", 50, 46.3, kipft}, {"PIPE8XS", "phi_M_n_s_x", 35, 81.4, kipft}, {"HSS6X4X3/8", "phi_V_n_x", 50, 93.6, kip}, {"C15X33.9", "phi_V_n_x", 50, 162, kip},
+	} {
+		e, ok := catalogue.Find(r.name)
+		if !ok {
+			t.Errorf("%s is not in the catalogue", r.name)
+			continue
+		}
+		props, err := section.Compute(e.Shape)
+		if err != nil {
+			t.Fatal(err)
+		}
+		p := post{shape: section.Shape{Kind: section.Rod, Diameter: 4}, fy: r.fy, height: 10}
+		p.more = all(func(m *model.Member) { m.Section.Shape, m.Section.Properties = e.Shape, props }, push(model.Major, 1))
+		v, _ := p.values(t, Standard{})
+		if got := v[r.symbol] / r.unit; !(math.Abs(got/r.printed-1) <= 0.0125) {
+			t.Errorf("%s: %s = %.4g, printed %g (%+.2f %%)", r.name, r.symbol, got, r.printed, 100*(got/r.printed-1))
+		}
+	}
+}
