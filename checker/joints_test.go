@@ -3,6 +3,8 @@ package checker_test
 import (
 	"math"
 	"testing"
+
+	"kern/checker/standard"
 )
 
 // TestJoints holds what the stiffness ratios of joints bring about in every
@@ -46,6 +48,28 @@ column A3 { section = "HEB 200"; material = "S355"; height = 4 m; load 300 kN; l
 			if a, b := value["A1"]["C_my"], value["A3"]["C_my"]; a != 0.9 || b == 0.9 {
 				t.Errorf("C_my = %g with sway, %g without", a, b)
 			}
+		}
+	}
+}
+
+// TestNotionalLoads: by direct analysis a column that can sway is undecided until it
+// carries the forces of a sway imperfection; a frame's is not its own.
+func TestNotionalLoads(t *testing.T) {
+	const column = `
+column A1 { section = "HEB 200"; material = "S355"; height = 4 m; base fixed; top free; load 80 kN }
+column A2 as A1 { imperfection on }
+column A3 { section = "HEB 200"; material = "S355"; height = 4 m; load 80 kN; imperfection on; joints 1 at base, 2 at top about major sway }
+column A4 { section = "HEB 200"; material = "S355"; height = 4 m; load 80 kN }
+`
+	for _, m := range derivedReport(t, `basis { standard "ANSI/AISC 360-22" by LRFD; stability direct; B_2 = 1.1 because "story" }`+column, true) {
+		want := map[string]standard.State{"A1": standard.NotCovered, "A2": standard.Checked, "A3": standard.NotCovered, "A4": standard.Checked}[m.Name]
+		for _, c := range m.Coverage {
+			if c.Rule == "frame-stability" && c.State != want {
+				t.Errorf("%s: frame-stability is %s, want %s", m.Name, c.State, want)
+			}
+		}
+		if decided := m.Verdict != standard.Undecided; decided != (want == standard.Checked) {
+			t.Errorf("%s %s", m.Name, m.Verdict)
 		}
 	}
 }
