@@ -91,7 +91,7 @@ func (f *Frame) split() {
 		}
 		f.Stretches[axis], f.Stands[axis] = action.Stretches(m.Base[axis], m.Top[axis], holds, m.Height, f.Env.Basis.Recommended)
 		if j := m.Joints[axis]; j != nil {
-			f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: j.Factor(), Joints: true}}
+			f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: j.Factor(), Joints: true, Sway: j.Sway}}
 			f.Stands[axis] = true
 		}
 		if f.Env.Basis.Direct && f.Stands[axis] {

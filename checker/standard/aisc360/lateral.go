@@ -56,6 +56,9 @@ func (c *calc) lateralOf() lateralState {
 	case section.Tee:
 		l.axis, l.cb = c.squareToStem(), false
 		l.strength = (*calc).lateralTee
+	case section.DoubleAngle:
+		l.axis, l.cb = c.squareToStem(), false
+		l.strength = (*calc).lateralPair
 	case section.Angle:
 		l.strength = (*calc).lateralAngle
 		c.unequalLegs()

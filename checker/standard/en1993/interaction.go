@@ -186,7 +186,7 @@ func (c *calc) swayAny() bool {
 
 func sways(s action.Stretch) bool {
 	held := func(e action.End) bool { return e == action.Pinned || e == action.Fixed }
-	return s.Exact || s.Sprung || !held(s.Base) || !held(s.Top)
+	return s.Exact || s.Sway || s.Sprung || !held(s.Base) || !held(s.Top)
 }
 
 // stripGiven is what a strip has whatever the combination.
