@@ -1,0 +1,410 @@
+package review
+
+import (
+	"cmp"
+	"maps"
+	"math"
+	"slices"
+	"strings"
+
+	"kern/checker"
+	"kern/checker/model"
+	"kern/checker/standard"
+	"kern/lang"
+)
+
+// side is one state of a calculation.
+type side struct {
+	report *checker.Report
+	calc   *model.Calculation
+	parts  *state
+	lines  *lines
+	places map[*lang.Decl][]string // what a declaration mentions, as ids
+}
+
+// mentions are the ids of what a declaration of the text speaks of.
+func (s *side) mentions(d *lang.Decl) []string {
+	if out, ok := s.places[d]; ok {
+		return out
+	}
+	var out []string
+	checker.Mentions(s.calc, d, func(m checker.Mention) {
+		kind := [...]string{model.ValueName: "value", model.MaterialName: "material", model.SectionName: "section", model.LevelName: "level",
+			model.MemberName: "member", model.CaseName: "", model.CombinationName: ""}[m.Named.Kind]
+		if id := kind + " " + m.Named.Name; kind != "" && !slices.Contains(out, id) {
+			out = append(out, id)
+		}
+	})
+	s.places[d] = out
+	return out
+}
+
+// closure are the declarations that a member depends on, itself among them.
+func (s *side) closure(id string) map[string]bool {
+	out := map[string]bool{}
+	queue := []string{id, "basis", "cases", "combinations", "exclusives"}
+	for len(queue) > 0 {
+		id := queue[0]
+		queue = queue[1:]
+		d := s.parts.all[id]
+		if d == nil || out[id] {
+			continue
+		}
+		out[id] = true
+		for _, decl := range d.decls {
+			queue = append(queue, s.mentions(decl)...)
+		}
+	}
+	return out
+}
+
+// part is a declaration in both states, laid side by side.
+type part struct {
+	before, after *declared // nil where it is not there
+	name          string    // that the mixture gives it
+	slots         []slot
+}
+
+// player is what is brought about as one: an edit, or several that make no sense
+// apart.
+type player struct {
+	edits []Edit
+	of    []int // parts that it changes
+	order string
+	slots [][2]int // part and slot
+}
+
+// mixture is a member between two states: any of the edits may have been made.
+type mixture struct {
+	name    string
+	parts   []part
+	players []player
+	idle    []Edit // edits that cannot matter
+	known   map[string]outcome
+}
+
+// outcome is what the member comes to in one state of the mixture.
+type outcome struct {
+	utilisation float64 // NaN when not known
+	verdict     standard.Verdict
+	found       bool
+}
+
+// pairOf are the ids of one member in both states.
+type pairOf struct{ before, after string }
+
+// mix lays out everything that a member depends on in either state. With coupled,
+// definitions that came or went are edits too, bound to those that speak of
+// them; else they are there all the time, which changes nothing as long as
+// nobody speaks of them.
+func mix(earlier, later *side, member pairOf, coupled bool) *mixture {
+	m := &mixture{known: map[string]outcome{}, name: strings.TrimPrefix(member.after, "member ")}
+	b, a := earlier.closure(member.before), later.closure(member.after)
+	ids := map[string]bool{}
+	maps.Copy(ids, b)
+	maps.Copy(ids, a)
+	if member.before != member.after {
+		delete(ids, member.before)
+	}
+	same := map[[2]*lang.Stmt]int{} // several members of one block are edited as one
+	for _, id := range inOrder(ids, later.parts.order, earlier.parts.order) {
+		p := part{before: earlier.parts.all[id], after: later.parts.all[id]}
+		if id == member.after {
+			p.before = earlier.parts.all[member.before]
+		}
+		d := p.after
+		if d == nil {
+			d = p.before
+		}
+		p.name = d.name
+		at := len(m.parts)
+		var was, now []fact
+		if p.before != nil {
+			was = p.before.facts
+		}
+		if p.after != nil {
+			now = p.after.facts
+		}
+		slots, pairs := align(was, now)
+		whole := p.before == nil || p.after == nil
+		if whole && !coupled && defines(d.kind) {
+			for i := range slots {
+				slots[i].before, slots[i].after = true, true
+			}
+			pairs = nil
+		}
+		if whole && len(pairs) > 0 && defines(d.kind) {
+			pl := player{of: []int{at}}
+			text := d.write(p.name, d.facts)
+			e := Edit{Kind: kindOf(d, "made of"), Of: d.title(), Place: later.lines.at(d.facts[0].place)}
+			if p.after != nil {
+				e.After = text
+			} else {
+				e.Before, e.Place = text, earlier.lines.at(d.facts[0].place)
+			}
+			pl.edits = []Edit{e}
+			for i := range slots {
+				pl.slots = append(pl.slots, [2]int{at, i})
+			}
+			m.players = append(m.players, pl)
+			pairs = nil
+		}
+		p.slots = slots
+		m.parts = append(m.parts, p)
+		for _, pair := range pairs {
+			var x, y *fact
+			var key [2]*lang.Stmt
+			pl := player{of: []int{at}}
+			if pair.before >= 0 {
+				x = &slots[pair.before].fact
+				key[0] = x.stmt
+				pl.slots = append(pl.slots, [2]int{at, pair.before})
+			}
+			if pair.after >= 0 {
+				y = &slots[pair.after].fact
+				key[1] = y.stmt
+				pl.slots = append(pl.slots, [2]int{at, pair.after})
+			}
+			e := editOf(p.before, p.after, x, y, earlier.lines, later.lines)
+			if carries := d.kind == "cases" && (x == nil || y == nil); carries && !coupled {
+				for _, s := range pl.slots {
+					slots[s[1]].before, slots[s[1]].after = true, true
+				}
+				continue
+			}
+			if f := cmp.Or(y, x); cannotMatter(d, f.word) {
+				m.idle = append(m.idle, e)
+				for _, s := range pl.slots { // the later words stand in every state
+					slots[s[1]].before = slots[s[1]].after
+				}
+				continue
+			}
+			if i, ok := same[key]; ok && key != [2]*lang.Stmt{} {
+				m.players[i].slots = append(m.players[i].slots, pl.slots...)
+				m.players[i].of = append(m.players[i].of, at)
+				continue
+			}
+			same[key] = len(m.players)
+			pl.edits = []Edit{e}
+			m.players = append(m.players, pl)
+		}
+	}
+	if coupled {
+		m.couple()
+	}
+	m.settle()
+	return m
+}
+
+// defines tells of declarations that change nothing unless something speaks of
+// them.
+func defines(kind string) bool {
+	switch kind {
+	case "value", "section", "material", "level", "member":
+		return true
+	}
+	return false
+}
+
+// inOrder lists ids in the order of the later state; what only the earlier one
+// has comes behind what it came behind there.
+func inOrder(ids map[string]bool, later, earlier []string) []string {
+	behind := map[string][]string{} // what follows an id in the earlier state alone
+	in := map[string]bool{}
+	for _, id := range later {
+		in[id] = true
+	}
+	last := ""
+	for _, id := range earlier {
+		if in[id] {
+			last = id
+		} else {
+			behind[last] = append(behind[last], id)
+		}
+	}
+	var out []string
+	add := func(id string) {
+		if ids[id] {
+			out = append(out, id)
+		}
+	}
+	for _, id := range behind[""] {
+		add(id)
+	}
+	for _, id := range later {
+		add(id)
+		for _, x := range behind[id] {
+			add(x)
+		}
+	}
+	return out
+}
+
+// settle orders the players by what they say, so that the order of edits in the
+// text has no influence on anything, and numbers their slots.
+func (m *mixture) settle() {
+	for i := range m.players {
+		var b strings.Builder
+		for _, e := range m.players[i].edits {
+			b.WriteString(e.Of + "\x00" + e.Before + "\x00" + e.After + "\x00")
+		}
+		m.players[i].order = b.String()
+	}
+	slices.SortStableFunc(m.players, func(a, b player) int { return strings.Compare(a.order, b.order) })
+	for i, p := range m.players {
+		for _, s := range p.slots {
+			m.parts[s[0]].slots[s[1]].edit = i
+		}
+	}
+	clear(m.known)
+}
+
+// couple makes one player of a definition that came or went and the edits that
+// speak of it.
+func (m *mixture) couple() {
+	root := make([]int, len(m.players))
+	for i := range root {
+		root[i] = i
+	}
+	find := func(i int) int {
+		for root[i] != i {
+			i = root[i]
+		}
+		return i
+	}
+	gives := map[string][]int{}
+	for i, p := range m.players {
+		for _, s := range p.slots {
+			x := m.parts[s[0]]
+			switch f := x.slots[s[1]].fact; {
+			case strings.HasPrefix(f.word, "case "):
+				gives[strings.TrimPrefix(f.word, "case ")] = append(gives[strings.TrimPrefix(f.word, "case ")], i)
+			case x.before == nil || x.after == nil:
+				gives[x.name] = append(gives[x.name], i)
+			}
+		}
+	}
+	for i, p := range m.players {
+		for _, s := range p.slots {
+			if f := m.parts[s[0]].slots[s[1]].fact; f.stmt != nil {
+				model.Mentioned(f.stmt, func(e *lang.Expr) {
+					name, _, _ := strings.Cut(e.Text, ".")
+					for _, k := range gives[name] {
+						root[find(k)] = find(i)
+					}
+				})
+			}
+		}
+	}
+	m.merge(func(i int) int { return find(i) })
+}
+
+// merge makes one player of all with the same number.
+func (m *mixture) merge(number func(i int) int) {
+	var out []player
+	at := map[int]int{}
+	for i, p := range m.players {
+		n := number(i)
+		k, ok := at[n]
+		if !ok {
+			at[n] = len(out)
+			out = append(out, p)
+			continue
+		}
+		out[k].edits = append(out[k].edits, p.edits...)
+		out[k].of = append(out[k].of, p.of...)
+		out[k].slots = append(out[k].slots, p.slots...)
+	}
+	m.players = out
+	m.settle()
+}
+
+// write writes a declaration with some of its facts.
+func (d *declared) write(name string, facts []fact) string {
+	var head, body []string
+	kind, title, as := "column", "", ""
+	for _, f := range facts {
+		switch {
+		case d.kind == "member" && f.word == "kind":
+			kind = f.text
+		case d.kind == "member" && f.word == "title":
+			title = " " + f.text
+		case d.kind == "member" && f.word == "as":
+			as = " " + f.text
+		case f.word == "made of":
+			head = append(head, f.text)
+		default:
+			body = append(body, f.text)
+		}
+	}
+	switch d.kind {
+	case "member":
+		return kind + " " + name + title + as + " {\n" + strings.Join(body, "\n") + "\n}\n"
+	case "basis":
+		return "basis {\n" + strings.Join(body, "\n") + "\n}\n"
+	case "section", "material", "level":
+		text := d.kind + " " + name + " " + strings.Join(head, " ")
+		if len(body) > 0 {
+			text += " { " + strings.Join(body, "; ") + " }"
+		}
+		return text + "\n"
+	}
+	return strings.Join(body, "\n") + "\n"
+}
+
+// text is the calculation with some of the edits made.
+func (m *mixture) text(made []bool) string {
+	var b strings.Builder
+	var facts []fact
+	for _, p := range m.parts {
+		facts = facts[:0]
+		there := p.before != nil && p.after != nil
+		for _, s := range p.slots {
+			in := s.before
+			if s.edit >= 0 && made[s.edit] {
+				in = s.after
+			}
+			if in {
+				facts = append(facts, s.fact)
+			}
+			there = there || in
+		}
+		if !there {
+			continue
+		}
+		d := p.after
+		if d == nil {
+			d = p.before
+		}
+		b.WriteString(d.write(p.name, facts))
+	}
+	return b.String()
+}
+
+// check works the member out with some of the edits made.
+func (m *mixture) check(made []bool) outcome {
+	key := setKey(made)
+	if o, ok := m.known[key]; ok {
+		return o
+	}
+	text := m.text(made)
+	project := lang.Load([]string{"m.kern"}, func(string) (string, error) { return text, nil }, nil)
+	o := outcome{utilisation: math.NaN()}
+	for _, r := range checker.Check(project, nil).Members {
+		if r.Name == m.name {
+			o = outcome{r.Utilisation, r.Verdict, true}
+		}
+	}
+	m.known[key] = o
+	return o
+}
+
+func setKey(made []bool) string {
+	b := make([]byte, len(made))
+	for i, x := range made {
+		if x {
+			b[i] = 1
+		}
+	}
+	return string(b)
+}
