@@ -2,6 +2,7 @@ package output
 
 import (
 	"encoding/base64"
+	"fmt"
 	"strings"
 
 	"github.com/mattn/go-runewidth"
@@ -36,6 +37,7 @@ type Line []part
 type part struct {
 	style style
 	text  string
+	to    string // the address that a link leads to
 }
 
 type style uint8
@@ -45,19 +47,23 @@ const (
 	strong
 	code
 	newLine
+	link
 )
 
 // Words are ordinary words; nothing in them is taken for a mark.
-func Words(s string) Line { return Line{{ordinary, s}} }
+func Words(s string) Line { return Line{{ordinary, s, ""}} }
 
 // Strong are words that stand out.
-func Strong(s string) Line { return Line{{strong, s}} }
+func Strong(s string) Line { return Line{{strong, s, ""}} }
 
 // Code is text of the language: a symbol, a formula, a name.
-func Code(s string) Line { return Line{{code, s}} }
+func Code(s string) Line { return Line{{code, s, ""}} }
+
+// Link are words that lead to an address. Plain text shows the words alone.
+func Link(s, address string) Line { return Line{{link, s, address}} }
 
 // Break goes on in the next line of the same paragraph.
-func Break() Line { return Line{{newLine, ""}} }
+func Break() Line { return Line{{newLine, "", ""}} }
 
 // Join puts lines one behind the other.
 func Join(lines ...Line) Line {
@@ -227,6 +233,8 @@ func (p *Page) render(l Line, indent string, cell bool) string {
 		case text == "":
 		case p.plain:
 			b.WriteString(text)
+		case x.style == link:
+			b.WriteString("[" + strings.ReplaceAll(escape(text, cell), "]", `\]`) + "](" + address(x.to) + ")")
 		case x.style == code:
 			b.WriteString(codeSpan(text, cell))
 		case x.style == strong:
@@ -297,6 +305,20 @@ func codeSpan(s string, cell bool) string {
 		fence, gap = fence+"`", " "
 	}
 	return fence + gap + s + gap + fence
+}
+
+// address writes an address so that it ends where it ends.
+func address(s string) string {
+	var b strings.Builder
+	for i := 0; i < len(s); i++ {
+		switch c := s[i]; {
+		case c <= ' ' || c >= 0x7f || strings.IndexByte("<>()|\\`\"", c) >= 0:
+			fmt.Fprintf(&b, "%%%02X", c)
+		default:
+			b.WriteByte(c)
+		}
+	}
+	return b.String()
 }
 
 // guardStart keeps the first letters of a paragraph from being taken for the mark

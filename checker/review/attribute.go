@@ -260,4 +260,3 @@ func (m *mixture) sampled(orders int) ([]float64, [][]bool) {
 	}
 	return shares, unknown
 }
-

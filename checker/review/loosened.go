@@ -65,7 +65,7 @@ func (r *Review) loosened(pairs []match, earlier, later map[string]*side) {
 	}
 }
 
-// factors are the numbers of a basis of which a smaller one is less safe.
+// lowerIsLooser tells of the numbers of a basis of which a smaller one is less safe.
 func lowerIsLooser(name string) bool {
 	return strings.HasPrefix(name, "gamma_") || strings.HasPrefix(name, "factor_") || strings.HasPrefix(name, "xi")
 }
@@ -117,7 +117,7 @@ func (r *Review) basis(b, a *side) {
 			if !ok {
 				return ""
 			}
-			return unit.Number(o.Value, 4)
+			return unit.Exact(o.Value)
 		}
 		l := Loosening{Before: text(was, had), After: text(now, has), Because: now.Because, Place: a.lines.at(orElse(now.Place, y.Place))}
 		switch {
@@ -167,7 +167,7 @@ func orElse(at, other lang.Place) lang.Place {
 
 func (r *Review) limits(p match) {
 	x, y := p.before.result.Member, p.after.result.Member
-	bound := func(what string, was, now float64, at lang.Place, u float64, symbol string) {
+	bound := func(what string, was, now float64, before, at lang.Place, u float64, symbol string) {
 		text := func(v float64) string {
 			if v == 0 {
 				return ""
@@ -178,6 +178,7 @@ func (r *Review) limits(p match) {
 		switch {
 		case was > 0 && now == 0:
 			l.What += " removed"
+			l.Place = p.before.side.lines.at(before)
 		case was > 0 && now > was:
 			l.What += " raised"
 		default:
@@ -185,9 +186,9 @@ func (r *Review) limits(p match) {
 		}
 		r.loosen(l)
 	}
-	bound("utilisation", x.Limits.Utilisation, y.Limits.Utilisation, y.Limits.UtilisationAt, 1, "")
-	bound("slenderness", x.Limits.Slenderness, y.Limits.Slenderness, y.Limits.SlendernessAt, 1, "")
-	bound("sway", x.Limits.Sway, y.Limits.Sway, y.Limits.SwayAt, 1e-3, "mm")
+	bound("utilisation", x.Limits.Utilisation, y.Limits.Utilisation, x.Limits.UtilisationAt, y.Limits.UtilisationAt, 1, "")
+	bound("slenderness", x.Limits.Slenderness, y.Limits.Slenderness, x.Limits.SlendernessAt, y.Limits.SlendernessAt, 1, "")
+	bound("sway", x.Limits.Sway, y.Limits.Sway, x.Limits.SwayAt, y.Limits.SwayAt, 1e-3, "mm")
 	name := lang.Place{Decl: y.Decl, Span: y.NameSpan}
 	if x.Weight && !y.Weight && p.before.side.calc.Env.Basis.SelfWeight == p.after.side.calc.Env.Basis.SelfWeight {
 		r.loosen(Loosening{What: "self-weight no longer counts", Before: "on", After: "off", Members: []string{y.Name}, Place: p.after.side.lines.at(name)})

@@ -3,6 +3,7 @@ package review
 import (
 	"cmp"
 	"slices"
+	"strings"
 
 	"kern/checker"
 )
@@ -127,6 +128,20 @@ type Assumption struct {
 	Members []string
 }
 
+// alikeButNumbers tells whether two assumptions differ in their numbers alone,
+// which follow from edits that are listed.
+func alikeButNumbers(x, y string) bool {
+	bare := func(s string) string {
+		return strings.Map(func(r rune) rune {
+			if r >= '0' && r <= '9' || r == '.' {
+				return -1
+			}
+			return r
+		}, s)
+	}
+	return bare(x) == bare(y)
+}
+
 // assumptions compares what is assumed about the members of both states.
 func (r *Review) assumptions(pairs []match) {
 	type key struct {
@@ -137,7 +152,7 @@ func (r *Review) assumptions(pairs []match) {
 	for _, p := range pairs {
 		compare := func(one, other *checker.Result, added bool) {
 			for _, text := range one.Assumptions {
-				if slices.Contains(other.Assumptions, text) {
+				if slices.ContainsFunc(other.Assumptions, func(x string) bool { return x == text || alikeButNumbers(x, text) }) {
 					continue
 				}
 				k := key{text, added}

@@ -45,6 +45,6 @@ func root() *cobra.Command {
 		Version:       version(),
 	}
 	c.SetVersionTemplate("kern {{.Version}}\n")
-	c.AddCommand(checkCommand(), formatCommand(), rulesCommand(), catalogueCommand(), lspCommand(), versionCommand())
+	c.AddCommand(checkCommand(), formatCommand(), rulesCommand(), catalogueCommand(), lspCommand(), reviewCommand(), versionCommand())
 	return c
 }
