@@ -189,6 +189,9 @@ func (w *reviewing) at(p review.Place) Line {
 		return nil
 	}
 	text := fmt.Sprintf("%s:%d", w.f.Names(p.File), p.Line)
+	if strings.HasPrefix(text, ":") { // where there is but one file
+		text = "line " + text[1:]
+	}
 	if p.Before {
 		text += " before"
 	}
@@ -200,8 +203,8 @@ func (w *reviewing) at(p review.Place) Line {
 	return Words(text)
 }
 
-// answerOf is a verdict with its utilisation.
-func answerOf(s review.State) string {
+// Answer is a verdict with its utilisation, in a few words.
+func Answer(s review.State) string {
 	switch {
 	case s.Verdict == standard.Undecided:
 		return "undecided"
@@ -211,6 +214,14 @@ func answerOf(s review.State) string {
 		return "fails " + checker.Ratio(s.Utilisation)
 	}
 	return checker.Ratio(s.Utilisation)
+}
+
+// answer is Answer without a place to break the line.
+func (w *reviewing) answer(s review.State) string {
+	if w.narrow {
+		return Answer(s)
+	}
+	return strings.ReplaceAll(Answer(s), " ", "\u00a0")
 }
 
 // shortened shortens a text for a cell of a table.
@@ -279,7 +290,19 @@ func (x reviewRow) why(some, width int) string {
 		return x.Why
 	}
 	var parts []string
-	for _, c := range x.Causes {
+	causes := slices.Clone(x.Causes)
+	if x.Before.Verdict != x.After.Verdict { // what turned the verdict comes first
+		slices.SortStableFunc(causes, func(a, b review.Cause) int {
+			switch {
+			case a.Turns && !b.Turns:
+				return -1
+			case b.Turns && !a.Turns:
+				return 1
+			}
+			return 0
+		})
+	}
+	for _, c := range causes {
 		if len(parts) == some {
 			parts = append(parts, "…")
 			break
@@ -291,7 +314,7 @@ func (x reviewRow) why(some, width int) string {
 		if n := len(c.Edits); n > 1 {
 			text += fmt.Sprintf(" and %d more", n-1)
 		}
-		if !math.IsNaN(c.Share) {
+		if !math.IsNaN(c.Share) && c.Share != 0 {
 			text = shareText(c.Share) + " " + text
 		}
 		parts = append(parts, text)
@@ -306,9 +329,9 @@ func (w *reviewing) line(x reviewRow) []Line {
 	if x.Before.Governing != x.After.Governing && x.Before.Governing != "" {
 		governing += ", was " + x.Before.Governing
 	}
-	now := Words(answerOf(x.After))
+	now := Words(w.answer(x.After))
 	if x.After.Verdict == standard.Fails {
-		now = Strong(answerOf(x.After))
+		now = Strong(w.answer(x.After))
 	}
 	why := x.why(2, 60)
 	if w.narrow {
@@ -317,7 +340,7 @@ func (w *reviewing) line(x reviewRow) []Line {
 	if x.After.Verdict == standard.Undecided && len(x.After.Missing) > 0 {
 		why = shortened(x.After.Missing[0], 100)
 	}
-	return []Line{Words(x.title()), Words(answerOf(x.Before)), now, Words(dash(governing)), Words(why), w.at(x.Place)}
+	return []Line{Words(x.title()), Words(w.answer(x.Before)), now, Words(dash(governing)), Words(why), w.at(x.Place)}
 }
 
 // failing shows what fails or is undecided now and was not, then what fails still.
@@ -346,7 +369,7 @@ func (w *reviewing) failing() {
 		if m.State.Verdict == standard.Undecided && len(m.State.Missing) > 0 {
 			why += "; " + shortened(m.State.Missing[0], 100)
 		}
-		now = append(now, []Line{Words(m.Name), Words("–"), Strong(answerOf(m.State)), Words(dash(m.State.Governing)), Words(why), w.at(m.Place)})
+		now = append(now, []Line{Words(m.Name), Words("–"), Strong(w.answer(m.State)), Words(dash(m.State.Governing)), Words(why), w.at(m.Place)})
 	}
 	w.table("Newly fails or undecided", now)
 	w.table("Fails as before, with other numbers", still)
@@ -460,6 +483,12 @@ func (w *reviewing) changed() {
 	w.unfold()
 }
 
+// ChangePage writes what changed of one member, and which edits did it.
+func ChangePage(p *Page, c *review.Change, title string, names Names) {
+	w := &reviewing{&review.Review{}, ReviewForm{Names: names}, p, true}
+	w.detail(reviewRow{[]string{title}, c})
+}
+
 // exactly is a utilisation with three decimals, as shares have.
 func exactly(u float64) string {
 	if math.IsNaN(u) {
@@ -559,7 +588,7 @@ func (w *reviewing) members() {
 				items = append(items, Words(fmt.Sprintf("and %d more", len(members)-i)))
 				break
 			}
-			items = append(items, Join(Words(strings.TrimSpace(m.Name+" "+m.Title)+": "+answerOf(m.State)+" ("), w.at(m.Place), Words(")")))
+			items = append(items, Join(Words(strings.TrimSpace(m.Name+" "+m.Title)+": "+w.answer(m.State)+" ("), w.at(m.Place), Words(")")))
 		}
 		w.List(items...)
 	}

@@ -19,7 +19,7 @@ import (
 
 // driverRecipe says how git shows results in its diffs.
 const driverRecipe = `git can show each member's result beside it in git diff, git show and git log -p:
-what changed a result then shows as a changed line, even when the edit is elsewhere.
+what changed a result then shows as a changed line, even when the edit is elsewhere in the file.
 
 1. In the repository, once for everybody, a line in .gitattributes:
 
