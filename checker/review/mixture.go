@@ -20,6 +20,50 @@ type side struct {
 	parts  *state
 	lines  *lines
 	places map[*lang.Decl][]string // what a declaration mentions, as ids
+	ranks  map[*side]map[string]int
+}
+
+// newSide takes a calculation apart.
+func newSide(r *checker.Report, c *model.Calculation, l *lines) *side {
+	return &side{report: r, calc: c, parts: takeApart(c.Files), lines: l, places: map[*lang.Decl][]string{}, ranks: map[*side]map[string]int{}}
+}
+
+// rank gives every id of this state and an earlier one its place in the order of
+// both: what only the earlier one has comes behind what it came behind there.
+func (s *side) rank(earlier *side) map[string]int {
+	if out, ok := s.ranks[earlier]; ok {
+		return out
+	}
+	behind := map[string][]string{}
+	last := ""
+	for _, id := range earlier.parts.order {
+		if s.parts.all[id] != nil {
+			last = id
+		} else {
+			behind[last] = append(behind[last], id)
+		}
+	}
+	out := map[string]int{}
+	for _, id := range append([]string{""}, s.parts.order...) {
+		out[id] = len(out)
+		for _, x := range behind[id] {
+			out[x] = len(out)
+		}
+	}
+	s.ranks[earlier] = out
+	return out
+}
+
+// inOrder lists ids by their rank.
+func inOrder(ids map[string]bool, rank map[string]int) []string {
+	out := make([]string, 0, len(ids))
+	for id, in := range ids {
+		if in {
+			out = append(out, id)
+		}
+	}
+	slices.SortFunc(out, func(x, y string) int { return rank[x] - rank[y] })
+	return out
 }
 
 // mentions are the ids of what a declaration of the text speaks of.
@@ -107,7 +151,7 @@ func mix(earlier, later *side, member pairOf, coupled bool) *mixture {
 		delete(ids, member.before)
 	}
 	same := map[[2]*lang.Stmt]int{} // several members of one block are edited as one
-	for _, id := range inOrder(ids, later.parts.order, earlier.parts.order) {
+	for _, id := range inOrder(ids, later.rank(earlier)) {
 		p := part{before: earlier.parts.all[id], after: later.parts.all[id]}
 		if id == member.after {
 			p.before = earlier.parts.all[member.before]
@@ -204,40 +248,6 @@ func defines(kind string) bool {
 		return true
 	}
 	return false
-}
-
-// inOrder lists ids in the order of the later state; what only the earlier one
-// has comes behind what it came behind there.
-func inOrder(ids map[string]bool, later, earlier []string) []string {
-	behind := map[string][]string{} // what follows an id in the earlier state alone
-	in := map[string]bool{}
-	for _, id := range later {
-		in[id] = true
-	}
-	last := ""
-	for _, id := range earlier {
-		if in[id] {
-			last = id
-		} else {
-			behind[last] = append(behind[last], id)
-		}
-	}
-	var out []string
-	add := func(id string) {
-		if ids[id] {
-			out = append(out, id)
-		}
-	}
-	for _, id := range behind[""] {
-		add(id)
-	}
-	for _, id := range later {
-		add(id)
-		for _, x := range behind[id] {
-			add(x)
-		}
-	}
-	return out
 }
 
 // settle orders the players by what they say, so that the order of edits in the

@@ -7,7 +7,6 @@ import (
 
 	"kern/checker"
 	"kern/checker/model"
-	"kern/lang"
 )
 
 // Past is an earlier state of a project that later ones are held against, member
@@ -82,7 +81,7 @@ func (p *Past) calculation(m *checker.Result) *side {
 func sideOf(r *checker.Report, m *checker.Result, l *lines) *side {
 	for _, c := range r.AllCalculations() {
 		if slices.Contains(c.Members, m.Member) {
-			return &side{report: r, calc: c, parts: takeApart(c.Files), lines: l, places: map[*lang.Decl][]string{}}
+			return newSide(r, c, l)
 		}
 	}
 	return nil

@@ -1,6 +1,7 @@
 package review_test
 
 import (
+	"flag"
 	"fmt"
 	"math"
 	"math/rand/v2"
@@ -13,6 +14,8 @@ import (
 	"kern/checker/review"
 	"kern/lang"
 )
+
+var many = flag.Int("many", 0, "number of random pairs of states to review")
 
 // check works out files given by name.
 func check(files map[string]string) *checker.Report {

@@ -35,7 +35,7 @@ func shared(earlier, later map[string]*side) []sharedEdit {
 				ids[id] = ids[id] || d.kind != "member"
 			}
 		}
-		for _, id := range inOrder(ids, a.parts.order, b.parts.order) {
+		for _, id := range inOrder(ids, a.rank(b)) {
 			x, y := b.parts.all[id], a.parts.all[id]
 			if sameDeclared(x, y) {
 				continue

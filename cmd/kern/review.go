@@ -371,8 +371,9 @@ func (w working) List(name string) ([]string, error) {
 // Read gives the text of a file.
 func (w working) Read(name string) (string, error) { return w.folder.Read(name) }
 
-// load reads the calculations of a state.
-func (c *checkout) load(t history.Texts) (*lang.Project, error) {
+// load reads the calculations of a state. What is as in another state is taken
+// over from there; other may be nil.
+func (c *checkout) load(t history.Texts, other *lang.Project) (*lang.Project, error) {
 	var names []string
 	for _, below := range c.below {
 		list, err := t.List(below)
@@ -385,16 +386,16 @@ func (c *checkout) load(t history.Texts) (*lang.Project, error) {
 			}
 		}
 	}
-	return lang.Load(names, t.Read, nil), nil
+	return lang.Load(names, t.Read, other), nil
 }
 
 // check works out two states. What is the same in both is worked out once.
 func (c *checkout) check(earlier, later history.Texts) (before, after *checker.Report, err error) {
-	b, err := c.load(earlier)
+	b, err := c.load(earlier, nil)
 	if err != nil {
 		return nil, nil, err
 	}
-	a, err := c.load(later)
+	a, err := c.load(later, b)
 	if err != nil {
 		return nil, nil, err
 	}
@@ -403,7 +404,8 @@ func (c *checkout) check(earlier, later history.Texts) (before, after *checker.R
 	}
 	bar := newBar(os.Stderr)
 	defer bar.finish()
-	return checker.Check(b, bar.tell), checker.Check(a, bar.tell), nil
+	before = checker.Check(b, bar.tell)
+	return before, checker.CheckAgain(before, a, bar.tell), nil
 }
 
 // mergedState is the merge of two commits with where they part.
@@ -433,7 +435,7 @@ func mergedStates(args, paths []string, f *output.ReviewForm) (*mergedState, err
 	f.Before, f.After = base.Title(), "the merge of "+ours.Title()+" and "+theirs.Title()
 	merged := history.Merged{Base: base, Ours: ours, Theirs: theirs}
 	var conflict error
-	project, err := c.load(watched{merged, &conflict})
+	project, err := c.load(watched{merged, &conflict}, nil)
 	if err != nil {
 		return nil, err
 	}
@@ -441,7 +443,7 @@ func mergedStates(args, paths []string, f *output.ReviewForm) (*mergedState, err
 		return nil, conflict
 	}
 	out := &mergedState{report: checker.Check(project, nil)}
-	b, err := c.load(base)
+	b, err := c.load(base, nil)
 	if err != nil {
 		return nil, err
 	}
@@ -449,7 +451,7 @@ func mergedStates(args, paths []string, f *output.ReviewForm) (*mergedState, err
 	bad := map[string]bool{} // on one of the sides
 	key := func(m *checker.Result) string { return m.Member.Decl.File.Name + "\x00" + m.Name }
 	for _, side := range []history.Texts{ours, theirs} {
-		p, err := c.load(side)
+		p, err := c.load(side, nil)
 		if err != nil {
 			return nil, err
 		}
