@@ -5,12 +5,14 @@ import (
 	"runtime"
 	"runtime/debug"
 	"slices"
+	"strconv"
 	"strings"
 	"sync"
 	"sync/atomic"
 
 	"kern/checker/model"
 	"kern/checker/standard"
+	"kern/checker/standard/aisc360"
 	"kern/checker/standard/elastic"
 	"kern/checker/standard/en1993"
 	"kern/checker/standard/en1993_2022"
@@ -22,6 +24,8 @@ var standards = []standard.Standard{
 	elastic.Standard{},
 	en1993.Standard{},
 	en1993_2022.Standard,
+	aisc360.Standard{},
+	aisc360.Edition2016,
 }
 
 func find(name string) standard.Standard {
@@ -48,6 +52,8 @@ func (registry) Names() []string {
 
 func (registry) Annexes(name string) []string { return find(name).Annexes() }
 
+func (registry) Methods(name string) []string { return find(name).Methods() }
+
 func (registry) Overrides(name string) map[string]bool { return find(name).Overrides() }
 
 // departable are the checks that a member may depart from.
@@ -65,6 +71,22 @@ var departable = func() model.DepartureRules {
 
 // Standards lists the names of the design standards.
 func Standards() []string { return registry{}.Names() }
+
+// Stated lists how a basis can state the design standards, one for each of their
+// methods: "ANSI/AISC 360-22" by LRFD, with the quotes.
+func Stated() []string {
+	var out []string
+	for _, s := range standards {
+		name := strconv.Quote(s.Name())
+		if len(s.Methods()) == 0 {
+			out = append(out, name)
+		}
+		for _, m := range s.Methods() {
+			out = append(out, name+" by "+m)
+		}
+	}
+	return out
+}
 
 // Progress is told how many of the members have been worked out. It is called
 // from several goroutines.

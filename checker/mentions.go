@@ -192,7 +192,7 @@ func (w *mentions) statement(s *lang.Stmt) {
 		}
 	}
 	switch s.Word {
-	case "section", "material", "height", "length", "effective", "net":
+	case "section", "material", "height", "length", "effective", "net", "reduction":
 		if assigned {
 			at(0)
 			w.properties(s)
@@ -200,6 +200,11 @@ func (w *mentions) statement(s *lang.Stmt) {
 	case "from": // from A to B
 		at(0)
 		at(2)
+	case "reduce": // reduce live by tributary area K_LL NUMBER
+		at(5)
+	case "joints": // joints RATIO at base, RATIO at top about AXIS
+		at(0)
+		at(4)
 	case "lift": // lift A to B { section = … }
 		at(0)
 		at(2)

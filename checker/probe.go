@@ -2,10 +2,23 @@ package checker
 
 import (
 	"math"
+	"slices"
 
 	"kern/checker/model"
 	"kern/checker/standard"
 )
+
+// With judges the member as it would be after a change. The change is given a
+// copy whose loads, holds and lifts it may alter, and nothing else that is shared. A
+// member that lacks something is judged as it is.
+func (r *Result) With(change func(m *model.Member)) *Result {
+	m := *r.Member
+	m.Loads, m.Holds, m.Lifts = slices.Clone(m.Loads), slices.Clone(m.Holds), slices.Clone(m.Lifts)
+	if len(m.Missing) == 0 {
+		change(&m)
+	}
+	return evaluate(r.env, &m, r.combinations)
+}
 
 // Probe judges the member under one of its combinations, by its index, with the
 // forces along the member times axial and all that bends it times bending. The
@@ -18,12 +31,22 @@ func (r *Result) Probe(combination int, axial, bending float64) (utilisation flo
 		return math.NaN(), ""
 	}
 	m := *r.Member
+	if m.Imported != nil {
+		m.Imported = m.Imported.Scaled(axial, bending)
+	}
 	m.Loads = nil
 	for _, l := range r.Member.Loads {
 		if l.Kind != model.AxialLoad {
 			if l.Value *= bending; l.Value != 0 {
 				m.Loads = append(m.Loads, l)
 			}
+			continue
+		}
+		if m.Nominal { // the moment must stay with its level
+			axial = max(axial, 1e-9)
+			l.Value *= axial
+			l.Offset[0], l.Offset[1] = l.Offset[0]*bending/axial, l.Offset[1]*bending/axial
+			m.Loads = append(m.Loads, l)
 			continue
 		}
 		for a, e := range l.Offset {
@@ -37,13 +60,22 @@ func (r *Result) Probe(combination int, axial, bending float64) (utilisation flo
 		}
 	}
 	if m.Weight {
-		material := *m.Material
-		material.Density *= axial
-		m.Material = &material
-		m.Weight = material.Density > 0
+		m.Material = heavier(m.Material, axial)
+		m.Lifts = slices.Clone(m.Lifts)
+		for i := range m.Lifts {
+			m.Lifts[i].Material = heavier(m.Lifts[i].Material, axial)
+		}
+		m.Weight = axial > 0
 	}
-	out := s.Check(standard.NewFrame(r.env, &m, r.combinations[combination:combination+1]), nil)
+	out := standard.Run(s, standard.NewFrame(r.env, &m, r.combinations[combination:combination+1]), nil)
 	return r.worst(out.Checks)
+}
+
+// heavier is a material of so many times the density.
+func heavier(m *model.Material, times float64) *model.Material {
+	out := *m
+	out.Density *= times
+	return &out
 }
 
 // worst is the greatest utilisation of checks that depend on loads, but for

@@ -22,9 +22,9 @@ func probed(t *testing.T, text string) *checker.Report {
 // TestProbe: probing with the loads as they are gives the member's own answer,
 // and probing with other loads gives that of a text which says them.
 func TestProbe(t *testing.T) {
-	for _, standard := range checker.Standards() {
+	for _, standard := range checker.Stated() {
 		text := func(n, m string) string {
-			return "basis { standard \"" + standard + "\" }\ncase G permanent\ncolumn A { section = \"HEB 160\"; material = \"S355\"; height = 4.8 m; selfweight off\n" +
+			return "basis { standard " + standard + " }\ncase G permanent\ncolumn A { section = \"HEB 160\"; material = \"S355\"; height = 4.8 m; selfweight off\n" +
 				"load G " + n + " kN at top\nload G " + m + " kN at top offset 100 mm about major\nload G " + m + " kN/m about minor\n}\n"
 		}
 		r := probed(t, text("300", "2")).Members[0]
@@ -33,7 +33,7 @@ func TestProbe(t *testing.T) {
 				t.Errorf("%s: %g by %s, probed %g by %s", standard, r.Utilisation, r.Governing, u, rule)
 			}
 		}
-		bare := probed(t, `basis { standard "`+standard+`" }
+		bare := probed(t, `basis { standard `+standard+` }
 case G permanent
 column A { section = "HEB 160"; material = "S355"; height = 4.8 m; selfweight off
 load G 453 kN at top

@@ -125,6 +125,9 @@ func (r *Result) Derive() *derivation.Record {
 
 // evaluate judges one member.
 func evaluate(env *model.Env, m *model.Member, combinations []model.Combination) *Result {
+	if m.Imported != nil {
+		combinations = m.Imported.List()
+	}
 	r := &Result{Name: m.Name, Title: m.Title, Member: m, Standard: env.Basis.Standard, Utilisation: math.NaN(),
 		env: env, combinations: combinations, Departures: m.Departs, Missing: m.Missing}
 	s := find(env.Basis.Standard)
@@ -134,7 +137,7 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 		r.Missing = append(r.Missing, "its design standard is not known")
 	case s == nil:
 		r.Missing = append(r.Missing, "the calculation states no design standard")
-	case env.Refused != "":
+	case env.Refused != "" && m.Imported == nil:
 		r.Missing = append(r.Missing, env.Refused)
 	case m.Weight && weightless(m) != nil:
 		r.Missing = append(r.Missing, "the density of '"+weightless(m).Name+"' is not known, so its self-weight is not either: state it, or say selfweight off")
@@ -151,7 +154,10 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 		return r
 	}
 	out := standard.Run(s, standard.NewFrame(env, m, combinations), nil)
-	r.Checks, r.Coverage, r.Assumptions = out.Checks, out.Coverage, append(out.Assumptions, env.Assumed...)
+	r.Checks, r.Coverage, r.Assumptions = out.Checks, out.Coverage, out.Assumptions
+	if m.Imported == nil {
+		r.Assumptions = append(r.Assumptions, env.Assumed...)
+	}
 	r.require(s, out)
 	r.depart()
 	r.judge()

@@ -442,6 +442,9 @@ func (r *Result) baseForce(sign float64) float64 {
 // baseOf is the axial force at the base from one case without a factor, N,
 // compression positive; self-weight counts in its case.
 func (r *Result) baseOf(index int) float64 {
+	if r.Member.Imported != nil {
+		return math.NaN() // its forces are known by combination alone
+	}
 	factors := make([]float64, len(r.env.Cases))
 	factors[index] = 1
 	one := []model.Combination{{Combination: action.Combination{Name: r.env.Cases[index].Name, Factors: factors}}}

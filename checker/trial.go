@@ -94,7 +94,7 @@ func (r *Result) Values() func(symbol string) (unit.Quantity, bool) {
 	if s == nil || len(r.Missing) > 0 {
 		return func(string) (unit.Quantity, bool) { return unit.Quantity{}, false }
 	}
-	out := s.Check(standard.NewFrame(r.env, r.Member, r.combinations), nil)
+	out := standard.Run(s, standard.NewFrame(r.env, r.Member, r.combinations), nil)
 	return func(symbol string) (unit.Quantity, bool) {
 		if symbol == "utilisation" {
 			u := r.greatest()

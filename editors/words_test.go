@@ -17,9 +17,9 @@ import (
 // declarations are the words that begin a declaration.
 func declarations() []string { return formWords(lang.InFile) }
 
-// statements are the words that begin a line in the block of the basis or of a
-// member.
-func statements() []string { return formWords(lang.InBasis, lang.InMember) }
+// statements are the words that begin a line in the block of the project, the basis
+// or a member.
+func statements() []string { return formWords(lang.InProject, lang.InBasis, lang.InMember) }
 
 // properties are the words before "=" in the block of a material or a shape.
 func properties() []string { return formWords(lang.InMaterial, lang.InSection) }

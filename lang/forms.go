@@ -8,6 +8,7 @@ type Context string
 // The contexts of the language.
 const (
 	InFile     Context = "file"     // between declarations
+	InProject  Context = "project"  // in what the cover says
 	InBasis    Context = "basis"    // in the design basis
 	InLevel    Context = "level"    // in a level's block
 	InMember   Context = "member"   // in a column, strut or tie
@@ -29,6 +30,8 @@ type Form struct {
 // Forms are the statements of the language, by context.
 var Forms = []Form{
 	{"include", InFile, []string{`include "FILE"`}, "Brings in the declarations of another file of the workspace.", `include "${1:common.kern}"`},
+	{"forces", InFile, []string{`forces "FILE" compression positive|negative`}, "Takes the forces of members from a table of an analysis.", `forces "${1:frame.csv}" compression ${2|positive,negative|}`},
+	{"project", InFile, []string{`project { … }`}, "What the cover of a printed sheet says: the project, who prepared and checked the calculation, revision and date.", "project {\n    name        \"${1:name}\"\n    number      \"${2:number}\"\n    prepared by \"${3:name}\"\n    revision    \"${4:A}\"\n    $0\n}"},
 	{"basis", InFile, []string{`basis { … }`}, "The design basis, once in a calculation.", "basis {\n    standard \"${1:EN 1993-1-1:2005}\"\n    actions  \"${2:EN 1990:2002}\"\n    $0\n}"},
 	{"material", InFile, []string{`material NAME = "GRADE" [per "STANDARD"]`, `material NAME { E = …; fy = …; density = … }`}, "A steel grade, or a material with stated values.", `material ${1:s355} = "${2:S355}"`},
 	{"section", InFile, []string{`section NAME = "DESIGNATION"`, `section NAME = SHAPE { … }`}, "A cross-section: from the catalogue, or a shape with its dimensions.", `section ${1:post} = "${2:HEB 160}"`},
@@ -41,16 +44,27 @@ var Forms = []Form{
 	{"strut", InFile, []string{`strut NAME[, NAME …] ["TITLE"] { … }`}, "A member of any slope in compression; its own weight is not counted.", "strut ${1:D1} \"${2:title}\" {\n    section  = ${3:\"CHS 114.3x5\"}\n    material = ${4:\"S355H\"}\n    length   = ${5:3 m}\n    load ${6:40 kN}\n}"},
 	{"tie", InFile, []string{`tie NAME[, NAME …] ["TITLE"] { … }`}, "A member in tension; its own weight is not counted.", "tie ${1:T1} \"${2:title}\" {\n    section  = ${3:\"CHS 114.3x5\"}\n    material = ${4:\"S355H\"}\n    length   = ${5:3 m}\n    load ${6:-40 kN}\n}"},
 
-	{"standard", InBasis, []string{`standard "NAME" [annex "NAME"]`}, "The design standard that members are checked to.", `standard "${1:EN 1993-1-1:2005}"`},
+	{"name", InProject, []string{`name "TEXT"`}, "What the project is called.", `name "${1:name}"`},
+	{"number", InProject, []string{`number "TEXT"`}, "The number of the project or the job.", `number "${1:number}"`},
+	{"prepared", InProject, []string{`prepared by "TEXT"`}, "Who made the calculation.", `prepared by "${1:name}"`},
+	{"checked", InProject, []string{`checked by "TEXT"`}, "Who checked the calculation.", `checked by "${1:name}"`},
+	{"revision", InProject, []string{`revision "TEXT"`}, "The revision of the calculation.", `revision "${1:A}"`},
+	{"date", InProject, []string{`date "DATE"`}, "The date of the revision, year-month-day.", `date "${1:2026-03-31}"`},
+
+	{"standard", InBasis, []string{`standard "NAME" [by LRFD|ASD] [annex "NAME"]`}, "The design standard that members are checked to.", `standard "${1:EN 1993-1-1:2005}"`},
 	{"actions", InBasis, []string{`actions "EN 1990:2002" [annex "NAME"] [eq "6.10"]`, `actions "EN 1990:2002" [annex "NAME"] eq "6.10a/b"`}, "The standard that combinations are made by.", `actions "${1:EN 1990:2002}"`},
 	{"permanent", InBasis, []string{`permanent cases together`, `permanent cases independent`}, "Whether all permanent cases have the upper or the lower factor together, or each by itself.", "permanent cases ${1|independent,together|}"},
 	{"roofs", InBasis, []string{`roofs alone`, `roofs together`}, "Whether imposed loads on roofs (category H) act together with snow and wind.", "roofs ${1|together,alone|}"},
 	{"accidental", InBasis, []string{`accidental psi_1`, `accidental psi_2`}, "The value of the leading variable action in accidental situations.", "accidental ${1|psi_2,psi_1|}"},
 	{"show", InBasis, []string{`show UNIT[, UNIT …]`}, "Units that results are shown in.", "show ${1:kN, kNm, mm, MPa}"},
 	{"effective", InBasis, []string{`effective lengths theoretical`, `effective lengths recommended`}, "Effective length factors of ideal ends, or those recommended for design.", "effective lengths ${1|recommended,theoretical|}"},
+	{"stability", InBasis, []string{`stability direct`, `stability effective`}, "The method of stability of ANSI/AISC 360: direct analysis (chapter C) or effective lengths (Appendix 7).", "stability ${1|direct,effective|}"},
 	{"selfweight", InBasis, []string{`selfweight on`, `selfweight off`}, "Whether members carry their own weight.", "selfweight ${1|off,on|}"},
 	{"strengths", InBasis, []string{`strengths "product standard"`, `strengths "EN 1993-1-1 Table 3.1"`}, "Where the strength of a grade comes from.", `strengths "${1|product standard,EN 1993-1-1 Table 3.1|}"`},
 	{"amplification", InBasis, []string{`amplification secant`, `amplification simple`}, "How the axial force amplifies moments in elastic theory.", "amplification ${1|secant,simple|}"},
+	{"moments", InBasis, []string{`moments continuous`, `moments nominal`}, "Whether loads off the centroid bend the whole member, or make the nominal moments of simple construction.", "moments ${1|nominal,continuous|}"},
+	{"reduce", InBasis, []string{`reduce imposed by storeys`, `reduce imposed by area`, `reduce live by tributary area K_LL NUMBER`, `reduce imposed off`}, "How the imposed loads of the floors that a member carries are reduced.", "reduce imposed by ${1|storeys,area|}"},
+	{"reduction", InBasis, []string{`reduction = NUMBER because "REASON"`}, "A factor of its own on the imposed loads of floors.", "reduction = ${1:0.8} because \"${2:reason}\""},
 	{"gamma_M0", InBasis, []string{`gamma_M0 = NUMBER because "REASON"`}, "Replaces the partial factor for cross-sections.", `gamma_M0 = ${1:1.0} because "${2:reason}"`},
 	{"gamma_M1", InBasis, []string{`gamma_M1 = NUMBER because "REASON"`}, "Replaces the partial factor for buckling.", `gamma_M1 = ${1:1.0} because "${2:reason}"`},
 	{"gamma_G_sup", InBasis, []string{`gamma_G_sup = NUMBER because "REASON"`}, "Replaces the factor of unfavourable permanent actions.", `gamma_G_sup = ${1:1.35} because "${2:reason}"`},
@@ -70,6 +84,8 @@ var Forms = []Form{
 	{"top", InMember, []string{`top pinned|fixed|free|guided [about major|minor]`}, "How the upper end is held.", "top ${1|pinned,fixed,free,guided|}"},
 	{"hold", InMember, []string{`hold major|minor|both|twist at PLACE`}, "A point between the ends that is restrained.", "hold ${1|both,minor,major,twist|} at ${2:height / 2}"},
 	{"effective", InMember, []string{`effective = NUMBER [about major|minor|twist]`}, "The effective length factor, where the calculation knows better than the ends.", "effective = ${1:0.85} about ${2|minor,major,twist|}"},
+	{"joints", InMember, []string{`joints NUMBER at base|top, NUMBER at base|top about major|minor sway|braced`}, "Stiffness ratios of the joints of a rigid frame (columns over beams), from which the effective length factor follows.", "joints ${1:1.2} at base, ${2:2.0} at top about ${3|major,minor|} ${4|sway,braced|}"},
+	{"connected", InMember, []string{`connected by long|short leg [space]`}, "The leg by which a single angle is connected at both ends; space for web members of box and space trusses.", "connected by ${1|long,short|} leg"},
 	{"net", InMember, []string{`net = AREA`}, "The area that holes leave across the path of failure in tension.", "net = ${1:17.2 cm2}"},
 	{"load", InMember, []string{
 		`load [CASE] FORCE [at PLACE] [offset LENGTH about AXIS [and LENGTH about AXIS]]`,
@@ -82,6 +98,9 @@ var Forms = []Form{
 	{"require", InMember, []string{`require RESULT >= VALUE [because "REASON"]`}, "A condition on a result.", "require ${1:N_b_minor} >= ${2:400 kN} because \"${3:reason}\""},
 	{"depart", InMember, []string{`depart RULE because "REASON"`}, "A check that the member is allowed to break, with the reason.", "depart ${1:slenderness} because \"${2:reason}\""},
 	{"selfweight", InMember, []string{`selfweight on`, `selfweight off`}, "Whether this member carries its own weight.", "selfweight ${1|off,on|}"},
+	{"moments", InMember, []string{`moments continuous`, `moments nominal`}, "Whether loads off the centroid bend the whole member, or make the nominal moments of simple construction.", "moments ${1|nominal,continuous|}"},
+	{"reduce", InMember, []string{`reduce imposed by storeys`, `reduce imposed by area`, `reduce live by tributary area K_LL NUMBER`, `reduce imposed off`}, "How the imposed loads of the floors that the member carries are reduced.", "reduce imposed by ${1|storeys,area|}"},
+	{"reduction", InMember, []string{`reduction = NUMBER because "REASON"`}, "A factor of its own on the imposed loads of floors.", "reduction = ${1:0.8} because \"${2:reason}\""},
 	{"note", InMember, []string{`note "TEXT"`}, "A remark that goes with the results.", `note "${1:text}"`},
 
 	{"section", InLift, []string{`section = NAME`, `section = "DESIGNATION"`, `section = SHAPE { … }`}, "The cross-section of the lift.", "section = ${1:\"HEB 200\"}"},
@@ -155,14 +174,20 @@ var Words = map[string]string{
 	"major": "the section's strong axis", "minor": "the section's weak axis", "both": "both axes", "twist": "turning about the member's own axis",
 	"at": "where it acts", "about": "the axis that it bends about", "across": "across the member, bending it about an axis", "offset": "off the centroid", "and": "also about the other axis",
 	"from": "from a place", "to": "to a place", "top": "the upper end", "as": "like another member, but for what is said here", "per": "by a product standard",
+	"by": "by whom, or by which method", "LRFD": "load and resistance factor design", "ASD": "allowable strength design",
 	"annex": "a set of national values", "eq": "the equation of the combinations", "because": "the reason", "floor": "an area of floor that the member carries",
 	"hot": "hot finished (EN 10210)", "cold": "cold formed (EN 10219)", "welded": "built up by welding", "rolled": "hot rolled",
+	"compression": "pressing along the member", "positive": "more than zero", "negative": "less than zero",
 	"permanent": "acts always", "imposed": "people, goods, vehicles", "snow": "snow", "wind": "wind", "temperature": "temperature",
 	"accidental": "impact, explosion or another accident", "seismic": "earthquake", "persistent": "for persistent and transient situations",
 	"characteristic": "for deflections that do not go back", "frequent": "for deflections that go back", "quasipermanent": "for deflections that last",
 	"psi_0": "the combination value of a variable action", "psi_1": "its frequent value", "psi_2": "its quasi-permanent value",
 	"cases": "load cases", "together": "at the same time", "alone": "not at the same time", "independent": "each by itself",
 	"on": "counted", "off": "not counted", "lengths": "effective lengths", "theoretical": "of ideal ends", "recommended": "recommended for design",
+	"continuous": "of the member as a continuous beam", "nominal": "of simple construction, at each level by itself",
+	"storeys": "the number of storeys above (alpha_n)", "area": "the area of floor above (alpha_A)", "live": "live loads of ASCE/SEI 7", "tributary": "that a member carries",
+	"K_LL":   "the live load element factor",
 	"secant": "the secant formula", "simple": "1/(1 - N/N_cr)", "utilisation": "demand over capacity", "slenderness": "effective length over radius of gyration",
-	"sway": "sideways movement of the top",
+	"sway": "sideways movement of the top", "braced": "the joints cannot move sideways against each other", "direct": "the direct analysis method", "effective": "effective lengths",
+	"long": "the longer leg of an angle", "short": "the shorter leg of an angle", "leg": "one of the two plates of an angle", "space": "web member of a box or space truss",
 }

@@ -27,19 +27,15 @@ const (
 // own declaration. Parts of an earlier tree of the same file whose text did not
 // change are used again; prev may be nil.
 func Parse(id *FileID, text string, prev *File) *File {
+	if prev != nil && prev.Data {
+		prev = nil
+	}
 	if prev != nil && prev.Text == text && prev.Name == id.Name {
 		return prev
 	}
-	f := &File{Name: id.Name, Text: text}
-	switch {
-	case len(text) > maxFile:
-		f.Unreadable = "the file is larger than 256 MiB"
-	case strings.IndexByte(text[:min(len(text), 1<<16)], 0) >= 0:
-		f.Unreadable = "the file is not text (it contains zero bytes)"
-	}
+	f := &File{Name: id.Name, Text: text, Unreadable: unreadable(text)}
 	if f.Unreadable != "" {
-		f.Decls = []*Decl{{File: id, Syntax: &Syntax{Text: text}}}
-		f.Starts = []int32{0}
+		f.whole(id)
 		return f
 	}
 	head, tail, ranges := recut(text, prev)
@@ -60,8 +56,33 @@ func Parse(id *FileID, text string, prev *File) *File {
 	f.read(id, head, ranges)
 	f.Flawed = f.numbers(prev, head, tail, func(f *File) []int32 { return f.Flawed }, func(d *Decl) bool { return len(d.Problems) > 0 })
 	f.includes = f.numbers(prev, head, tail, func(f *File) []int32 { return f.includes }, func(d *Decl) bool {
-		return slices.ContainsFunc(d.Stmts, func(s *Stmt) bool { return s.Word == "include" })
+		return slices.ContainsFunc(d.Stmts, func(s *Stmt) bool { return s.Word == "include" || s.Word == "forces" })
 	})
+	return f
+}
+
+// unreadable says why a text is not read at all, "" when it is.
+func unreadable(text string) string {
+	switch {
+	case len(text) > maxFile:
+		return "the file is larger than 256 MiB"
+	case strings.IndexByte(text[:min(len(text), 1<<16)], 0) >= 0:
+		return "the file is not text (it contains zero bytes)"
+	}
+	return ""
+}
+
+// whole makes the text one declaration without statements.
+func (f *File) whole(id *FileID) {
+	f.Decls = []*Decl{{File: id, Syntax: &Syntax{Text: f.Text}}}
+	f.Starts = []int32{0}
+}
+
+// table takes a file that a forces statement names as it is: its figures are read
+// by whoever knows what they mean.
+func table(id *FileID, text string) *File {
+	f := &File{Name: id.Name, Text: text, Data: true, Unreadable: unreadable(text)}
+	f.whole(id)
 	return f
 }
 

@@ -28,6 +28,7 @@ type inclusion struct {
 	stmt *Stmt
 	arg  *Expr
 	name string // "" when it leads nowhere
+	data bool   // a forces statement, which names a table
 }
 
 // Read gives the text of a file by its workspace name, or an error that is told
@@ -39,6 +40,7 @@ type Read func(name string) (string, error)
 func Load(names []string, read Read, prev *Project) *Project {
 	p := &Project{Files: map[string]*File{}, includes: map[string][]inclusion{}, ids: map[string]*FileID{}, Asked: map[string]bool{}}
 	queue := slices.Clone(names)
+	tables := map[string]bool{} // named by forces statements
 	for _, name := range names {
 		p.Asked[name] = true
 	}
@@ -65,7 +67,12 @@ func Load(names []string, read Read, prev *Project) *Project {
 		}
 		p.ids[name] = id
 		f := old
-		if old == nil || old.Text != text {
+		switch {
+		case tables[name]:
+			if old == nil || !old.Data || old.Text != text {
+				f = table(id, text)
+			}
+		case old == nil || old.Data || old.Text != text:
 			f = Parse(id, text, old)
 		}
 		p.Files[name] = f
@@ -73,26 +80,55 @@ func Load(names []string, read Read, prev *Project) *Project {
 			p.includes[name] = append(p.includes[name], inc)
 			if inc.name != "" {
 				queue = append(queue, inc.name)
+				tables[inc.name] = tables[inc.name] || inc.data && !p.Asked[inc.name]
 			}
 		}
 	}
+	p.tables()
 	p.link(names, failed)
 	return p
 }
 
-// inclusions are the include statements of a file with the names they mean.
+// tables takes files that were asked for, but are named by a forces statement, for
+// the tables that they are, unless a file includes them.
+func (p *Project) tables() {
+	named := map[string]bool{}
+	for _, list := range p.includes {
+		for _, inc := range list {
+			if f := p.Files[inc.name]; f != nil && !f.Data {
+				named[inc.name] = named[inc.name] || inc.data
+			}
+		}
+	}
+	for _, list := range p.includes {
+		for _, inc := range list {
+			if !inc.data {
+				delete(named, inc.name)
+			}
+		}
+	}
+	for name, is := range named {
+		if is {
+			p.Files[name] = table(p.ids[name], p.Files[name].Text)
+			delete(p.includes, name)
+		}
+	}
+}
+
+// inclusions are the statements of a file that name others, with the names they
+// mean.
 func inclusions(f *File) []inclusion {
 	var out []inclusion
 	for _, i := range f.includes {
 		d := f.Decls[i]
 		for _, s := range d.Stmts {
-			if s.Word != "include" {
+			if s.Word != "include" && s.Word != "forces" {
 				continue
 			}
 			if _, assigned := s.Assigned(); assigned || s.Broken {
 				continue
 			}
-			inc := inclusion{decl: d, stmt: s}
+			inc := inclusion{decl: d, stmt: s, data: s.Word == "forces"}
 			if len(s.Args) > 0 && s.Args[0].Kind == StringExpr {
 				inc.arg = s.Args[0]
 				inc.name, _ = Resolve(f.Name, inc.arg.Text)
@@ -130,18 +166,25 @@ func (p *Project) link(names []string, failed map[string]string) {
 		for _, inc := range p.includes[name] {
 			switch {
 			case inc.arg == nil:
-				p.include(inc, "wrong-form", inc.stmt.Line, "include names a file: include \"common.kern\"")
+				p.include(inc, "wrong-form", inc.stmt.Line, inc.stmt.Word+" names a file: "+inc.example())
 			case inc.arg.Text == "":
-				p.include(inc, "include-outside", inc.arg.Span, "include names no file: include \"common.kern\"")
+				p.include(inc, "include-outside", inc.arg.Span, inc.stmt.Word+" names no file: "+inc.example())
 			case inc.name == "":
 				p.include(inc, "include-outside", inc.arg.Span, "'"+inc.arg.Text+"' lies outside the workspace; a calculation reads nothing from there")
 			case failed[inc.name] != "":
 				p.include(inc, "include-missing", inc.arg.Span, "cannot read '"+inc.name+"': "+failed[inc.name])
+			case inc.data && !p.Files[inc.name].Data:
+				p.include(inc, "wrong-form", inc.arg.Span, "'"+inc.arg.Text+"' is read as a calculation, not as a table of forces: a table is a file of its own that nothing includes")
+			case !inc.data && p.Files[inc.name].Data:
+				p.include(inc, "wrong-form", inc.arg.Span, "'"+inc.arg.Text+"' is a table of forces: forces \""+inc.arg.Text+"\" compression positive")
 			case inc.name == name || p.reaches(inc.name, name):
 				p.include(inc, "include-loop", inc.arg.Span, "this include leads back to '"+name+"'")
 				loops[name] = true
 			default:
 				included[inc.name] = true
+				if inc.data {
+					break // whoever reads the table reads the rest
+				}
 				if extra := inc.stmt.Args[1:]; len(extra) > 0 {
 					p.include(inc, "left-over", extra[0].Span.Join(extra[len(extra)-1].Span), "include names one file; this does not belong here")
 				}
@@ -158,6 +201,14 @@ func (p *Project) link(names []string, failed map[string]string) {
 
 func (p *Project) include(inc inclusion, rule string, span Span, message string) {
 	p.Problems = append(p.Problems, Diagnostic{Decl: inc.decl, Problem: Problem{Rule: rule, Span: span, Message: message}})
+}
+
+// example shows the form of the statement.
+func (inc inclusion) example() string {
+	if inc.data {
+		return `forces "frame.csv" compression positive`
+	}
+	return `include "common.kern"`
 }
 
 // reaches tells whether a chain of includes leads from one file to another.

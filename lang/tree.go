@@ -22,7 +22,10 @@ type File struct {
 	Starts []int32 // where each declaration begins in Text
 	// Flawed are the numbers of the declarations that have problems.
 	Flawed   []int32
-	includes []int32 // those that include a file
+	includes []int32 // those that name a file
+	// Data is set for a table of figures that a forces statement names: one
+	// declaration without statements.
+	Data bool
 	// Unreadable says why the text was not parsed at all ("" when it was): it is
 	// not text, or too big.
 	Unreadable string

@@ -22,8 +22,8 @@ var starters = map[string]bool{
 // verbs are the words that begin a statement inside a block.
 var verbs = map[string]bool{
 	"section": true, "material": true, "height": true, "from": true, "base": true, "top": true, "hold": true,
-	"effective": true, "load": true, "limit": true, "require": true, "depart": true, "note": true, "selfweight": true,
-	"standard": true, "actions": true, "show": true, "length": true, "lift": true, "slope": true, "net": true,
+	"effective": true, "joints": true, "connected": true, "load": true, "limit": true, "require": true, "depart": true, "note": true, "selfweight": true,
+	"standard": true, "actions": true, "show": true, "length": true, "lift": true, "moments": true, "reduce": true, "reduction": true, "slope": true, "net": true,
 }
 
 // blockAssigned are starters that are also properties inside a member's block:

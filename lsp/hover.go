@@ -132,7 +132,7 @@ func (h *hovering) context() lang.Context {
 
 // contextOf is the kind of block that a statement opens.
 func contextOf(s *lang.Stmt) lang.Context {
-	return map[string]lang.Context{"basis": lang.InBasis, "level": lang.InLevel, "column": lang.InMember, "strut": lang.InMember, "tie": lang.InMember,
+	return map[string]lang.Context{"project": lang.InProject, "basis": lang.InBasis, "level": lang.InLevel, "column": lang.InMember, "strut": lang.InMember, "tie": lang.InMember,
 		"lift": lang.InLift, "material": lang.InMaterial, "section": lang.InSection}[s.Word]
 }
 

@@ -29,7 +29,7 @@ func (h *hovering) quoted(s *lang.Stmt) {
 		}
 	}
 	switch context := h.context(); {
-	case s.Word == "include" && context == lang.InFile:
+	case (s.Word == "include" || s.Word == "forces") && context == lang.InFile:
 		h.include(s)
 	case s.Word == "section" && before == "":
 		h.sectionText(e.Text)

@@ -124,6 +124,14 @@ func (f *File) symbol(calculations []*model.Calculation, d *lang.Decl, s *lang.S
 				break
 			}
 		}
+	case s.Word == "project":
+		x.kind = always(protocol.SymbolKindPackage)
+		for _, c := range calculations {
+			if p := c.Env.Project; p.Place.Decl == d {
+				x.detail = p.Name
+				break
+			}
+		}
 	case s.Word == "basis":
 		x.kind = always(protocol.SymbolKindPackage)
 		for _, c := range calculations {
@@ -132,7 +140,7 @@ func (f *File) symbol(calculations []*model.Calculation, d *lang.Decl, s *lang.S
 				break
 			}
 		}
-	case s.Word == "include" && len(s.Args) > 0 && s.Args[0].Kind == lang.StringExpr:
+	case (s.Word == "include" || s.Word == "forces") && len(s.Args) > 0 && s.Args[0].Kind == lang.StringExpr:
 		x.kind = always(protocol.SymbolKindFile)
 		x.detail = s.Args[0].Text
 	}

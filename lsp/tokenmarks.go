@@ -77,7 +77,7 @@ func (m *tokenMarks) head(s *lang.Stmt, in lang.Context, assigned bool) {
 }
 
 // blockContexts are the contexts in the blocks of declarations.
-var blockContexts = map[string]lang.Context{"basis": lang.InBasis, "level": lang.InLevel, "material": lang.InMaterial, "section": lang.InSection,
+var blockContexts = map[string]lang.Context{"project": lang.InProject, "basis": lang.InBasis, "level": lang.InLevel, "material": lang.InMaterial, "section": lang.InSection,
 	"column": lang.InMember, "strut": lang.InMember, "tie": lang.InMember}
 
 func (m *tokenMarks) declaration(s *lang.Stmt) {
@@ -164,7 +164,7 @@ func (m *tokenMarks) word(e *lang.Expr) {
 		return
 	}
 	switch e.Text {
-	case "at", "about", "across", "offset", "and", "from", "to", "as", "per", "annex", "eq", "because", "floor", "lengths":
+	case "at", "about", "across", "offset", "and", "from", "to", "as", "per", "by", "annex", "eq", "because", "floor", "lengths":
 		m.add(e.Span, keywordToken, 0)
 		return
 	case "height", "length", "utilisation", "slenderness", "sway":

@@ -127,6 +127,30 @@ func init() {
 	}
 }
 
+func init() {
+	// sheet FILE [FORM [MEMBER…]]: the headings and verdicts of what the command gives
+	verbs["sheet"] = func(s *scene, args []string) {
+		list := []any{s.uri(args[0])}
+		for _, a := range args[1:] {
+			list = append(list, a)
+		}
+		raw, err := s.ask("workspace/executeCommand", string(remarshal(s.t, map[string]any{"command": commandSheet, "arguments": list})))
+		if err != nil {
+			s.print("error: %v\n", err)
+			return
+		}
+		var text string
+		if err := json.Unmarshal(raw, &text); err != nil {
+			s.t.Fatal(err)
+		}
+		for line := range strings.Lines(text) {
+			if strings.HasPrefix(line, "#") || strings.HasPrefix(line, "**") || strings.HasPrefix(line, "<h") || strings.HasPrefix(line, "<p class=\"verdict") {
+				s.print("    %s", line)
+			}
+		}
+	}
+}
+
 // place is the parameters of a request about a place.
 func (s *scene) place(file string, offset int32) string {
 	return string(remarshal(s.t, map[string]any{"textDocument": map[string]any{"uri": s.uri(file)}, "position": slowPosition(s.texts[file], offset, s.unit)}))

@@ -41,6 +41,7 @@ func (s *Server) DidChangeWatchedFiles(_ context.Context, p *protocol.DidChangeW
 
 // watchers is the registration of the files that matter.
 func watchers() protocol.Registration {
-	options := protocol.DidChangeWatchedFilesRegistrationOptions{Watchers: []protocol.FileSystemWatcher{{GlobPattern: protocol.Pattern("**/*" + disk.Extension)}}}
+	options := protocol.DidChangeWatchedFilesRegistrationOptions{Watchers: []protocol.FileSystemWatcher{
+		{GlobPattern: protocol.Pattern("**/*" + disk.Extension)}, {GlobPattern: protocol.Pattern("**/*.csv")}}}
 	return registration("watched-files", protocol.MethodWorkspaceDidChangeWatchedFiles, &options)
 }

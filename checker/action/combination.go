@@ -69,6 +69,9 @@ type Combination struct {
 	Factors   []float64 // one a case, in the order of the cases
 	Source    string    // the equation or statement that it comes from
 	Situation Situation
+	// Accompanying tells of each case whether its factor has a psi value in it; nil
+	// for none.
+	Accompanying []bool
 }
 
 // Sum writes a combination as a person does, leaving out what has no part.

@@ -268,7 +268,8 @@ func (m *maker) permanents(sup, inf float64) [][]float64 {
 // one, or all with the accompanying one when leading is nil. with is the
 // accidental or seismic case of the combination, -1 for none.
 func (m *maker) selections(base []float64, with int, leading, accompanying value) {
-	m.add(base)
+	m.add(base, nil)
+	leadsFully := leading != nil && leading(Psi{}) != 0 // no psi value in it
 	// from few variable actions to many: of combinations that do the same to a
 	// member, the first and so the shortest is named
 	for _, set := range m.sets {
@@ -279,17 +280,17 @@ func (m *maker) selections(base []float64, with int, leading, accompanying value
 			if leading != nil && set&(1<<lead) == 0 {
 				continue
 			}
-			factors := append([]float64(nil), base...)
+			factors, psi := append([]float64(nil), base...), make([]bool, len(base))
 			for j, i := range m.variable {
 				switch {
 				case set&(1<<j) == 0:
 				case j == lead && leading != nil:
-					factors[i] = leading(m.psi[j])
+					factors[i], psi[i] = leading(m.psi[j]), !leadsFully
 				default:
-					factors[i] = accompanying(m.psi[j])
+					factors[i], psi[i] = accompanying(m.psi[j]), true
 				}
 			}
-			m.add(factors)
+			m.add(factors, psi)
 			if leading == nil {
 				break
 			}
@@ -298,7 +299,7 @@ func (m *maker) selections(base []float64, with int, leading, accompanying value
 }
 
 // add notes a combination unless it is nothing, or was there before.
-func (m *maker) add(factors []float64) {
+func (m *maker) add(factors []float64, psi []bool) {
 	some := false
 	m.key = m.key[:0]
 	for _, f := range factors {
@@ -310,7 +311,7 @@ func (m *maker) add(factors []float64) {
 		return
 	}
 	m.seen[string(m.key)] = true
-	m.out = append(m.out, Combination{Name: Sum(m.cases, factors), Factors: factors, Source: m.source, Situation: m.situation})
+	m.out = append(m.out, Combination{Name: Sum(m.cases, factors), Factors: factors, Source: m.source, Situation: m.situation, Accompanying: psi})
 }
 
 // MaxExclusive is how many cases may stand in groups of which one acts at a time

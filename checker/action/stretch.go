@@ -56,6 +56,8 @@ type Stretch struct {
 	K          float64 // effective length factor
 	Exact      bool    // K was solved for the whole column, see Stretches
 	Overridden bool    // K is the user's
+	Joints     bool    // K follows from the stiffness ratios of rigid joints
+	Direct     bool    // K is 1 by the direct analysis method
 	Stepped    bool    // the section changes in it; K is for one of its sections and one combination
 }
 

@@ -18,12 +18,37 @@ var usual = map[unit.Dim]string{
 	unit.Mass: "kg", unit.Angle: "rad", unit.Acceleration: "m/s2", unit.WeightDensity: "kN/m3", unit.RotationalStiffness: "kNm/rad",
 }
 
+// customary are the usual units where lengths are shown in inches or feet.
+var customary = map[unit.Dim]string{
+	unit.Length: "in", unit.Area: "in2", unit.Volume: "in3", unit.Length4: "in4", unit.Length6: "in6", unit.Force: "kip",
+	unit.Stress: "ksi", unit.Moment: "kip-ft", unit.ForcePerLength: "klf", unit.Density: "pcf", unit.MassPerLength: "lb/ft", unit.Mass: "lb",
+}
+
+// american tells whether what is not said is shown in US customary units: where
+// lengths are, or where forces are and nothing is said of lengths.
+func (u Units) american() bool {
+	if l, ok := u[unit.Length]; ok {
+		return l.Symbol == "in" || l.Symbol == "ft"
+	}
+	switch u[unit.Force].Symbol {
+	case "kip", "kips", "lbf":
+		return true
+	}
+	return false
+}
+
 // For gives the unit in which to show a quantity of the dimension.
 func (u Units) For(dim unit.Dim) unit.Unit {
 	if s, ok := u[dim]; ok {
 		return s
 	}
-	text, ok := usual[dim]
+	text, ok := "", false
+	if u.american() {
+		text, ok = customary[dim]
+	}
+	if !ok {
+		text, ok = usual[dim]
+	}
 	if !ok {
 		text = dim.Base()
 	}

@@ -2,8 +2,6 @@ package drawing
 
 import (
 	"math"
-
-	"kern/lang/unit"
 )
 
 // axes are a pair of scales with a field between them.
@@ -21,16 +19,16 @@ func (a axes) at(x, y float64) Point {
 // draw draws the scales with round numbers and their names.
 func (a axes) draw(p *pen, xName, yName string) {
 	f := a.field
-	xs, ys := ticks(a.xLeast, a.xMost, 6), ticks(0, a.yMost, 5)
+	xs, ys := Ticks(a.xLeast, a.xMost, 6), Ticks(0, a.yMost, 5)
 	for _, v := range xs {
 		q := a.at(v, 0)
 		p.line(Faint, q.X, f.Bottom, q.X, f.Bottom+1)
-		p.place(Box{f.Left - 12, 0, f.Right + 12, math.Inf(1)}, Text{Words: unit.Short(v, 4), Size: small, Tone: Quiet}, spot{Point{q.X, q.Y + 3.6}, Middle})
+		p.place(Box{f.Left - 12, 0, f.Right + 12, math.Inf(1)}, Text{Words: tick(v), Size: small, Tone: Quiet}, spot{Point{q.X, q.Y + 3.6}, Middle})
 	}
 	for _, v := range ys {
 		q := a.at(a.xLeast, v)
 		p.line(Faint, f.Left-1, q.Y, f.Left, q.Y)
-		p.place(Box{0, 0, f.Right, math.Inf(1)}, Text{Words: unit.Short(v, 4), Size: small, Tone: Quiet}, spot{Point{q.X - 1.6, q.Y + 0.9}, End})
+		p.place(Box{0, 0, f.Right, math.Inf(1)}, Text{Words: tick(v), Size: small, Tone: Quiet}, spot{Point{q.X - 1.6, q.Y + 0.9}, End})
 	}
 	p.line(Outline, f.Left, f.Top, f.Left, f.Bottom)
 	p.line(Outline, f.Left, f.Bottom, f.Right, f.Bottom)
@@ -38,8 +36,8 @@ func (a axes) draw(p *pen, xName, yName string) {
 	p.text(Text{At: Point{f.Left - 10, f.Top - 2.6}, Words: yName, Size: small})
 }
 
-// ticks are round numbers from low to high, about n of them.
-func ticks(low, high float64, n int) []float64 {
+// Ticks are round numbers from low to high, about n of them.
+func Ticks(low, high float64, n int) []float64 {
 	if !(high > low) || math.IsInf(high-low, 0) {
 		return nil
 	}

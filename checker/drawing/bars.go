@@ -43,6 +43,9 @@ func Bars(r *checker.Result) *Scene {
 		if c.Rule == "requirement" {
 			name = c.Clause
 		}
+		if c.Lift != "" {
+			name += ", " + c.Lift
+		}
 		p.text(Text{At: Point{1, y + 3.4}, Words: clip(name, small, names-3, bold), Size: small, Bold: bold})
 		value := Text{At: Point{ends + 2, y + 3.4}, Size: small, Bold: bold}
 		if math.IsNaN(c.Utilisation) {

@@ -31,13 +31,13 @@ func Buckling(r *checker.Result) *Scene {
 			weak = a
 		}
 	}
-	b.view(0, 17, weak)
-	b.view(1, 49, weak)
+	b.view(0, 15.5, weak)
+	b.view(1, 45.5, weak)
 	b.text(Text{At: Point{1, tallSheet - 1.2}, Words: clip("under "+r.Combinations()[k].Name, small, bucklingWidth-2, false), Size: small, Tone: Quiet})
 	return &Scene{Width: bucklingWidth, Height: tallSheet, Title: s.title("buckled shapes"), Description: b.describe(), Items: b.items}
 }
 
-const bucklingWidth = 66.0
+const bucklingWidth = 61.0
 
 type buckling struct {
 	subject
@@ -50,7 +50,6 @@ type buckling struct {
 // bar is the whole member about an axis under the combination.
 func (b *buckling) bar(axis int) *action.Bar {
 	out := &action.Bar{Base: b.m.Base[axis], Top: b.m.Top[axis]}
-	ei := b.m.Material.E * [...]float64{b.m.Section.IMajor, b.m.Section.IMinor}[axis]
 	holds := b.holdHeights(axis)
 	held := func(z float64) bool {
 		for _, h := range holds {
@@ -63,7 +62,7 @@ func (b *buckling) bar(axis int) *action.Bar {
 	cuts := b.f.Heights()
 	out.Nodes, out.Held = []float64{0}, []bool{false}
 	for i := range len(cuts) - 1 {
-		n := 1
+		n, ei := 1, b.f.Stiffness(axis, (cuts[i]+cuts[i+1])/2)
 		if b.m.Weight { // the force grows all along
 			n = 1 + int(12*(cuts[i+1]-cuts[i])/b.m.Height)
 		}
@@ -93,7 +92,7 @@ func (b *buckling) view(axis int, x float64, weak int) {
 	for _, z := range b.holdHeights(axis) {
 		b.hold(x-0.4, b.y(z), -1)
 	}
-	style, tone := Strong, Plain
+	style, tone := Outline, Plain
 	if axis == weak {
 		style, tone = Accent, Loud
 	}
@@ -107,9 +106,9 @@ func (b *buckling) view(axis int, x float64, weak int) {
 		b.polyline(style, pts...)
 	}
 	for i, l := range lines {
-		t := Text{At: Point{x, 10 + pitch*float64(i)}, Words: clip(l, small, 31.5, i == 0), Size: small, Anchor: Middle}
+		t := Text{At: Point{x, 9 + pitch*float64(i)}, Words: clip(l, small, 29.5, i == 0 && axis == weak), Size: small, Anchor: Middle}
 		if i == 0 {
-			t.Tone, t.Bold = tone, true
+			t.Tone, t.Bold = tone, axis == weak
 		}
 		b.text(t)
 	}
@@ -126,11 +125,14 @@ func (b *buckling) lines(axis int) []string {
 		out[0] = "not known"
 	}
 	if s, ok := b.checked(axis); ok {
-		k := "K " + unit.Short(s.K, 3)
-		if s.Overridden {
-			k += " stated"
+		if b.f.Stepped(s.From, s.To) { // each lift has an effective length of its own
+			return append(out, "checked lift by lift")
 		}
-		out = append(out, "checked: N_cr "+b.show(b.r.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length)+", "+k)
+		with := "checked with"
+		if s.Overridden {
+			with += " the stated K"
+		}
+		out = append(out, with, "N_cr "+b.show(b.f.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length)+", K "+unit.Short(s.K, 3))
 	}
 	return out
 }

@@ -21,9 +21,13 @@ func Elevation(r *checker.Result) *Scene {
 		return nil
 	}
 	e := elevation{subject: s, groups: groupLoads(s.m)}
-	e.half = depths(s.m.Section)
-	for a := range e.half {
-		e.half[a] = min(max(e.half[a]/2*stature/s.m.Height, 0.7), 5)
+	for _, p := range s.m.Parts() {
+		d := depths(p.Section)
+		for a := range d {
+			d[a] = min(max(d[a]/2*stature/s.m.Height, 0.7), 5)
+			e.half[a] = max(e.half[a], d[a])
+		}
+		e.parts = append(e.parts, d)
 	}
 	e.layOut()
 	e.levels()
@@ -32,8 +36,11 @@ func Elevation(r *checker.Result) *Scene {
 		e.view(a)
 	}
 	if own := r.OwnWeight(); own > 0 {
-		e.text(Text{At: Point{1, tallSheet - 1.2}, Size: small, Tone: Quiet,
-			Words: clip("own weight "+s.show(own, unit.Force)+" in "+r.Env().Cases[r.Env().SelfWeight].Name, small, e.width-2, false)})
+		words := "own weight " + s.show(own, unit.Force)
+		if r.Env().Declared() {
+			words += " in " + r.Env().Cases[r.Env().SelfWeight].Name
+		}
+		e.text(Text{At: Point{1, tallSheet - 1.2}, Size: small, Tone: Quiet, Words: clip(words, small, e.width-2, false)})
 	}
 	return &Scene{Width: e.width, Height: tallSheet, Title: s.title("elevation"), Description: e.describe(), Items: e.items}
 }
@@ -41,10 +48,11 @@ func Elevation(r *checker.Result) *Scene {
 type elevation struct {
 	subject
 	pen
-	half   [2]float64 // half the width of the member in each view, mm
-	at     [2]float64 // where the views stand
-	room   [2]float64 // for the words behind each
-	width  float64    // of the sheet
+	half   [2]float64   // half the greatest width of the member in each view, mm
+	parts  [][2]float64 // half the width of each lift
+	at     [2]float64   // where the views stand
+	room   [2]float64   // for the words behind each
+	width  float64      // of the sheet
 	groups []loadGroup
 	left   []entry // words at the left of the first view
 }
@@ -52,7 +60,7 @@ type elevation struct {
 const (
 	beforeWords = 8.0 // from the member to the words about its loads, mm
 	beforeHold  = 5.2 // from the member to the words about what holds it
-	holdWords   = 8.5
+	holdWords   = 9.8
 )
 
 // layOut finds out how much room the words of both views need.
@@ -148,8 +156,7 @@ func (e *elevation) lines(g loadGroup, axis int) []Text {
 
 // levels draws the levels that the member stands between, and notes their names.
 func (e *elevation) levels() {
-	at := e.m.HeightAt
-	if at.Decl == nil || !strings.HasPrefix(at.Span.Of(at.Decl.Text), "from") {
+	if !e.m.Levels {
 		return
 	}
 	for _, l := range e.r.Env().Levels {
@@ -218,7 +225,9 @@ func (e *elevation) view(axis int) {
 	x, w := e.at[axis], e.half[axis]
 	top, base := e.y(e.m.Height), e.y(0)
 	e.text(Text{At: Point{x, 4}, Words: "about " + model.Axis(axis).String(), Bold: true, Anchor: Middle, Size: normal})
-	e.rect(Fill, Box{x - w, top, x + w, base})
+	for i, p := range e.m.Parts() {
+		e.rect(Fill, Box{x - e.parts[i][axis], e.y(p.To), x + e.parts[i][axis], e.y(p.From)})
+	}
 	e.base(e.m.Base[axis], x, base, w)
 	e.top(e.m.Top[axis], x, top, w)
 	foot := map[action.End]float64{action.Pinned: 8, action.Fixed: 4.6, action.Guided: 7, action.Free: 3.4}[e.m.Base[axis]]
@@ -241,6 +250,9 @@ func (e *elevation) view(axis int) {
 	edge := x - w - beforeHold
 	e.column(near, edge, holdWords, 8, tallSheet-6, End)
 	if axis == 0 {
+		for _, l := range e.m.Lifts {
+			e.left = append(e.left, entry{want: (e.y(l.From) + e.y(l.To)) / 2, lines: []Text{{Words: l.Section.Title(), Size: small}}, to: Point{-1, -1}})
+		}
 		e.column(e.left, 11.5, edge-holdWords-1-11.5, 8, tallSheet-6, Start)
 	}
 	var right []entry
@@ -319,6 +331,11 @@ func (e *elevation) axial(g loadGroup, axis int, x, w float64) entry {
 		at = x + w + 1.6
 		e.line(Outline, x+w, y, at, y)
 	}
+	// loads at one place stand beside each other
+	if n := e.before(g, axis); n > 0 {
+		at += 2.6 * float64(n)
+		e.line(Outline, x, y, at, y)
+	}
 	lift := 0.0
 	if atTop && e.m.Top[axis].String() == "guided" && g.Offset[axis] == 0 {
 		lift = 0.4
@@ -330,6 +347,22 @@ func (e *elevation) axial(g loadGroup, axis int, x, w float64) entry {
 	e.arrow(Outline, from, to)
 	out.want, out.to = y-5, Point{at + 0.6, y - 5}
 	return out
+}
+
+// before is how many groups of loads along the member come before one and are
+// drawn at the same place in a view.
+func (e *elevation) before(g loadGroup, axis int) int {
+	n := 0
+	for _, o := range e.groups {
+		if o.Kind != model.AxialLoad || math.Abs(o.At-g.At) > 1e-6*e.m.Height || math.Abs(o.Offset[axis]-g.Offset[axis]) > 1e-9 {
+			continue
+		}
+		if o.Offset == g.Offset {
+			break
+		}
+		n++
+	}
+	return min(n, 2)
 }
 
 // describe says in words what the picture shows.

@@ -6,12 +6,9 @@ import "kern/checker"
 // compression at which the line of the interaction picture begins and ends, N
 // and Nm.
 func Corners(r *checker.Result) (n, m float64, ok bool) {
-	s, _ := about(r)
-	k := s.combination()
-	e, ok := newEnvelope(r, k)
+	i, ok := r.Interaction()
 	if !ok {
 		return 0, 0, false
 	}
-	i := interaction{subject: s}
-	return e.axial * s.f.Compression(k, 0, s.m.Height), e.bending * i.moment(0, k), true
+	return i.Envelope.Axial * i.Force, i.Envelope.Bending * i.Moments[i.Axis], true
 }

@@ -2,10 +2,9 @@ package drawing
 
 import (
 	"math"
+	"strings"
 
 	"kern/checker"
-	"kern/checker/action"
-	"kern/checker/model"
 	"kern/lang/unit"
 )
 
@@ -16,108 +15,52 @@ import (
 // for a member that is not both compressed and bent.
 func Interaction(r *checker.Result) *Scene {
 	s, ok := about(r)
-	if !ok || s.f == nil {
-		return nil
-	}
-	k := s.combination()
-	if k < 0 {
-		return nil
-	}
-	i := interaction{subject: s, combination: k}
-	i.force = s.f.Compression(k, 0, s.m.Height)
-	for a := range i.moments {
-		i.moments[a] = i.moment(a, k)
-	}
-	if relative(s, i.moments) > 0 {
-		i.axis = 1
-	}
-	if !(i.force > 0) || !(i.moments[i.axis] > 0) {
-		return nil
-	}
-	e, ok := newEnvelope(r, k)
 	if !ok {
 		return nil
 	}
-	return i.draw(e)
-}
-
-// relative is positive when the minor axis is bent harder for its modulus.
-func relative(s subject, m [2]float64) float64 {
-	p := s.m.Section.Properties
-	if !(p.WelMajor > 0) || !(p.WelMinor > 0) {
-		return m[1] - m[0]
+	data, ok := r.Interaction()
+	if !ok {
+		return nil
 	}
-	return m[1]/p.WelMinor - m[0]/p.WelMajor
+	i := interaction{subject: s, Interaction: data}
+	return i.draw()
 }
 
 type interaction struct {
 	subject
 	pen
-	combination int
-	axis        int // that the moments are drawn about
-	force       float64
-	moments     [2]float64
+	*checker.Interaction
 }
 
-// moment is the greatest first-order moment about an axis, without its sign.
-func (i *interaction) moment(axis, combination int) float64 {
-	pieces, ok := i.f.Bending(axis, i.r.Combinations()[combination].Factors, nil)
-	if !ok {
-		return math.NaN()
-	}
-	return largest(pieces)
-}
-
-func largest(pieces []action.Piece) float64 {
-	most := 0.0
-	for _, p := range pieces {
-		m, _ := p.Largest()
-		most = max(most, math.Abs(m))
-	}
-	return most
-}
-
-// load is the point of a combination.
-type loadPoint struct {
-	n, m        float64
-	combination int
-}
-
-func (i *interaction) draw(e *envelope) *Scene {
+func (i *interaction) draw() *Scene {
 	force, moment := i.units.For(unit.Force), i.units.For(unit.Moment)
-	var points []loadPoint
-	for k := range i.r.Combinations() {
-		points = append(points, loadPoint{i.f.Compression(k, 0, i.m.Height), i.moment(i.axis, k), k})
-	}
 	a := axes{field: Box{14, 9, 92, 69}}
-	for _, p := range e.points {
-		if p.axial > 0 || p.bending > 0 { // false for NaN
-			a.yMost, a.xMost = max(a.yMost, p.axial*i.force), max(a.xMost, p.bending*i.moments[i.axis])
-		}
-	}
-	for _, p := range points {
-		if p.m > 0 || p.n > 0 {
-			a.yMost, a.xMost = max(a.yMost, p.n), max(a.xMost, p.m)
+	for _, list := range [][]checker.Forces{i.Line(), i.Points} {
+		for _, p := range list {
+			if p.Moment >= 0 { // false for NaN
+				a.yMost, a.xMost = max(a.yMost, p.Compression), max(a.xMost, p.Moment)
+			}
 		}
 	}
 	a.yMost, a.xMost = 1.08*a.yMost/force.Factor, 1.08*a.xMost/moment.Factor
 	at := func(n, m float64) Point { return a.at(m/moment.Factor, n/force.Factor) }
-	a.draw(&i.pen, "moment about "+model.Axis(i.axis).String()+", "+moment.Symbol, "compression, "+force.Symbol)
+	a.draw(&i.pen, "moment about "+i.Axis.String()+", "+moment.Symbol, "compression, "+force.Symbol)
 
-	i.line(e, at)
-	governing := at(i.force, i.moments[i.axis])
-	i.add(Path{Style: Dashed, Steps: steps([]Point{at(0, 0), governing}, false)})
+	i.line(at)
+	governing := at(i.Force, i.Moments[i.Axis])
+	i.polyline(Dashed, at(0, 0), governing)
+	i.mind(at(0, 0), governing)
 	drawn := map[Point]bool{}
 	round := func(q Point) Point { return Point{math.Round(q.X * 5), math.Round(q.Y * 5)} }
 	drawn[round(governing)] = true
-	var named []loadPoint
-	for _, p := range points {
-		q := at(max(p.n, 0), p.m)
-		if !math.IsNaN(p.m) && !drawn[round(q)] && p.combination != i.combination {
+	var named []int
+	for k, p := range i.Points {
+		q := at(max(p.Compression, 0), p.Moment)
+		if !math.IsNaN(p.Moment) && !drawn[round(q)] && k != i.Combination {
 			drawn[round(q)] = true
 			i.circle(Outline, q, 0.7)
 			i.taken = append(i.taken, Box{q.X - 0.8, q.Y - 0.8, q.X + 0.8, q.Y + 0.8})
-			named = append(named, p)
+			named = append(named, k)
 		}
 	}
 	i.circle(AccentFill, governing, 1.1)
@@ -125,61 +68,81 @@ func (i *interaction) draw(e *envelope) *Scene {
 	label := Text{Words: "utilisation " + checker.Ratio(i.r.Utilisation), Size: small, Bold: true, Tone: Loud}
 	i.place(a.field, label, beside(governing, 2)...)
 	if len(named) <= 6 {
-		for _, p := range named {
-			i.place(a.field, Text{Words: i.r.Combinations()[p.combination].Name, Size: 2.1, Tone: Quiet}, beside(at(max(p.n, 0), p.m), 1.6)...)
+		for _, k := range named {
+			i.place(a.field, Text{Words: i.r.Combinations()[k].Name, Size: 2.1, Tone: Quiet}, beside(at(max(i.Points[k].Compression, 0), i.Points[k].Moment), 1.6)...)
 		}
 	}
-	name := i.r.Combinations()[i.combination].Name
+	name := i.r.Combinations()[i.Combination].Name
 	y := a.field.Bottom + 12
 	note := func(words string) {
 		i.text(Text{At: Point{1, y}, Words: clip(words, small, 94, false), Size: small, Tone: Quiet})
 		y += 3.6
 	}
 	note("the full point is " + name)
-	if len(points) > 1 {
+	if len(i.Points) > 1 {
 		note("the rings are the other combinations")
 	}
-	other := 1 - i.axis
-	if i.moments[other] > 0 {
-		note("the moment about " + model.Axis(other).String() + " grows in proportion, " + unit.Short(i.moments[other]/i.moments[i.axis], 3) + " of this one")
+	if len(i.Undecided) > 0 {
+		var list []string
+		for _, u := range i.Undecided {
+			list = append(list, words(u))
+		}
+		for _, line := range wrap("undecided: "+strings.Join(list, ", "), small, 94) {
+			note(line)
+		}
+	}
+	other := 1 - i.Axis
+	if i.Moments[other] > 0 {
+		note("the moment about " + other.String() + " grows with it, " + unit.Short(i.Moments[other]/i.Moments[i.Axis], 3) + " times as large")
 	}
 	return &Scene{Width: 96, Height: y - 2, Title: i.title("compression and bending"),
-		Description: "The governing combination " + name + " has " + i.show(i.force, unit.Force) + " and " + i.show(i.moments[i.axis], unit.Moment) +
-			" about " + model.Axis(i.axis).String() + "; without moments the member carries " + i.show(e.axial*i.force, unit.Force) + ", without compression " + i.show(e.bending*i.moments[i.axis], unit.Moment) + ".",
+		Description: "The governing combination " + name + " has " + i.show(i.Force, unit.Force) + " and " + i.show(i.Moments[i.Axis], unit.Moment) +
+			" about " + i.Axis.String() + "; without moments the member carries " + i.show(i.Envelope.Axial*i.Force, unit.Force) + ", without compression " + i.show(i.Envelope.Bending*i.Moments[i.Axis], unit.Moment) + "." + i.open(),
 		Items: i.items}
 }
 
 // line draws the envelope, interrupted where the standard cannot decide, and
 // writes on it what it is.
-func (i *interaction) line(e *envelope, at func(n, m float64) Point) {
+func (i *interaction) line(at func(n, m float64) Point) {
+	style, words := Strong, "inside this line all checks pass"
+	if l := i.Envelope.Limit; l != 1 {
+		words = "all checks reach the limit " + checker.Ratio(l) + " here"
+	}
+	if len(i.Undecided) > 0 { // what is not decided is no pass
+		style, words = Dashed, "inside this line the other checks pass"
+	}
 	var run []Point
 	flush := func() {
 		if len(run) > 1 {
-			i.polyline(Strong, run...)
+			i.polyline(style, run...)
 			i.mind(run...)
 		}
 		run = nil
 	}
-	for _, p := range e.points {
-		if math.IsNaN(p.axial) || math.IsNaN(p.bending) {
+	line := i.Line()
+	for _, p := range line {
+		if math.IsNaN(p.Compression) || math.IsNaN(p.Moment) {
 			flush()
 			continue
 		}
-		run = append(run, at(p.axial*i.force, p.bending*i.moments[i.axis]))
+		run = append(run, at(p.Compression, p.Moment))
 	}
 	flush()
+	var spots []spot
 	for _, k := range []int{7, 5, 9, 3, 12, 15} {
-		p := e.points[k]
-		if q := at(p.axial*i.force, p.bending*i.moments[i.axis]); !math.IsNaN(q.X) && !math.IsNaN(q.Y) {
-			words := "inside this line all checks pass"
-			if e.limit != 1 {
-				words = "all checks reach the limit " + checker.Ratio(e.limit) + " here"
-			}
-			if i.place(Box{14, 9, 92, 69}, Text{Words: words, Size: small}, spot{Point{q.X + 1.5, q.Y - 1}, Start}) {
-				return
-			}
+		if q := at(line[k].Compression, line[k].Moment); !math.IsNaN(q.X) && !math.IsNaN(q.Y) {
+			spots = append(spots, spot{Point{q.X + 1.5, q.Y - 1}, Start})
 		}
 	}
+	i.place(Box{14, 9, 92, 69}, Text{Words: words, Size: small}, spots...)
+}
+
+// open says what is undecided.
+func (i *interaction) open() string {
+	if len(i.Undecided) == 0 {
+		return ""
+	}
+	return " Left out, as it is undecided: " + words(strings.Join(i.Undecided, ", ")) + "."
 }
 
 // beside are the places around a point.

@@ -135,3 +135,13 @@ func TestRandom(t *testing.T) {
 // shortly writes a number as pictures do; exact writes every digit.
 func shortly(v float64) string { return unit.Short(v, 4) }
 func exact(v float64) string   { return strconv.FormatFloat(v, 'f', -1, 64) }
+
+// BenchmarkPictures draws all pictures of a member that is compressed and bent.
+func BenchmarkPictures(b *testing.B) {
+	r := member(b, gallery)
+	for b.Loop() {
+		for _, s := range drawing.Pictures(r) {
+			s.SVG(drawing.Alone)
+		}
+	}
+}

@@ -14,8 +14,8 @@ func randomMembers(n int, seed uint64) string {
 	r := rand.New(rand.NewPCG(seed, 7))
 	pick := func(list ...string) string { return list[r.IntN(len(list))] }
 	var b strings.Builder
-	standards := checker.Standards()
-	fmt.Fprintf(&b, "basis { standard %q; actions \"EN 1990:2002\" eq %q; show %s }\n", standards[int(seed)%len(standards)], pick("6.10", "6.10a/b"), pick("kN, kNm, mm, MPa", "kip, kip-ft, in, ksi", "N, Nmm, m"))
+	standards := checker.Stated()
+	fmt.Fprintf(&b, "basis { standard %s; actions \"EN 1990:2002\" eq %q; show %s }\n", standards[int(seed)%len(standards)], pick("6.10", "6.10a/b"), pick("kN, kNm, mm, MPa", "kip, kip-ft, in, ksi", "N, Nmm, m"))
 	b.WriteString("case G permanent\ncase Imposed_on_the_gallery imposed \"B\"\ncase W wind\n")
 	b.WriteString("level ground at 0 m\nlevel the_lower_gallery at 2.1 m { G 4 kN/m2 }\nlevel upper at 2.2 m { W 1 kN/m2 }\nlevel roof at 9 m { G 1 kN/m2; W 2 kN/m2 }\n")
 	for i := range n {
@@ -29,6 +29,9 @@ func randomMembers(n int, seed uint64) string {
 		} else {
 			fmt.Fprintf(&b, "height = %.3f m\n", height)
 		}
+		if r.IntN(6) == 0 {
+			fmt.Fprintf(&b, "lift base to %.3f m { section = %s }\n", height*(0.1+0.8*r.Float64()), pick(`"HEB 300"`, `"IPE 200"`))
+		}
 		for _, end := range []string{"base", "top"} {
 			if r.IntN(2) == 0 {
 				fmt.Fprintf(&b, "%s %s\n", end, pick("pinned", "fixed", "free", "guided"))
@@ -37,7 +40,7 @@ func randomMembers(n int, seed uint64) string {
 			}
 		}
 		crowd := 1 + r.IntN(3)
-		if r.IntN(12) == 0 {
+		if r.IntN(25) == 0 {
 			crowd = 30
 		}
 		at := func() string { return fmt.Sprintf("%.3f m", height*(0.001+0.998*r.Float64())) }

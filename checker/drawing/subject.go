@@ -75,7 +75,13 @@ func (s *subject) title(what string) string { return s.m.Kind.String() + " " + s
 // sheet.
 func Pictures(r *checker.Result) []*Scene {
 	var out []*Scene
-	for _, draw := range []func(*checker.Result) *Scene{Elevation, Buckling, Diagrams, SectionOf, Interaction, Bars} {
+	for _, draw := range []func(*checker.Result) *Scene{Elevation, Buckling, Diagrams} {
+		if s := draw(r); s != nil {
+			out = append(out, s)
+		}
+	}
+	out = append(out, Sections(r)...)
+	for _, draw := range []func(*checker.Result) *Scene{Interaction, Bars} {
 		if s := draw(r); s != nil {
 			out = append(out, s)
 		}
@@ -83,14 +89,33 @@ func Pictures(r *checker.Result) []*Scene {
 	return out
 }
 
-// SectionOf draws the member's cross-section with axes and dimensions; nil for
-// one without a shape.
+// SectionOf draws the member's cross-section with axes and dimensions, that of
+// the lowest lift where it has several; nil for one without a shape.
 func SectionOf(r *checker.Result) *Scene {
-	if r.Member == nil || r.Member.Section == nil || r.Env() == nil {
+	if s := Sections(r); len(s) > 0 {
+		return s[0]
+	}
+	return nil
+}
+
+// Sections draws every cross-section of the member once, from the base up.
+func Sections(r *checker.Result) []*Scene {
+	if r.Member == nil || r.Env() == nil {
 		return nil
 	}
-	s := r.Member.Section
-	return Section(s.Shape, s.Properties, Sized{Title: "section " + s.Title(), Side: 40, Dimensions: true, Units: r.Units()})
+	var out []*Scene
+	var drawn []*model.Section
+	for _, p := range r.Member.Parts() {
+		s := p.Section
+		if s == nil || slices.ContainsFunc(drawn, s.Same) {
+			continue
+		}
+		drawn = append(drawn, s)
+		if scene := Section(s.Shape, s.Properties, Sized{Title: "section " + s.Title(), Side: 40, Dimensions: true, Units: r.Units()}); scene != nil {
+			out = append(out, scene)
+		}
+	}
+	return out
 }
 
 // words turns the name of a rule into words.

@@ -1,6 +1,8 @@
 package model
 
 import (
+	"fmt"
+
 	"kern/checker/action"
 	"kern/checker/derivation"
 	"kern/lang"
@@ -32,10 +34,12 @@ func (b *builder) basis() {
 		seen := map[string]*lang.Stmt{}
 		for _, s := range d.stmt.Body.Stmts {
 			r := b.reader(declared{d.decl, s})
-			if first := seen[s.Word]; first != nil && s.Word != "show" {
+			if first := seen[sameWord(s.Word)]; first != nil && sameWord(s.Word) == "reduce" {
+				r.reducedTwice(declared{d.decl, first})
+			} else if first != nil && s.Word != "show" {
 				twice(r, first)
 			} else if !s.Broken {
-				seen[s.Word] = s
+				seen[sameWord(s.Word)] = s
 				b.basisStmt(r)
 			}
 			if r.failed && s.Word != "show" {
@@ -43,16 +47,25 @@ func (b *builder) basis() {
 				env.refuse("a line of the basis has an error")
 			}
 		}
+		if basis := &env.Basis; basis.Direct && basis.Standard != "" && len(b.standards.Methods(basis.Standard)) == 0 {
+			r := b.reader(declared{basis.DirectAt.Decl, d.stmt})
+			r.fail("wrong-form", basis.DirectAt.Span, "direct analysis is a method of ANSI/AISC 360; %s has none of that name", basis.Standard)
+			env.refuse("a line of the basis has an error")
+		}
 	}
 }
 
-var basisWords = []string{"standard", "actions", "show", "effective", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental",
+var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental", "moments", "reduce", "reduction",
 	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "xi", "factor_yield", "factor_buckling"}
 
 func (b *builder) basisStmt(r *reader) {
 	basis := &b.env.Basis
 	if value, ok := r.stmt.Assigned(); ok {
 		r.args = value
+		if r.stmt.Word == "reduction" {
+			basis.Reduction, _ = r.reduction()
+			return
+		}
 		b.override(r)
 		return
 	}
@@ -73,6 +86,10 @@ func (b *builder) basisStmt(r *reader) {
 			return
 		}
 		basis.Standard = name
+		if !b.method(r, name, e) {
+			basis.Standard = ""
+			return
+		}
 		if _, ok := r.word("annex"); ok {
 			e := r.peek()
 			annex, ok := r.text("the annex")
@@ -81,6 +98,11 @@ func (b *builder) basisStmt(r *reader) {
 			}
 			basis.Annex = annex
 			known := b.standards.Annexes(name)
+			if len(known) == 0 {
+				basis.Standard = ""
+				r.fail("unknown-annex", e.Span, "%s has no annexes", name)
+				return
+			}
 			found := false
 			for _, k := range known {
 				found = found || k == annex
@@ -119,6 +141,15 @@ func (b *builder) basisStmt(r *reader) {
 				r.fail("unknown-word", e.Span, "strengths come from the \"product standard\" or from \"EN 1993-1-1 Table 3.1\"")
 			}
 		}
+	case "moments":
+		basis.Nominal = r.moments()
+	case "reduce":
+		basis.Reduction, _ = r.reduce()
+	case "reduction":
+		noSign(r)
+	case "stability":
+		w, _ := r.wordOf("the method of stability", "direct", "effective")
+		basis.Direct, basis.DirectAt = w == "direct", r.place(r.stmt.Line)
 	case "amplification":
 		w, _ := r.wordOf("the amplification", "secant", "simple")
 		basis.Simple = w == "simple"
@@ -135,6 +166,39 @@ func (b *builder) basisStmt(r *reader) {
 		return
 	}
 	r.end()
+}
+
+// method reads by which method of a standard strengths are found: "by LRFD". A
+// standard that has methods needs one, since none of them is the usual one.
+func (b *builder) method(r *reader, name string, at *lang.Expr) bool {
+	methods := b.standards.Methods(name)
+	by := r.peek()
+	if len(methods) == 0 {
+		if !by.Is("by") {
+			return true
+		}
+		span := by.Span
+		if r.take(); r.peek() != nil && r.peek().Kind == lang.NameExpr {
+			span = span.Join(r.peek().Span)
+		}
+		r.problem(lang.Problem{Rule: "left-over", Span: span, Message: name + " has one method alone: 'by' does not belong here",
+			Fixes: []lang.Fix{lang.Replace("Remove it", false, span, "")}})
+		return false
+	}
+	if _, ok := r.word("by"); !ok {
+		if r.slip() {
+			return false
+		}
+		p := lang.Problem{Rule: "missing-method", Span: at.Span, Message: fmt.Sprintf("%s is used by one of several methods; say which: by %s", name, lang.OrList(methods))}
+		for _, m := range methods {
+			p.Fixes = append(p.Fixes, lang.Replace("Add by "+m, false, lang.Span{Start: at.Span.End, End: at.Span.End}, " by "+m))
+		}
+		r.problem(p)
+		return false
+	}
+	w, ok := r.wordOf("the method", methods...)
+	b.env.Basis.Method = w
+	return ok
 }
 
 // override reads a number that replaces one of a standard.

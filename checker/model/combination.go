@@ -101,6 +101,13 @@ func (env *Env) widen(made []action.Combination, at []int) []Combination {
 			factors[at[i]] = factor
 		}
 		m.Factors = factors
+		if m.Accompanying != nil {
+			psi := make([]bool, len(env.Cases))
+			for i, p := range m.Accompanying {
+				psi[at[i]] = p
+			}
+			m.Accompanying = psi
+		}
 		out[k] = Combination{Combination: m}
 	}
 	return out

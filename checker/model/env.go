@@ -3,6 +3,7 @@ package model
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"kern/lang"
 )
@@ -17,6 +18,9 @@ type Standards interface {
 	// Annexes lists the annexes of a standard that are known; the first is the
 	// default.
 	Annexes(name string) []string
+	// Methods lists the methods of a standard, of which a basis must state one;
+	// nil when there is one alone.
+	Methods(name string) []string
 	// Overrides lists the numbers of a standard that a basis may replace, with
 	// whether a reason must be given.
 	Overrides(name string) map[string]bool
@@ -37,7 +41,7 @@ type declared struct {
 }
 
 // topWords are the words that may begin a declaration, for offers.
-var topWords = []string{"include", "basis", "material", "section", "case", "combination", "exclusive", "level", "column", "strut", "tie"}
+var topWords = slices.DeleteFunc(lang.WordsIn(lang.InFile), func(w string) bool { return w == "" })
 
 // NewEnv reads what the members of a calculation share.
 func NewEnv(files []*lang.File, standards Standards) *Env {
@@ -46,11 +50,13 @@ func NewEnv(files []*lang.File, standards Standards) *Env {
 	b.late()
 	b.env.offer = namesOf(b.env.Names)
 	b.basis()
+	b.project()
 	b.cases()
 	b.exclusive()
 	b.levels()
 	b.materials()
 	b.sections()
+	b.forces()
 	b.values()
 	b.combinations()
 	return b.env
@@ -65,6 +71,10 @@ func (b *builder) reader(d declared) *reader {
 // collect registers every name, so that definitions may stand in any order.
 func (b *builder) collect() {
 	for _, f := range b.files {
+		if f.Data {
+			b.env.decls = append(b.env.decls, f.Decls...) // its members lean on it
+			continue
+		}
 		for _, d := range f.Decls {
 			member, other := false, false
 			for _, s := range d.Stmts {
@@ -75,7 +85,7 @@ func (b *builder) collect() {
 					b.noBlock(item)
 					continue
 				}
-				if s.Word == "case" || s.Word == "combination" || s.Word == "exclusive" || s.Word == "include" {
+				if s.Word == "case" || s.Word == "combination" || s.Word == "exclusive" || s.Word == "include" || s.Word == "forces" {
 					b.noBlock(item)
 				}
 				switch s.Word {
@@ -91,7 +101,7 @@ func (b *builder) collect() {
 						b.name(item, s.Args[0], kind, -1)
 					}
 					b.stmts = append(b.stmts, item)
-				case "basis", "exclusive":
+				case "basis", "exclusive", "forces", "project":
 					b.stmts = append(b.stmts, item)
 				case "include":
 				case "":

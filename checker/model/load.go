@@ -324,7 +324,7 @@ func (w *memberReader) floor(r *reader, l Load) {
 			continue
 		}
 		f := l
-		f.Case, f.Value = p.Case, p.Value*area
+		f.Case, f.Value, f.Level, f.Area = p.Case, p.Value*area, level, area
 		w.m.Loads = append(w.m.Loads, f)
 		if c := w.env.caseNames[p.Case]; c != nil {
 			w.m.Uses = append(w.m.Uses, c)

@@ -33,7 +33,7 @@ func Members(env *Env, d *lang.Decl, known DepartureRules, results Results) []*M
 
 func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, results Results) []*Member {
 	m := &Member{Decl: d, Stmt: s, NameSpan: s.Head, Kind: map[string]Kind{"column": Column, "strut": Strut, "tie": Tie}[s.Word],
-		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight}
+		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight, Nominal: env.Basis.Nominal, Reduction: env.Basis.Reduction}
 	w := &memberReader{env: env, m: m, known: known, results: results}
 	r := w.reader(d, s)
 	names := memberNames(s)
@@ -83,6 +83,9 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, res
 		c.Name, c.NameSpan = e.Text, e.Span
 		if i > 0 {
 			c.Problems = nil // said once
+		}
+		if in := env.imported[e.Text]; in != nil {
+			c.imports(in)
 		}
 		out = append(out, &c)
 	}
@@ -163,8 +166,11 @@ func (w *memberReader) lookup(e *lang.Expr) (unit.Quantity, *lang.Problem) {
 
 // sameWord groups words that say the same thing in two ways.
 func sameWord(word string) string {
-	if word == "from" || word == "length" {
+	switch word {
+	case "from", "length":
 		return "height"
+	case "reduction":
+		return "reduce"
 	}
 	return word
 }
@@ -201,10 +207,14 @@ func (w *memberReader) statement(d declared) {
 		r.args = value
 	}
 	switch s.Word {
-	case "load", "hold", "lift", "require", "depart", "note", "limit", "effective", "base", "top":
+	case "load", "hold", "lift", "require", "depart", "note", "limit", "effective", "joints", "base", "top":
 	default:
 		key := sameWord(s.Word)
-		if first, again := w.first[key]; again {
+		if first, again := w.first[key]; again && key == "reduce" {
+			r.reducedTwice(first)
+			w.m.Missing = append(w.m.Missing, "how its imposed loads are reduced is said twice")
+			return
+		} else if again {
 			r.problem(lang.Problem{Rule: "value-given-twice", Span: s.Line, Message: "'" + s.Word + "' is given twice",
 				Related: []lang.Related{{Place: lang.Place{Decl: first.decl, Span: first.stmt.Line}, Message: "given here first"}}})
 			w.m.Missing = append(w.m.Missing, "'"+s.Word+"' is given twice")
@@ -212,7 +222,7 @@ func (w *memberReader) statement(d declared) {
 		}
 		w.first[key] = d
 	}
-	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true, "net": true}
+	needsSign := map[string]bool{"section": true, "material": true, "height": true, "length": true, "effective": true, "net": true, "reduction": true}
 	if needsSign[s.Word] != assigned {
 		if needsSign[s.Word] {
 			noSign(r)
@@ -242,6 +252,10 @@ func (w *memberReader) statement(d declared) {
 		w.hold(r)
 	case "effective":
 		w.effective(r)
+	case "joints":
+		w.joints(r)
+	case "connected":
+		w.connected(r)
 	case "load":
 		w.load(r)
 	case "limit":
@@ -257,6 +271,12 @@ func (w *memberReader) statement(d declared) {
 		if text, ok := r.text("the note"); ok {
 			w.m.Notes = append(w.m.Notes, text)
 		}
+	case "moments":
+		w.m.Nominal = r.moments()
+	case "reduce":
+		w.m.Reduction, _ = r.reduce()
+	case "reduction":
+		w.m.Reduction, _ = r.reduction()
 	case "selfweight":
 		word, _ := r.wordOf("the setting of self-weight", "on", "off")
 		w.m.Weight = word != "off"

@@ -22,6 +22,7 @@ type Calculation struct {
 
 // Env is what the members of a calculation share.
 type Env struct {
+	Project      Project
 	Basis        Basis
 	Names        map[string]*Named
 	Cases        []*Case
@@ -55,6 +56,8 @@ type Env struct {
 	service     func() []Combination // made when they are asked for first
 
 	offer     map[NameKind][]string // the names of each kind, for offers
+	imported  map[string]*Imported  // by member
+	unread    []string              // forces statements whose tables could not be read
 	late      []*lang.Value         // values that lean on results of members
 	settled   map[*lang.Value]unit.Quantity
 	results   Results
@@ -99,6 +102,7 @@ type Basis struct {
 	Place       lang.Place
 	Standard    string // "" when not stated
 	StandardAt  lang.Place
+	Method      string // of a standard that has several: "LRFD" or "ASD"
 	Annex       string
 	Actions     string // "" when not stated
 	Equation    string
@@ -108,6 +112,10 @@ type Basis struct {
 	Recommended bool                // effective lengths: recommended design values
 	SelfWeight  bool
 	TableFy     bool // strengths from EN 1993-1-1 Table 3.1 rather than the product standard
+	Nominal     bool // moments of loads off the centroid are nominal ones
+	Reduction   Reduction
+	Direct      bool // stability by the direct analysis method of ANSI/AISC 360 chapter C
+	DirectAt    lang.Place
 	Simple      bool // amplification 1/(1 - N/N_cr) for every moment diagram
 }
 
@@ -263,9 +271,14 @@ type Member struct {
 	Levels    bool    // it stands between levels: From is known
 	Base, Top [2]action.End
 	Holds     []Hold
-	Factor    [3]float64 // effective length factors of the user: major, minor, twist; 0 for none
+	Joints    [2]*action.Joints // stiffness ratios of rigid joints: major, minor; nil for none
+	Leg       Leg               // the leg by which a single angle is connected
+	Factor    [3]float64        // effective length factors of the user: major, minor, twist; 0 for none
 	Loads     []Load
-	Weight    bool // self-weight counts
+	Imported  *Imported // forces from a table in place of loads; nil for none
+	Weight    bool      // self-weight counts
+	Nominal   bool      // moments of loads off the centroid are those of simple construction
+	Reduction Reduction
 
 	Limits   Limits
 	Requires []Require
@@ -280,6 +293,16 @@ type Member struct {
 
 	Problems []lang.Diagnostic
 }
+
+// Leg is the leg by which a single angle is connected at both ends.
+type Leg struct {
+	Long, Short bool
+	Space       bool // web member of a box or space truss
+	Place       lang.Place
+}
+
+// Stated tells whether the member is an angle that is connected by one leg.
+func (l Leg) Stated() bool { return l.Long || l.Short }
 
 // Hold is a point between the ends where the member is restrained.
 type Hold struct {
@@ -309,7 +332,11 @@ type Load struct {
 	// Offset is the distance of an axial load from the centroid: it bends the
 	// member about the major and the minor axis, m.
 	Offset [2]float64
-	Place  lang.Place
+	// Level and Area are the floor that an axial load comes from, m2; nil for a
+	// load that is given as a force.
+	Level *Level
+	Area  float64
+	Place lang.Place
 }
 
 // Limits are the bounds that a calculation sets itself; zero for none.

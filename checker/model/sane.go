@@ -6,6 +6,7 @@ import (
 	"sort"
 	"strings"
 
+	"kern/checker/action"
 	"kern/lang"
 	"kern/lang/unit"
 )
@@ -42,7 +43,12 @@ func (w *memberReader) complete() {
 		m.Height = unknown
 		missing("height = 3 m", "height")
 	}
-	if s := m.Section; s != nil && m.Net > s.Area*(1+1e-9) {
+	w.nominalPlaces()
+	for _, l := range m.Parts() {
+		s := l.Section
+		if s == nil || !(m.Net > s.Area*(1+1e-9)) {
+			continue
+		}
 		at := m.NetAt
 		if at.Decl != m.Decl { // a line that is taken over is right where it stands
 			at = lang.Place{Decl: m.Decl, Span: m.NameSpan}
@@ -50,6 +56,7 @@ func (w *memberReader) complete() {
 		m.Problems = append(m.Problems, lang.Diagnostic{Decl: at.Decl, Problem: lang.Problem{Rule: "impossible-value", Span: at.Span,
 			Message: fmt.Sprintf("the net area of %s cm2 is more than that of the section %s, %s cm2: holes leave no more than the whole area", unit.Short(m.Net*1e4, 4), s.Title(), unit.Short(s.Area*1e4, 4))}})
 		m.Missing = append(m.Missing, "its net area cannot be")
+		break
 	}
 	sort.SliceStable(m.Holds, func(i, j int) bool { return m.Holds[i].At < m.Holds[j].At })
 	for _, a := range []Axis{Major, Minor} {
@@ -67,11 +74,15 @@ func (w *memberReader) complete() {
 	if len(m.Assumed) == 2 && strings.TrimSuffix(m.Assumed[0], "major") == strings.TrimSuffix(m.Assumed[1], "minor") {
 		m.Assumed = []string{strings.TrimSuffix(m.Assumed[0], " about major")}
 	}
+	w.fits()
 	if m.Kind != Column && m.Weight {
 		m.Weight = false
 		m.Assumed = append(m.Assumed, "self-weight of the "+m.Kind.String()+" not counted (its slope is not known)")
 	}
-	if len(m.Loads) == 0 && len(m.Missing) == 0 {
+	if unread := w.env.unread; len(m.Loads) == 0 && len(unread) > 0 && !w.tabled() {
+		m.Missing = append(m.Missing, "its forces may stand in a table that could not be read: "+clip(unread[0]))
+	}
+	if len(m.Loads) == 0 && len(m.Missing) == 0 && !w.tabled() {
 		m.Problems = append(m.Problems, lang.Diagnostic{Decl: m.Decl, Problem: lang.Problem{Rule: "member-without-load", Severity: lang.Warning, Span: m.NameSpan,
 			Message: "the " + m.Kind.String() + " carries no load"}})
 	}
@@ -106,4 +117,49 @@ func (w *memberReader) sane() {
 				Message: fmt.Sprintf("a load of %s N is next to nothing for this section: is the unit meant?", unit.Short(v, 3))}})
 		}
 	}
+}
+
+// nominalPlaces looks for loads off the centroid where nothing holds the member:
+// they have no nominal moments.
+func (w *memberReader) nominalPlaces() {
+	m := w.m
+	if !m.Nominal || math.IsNaN(m.Height) || len(m.Missing) > 0 {
+		return
+	}
+	for _, l := range m.Loads {
+		for a, e := range l.Offset {
+			if l.Kind != AxialLoad || e == 0 || w.held(Axis(a), l.At) {
+				continue
+			}
+			m.Missing = append(m.Missing, "a load with a nominal moment comes in where nothing holds it")
+			p := lang.Problem{Rule: "nominal-without-hold", Span: l.Place.Span,
+				Message: fmt.Sprintf("the load is off the centroid about %s at %s, where nothing holds the member about that axis: it has no nominal moment there", Axis(a), w.env.PlaceName(m, l.At)),
+				Notes:   []string{"hold the member there, or say moments continuous"}}
+			d := lang.Diagnostic{Decl: l.Place.Decl, Problem: p}
+			if d.Decl != m.Decl { // a line that is taken over is right where it stands
+				d = lang.Diagnostic{Decl: m.Decl, Problem: p}
+				d.Span, d.Related = w.asSpan, []lang.Related{{Place: l.Place, Message: "the line"}}
+			}
+			m.Problems = append(m.Problems, d)
+			return
+		}
+	}
+}
+
+// held tells whether the member is held in place about an axis at a height.
+func (w *memberReader) held(a Axis, z float64) bool {
+	m := w.m
+	keeps := func(e action.End) bool { return e == action.Pinned || e == action.Fixed }
+	switch {
+	case z <= 1e-9*m.Height:
+		return keeps(m.Base[a])
+	case z >= m.Height*(1-1e-9):
+		return keeps(m.Top[a])
+	}
+	for _, h := range m.Holds {
+		if (a == Major && h.Major || a == Minor && h.Minor) && math.Abs(h.At-z) <= 1e-6*m.Height {
+			return true
+		}
+	}
+	return false
 }

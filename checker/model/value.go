@@ -13,7 +13,7 @@ func (b *builder) value(d declared, value []*lang.Expr) {
 	if contains(topWords, s.Word) {
 		if !s.Broken {
 			p := lang.Problem{Rule: "wrong-form", Span: s.Head, Message: "a declared " + s.Word + " has a name: " + s.Word + " NAME = …"}
-			if s.Word == "include" || s.Word == "basis" {
+			if s.Word == "include" || s.Word == "basis" || s.Word == "forces" || s.Word == "project" {
 				p.Message = "'" + s.Word + "' takes no sign ="
 			}
 			if contains(memberWords, s.Word) {

@@ -1,6 +1,8 @@
 package output
 
 import (
+	"fmt"
+
 	"kern/checker"
 	"kern/checker/derivation"
 	"kern/checker/model"
@@ -9,6 +11,10 @@ import (
 
 // Loads writes the table of what a member carries, its own weight included.
 func Loads(p *Page, r *checker.Result) {
+	if in := r.Member.Imported; in != nil {
+		p.Text(Words(fmt.Sprintf("Forces from the table '%s': %d combinations.", in.Table, len(in.Combinations))))
+		return
+	}
 	units, cases := r.Units(), r.Env().Cases
 	var rows [][]Line
 	for _, l := range r.Member.Loads {
@@ -17,7 +23,7 @@ func Loads(p *Page, r *checker.Result) {
 	if w := r.OwnWeight(); w > 0 {
 		rows = append(rows, []Line{Words(cases[r.Env().SelfWeight].Name), Words("along, the member's own weight"), Words(units.Show(w, unit.Force, 4)), Words("over its height")})
 	}
-	p.Table([]string{"case", "acts", "value", "at"}, "llrl", rows)
+	p.Table([]string{"case", "acts", "value", "at"}, "llnl", rows)
 }
 
 // Acts says how a load acts.

@@ -1,69 +1,102 @@
 package output
 
-import (
-	"encoding/base64"
-	"fmt"
-	"strings"
-
-	"github.com/mattn/go-runewidth"
-)
-
-// Page is a text for people that is composed once and printed in one of two
-// forms: as Markdown, or as plain text for whoever shows no Markdown. What a
-// calculation says (titles, reasons, names) can do nothing to the form.
+// Page is a text for people that is composed once, block by block, and printed in
+// several forms: as Markdown, as plain text for whoever shows no Markdown, and by
+// the printed sheet as HTML and PDF. What a calculation says (titles, reasons,
+// names) can do nothing to the form.
 type Page struct {
-	b     strings.Builder
-	plain bool
+	blocks []Block
+	plain  bool
 }
 
 // NewPage begins a page in Markdown, or in plain text.
 func NewPage(markdown bool) *Page { return &Page{plain: !markdown} }
 
-// String is the page as it is so far; it ends with one line end unless it is
-// empty.
-func (p *Page) String() string {
-	if s := strings.TrimRight(p.b.String(), "\n"); s != "" {
-		return s + "\n"
-	}
-	return ""
-}
-
 // Empty tells whether nothing was written yet.
-func (p *Page) Empty() bool { return p.b.Len() == 0 }
+func (p *Page) Empty() bool { return len(p.blocks) == 0 }
 
-// Line is a run of words in several styles.
-type Line []part
+// Blocks are what was written, in order.
+func (p *Page) Blocks() []Block { return p.blocks }
 
-type part struct {
-	style style
-	text  string
-	to    string // the address that a link leads to
+// Block is a part of a page: one of the types below.
+type Block any
+
+// The blocks of a page.
+type (
+	// Heading is a heading of level 1 to 4.
+	Heading struct {
+		Level int
+		Text  string
+	}
+	// Paragraph is a paragraph.
+	Paragraph struct{ Text Line }
+	// List is a list of lines.
+	List struct{ Items []Line }
+	// Source is text of the language on lines of its own.
+	Source struct{ Text string }
+	// Picture is an SVG picture with the words for whoever cannot see it.
+	Picture struct{ Alt, SVG string }
+	// Table is a table. Align has a letter for each column: l left, r right, n
+	// numbers that stand on their decimal points.
+	Table struct {
+		Head  []string
+		Align string
+		Rows  [][]Line
+	}
+	// Equations are the computed steps of a derivation.
+	Equations struct{ Steps []Equation }
+	// Fold begins a part that is shown when it is asked for, Unfold ends it.
+	Fold   struct{ Summary string }
+	Unfold struct{}
+)
+
+// Equation is a computed step of a derivation, in the language's own expressions:
+// put into the language, Numbers gives Value.
+type Equation struct {
+	What, Clause string
+	Symbol       string
+	Formula      string // "" where nothing is computed
+	Numbers      string // the formula with its numbers put in, "" where that says nothing new
+	Value        string // with its unit
+	Note         string // a remark instead of all this
 }
 
-type style uint8
+// Line is a run of words in several faces.
+type Line []Part
 
+// Part is words in one face.
+type Part struct {
+	Face Face
+	Text string
+	To   string // the address that a Linked part leads to
+}
+
+// Face is how words look.
+type Face uint8
+
+// The faces of words.
 const (
-	ordinary style = iota
-	strong
-	code
-	newLine
-	link
+	Ordinary Face = iota
+	Bold
+	Mono    // text of the language
+	NewLine // no words: the next line of the same paragraph
+	Linked  // words that lead to an address
 )
 
 // Words are ordinary words; nothing in them is taken for a mark.
-func Words(s string) Line { return Line{{ordinary, s, ""}} }
+func Words(s string) Line { return Line{{Face: Ordinary, Text: s}} }
 
 // Strong are words that stand out.
-func Strong(s string) Line { return Line{{strong, s, ""}} }
+func Strong(s string) Line { return Line{{Face: Bold, Text: s}} }
 
 // Code is text of the language: a symbol, a formula, a name.
-func Code(s string) Line { return Line{{code, s, ""}} }
+func Code(s string) Line { return Line{{Face: Mono, Text: s}} }
 
 // Link are words that lead to an address. Plain text shows the words alone.
-func Link(s, address string) Line { return Line{{link, s, address}} }
+func Link(s, address string) Line { return Line{{Linked, s, address}} }
 
 // Break goes on in the next line of the same paragraph.
-func Break() Line { return Line{{newLine, "", ""}} }
+func Break() Line { return Line{{Face: NewLine}} }
 
 // Join puts lines one behind the other.
 func Join(lines ...Line) Line {
@@ -74,267 +107,57 @@ func Join(lines ...Line) Line {
 	return out
 }
 
-// gap begins a new block: an empty line unless the page is still empty.
-func (p *Page) gap() {
-	if p.b.Len() > 0 {
-		p.b.WriteByte('\n')
+// String is the words of a line alone.
+func (l Line) String() string {
+	out := ""
+	for _, x := range l {
+		if x.Face == NewLine {
+			out += "; "
+		}
+		out += x.Text
 	}
+	return out
 }
+
+func (p *Page) add(b Block) { p.blocks = append(p.blocks, b) }
+
+// Add puts blocks of other pages behind what was written.
+func (p *Page) Add(b ...Block) { p.blocks = append(p.blocks, b...) }
 
 // Head writes a heading of level 1 to 4.
-func (p *Page) Head(level int, text string) {
-	p.gap()
-	if !p.plain {
-		p.b.WriteString(strings.Repeat("#", min(max(level, 1), 4)) + " ")
-	}
-	p.b.WriteString(p.render(Words(text), "", false) + "\n")
-}
+func (p *Page) Head(level int, text string) { p.add(Heading{min(max(level, 1), 4), text}) }
 
 // Text writes a paragraph.
-func (p *Page) Text(lines ...Line) {
-	p.gap()
-	s := p.render(Join(lines...), "", false)
-	if !p.plain {
-		s = guardStart(s)
-	}
-	p.b.WriteString(s + "\n")
-}
+func (p *Page) Text(lines ...Line) { p.add(Paragraph{Join(lines...)}) }
 
 // List writes a list.
 func (p *Page) List(items ...Line) {
-	if len(items) == 0 {
-		return
-	}
-	p.gap()
-	for _, l := range items {
-		s := p.render(l, "  ", false)
-		if !p.plain {
-			s = guardStart(s)
-		}
-		p.b.WriteString("- " + s + "\n")
+	if len(items) > 0 {
+		p.add(List{items})
 	}
 }
 
 // Block writes text of the language on lines of its own.
-func (p *Page) Block(text string) {
-	p.gap()
-	text = strings.TrimRight(clean(text, true), "\n")
-	if p.plain {
-		for line := range strings.SplitSeq(text, "\n") {
-			p.b.WriteString(strings.TrimRight("    "+line, " ") + "\n")
-		}
-		return
-	}
-	fence := "```"
-	for strings.Contains(text, fence) {
-		fence += "`"
-	}
-	p.b.WriteString(fence + "kern\n" + text + "\n" + fence + "\n")
-}
+func (p *Page) Block(text string) { p.add(Source{text}) }
 
 // Picture shows an SVG picture; plain text shows none.
 func (p *Page) Picture(alt, svg string) {
-	if p.plain || svg == "" {
-		return
+	if svg != "" {
+		p.add(Picture{alt, svg})
 	}
-	p.gap()
-	p.b.WriteString("![" + escape(alt, false) + "](data:image/svg+xml;base64," + base64.StdEncoding.EncodeToString([]byte(svg)) + ")\n")
 }
 
-// Table writes a table. align has a letter for each column: l or r. Plain text
+// Table writes a table. align has a letter for each column: l, r or n. Plain text
 // leaves out a head whose words are all empty.
 func (p *Page) Table(head []string, align string, rows [][]Line) {
-	if len(rows) == 0 {
-		return
-	}
-	p.gap()
-	cells := make([][]string, 0, len(rows)+1)
-	top, empty := make([]string, len(head)), true
-	for i, h := range head {
-		top[i] = p.render(Words(h), "", true)
-		empty = empty && h == ""
-	}
-	cells = append(cells, top)
-	for _, row := range rows {
-		line := make([]string, len(head))
-		for i := range head {
-			if i < len(row) {
-				line[i] = p.render(row[i], "", true)
-			}
-		}
-		cells = append(cells, line)
-	}
-	width := make([]int, len(head))
-	for i := range head {
-		width[i] = 1
-		if !p.plain {
-			width[i] = 3
-		}
-		for _, row := range cells {
-			width[i] = max(width[i], runewidth.StringWidth(row[i]))
-		}
-	}
-	for r, row := range cells {
-		if r == 0 && p.plain && empty {
-			continue
-		}
-		p.row(row, width, align)
-		if r == 0 && !p.plain {
-			p.b.WriteByte('|')
-			for i, w := range width {
-				if align[i] == 'r' {
-					p.b.WriteString(strings.Repeat("-", w+1) + ":|")
-				} else {
-					p.b.WriteString(strings.Repeat("-", w+2) + "|")
-				}
-			}
-			p.b.WriteByte('\n')
-		}
+	if len(rows) > 0 {
+		p.add(Table{head, align, rows})
 	}
 }
 
-func (p *Page) row(row []string, width []int, align string) {
-	var b strings.Builder
-	for i, c := range row {
-		room := strings.Repeat(" ", width[i]-runewidth.StringWidth(c))
-		if align[i] == 'r' {
-			c = room + c
-		} else {
-			c += room
-		}
-		switch {
-		case !p.plain:
-			b.WriteString("| " + c + " ")
-		case i > 0:
-			b.WriteString("  " + c)
-		default:
-			b.WriteString(c)
-		}
+// Equations writes the computed steps of a derivation.
+func (p *Page) Equations(steps []Equation) {
+	if len(steps) > 0 {
+		p.add(Equations{steps})
 	}
-	if !p.plain {
-		b.WriteByte('|')
-	}
-	p.b.WriteString(strings.TrimRight(b.String(), " ") + "\n")
-}
-
-// render writes a line in the form of the page. indent goes before what a break
-// puts on a new line.
-func (p *Page) render(l Line, indent string, cell bool) string {
-	var b strings.Builder
-	for _, x := range l {
-		text := clean(x.text, false)
-		switch {
-		case x.style == newLine && cell:
-			b.WriteString("; ")
-		case x.style == newLine && p.plain:
-			b.WriteString("\n" + indent)
-		case x.style == newLine:
-			b.WriteString("  \n" + indent)
-		case text == "":
-		case p.plain:
-			b.WriteString(text)
-		case x.style == link:
-			b.WriteString("[" + strings.ReplaceAll(escape(text, cell), "]", `\]`) + "](" + address(x.to) + ")")
-		case x.style == code:
-			b.WriteString(codeSpan(text, cell))
-		case x.style == strong:
-			b.WriteString("**" + escape(text, cell) + "**")
-		default:
-			b.WriteString(escape(text, cell))
-		}
-	}
-	return b.String()
-}
-
-// clean turns line ends and control characters into blanks, and those that turn
-// the direction of writing, so that no text can write over another.
-func clean(s string, lines bool) string {
-	return strings.Map(func(r rune) rune {
-		switch {
-		case r == '\n' && lines:
-			return r
-		case r < 32 || r == 127 || r >= 0x80 && r < 0xa0:
-			return ' '
-		case r == 0x202d || r == 0x202e || r >= 0x2066 && r <= 0x2069 || r == 0x2028 || r == 0x2029:
-			return ' '
-		}
-		return r
-	}, s)
-}
-
-// escape writes words so that Markdown shows them as they are, with as few marks
-// as that takes: pages are read as text too.
-func escape(s string, cell bool) string {
-	var b strings.Builder
-	letter := func(i int) bool {
-		if i < 0 || i >= len(s) {
-			return false
-		}
-		c := s[i]
-		return c >= '0' && c <= '9' || c >= 'a' && c <= 'z' || c >= 'A' && c <= 'Z' || c >= 0x80
-	}
-	for i := 0; i < len(s); i++ {
-		mark := false
-		switch c := s[i]; c {
-		case '\\', '`', '*', '[', '~':
-			mark = true
-		case '_':
-			mark = !letter(i-1) || !letter(i+1) // inside a word it is a letter
-		case '<':
-			mark = letter(i+1) || i+1 < len(s) && strings.IndexByte("/!?", s[i+1]) >= 0
-		case '&':
-			mark = letter(i+1) || i+1 < len(s) && s[i+1] == '#'
-		case '|':
-			mark = cell
-		}
-		if mark {
-			b.WriteByte('\\')
-		}
-		b.WriteByte(s[i])
-	}
-	return b.String()
-}
-
-// codeSpan writes text between as many backticks as it takes.
-func codeSpan(s string, cell bool) string {
-	if cell {
-		s = strings.ReplaceAll(s, "|", `\|`)
-	}
-	fence, gap := "`", ""
-	for strings.Contains(s, fence) {
-		fence, gap = fence+"`", " "
-	}
-	return fence + gap + s + gap + fence
-}
-
-// address writes an address so that it ends where it ends.
-func address(s string) string {
-	var b strings.Builder
-	for i := 0; i < len(s); i++ {
-		switch c := s[i]; {
-		case c <= ' ' || c >= 0x7f || strings.IndexByte("<>()|\\`\"", c) >= 0:
-			fmt.Fprintf(&b, "%%%02X", c)
-		default:
-			b.WriteByte(c)
-		}
-	}
-	return b.String()
-}
-
-// guardStart keeps the first letters of a paragraph from being taken for the mark
-// of a heading, a list or a quotation.
-func guardStart(s string) string {
-	if s == "" {
-		return s
-	}
-	switch c := s[0]; {
-	case c == '#' || c == '>' || (c == '-' || c == '+') && (len(s) == 1 || s[1] == ' ' || s[1] == c):
-		return `\` + s
-	case c >= '0' && c <= '9':
-		n := len(s) - len(strings.TrimLeft(s, "0123456789"))
-		if n < len(s) && (s[n] == '.' || s[n] == ')') && (n+1 == len(s) || s[n+1] == ' ') {
-			return s[:n] + `\` + s[n:]
-		}
-	}
-	return s
 }

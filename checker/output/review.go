@@ -29,32 +29,6 @@ type ReviewForm struct {
 	Program string
 }
 
-// sheet is what a review is composed on.
-type sheet interface {
-	Head(level int, text string)
-	Text(lines ...Line)
-	List(items ...Line)
-	Table(head []string, align string, rows [][]Line)
-	fold(summary string)
-	unfold()
-}
-
-// fold begins a part that Markdown shows when it is asked for.
-func (p *Page) fold(summary string) {
-	p.gap()
-	if p.plain {
-		p.b.WriteString(clean(summary, false) + ":\n")
-		return
-	}
-	p.b.WriteString("<details><summary>" + escapeHTML(clean(summary, false)) + "</summary>\n")
-}
-
-func (p *Page) unfold() {
-	if !p.plain {
-		p.b.WriteString("\n</details>\n")
-	}
-}
-
 // ReviewPage is a review as a page: in Markdown, or as plain text.
 func ReviewPage(r *review.Review, f ReviewForm, markdown bool) string {
 	p := NewPage(markdown)
@@ -65,7 +39,7 @@ func ReviewPage(r *review.Review, f ReviewForm, markdown bool) string {
 type reviewing struct {
 	r *review.Review
 	f ReviewForm
-	sheet
+	*Page
 	narrow bool // tables are to fit on a terminal
 }
 
@@ -472,7 +446,7 @@ func (w *reviewing) changed() {
 	if len(little) > 0 {
 		w.Text(Words("Utilisation changed by less than 0.005, or other checks alone: " + w.names(little) + "."))
 	}
-	w.fold("What each edit did, member by member")
+	w.Add(Fold{"What each edit did, member by member"})
 	for i, x := range all {
 		if w.f.Rows > 0 && i == w.f.Rows {
 			w.Text(Words(fmt.Sprintf("And %d more.", len(all)-i)))
@@ -480,7 +454,7 @@ func (w *reviewing) changed() {
 		}
 		w.detail(x)
 	}
-	w.unfold()
+	w.Add(Unfold{})
 }
 
 // ChangePage writes what changed of one member, and which edits did it.

@@ -8,14 +8,15 @@ import (
 	"kern/checker/review"
 )
 
-func escapeHTML(s string) string { return html.EscapeString(s) }
-
 // ReviewHTML is a review as a page for a browser. It needs nothing but itself.
 func ReviewHTML(r *review.Review, f ReviewForm) string {
-	p := &htmlPage{}
-	w := &reviewing{r, f, p, false}
+	w := &reviewing{r, f, NewPage(true), false}
 	w.compose()
-	title := escapeHTML(w.headline())
+	p := &htmlPage{}
+	for _, b := range w.Blocks() {
+		p.block(b)
+	}
+	title := html.EscapeString(w.headline())
 	return "<!DOCTYPE html>\n<html lang=\"en\">\n<head>\n<meta charset=\"utf-8\">\n<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\">\n<title>" + title +
 		"</title>\n<style>\n" + reviewStyle + "</style>\n</head>\n<body>\n<main>\n" + p.b.String() + "</main>\n</body>\n</html>\n"
 }
@@ -34,22 +35,22 @@ summary { cursor: pointer; margin: 1rem 0; font-weight: 600; }
 @media print { details { display: block; } }
 `
 
-// htmlPage is a sheet of HTML.
+// htmlPage writes the blocks of a review in HTML.
 type htmlPage struct{ b strings.Builder }
 
 func (p *htmlPage) line(l Line) string {
 	var b strings.Builder
 	for _, x := range l {
-		text := escapeHTML(clean(x.text, false))
-		switch x.style {
-		case newLine:
+		text := html.EscapeString(clean(x.Text, false))
+		switch x.Face {
+		case NewLine:
 			b.WriteString("<br>")
-		case strong:
+		case Bold:
 			b.WriteString("<strong>" + text + "</strong>")
-		case code:
+		case Mono:
 			b.WriteString("<code>" + text + "</code>")
-		case link:
-			b.WriteString(`<a href="` + escapeHTML(address(x.to)) + `">` + text + "</a>")
+		case Linked:
+			b.WriteString(`<a href="` + html.EscapeString(address(x.To)) + `">` + text + "</a>")
 		default:
 			b.WriteString(text)
 		}
@@ -57,36 +58,40 @@ func (p *htmlPage) line(l Line) string {
 	return b.String()
 }
 
-func (p *htmlPage) Head(level int, text string) {
-	fmt.Fprintf(&p.b, "<h%d>%s</h%d>\n", level, escapeHTML(clean(text, false)), level)
+func (p *htmlPage) block(b Block) {
+	switch b := b.(type) {
+	case Heading:
+		fmt.Fprintf(&p.b, "<h%d>%s</h%d>\n", b.Level, html.EscapeString(clean(b.Text, false)), b.Level)
+	case Paragraph:
+		p.b.WriteString("<p>" + p.line(b.Text) + "</p>\n")
+	case List:
+		p.b.WriteString("<ul>\n")
+		for _, l := range b.Items {
+			p.b.WriteString("<li>" + p.line(l) + "</li>\n")
+		}
+		p.b.WriteString("</ul>\n")
+	case Table:
+		p.table(b)
+	case Fold:
+		p.b.WriteString("<details><summary>" + html.EscapeString(b.Summary) + "</summary>\n")
+	case Unfold:
+		p.b.WriteString("</details>\n")
+	}
 }
 
-func (p *htmlPage) Text(lines ...Line) { p.b.WriteString("<p>" + p.line(Join(lines...)) + "</p>\n") }
-
-func (p *htmlPage) List(items ...Line) {
-	if len(items) == 0 {
-		return
-	}
-	p.b.WriteString("<ul>\n")
-	for _, l := range items {
-		p.b.WriteString("<li>" + p.line(l) + "</li>\n")
-	}
-	p.b.WriteString("</ul>\n")
-}
-
-func (p *htmlPage) Table(head []string, align string, rows [][]Line) {
+func (p *htmlPage) table(t Table) {
 	class := func(i int) string {
-		if align[i] == 'r' {
+		if t.Align[i] == 'r' {
 			return ` class="r"`
 		}
 		return ""
 	}
 	p.b.WriteString("<div class=\"wide\"><table>\n<thead><tr>")
-	for i, h := range head {
-		p.b.WriteString("<th scope=\"col\"" + class(i) + ">" + escapeHTML(h) + "</th>")
+	for i, h := range t.Head {
+		p.b.WriteString("<th scope=\"col\"" + class(i) + ">" + html.EscapeString(h) + "</th>")
 	}
 	p.b.WriteString("</tr></thead>\n<tbody>\n")
-	for _, row := range rows {
+	for _, row := range t.Rows {
 		p.b.WriteString("<tr>")
 		for i, l := range row {
 			p.b.WriteString("<td" + class(i) + ">" + p.line(l) + "</td>")
@@ -95,9 +100,3 @@ func (p *htmlPage) Table(head []string, align string, rows [][]Line) {
 	}
 	p.b.WriteString("</tbody>\n</table></div>\n")
 }
-
-func (p *htmlPage) fold(summary string) {
-	p.b.WriteString("<details><summary>" + escapeHTML(summary) + "</summary>\n")
-}
-
-func (p *htmlPage) unfold() { p.b.WriteString("</details>\n") }

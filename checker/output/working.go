@@ -36,27 +36,33 @@ func Working(p *Page, r *checker.Result, rule string) {
 	if record != nil {
 		p.Head(2, "Loads")
 		Loads(p, r)
-		for _, lift := range liftsOf(record) {
-			title := "Values that the checks share"
-			if lift != "" {
-				title += ", lift " + lift
-			}
-			if steps := shared(record, lift); len(steps) > 0 {
-				p.Head(2, title)
-				Steps(p, record.Set, r.Units(), steps)
-			}
-		}
-		for _, name := range rulesOf(r, record) {
-			p.Head(2, name)
-			verdictOf(p, r, name)
-			Steps(p, record.Set, r.Units(), own(record, name))
-		}
+		AllWorking(p, r, record)
 	}
 	Coverage(p, r)
 	Assumptions(p, r)
 	Departures(p, r)
 	Notes(p, r)
 	p.Text(Words(Caution))
+}
+
+// AllWorking writes the working of every check, step by step: first the values
+// that they share.
+func AllWorking(p *Page, r *checker.Result, record *derivation.Record) {
+	for _, lift := range liftsOf(record) {
+		title := "Values that the checks share"
+		if lift != "" {
+			title += ", lift " + lift
+		}
+		if steps := shared(record, lift); len(steps) > 0 {
+			p.Head(2, title)
+			Steps(p, record.Set, r.Units(), steps)
+		}
+	}
+	for _, name := range rulesOf(r, record) {
+		p.Head(2, name)
+		verdictOf(p, r, name)
+		Steps(p, record.Set, r.Units(), own(record, name))
+	}
 }
 
 // CheckWorking writes the working of one check below a heading of the given
@@ -97,6 +103,9 @@ func MemberHead(p *Page, r *checker.Result) {
 	}
 	basis := r.Env().Basis
 	text := r.Standard
+	if text != "" && basis.Method != "" {
+		text += " by " + basis.Method
+	}
 	if text != "" && basis.Annex != "" {
 		text += ", annex " + basis.Annex
 	}
@@ -193,7 +202,7 @@ func MaterialTitle(m *model.Material) string {
 // Checks writes the table of a member's checks.
 func Checks(p *Page, r *checker.Result) {
 	var rows [][]Line
-	head, align := []string{"check", "utilisation", "demand", "capacity", "verdict", "clause", "under"}, "lrrrlll"
+	head, align := []string{"check", "utilisation", "demand", "capacity", "verdict", "clause", "under"}, "lnnnlll"
 	lifts := slices.ContainsFunc(r.Checks, func(c standard.Check) bool { return c.Lift != "" })
 	if lifts {
 		head, align = append(head, "lift"), align+"l"
@@ -332,42 +341,64 @@ func shared(record *derivation.Record, lift string) []derivation.Step {
 // then what is computed, a step an item.
 func Steps(p *Page, set *derivation.Set, units derivation.Units, steps []derivation.Step) {
 	var rows [][]Line
-	var items []Line
+	var items []Equation
 	for _, s := range steps {
-		switch {
-		case s.Note != "":
-			items = append(items, Words(s.Note))
-		case s.Formula == nil:
+		if s.Note == "" && s.Formula == nil {
 			sym := set.At(s.Symbol)
 			rows = append(rows, []Line{Code(sym.Name), Words(sym.What), Words(Value(units, s.Value, sym.Dim)), Words(s.Clause)})
-		default:
-			items = append(items, StepLine(set, units, s))
+			continue
 		}
+		items = append(items, StepEquation(set, units, s))
 	}
-	p.Table([]string{"symbol", "is", "value", "from"}, "llrl", rows)
-	p.List(items...)
+	p.Table([]string{"symbol", "is", "value", "from"}, "llnl", rows)
+	p.Equations(items)
 }
 
-// StepLine writes a step of a derivation: what it is with its clause, then
-// symbol, formula, formula with the numbers put in, and result with its unit.
-// Put into the language, the numbers give the result.
-func StepLine(set *derivation.Set, units derivation.Units, s derivation.Step) Line {
+// StepEquation is a step of a derivation in words and in the language's own
+// expressions.
+func StepEquation(set *derivation.Set, units derivation.Units, s derivation.Step) Equation {
 	if s.Note != "" {
-		return Words(s.Note)
+		return Equation{Note: s.Note}
 	}
 	sym := set.At(s.Symbol)
-	head := sym.What
-	if s.Clause != "" {
-		head += " · " + s.Clause
-	}
-	equation := sym.Name
+	out := Equation{What: sym.What, Clause: s.Clause, Symbol: sym.Name, Value: Value(units, s.Value, sym.Dim)}
 	if s.Formula != nil {
-		equation += " = " + s.Formula.Text
+		out.Formula = s.Formula.Text
 		if numbers := tidy(s.Numbers(set, units, derivation.Digits)); numbers != s.Formula.Text {
-			equation += " = " + numbers
+			out.Numbers = numbers
 		}
 	}
-	return Join(Words(head), Break(), Code(equation), Words(" = "), Strong(Value(units, s.Value, sym.Dim)))
+	return out
+}
+
+// Line writes an equation: what it is with its clause, then symbol, formula,
+// formula with the numbers put in, and result with its unit.
+func (e Equation) Line() Line {
+	if e.Note != "" {
+		return Words(e.Note)
+	}
+	head := e.What
+	if e.Clause != "" {
+		head += " · " + e.Clause
+	}
+	return Join(Words(head), Break(), Code(e.Text()), Words(" = "), Strong(e.Value))
+}
+
+// Text is the equation as text of the language, without its result.
+func (e Equation) Text() string {
+	out := e.Symbol
+	if e.Formula != "" {
+		out += " = " + e.Formula
+		if e.Numbers != "" {
+			out += " = " + e.Numbers
+		}
+	}
+	return out
+}
+
+// StepLine writes a step of a derivation on a line, as Equation.Line does.
+func StepLine(set *derivation.Set, units derivation.Units, s derivation.Step) Line {
+	return StepEquation(set, units, s).Line()
 }
 
 // Value writes a value as derivations show it: no more digits than it takes.

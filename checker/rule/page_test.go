@@ -8,6 +8,7 @@ import (
 
 	"kern/checker/derivation"
 	"kern/checker/rule"
+	"kern/checker/standard/aisc360"
 	"kern/checker/standard/elastic"
 	"kern/checker/standard/en1993"
 	"kern/lang"
@@ -58,7 +59,7 @@ func TestPages(t *testing.T) {
 // reader. The equation of a symbol that a standard of the program computes must
 // be, letter for letter, one that it computes it by.
 func TestEquations(t *testing.T) {
-	sets := []*derivation.Set{elastic.Standard{}.Symbols(), en1993.Standard{}.Symbols()}
+	sets := []*derivation.Set{elastic.Standard{}.Symbols(), en1993.Standard{}.Symbols(), aisc360.Standard{}.Symbols()}
 	equations, computed := 0, 0
 	for _, r := range rule.All() {
 		for _, block := range strings.Split(r.Page, "```equation\n")[1:] {

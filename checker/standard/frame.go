@@ -42,11 +42,13 @@ type Frame struct {
 	axial       [][]float64 // [combination][segment] compression at the segment's bottom
 	own         []float64   // [segment] self-weight per length
 	weight      []float64   // [combination] the factor of self-weight
+	slope       [][]float64 // [combination][segment] loss of compression per length, of imported forces alone
 	beams       [2][][]action.Piece
 	beamOK      [2]bool
 
 	parts  []model.Lift // neighbouring lifts of one section and material taken as one
 	twists []Segment    // between points held against twist
+	floors []floors     // [case][segment] what floors bring, for reductions; nil for none
 	lift   *liftView    // of a frame of one lift
 }
 
@@ -78,6 +80,16 @@ func (f *Frame) split() {
 			}
 		}
 		f.Stretches[axis], f.Stands[axis] = action.Stretches(m.Base[axis], m.Top[axis], holds, m.Height, f.Env.Basis.Recommended)
+		if j := m.Joints[axis]; j != nil {
+			f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: j.Factor(), Joints: true}}
+			f.Stands[axis] = true
+		}
+		if f.Env.Basis.Direct && f.Stands[axis] {
+			for i := range f.Stretches[axis] {
+				s := &f.Stretches[axis][i]
+				s.K, s.Exact, s.Joints, s.Direct = 1, false, false, true
+			}
+		}
 		if k := m.Factor[axis]; k > 0 {
 			if !f.Stands[axis] || len(f.Stretches[axis]) == 1 && f.Stretches[axis][0].Exact {
 				f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis]}}
@@ -85,7 +97,7 @@ func (f *Frame) split() {
 			}
 			for i := range f.Stretches[axis] {
 				s := &f.Stretches[axis][i]
-				s.K, s.Overridden, s.Exact = k, true, false
+				s.K, s.Overridden, s.Exact, s.Direct = k, true, false, false
 			}
 		}
 	}
@@ -134,9 +146,17 @@ func (f *Frame) forces() {
 			insert(l.At)
 		}
 	}
+	if in := m.Imported; in != nil {
+		for _, z := range in.Positions[1 : len(in.Positions)-1] {
+			insert(z)
+		}
+		f.importedForces(in)
+		return
+	}
 	segments := len(f.cuts) - 1
 	f.last = segments - 1
 	of := f.byCase()
+	f.reduce()
 	f.own = make([]float64, segments)
 	if m.Weight {
 		for s := range f.own {
@@ -152,7 +172,7 @@ func (f *Frame) forces() {
 		for k, factor := range combination.Factors {
 			if factor != 0 {
 				for s := range row {
-					row[s] += factor * of[k*segments+s]
+					row[s] += factor * (of[k*segments+s] - f.relief(c, k, s))
 				}
 			}
 		}
@@ -248,8 +268,12 @@ func (f *Frame) At(combination int, z float64) float64 {
 	return math.NaN()
 }
 
-// perLength is the self-weight per length of a segment under a combination, N/m.
+// perLength is what compression loses per length from the base up in a segment
+// under a combination, N/m: the self-weight.
 func (f *Frame) perLength(combination, segment int) float64 {
+	if f.slope != nil {
+		return f.slope[combination][segment]
+	}
 	return f.weight[combination] * f.own[segment]
 }
 
@@ -288,6 +312,10 @@ func (f *Frame) Cut(p action.Piece) (action.Piece, bool) {
 // moments analyses the member as a beam about each axis that is bent.
 func (f *Frame) moments() {
 	m := f.Member
+	if m.Imported != nil {
+		f.importedMoments(m.Imported)
+		return
+	}
 	for _, l := range m.Loads {
 		switch l.Kind {
 		case model.AxialLoad:
@@ -319,7 +347,9 @@ func (f *Frame) moments() {
 			p := action.Push{From: l.At}
 			switch {
 			case l.Kind == model.AxialLoad && l.Offset[axis] != 0:
-				p.Moment = l.Value * l.Offset[axis]
+				if !m.Nominal {
+					p.Moment = l.Value * l.Offset[axis]
+				}
 			case l.Kind == model.AxialLoad || int(l.Axis) != axis:
 				continue
 			case l.Kind == model.EndMoment:
@@ -332,6 +362,11 @@ func (f *Frame) moments() {
 			loadings[l.Case] = append(loadings[l.Case], p)
 		}
 		pieces, err := beam.Solve(loadings)
+		if m.Nominal {
+			for c := range pieces {
+				f.nominal(axis, c, pieces[c])
+			}
+		}
 		f.beams[axis], f.beamOK[axis] = pieces, err == nil
 	}
 }
@@ -374,6 +409,15 @@ func (f *Frame) Assumptions() []string {
 			switch {
 			case s.Overridden:
 				kind = "stated"
+			case s.Direct:
+				kind = "the unbraced length, by direct analysis"
+			case s.Joints:
+				j := m.Joints[axis]
+				sway := "without sway"
+				if j.Sway {
+					sway = "with sway"
+				}
+				kind = fmt.Sprintf("alignment chart %s, stiffness ratios %s at the base and %s at the top", sway, number(j.Base), number(j.Top))
 			case s.Exact:
 				kind = "solved for the whole column, as its free end stands beyond a hold"
 			case f.Env.Basis.Recommended:
@@ -382,12 +426,19 @@ func (f *Frame) Assumptions() []string {
 			out = append(out, fmt.Sprintf("K = %s %s over %s (%s–%s, %s)", unit.Short(s.K, 3), name, f.StretchName(axis, s), s.Base, s.Top, kind))
 		}
 	}
+	if m.Imported != nil {
+		return append(out, importedAssumptions(m.Imported)...)
+	}
 	switch {
 	case m.Weight:
 		c := f.Env.Cases[f.Env.SelfWeight].Name
 		out = append(out, fmt.Sprintf("self-weight %s kN in all, in case %s", unit.Short(f.OwnWeight()/1e3, 3), c))
 	case m.Kind == model.Column:
 		out = append(out, "self-weight not counted")
+	}
+	out = append(out, f.reductions()...)
+	if m.Nominal && (f.Bends[0] || f.Bends[1]) {
+		out = append(out, "nominal moments of simple construction: each load off the centroid bends the lengths of column above and below its level alone, in proportion to I/L, or in halves where these differ by no more than 1.5 (common practice, from memory)")
 	}
 	if f.Env.Basis.Actions == "" {
 		if len(f.Env.Automatic) == 0 {
@@ -398,6 +449,10 @@ func (f *Frame) Assumptions() []string {
 	}
 	return out
 }
+
+// ByLeg is why a standard that takes an angle as loaded in its centroid leaves one
+// undecided that is connected by one leg.
+const ByLeg = "the angle is connected by one leg: allow for the eccentricity by hand"
 
 // OwnWeight is the whole weight of the member where it counts, N.
 func (f *Frame) OwnWeight() float64 {

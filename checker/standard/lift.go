@@ -123,6 +123,9 @@ func bending(l *model.Lift, axis int) float64 {
 	return l.Material.E * [...]float64{l.Section.IMajor, l.Section.IMinor}[axis]
 }
 
+// Stiffness is E I about an axis at a height, Nm2.
+func (f *Frame) Stiffness(axis int, z float64) float64 { return bending(f.partAt(z), axis) }
+
 // steps are the stiffnesses between two heights, counted from the lower one.
 func (f *Frame) steps(axis int, from, to float64) []action.Step {
 	var out []action.Step

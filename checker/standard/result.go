@@ -15,7 +15,11 @@ import (
 type Standard interface {
 	// Name is the name that a basis states.
 	Name() string
-	// Annexes are the sets of national values; the first is the default.
+	// Methods are the methods of which a basis must state one ("LRFD"); nil when
+	// there is one alone.
+	Methods() []string
+	// Annexes are the sets of national values, the first is the default; nil when
+	// there are none.
 	Annexes() []string
 	// Overrides are the numbers that a basis may replace, with whether it must
 	// say why.

@@ -209,13 +209,17 @@ func (r *lifts) outcome() *Outcome {
 	}
 	r.out.Coverage = append(r.out.Coverage, Coverage{Rule: "splices", State: NotApplicable,
 		Why: "no such check is made: lifts are taken to go on stiffly into one another; a splice must carry the forces and moments there, and a pinned one is not covered"})
+	// a result of the member is what all its lifts agree on
 	r.out.Value = func(symbol string) (unit.Quantity, bool) {
-		for _, l := range r.out.Lifts {
-			if v, ok := l.Value(symbol); ok {
-				return v, true
+		var out unit.Quantity
+		for i, l := range r.out.Lifts {
+			v, ok := l.Value(symbol)
+			if !ok || i > 0 && !(math.Abs(v.Value-out.Value) <= 1e-12*math.Abs(out.Value)) {
+				return unit.Quantity{}, false
 			}
+			out = v
 		}
-		return unit.Quantity{}, false
+		return out, len(r.out.Lifts) > 0
 	}
 	return &r.out
 }

@@ -74,6 +74,7 @@ func (w *workspace) check(terminal *os.File) *checker.Report {
 // bar is a progress bar that shows itself only when there is time to look.
 type bar struct {
 	terminal *os.File
+	what     string // is being done
 	started  time.Time
 	mu       sync.Mutex
 	shown    *progressbar.ProgressBar
@@ -81,7 +82,7 @@ type bar struct {
 }
 
 func newBar(terminal *os.File) *bar {
-	return &bar{terminal: terminal, started: time.Now()}
+	return &bar{terminal: terminal, what: "checking members", started: time.Now()}
 }
 
 func (b *bar) tell(done, all int) {
@@ -91,7 +92,7 @@ func (b *bar) tell(done, all int) {
 	b.mu.Lock()
 	defer b.mu.Unlock()
 	if b.shown == nil {
-		b.shown = progressbar.NewOptions(all, progressbar.OptionSetWriter(b.terminal), progressbar.OptionSetDescription("checking members"),
+		b.shown = progressbar.NewOptions(all, progressbar.OptionSetWriter(b.terminal), progressbar.OptionSetDescription(b.what),
 			progressbar.OptionShowCount(), progressbar.OptionClearOnFinish(), progressbar.OptionThrottle(100*time.Millisecond))
 	}
 	if done > b.last {

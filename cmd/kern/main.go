@@ -45,6 +45,17 @@ func root() *cobra.Command {
 		Version:       version(),
 	}
 	c.SetVersionTemplate("kern {{.Version}}\n")
-	c.AddCommand(checkCommand(), formatCommand(), rulesCommand(), catalogueCommand(), lspCommand(), reviewCommand(), versionCommand())
+	c.AddCommand(
+		checkCommand(),
+		sheetCommand(),
+		scheduleCommand(),
+		formatCommand(),
+		rulesCommand(),
+		catalogueCommand(),
+		chartCommand(),
+		lspCommand(),
+		reviewCommand(),
+		versionCommand(),
+	)
 	return c
 }

@@ -1,6 +1,7 @@
 package main
 
 import (
+	"bytes"
 	"os"
 	"testing"
 
@@ -8,7 +9,7 @@ import (
 )
 
 func TestMain(m *testing.M) {
-	testscript.Main(m, map[string]func(){"kern": func() { os.Exit(run()) }})
+	testscript.Main(m, map[string]func(){"kern": func() { os.Exit(run()) }, "edit": edit})
 }
 
 // TestScripts runs the commands as a user does.
@@ -18,4 +19,20 @@ func TestScripts(t *testing.T) {
 			e.Setenv("HOME", e.WorkDir)
 			return nil
 		}})
+}
+
+// edit is the command "edit FILE OLD NEW" of the scripts: it replaces a text, as
+// somebody with an editor would.
+func edit() {
+	data, err := os.ReadFile(os.Args[1])
+	if err != nil {
+		panic(err)
+	}
+	old, now := []byte(os.Args[2]), []byte(os.Args[3])
+	if !bytes.Contains(data, old) {
+		panic("the text to replace is not there")
+	}
+	if err := os.WriteFile(os.Args[1], bytes.Replace(data, old, now, 1), 0o666); err != nil {
+		panic(err)
+	}
 }

@@ -30,17 +30,18 @@
 
 ;; generated: declarations
 (defconst kern-mode-declarations
-  '("basis" "case" "column" "combination" "exclusive" "include" "level" "material" "section" "strut"
-    "tie")
+  '("basis" "case" "column" "combination" "exclusive" "forces" "include" "level" "material"
+    "project" "section" "strut" "tie")
   "Words that begin a declaration.")
 ;; end of declarations
 
 ;; generated: statements
 (defconst kern-mode-statements
-  '("accidental" "actions" "amplification" "base" "depart" "effective" "factor_buckling"
-    "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height"
-    "hold" "length" "lift" "limit" "load" "material" "net" "note" "permanent" "require" "roofs"
-    "section" "selfweight" "show" "standard" "strengths" "top" "xi")
+  '("accidental" "actions" "amplification" "base" "checked" "connected" "date" "depart" "effective"
+    "factor_buckling" "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1"
+    "gamma_Q" "height" "hold" "joints" "length" "lift" "limit" "load" "material" "moments" "name"
+    "net" "note" "number" "permanent" "prepared" "reduce" "reduction" "require" "revision" "roofs"
+    "section" "selfweight" "show" "stability" "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -61,11 +62,13 @@
 
 ;; generated: particles
 (defconst kern-mode-particles
-  '("about" "accidental" "across" "alone" "and" "annex" "as" "at" "because" "both" "cases"
-    "characteristic" "cold" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
-    "independent" "lengths" "major" "minor" "off" "offset" "on" "per" "permanent" "persistent"
-    "pinned" "psi_0" "psi_1" "psi_2" "quasipermanent" "recommended" "rolled" "secant" "seismic"
-    "simple" "slenderness" "snow" "sway" "temperature" "theoretical" "to" "together" "top" "twist"
+  '("ASD" "K_LL" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "area" "as" "at"
+    "because" "both" "braced" "by" "cases" "characteristic" "cold" "compression" "continuous"
+    "direct" "effective" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
+    "independent" "leg" "lengths" "live" "long" "major" "minor" "negative" "nominal" "off" "offset"
+    "on" "per" "permanent" "persistent" "pinned" "positive" "psi_0" "psi_1" "psi_2" "quasipermanent"
+    "recommended" "rolled" "secant" "seismic" "short" "simple" "slenderness" "snow" "space"
+    "storeys" "sway" "temperature" "theoretical" "to" "together" "top" "tributary" "twist"
     "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles

@@ -80,6 +80,8 @@ func (c *caret) surroundings(outer []*lang.Stmt) {
 	}
 	c.parent = outer[len(outer)-1]
 	switch c.parent.Word {
+	case "project":
+		c.in = lang.InProject
 	case "basis":
 		c.in = lang.InBasis
 	case "level":

@@ -224,7 +224,15 @@ func (s *scope) words(d duty) []Item {
 	case s.head == "made" && madeWords(s.shape()) != nil:
 		words = madeWords(s.shape())
 	}
+	methods := true // of the standard, where one is named
+	if s.head == "standard" {
+		standard := checker.StandardNamed(s.text1())
+		methods = standard != nil && standard.Methods() != nil
+	}
 	for _, w := range words {
+		if w == "by" && !methods {
+			continue
+		}
 		x := Item{Label: w, Kind: WordItem, Detail: lang.Words[w], Eager: true, Closed: !joining(w)}
 		switch {
 		case w == "because":

@@ -10,7 +10,8 @@ import (
 
 // once are the words that a member says once; those that say the same thing
 // stand under one of them.
-var once = map[string]string{"section": "section", "material": "material", "height": "height", "length": "height", "from": "height", "selfweight": "selfweight", "net": "net"}
+var once = map[string]string{"section": "section", "material": "material", "height": "height", "length": "height", "from": "height", "selfweight": "selfweight", "net": "net",
+	"moments": "moments", "reduce": "reduce", "reduction": "reduce"}
 
 // statements are what can be said where a statement begins.
 func (s *scope) statements() []Item {
@@ -50,7 +51,7 @@ func (s *scope) statements() []Item {
 		switch {
 		case s.in == lang.InMember && known[once[f.Word]], s.in != lang.InMember && s.in != lang.InFile && said[f.Word] && f.Word != "show":
 			continue
-		case s.in == lang.InFile && f.Word == "basis" && s.env.Basis.Stated:
+		case s.in == lang.InFile && (f.Word == "basis" && s.env.Basis.Stated || f.Word == "project" && s.env.Project.Stated):
 			continue
 		case s.in == lang.InMember && (f.Word == "base" || f.Word == "top") && said[f.Word]:
 			group = 1 // once more, about the other axis

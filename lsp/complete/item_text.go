@@ -84,6 +84,8 @@ func annexWords(name string) string {
 var standardWords = map[string]string{
 	"elastic":          "first yield and Euler buckling, with factors of safety of the calculation",
 	"EN 1993-1-1:2005": "Eurocode 3, steel structures, general rules",
+	"ANSI/AISC 360-22": "specification for structural steel buildings, by LRFD or ASD",
+	"ANSI/AISC 360-16": "the edition of 2016, by LRFD or ASD",
 }
 
 // fixedWords explain the texts that stand as they are.
@@ -137,7 +139,7 @@ func (s *scope) files() []Item {
 	}
 	var out []Item
 	for name, f := range p.Files {
-		if name == s.tree.Name || reached[name] || f.Unreadable != "" {
+		if name == s.tree.Name || reached[name] || f.Unreadable != "" || f.Data != (s.head == "forces") {
 			continue
 		}
 		back := false

@@ -69,11 +69,15 @@ func TestDue(t *testing.T) {
 // places are places with what is offered there first; blanks of labels are
 // written _.
 var places = map[string]string{
-	"¦":                        "include basis material section case combination exclusive level column strut tie",
+	"¦":                        "include forces project basis material section case combination exclusive level column strut tie",
+	"project { ¦ }":            "name number prepared checked revision date",
+	"project { prepared ¦ }":   "by",
 	"basis { ¦ }":              "standard actions permanent roofs accidental show effective",
 	"basis { standard \"¦\" }": "elastic EN_1993-1-1:2005",
 	"basis { standard ¦ }":     "elastic EN_1993-1-1:2005",
 	"basis { standard \"EN 1993-1-1:2005\" ¦ }":         "annex",
+	"basis { standard \"ANSI/AISC 360-22\" ¦ }":         "by",
+	"basis { standard \"ANSI/AISC 360-22\" by ¦ }":      "LRFD ASD",
 	"basis { standard \"EN 1993-1-1:2005\" annex \"¦ }": "recommended",
 	"basis { actions \"EN 1990:2002\" eq \"¦\" }":       "6.10",
 	"basis { show kN, ¦ }":                              "kNm Nm",

@@ -176,6 +176,8 @@ func fresh(text string, tokens []lang.Token, i int) bool {
 		return len(before) == 1
 	case "note":
 		return true
+	case "name", "number", "prepared", "checked", "revision", "date":
+		return tok.Kind == lang.String
 	}
 	return false
 }

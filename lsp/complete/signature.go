@@ -41,7 +41,7 @@ var placeholderWords = map[string]string{
 	"CASE": "a load case of the calculation", "AXIS": "major or minor", "NAME": "a name", "SHAPE": "tube, pipe, isection, channel, tee, angle, bar, rod or given", "VALUE": "a value with its unit, or a calculation",
 	"RESULT": "a result: N_b_minor, N_cr_major, utilisation, or a symbol of the standard", "RULE": "the name of a check: flexural-buckling-minor", "UNIT": "a unit: kN",
 	"FACTOR CASE": "cases with their factors: 1.1 G + 0.5 W", "FILE": "the path of a file, from this one", "DESIGNATION": "a section of the catalogue: HEB 160", "GRADE": "a steel grade: S355",
-	"STANDARD": "a product standard: EN 10025-2", "TITLE": "what people call the member", "REASON": "why", "TEXT": "any text", "KIND": "imposed, snow, wind or temperature", "SITUATION": "what the combination is for; without it, persistent situations", "CATEGORY": "the category of EN 1990 Table A1.1: A to H",
+	"STANDARD": "a product standard: EN 10025-2", "TITLE": "what people call the member", "REASON": "why", "TEXT": "any text", "DATE": "a date, year-month-day: 2026-03-31", "KIND": "imposed, snow, wind or temperature", "SITUATION": "what the combination is for; without it, persistent situations", "CATEGORY": "the category of EN 1990 Table A1.1: A to H",
 }
 
 // SignatureAt tells how the statement or the function at a place is written. It

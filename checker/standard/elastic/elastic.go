@@ -104,6 +104,9 @@ func (Standard) Name() string { return "elastic" }
 // Annexes implements standard.Standard.
 func (Standard) Annexes() []string { return nil }
 
+// Methods implements standard.Standard: there is one alone.
+func (Standard) Methods() []string { return nil }
+
 // Overrides implements standard.Standard: the two factors of safety. They
 // replace no published value, so they need no reason.
 func (Standard) Overrides() map[string]bool {
@@ -131,6 +134,9 @@ func (Standard) Check(f *standard.Frame, record *derivation.Record) *standard.Ou
 	c.given()
 	for a := range axes {
 		c.buckling(a)
+	}
+	if c.f.Member.Leg.Stated() {
+		c.cover("elastic-buckling-minor", standard.NotCovered, standard.ByLeg)
 	}
 	c.torsion()
 	c.yield()

@@ -109,6 +109,9 @@ func (c *calc) run() {
 	c.tension()
 	c.flexural(0, c.major)
 	c.flexural(1, c.minor)
+	if c.f.Member.Leg.Stated() {
+		c.cover("flexural-buckling-minor", standard.NotCovered, standard.ByLeg+" (EN 1993-1-1 BB.1.2)")
+	}
 	c.torsional()
 	c.bending()
 	c.slenderness()

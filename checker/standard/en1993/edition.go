@@ -120,6 +120,9 @@ func (s Standard) Name() string { return s.edition().name }
 // Annexes implements standard.Standard.
 func (s Standard) Annexes() []string { return s.edition().annexes }
 
+// Methods implements standard.Standard: there is one alone.
+func (Standard) Methods() []string { return nil }
+
 // Overrides implements standard.Standard.
 func (s Standard) Overrides() map[string]bool {
 	out := map[string]bool{"gamma_M0": true, "gamma_M1": true, "gamma_M2": true, "net_ratio": true, "C_1": true, "C_2": true, "z_g_h": true}

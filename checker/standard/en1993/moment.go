@@ -32,7 +32,9 @@ func newMoment(letter, shear, word string) *moment {
 		return strings.ReplaceAll(strings.ReplaceAll(text, "?", letter), "!", shear)
 	}
 	s := func(name string, dim unit.Dim, what string) derivation.ID { return sym(in(name), dim, what+about) }
-	f := func(id derivation.ID, text, clause string) *derivation.Formula { return formula(id, in(text), clause) }
+	f := func(id derivation.ID, text, clause string) *derivation.Formula {
+		return formula(id, in(text), in(clause))
+	}
 
 	x.wpl = s("W_pl_?", unit.Volume, "plastic section modulus")
 	x.wel = s("W_el_?", unit.Volume, "elastic section modulus")

@@ -96,6 +96,18 @@ async function showStatus() {
   if (answer) await vscode.commands.executeCommand(answer === 'Open Output' ? 'kern.openOutput' : 'kern.restartServer');
 }
 
+/** openSheet shows the printed calculation of the file in the editor, as its text is now, beside it. */
+async function openSheet() {
+  const editor = vscode.window.activeTextEditor;
+  if (!editor || editor.document.languageId !== 'kern') return;
+  if (!client) throw new Error('The server does not run.');
+  const file = client.code2ProtocolConverter.asUri(editor.document.uri);
+  const html = await client.sendRequest('workspace/executeCommand', { command: 'kern.sheet', arguments: [file] });
+  const name = editor.document.uri.path.split('/').pop();
+  const panel = vscode.window.createWebviewPanel('kern.sheet', `Sheet of ${name}`, vscode.ViewColumn.Beside, { enableFindWidget: true });
+  panel.webview.html = html;
+}
+
 function activate(context) {
   output = vscode.window.createOutputChannel('kern', { log: true });
   item = vscode.languages.createLanguageStatusItem('kern.server', { language: 'kern' });
@@ -107,6 +119,7 @@ function activate(context) {
   command('kern.openOutput', () => output.show(true));
   command('kern.showWorkingHere', () => vscode.window.activeTextEditor && working.at(vscode.window.activeTextEditor));
   command(working.command, working.open);
+  command('kern.openSheet', openSheet);
   context.subscriptions.push(working.provide((file, member) => {
     if (!client) throw new Error('The server does not run.');
     return client.sendRequest('workspace/executeCommand', { command: 'kern.working', arguments: [file, member] });

@@ -1,37 +1,32 @@
-package drawing
+package checker
 
-import (
-	"math"
+import "math"
 
-	"kern/checker"
-)
+// Envelope is where the checks of a member reach their limit, when the axial
+// forces and the moments of a combination are each multiplied by a factor. It is
+// found by asking the member's own standard, ray by ray.
+type Envelope struct {
+	Limit   float64 // the utilisation on the line
+	Axial   float64 // factor on the axial forces that is reached without moments
+	Bending float64 // factor on the moments that is reached without axial forces
+	Points  []Factors
 
-// envelope is where the standard's checks of a member reach their limit, when
-// the axial forces and the moments of a combination are each multiplied by a
-// factor. It is found by asking the checker, ray by ray.
-type envelope struct {
-	r           *checker.Result
+	r           *Result
 	combination int
-	limit       float64
-	axial       float64 // factor on the axial forces that is reached without moments
-	bending     float64 // factor on the moments that is reached without axial force
-	points      []factors
 }
 
-// factors is a point of the envelope; NaN where the standard cannot decide.
-type factors struct{ axial, bending float64 }
+// Factors is a point of an envelope; NaN where the standard cannot decide.
+type Factors struct{ Axial, Bending float64 }
 
 // rays is how many directions are asked for.
 const rays = 25
 
-// newEnvelope is false where the checker decides nothing along the axes.
-func newEnvelope(r *checker.Result, combination int) (*envelope, bool) {
-	e := &envelope{r: r, combination: combination, limit: 1}
-	if l := r.Member.Limits.Utilisation; l > 0 {
-		e.limit = l
-	}
-	e.axial, e.bending = e.reach(1, 0, 1), e.reach(0, 1, 1)
-	if !(e.axial > 0) || !(e.bending > 0) {
+// Envelope finds the envelope of a combination, by its index. It is false where
+// the standard decides nothing without moments or without axial forces.
+func (r *Result) Envelope(combination int) (*Envelope, bool) {
+	e := &Envelope{r: r, combination: combination, Limit: r.limit()}
+	e.Axial, e.Bending = e.reach(1, 0, 1), e.reach(0, 1, 1)
+	if !(e.Axial > 0) || !(e.Bending > 0) {
 		return nil, false
 	}
 	guess := 1.0
@@ -44,23 +39,23 @@ func newEnvelope(r *checker.Result, combination int) (*envelope, bool) {
 		case rays - 1:
 			sin, cos = 1, 0
 		}
-		t := e.reach(cos*e.axial, sin*e.bending, guess)
+		t := e.reach(cos*e.Axial, sin*e.Bending, guess)
 		if t > 0 {
 			guess = t
 		}
-		e.points = append(e.points, factors{t * cos * e.axial, t * sin * e.bending})
+		e.Points = append(e.Points, Factors{t * cos * e.Axial, t * sin * e.Bending})
 	}
 	return e, true
 }
 
 // reach is how far one can go in a direction until the limit is reached; NaN
 // where it cannot be decided, or not within a million times the guess.
-func (e *envelope) reach(axial, bending, guess float64) float64 {
+func (e *Envelope) reach(axial, bending, guess float64) float64 {
 	over := func(t float64) float64 {
 		u, _ := e.r.Probe(e.combination, t*axial, t*bending)
-		return u - e.limit
+		return u - e.Limit
 	}
-	low, lowOver := 0.0, -e.limit
+	low, lowOver := 0.0, -e.Limit
 	high := guess
 	highOver := over(high)
 	for range 40 {
@@ -73,7 +68,7 @@ func (e *envelope) reach(axial, bending, guess float64) float64 {
 		case highOver <= 0:
 			low, lowOver = high, highOver
 			// utilisation grows about as the load does, or faster
-			if step := e.limit / (highOver + e.limit); step > 1 && step < 1e6 {
+			if step := e.Limit / (highOver + e.Limit); step > 1 && step < 1e6 {
 				high *= step * 1.02
 			} else {
 				high *= 1.02
@@ -92,7 +87,7 @@ func (e *envelope) reach(axial, bending, guess float64) float64 {
 // between narrows the crossing down from both sides (false position, Illinois,
 // with a halving every third time) and gives the lower side: the point that is
 // drawn still passes.
-func (e *envelope) between(low, lowOver, high, highOver float64, over func(float64) float64) float64 {
+func (e *Envelope) between(low, lowOver, high, highOver float64, over func(float64) float64) float64 {
 	side := 0
 	for i := range 40 {
 		if high-low <= 1e-3*high {
@@ -123,4 +118,12 @@ func (e *envelope) between(low, lowOver, high, highOver float64, over func(float
 		}
 	}
 	return low
+}
+
+// limit is the utilisation that the member may reach.
+func (r *Result) limit() float64 {
+	if l := r.Member.Limits.Utilisation; l > 0 {
+		return l
+	}
+	return 1
 }
