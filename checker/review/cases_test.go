@@ -348,3 +348,34 @@ func TestLoosened(t *testing.T) {
 		t.Errorf("a limit that asks more: %+v", r.Loosened)
 	}
 }
+
+// TestTables: the lines of a table of forces are an edit of the members that they
+// are about.
+func TestTables(t *testing.T) {
+	files := func(text, table string) map[string]string {
+		return map[string]string{"frame/a.kern": "include \"../basis.kern\"\nforces \"out/frame.csv\" compression positive\n" + text, "basis.kern": "basis { standard \"EN 1993-1-1:2005\" }\n", "frame/out/frame.csv": table}
+	}
+	const text = "column A1 { section = \"HEB 160\"; material = \"S355\"; height = 4 m }\ncolumn A2 as A1 {}\n"
+	const table = "# from the frame\nmember;position [m];combination;N [kN];M_major [kNm]\nA1;0;one;412;0\nA1;4;one;410;20\nA1;0;two;300;0\nA1;4;two;300;30\nA2;0;one;200;0\nA2;4;one;200;10\n"
+	edited := strings.NewReplacer("A1;4;one;410;20", "A1;4;one;520;40", "A1;0;one;412", "A1;0;one;522").Replace(table)
+	r := review.Compare(check(files(text, table)), check(files(strings.Replace(text, "height = 4 m", "height = 4 m; base fixed", 1), edited)))
+	c := change(t, r, "A1")
+	if c.Method != review.Exact || len(c.Causes) != 2 {
+		t.Fatalf("%+v", c)
+	}
+	sum(t, c)
+	if x := causeOf(c, "A1;4;one;520;40"); x == nil || len(x.Edits) != 2 || !(x.Share > 0) || x.Edits[1].Place.File != "frame/out/frame.csv" || x.Edits[1].Place.Line != 4 {
+		t.Errorf("%+v", x)
+	}
+	d := change(t, r, "A2")
+	if x := causeOf(d, "A1;4;one;520;40"); x != nil || len(d.Causes) != 1 {
+		t.Errorf("the lines of another: %+v", d)
+	}
+	sum(t, d)
+	r = review.Compare(check(files(text, table)), check(files(strings.Replace(text, "A1", "B1", 2), strings.ReplaceAll(edited, "A1", "B1"))))
+	if c := change(t, r, "B1"); c.Was != "A1" || c.Method != review.Exact {
+		t.Errorf("renamed: %+v", c)
+	} else {
+		sum(t, c)
+	}
+}

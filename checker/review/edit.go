@@ -59,6 +59,10 @@ func kindOf(d *declared, word string) string {
 			return "grade"
 		case "selfweight", "kind":
 			return "self-weight"
+		case "joints", "connected":
+			return "hold"
+		case "moments", "reduce", "reduction":
+			return "load"
 		case "limit", "require", "depart":
 			return "limit"
 		case "as":
@@ -87,6 +91,8 @@ func kindOf(d *declared, word string) string {
 		return "grade"
 	case "cases", "combinations", "exclusives":
 		return "combination"
+	case "forces", "table", "rows":
+		return "load"
 	}
 	return "definition"
 }
@@ -158,6 +164,8 @@ func (d *declared) title() string {
 	switch d.kind {
 	case "cases", "combinations", "exclusives":
 		return strings.TrimSuffix(d.kind, "s")
+	case "rows":
+		return "forces of " + d.name
 	case "member":
 		for _, f := range d.facts {
 			if f.word == "kind" {

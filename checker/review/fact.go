@@ -21,6 +21,7 @@ type fact struct {
 	key   string
 	place lang.Place
 	stmt  *lang.Stmt // nil for a part of a first line
+	table string     // the file of a table of forces that it names or stands in
 }
 
 // declared is what gives a name its meaning, or the basis: a first line and the
@@ -38,7 +39,7 @@ type declared struct {
 
 // kinds are the words that begin a declaration, with what they declare.
 var kinds = map[string]string{"column": "member", "strut": "member", "tie": "member", "section": "section", "material": "material", "level": "level",
-	"case": "case", "combination": "combination", "exclusive": "exclusive", "basis": "basis"}
+	"case": "case", "combination": "combination", "exclusive": "exclusive", "basis": "basis", "forces": "forces"}
 
 // state is one state of a calculation, taken apart.
 type state struct {
@@ -55,6 +56,9 @@ func takeApart(files []*lang.File) *state {
 			for _, stmt := range d.Stmts {
 				s.read(d, stmt)
 			}
+		}
+		if f.Data {
+			s.readTable(f)
 		}
 	}
 	return s
@@ -84,6 +88,13 @@ func (s *state) read(d *lang.Decl, stmt *lang.Stmt) {
 		return
 	}
 	switch kind := kinds[stmt.Word]; kind {
+	case "forces":
+		f := whole(kind)
+		if len(stmt.Args) > 0 {
+			f.table, _ = lang.Resolve(d.File.Name, stmt.Args[0].Text)
+		}
+		x := s.of(kind, "", d, stmt)
+		x.facts = append(x.facts, f)
 	case "case", "combination", "exclusive":
 		// their order counts: self-weight belongs to the first permanent case
 		x := s.of(kind+"s", "", d, stmt)

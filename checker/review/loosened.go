@@ -79,6 +79,7 @@ func (r *Review) basis(b, a *side) {
 	}
 	words(x.Standard, y.Standard, "another design standard", y.StandardAt)
 	words(x.Annex, y.Annex, "another annex", y.StandardAt)
+	words(x.Method, y.Method, "another method of design", y.StandardAt)
 	words(strings.TrimSpace(x.Actions+" "+x.Equation), strings.TrimSpace(y.Actions+" "+y.Equation), "other combinations of actions", lang.Place{})
 	onOff := func(b bool) string {
 		if b {
@@ -91,6 +92,13 @@ func (r *Review) basis(b, a *side) {
 	}
 	if !x.Simple && y.Simple {
 		words("secant", "simple", "simpler amplification of moments", lang.Place{})
+	}
+	if x.Direct != y.Direct {
+		stability := map[bool]string{true: "direct", false: "effective lengths"}
+		words(stability[x.Direct], stability[y.Direct], "another method of stability", y.DirectAt)
+	}
+	if !x.Nominal && y.Nominal {
+		words("continuous", "nominal", "nominal moments of loads off the centroid", lang.Place{})
 	}
 	if x.Recommended && !y.Recommended {
 		words("recommended", "theoretical", "shorter effective lengths", lang.Place{})
@@ -192,6 +200,19 @@ func (r *Review) limits(p match) {
 	name := lang.Place{Decl: y.Decl, Span: y.NameSpan}
 	if x.Weight && !y.Weight && p.before.side.calc.Env.Basis.SelfWeight == p.after.side.calc.Env.Basis.SelfWeight {
 		r.loosen(Loosening{What: "self-weight no longer counts", Before: "on", After: "off", Members: []string{y.Name}, Place: p.after.side.lines.at(name)})
+	}
+	if was, now := x.Reduction, y.Reduction; now.Kind != model.NoReduction && (was.Kind != now.Kind || was.Value != now.Value || was.Element != now.Element) {
+		text := func(side *side, r model.Reduction) string {
+			if r.Kind == model.NoReduction || r.Place.Decl == nil {
+				return ""
+			}
+			return textOf(r.Place.Decl, r.Place.Span)
+		}
+		r.loosen(Loosening{What: "imposed loads reduced", Before: text(p.before.side, was), After: text(p.after.side, now), Because: now.Because, Members: []string{y.Name},
+			Place: p.after.side.lines.at(orElse(now.Place, name))})
+	}
+	if !x.Nominal && y.Nominal && p.before.side.calc.Env.Basis.Nominal == p.after.side.calc.Env.Basis.Nominal {
+		r.loosen(Loosening{What: "nominal moments of loads off the centroid", Before: "continuous", After: "nominal", Members: []string{y.Name}, Place: p.after.side.lines.at(name)})
 	}
 	for i, axis := range []string{"major", "minor", "twist"} {
 		was, now := x.Factor[i], y.Factor[i]

@@ -13,95 +13,6 @@ import (
 	"kern/lang"
 )
 
-// side is one state of a calculation.
-type side struct {
-	report *checker.Report
-	calc   *model.Calculation
-	parts  *state
-	lines  *lines
-	places map[*lang.Decl][]string // what a declaration mentions, as ids
-	ranks  map[*side]map[string]int
-}
-
-// newSide takes a calculation apart.
-func newSide(r *checker.Report, c *model.Calculation, l *lines) *side {
-	return &side{report: r, calc: c, parts: takeApart(c.Files), lines: l, places: map[*lang.Decl][]string{}, ranks: map[*side]map[string]int{}}
-}
-
-// rank gives every id of this state and an earlier one its place in the order of
-// both: what only the earlier one has comes behind what it came behind there.
-func (s *side) rank(earlier *side) map[string]int {
-	if out, ok := s.ranks[earlier]; ok {
-		return out
-	}
-	behind := map[string][]string{}
-	last := ""
-	for _, id := range earlier.parts.order {
-		if s.parts.all[id] != nil {
-			last = id
-		} else {
-			behind[last] = append(behind[last], id)
-		}
-	}
-	out := map[string]int{}
-	for _, id := range append([]string{""}, s.parts.order...) {
-		out[id] = len(out)
-		for _, x := range behind[id] {
-			out[x] = len(out)
-		}
-	}
-	s.ranks[earlier] = out
-	return out
-}
-
-// inOrder lists ids by their rank.
-func inOrder(ids map[string]bool, rank map[string]int) []string {
-	out := make([]string, 0, len(ids))
-	for id, in := range ids {
-		if in {
-			out = append(out, id)
-		}
-	}
-	slices.SortFunc(out, func(x, y string) int { return rank[x] - rank[y] })
-	return out
-}
-
-// mentions are the ids of what a declaration of the text speaks of.
-func (s *side) mentions(d *lang.Decl) []string {
-	if out, ok := s.places[d]; ok {
-		return out
-	}
-	var out []string
-	checker.Mentions(s.calc, d, func(m checker.Mention) {
-		kind := [...]string{model.ValueName: "value", model.MaterialName: "material", model.SectionName: "section", model.LevelName: "level",
-			model.MemberName: "member", model.CaseName: "", model.CombinationName: ""}[m.Named.Kind]
-		if id := kind + " " + m.Named.Name; kind != "" && !slices.Contains(out, id) {
-			out = append(out, id)
-		}
-	})
-	s.places[d] = out
-	return out
-}
-
-// closure are the declarations that a member depends on, itself among them.
-func (s *side) closure(id string) map[string]bool {
-	out := map[string]bool{}
-	queue := []string{id, "basis", "cases", "combinations", "exclusives"}
-	for len(queue) > 0 {
-		id := queue[0]
-		queue = queue[1:]
-		d := s.parts.all[id]
-		if d == nil || out[id] {
-			continue
-		}
-		out[id] = true
-		for _, decl := range d.decls {
-			queue = append(queue, s.mentions(decl)...)
-		}
-	}
-	return out
-}
-
 // part is a declaration in both states, laid side by side.
 type part struct {
 	before, after *declared // nil where it is not there
@@ -147,14 +58,26 @@ func mix(earlier, later *side, member pairOf, coupled bool) *mixture {
 	ids := map[string]bool{}
 	maps.Copy(ids, b)
 	maps.Copy(ids, a)
+	rows := pairOf{strings.Replace(member.before, "member ", "rows ", 1), strings.Replace(member.after, "member ", "rows ", 1)}
 	if member.before != member.after {
 		delete(ids, member.before)
+		delete(ids, rows.before)
+		if b[rows.before] {
+			ids[rows.after] = true
+		}
 	}
 	same := map[[2]*lang.Stmt]int{} // several members of one block are edited as one
-	for _, id := range inOrder(ids, later.rank(earlier)) {
+	order := inOrder(ids, later.rank(earlier))
+	slices.SortStableFunc(order, func(x, y string) int { // the head of a table stands before its lines
+		return strings.Compare(kindFirst(x), kindFirst(y))
+	})
+	for _, id := range order {
 		p := part{before: earlier.parts.all[id], after: later.parts.all[id]}
-		if id == member.after {
+		switch id {
+		case member.after:
 			p.before = earlier.parts.all[member.before]
+		case rows.after:
+			p.before = earlier.parts.all[rows.before]
 		}
 		d := p.after
 		if d == nil {
@@ -195,6 +118,10 @@ func mix(earlier, later *side, member pairOf, coupled bool) *mixture {
 		}
 		p.slots = slots
 		m.parts = append(m.parts, p)
+		if d.kind == "rows" { // the lines of a table were written as one
+			m.table(at, pairs, earlier, later)
+			continue
+		}
 		for _, pair := range pairs {
 			var x, y *fact
 			var key [2]*lang.Stmt
@@ -238,6 +165,30 @@ func mix(earlier, later *side, member pairOf, coupled bool) *mixture {
 	}
 	m.settle()
 	return m
+}
+
+// table makes one player of all lines of a table that a member has.
+func (m *mixture) table(at int, pairs []pairing, earlier, later *side) {
+	p := m.parts[at]
+	pl := player{of: []int{at}}
+	for _, pair := range pairs {
+		var x, y *fact
+		for _, s := range []int{pair.before, pair.after} {
+			if s >= 0 {
+				pl.slots = append(pl.slots, [2]int{at, s})
+			}
+		}
+		if pair.before >= 0 {
+			x = &p.slots[pair.before].fact
+		}
+		if pair.after >= 0 {
+			y = &p.slots[pair.after].fact
+		}
+		pl.edits = append(pl.edits, editOf(p.before, p.after, x, y, earlier.lines, later.lines))
+	}
+	if len(pairs) > 0 {
+		m.players = append(m.players, pl)
+	}
 }
 
 // defines tells of declarations that change nothing unless something speaks of
@@ -344,7 +295,7 @@ func (d *declared) write(name string, facts []fact) string {
 		case f.word == "made of":
 			head = append(head, f.text)
 		default:
-			body = append(body, f.text)
+			body = append(body, f.written())
 		}
 	}
 	switch d.kind {
@@ -362,9 +313,11 @@ func (d *declared) write(name string, facts []fact) string {
 	return strings.Join(body, "\n") + "\n"
 }
 
-// text is the calculation with some of the edits made.
-func (m *mixture) text(made []bool) string {
+// text is the calculation with some of the edits made, and the tables that it
+// reads, by name.
+func (m *mixture) text(made []bool) (string, map[string]string) {
 	var b strings.Builder
+	var tables map[string]string
 	var facts []fact
 	for _, p := range m.parts {
 		facts = facts[:0]
@@ -386,9 +339,26 @@ func (m *mixture) text(made []bool) string {
 		if d == nil {
 			d = p.before
 		}
+		if d.kind == "table" || d.kind == "rows" {
+			if tables == nil {
+				tables = map[string]string{}
+			}
+			for _, f := range facts {
+				tables[alias(f.table)] += p.row(f) + "\n"
+			}
+			continue
+		}
 		b.WriteString(d.write(p.name, facts))
 	}
-	return b.String()
+	return b.String(), tables
+}
+
+// row is a line of a table under the name that the member has in the mixture.
+func (p *part) row(f fact) string {
+	if p.before != nil && p.after != nil && p.before.name != p.after.name && f.word == "forces" {
+		return strings.Replace(f.text, p.before.name, p.after.name, 1)
+	}
+	return f.text
 }
 
 // check works the member out with some of the edits made.
@@ -397,8 +367,13 @@ func (m *mixture) check(made []bool) outcome {
 	if o, ok := m.known[key]; ok {
 		return o
 	}
-	text := m.text(made)
-	project := lang.Load([]string{"m.kern"}, func(string) (string, error) { return text, nil }, nil)
+	text, tables := m.text(made)
+	project := lang.Load([]string{"m.kern"}, func(name string) (string, error) {
+		if t, ok := tables[name]; ok {
+			return t, nil
+		}
+		return text, nil
+	}, nil)
 	o := outcome{utilisation: math.NaN()}
 	for _, r := range checker.Check(project, nil).Members {
 		if r.Name == m.name {

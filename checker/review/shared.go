@@ -32,7 +32,7 @@ func shared(earlier, later map[string]*side) []sharedEdit {
 		ids := map[string]bool{}
 		for _, s := range []*side{b, a} {
 			for id, d := range s.parts.all {
-				ids[id] = ids[id] || d.kind != "member"
+				ids[id] = ids[id] || d.kind != "member" && d.kind != "rows"
 			}
 		}
 		for _, id := range inOrder(ids, a.rank(b)) {
