@@ -365,7 +365,20 @@ func (w working) List(name string) ([]string, error) {
 	if kindOfPath(absolute) == absent {
 		return nil, nil // it may be in the other state
 	}
-	return w.folder.Find(absolute)
+	found, err := w.folder.Find(absolute)
+	foreign := map[string]bool{".": false}
+	return slices.DeleteFunc(found, func(n string) bool { return w.foreign(path.Dir(n), foreign) }), err
+}
+
+// foreign tells whether a folder lies in a checkout of its own, such as that of a
+// submodule, which a commit does not hold. known remembers the answers.
+func (w working) foreign(dir string, known map[string]bool) bool {
+	if is, ok := known[dir]; ok {
+		return is
+	}
+	_, err := w.folder.Root().Lstat(filepath.Join(filepath.FromSlash(dir), ".git"))
+	known[dir] = err == nil || w.foreign(path.Dir(dir), known)
+	return known[dir]
 }
 
 // Read gives the text of a file.

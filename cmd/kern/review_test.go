@@ -175,6 +175,14 @@ func TestReviewStates(t *testing.T) {
 	want(t, exitRight, []string{"load Q 200 kN → load Q 120 kN (posts.kern:8)"}, "review")
 	writeAll(t, "steel.kern", "section post = \"HEB 140\"\n", "basis.kern", strings.Replace(reviewBasis, "section post = \"HEB 160\"\n", "include \"steel.kern\"\n", 1), "posts.kern", reviewPosts)
 	want(t, exitWrong, []string{"section post: \"HEB 160\" → \"HEB 140\" (steel.kern:1)"}, "review")
+	// what lies in a checkout of its own belongs to no state
+	writeAll(t, "module/.git", "gitdir: elsewhere\n", "module/deep/posts.kern", strings.Replace(reviewPosts, "\"basis", "\"../../basis", 1))
+	if out, _ := kern(t, "review"); strings.Contains(out, "module") {
+		t.Errorf("a submodule is reviewed:\n%s", out)
+	}
+	if err := os.RemoveAll("module"); err != nil {
+		t.Fatal(err)
+	}
 	d.commit("basis.kern", "basis { standard \"EN 1993", "posts.kern", "column {{{")
 	writeAll(t, "basis.kern", reviewBasis, "posts.kern", reviewPosts)
 	want(t, exitRight, []string{"A1"}, "review", "HEAD")

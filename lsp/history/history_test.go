@@ -241,6 +241,25 @@ func TestWorktree(t *testing.T) {
 	}
 }
 
+// TestExtensions reads repositories with extensions that are of no matter to a
+// reader, and says which one it cannot read.
+func TestExtensions(t *testing.T) {
+	d := newDepot(t)
+	d.commit(nil, "a.kern", "one\n")
+	file := filepath.Join(d.dir, ".git", "config")
+	old, err := os.ReadFile(file)
+	d.must(err)
+	d.must(os.WriteFile(file, append(old, "[extensions]\n\tworktreeConfig = true\n\tpartialClone = origin\n"...), 0o644))
+	reads(t, commit(t, open(t, d.dir), "HEAD"), "a.kern", "one\n")
+	d.must(os.WriteFile(file, []byte("[core]\n\trepositoryformatversion = 1\n[extensions]\n\trefStorage = reftable\n"), 0o644))
+	_, err = history.Open(d.dir)
+	fails(t, err, "refstorage")
+	beside := t.TempDir()
+	d.must(os.WriteFile(filepath.Join(beside, ".git"), []byte("gitdir: ../gone\n"), 0o644))
+	_, err = history.Open(beside)
+	fails(t, err, "not there")
+}
+
 // TestShallow says that the history of a shallow clone ends.
 func TestShallow(t *testing.T) {
 	d := newDepot(t)
@@ -310,8 +329,8 @@ func TestOddEntries(t *testing.T) {
 	fails(t, err, "leads nowhere")
 	_, err = x.Read("zmodule")
 	fails(t, err, "submodule")
-	_, err = x.Read("zmodule/a.kern")
-	fails(t, err, "no such file")
+	_, err = x.Read("zmodule/deep/a.kern")
+	fails(t, err, "in the submodule zmodule")
 }
 
 // TestMergeText merges as git does: touching changes are a conflict.

@@ -28,19 +28,6 @@ type Repository struct {
 	repo *git.Repository
 }
 
-// Open opens the repository of a checkout by its absolute path. A checkout whose
-// .git is a file (of a worktree or a submodule) is one too.
-func Open(dir string) (*Repository, error) {
-	r, err := git.PlainOpenWithOptions(dir, &git.PlainOpenOptions{EnableDotGitCommonDir: true})
-	if errors.Is(err, git.ErrRepositoryNotExists) {
-		return nil, ErrNone
-	}
-	if err != nil {
-		return nil, fmt.Errorf("the git repository cannot be read: %w", err)
-	}
-	return &Repository{repo: r}, nil
-}
-
 // Commit is one state of a repository.
 type Commit struct {
 	// Hash is the full hash, in hexadecimal.
@@ -181,6 +168,11 @@ func (c *Commit) Read(name string) (string, error) {
 	for range maxLinks {
 		entry, err := c.tree.FindEntry(name)
 		if err != nil {
+			for dir := path.Dir(name); dir != "."; dir = path.Dir(dir) {
+				if e, err := c.tree.FindEntry(dir); err == nil && e.Mode == filemode.Submodule {
+					return "", errors.New("it lies in the submodule " + dir + ", which is not read")
+				}
+			}
 			return "", errors.New("there is no such file or folder")
 		}
 		switch {
