@@ -245,6 +245,19 @@ func TestDefinitions(t *testing.T) {
 	}
 }
 
+// TestMovedCase: the order of the cases says which of them self-weight belongs to,
+// so that moving one is an edit.
+func TestMovedCase(t *testing.T) {
+	before := edit(t, "case G permanent", "case G permanent\ncase H permanent", "    actions  \"EN 1990:2002\"\n", "", "load Q 90 kN", "load Q 90 kN; load H 5 kN", "load Q 200 kN", "load Q 200 kN\n    load H 5 kN") +
+		"combination c = 1.2 G + 1.5 H + 1.5 Q\n"
+	after := strings.Replace(before, "case G permanent\ncase H permanent", "case H permanent\ncase G permanent", 1)
+	c := change(t, compare(before, after), "A1")
+	sum(t, c)
+	if x := causeOf(c, "moved case"); x == nil || !(x.Share > 0) {
+		t.Errorf("%+v", c)
+	}
+}
+
 // TestTogether: edits that make no sense apart are taken as one.
 func TestTogether(t *testing.T) {
 	before := edit(t, `"HEB 160"`, "tube { width = 200 mm; depth = 120 mm; wall = 8 mm; made = hot }")

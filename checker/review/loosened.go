@@ -67,6 +67,7 @@ func (r *Review) loosened(pairs []match, earlier, later map[string]*side) {
 
 // lowerIsLooser tells of the numbers of a basis of which a smaller one is less safe.
 func lowerIsLooser(name string) bool {
+	// the other way round with resistance factors, phi_c: these are listed as changed
 	return strings.HasPrefix(name, "gamma_") || strings.HasPrefix(name, "factor_") || strings.HasPrefix(name, "xi")
 }
 
@@ -180,7 +181,7 @@ func (r *Review) limits(p match) {
 			if v == 0 {
 				return ""
 			}
-			return strings.TrimSpace(unit.Number(v/u, 3) + " " + symbol)
+			return strings.TrimSpace(unit.Short(v/u, 3) + " " + symbol)
 		}
 		l := Loosening{What: "limit " + what, Before: text(was), After: text(now), Members: []string{y.Name}, Place: p.after.side.lines.at(orElse(at, lang.Place{Decl: y.Decl, Span: y.NameSpan}))}
 		switch {
@@ -219,9 +220,9 @@ func (r *Review) limits(p match) {
 		if now > 0 && was != now && (was == 0 || now < was) {
 			text := ""
 			if was > 0 {
-				text = unit.Number(was, 3)
+				text = unit.Short(was, 3)
 			}
-			r.loosen(Loosening{What: "effective length factor about " + axis + " stated", Before: text, After: unit.Number(now, 3), Members: []string{y.Name}, Place: p.after.side.lines.at(name)})
+			r.loosen(Loosening{What: "effective length factor about " + axis + " stated", Before: text, After: unit.Short(now, 3), Members: []string{y.Name}, Place: p.after.side.lines.at(name)})
 		}
 	}
 }
