@@ -40,7 +40,8 @@ func print(r *Report) string {
 func TestAgainEqualsFromScratch(t *testing.T) {
 	snippets := []string{"\n", "}", "{", "load G 10 kN at top\n", "column C3 as C1 { height = 3 m }\n", "column C1", "section s1 = \"HEB 180\"\n", "section s9 = \"IPE 200\"\n",
 		"height = 4 m\n", "5", "kN", "as C2", " ", "#", "\"", "(", "x = 3 m\n", "case H imposed \"H\"\n", "include \"other.kern\"\n", "C2, C9", "}basis {\n    selfweight off\n}\n", "x = 1 m; column C9 { section = \"HEB 100\" }\n", "basis {\n}\n", "depart slenderness because \"x\"\n", "require N_b_minor >= 1 kN\n",
-		"load G C1.N_Ed\n", "load G L2.base.G at top\n", "require utilisation <= C2.utilisation\n", "pad = C1.base.N / 3 kPa\n", "load G pad * 1 kPa\n", "C3.", ".N_Ed"}
+		"load G C1.N_Ed\n", "load G L2.base.G at top\n", "require utilisation <= C2.utilisation\n", "pad = C1.base.N / 3 kPa\n", "load G pad * 1 kPa\n", "C3.", ".N_Ed",
+		"lift base to 1 m { section = s1 }\n", "lift 1 m to top { section = \"HEB 120\" }\n", "reduce imposed by storeys\n", "moments nominal\n"}
 	r := rand.New(rand.NewPCG(3, 4))
 	rounds := 60
 	if testing.Short() {

@@ -99,6 +99,8 @@ column L13 as F1 { section = bells; height = 2 m; load 20 kN; load 2 kNm about m
 column L14 as F1 { section = bell; height = 20 m; load 1 N; load 2 kNm about major at top; selfweight off }
 column L15 as F1 { section = belln; height = 2 m; load 20 kN; load 2 kNm about major at top }
 column L16 as F1 { section = belln; height = 2 m; load 20 kN; load 1 kNm about minor at top }
+column V3 as F1 { height = 8 m; hold twist at 7 m; load 200 kN; load 20 kNm about major at top; load -19 kNm about major at base }
+column V4 as S4 { hold twist at 1.9 m; height = 2 m; load 20 kN; load 2 kNm about minor at top; load -1.9 kNm about minor at base }
 column V1 { section = "HEB 200"; material = hard; height = 8 m; lift base to 4 m { section = "HEB 260" }; load 200 kN; load 20 kNm about major at top; load 5 kNm about minor at top }
 column V2 as V1 { hold both at 4 m; hold twist at 4 m }
 `

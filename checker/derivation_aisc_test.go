@@ -23,6 +23,7 @@ column E3 as A1 { section = slimun; height = 1 m }
 column E4 as A1 { section = thinroll; effective = 3 about twist }
 column E5 as A1 { section = thinroll; base fixed; top free; material = hard; load 3000 kN }
 column E6 as A1 { section = "HEB 200"; joints 1.2 at base, 2 at top about major sway; joints 1.2 at base, 2 at top about minor braced }
+column E12 as A1 { section = "HEB 200"; joints 0.4 at base, 7 at top about major braced; joints 5 at base, 0.8 at top about minor sway }
 column E7 as A1 { section = flat; effective = 3 about twist }
 column E8 as A1 { section = hairpipe; load 4000 kN; material = hard }
 column E9 as A1 { section = "HEB 200"; load 2500 kN; load 5 kN across major at 2 m; material = hard }

@@ -21,6 +21,18 @@ func (r *Result) Frame() *standard.Frame {
 	return standard.NewFrame(r.env, r.Member, r.combinations)
 }
 
+// Holds is what each hold of the member must be able to do; nil for a member that
+// could not be checked.
+func (r *Result) Holds() []standard.HoldDemand {
+	if len(r.Member.Holds) == 0 || len(r.Checks) == 0 {
+		return nil
+	}
+	if f := r.Frame(); f != nil {
+		return f.Holds()
+	}
+	return nil
+}
+
 // Env is what the member shares with the others of its calculation.
 func (r *Result) Env() *model.Env { return r.env }
 

@@ -211,8 +211,15 @@ func (w *mentions) statement(s *lang.Stmt) {
 		for _, b := range block(s) {
 			w.statement(b)
 		}
-	case "hold": // hold minor at PLACE
+	case "hold": // hold minor at PLACE stiffness VALUE
 		at(2)
+		if len(args) > 3 && args[3].Is("stiffness") {
+			at(4)
+		}
+	case "base", "top": // base spring VALUE
+		if len(args) > 0 && args[0].Is("spring") {
+			at(1)
+		}
 	case "limit": // limit sway = VALUE
 		at(2)
 	case "require": // require SYMBOL >= VALUE

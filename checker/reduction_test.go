@@ -216,3 +216,34 @@ func TestReductionNeverAdds(t *testing.T) {
 		}
 	}
 }
+
+// TestTakedown adds up the building of five floors by hand.
+func TestTakedown(t *testing.T) {
+	m := one(t, `basis { standard "EN 1993-1-1:2005"; actions "EN 1990:2002"; reduce imposed by storeys }`+fiveFloors+"    load W 3 kN across major at f2\n}")
+	down := m.Takedown()
+	if len(down.Levels) != 6 || len(down.Cases) != 4 || down.Levels[0].Name != "roof" || down.Levels[5].Name != "f1" {
+		t.Fatalf("%+v", down)
+	}
+	// G: 60 from the roof, 120 from each floor; Q: 90 from each floor
+	for i := range 6 {
+		same(t, "G below "+down.Levels[i].Name, down.Levels[i].Force[0], 1e3*float64(60+120*i))
+		same(t, "Q below "+down.Levels[i].Name, down.Levels[i].Force[1], 1e3*float64(90*i))
+	}
+	same(t, "G that comes in at f1", down.Levels[5].Load[0], 120e3)
+	same(t, "alpha_n at the base", down.Levels[5].Factor[1], 0.82)
+	same(t, "alpha_n below f3", down.Levels[3].Factor[1], 0.9)
+	same(t, "alpha_n below f4", down.Levels[2].Factor[1], 1)
+	same(t, "R is not reduced", down.Levels[5].Factor[2], 1)
+	same(t, "G at the base", down.Base[0].Axial, 660e3)
+	same(t, "W at the base", down.Base[3].Axial, 50e3)
+	// 3 kN at 8 m of 24 m on two pins: 2 kN at the base
+	if got := math.Abs(down.Base[3].Shear[0]); math.Abs(got-2e3) > 1e-6 {
+		t.Errorf("the shear force at the base is %g N, by hand 2000 N", got)
+	}
+	// own weight: 24 m of HEB 300, A = 149.1 cm2 by the tables
+	m = one(t, `basis { standard "elastic" }`+strings.Replace(fiveFloors, "selfweight off", "", 1)+"}")
+	weight := m.Takedown().Base[0].Axial - 660e3
+	if want := 24 * 149.1e-4 * 7850 * 9.80665; math.Abs(weight/want-1) > 2e-3 {
+		t.Errorf("the column weighs %g N, by hand %g N", weight, want)
+	}
+}

@@ -97,6 +97,9 @@ func (r *Result) Units() derivation.Units { return r.env.Basis.Show }
 
 // CombinationName names the combination of a check, "" for none.
 func (r *Result) CombinationName(c standard.Check) string {
+	if c.Under != "" {
+		return c.Under
+	}
 	if c.Combination < 0 || c.Combination >= len(r.combinations) {
 		return ""
 	}
@@ -128,6 +131,7 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 	if m.Imported != nil {
 		combinations = m.Imported.List()
 	}
+	combinations = standard.Imperfections(env, m, combinations)
 	r := &Result{Name: m.Name, Title: m.Title, Member: m, Standard: env.Basis.Standard, Utilisation: math.NaN(),
 		env: env, combinations: combinations, Departures: m.Departs, Missing: m.Missing}
 	s := find(env.Basis.Standard)

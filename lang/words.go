@@ -4,7 +4,7 @@ package lang
 // number they are never taken for a unit.
 var joinWords = map[string]bool{
 	"at": true, "about": true, "across": true, "from": true, "to": true, "by": true, "per": true, "as": true,
-	"annex": true, "eq": true, "because": true, "offset": true, "and": true, "with": true, "stiffness": true,
+	"annex": true, "eq": true, "because": true, "offset": true, "and": true, "with": true, "stiffness": true, "under": true,
 	"major": true, "minor": true, "both": true, "twist": true, "top": true, "base": true,
 }
 
@@ -24,6 +24,7 @@ var verbs = map[string]bool{
 	"section": true, "material": true, "height": true, "from": true, "base": true, "top": true, "hold": true,
 	"effective": true, "joints": true, "connected": true, "load": true, "limit": true, "require": true, "depart": true, "note": true, "selfweight": true,
 	"standard": true, "actions": true, "show": true, "length": true, "lift": true, "moments": true, "reduce": true, "reduction": true, "slope": true, "net": true,
+	"critical": true, "imperfection": true,
 }
 
 // blockAssigned are starters that are also properties inside a member's block:

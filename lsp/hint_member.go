@@ -197,12 +197,12 @@ func (c *collector) factors(s *lang.Stmt, r *checker.Result) map[*lang.Stmt]stri
 	type row struct{ factors [2][]string }
 	rows := map[*lang.Stmt]*row{}
 	for axis := range frame.Stretches {
-		if !frame.Stands[axis] {
+		if !frame.Stands[axis] || frame.Exact[axis] {
 			continue
 		}
 		for _, t := range frame.Stretches[axis] {
 			line := c.cause(s, m, axis, t)
-			if t.Overridden || line == nil {
+			if t.Overridden || line == nil || frame.Stepped(t.From, t.To) {
 				continue
 			}
 			if rows[line] == nil {
@@ -242,6 +242,17 @@ func (c *collector) cause(s *lang.Stmt, m *model.Member, axis int, t action.Stre
 		}
 		return nil
 	}
+	about := model.Axis(axis).String()
+	if t.Joints {
+		if s.Body != nil {
+			for _, b := range s.Body.Stmts {
+				if b.Word == "joints" && slices.ContainsFunc(b.Args, func(e *lang.Expr) bool { return e.Is(about) }) {
+					return b
+				}
+			}
+		}
+		return nil
+	}
 	taken := false // by a line of another member
 	for _, z := range []float64{t.To, t.From} {
 		for _, h := range m.Holds {
@@ -253,7 +264,6 @@ func (c *collector) cause(s *lang.Stmt, m *model.Member, axis int, t action.Stre
 			}
 		}
 	}
-	about := model.Axis(axis).String()
 	for _, word := range []string{"base", "top"} {
 		if word == "base" && t.From > 0 || word == "top" && t.To < m.Height {
 			continue

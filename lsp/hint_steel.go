@@ -5,6 +5,7 @@ import (
 	"slices"
 	"strings"
 
+	"kern/checker/catalogue"
 	"kern/checker/model"
 	"kern/checker/output"
 	"kern/checker/section"
@@ -28,8 +29,8 @@ func (c *collector) declaredSection(s *lang.Stmt) {
 // usage is what the members of a report make of the sections and materials that
 // calculations name, by where these are named.
 type usage struct {
-	densities   map[lang.Place]float64   // of a section's materials; NaN where they differ
-	thicknesses map[lang.Place][]float64 // of a material's sections, each once
+	densities map[lang.Place]float64          // of a section's materials; NaN where they differ
+	sections  map[lang.Place][]*model.Section // of a material, one of each thickness and form
 }
 
 // usage goes through the members once.
@@ -37,7 +38,7 @@ func (c *collector) usage() *usage {
 	if c.used != nil {
 		return c.used
 	}
-	u := &usage{densities: map[lang.Place]float64{}, thicknesses: map[lang.Place][]float64{}}
+	u := &usage{densities: map[lang.Place]float64{}, sections: map[lang.Place][]*model.Section{}}
 	c.used = u
 	for _, r := range c.report.Members {
 		sec, m := r.Member.Section, r.Member.Material
@@ -49,8 +50,11 @@ func (c *collector) usage() *usage {
 		} else if d != m.Density {
 			u.densities[sec.Place] = math.NaN()
 		}
-		if list := u.thicknesses[m.Place]; !slices.Contains(list, sec.Thickness) {
-			u.thicknesses[m.Place] = append(list, sec.Thickness)
+		alike := func(x *model.Section) bool {
+			return x.Thickness == sec.Thickness && catalogue.FormOf(x.Shape) == catalogue.FormOf(sec.Shape)
+		}
+		if list := u.sections[m.Place]; !slices.ContainsFunc(list, alike) {
+			u.sections[m.Place] = append(list, sec)
 		}
 	}
 	return u
@@ -112,8 +116,8 @@ func (c *collector) declaredMaterial(s *lang.Stmt) {
 	}
 	table31 := c.calc.Env.Basis.TableFy
 	var used []float64 // strengths, each once
-	for _, t := range c.usage().thicknesses[n.Place] {
-		if fy, _, _, ok := m.Strength(t, table31); ok && !slices.Contains(used, fy) {
+	for _, sec := range c.usage().sections[n.Place] {
+		if fy, _, _, ok := m.StrengthOf(sec, table31); ok && !slices.Contains(used, fy) {
 			used = append(used, fy)
 		}
 	}
@@ -171,7 +175,7 @@ func (c *collector) madeOf(s *lang.Stmt, m *model.Member) {
 		if m.Material == nil || m.Material.Grade == nil || m.Section == nil {
 			return
 		}
-		if fy, _, source, ok := m.Material.Strength(m.Section.Thickness, c.calc.Env.Basis.TableFy); ok {
+		if fy, _, source, ok := m.Material.StrengthOf(m.Section, c.calc.Env.Basis.TableFy); ok {
 			c.add(c.behind(s), strengthHint, "fy "+display(c.units(), fy, unit.Stress), func(p *output.Page) {
 				p.Text(output.Words(source + "; the thickest part of " + m.Section.Title() + " is " + display(c.units(), m.Section.Thickness, unit.Length)))
 				c.strengthTip(p, m.Material)

@@ -3,6 +3,7 @@ package lsp
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"kern/checker"
@@ -31,6 +32,10 @@ func (h *hovering) line(s *lang.Stmt) {
 		h.end(r, s.Word)
 	case "effective":
 		h.stretches(r, func(_ int, t action.Stretch) bool { return t.Overridden })
+	case "joints":
+		h.stretches(r, func(axis int, t action.Stretch) bool {
+			return t.Joints && slices.ContainsFunc(s.Args, func(e *lang.Expr) bool { return e.Is(model.Axis(axis).String()) })
+		})
 	case "section":
 		if sec := r.Member.Section; sec != nil {
 			h.page.Text(output.Strong(output.SectionTitle(sec)), output.Words(": "+sectionShort(r.Units(), sec, densityFor(r))))
@@ -118,7 +123,7 @@ func (h *hovering) share(r *checker.Result, own []model.Load) {
 	for _, l := range own {
 		if l.Kind == model.AxialLoad {
 			axial = true
-			sum += combination.Factors[l.Case] * l.Value
+			sum += combination.Factors[l.Case] * l.Value * frame.Reduced(c.Combination, l)
 		}
 	}
 	if !axial {
@@ -147,7 +152,11 @@ func (h *hovering) hold(r *checker.Result, at lang.Place) {
 		case hold.Major:
 			against = "buckling about major"
 		}
-		h.page.Text(output.Words(fmt.Sprintf("Holds %s against %s at %s above its base.", r.Name, against, display(r.Units(), hold.At, unit.Length))))
+		with := ""
+		if hold.Stiffness > 0 {
+			with = ", with a stiffness of " + display(r.Units(), hold.Stiffness, unit.ForcePerLength)
+		}
+		h.page.Text(output.Words(fmt.Sprintf("Holds %s against %s at %s above its base%s.", r.Name, against, display(r.Units(), hold.At, unit.Length), with)))
 		h.stretches(r, func(axis int, t action.Stretch) bool {
 			held := axis == 0 && hold.Major || axis == 1 && hold.Minor
 			return held && (t.From == hold.At || t.To == hold.At || t.Exact)
@@ -187,6 +196,18 @@ func (h *hovering) end(r *checker.Result, word string) {
 	} else {
 		h.page.Text(output.Words(fmt.Sprintf("The %s of %s is %s about major and %s about minor.", word, r.Name, ends[0], ends[1])))
 	}
+	springs := m.BaseSpring
+	if word == "top" {
+		springs = m.TopSpring
+	}
+	for a, s := range springs {
+		if s.Turning > 0 {
+			h.page.Text(output.Words(fmt.Sprintf("A spring of %s about %s works against turning.", display(r.Units(), s.Turning, unit.RotationalStiffness), model.Axis(a))))
+		}
+		if s.Lateral > 0 {
+			h.page.Text(output.Words(fmt.Sprintf("A spring of %s about %s works against moving sideways.", display(r.Units(), s.Lateral, unit.ForcePerLength), model.Axis(a))))
+		}
+	}
 	h.stretches(r, func(_ int, t action.Stretch) bool {
 		return word == "base" && t.From == 0 || word == "top" && t.To == m.Height
 	})
@@ -203,11 +224,14 @@ func (h *hovering) stretches(r *checker.Result, which func(axis int, t action.St
 	var rows [][]output.Line
 	for axis := range frame.Stretches {
 		if !frame.Stands[axis] {
-			h.page.Text(output.Words(fmt.Sprintf("The ends and holds do not keep %s in place about %s.", r.Name, model.Axis(axis))))
+			h.page.Text(output.Words(fmt.Sprintf("Buckling of %s about %s is not known: %s.", r.Name, model.Axis(axis), frame.NotHeld(axis))))
 			continue
 		}
+		if frame.Exact[axis] {
+			h.whole(r, frame, axis)
+		}
 		for _, t := range frame.Stretches[axis] {
-			if !which(axis, t) {
+			if !which(axis, t) || frame.Exact[axis] {
 				continue
 			}
 			k, effective := factor(t.K), display(units, t.Effective(), unit.Length)
@@ -219,6 +243,25 @@ func (h *hovering) stretches(r *checker.Result, which func(axis int, t action.St
 		}
 	}
 	h.page.Table([]string{"axis", "stretch", "ends", "K", "L_cr", "N_cr"}, "lllrrr", rows)
+}
+
+// whole writes the critical load of a whole member about an axis, under the
+// combination that brings it nearest to it.
+func (h *hovering) whole(r *checker.Result, frame *standard.Frame, axis int) {
+	at, least := -1, math.Inf(1)
+	for k := range frame.Combinations {
+		if v := frame.Factor(axis, k); v < least {
+			at, least = k, v
+		}
+	}
+	if at < 0 {
+		return
+	}
+	units := r.Units()
+	n := frame.Compression(at, 0, r.Member.Height)
+	whole := frame.Under(axis, frame.Whole(axis), at)
+	h.page.Text(output.Words(fmt.Sprintf("%s as a whole buckles about %s at %s times %s: N_cr = %s where it is pressed most, which is a buckling length of %s.", r.Name, model.Axis(axis),
+		unit.Short(least, 4), frame.Combinations[at].Name, display(units, least*n, unit.Force), display(units, whole.Effective(), unit.Length))))
 }
 
 // factor writes an effective length factor with two decimals, more where they
@@ -236,7 +279,7 @@ func (h *hovering) strength(r *checker.Result) {
 	if m.Material == nil || m.Section == nil {
 		return
 	}
-	fy, fu, source, ok := m.Material.Strength(m.Section.Thickness, r.Env().Basis.TableFy)
+	fy, fu, source, ok := m.Material.StrengthOf(m.Section, r.Env().Basis.TableFy)
 	if !ok {
 		h.page.Text(output.Words(standard.NoStrength(m) + "."))
 		return

@@ -182,6 +182,9 @@ func (h *hovering) loadCase(n *model.Named) {
 // where they come from; "" for a case that has none.
 func (h *hovering) psi(c *model.Case) string {
 	env := h.calc.Env
+	if env.Basis.Basic() {
+		return ""
+	}
 	values := env.Basis.Combining.Values
 	if env.Basis.Actions == "" {
 		values = action.Recommended

@@ -36,6 +36,12 @@ func (h *hovering) material(m *model.Material) {
 func (h *hovering) grade(g catalogue.Grade) {
 	units := h.units()
 	h.page.Text(output.Strong(g.Name), output.Words(", "+g.Standard+": E = "+display(units, g.E, unit.Stress)+", G = "+display(units, g.G, unit.Stress)+", density "+display(units, g.Density, unit.Density)))
+	if g.American() {
+		h.page.Text(output.Words("Strengths by " + g.Standard + ":"))
+		h.page.Table([]string{"product", "thickness", "fy", "fu"}, "llrr", formRows(units, g))
+		h.page.Text(output.Words("The strengths of " + g.Standard + " were set down from memory: compare them with the standard."))
+		return
+	}
 	table31 := h.calc != nil && h.calc.Env.Basis.TableFy
 	product, eurocode := strengthRows(units, g, false), strengthRows(units, g, true)
 	first, second := product, eurocode
@@ -63,6 +69,15 @@ func (h *hovering) strengths(rows [][]output.Line) {
 		return
 	}
 	h.page.Table([]string{"thickness", "fy", "fu"}, "lrr", rows)
+}
+
+// formRows are the strengths of an American grade by form and thickness.
+func formRows(units derivation.Units, g catalogue.Grade) [][]output.Line {
+	var out [][]output.Line
+	for _, f := range g.Forms() {
+		out = append(out, []output.Line{output.Words(f.Form.String()), output.Words(f.Row), output.Words(display(units, f.Fy, unit.Stress)), output.Words(display(units, f.Fu, unit.Stress))})
+	}
+	return out
 }
 
 // strengthRows are the strengths of a grade by thickness, up to 250 mm: a row

@@ -138,7 +138,11 @@ func (h *hovering) actions() {
 		return
 	}
 	b := h.calc.Env.Basis
-	h.page.Text(output.Strong(b.Actions), output.Words(fmt.Sprintf(": combinations by equation (%s), %d in this calculation", b.Equation, len(h.calc.Env.Automatic))))
+	by := "equation (" + b.Equation + ")"
+	if b.Basic() {
+		by = b.Equation
+	}
+	h.page.Text(output.Strong(b.Actions), output.Words(fmt.Sprintf(": combinations by %s, %d in this calculation", by, len(h.calc.Env.Automatic))))
 	const most = 12
 	var items []output.Line
 	for i, c := range h.calc.Env.Automatic {

@@ -17,7 +17,7 @@ import (
 // stand where no name can.
 func isWord(name string) bool {
 	switch name {
-	case "permanent", "imposed", "snow", "wind", "temperature":
+	case "permanent", "dead", "imposed", "live", "roof", "snow", "rain", "wind", "temperature":
 		return false
 	}
 	if _, ok := lang.Words[name]; ok || lang.Joins(name) || lang.StartsDeclaration(name, false) {

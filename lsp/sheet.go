@@ -63,7 +63,7 @@ func (s *Server) sheet(ctx context.Context, u uri.URI, form string, members []st
 		return "", jsonrpc2.Errorf(jsonrpc2.InvalidParams, "%s", err)
 	}
 	var b strings.Builder
-	if err := printed.Write(&b, form); err != nil {
+	if err := printed.Write(&b, form, nil); err != nil {
 		return "", err
 	}
 	return b.String(), nil

@@ -166,6 +166,11 @@ func (v Values) table(c Case) (Psi, bool) {
 		return p, ok
 	case Wind:
 		return v.wind, true
+	case Temperature:
+		return v.temperature, true
+	case RoofLive:
+		p, ok := v.imposed["H"]
+		return p, ok
 	}
-	return v.temperature, true
+	return Psi{}, false
 }

@@ -18,10 +18,19 @@ type Push struct {
 type Beam struct {
 	Base, Top End
 	Holds     []float64 // heights of rigid lateral holds, strictly inside
-	Height    float64   // m
+	Springs   []Spring
+	Height    float64 // m
 	// Steps are the parts of different stiffness, from the base up; none for a
 	// uniform column.
 	Steps []Step
+}
+
+// Spring is an elastic support of a beam: its stiffnesses are those of the real one
+// divided by E I, where the section changes by that of the base.
+type Spring struct {
+	At      float64 // height, m; a spring against turning stands at an end
+	Lateral float64 // against moving sideways, 1/m3; 0 for none
+	Turning float64 // against turning, 1/m; 0 for none
 }
 
 // Step is a part of a column with a stiffness of its own. It begins at the top of
@@ -97,11 +106,11 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 	}
 	nodes := b.nodes(loadings)
 	n := len(nodes)
-	// Only the ends, holds and changes of section take part in the equations: loads
-	// that lie close together would cost digits there.
+	// Only the ends, holds, springs and changes of section take part in the
+	// equations: loads that lie close together would cost digits there.
 	at := []int{0} // these among the nodes
 	for i := 1; i < n-1; i++ {
-		if b.holdAt(nodes[i]) || b.stepAt(nodes[i]) {
+		if b.holdAt(nodes[i]) || b.springAt(nodes[i]) || b.stepAt(nodes[i]) {
 			at = append(at, i)
 		}
 	}
@@ -136,7 +145,10 @@ func (b Beam) Solve(loadings [][]Push) ([][]Piece, error) {
 	}
 	fixed[1], fixed[size-1] = b.Base.clamped(), b.Top.clamped()
 	// two points kept in place, or one and an end kept from turning
-	if held == 0 || held == 1 && !fixed[1] && !fixed[size-1] {
+	if len(b.Springs) == 0 && (held == 0 || held == 1 && !fixed[1] && !fixed[size-1]) {
+		return nil, ErrMechanism
+	}
+	if len(b.Springs) > 0 && !b.sprung(nodes, at, k) {
 		return nil, ErrMechanism
 	}
 	cases := make([]carried, len(loadings))
@@ -213,6 +225,34 @@ func (b Beam) holdAt(z float64) bool {
 	return false
 }
 
+// springAt tells whether a spring is at a height.
+func (b Beam) springAt(z float64) bool {
+	for _, s := range b.Springs {
+		if math.Abs(s.At-z) <= 1e-9*b.Height {
+			return true
+		}
+	}
+	return false
+}
+
+// sprung adds the springs to the equations. It is false for a beam that can shift
+// or turn all the same.
+func (b Beam) sprung(nodes []float64, at []int, k [][]float64) bool {
+	bar := Bar{Base: b.Base, Top: b.Top, Lateral: make([]float64, len(at)), Turning: make([]float64, len(at))}
+	for _, node := range at {
+		bar.Nodes = append(bar.Nodes, nodes[node])
+		bar.Held = append(bar.Held, b.holdAt(nodes[node]))
+	}
+	for _, s := range b.Springs {
+		i := nodeAt(bar.Nodes, s.At)
+		bar.Lateral[i] += s.Lateral
+		bar.Turning[i] += s.Turning
+		k[2*i][2*i] += s.Lateral
+		k[2*i+1][2*i+1] += s.Turning
+	}
+	return bar.stands()
+}
+
 // carried is a loading by nodes and spans.
 type carried struct {
 	force, moment []float64    // on each node, N and Nm
@@ -279,6 +319,11 @@ func (b Beam) check(loadings [][]Push) error {
 			return ErrLoading
 		}
 	}
+	for _, s := range b.Springs {
+		if !inside(s.At) || !finite(s.Lateral, s.Turning) || s.Lateral < 0 || s.Turning < 0 {
+			return ErrLoading
+		}
+	}
 	for i, s := range b.Steps {
 		if !inside(s.To) || i > 0 && !(s.To > b.Steps[i-1].To) || !finite(s.Stiffness) || !(s.Stiffness > 0) {
 			return ErrLoading
@@ -310,6 +355,9 @@ func finite(x ...float64) bool {
 // nodes are the heights where something holds, pushes or changes.
 func (b Beam) nodes(loadings [][]Push) []float64 {
 	z := append([]float64{0, b.Height}, b.Holds...)
+	for _, s := range b.Springs {
+		z = append(z, s.At)
+	}
 	for _, s := range b.Steps {
 		z = append(z, s.To)
 	}

@@ -19,19 +19,40 @@ const (
 	Wind
 	Temperature
 	Accident   // the design value A_d of an accidental action
-	Earthquake // the design value A_Ed of a seismic action
+	Earthquake // the design value A_Ed of a seismic action; E of ASCE/SEI 7
+	RoofLive   // L_r of ASCE/SEI 7; category H of EN 1990
+	Rain       // R of ASCE/SEI 7
 )
 
-// KindNames are the words of the language for the kinds of action.
-var KindNames = map[string]Kind{"permanent": Permanent, "imposed": Imposed, "snow": Snow, "wind": Wind, "temperature": Temperature,
-	"accidental": Accident, "seismic": Earthquake}
+// kindWords are the words of the language for the kinds of action, and those that
+// mean the same in the United States.
+var kindWords = [...][]string{Permanent: {"permanent", "dead"}, Imposed: {"imposed", "live"}, Snow: {"snow"}, Wind: {"wind"}, Temperature: {"temperature"},
+	Accident: {"accidental"}, Earthquake: {"seismic"}, RoofLive: {"roof"}, Rain: {"rain"}}
 
-// String is the kind's word in the language.
-func (k Kind) String() string {
-	for name, kind := range KindNames {
-		if kind == k {
-			return name
+// KindNames are the words of the language for the kinds of action.
+var KindNames = func() map[string]Kind {
+	out := map[string]Kind{}
+	for k, words := range kindWords {
+		for _, w := range words {
+			out[w] = Kind(k)
 		}
+	}
+	return out
+}()
+
+// KindWords lists the words of the language for the kinds of action, in order.
+func KindWords() []string {
+	var out []string
+	for _, words := range kindWords {
+		out = append(out, words...)
+	}
+	return out
+}
+
+// String is the kind's first word in the language.
+func (k Kind) String() string {
+	if int(k) < len(kindWords) {
+		return kindWords[k][0]
 	}
 	return "unknown"
 }
@@ -39,7 +60,11 @@ func (k Kind) String() string {
 // Variable tells whether actions of the kind are variable: they come and go, and
 // have the values psi_0, psi_1 and psi_2.
 func (k Kind) Variable() bool {
-	return k == Imposed || k == Snow || k == Wind || k == Temperature
+	switch k {
+	case Imposed, Snow, Wind, Temperature, RoofLive, Rain:
+		return true
+	}
+	return false
 }
 
 // Case is a load case: an action that comes and goes as one.
@@ -55,7 +80,7 @@ type Case struct {
 
 // roof tells whether a case is an imposed load on a roof that people enter for
 // maintenance alone, EN 1991-1-1 Table 6.9.
-func (c Case) roof() bool { return c.Kind == Imposed && c.Category == "H" }
+func (c Case) roof() bool { return c.Kind == RoofLive || c.Kind == Imposed && c.Category == "H" }
 
 // The categories of snow in EN 1990 Table A1.1.
 const (

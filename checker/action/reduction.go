@@ -13,6 +13,26 @@ func (c Case) Reducible() bool {
 	return false
 }
 
+// The categories of live loads that ASCE/SEI 7 treats apart.
+const (
+	Assembly = "assembly" // places of public assembly
+	Garage   = "garage"   // passenger vehicles
+)
+
+// ReducibleLive tells whether live loads of a case may be reduced by ASCE/SEI 7
+// 4.7: not those of garages and places of assembly (4.7.4, 4.7.5), nor of roofs,
+// which have a rule of their own (4.8).
+func (c Case) ReducibleLive() bool {
+	if c.Kind != Imposed {
+		return false
+	}
+	switch c.Category {
+	case Assembly, Garage, "C", "F", "G", "H":
+		return false
+	}
+	return true
+}
+
 // StoreyFactor is the reduction factor alpha_n for the imposed load of n storeys
 // above, in 0.5 to 1: EN 1991-1-1 6.3.1.2(11) (6.2), (2 + (n - 2) psi_0)/n for
 // n > 2 (printed in Steel Buildings in Europe, Multi-Storey Part 3, 6.3); in the

@@ -1,5 +1,7 @@
 package action
 
+import "math"
+
 // End is how an end of a column is held against bending about one axis.
 type End uint8
 
@@ -16,6 +18,9 @@ var EndNames = map[string]End{"pinned": Pinned, "fixed": Fixed, "free": Free, "g
 
 // String is the condition's word in the language.
 func (e End) String() string { return [...]string{"pinned", "fixed", "free", "guided"}[e] }
+
+// Held tells whether the end stays in place.
+func (e End) Held() bool { return e.held() }
 
 // held tells whether the end stays in place.
 func (e End) held() bool { return e == Pinned || e == Fixed }
@@ -56,6 +61,8 @@ type Stretch struct {
 	K          float64 // effective length factor
 	Exact      bool    // K was solved for the whole column, see Stretches
 	Overridden bool    // K is the user's
+	Sprung     bool    // a spring keeps it from moving sideways somewhere
+	Whole      bool    // K follows from the critical load of the whole column under a combination
 	Joints     bool    // K follows from the stiffness ratios of rigid joints
 	Direct     bool    // K is 1 by the direct analysis method
 	Stepped    bool    // the section changes in it; K is for one of its sections and one combination
@@ -66,6 +73,22 @@ func (s Stretch) Length() float64 { return s.To - s.From }
 
 // Effective is the effective length.
 func (s Stretch) Effective() float64 { return s.K * s.Length() }
+
+// Spans splits a column at its rigid holds (ascending, strictly inside) without
+// effective length factors: the critical load of the whole column gives them, and
+// K is NaN until then. A column with a free end beyond a hold stays whole.
+func Spans(base, top End, holds []float64, height float64) []Stretch {
+	if len(holds) > 0 && (base == Free || top == Free) {
+		return []Stretch{{To: height, Base: base, Top: top, K: math.NaN(), Exact: true, Whole: true}}
+	}
+	var out []Stretch
+	from, end := 0.0, base
+	for _, h := range holds {
+		out = append(out, Stretch{From: from, To: h, Base: end, Top: Pinned, K: math.NaN(), Whole: true})
+		from, end = h, Pinned
+	}
+	return append(out, Stretch{From: from, To: height, Base: end, Top: top, K: math.NaN(), Whole: true})
+}
 
 // Stretches splits a column of the given height at its holds (ascending,
 // strictly inside). Each stretch is taken for itself, pinned where the column

@@ -165,7 +165,7 @@ func TestAnglesHavePublishedProperties(t *testing.T) {
 		}
 	}
 	for _, e := range All() {
-		if e.Family == "L" && !seen[e.Designation] {
+		if e.Family == "L" && !e.American() && !seen[e.Designation] {
 			t.Errorf("%s has no published line", e.Designation)
 		}
 	}

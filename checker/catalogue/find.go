@@ -6,27 +6,34 @@ import "strings"
 // writing it: "HEB 200", "HE 200 B", "SHS 100x100x5", "SHS 100x5",
 // "CHS 114,3 × 5", "100/100/5 SHS", "CFRHS 200x100x8", "SHS 100x100x5 EN 10219",
 // "UB 457x191x67", "203 x 203 UC 46", "L 100x10", "half IPE 300", "½ HE 300 A",
-// "T 305x457x127". Capitals and blanks do not matter. An unequal angle written
+// "T 305x457x127", and of the American sections "W14x90", "HSS8x8x.5",
+// "HSS6.625x0.280", "Pipe 6 STD", "L4x4x1/2", "2L4x3x3/8x3/8 LLBB". Capitals and
+// blanks do not matter. An unequal angle written
 // shorter leg first is taken with the longer leg upright.
 //
 // A hollow section of a size that its standard does not list is found as long
 // as it can be made, with Listed false. Without a word on how it is made it is
 // taken as hot finished; a rectangular one written shorter side first is taken
-// with the longer side upright. Both are named in Assumed. Find reports false
-// for everything else, whatever the text.
+// with the longer side upright. An American hollow section is taken to be to ASTM
+// A500 unless a standard follows the size ("HSS8x8x1/2 A1085"), which decides the
+// design wall. All this is named in Assumed. Find reports false for everything
+// else, whatever the text.
 func Find(designation string) (Entry, bool) {
+	x := catalogue()
 	var buf [maxName]byte
 	name, ok := compact(buf[:0], designation)
-	if !ok {
-		return Entry{}, false
-	}
-	x := catalogue()
 	if n, found := x.names[string(name)]; found {
 		e := x.entries[n]
 		if e.Product == HotHollow {
 			e.Assumed = assumedHot
 		}
 		return e, true
+	}
+	if e, found := x.american(designation); found {
+		return e, true
+	}
+	if !ok {
+		return Entry{}, false
 	}
 	if n, found := x.turned[string(name)]; found {
 		return x.legsTurned(n), true

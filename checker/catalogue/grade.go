@@ -21,24 +21,29 @@ const (
 type Grade struct {
 	// Name is the canonical name, with the quality: "S355J2", "S275NH". A name
 	// without quality ("S355", "S355H") stands for all qualities of the grade.
+	// American ones: "A992", "A572 Gr 50".
 	Name string
-	// Standard is the product standard, "EN 10025-2" for instance.
+	// Standard is the product standard, "EN 10025-2" or "ASTM A992" for instance.
 	Standard string
-	// E and G are Young's modulus and the shear modulus in Pa, EN 1993-1-1 3.2.6.
+	// E and G are Young's modulus and the shear modulus in Pa, EN 1993-1-1 3.2.6; of
+	// American grades 29000 and 11200 ksi, as AISC 360 takes them.
 	E, G float64
-	// Density is the mass density in kg/m3, EN 1991-1-1 Table A.4.
+	// Density is the mass density in kg/m3, EN 1991-1-1 Table A.4; of American
+	// grades 490 lb/ft3.
 	Density float64
 	// Recalled tells that the strengths of the product standard were set down
 	// from memory and not read in a copy of its table.
 	Recalled bool
 	// Eurocode is the part of Eurocode 3 whose scope the grade is in, "EN
-	// 1993-1-1" up to S460 and "EN 1993-1-12" above, up to S700.
+	// 1993-1-1" up to S460 and "EN 1993-1-12" above, up to S700; "" for American
+	// grades.
 	Eurocode string
 	// Flat tells that the product standard is one of flat products alone (plate
 	// and strip), so that no rolled section and no tube is made to it.
 	Flat bool
 
 	table *strengthTable
+	forms *[]formTable // of an American grade, else nil
 }
 
 // band is one column of a strength table: the value in N/mm2 up to and
@@ -80,7 +85,8 @@ func find(bands []band, mm float64, thinOpen bool) (value, from, upTo float64, o
 // Strength returns the minimum yield strength ReH and the minimum tensile
 // strength Rm in Pa that the grade's product standard requires at a nominal
 // thickness t in metres, and the thickness band of the yield strength, such as
-// "16 < t <= 40 mm". ok is false if the standard has no value for t.
+// "16 < t <= 40 mm". ok is false if the standard has no value for t. The strength
+// of an American grade depends on the form of the product as well: see For.
 func (g Grade) Strength(t float64) (fy, fu float64, row string, ok bool) {
 	mm, ok := thickness(t)
 	if !ok || g.table == nil {
@@ -93,7 +99,11 @@ func (g Grade) Strength(t float64) (fy, fu float64, row string, ok bool) {
 	if fu, _, _, ok = find(g.table.tensile, mm, g.table.thinOpen); !ok {
 		return 0, 0, "", false
 	}
-	return fy * 1e6, fu * 1e6, bandName(from, upTo), true
+	row = bandName(from, upTo)
+	if g.forms != nil {
+		row = bandInches(from, upTo)
+	}
+	return fy * 1e6, fu * 1e6, row, true
 }
 
 // Table31 returns the nominal yield strength fy and ultimate strength fu in Pa

@@ -46,6 +46,13 @@ var gradeIndex = sync.OnceValue(func() *gradesIndex {
 			}
 		}
 	}
+	for _, s := range americanSteels() {
+		g := s.graded()
+		for _, standard := range []string{"", g.Standard} {
+			x.byKey[gradeKey{g.Name, standard}] = len(x.grades)
+		}
+		x.grades = append(x.grades, g)
+	}
 	return x
 })
 
@@ -53,9 +60,14 @@ var gradeIndex = sync.OnceValue(func() *gradesIndex {
 // "S275NH") in a product standard ("EN 10025-2", "EN 10210", "BS EN
 // 10219-1:2006"). With an empty standard EN 10025-2 goes before EN 10210-1, that
 // before EN 10219-1, EN 10025-3, EN 10025-4 and EN 10025-6. In a standard of hollow sections
-// the closing H may be missing. It reports false for a name that the standard
-// does not have and for a standard that the catalogue does not have.
+// the closing H may be missing. American grades: "A992", "A572 Grade 50", "ASTM
+// A500 Gr C", or the grade alone in its standard ("Grade 50" in "ASTM A572"). It
+// reports false for a name that the standard does not have and for a standard
+// that the catalogue does not have.
 func FindGrade(name, standard string) (Grade, bool) {
+	if g, found := findAmericanGrade(name, standard); found {
+		return g, true
+	}
 	n, ok := gradeName(name)
 	if !ok {
 		return Grade{}, false
@@ -74,6 +86,26 @@ func FindGrade(name, standard string) (Grade, bool) {
 		}
 	}
 	return Grade{}, false
+}
+
+// findAmericanGrade is FindGrade for American grades.
+func findAmericanGrade(name, standard string) (Grade, bool) {
+	in := ""
+	if strings.TrimSpace(standard) != "" {
+		var ok bool
+		if in, ok = americanStandard(standard); !ok {
+			return Grade{}, false
+		}
+	}
+	n, ok := americanGradeName(name)
+	if !ok && in != "" && strings.TrimSpace(name) != "" {
+		n, ok = americanGradeName(in + " " + name)
+	}
+	i, found := gradeIndex().byKey[gradeKey{n, in}]
+	if !ok || !found {
+		return Grade{}, false
+	}
+	return gradeIndex().grades[i], true
 }
 
 // gradeName writes a grade's name in capitals without blanks and without the
@@ -129,8 +161,14 @@ func standardName(text string) (string, bool) {
 // NearestGrades returns up to n names of grades nearest to one that FindGrade
 // does not know, each name once. It returns nil for a text that resembles none.
 func NearestGrades(name string, n int) []string {
+	if n <= 0 {
+		return nil
+	}
+	if american, ok := americanGradeName(strings.NewReplacer("_", " ", ",", " ", ":", " ").Replace(name)); ok {
+		return nearestAmericanGrades(american, n)
+	}
 	wanted, ok := gradeName(name)
-	if !ok || n <= 0 {
+	if !ok {
 		return nil
 	}
 	type candidate struct {
@@ -140,7 +178,7 @@ func NearestGrades(name string, n int) []string {
 	class, quality := gradeParts(wanted)
 	var found []candidate
 	for _, g := range gradeIndex().grades {
-		if slices.ContainsFunc(found, func(c candidate) bool { return c.name == g.Name }) {
+		if g.American() || slices.ContainsFunc(found, func(c candidate) bool { return c.name == g.Name }) {
 			continue
 		}
 		d := float64(levenshtein.ComputeDistance(wanted, g.Name))
@@ -155,6 +193,30 @@ func NearestGrades(name string, n int) []string {
 		return nil
 	}
 	names := make([]string, 0, min(n, len(found)))
+	for _, c := range found[:min(n, len(found))] {
+		names = append(names, c.name)
+	}
+	return names
+}
+
+// nearestAmericanGrades returns the names nearest to one of an American grade:
+// those of the standard's number first.
+func nearestAmericanGrades(wanted string, n int) []string {
+	type candidate struct {
+		name     string
+		distance int
+	}
+	number, grade, _ := strings.Cut(wanted, " Gr ")
+	var found []candidate
+	for _, g := range gradeIndex().grades {
+		if g.American() {
+			own, q, _ := strings.Cut(g.Name, " Gr ")
+			d := 10*levenshtein.ComputeDistance(number, own) + levenshtein.ComputeDistance(grade, q)
+			found = append(found, candidate{g.Name, d})
+		}
+	}
+	slices.SortStableFunc(found, func(a, b candidate) int { return cmp.Compare(a.distance, b.distance) })
+	var names []string
 	for _, c := range found[:min(n, len(found))] {
 		names = append(names, c.name)
 	}

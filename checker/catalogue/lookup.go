@@ -104,13 +104,27 @@ var familyWords = map[string]string{
 	"SHS":  "SQUARE HOLLOW SECTION TUBE",
 	"RHS":  "RECTANGULAR HOLLOW SECTION TUBE",
 	"CHS":  "CIRCULAR ROUND HOLLOW SECTION PIPE TUBE",
+	"W":    "WIDE FLANGE BEAM COLUMN OPEN ROLLED AMERICAN",
+	"M":    "MISCELLANEOUS BEAM OPEN ROLLED AMERICAN",
+	"S":    "STANDARD BEAM TAPER FLANGE OPEN ROLLED AMERICAN",
+	"C":    "STANDARD CHANNEL TAPER FLANGE OPEN ROLLED AMERICAN",
+	"MC":   "MISCELLANEOUS CHANNEL TAPER FLANGE OPEN ROLLED AMERICAN",
+	"WT":   "TEE SECTION CUT OPEN ROLLED AMERICAN",
+	"MT":   "TEE SECTION CUT OPEN ROLLED AMERICAN",
+	"ST":   "TEE SECTION CUT TAPER FLANGE OPEN ROLLED AMERICAN",
+	"2L":   "DOUBLE ANGLE PAIR LEG OPEN ROLLED AMERICAN",
+	"HSS":  "HOLLOW STRUCTURAL SECTION SQUARE RECTANGULAR ROUND TUBE AMERICAN",
+	"PIPE": "STEEL PIPE ROUND TUBE AMERICAN",
 }
 
 // descriptors returns the words, in capitals, that a search may use for e.
 func descriptors(e *Entry) []string {
 	d := strings.Fields(strings.ToUpper(e.Designation) + " " + familyWords[e.Family] + " " + e.Standard)
 	d = append(d, strings.TrimPrefix(e.Standard, "EN "), strings.ReplaceAll(e.Standard, " ", ""))
-	if e.Family == "L" {
+	if e.American() {
+		d = append(d, strings.TrimPrefix(strings.ToUpper(e.Designation), e.Family), "AMERICAN", strings.TrimPrefix(e.Standard, "ASTM "))
+	}
+	if e.Family == "L" || e.Family == "2L" {
 		if e.Shape.Depth == e.Shape.Width {
 			d = append(d, "EQUAL")
 		} else {

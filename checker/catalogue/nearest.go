@@ -4,7 +4,9 @@ import (
 	"cmp"
 	"math"
 	"slices"
+	"strconv"
 	"strings"
+	"unicode/utf8"
 
 	"github.com/agnivade/levenshtein"
 )
@@ -18,16 +20,18 @@ func Nearest(designation string, n int) []string {
 	if n <= 0 {
 		return nil
 	}
-	var buf [maxName]byte
-	name, ok := compact(buf[:0], designation)
-	if !ok {
-		return nil
-	}
 	x := catalogue()
-	g := guess(string(name))
-	families, ok := probable(g)
+	g, families, ok := guessAmerican(designation)
 	if !ok {
-		return nil
+		var buf [maxName]byte
+		name, ok := compact(buf[:0], designation)
+		if !ok {
+			return nil
+		}
+		g = guess(string(name))
+		if families, ok = probable(g); !ok {
+			return nil
+		}
 	}
 	type candidate struct {
 		index    int
@@ -36,13 +40,17 @@ func Nearest(designation string, n int) []string {
 	found := make([]candidate, 0, 256)
 	for i := range x.entries {
 		e, s := &x.entries[i], &x.sizes[i]
-		if s.tee != g.tee || !slices.Contains(families, s.family) {
+		if s.tee != g.tee || s.inches != g.inches || !slices.Contains(families, s.family) {
 			continue
 		}
-		if e.Product != OpenSection && (e.Product == ColdHollow) != g.cold {
+		if e.Product != OpenSection && (e.Product == ColdHollow) != g.cold && !g.inches {
 			continue
 		}
-		found = append(found, candidate{i, s.distance(g.numbers)})
+		d := s.distance(g.numbers)
+		if g.inches && s.suffix != g.suffix {
+			d += 0.5 // another weight of the pipe, other legs back to back
+		}
+		found = append(found, candidate{i, d})
 	}
 	slices.SortStableFunc(found, func(a, b candidate) int { return cmp.Compare(a.distance, b.distance) })
 	names := make([]string, 0, min(n, len(found)))
@@ -58,6 +66,63 @@ type guessed struct {
 	numbers []float64 // in mm, at most four
 	cold    bool
 	tee     bool // half of a section
+	inches  bool // American
+	suffix  string
+}
+
+// americanSlips are letters that are written for those of an American family.
+var americanSlips = map[string]string{"WF": "W", "TS": "HSS", "HS": "HSS", "HHS": "HSS", "HSSS": "HSS", "PIP": "PIPE", "PIPES": "PIPE", "LL": "2L", "DL": "2L", "2LS": "2L", "TW": "WT", "CM": "MC"}
+
+// guessAmerican takes apart what seems to be meant for an American designation:
+// the letters are those of a family, and where a European one has the same, the
+// sizes are inches. Numbers that cannot be read are left out.
+func guessAmerican(text string) (g guessed, families []string, ok bool) {
+	if len(text) > maxName || !utf8.ValidString(text) {
+		return g, nil, false
+	}
+	rest := strings.ToUpper(fractionSigns.Replace(strings.TrimSpace(text)))
+	end := strings.IndexFunc(rest, func(r rune) bool { return r < 'A' || r > 'Z' })
+	if strings.HasPrefix(rest, "2L") {
+		end = 2
+	}
+	if end < 0 {
+		end = len(rest)
+	}
+	letters := rest[:end]
+	if slip, found := americanSlips[letters]; found {
+		letters = slip
+	}
+	if americanOrder[letters] == 0 {
+		return g, nil, false
+	}
+	n := americanName{family: letters}
+	rest = rest[end:]
+	if i := strings.Index(rest, " A"); i >= 0 {
+		rest = rest[:i] // a standard, or what is none of sections: A992
+	}
+	rest, _ = n.endings(rest)
+	for field := range strings.SplitSeq(rest, "X") {
+		if len(g.numbers) == len(size{}.numbers) {
+			break
+		}
+		field = mixedNumber(field)
+		if v, ok := parseInches(field); ok {
+			g.numbers = append(g.numbers, float64(v)/inchUnits)
+		} else if over, under, fraction := strings.Cut(field, "/"); fraction {
+			// no fraction of an inch, 1/3, but a number all the same
+			a, err := strconv.ParseFloat(over, 64)
+			b, err2 := strconv.ParseFloat(under, 64)
+			if v := a / b; err == nil && err2 == nil && v > 0 && v < 100 {
+				g.numbers = append(g.numbers, v)
+			}
+		}
+	}
+	const smallestEuropean = 20 // mm; the largest American HP and L have 18 inches
+	if (letters == "HP" || letters == "L") && (len(g.numbers) == 0 || g.numbers[0] >= smallestEuropean) {
+		return g, nil, false
+	}
+	g.inches, g.suffix = true, n.weight+n.back
+	return g, []string{letters}, true
 }
 
 // guess takes a compact name apart without asking that it makes sense.

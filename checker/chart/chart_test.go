@@ -192,6 +192,37 @@ column A { section = "HEB 160"; material = "S355"; height = ` + exact(h) + ` m; 
 	}
 }
 
+// TestVaryTable: the forces of a table grow with a factor, and nothing else can be
+// varied, as the table does not say what they would be then.
+func TestVaryTable(t *testing.T) {
+	table := func(f float64) *checker.Report {
+		files := map[string]string{
+			"a.kern": `basis { standard "EN 1993-1-1:2005" }
+forces "frame.csv" compression positive
+column A1 { section = "HEB 160"; material = "S355"; height = 4 m }
+`,
+			"frame.csv": "member,position [m],combination,N [N],M_major [Nm]\nA1,0,ULS," + exact(300e3*f) + ",0\nA1,4,ULS," + exact(290e3*f) + "," + exact(12e3*f) + "\n",
+		}
+		return checker.Check(lang.Load([]string{"a.kern"}, func(name string) (string, error) { return files[name], nil }, nil), nil)
+	}
+	r := table(1)
+	c, err := chart.Vary(r, r.Members[0], "load", chart.Range{From: 0.5, To: 2, Points: 4})
+	if err != nil {
+		t.Fatal(err)
+	}
+	l := line(t, c, "utilisation")
+	for i, f := range l.X {
+		if want := table(f).Members[0].Utilisation; !(math.Abs(l.Y[i]-want) < 1e-9) {
+			t.Errorf("times %g: %g, want %g", f, l.Y[i], want)
+		}
+	}
+	for _, parameter := range []string{"height", "offset:major", "load:G"} {
+		if _, err := chart.Vary(r, r.Members[0], parameter, chart.Range{Points: 4}); err == nil || !strings.Contains(err.Error(), "frame.csv") {
+			t.Errorf("%s: %v", parameter, err)
+		}
+	}
+}
+
 // TestInteraction: the deciding combination is the main mark.
 func TestInteraction(t *testing.T) {
 	r := check(post(`"EN 1993-1-1:2005"`, "4.8 m"))

@@ -88,7 +88,7 @@ func Resistance(p Plain) (*Chart, error) {
 	}
 	units := first.Units()
 	force := units.For(unit.Force)
-	c := &Chart{Title: p.Section + ", " + p.Material + ": resistance to compression by " + p.Standard, X: Scale{Name: "height", Unit: "m", Most: p.To}, Y: Scale{Name: "resistance", Unit: force.Symbol}}
+	c := &Chart{Title: p.Section + ", " + p.Material + ": resistance to compression by " + strings.TrimSpace(p.Standard+" "+p.Method), X: Scale{Name: "height", Unit: "m", Most: p.To}, Y: Scale{Name: "resistance", Unit: force.Symbol}}
 	var rules []string
 	values := map[string][]float64{}
 	var x []float64

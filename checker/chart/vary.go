@@ -69,6 +69,14 @@ func Vary(report *checker.Report, r *checker.Result, parameter string, where Ran
 
 func find(report *checker.Report, r *checker.Result, parameter string) (*varied, error) {
 	what, of, _ := strings.Cut(parameter, ":")
+	if in := r.Member.Imported; in != nil {
+		if parameter != "load" {
+			return nil, fmt.Errorf("the forces of %s come from the table '%s', which does not say what they would be then: only load can be varied", r.Name, in.Table)
+		}
+		return &varied{name: "factor on the forces", now: 1, where: Range{To: loadRange(r)}, note: "All forces of the table are multiplied by the factor.", at: func(f float64) *checker.Result {
+			return r.With(func(m *model.Member) { m.Imported = in.Scaled(f, f) })
+		}}, nil
+	}
 	switch {
 	case parameter == "height" || parameter == "length":
 		return height(report, r), nil
@@ -115,11 +123,16 @@ func load(r *checker.Result, name string) (*varied, error) {
 		}
 		return nil, fmt.Errorf("%s carries no load of case %s", r.Name, name)
 	}
-	v.where.To = 2
-	if u := r.Utilisation; u > 0 {
-		v.where.To = min(max(2, math.Ceil(1.3/u)), 20)
-	}
+	v.where.To = loadRange(r)
 	return v, nil
+}
+
+// loadRange is up to which factor on its loads a member is looked at.
+func loadRange(r *checker.Result) float64 {
+	if u := r.Utilisation; u > 0 {
+		return min(max(2, math.Ceil(1.3/u)), 20)
+	}
+	return 2
 }
 
 // offset is what the loads along the member stand off further.

@@ -12,21 +12,26 @@ import (
 // are shown in the usual one.
 type Units map[unit.Dim]unit.Unit
 
+// rigidity is that of a member in bending, E I.
+var rigidity, _ = unit.Moment.Mul(unit.Length)
+
 var usual = map[unit.Dim]string{
 	unit.Length: "mm", unit.Area: "mm2", unit.Volume: "cm3", unit.Length4: "cm4", unit.Length6: "cm6", unit.Force: "kN",
 	unit.Stress: "N/mm2", unit.Moment: "kNm", unit.ForcePerLength: "kN/m", unit.Density: "kg/m3", unit.MassPerLength: "kg/m",
 	unit.Mass: "kg", unit.Angle: "rad", unit.Acceleration: "m/s2", unit.WeightDensity: "kN/m3", unit.RotationalStiffness: "kNm/rad",
+	rigidity: "kN*m2",
 }
 
 // customary are the usual units where lengths are shown in inches or feet.
 var customary = map[unit.Dim]string{
 	unit.Length: "in", unit.Area: "in2", unit.Volume: "in3", unit.Length4: "in4", unit.Length6: "in6", unit.Force: "kip",
 	unit.Stress: "ksi", unit.Moment: "kip-ft", unit.ForcePerLength: "klf", unit.Density: "pcf", unit.MassPerLength: "lb/ft", unit.Mass: "lb",
+	rigidity: "kip*in2",
 }
 
-// american tells whether what is not said is shown in US customary units: where
+// American tells whether what is not said is shown in US customary units: where
 // lengths are, or where forces are and nothing is said of lengths.
-func (u Units) american() bool {
+func (u Units) American() bool {
 	if l, ok := u[unit.Length]; ok {
 		return l.Symbol == "in" || l.Symbol == "ft"
 	}
@@ -43,7 +48,7 @@ func (u Units) For(dim unit.Dim) unit.Unit {
 		return s
 	}
 	text, ok := "", false
-	if u.american() {
+	if u.American() {
 		text, ok = customary[dim]
 	}
 	if !ok {

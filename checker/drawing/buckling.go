@@ -11,9 +11,8 @@ import (
 )
 
 // Buckling draws the shapes in which a member buckles about both axes under the
-// combination that its checks of buckling are decided by, each with its factor
-// for the whole member and with what the checks took. It is nil for a member that
-// is not compressed.
+// combination that compresses it most, each with its factor for the whole member
+// and with what the checks took. It is nil for a member that is not compressed.
 func Buckling(r *checker.Result) *Scene {
 	s, ok := about(r)
 	if !ok || s.f == nil {
@@ -26,7 +25,7 @@ func Buckling(r *checker.Result) *Scene {
 	b := buckling{subject: s, combination: k}
 	weak := -1
 	for a := range b.modes {
-		b.modes[a], b.known[a] = b.bar(a).Buckled()
+		b.modes[a], b.known[a] = b.f.Bar(a, k).Buckled()
 		if b.known[a] && (weak < 0 || b.modes[a].Factor < b.modes[weak].Factor*(1-1e-9)) {
 			weak = a
 		}
@@ -45,40 +44,6 @@ type buckling struct {
 	combination int
 	modes       [2]action.Mode
 	known       [2]bool
-}
-
-// bar is the whole member about an axis under the combination.
-func (b *buckling) bar(axis int) *action.Bar {
-	out := &action.Bar{Base: b.m.Base[axis], Top: b.m.Top[axis]}
-	holds := b.holdHeights(axis)
-	held := func(z float64) bool {
-		for _, h := range holds {
-			if math.Abs(h-z) <= 1e-9*b.m.Height {
-				return true
-			}
-		}
-		return false
-	}
-	cuts := b.f.Heights()
-	out.Nodes, out.Held = []float64{0}, []bool{false}
-	for i := range len(cuts) - 1 {
-		n, ei := 1, b.f.Stiffness(axis, (cuts[i]+cuts[i+1])/2)
-		if b.m.Weight { // the force grows all along
-			n = 1 + int(12*(cuts[i+1]-cuts[i])/b.m.Height)
-		}
-		bottom, top := b.f.Between(b.combination, cuts[i], cuts[i+1])
-		for j := range n {
-			t := (float64(j) + 1) / float64(n)
-			z := cuts[i] + t*(cuts[i+1]-cuts[i])
-			if j == n-1 {
-				z = cuts[i+1]
-			}
-			out.Nodes, out.Held = append(out.Nodes, z), append(out.Held, j == n-1 && held(z))
-			out.Force = append(out.Force, bottom+(top-bottom)*(t-0.5/float64(n)))
-			out.Stiffness = append(out.Stiffness, ei)
-		}
-	}
-	return out
 }
 
 // view draws the shape about an axis at x.
@@ -117,7 +82,7 @@ func (b *buckling) view(axis int, x float64, weak int) {
 // lines say at what load the member buckles about an axis, and what the check
 // took instead.
 func (b *buckling) lines(axis int) []string {
-	if !b.f.Stands[axis] {
+	if !b.f.Stands[axis] && !b.known[axis] {
 		return []string{"does not stand"}
 	}
 	out := []string{"at " + show(nil, b.modes[axis].Factor, unit.None) + " × the loads"}
@@ -140,7 +105,11 @@ func (b *buckling) lines(axis int) []string {
 // checked is the stretch about an axis that is nearest to its critical force.
 func (b *buckling) checked(axis int) (action.Stretch, bool) {
 	best, at := math.Inf(-1), -1
+	if !b.f.Stands[axis] {
+		return action.Stretch{}, false // effective lengths cannot tell
+	}
 	for i, s := range b.f.Stretches[axis] {
+		s = b.f.Under(axis, s, b.combination)
 		if u := b.f.Compression(b.combination, s.From, s.To) * s.Effective() * s.Effective(); u > best {
 			best, at = u, i
 		}
@@ -148,7 +117,7 @@ func (b *buckling) checked(axis int) (action.Stretch, bool) {
 	if at < 0 {
 		return action.Stretch{}, false
 	}
-	return b.f.Stretches[axis][at], true
+	return b.f.Under(axis, b.f.Stretches[axis][at], b.combination), true
 }
 
 func (b *buckling) describe() string {

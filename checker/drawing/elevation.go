@@ -42,6 +42,9 @@ func Elevation(r *checker.Result) *Scene {
 		}
 		e.text(Text{At: Point{1, tallSheet - 1.2}, Size: small, Tone: Quiet, Words: clip(words, small, e.width-2, false)})
 	}
+	if in := s.m.Imported; in != nil {
+		e.text(Text{At: Point{1, tallSheet - 1.2}, Size: small, Tone: Quiet, Words: clip("forces from the table "+in.Table, small, e.width-2, false)})
+	}
 	return &Scene{Width: e.width, Height: tallSheet, Title: s.title("elevation"), Description: e.describe(), Items: e.items}
 }
 
@@ -374,6 +377,9 @@ func (e *elevation) describe() string {
 		for _, z := range e.holdHeights(a) {
 			b.WriteString(", held at " + e.show(z, unit.Length))
 		}
+	}
+	if e.m.Imported != nil {
+		return b.String() + "; its forces come from a table."
 	}
 	b.WriteString("; " + count(len(e.m.Loads), "load") + ".")
 	return b.String()

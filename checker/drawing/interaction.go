@@ -151,5 +151,7 @@ func beside(q Point, gap float64) []spot {
 		{Point{q.X + gap, q.Y + 0.9}, Start}, {Point{q.X - gap, q.Y + 0.9}, End},
 		{Point{q.X, q.Y - gap}, Middle}, {Point{q.X, q.Y + gap + 2}, Middle},
 		{Point{q.X + gap, q.Y - gap}, Start}, {Point{q.X + gap, q.Y + gap + 1.6}, Start},
+		{Point{q.X - gap, q.Y - gap}, End}, {Point{q.X - gap, q.Y + gap + 1.6}, End},
+		{Point{q.X, q.Y + gap + 6}, Start}, {Point{q.X, q.Y - gap - 4}, Start},
 	}
 }

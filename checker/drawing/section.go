@@ -9,9 +9,9 @@ import (
 	"kern/lang/unit"
 )
 
-// OutlinePath gives outlines on the paper as a path on a sheet: scale is mm on the
+// outlinePath gives outlines on the paper as a path on a sheet: scale is mm on the
 // sheet for a metre, and the origin of the paper comes to the given point.
-func OutlinePath(style Style, loops []section.Loop, origin Point, scale float64) Path {
+func outlinePath(style Style, loops []section.Loop, origin Point, scale float64) Path {
 	at := func(q section.Point) Point { return Point{origin.X + q.X*scale, origin.Y - q.Y*scale} }
 	path := Path{Style: style}
 	for _, l := range loops {
@@ -36,8 +36,8 @@ func OutlinePath(style Style, loops []section.Loop, origin Point, scale float64)
 	return path
 }
 
-// Extent is the size of outlines whose lower-left corner is the origin, m.
-func Extent(loops []section.Loop) (width, height float64) {
+// extent is the size of outlines whose lower-left corner is the origin, m.
+func extent(loops []section.Loop) (width, height float64) {
 	for _, l := range loops {
 		for _, g := range l {
 			parts := 1
@@ -69,7 +69,7 @@ func Section(s section.Shape, p section.Properties, how Sized) *Scene {
 	if len(loops) == 0 || !(how.Side > 0) {
 		return nil
 	}
-	width, height := Extent(loops)
+	width, height := extent(loops)
 	if !(width > 0) || !(height > 0) {
 		return nil
 	}
@@ -79,7 +79,7 @@ func Section(s section.Shape, p section.Properties, how Sized) *Scene {
 	}
 	d := sectionDrawing{scale: how.Side / max(width, height), width: width, height: height}
 	d.origin = Point{left, above + height*d.scale}
-	d.add(Group{"outline", []Item{OutlinePath(Fill, loops, d.origin, d.scale)}})
+	d.add(Group{"outline", []Item{outlinePath(Fill, loops, d.origin, d.scale)}})
 	for _, l := range loops {
 		for _, g := range l {
 			for i := range 33 {

@@ -53,10 +53,11 @@ func (b *builder) basis() {
 			env.refuse("a line of the basis has an error")
 		}
 	}
+	b.methods()
 }
 
-var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "permanent", "roofs", "accidental", "moments", "reduce", "reduction",
-	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "xi", "factor_yield", "factor_buckling"}
+var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "critical", "imperfection", "permanent", "roofs", "accidental", "moments", "reduce", "reduction",
+	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "xi", "companion_live", "factor_yield", "factor_buckling"}
 
 func (b *builder) basisStmt(r *reader) {
 	basis := &b.env.Basis
@@ -153,6 +154,11 @@ func (b *builder) basisStmt(r *reader) {
 	case "amplification":
 		w, _ := r.wordOf("the amplification", "secant", "simple")
 		basis.Simple = w == "simple"
+	case "critical":
+		basis.Exact = r.critical()
+	case "imperfection":
+		w, _ := r.wordOf("the setting of the sway imperfection", "on", "off")
+		basis.Imperfect = w == "on"
 	case "":
 		return
 	default:
@@ -185,6 +191,16 @@ func (b *builder) method(r *reader, name string, at *lang.Expr) bool {
 			Fixes: []lang.Fix{lang.Replace("Remove it", false, span, "")}})
 		return false
 	}
+	if !b.methodOf(r, name, methods, at) {
+		return false
+	}
+	w, ok := r.wordOf("the method", methods...)
+	b.env.Basis.Method = w
+	return ok
+}
+
+// methodOf takes the word that stands before the method of a standard.
+func (b *builder) methodOf(r *reader, name string, methods []string, at *lang.Expr) bool {
 	if _, ok := r.word("by"); !ok {
 		if r.slip() {
 			return false
@@ -196,15 +212,13 @@ func (b *builder) method(r *reader, name string, at *lang.Expr) bool {
 		r.problem(p)
 		return false
 	}
-	w, ok := r.wordOf("the method", methods...)
-	b.env.Basis.Method = w
-	return ok
+	return true
 }
 
 // override reads a number that replaces one of a standard.
 func (b *builder) override(r *reader) {
 	name := r.stmt.Word
-	needs := map[string]bool{"gamma_G_sup": true, "gamma_G_inf": true, "gamma_Q": true, "xi": true}
+	needs := map[string]bool{"gamma_G_sup": true, "gamma_G_inf": true, "gamma_Q": true, "xi": true, "companion_live": true}
 	for _, s := range b.standards.Names() {
 		for k, v := range b.standards.Overrides(s) {
 			needs[k] = v
@@ -228,6 +242,9 @@ func (b *builder) override(r *reader) {
 	due := want{what: "a factor", min: 0.1, max: 20}
 	if name == "xi" {
 		due = want{what: "a reduction factor", min: 0.5, max: 1}
+	}
+	if name == "companion_live" {
+		due = want{what: "the factor of live loads beside others (ASCE/SEI 7 2.3.1)", min: 0.5, max: 1}
 	}
 	v, span, ok := r.quantity(due)
 	if !ok {

@@ -26,7 +26,7 @@ func (b *builder) cases() {
 		}
 		n.Index = len(env.Cases)
 		env.Cases = append(env.Cases, c)
-		kind, ok := r.wordOf("the kind of action", "permanent", "imposed", "snow", "wind", "temperature", "accidental", "seismic")
+		kind, ok := r.wordOf("the kind of action", action.KindWords()...)
 		if !ok {
 			c.Bad = true
 			continue
@@ -48,7 +48,15 @@ func (b *builder) cases() {
 		r.psi(c)
 		r.end()
 		c.Bad = r.failed
-		if env.Basis.Actions != "" && !c.Bad && c.Kind.Variable() {
+		if env.Basis.Actions == basicStandard && !c.Bad && (c.Kind == action.Temperature || c.Kind == action.Accident) {
+			c.Bad = true
+			r.problem(lang.Problem{Rule: "action-not-combined", Span: name.Span, Message: fmt.Sprintf("the case '%s' is a %s action, which is not among the basic combinations of %s: write its combinations out, without an actions standard", c.Name, c.Kind, basicStandard)})
+		}
+		if env.Basis.Actions == actionsStandard && c.Kind == action.Rain && !c.Bad && c.Stated != [3]bool{true, true, true} {
+			c.Bad = true
+			r.problem(lang.Problem{Rule: "action-not-combined", Span: name.Span, Message: fmt.Sprintf("%s has no combination values for rain: state psi_0, psi_1 and psi_2 of the case '%s' with the reason", actionsStandard, c.Name)})
+		}
+		if env.Basis.Actions == actionsStandard && !c.Bad && c.Kind.Variable() {
 			if _, ok := env.Basis.Combining.Values.Psi(c.Case); !ok {
 				c.Bad = true
 				r.problem(lang.Problem{Rule: "missing-category", Span: name.Span, Message: fmt.Sprintf("the case '%s' needs a category for the combinations of %s: %s", c.Name, env.Basis.Actions, categories[c.Kind]),
@@ -87,9 +95,10 @@ func (env *Env) Declared() bool {
 
 var categories = map[action.Kind]string{
 	action.Permanent: "it has none",
-	action.Imposed:   `"A" homes, "B" offices, "C1" to "C5" congregation, "D1", "D2" shops, "E1", "E2" storage, "F", "G" vehicles, "H" roofs (EN 1990 Table A1.1)`,
+	action.Imposed:   `"A" homes, "B" offices, "C1" to "C5" congregation, "D1", "D2" shops, "E1", "E2" storage, "F", "G" vehicles, "H" roofs (EN 1990 Table A1.1); "assembly" or "garage" for ASCE/SEI 7`,
 	action.Snow:      `"below 1000 m" or "above 1000 m" (height above sea level, EN 1990 Table A1.1)`,
-	action.Wind:      "it has none", action.Temperature: "it has none", action.Accident: "it has none", action.Earthquake: "it has none",
+	action.RoofLive:  "it has none", action.Rain: "it has none",
+	action.Wind: "it has none", action.Temperature: "it has none", action.Accident: "it has none", action.Earthquake: "it has none",
 }
 
 // psi reads the psi values that a case states for itself.
@@ -145,6 +154,8 @@ func category(kind action.Kind, text string) (string, bool) {
 	switch kind {
 	case action.Imposed:
 		switch text {
+		case action.Assembly, action.Garage:
+			return text, true
 		case "A", "B", "C", "C1", "C2", "C3", "C4", "C5", "D", "D1", "D2", "E", "E1", "E2", "F", "G", "H":
 			return text[:1], true
 		}

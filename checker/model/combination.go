@@ -78,6 +78,10 @@ func (b *builder) combinations() {
 			good, at = append(good, c.Case), append(at, i)
 		}
 	}
+	if env.Basis.Actions == basicStandard {
+		b.basics(good, at)
+		return
+	}
 	rules := env.rules(at)
 	made, err := action.Ultimate(good, rules)
 	if err != nil {
@@ -90,6 +94,26 @@ func (b *builder) combinations() {
 		return env.widen(made, at)
 	})
 	env.assume(rules)
+}
+
+// basics makes the combinations of ASCE/SEI 7 of the cases at some indices.
+func (b *builder) basics(good []action.Case, at []int) {
+	env := b.env
+	rules := action.BasicRules{Method: action.Method(env.Basis.Equation), Companion: 1, Exclusive: env.rules(at).Exclusive}
+	if o, ok := env.Basis.Overrides["companion_live"]; ok {
+		rules.Companion = o.Value
+	}
+	made, err := action.Basic(good, rules)
+	if err != nil {
+		b.tooMany(err)
+		return
+	}
+	env.Automatic = env.widen(made, at)
+	env.service = sync.OnceValue(func() []Combination {
+		made, _ := action.BasicService(good, rules) // it has the same limits
+		return env.widen(made, at)
+	})
+	env.assumeBasic(rules)
 }
 
 // widen gives combinations of some of the cases a factor for every case.

@@ -10,8 +10,14 @@ import (
 	"kern/lang"
 )
 
-// actionsStandard is the standard of actions that cases are combined by.
-const actionsStandard = "EN 1990:2002"
+// The standards of actions that cases are combined by.
+const (
+	actionsStandard = "EN 1990:2002"
+	basicStandard   = "ASCE/SEI 7-22"
+)
+
+// ActionsStandards lists the standards that load cases are combined by.
+func ActionsStandards() []string { return []string{actionsStandard, basicStandard} }
 
 // Combining is how the basis wants cases combined.
 type Combining struct {
@@ -29,14 +35,61 @@ func (b *builder) actions(r *reader) bool {
 	if !ok {
 		return false
 	}
+	if name == basicStandard {
+		return b.basic(r, e)
+	}
 	if name != actionsStandard {
-		r.problem(lang.Problem{Rule: "unknown-standard", Span: e.Span, Message: "'" + name + "' is no standard of actions that kern combines to: \"" + actionsStandard + "\"",
-			Fixes: []lang.Fix{lang.Replace("Write "+actionsStandard, false, e.Span, `"`+actionsStandard+`"`)}})
+		p := lang.Problem{Rule: "unknown-standard", Span: e.Span, Message: "'" + name + "' is no standard of actions that kern combines to: \"" + strings.Join(ActionsStandards(), "\", \"") + "\""}
+		offers := Closest(name, ActionsStandards(), 1)
+		if len(offers) == 0 {
+			offers = ActionsStandards()
+		}
+		for _, n := range offers {
+			p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.Span, `"`+n+`"`))
+		}
+		r.problem(p)
 		b.env.refuse("the standard of actions is not known")
 		return false
 	}
 	basis.Actions, basis.Equation = name, action.Equation610
 	return b.actionsAnnex(r) && b.equation(r)
+}
+
+// basic reads by which method ASCE/SEI 7 combines: "by LRFD". at is the standard's
+// name.
+func (b *builder) basic(r *reader, at *lang.Expr) bool {
+	basis := &b.env.Basis
+	if !b.methodOf(r, basicStandard, action.Methods(), at) {
+		b.env.refuse("the standard of actions has an error")
+		return false
+	}
+	w, ok := r.wordOf("the method", action.Methods()...)
+	if !ok {
+		b.env.refuse("the standard of actions has an error")
+		return false
+	}
+	basis.Actions, basis.Equation, basis.ActionsAt = basicStandard, w, r.place(at.Span)
+	return true
+}
+
+// methods holds the method that loads are combined by against the one that
+// strengths are found by: to check one with the other is never right.
+func (b *builder) methods() {
+	basis := &b.env.Basis
+	if basis.Actions != basicStandard || basis.Standard == "" || basis.ActionsAt.Decl == nil {
+		return
+	}
+	problem := func(format string, args ...any) {
+		b.report(lang.Diagnostic{Decl: basis.ActionsAt.Decl, Problem: lang.Problem{Rule: "methods-differ", Span: basis.ActionsAt.Span, Message: fmt.Sprintf(format, args...),
+			Related: []lang.Related{{Place: basis.StandardAt, Message: "the design standard"}}}})
+		b.env.refuse("loads are combined by another method than strengths are found by")
+	}
+	switch {
+	case basis.Method != "" && basis.Method != basis.Equation:
+		problem("loads are combined by %s and strengths are found by %s: both take the same method", basis.Equation, basis.Method)
+	case basis.Method == "" && basis.Equation == string(action.ASD) && strings.HasPrefix(basis.Standard, "EN "):
+		problem("%s has resistances with partial factors; loads for allowable stress design (ASD) are not what they are checked with", basis.Standard)
+	}
 }
 
 func (b *builder) actionsAnnex(r *reader) bool {
@@ -267,6 +320,32 @@ func (env *Env) assume(r action.Rules) {
 	}
 	if quake {
 		say("seismic cases are design values and act to either side (6.12b); the rules of EN 1998 for ductility and detailing are not checked")
+	}
+	env.assumeExclusive()
+}
+
+// assumeBasic lists what the combinations of ASCE/SEI 7 rest on.
+func (env *Env) assumeBasic(r action.BasicRules) {
+	say := func(format string, args ...any) { env.Assumed = append(env.Assumed, fmt.Sprintf(format, args...)) }
+	where := "2.3.1 and 2.3.6"
+	if r.Method == action.ASD {
+		where = "2.4.1 and 2.4.5"
+	}
+	say("actions by %s, basic combinations for %s (%s); snow and wind are its strength-level loads", basicStandard, r.Method, where)
+	live, quake := false, false
+	for _, c := range env.Cases {
+		live = live || c.Kind == action.Imposed && !c.Bad
+		quake = quake || c.Kind == action.Earthquake && !c.Bad
+	}
+	if live && r.Method == action.LRFD {
+		if o, ok := env.Basis.Overrides["companion_live"]; ok {
+			say("live loads beside others with %s in (3), (4) and (6), because \"%s\"", strconv.FormatFloat(r.Companion, 'f', -1, 64), o.Because)
+		} else {
+			say("live loads beside others in full in (3), (4) and (6): companion_live = 0.5 where 2.3.1 exception 1 allows it")
+		}
+	}
+	if quake {
+		say("seismic cases are the whole effect E, the vertical one in it, and act to either side; the detailing that they ask for is not checked")
 	}
 	env.assumeExclusive()
 }

@@ -3,13 +3,14 @@ package model
 import (
 	"strings"
 
+	"kern/checker/action"
 	"kern/lang"
 	"kern/lang/unit"
 )
 
 func (w *memberReader) limit(r *reader) {
 	e := r.peek()
-	word, ok := r.wordOf("what to limit", "utilisation", "slenderness", "sway")
+	word, ok := r.wordOf("what to limit", "utilisation", "slenderness", "sway", "deflection")
 	if !ok {
 		return
 	}
@@ -29,12 +30,62 @@ func (w *memberReader) limit(r *reader) {
 		w.m.Limits.Slenderness, _, _ = r.quantity(want{what: "the limit of slenderness", min: 5, max: 1000})
 		w.m.Limits.SlendernessAt = at
 	case "sway":
-		double = w.m.Limits.Sway != 0
-		w.m.Limits.Sway, _, _ = r.quantity(want{what: "the limit of sway", dim: unit.Length, unit: "mm", max: 10})
-		w.m.Limits.SwayAt = at
+		double = w.m.Limits.Sway.Set()
+		l := Movement{Place: at}
+		l.Limit, _, _ = r.quantity(want{what: "the limit of sway", dim: unit.Length, unit: "mm", max: 10})
+		w.under(r, &l)
+		w.m.Limits.Sway = l
+	case "deflection":
+		double = w.m.Limits.Deflection.Set()
+		w.deflection(r, at)
 	}
 	if double {
 		r.fail("value-given-twice", r.stmt.Line, "the limit of %s is given twice", word)
+	}
+}
+
+// under reads in which combinations a movement is limited.
+func (w *memberReader) under(r *reader, l *Movement) {
+	l.Under = action.Characteristic
+	if _, ok := r.word("under"); ok {
+		word, _ := r.wordOf("what the movement is limited under", "characteristic", "frequent", "quasipermanent")
+		l.Under, _ = action.SituationOf(word)
+	}
+}
+
+// deflection reads the limit of deflections. The word "span" in it is the
+// distance of neighbouring holds, which is known when all holds are.
+func (w *memberReader) deflection(r *reader, at lang.Place) {
+	span := w.m.Height
+	names := r.names
+	r.names = func(e *lang.Expr) (unit.Quantity, *lang.Problem) {
+		if e.Text == "span" && w.env.Names["span"] == nil {
+			return unit.Quantity{Value: span, Dim: unit.Length}, nil
+		}
+		return names(e)
+	}
+	e := r.peek()
+	v, _, ok := r.quantity(want{what: "the limit of deflection", dim: unit.Length, unit: "mm", max: 10})
+	l := Movement{Place: at, Limit: v}
+	w.under(r, &l)
+	w.m.Limits.Deflection = l
+	if !ok {
+		return
+	}
+	lookup := r.names
+	w.spans = func() {
+		for a := range l.Spans {
+			l.Spans[a] = nil
+			for _, s := range w.m.Spans(Axis(a)) {
+				span = s[1] - s[0]
+				q, p := lang.Eval(e, lookup)
+				if p != nil || !(q.Value > 0) {
+					q.Value = unknown
+				}
+				l.Spans[a] = append(l.Spans[a], q.Value)
+			}
+		}
+		w.m.Limits.Deflection = l
 	}
 }
 

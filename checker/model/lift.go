@@ -204,8 +204,8 @@ func (w *memberReader) lifts(missing func(fix, what string)) {
 	}
 }
 
-// PlaceName names a height on a member: the level that lies there, else metres
-// above its base.
+// PlaceName names a height on a member: the level that lies there, its top or
+// base, else metres above its base.
 func (env *Env) PlaceName(m *Member, z float64) string {
 	if m.Levels {
 		for _, l := range env.Levels {
@@ -213,6 +213,12 @@ func (env *Env) PlaceName(m *Member, z float64) string {
 				return l.Name
 			}
 		}
+	}
+	switch {
+	case z <= 1e-6*m.Height:
+		return "base"
+	case z >= m.Height*(1-1e-6):
+		return "top"
 	}
 	return unit.Exact(math.Round(z*1e4)/1e4) + " m"
 }

@@ -33,7 +33,8 @@ func Members(env *Env, d *lang.Decl, known DepartureRules, results Results) []*M
 
 func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, results Results) []*Member {
 	m := &Member{Decl: d, Stmt: s, NameSpan: s.Head, Kind: map[string]Kind{"column": Column, "strut": Strut, "tie": Tie}[s.Word],
-		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight, Nominal: env.Basis.Nominal, Reduction: env.Basis.Reduction}
+		Height: unknown, Net: unknown, Weight: env.Basis.SelfWeight, Nominal: env.Basis.Nominal, Reduction: env.Basis.Reduction,
+		Exact: env.Basis.Exact, Imperfect: env.Basis.Imperfect}
 	w := &memberReader{env: env, m: m, known: known, results: results}
 	r := w.reader(d, s)
 	names := memberNames(s)
@@ -110,6 +111,7 @@ type memberReader struct {
 	said      map[string]bool     // the words of all statements, with an error or not
 	chain     []*lang.Stmt        // the members that it is "as", nearest first
 	asSpan    lang.Span           // the name behind "as"
+	spans     func()              // works out the limits of deflection once all holds are known; nil for none
 	ownHeight bool                // the member says its height itself, though it is "as" another
 	// headless is set when the first line could not be read: what the member
 	// lacks cannot be told then.
@@ -280,6 +282,11 @@ func (w *memberReader) statement(d declared) {
 	case "selfweight":
 		word, _ := r.wordOf("the setting of self-weight", "on", "off")
 		w.m.Weight = word != "off"
+	case "critical":
+		w.m.Exact = r.critical()
+	case "imperfection":
+		word, _ := r.wordOf("the setting of the sway imperfection", "on", "off")
+		w.m.Imperfect = word == "on"
 	case "":
 		w.m.Missing = append(w.m.Missing, fault)
 		return

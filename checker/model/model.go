@@ -104,7 +104,8 @@ type Basis struct {
 	StandardAt  lang.Place
 	Method      string // of a standard that has several: "LRFD" or "ASD"
 	Annex       string
-	Actions     string // "" when not stated
+	Actions     string     // "" when not stated
+	ActionsAt   lang.Place // of ASCE/SEI 7 alone; Equation is its method
 	Equation    string
 	Combining   Combining
 	Show        derivation.Units
@@ -117,7 +118,12 @@ type Basis struct {
 	Direct      bool // stability by the direct analysis method of ANSI/AISC 360 chapter C
 	DirectAt    lang.Place
 	Simple      bool // amplification 1/(1 - N/N_cr) for every moment diagram
+	Exact       bool // critical loads of the whole member instead of effective lengths
+	Imperfect   bool // members that can sway carry the forces of a sway imperfection
 }
+
+// Basic tells whether loads are combined by ASCE/SEI 7.
+func (b *Basis) Basic() bool { return b.Actions == basicStandard }
 
 // Override is a number of the standard that the calculation replaces.
 type Override struct {
@@ -139,8 +145,24 @@ type Material struct {
 	Bad     bool
 }
 
+// StrengthOf is Strength for a section: an American grade depends on the form of
+// the product besides the thickness.
+func (m *Material) StrengthOf(s *Section, table31 bool) (fy, fu float64, source string, ok bool) {
+	if m.Grade == nil || !m.Grade.American() {
+		return m.Strength(s.Thickness, table31)
+	}
+	own, ok := m.Grade.For(s.Shape)
+	if !ok {
+		return unknown, unknown, "", false
+	}
+	of := *m
+	of.Grade = &own
+	return of.Strength(s.Thickness, table31)
+}
+
 // Strength is the yield and ultimate strength for a thickness in metres, and
-// the row of the table it comes from. It is false when there is none.
+// the row of the table it comes from. It is false when there is none. See
+// StrengthOf for the strength in a section.
 func (m *Material) Strength(thickness float64, table31 bool) (fy, fu float64, source string, ok bool) {
 	if m.Grade == nil {
 		return m.Fy, m.Fu, "stated", m.Fy > 0
@@ -270,15 +292,19 @@ type Member struct {
 	From      float64 // height of the base above datum, m
 	Levels    bool    // it stands between levels: From is known
 	Base, Top [2]action.End
-	Holds     []Hold
-	Joints    [2]*action.Joints // stiffness ratios of rigid joints: major, minor; nil for none
-	Leg       Leg               // the leg by which a single angle is connected
-	Factor    [3]float64        // effective length factors of the user: major, minor, twist; 0 for none
-	Loads     []Load
-	Imported  *Imported // forces from a table in place of loads; nil for none
-	Weight    bool      // self-weight counts
-	Nominal   bool      // moments of loads off the centroid are those of simple construction
-	Reduction Reduction
+	// BaseSpring and TopSpring hold the ends besides Base and Top, about each axis.
+	BaseSpring, TopSpring [2]Spring
+	Holds                 []Hold
+	Exact                 bool              // critical loads of the whole member instead of effective lengths
+	Imperfect             bool              // carries the forces of a sway imperfection where it can sway
+	Joints                [2]*action.Joints // stiffness ratios of rigid joints: major, minor; nil for none
+	Leg                   Leg               // the leg by which a single angle is connected
+	Factor                [3]float64        // effective length factors of the user: major, minor, twist; 0 for none
+	Loads                 []Load
+	Imported              *Imported // forces from a table in place of loads; nil for none
+	Weight                bool      // self-weight counts
+	Nominal               bool      // moments of loads off the centroid are those of simple construction
+	Reduction             Reduction
 
 	Limits   Limits
 	Requires []Require
@@ -308,7 +334,43 @@ func (l Leg) Stated() bool { return l.Long || l.Short }
 type Hold struct {
 	At                  float64 // height above the base, m
 	Major, Minor, Twist bool
+	Stiffness           float64 // of a spring, N/m; 0 for a rigid hold
 	Place               lang.Place
+}
+
+// About tells whether the hold keeps the member from moving sideways where it
+// bends about an axis.
+func (h Hold) About(a Axis) bool { return a == Major && h.Major || a == Minor && h.Minor }
+
+// Spring is an elastic hold of an end about one axis.
+type Spring struct {
+	Lateral float64 // against moving sideways, N/m; 0 for none
+	Turning float64 // against turning, Nm/rad; 0 for none
+}
+
+// Sprung tells whether a spring holds the member about an axis.
+func (m *Member) Sprung(a Axis) bool {
+	for _, h := range m.Holds {
+		if h.About(a) && h.Stiffness > 0 {
+			return true
+		}
+	}
+	return m.BaseSpring[a] != Spring{} || m.TopSpring[a] != Spring{}
+}
+
+// Sways tells whether an end of the member can move sideways about an axis.
+func (m *Member) Sways(a Axis) bool { return !m.Base[a].Held() || !m.Top[a].Held() }
+
+// RigidHolds are the heights of the holds about an axis that do not give, from
+// the base up, m.
+func (m *Member) RigidHolds(a Axis) []float64 {
+	var out []float64
+	for _, h := range m.Holds {
+		if h.About(a) && h.Stiffness == 0 {
+			out = append(out, h.At)
+		}
+	}
+	return out
 }
 
 // LoadKind is how a load acts.
@@ -342,10 +404,48 @@ type Load struct {
 // Limits are the bounds that a calculation sets itself; zero for none.
 type Limits struct {
 	Utilisation, Slenderness float64
-	Sway                     float64 // m
+	Sway, Deflection         Movement
 	UtilisationAt            lang.Place
 	SlendernessAt            lang.Place
-	SwayAt                   lang.Place
+}
+
+// Movement is a limit of movements across the member.
+type Movement struct {
+	Limit float64 // of the movement of the top, m; 0 for none
+	// Spans are the limits between the points that hold the member, m, in the order
+	// of Member.Spans about each axis; nil for none.
+	Spans [2][]float64
+	Under action.Situation
+	Place lang.Place
+}
+
+// Set tells whether there is such a limit.
+func (l Movement) Set() bool { return l.Place.Decl != nil }
+
+// Spans are the parts of the member between neighbouring points that something
+// keeps in place about an axis, a spring too, from the base up, m; the whole
+// member where there are no two of them.
+func (m *Member) Spans(a Axis) [][2]float64 {
+	var z []float64
+	if m.Base[a].Held() || m.BaseSpring[a].Lateral > 0 {
+		z = append(z, 0)
+	}
+	for _, h := range m.Holds {
+		if h.About(a) {
+			z = append(z, h.At)
+		}
+	}
+	if m.Top[a].Held() || m.TopSpring[a].Lateral > 0 {
+		z = append(z, m.Height)
+	}
+	if len(z) < 2 {
+		return [][2]float64{{0, m.Height}}
+	}
+	var out [][2]float64
+	for i := range len(z) - 1 {
+		out = append(out, [2]float64{z[i], z[i+1]})
+	}
+	return out
 }
 
 // Require is a condition on a result.

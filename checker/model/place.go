@@ -40,14 +40,29 @@ func (w *memberReader) axis(r *reader) (Axis, bool) {
 	return map[string]Axis{"major": Major, "minor": Minor}[word], ok
 }
 
+// end reads
+//
+//	base pinned|fixed|free|guided [about AXIS]
+//	base spring STIFFNESS [about AXIS]
 func (w *memberReader) end(r *reader) {
-	word, ok := r.wordOf("the end condition", "pinned", "fixed", "free", "guided")
+	word, ok := r.wordOf("the end condition", "pinned", "fixed", "free", "guided", "spring")
 	if !ok {
 		return
 	}
 	end := action.EndNames[word]
 	axes := []Axis{Major, Minor}
 	key := r.stmt.Word
+	var spring Spring
+	if word == "spring" {
+		if spring, ok = r.spring(); !ok {
+			return
+		}
+		if key += " spring"; spring.Lateral > 0 {
+			key += " against moving sideways"
+		} else {
+			key += " against turning"
+		}
+	}
 	if _, about := r.word("about"); about {
 		a, ok := w.axis(r)
 		if !ok {
@@ -63,12 +78,93 @@ func (w *memberReader) end(r *reader) {
 			return
 		}
 		w.first[k] = declared{r.decl, r.stmt}
-		if key == "base" {
-			w.m.Base[a] = end
-		} else {
-			w.m.Top[a] = end
+		ends, springs := &w.m.Base, &w.m.BaseSpring
+		if r.stmt.Word == "top" {
+			ends, springs = &w.m.Top, &w.m.TopSpring
+		}
+		if word != "spring" {
+			ends[a] = end
+			continue
+		}
+		springs[a].Lateral += spring.Lateral
+		springs[a].Turning += spring.Turning
+	}
+}
+
+// lateral and turning are what a stiffness can be.
+var (
+	lateral = want{what: "the stiffness of a hold", dim: unit.ForcePerLength, unit: "kN/m", min: 1e-3, max: 1e13}
+	turning = want{what: "the stiffness of an end against turning", dim: unit.RotationalStiffness, unit: "kNm/rad", min: 1e-3, max: 1e13}
+)
+
+// spring takes the stiffness of an end: its dimension tells what it is against.
+func (r *reader) spring() (Spring, bool) {
+	e := r.peek()
+	if e == nil {
+		r.problem(lang.Problem{Rule: "missing-value", Span: r.stmt.Line, Message: "the spring has no stiffness: " + r.stmt.Word + " spring 4000 kNm/rad against turning, " + r.stmt.Word + " spring 900 kN/m against moving sideways"})
+		return Spring{}, false
+	}
+	if q, p := lang.Eval(e, r.names); p == nil && q.Dim == unit.ForcePerLength {
+		sideways := lateral
+		sideways.what = "the stiffness of an end against moving sideways"
+		v, _, ok := r.quantity(sideways)
+		return Spring{Lateral: v}, ok
+	} else if p == nil && q.Dim == unit.Moment {
+		r.take()
+		problem := lang.Problem{Rule: "wrong-unit", Span: e.Span, Message: "the stiffness of an end against turning needs a unit of rotational stiffness, such as kNm/rad; this is a moment"}
+		if e.Kind == lang.QuantExpr {
+			problem.Fixes = append(problem.Fixes, lang.Replace("Write "+e.Text+"/rad", false, e.UnitSpan(), e.Text+"/rad"))
+		}
+		r.problem(problem)
+		return Spring{}, false
+	}
+	v, _, ok := r.quantity(turning)
+	return Spring{Turning: v}, ok
+}
+
+// settleEnds puts end conditions and springs together: an end of which only
+// springs are said moves where a spring against moving sideways lets it, else it
+// is held in place. A spring beside something rigid would say nothing.
+func (w *memberReader) settleEnds() {
+	for _, e := range []struct {
+		word    string
+		ends    *[2]action.End
+		springs *[2]Spring
+	}{{"base", &w.m.Base, &w.m.BaseSpring}, {"top", &w.m.Top, &w.m.TopSpring}} {
+		for a, s := range e.springs {
+			about := " about " + Axis(a).String()
+			condition, said := w.first[e.word+about]
+			if !said && s.Lateral > 0 {
+				e.ends[a] = action.Free
+			}
+			end, rigid := e.ends[a], ""
+			against := "moving sideways"
+			switch {
+			case said && s.Lateral > 0 && end.Held():
+				rigid = "held in place"
+			case s.Turning > 0 && (end == action.Fixed || end == action.Guided):
+				rigid, against = "held against turning", "turning"
+			}
+			if rigid == "" {
+				continue
+			}
+			at := w.first[e.word+" spring against "+against+about]
+			r := w.reader(at.decl, at.stmt)
+			r.problem(lang.Problem{Rule: "value-given-twice", Span: at.stmt.Line, Message: "the " + e.word + " is " + end.String() + about + ", so it is " + rigid + " already, and a spring against " + against + " has nothing to do",
+				Related: []lang.Related{{Place: lang.Place{Decl: condition.decl, Span: condition.stmt.Line}, Message: "held here"}}})
+			w.m.Missing = append(w.m.Missing, "a line in its block has an error")
+			return
 		}
 	}
+}
+
+// critical reads what critical loads are found by.
+func (r *reader) critical() bool {
+	word, ok := r.wordOf("what critical loads are found by", "exact", "effective")
+	if ok && word == "effective" {
+		r.wordOf("the word 'lengths'", "lengths")
+	}
+	return word == "exact"
 }
 
 // placeOf names the height at which something stands.
@@ -138,8 +234,18 @@ func (w *memberReader) hold(r *reader) {
 		return
 	}
 	if at < 1e-6*w.m.Height || at > w.m.Height*(1-1e-6) {
-		r.fail("outside-the-member", span, "a hold stands between the ends; what holds an end is said by base and top")
+		r.fail("outside-the-member", span, "a hold stands between the ends; what holds an end is said by base and top (top spring 900 kN/m)")
 		return
+	}
+	stiffness := 0.0
+	if _, sprung := r.word("stiffness"); sprung {
+		if word == "twist" {
+			r.fail("wrong-form", r.after(), "a hold against twist is rigid: its stiffness cannot be said here")
+			return
+		}
+		if stiffness, _, ok = r.quantity(lateral); !ok {
+			return
+		}
 	}
 	for _, h := range w.m.Holds {
 		if math.Abs(h.At-at) < 1e-6*w.m.Height && (h.Major && word != "minor" && word != "twist" || h.Minor && word != "major" && word != "twist" || h.Twist && word == "twist") {
@@ -148,7 +254,8 @@ func (w *memberReader) hold(r *reader) {
 			return
 		}
 	}
-	w.m.Holds = append(w.m.Holds, Hold{At: at, Major: word == "major" || word == "both", Minor: word == "minor" || word == "both", Twist: word == "twist", Place: r.place(r.stmt.Line)})
+	w.m.Holds = append(w.m.Holds, Hold{At: at, Major: word == "major" || word == "both", Minor: word == "minor" || word == "both", Twist: word == "twist",
+		Stiffness: stiffness, Place: r.place(r.stmt.Line)})
 }
 
 func (w *memberReader) effective(r *reader) {

@@ -116,7 +116,7 @@ func (env *Env) Accompanied(c Combination, i int) bool {
 		return i < len(c.Accompanying) && c.Accompanying[i]
 	}
 	full := 1.0
-	if env.Basis.Actions != "" {
+	if env.Basis.Actions == actionsStandard {
 		full = env.Basis.Combining.Values.Q
 		if o, ok := env.Basis.Overrides["gamma_Q"]; ok {
 			full = o.Value

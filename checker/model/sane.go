@@ -7,6 +7,7 @@ import (
 	"strings"
 
 	"kern/checker/action"
+	"kern/checker/catalogue"
 	"kern/lang"
 	"kern/lang/unit"
 )
@@ -58,10 +59,15 @@ func (w *memberReader) complete() {
 		m.Missing = append(m.Missing, "its net area cannot be")
 		break
 	}
+	w.settleEnds()
 	sort.SliceStable(m.Holds, func(i, j int) bool { return m.Holds[i].At < m.Holds[j].At })
+	if w.spans != nil && m.Height > 0 {
+		w.spans()
+	}
 	for _, a := range []Axis{Major, Minor} {
 		_, base := w.first["base about "+a.String()]
 		_, top := w.first["top about "+a.String()]
+		base, top = base || m.BaseSpring[a] != Spring{}, top || m.TopSpring[a] != Spring{}
 		switch {
 		case !base && !top:
 			m.Assumed = append(m.Assumed, "pinned at both ends about "+a.String())
@@ -88,14 +94,36 @@ func (w *memberReader) complete() {
 	}
 	if m.Section != nil && m.Material != nil && len(m.Missing) == 0 {
 		w.sane()
+		w.designWall()
 	}
+}
+
+// designWall warns of an American hollow section whose wall counts by another
+// standard than that of the steel.
+func (w *memberReader) designWall() {
+	m := w.m
+	g := m.Material.Grade
+	if g == nil || !g.American() || !catalogue.HollowStandard(m.Section.Standard) || m.Section.Standard == g.Standard {
+		return
+	}
+	if _, ok := g.For(m.Section.Shape); !ok || catalogue.FullWall(g.Standard) == catalogue.FullWall(m.Section.Standard) {
+		return // no standard of such sections, or the same wall
+	}
+	message := fmt.Sprintf("the wall of %s counts with 0.93 of the nominal, as of %s; the steel is of %s, whose walls count in full: \"%s %s\"",
+		m.Section.Designation, m.Section.Standard, g.Standard, m.Section.Designation, strings.TrimPrefix(g.Standard, "ASTM "))
+	if catalogue.FullWall(m.Section.Standard) {
+		size, _, _ := strings.Cut(m.Section.Designation, " ")
+		message = fmt.Sprintf("the wall of %s counts in full, as of %s; the steel is of %s, whose walls count with 0.93 of the nominal: \"%s\"", m.Section.Designation, m.Section.Standard, g.Standard, size)
+		m.Missing = append(m.Missing, "its section has the wall of "+m.Section.Standard+" and its steel is of "+g.Standard)
+	}
+	m.Problems = append(m.Problems, lang.Diagnostic{Decl: m.SectionAt.Decl, Problem: lang.Problem{Rule: "design-wall", Severity: lang.Warning, Span: m.SectionAt.Span, Message: message}})
 }
 
 // sane warns of loads that are out by powers of ten beside what the section
 // can carry at all.
 func (w *memberReader) sane() {
 	m := w.m
-	fy, _, _, ok := m.Material.Strength(m.Section.Thickness, w.env.Basis.TableFy)
+	fy, _, _, ok := m.Material.StrengthOf(m.Section, w.env.Basis.TableFy)
 	if !ok && m.Material.Grade == nil || math.IsNaN(m.Section.Area) {
 		return
 	}

@@ -71,18 +71,19 @@ func readSection(r *reader, newReader func(declared) *reader, d declared, s *Sec
 	return shapedSection(r, newReader, d, s, word)
 }
 
-var shapeWords = []string{"tube", "pipe", "bar", "rod", "isection", "channel", "tee", "angle", "given"}
+var shapeWords = []string{"tube", "pipe", "bar", "rod", "isection", "channel", "tee", "angle", "doubleangle", "given"}
 
 var shapeForms = map[string]string{
-	"tube":     "tube { width = 90 mm; wall = 6.3 mm; made = cold }",
-	"pipe":     "pipe { outside = 168.3 mm; wall = 8 mm; made = hot }",
-	"bar":      "bar { width = 60 mm; depth = 90 mm }",
-	"rod":      "rod { diameter = 50 mm }",
-	"isection": "isection { depth = 400 mm; width = 200 mm; web = 8 mm; flange = 14 mm; made = welded }",
-	"channel":  "channel { depth = 200 mm; width = 75 mm; web = 8 mm; flange = 11 mm; made = rolled }",
-	"tee":      "tee { depth = 150 mm; width = 150 mm; web = 8 mm; flange = 12 mm; made = welded }",
-	"angle":    "angle { depth = 100 mm; width = 75 mm; wall = 8 mm; root = 10 mm }",
-	"given":    "given { A = 24.1 cm2; I_major = 612 cm4; I_minor = 201 cm4; curve = c }",
+	"tube":        "tube { width = 90 mm; wall = 6.3 mm; made = cold }",
+	"pipe":        "pipe { outside = 168.3 mm; wall = 8 mm; made = hot }",
+	"bar":         "bar { width = 60 mm; depth = 90 mm }",
+	"rod":         "rod { diameter = 50 mm }",
+	"isection":    "isection { depth = 400 mm; width = 200 mm; web = 8 mm; flange = 14 mm; made = welded }",
+	"channel":     "channel { depth = 200 mm; width = 75 mm; web = 8 mm; flange = 11 mm; made = rolled }",
+	"tee":         "tee { depth = 150 mm; width = 150 mm; web = 8 mm; flange = 12 mm; made = welded }",
+	"angle":       "angle { depth = 100 mm; width = 75 mm; wall = 8 mm; root = 10 mm }",
+	"doubleangle": "doubleangle { depth = 100 mm; width = 75 mm; wall = 8 mm; gap = 10 mm }",
+	"given":       "given { A = 24.1 cm2; I_major = 612 cm4; I_minor = 201 cm4; curve = c }",
 }
 
 // rolled caches the computed properties of catalogue sections: they never
@@ -114,6 +115,7 @@ func fromCatalogue(r *reader, e *lang.Expr, s *Section) bool {
 	if !entry.Listed {
 		s.Assumed = append(s.Assumed, entry.Designation+" is not among the common sizes of "+entry.Standard)
 	}
+	s.assumePair()
 	if p, ok := rolled.Load(entry.Designation); ok {
 		s.Properties = *p.(*section.Properties)
 	} else {
@@ -197,11 +199,15 @@ func shapedSection(r *reader, newReader func(declared) *reader, d declared, s *S
 	case "tee":
 		shape.Kind, take = section.Tee, plates
 		need = []string{"depth", "width", "web", "flange"}
-	case "angle":
+	case "angle", "doubleangle":
 		shape.Kind = section.Angle
 		take = map[string]func(r *reader){"depth": set(&shape.Depth, wantSize), "width": set(&shape.Width, wantSize), "wall": set(&shape.Wall, wantWall),
 			"root": set(&shape.Root, wantRadius), "toe": set(&shape.Toe, wantRadius), "made": made("rolled", "welded")}
 		need = []string{"depth", "wall"}
+		if word == "doubleangle" {
+			shape.Kind = section.DoubleAngle
+			take["gap"] = set(&shape.Gap, wantRadius)
+		}
 	}
 	if !readBody(newReader, word, d, d.stmt.Body, take) {
 		return false
@@ -239,6 +245,13 @@ func shapedSection(r *reader, newReader func(declared) *reader, d declared, s *S
 	return true
 }
 
+// assumePair names what every check of a pair of angles takes for granted.
+func (s *Section) assumePair() {
+	if s.Shape.Kind == section.DoubleAngle {
+		s.Assumed = append(s.Assumed, "the two angles of "+s.Title()+" act as one: connectors hold them so closely that neither buckles or slips between")
+	}
+}
+
 // complete fills in what a shape leaves open, each as an assumption.
 func (s *Section) complete(corner float64) {
 	shape := &s.Shape
@@ -248,11 +261,12 @@ func (s *Section) complete(corner float64) {
 		if shape.Depth == 0 {
 			shape.Depth = shape.Width
 		}
-	case section.Angle:
+	case section.Angle, section.DoubleAngle:
 		if shape.Width == 0 {
 			shape.Width = shape.Depth
 		}
 	}
+	s.assumePair()
 	if shape.Made == section.MadeUnknown {
 		switch shape.Kind {
 		case section.Tube, section.Pipe:
@@ -266,7 +280,7 @@ func (s *Section) complete(corner float64) {
 				shape.Made = section.Welded
 				assume("'%s' taken as welded, as it has no root fillets (made is not given)", s.Name)
 			}
-		case section.Angle:
+		case section.Angle, section.DoubleAngle:
 			shape.Made = section.Rolled
 			assume("'%s' taken as rolled (made is not given)", s.Name)
 		}

@@ -85,6 +85,43 @@ type (
 		Section  string `json:"section"`
 		Material string `json:"material"`
 	}
+	takedown struct {
+		Levels []storey `json:"levels"`
+		Base   []base   `json:"base"`
+	}
+	storey struct {
+		Level string  `json:"level"`
+		At    amount  `json:"at"`
+		Cases []share `json:"cases"`
+	}
+	share struct {
+		Case      string   `json:"case"`
+		Load      amount   `json:"load"`
+		Force     amount   `json:"force"`
+		Reduction *float64 `json:"reduction,omitempty"`
+	}
+	base struct {
+		Case  string `json:"case"`
+		Axial amount `json:"axial"`
+		Major *bent  `json:"major,omitempty"`
+		Minor *bent  `json:"minor,omitempty"`
+	}
+	bent struct {
+		Shear  amount `json:"shear"`
+		Moment amount `json:"moment"`
+	}
+	hold struct {
+		At              amount `json:"at"`
+		Axis            string `json:"axis"`
+		Compression     amount `json:"compression"`
+		Combination     string `json:"combination"`
+		Force           amount `json:"force"`
+		Clause          string `json:"clause"`
+		Practice        amount `json:"force_common_practice"`
+		Stiffness       amount `json:"stiffness"`
+		StiffnessSource string `json:"stiffness_source"`
+		Stated          amount `json:"stiffness_stated"`
+	}
 	coverage struct {
 		Rule  string `json:"rule"`
 		State string `json:"state"`
@@ -107,7 +144,9 @@ type (
 		Lift        string      `json:"lift,omitempty"`
 		Lifts       []lift      `json:"lifts,omitempty"`
 		Checks      []check     `json:"checks"`
+		Takedown    *takedown   `json:"takedown,omitempty"`
 		Quantities  []quantity  `json:"quantities"`
+		Holds       []hold      `json:"holds,omitempty"`
 		Coverage    []coverage  `json:"coverage"`
 		Assumptions []string    `json:"assumptions"`
 		Departures  []departure `json:"departures"`
@@ -194,6 +233,16 @@ func buildMember(m *checker.Result, r *checker.Report, lines *index, names Names
 			a := amountOf(units, s.Value, sym.Dim)
 			out.Quantities = append(out.Quantities, quantity{sym.Name, a.Value, a.Unit, s.Clause, s.Lift})
 		}
+	}
+	out.Takedown = buildTakedown(m)
+	for _, h := range m.Holds() {
+		stated := h.Stated
+		if stated == 0 {
+			stated = math.NaN()
+		}
+		out.Holds = append(out.Holds, hold{At: amountOf(units, h.At, unit.Length), Axis: h.Axis.String(), Compression: amountOf(units, h.Compression, unit.Force),
+			Combination: m.Combinations()[h.Combination].Name, Force: amountOf(units, h.Force, unit.Force), Clause: standard.HoldForceClause, Practice: amountOf(units, h.Practice, unit.Force),
+			Stiffness: amountOf(units, h.Stiffness, unit.ForcePerLength), StiffnessSource: h.How, Stated: amountOf(units, stated, unit.ForcePerLength)})
 	}
 	for _, c := range m.Coverage {
 		out.Coverage = append(out.Coverage, coverage{c.Rule, c.State.String(), c.Why})

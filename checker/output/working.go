@@ -36,8 +36,10 @@ func Working(p *Page, r *checker.Result, rule string) {
 	if record != nil {
 		p.Head(2, "Loads")
 		Loads(p, r)
+		Takedown(p, r)
 		AllWorking(p, r, record)
 	}
+	Holds(p, r)
 	Coverage(p, r)
 	Assumptions(p, r)
 	Departures(p, r)
@@ -279,12 +281,15 @@ func upper(s string) string {
 }
 
 // rulesOf lists the checks whose steps belong on the page of a whole member, in
-// the order of the steps: those with a row, and those that a required value is
-// worked out in. What does not apply is left out.
+// the order of the steps: those with a row, those that are worked out without one, and
+// those that a required value is worked out in. What does not apply is left out.
 func rulesOf(r *checker.Result, record *derivation.Record) []string {
 	want := map[string]bool{}
 	for _, c := range r.Checks {
 		want[c.Rule] = c.Rule != "requirement" // its value is a step of another check
+	}
+	for _, c := range r.Coverage { // worked out, with nothing to compare: what bracing needs
+		want[c.Rule] = want[c.Rule] || c.State == standard.Checked
 	}
 	for _, q := range r.Member.Requires {
 		if symbol, ok := r.Symbol(q.Symbol); ok {
@@ -435,6 +440,33 @@ func Missing(p *Page, r *checker.Result) {
 		}
 	}
 	p.List(plainLines(list)...)
+}
+
+// Holds writes what each hold must be able to do so that the member can count on
+// it.
+func Holds(p *Page, r *checker.Result) {
+	list := r.Holds()
+	if len(list) == 0 {
+		return
+	}
+	p.Head(2, "What the holds need")
+	var rows [][]Line
+	var from []string
+	units := r.Units()
+	for _, h := range list {
+		stated := "rigid"
+		if h.Stated > 0 {
+			stated = amountText(units, h.Stated, unit.ForcePerLength)
+		}
+		rows = append(rows, []Line{Words(amountText(units, h.At, unit.Length)), Words(h.Axis.String()), Words(amountText(units, h.Compression, unit.Force)), Words(amountText(units, h.Force, unit.Force)),
+			Words(amountText(units, h.Practice, unit.Force)), Words(amountText(units, h.Stiffness, unit.ForcePerLength)), Words(stated), Words(r.Combinations()[h.Combination].Name)})
+		if s := "stiffness: " + h.How; !slices.Contains(from, s) {
+			from = append(from, s)
+		}
+	}
+	p.Table([]string{"at", "about", "compression", "force", "2.5 %", "stiffness needed", "stiffness", "under"}, "llrrrrrl", rows)
+	p.List(plainLines(append([]string{"force: " + standard.HoldForceClause + ", of a bow of L/500 for the one member and the movement of the hold under it; what else pushes on the hold is added",
+		"2.5 %: " + standard.HoldPractice}, from...))...)
 }
 
 // Coverage writes what the standard asks for and what became of it.

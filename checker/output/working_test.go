@@ -112,7 +112,7 @@ func TestWorking(t *testing.T) {
 // back in the language: the numbers give the printed result.
 func TestEquations(t *testing.T) {
 	files := generate.Project(150, 7)
-	for _, name := range []string{"gallery", "hall", "mast", "workshop", "basis", "steel"} {
+	for _, name := range []string{"gallery", "hall", "mast", "workshop", "tower", "basis", "steel"} {
 		text, err := os.ReadFile("../../testdata/boathouse/" + name + ".kern")
 		if err != nil {
 			t.Fatal(err)

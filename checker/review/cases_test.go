@@ -341,6 +341,8 @@ func TestLoosened(t *testing.T) {
 	limit := func(line string) string { return edit(t, "base fixed", "base fixed\n    "+line) }
 	has(limit("limit utilisation = 0.8"), limit("limit utilisation = 0.9"), "limit utilisation raised", true)
 	has(limit("limit slenderness = 180"), plain, "limit slenderness removed", true)
+	has(limit("limit sway = height / 300"), limit("limit sway = height / 200"), "limit sway raised", true)
+	has(limit("limit deflection = span / 300"), plain, "limit deflection removed", true)
 	has(limit("require utilisation <= 0.8"), limit(`require utilisation <= 0.95 because "agreed"`), "requirement loosened", false)
 	has(limit("require N_b_minor >= 100 kN"), limit("require N_b_minor >= 90 kN"), "requirement loosened", true)
 	has(limit("require N_b_minor >= 100 kN"), plain, "requirement removed", true)

@@ -98,6 +98,13 @@ func (r *Review) basis(b, a *side) {
 		stability := map[bool]string{true: "direct", false: "effective lengths"}
 		words(stability[x.Direct], stability[y.Direct], "another method of stability", y.DirectAt)
 	}
+	if x.Exact != y.Exact {
+		stability := map[bool]string{true: "critical loads of the whole member", false: "effective lengths"}
+		words(stability[x.Exact], stability[y.Exact], "another way to critical loads", lang.Place{})
+	}
+	if x.Imperfect && !y.Imperfect {
+		words("counted", "not counted", "sway imperfections no longer count", lang.Place{})
+	}
 	if !x.Nominal && y.Nominal {
 		words("continuous", "nominal", "nominal moments of loads off the centroid", lang.Place{})
 	}
@@ -197,7 +204,8 @@ func (r *Review) limits(p match) {
 	}
 	bound("utilisation", x.Limits.Utilisation, y.Limits.Utilisation, x.Limits.UtilisationAt, y.Limits.UtilisationAt, 1, "")
 	bound("slenderness", x.Limits.Slenderness, y.Limits.Slenderness, x.Limits.SlendernessAt, y.Limits.SlendernessAt, 1, "")
-	bound("sway", x.Limits.Sway, y.Limits.Sway, x.Limits.SwayAt, y.Limits.SwayAt, 1e-3, "mm")
+	r.movement(p, "sway", x.Limits.Sway, y.Limits.Sway)
+	r.movement(p, "deflection", x.Limits.Deflection, y.Limits.Deflection)
 	name := lang.Place{Decl: y.Decl, Span: y.NameSpan}
 	if x.Weight && !y.Weight && p.before.side.calc.Env.Basis.SelfWeight == p.after.side.calc.Env.Basis.SelfWeight {
 		r.loosen(Loosening{What: "self-weight no longer counts", Before: "on", After: "off", Members: []string{y.Name}, Place: p.after.side.lines.at(name)})
@@ -215,6 +223,9 @@ func (r *Review) limits(p match) {
 	if !x.Nominal && y.Nominal && p.before.side.calc.Env.Basis.Nominal == p.after.side.calc.Env.Basis.Nominal {
 		r.loosen(Loosening{What: "nominal moments of loads off the centroid", Before: "continuous", After: "nominal", Members: []string{y.Name}, Place: p.after.side.lines.at(name)})
 	}
+	if x.Imperfect && !y.Imperfect && p.before.side.calc.Env.Basis.Imperfect == p.after.side.calc.Env.Basis.Imperfect {
+		r.loosen(Loosening{What: "sway imperfections no longer count", Before: "on", After: "off", Members: []string{y.Name}, Place: p.after.side.lines.at(name)})
+	}
 	for i, axis := range []string{"major", "minor", "twist"} {
 		was, now := x.Factor[i], y.Factor[i]
 		if now > 0 && was != now && (was == 0 || now < was) {
@@ -225,6 +236,40 @@ func (r *Review) limits(p match) {
 			r.loosen(Loosening{What: "effective length factor about " + axis + " stated", Before: text, After: unit.Short(now, 3), Members: []string{y.Name}, Place: p.after.side.lines.at(name)})
 		}
 	}
+}
+
+// movement compares limits of movements. One that follows the height is not
+// raised by a taller member.
+func (r *Review) movement(p match, what string, was, now model.Movement) {
+	if was.Place.Decl == nil {
+		return
+	}
+	l := Loosening{What: "limit " + what, Before: strings.TrimPrefix(textOf(was.Place.Decl, was.Place.Span), "limit "+what+" = "), Members: []string{p.after.result.Name}}
+	if now.Place.Decl == nil {
+		l.What += " removed"
+		l.Place = p.before.side.lines.at(was.Place)
+		r.loosen(l)
+		return
+	}
+	l.After = strings.TrimPrefix(textOf(now.Place.Decl, now.Place.Span), "limit "+what+" = ")
+	l.Place = p.after.side.lines.at(now.Place)
+	raised := now.Limit > was.Limit
+	for a := range now.Spans {
+		for i := range min(len(now.Spans[a]), len(was.Spans[a])) {
+			raised = raised || now.Spans[a][i] > was.Spans[a][i]
+		}
+	}
+	switch {
+	case l.Before == l.After:
+		return
+	case now.Under != was.Under:
+		l.What += " under other combinations"
+	case raised:
+		l.What += " raised"
+	default:
+		return
+	}
+	r.loosen(l)
 }
 
 // requires compares the conditions that members set on their results.

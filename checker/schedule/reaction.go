@@ -49,6 +49,13 @@ func reactionsOf(r *checker.Result) reactions {
 		return out
 	}
 	env := r.Env()
+	if x, ok := governing(r); ok {
+		// by itself, so that its number in the frame is known
+		out.governing = reactionOf(standard.NewFrame(env, r.Member, []model.Combination{x}), 0)
+	}
+	if r.Member.Imported != nil {
+		return out // the table has combinations and no cases
+	}
 	// every case as a combination of its own
 	alone := make([]model.Combination, len(env.Cases))
 	for i := range alone {
@@ -58,10 +65,6 @@ func reactionsOf(r *checker.Result) reactions {
 	f := standard.NewFrame(env, r.Member, alone)
 	for i := range alone {
 		out.cases = append(out.cases, reactionOf(f, i))
-	}
-	if x, ok := governing(r); ok {
-		// by itself, so that its number in the frame is known
-		out.governing = reactionOf(standard.NewFrame(env, r.Member, []model.Combination{x}), 0)
 	}
 	return out
 }

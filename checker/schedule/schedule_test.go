@@ -115,6 +115,19 @@ func TestReactions(t *testing.T) {
 	}
 }
 
+// TestImported: a member with forces from a table has those of its governing
+// combination at the base, and none by case.
+func TestImported(t *testing.T) {
+	r := check(map[string]string{"a.kern": "basis { standard \"elastic\"; show kN, kNm, mm }\nforces \"f.csv\" compression positive\ncolumn A1 { section = \"HEB 200\"; material = \"S355\"; height = 4 m }\ncolumn B1 { section = \"HEB 200\"; material = \"S355\"; height = 4 m; load 5 kN }\n",
+		"f.csv": "member,position [m],combination,N [kN],V_major [kN],M_major [kNm]\nA1,0,one,412.5,7.5,0\nA1,4,one,410,7.5,30\n"})
+	row := read(t, schedule.New(r, schedule.ByFile))["A1"]
+	for column, want := range map[string]string{"N load [kN]": "", "N governing [kN]": "412.5", "V major governing [kN]": "7.5", "M major governing [kNm]": "0", "governing combination": "one"} {
+		if row[column] != want {
+			t.Errorf("%s is %q, the table has %q", column, row[column], want)
+		}
+	}
+}
+
 // TestSteel holds masses against those that EN 10365 gives: HEB 200 61.3 kg/m, HEA
 // 160 30.4 kg/m.
 func TestSteel(t *testing.T) {

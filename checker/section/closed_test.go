@@ -201,7 +201,7 @@ func TestDefaultRadii(t *testing.T) {
 }
 
 func TestNames(t *testing.T) {
-	for k, want := range []string{"unknown", "tube", "pipe", "bar", "rod", "isection", "channel", "tee", "angle", "ellipse", "given", "unknown"} {
+	for k, want := range []string{"unknown", "tube", "pipe", "bar", "rod", "isection", "channel", "tee", "angle", "ellipse", "doubleangle", "given", "unknown"} {
 		if got := Kind(k).String(); got != want {
 			t.Errorf("kind %d is %q, want %q", k, got, want)
 		}

@@ -66,7 +66,7 @@ func (s Shape) dimensions() (needed, optional, unused []dimension) {
 	all := []dimension{
 		{"depth", s.Depth}, {"width", s.Width}, {"web", s.Web}, {"flange", s.Flange}, {"wall", s.Wall},
 		{outside, s.Diameter}, {"root", s.Root}, {"toe", s.Toe}, {"outer", s.OuterRadius}, {"inner", s.InnerRadius},
-		{"taper", s.Taper}, {"taper at", s.TaperAt},
+		{"taper", s.Taper}, {"taper at", s.TaperAt}, {"gap", s.Gap},
 	}
 	need, may := "", ""
 	switch s.Kind {
@@ -80,12 +80,12 @@ func (s Shape) dimensions() (needed, optional, unused []dimension) {
 		need = "depth,width"
 	case Rod:
 		need = "diameter"
-	case ISection, Tee:
-		need, may = "depth,width,web,flange", "root"
-	case Channel:
+	case ISection, Tee, Channel:
 		need, may = "depth,width,web,flange", "root,toe,taper,taper at"
 	case Angle:
 		need, may = "depth,width,wall", "root,toe"
+	case DoubleAngle:
+		need, may = "depth,width,wall", "root,toe,gap"
 	}
 	for _, d := range all {
 		switch {
@@ -203,38 +203,45 @@ func (s Shape) checkParts() []Fault {
 		below("web", s.Web, b, "the web is not thinner than the width")
 		below("flange", s.Flange, h, "the flange is not thinner than the depth")
 		below("flange", s.Flange, b, "the flange is not thinner than the width")
-	case Angle:
+	case Angle, DoubleAngle:
 		below("wall", s.Wall, side, "the wall is not thinner than the "+sideWord)
 	}
 	if s.Made == Welded && s.Root > 0 {
 		faults = append(faults, Fault{Field: "root", Message: "a welded section is computed without root fillets"})
 	}
-	if s.Kind == Channel && len(faults) == 0 {
+	if len(faults) == 0 {
 		faults = s.checkTaper()
 	}
 	return faults
 }
 
-// checkTaper looks at the flange of a channel from end to end.
+// checkTaper looks at a taper flange from end to end.
 func (s Shape) checkTaper() []Fault {
 	if s.Taper == 0 {
 		return nil // TaperAt says nothing then
 	}
-	h, b := s.Depth, s.Width
+	// The flange from the web's face to its tip, where TaperAt counts from.
+	room, face, b := s.Depth/2, s.Web/2, s.Width/2
+	switch s.Kind {
+	case Tee:
+		room = s.Depth
+	case Channel:
+		face, b = s.Web, s.Width
+	}
 	switch {
 	case s.Made == Welded:
-		return []Fault{{Field: "taper", Message: "a welded channel has parallel flanges"}}
+		return []Fault{{Field: "taper", Message: "a welded section has parallel flanges"}}
 	case s.TaperAt <= 0:
 		return []Fault{{Field: "taper at", Message: "a taper needs the place at which the flange is measured"}}
 	case s.TaperAt > b*(1+1e-9):
-		return []Fault{{Field: "taper at", Message: "the flange is measured outside of the width (" + millimetres(b) + ")", Limit: b}}
+		return []Fault{{Field: "taper at", Message: "the flange is measured outside of the flange (" + millimetres(b) + ")", Limit: b}}
 	}
 	if s.flangeAt(b) < 1e-3*s.Flange {
 		limit := s.Flange / (b - s.TaperAt)
 		return []Fault{{Field: "taper", Message: fmt.Sprintf("the taper leaves no flange at the tip: less than %.3g %%", 100*limit), Limit: limit}}
 	}
-	if s.flangeAt(s.Web) > h/2*(1-1e-5) {
-		limit := (h/2 - s.Flange) / (s.TaperAt - s.Web)
+	if s.flangeAt(face) > room*(1-1e-5) {
+		limit := (room - s.Flange) / (s.TaperAt - face)
 		return []Fault{{Field: "taper", Message: fmt.Sprintf("the flanges meet at the web: less than %.3g %%", 100*limit), Limit: limit}}
 	}
 	return nil

@@ -38,8 +38,14 @@ func TestFaults(t *testing.T) {
 		{"roots just fit", with(hea, func(s *Shape) { s.Root = 85 * mm }), "", 0},
 		{"root wider than the outstand", with(hea, func(s *Shape) { s.Depth, s.Root = 900*mm, 100*mm }), "root", 96.75 * mm},
 		{"welded with a root", with(hea, func(s *Shape) { s.Made = Welded }), "root", 0},
-		{"taper on an I", with(hea, func(s *Shape) { s.Taper = 0.08 }), "taper", 0},
-		{"toe on an I", with(hea, func(s *Shape) { s.Toe = 5 * mm }), "toe", 0},
+		{"taper nowhere on an I", with(hea, func(s *Shape) { s.Taper = 0.08 }), "taper at", 0},
+		{"taper beyond the tip of an I", with(hea, func(s *Shape) { s.Taper, s.TaperAt = 0.08, 101*mm }), "taper at", 100 * mm},
+		{"taper to nothing on an I", with(hea, func(s *Shape) { s.Taper, s.TaperAt = 0.25, 60*mm }), "taper", 0.25},
+		{"taper that fills the web of an I", with(hea, func(s *Shape) { s.Depth, s.Root, s.Taper, s.TaperAt = 30*mm, 0, 0.2, 53.25*mm }), "taper", 0.1},
+		{"taper that leaves the stem of a tee", with(hea, func(s *Shape) { s.Kind, s.Depth, s.Root, s.Taper, s.TaperAt = Tee, 30*mm, 0, 0.1, 53.25*mm }), "", 0},
+		{"welded with a taper", with(hea, func(s *Shape) { s.Made, s.Root, s.Taper, s.TaperAt = Welded, 0, 0.08, 50*mm }), "taper", 0},
+		{"toe thicker than the flange of an I", with(hea, func(s *Shape) { s.Toe = 11 * mm }), "toe", 10 * mm},
+		{"gap in an I", with(hea, func(s *Shape) { s.Gap = 5 * mm }), "gap", 0},
 		{"wall on an I", with(hea, func(s *Shape) { s.Wall = 5 * mm }), "wall", 0},
 		{"taper not a number", with(upn, func(s *Shape) { s.Taper = math.NaN() }), "taper", 0},
 		{"taper nowhere", with(upn, func(s *Shape) { s.TaperAt = 0 }), "taper at", 0},
@@ -63,6 +69,11 @@ func TestFaults(t *testing.T) {
 		{"root longer than a leg", with(leg, func(s *Shape) { s.Root = 75 * mm }), "root", 70 * mm},
 		{"toe thicker than the leg", with(leg, func(s *Shape) { s.Toe = 11 * mm }), "toe", 10 * mm},
 		{"toe as thick as the leg", with(leg, func(s *Shape) { s.Toe = 10 * mm }), "", 0},
+		{"sound double angle", with(leg, func(s *Shape) { s.Kind, s.Gap = DoubleAngle, 10*mm }), "", 0},
+		{"double angle that touches", with(leg, func(s *Shape) { s.Kind = DoubleAngle }), "", 0},
+		{"double angle that overlaps", with(leg, func(s *Shape) { s.Kind, s.Gap = DoubleAngle, -1*mm }), "gap", 0},
+		{"double angle as thick as a leg", with(leg, func(s *Shape) { s.Kind, s.Wall = DoubleAngle, 80*mm }), "wall", 80 * mm},
+		{"gap in an angle", with(leg, func(s *Shape) { s.Gap = 10 * mm }), "gap", 0},
 	} {
 		faults := c.s.Check()
 		_, err := Compute(c.s)
@@ -120,7 +131,7 @@ func FuzzCompute(f *testing.F) {
 	f.Add(uint8(6), uint8(1), 100.0, 1e-3, 1e-5, 1e-5, 0.0, 0.0, 1e-300, 1e-18, 0.0, 0.0, 1e-20, 1e-9)
 	f.Add(uint8(8), uint8(4), 100.0, 1.1e-5, 0.0, 0.0, 1e-5, 0.0, 0.0, 1e-5, 0.0, 0.0, 0.0, 0.0)
 	f.Fuzz(func(t *testing.T, kind, made uint8, depth, width, web, flange, wall, diameter, root, toe, outer, inner, taper, at float64) {
-		s := Shape{Kind: Kind(kind % 12), Made: Made(made % 6), Depth: depth, Width: width, Web: web, Flange: flange, Wall: wall,
+		s := Shape{Kind: Kind(kind % 13), Made: Made(made % 6), Depth: depth, Width: width, Web: web, Flange: flange, Wall: wall,
 			Diameter: diameter, Root: root, Toe: toe, OuterRadius: outer, InnerRadius: inner, Taper: taper, TaperAt: at}
 		faults := s.Check()
 		loops := s.Outline()

@@ -11,7 +11,9 @@ var kindNames = [...]string{
 	Tee:      "tee",
 	Angle:    "angle",
 	Ellipse:  "ellipse",
-	Given:    "given",
+
+	DoubleAngle: "doubleangle",
+	Given:       "given",
 }
 
 var madeNames = [...]string{

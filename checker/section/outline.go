@@ -50,7 +50,8 @@ func (l Loop) Length() float64 {
 	return sum
 }
 
-// Outline gives the closed outlines of the shape, the outer one first. It is
+// Outline gives the closed outlines of the shape, the outer one first (a double
+// angle has two outer ones and no holes). It is
 // nil for a shape that fails Check, and for a kind that has no geometry. The
 // outlines are exact but for those of an Ellipse, which are drawn with circular
 // arcs, see ellipse.
@@ -100,9 +101,9 @@ type corner struct {
 }
 
 // corners gives the polygons of the shape before rounding, the outer one
-// counter-clockwise and first, holes clockwise.
+// counter-clockwise and first, holes clockwise. A double angle has two outer ones.
 func (s Shape) corners() [][]corner {
-	h, b, tw, tf, t := s.Depth, s.Width, s.Web, s.Flange, s.Wall
+	h, b, tw, t := s.Depth, s.Width, s.Web, s.Wall
 	at := func(x, y float64) corner { return corner{x: x, y: y} }
 	root := func(x, y float64) corner { return corner{x, y, s.Root, "root"} }
 	toe := func(x, y float64) corner { return corner{x, y, s.Toe, "toe"} }
@@ -119,9 +120,10 @@ func (s Shape) corners() [][]corner {
 			{inner(t, t), inner(t, h-t), inner(b-t, h-t), inner(b-t, t)},
 		}
 	case ISection:
+		tip, heel := s.flangeAt(b/2), s.flangeAt(tw/2)
 		return [][]corner{{
-			at(0, 0), at(b, 0), at(b, tf), root(right, tf), root(right, h-tf), at(b, h-tf),
-			at(b, h), at(0, h), at(0, h-tf), root(left, h-tf), root(left, tf), at(0, tf),
+			at(0, 0), at(b, 0), toe(b, tip), root(right, heel), root(right, h-heel), toe(b, h-tip),
+			at(b, h), at(0, h), toe(0, h-tip), root(left, h-heel), root(left, heel), toe(0, tip),
 		}}
 	case Channel:
 		tip, heel := s.flangeAt(b), s.flangeAt(tw)
@@ -129,18 +131,25 @@ func (s Shape) corners() [][]corner {
 			at(0, 0), at(b, 0), toe(b, tip), root(tw, heel), root(tw, h-heel), toe(b, h-tip), at(b, h), at(0, h),
 		}}
 	case Tee:
+		tip, heel := s.flangeAt(b/2), s.flangeAt(tw/2)
 		return [][]corner{{
-			at(left, 0), at(right, 0), root(right, h-tf), at(b, h-tf),
-			at(b, h), at(0, h), at(0, h-tf), root(left, h-tf),
+			at(left, 0), at(right, 0), root(right, h-heel), toe(b, h-tip),
+			at(b, h), at(0, h), toe(0, h-tip), root(left, h-heel),
 		}}
 	case Angle:
 		return [][]corner{{at(0, 0), at(b, 0), toe(b, t), root(t, t), toe(t, h), at(0, h)}}
+	case DoubleAngle:
+		// The outstanding legs are on top, as the flange of a tee is.
+		l, r := b, b+s.Gap // the backs
+		return [][]corner{
+			{at(r, 0), toe(r+t, 0), root(r+t, h-t), toe(r+b, h-t), at(r+b, h), at(r, h)},
+			{at(l, 0), at(l, h), at(0, h), toe(0, h-t), root(l-t, h-t), toe(l-t, 0)},
+		}
 	}
 	return nil
 }
 
-// flangeAt is a channel's flange thickness at the distance x from the web's
-// back.
+// flangeAt is the flange thickness at the distance x from where TaperAt counts.
 func (s Shape) flangeAt(x float64) float64 { return s.Flange + s.Taper*(s.TaperAt-x) }
 
 // tangent describes vertex i of a polygon: the unit direction of the edge that

@@ -43,7 +43,7 @@ type Properties struct {
 	Angle  float64 // from the paper's x axis to the major axis, rad, (-pi/2, pi/2]
 	Turned bool    // the major axis lies closer to the paper's y axis than to its x axis
 
-	Perimeter float64 // length of the outer outline, m
+	Perimeter float64 // length of the outer outline, of both angles of a DoubleAngle, m
 }
 
 // symmetry tells about which of the paper's axes a shape is its own mirror
@@ -54,7 +54,7 @@ func (s Shape) symmetry() (aboutX, aboutY bool) {
 		return true, true
 	case Channel:
 		return true, false
-	case Tee:
+	case Tee, DoubleAngle:
 		return false, true
 	}
 	return false, false
@@ -75,6 +75,9 @@ func Compute(s Shape) (Properties, error) {
 		segments = append(segments, l...)
 	}
 	p := Properties{Perimeter: loops[0].Length()}
+	if s.Kind == DoubleAngle {
+		p.Perimeter += loops[1].Length()
+	}
 
 	_, size := extent(segments)
 	aboutX, aboutY := s.symmetry()

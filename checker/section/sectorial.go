@@ -18,6 +18,8 @@ import "math"
 //	          thickness, Bleich), h' from the flange's mid-line to the stem's end
 //	Angle     shear centre where the mid-lines meet;
 //	          Iw = t3 (h'3 + b'3)/36, h' and b' from that point to the toes
+//	DoubleAngle  shear centre where its axis of symmetry meets the mid-line of
+//	          the outstanding legs; Iw twice that of one angle, a lower bound
 func (s Shape) sectorial(centroid Point, iy float64) (shear Point, iw float64) {
 	cube := func(v float64) float64 { return v * v * v }
 	switch s.Kind {
@@ -33,6 +35,9 @@ func (s Shape) sectorial(centroid Point, iy float64) (shear Point, iw float64) {
 	case Angle:
 		m := s.Wall / 2
 		return Point{m, m}, cube(s.Wall) * (cube(s.Depth-m) + cube(s.Width-m)) / 36
+	case DoubleAngle:
+		_, iw := s.oneAngle().sectorial(Point{}, 0)
+		return Point{centroid.X, s.Depth - s.Wall/2}, 2 * iw
 	}
 	return centroid, 0
 }

@@ -16,6 +16,7 @@ import "math"
 //	pipe                        2 A/pi
 //	ellipse                     2 (h - t) A/U and 2 (b - t) A/U, U the mid-line's length
 //	bar, rod                    A
+//	double angle                the area of the two legs along the force
 //
 // The clause has no line for an angle: the area of its shorter leg is taken for
 // both directions. Nor has it one for an elliptical hollow section: what its wall
@@ -49,6 +50,8 @@ func (s Shape) shearAreas(a float64) (alongY, alongX float64) {
 			return a - b*tf + (tw+2*r)*tf/2, b * tf
 		}
 		return tw * (h - tf/2), b * tf
+	case DoubleAngle:
+		return 2 * h * s.Wall, 2 * b * s.Wall
 	case Angle:
 		leg := math.Min(h, b) * s.Wall
 		return leg, leg

@@ -25,7 +25,7 @@ func fillet(r, d float64) float64 {
 // chords gives the chords at x and, for panels, the places where their course
 // changes.
 func chords(s Shape, x float64) []interval {
-	h, b, tw, tf, t := s.Depth, s.Width, s.Web, s.Flange, s.Wall
+	h, b, tw, t := s.Depth, s.Width, s.Web, s.Wall
 	switch s.Kind {
 	case Bar:
 		return []interval{{0, h}}
@@ -60,19 +60,28 @@ func chords(s Shape, x float64) []interval {
 		if d <= 0 {
 			return []interval{{0, h}}
 		}
-		f := tf + fillet(s.Root, d)
+		f := channelFace(halfFlange(s), math.Abs(x-b/2))
 		return []interval{{0, f}, {h - f, h}}
 	case Tee:
 		d := math.Abs(x-b/2) - tw/2
 		if d <= 0 {
 			return []interval{{0, h}}
 		}
-		return []interval{{h - tf - fillet(s.Root, d), h}}
+		return []interval{{h - channelFace(halfFlange(s), math.Abs(x-b/2)), h}}
 	case Angle:
 		if x <= t {
 			return []interval{{0, h - fillet(s.Toe, t-x)}}
 		}
 		return []interval{{0, t + fillet(s.Root, x-t) - fillet(s.Toe, b-x)}}
+	case DoubleAngle:
+		x = math.Abs(x-b-s.Gap/2) - s.Gap/2
+		switch {
+		case x < 0:
+			return nil
+		case x <= t:
+			return []interval{{fillet(s.Toe, t-x), h}}
+		}
+		return []interval{{h - t - fillet(s.Root, x-t) + fillet(s.Toe, b-x), h}}
 	case Channel:
 		if x <= tw {
 			return []interval{{0, h}}
@@ -81,6 +90,13 @@ func chords(s Shape, x float64) []interval {
 		return []interval{{0, f}, {h - f, h}}
 	}
 	return nil
+}
+
+// halfFlange is the half of an I or a tee as a channel whose web has half the
+// thickness.
+func halfFlange(s Shape) Shape {
+	s.Web, s.Width = s.Web/2, s.Width/2
+	return s
 }
 
 // channelFace is the height of the lower flange's inner face at x, its root and
@@ -118,8 +134,16 @@ func panels(s Shape) []float64 {
 	case Tube:
 		return ordered(0, s.OuterRadius, s.Wall, s.Wall+s.InnerRadius, b-s.Wall-s.InnerRadius, b-s.Wall, b-s.OuterRadius, b)
 	case ISection, Tee:
+		slant := s.Taper / math.Sqrt(1+s.Taper*s.Taper)
 		l, r := (b-tw)/2, (b+tw)/2
-		return ordered(0, l-s.Root, l, r, r+s.Root, b)
+		root, toe := s.Root*(1-slant), s.Toe*(1-slant)
+		return ordered(0, toe, l-root, l, r, r+root, b-toe, b)
+	case DoubleAngle:
+		var all []float64
+		for _, x := range []float64{0, s.Wall - s.Toe, s.Wall, s.Wall + s.Root, b - s.Toe, b} {
+			all = append(all, b-x, b+s.Gap+x)
+		}
+		return ordered(all...)
 	case Angle:
 		return ordered(0, s.Wall-s.Toe, s.Wall, s.Wall+s.Root, b-s.Toe, b)
 	}
@@ -286,6 +310,9 @@ func randomShape(r *rand.Rand) Shape {
 			}
 			s.Web, s.Flange = b*u(0.02, 0.4), side*u(0.02, 0.4)
 			s.Root = maybe(side * u(0, 0.2))
+			if r.IntN(2) == 0 {
+				s.Taper, s.TaperAt, s.Toe = u(0.01, 0.18), b*u(0.1, 0.45), maybe(s.Flange*u(0, 0.6))
+			}
 		case Channel:
 			s.Kind, s.Made = Channel, Rolled
 			s.Web, s.Flange = b*u(0.02, 0.3), side*u(0.05, 0.3)
@@ -293,8 +320,11 @@ func randomShape(r *rand.Rand) Shape {
 			if r.IntN(2) == 0 {
 				s.Taper, s.TaperAt = u(0.01, 0.18), b*u(0.3, 0.9)
 			}
-		case Angle:
+		case Angle, DoubleAngle:
 			s.Kind, s.Made, s.Wall = Angle, Rolled, side*u(0.03, 0.4)
+			if r.IntN(2) == 0 {
+				s.Kind, s.Gap = DoubleAngle, maybe(side*u(0, 0.5))
+			}
 			s.Root, s.Toe = maybe(s.Wall*u(0, 1.5)), maybe(s.Wall*u(0, 1))
 			if r.IntN(3) == 0 {
 				s.Width = s.Depth

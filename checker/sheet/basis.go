@@ -202,7 +202,7 @@ func (c *composer) cases(env *model.Env) {
 		v, ok := env.Basis.Combining.Values.Psi(x.Case)
 		for i := range v {
 			psi := output.Words("–")
-			if ok && x.Kind.Variable() && env.Basis.Actions != "" {
+			if ok && x.Kind.Variable() && env.Basis.Actions != "" && !env.Basis.Basic() {
 				psi = output.Words(unit.Exact(v[i]))
 			}
 			row = append(row, psi)
@@ -247,7 +247,7 @@ func (c *composer) levels(env *model.Env) {
 func (c *composer) combinations(p part) {
 	var list []model.Combination
 	for _, r := range p.results {
-		if len(r.Combinations()) > 0 {
+		if len(r.Combinations()) > 0 && r.Member.Imported == nil {
 			list = r.Combinations()
 			break
 		}

@@ -19,7 +19,7 @@ func BenchmarkSheet(b *testing.B) {
 				if err != nil {
 					b.Fatal(err)
 				}
-				if err := s.Write(io.Discard, form); err != nil {
+				if err := s.Write(io.Discard, form, nil); err != nil {
 					b.Fatal(err)
 				}
 			}

@@ -306,7 +306,7 @@ func (f *flow) equations(e output.Equations) {
 			groups := []mark{symbolMark(x.Symbol)}
 			for i, text := range []string{x.Formula, x.Numbers, x.Value} {
 				switch {
-				case text == "":
+				case text == "" || i == 1 && text == x.Value: // "W = W_pl = 5 cm3" says it once
 				case i == 0: // the symbol stays with its formula
 					groups[0] = row(groups[0], mark{kind: operatorMark, text: "="}, expression(text))
 				default:

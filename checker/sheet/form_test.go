@@ -42,14 +42,15 @@ func TestHarmless(t *testing.T) {
 	if strings.Contains(markdown, "\n<img") || strings.Contains(markdown, " <img") || strings.Count(markdown, "<!--") != 1 || strings.Contains(markdown, "[x](y)") && !strings.Contains(markdown, `\[x](y)`) {
 		t.Error("the Markdown has marks of the calculation's own")
 	}
-	on := map[string]bool{}
+	on, all := map[string]bool{}, ""
 	for _, p := range pdfPages(t, printed(t, r, "pdf", sheet.Options{})) {
 		for _, w := range p.words {
 			on[w.text] = true
+			all += w.text + " "
 		}
 	}
-	for _, due := range []string{`\(x`, "Tj", "ET", "<script>alert(1)</", "-->", "é", "□□"} {
-		if !on[due] && !strings.Contains(fmt.Sprint(on), due) {
+	for _, due := range []string{`\(x`, "Tj", "ET", "<script>alert(1)</", "-->", "é", "□□", "stands for a letter"} {
+		if !on[due] && !strings.Contains(all, due) {
 			t.Errorf("the PDF lacks the words %q", due)
 		}
 	}
@@ -170,7 +171,7 @@ func luminance(t *testing.T, hex string) float64 {
 // TestOnThePaper: no word of a PDF lies outside the paper's margins, on either
 // paper, whatever the length of titles and formulas.
 func TestOnThePaper(t *testing.T) {
-	files := generate.BentProject(12, 4)
+	files := generate.BentProject(4, 4)
 	files["long.kern"] = "basis { standard \"elastic\" }\ncolumn A1 \"" + strings.Repeat("A very long title of a column ", 12) + "\" { section = \"HEB 160\"; material = \"S355\"; height = 4 m; load 20 kN; note \"" + strings.Repeat("x", 400) + "\" }\n"
 	r := check(files)
 	for _, paper := range []sheet.Paper{sheet.A4, sheet.Letter} {
@@ -242,7 +243,7 @@ func TestMark(t *testing.T) {
 	}
 	for _, form := range forms {
 		var b bytes.Buffer
-		if err := s.Write(&b, form); err != nil {
+		if err := s.Write(&b, form, nil); err != nil {
 			t.Fatal(err)
 		}
 		m, ok := sheet.ReadMark(b.Bytes())
@@ -268,6 +269,26 @@ func TestMark(t *testing.T) {
 	}
 	if names != "basis.kern\ngallery.kern\nodd name & (x) -- é.kern\nsteel.kern\n" {
 		t.Errorf("the inputs are\n%s", names)
+	}
+}
+
+// TestTable: a table of forces is an input like any other.
+func TestTable(t *testing.T) {
+	files := map[string]string{"job/a.kern": "basis { standard \"elastic\" }\nforces \"f.csv\" compression positive\ncolumn A1 { section = \"HEB 200\"; material = \"S355\"; height = 4 m }\n",
+		"job/f.csv": "member,combination,N [kN]\nA1,one,412.5\nA1,two,300\n"}
+	r := check(files)
+	s, err := sheet.New(r, sheet.Options{Asked: []string{"job/a.kern"}})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if len(s.Inputs.Files) != 2 || s.Inputs.Files[1].Name != "f.csv" || s.Inputs.Files[1].Asked {
+		t.Errorf("the inputs are %+v", s.Inputs.Files)
+	}
+	page := string(printed(t, r, "markdown", sheet.Options{Full: true}))
+	for _, due := range []string{"| one ", "| two ", "412.5 kN", "Forces from the table"} {
+		if !strings.Contains(page, due) {
+			t.Errorf("the sheet lacks %q", due)
+		}
 	}
 }
 

@@ -150,7 +150,7 @@ func (h *htmlWriter) equations(e output.Equations) {
 		h.b.WriteString("</p><p class=\"formula\">")
 		h.formula(symbolMark(x.Symbol), "")
 		for _, f := range []string{x.Formula, x.Numbers} {
-			if f != "" {
+			if f != "" && f != x.Value { // "W = W_pl = 5 cm3" says it once
 				h.formula(row(mark{kind: operatorMark, text: "="}, expression(f)), "")
 			}
 		}
@@ -163,7 +163,7 @@ func (h *htmlWriter) equations(e output.Equations) {
 // formula writes a formula in pieces between which its line may be broken.
 func (h *htmlWriter) formula(m mark, attributes string) {
 	for _, c := range chunks(m) {
-		h.b.WriteString("<math" + attributes + ">")
+		h.b.WriteString("<math displaystyle=\"true\"" + attributes + ">")
 		mathml(&h.b, c)
 		h.b.WriteString("</math> ")
 	}

@@ -1,6 +1,7 @@
 package sheet
 
 import (
+	"fmt"
 	"math"
 	"strings"
 
@@ -41,6 +42,7 @@ func (c *composer) member(group []*checker.Result) []output.Block {
 		add(1, func(p *output.Page) {
 			p.Head(2, "Loads")
 			output.Loads(p, r)
+			output.Takedown(p, r)
 		})
 		out = append(out, c.forces(r)...)
 	}
@@ -63,7 +65,7 @@ func (c *composer) member(group []*checker.Result) []output.Block {
 	}
 	add(1, func(p *output.Page) {
 		output.Coverage(p, r)
-		output.Assumptions(p, r)
+		assumptions(p, r)
 		output.Departures(p, r)
 		output.Notes(p, r)
 	})
@@ -105,4 +107,25 @@ func factsOf(l output.List) Facts {
 		out = append(out, Fact{name, output.Words(value)})
 	}
 	return out
+}
+
+// assumptions lists what is assumed of a member. What is assumed of the combinations
+// stands with the basis, once.
+func assumptions(p *output.Page, r *checker.Result) {
+	var own []output.Line
+	shared := 0
+	for _, a := range r.Assumptions {
+		if contains(r.Env().Assumed, a) {
+			shared++
+			continue
+		}
+		own = append(own, output.Words(a))
+	}
+	if shared > 0 {
+		own = append(own, output.Words(fmt.Sprintf("what the combinations assume: %s, below the combinations of the basis", plural(shared, "line"))))
+	}
+	if len(own) > 0 {
+		p.Head(2, "Assumptions")
+		p.List(own...)
+	}
 }

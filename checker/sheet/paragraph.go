@@ -46,7 +46,11 @@ func (l look) pieces(line output.Line) []piece {
 			continue
 		case output.Mono:
 			if symbolName.MatchString(x.Text) {
-				out = append(out, piece{box: l.inked(set(symbolMark(x.Text), l.size, false, 0))})
+				b := l.inked(set(symbolMark(x.Text), l.size, false, 0))
+				if len(b.ops) > 1 || b.ops[0].text != x.Text { // read and copied as the language writes it
+					b.ops = append(append([]op{{kind: readOp, text: x.Text}}, b.ops...), op{kind: endOp})
+				}
+				out = append(out, piece{box: b})
 				continue
 			}
 		}
@@ -116,6 +120,8 @@ func raisedWords(f face, size float64, s string) box {
 	if start < len(s) {
 		b.put(words(f, size, s[start:]), b.width, 0)
 	}
+	// read and copied as the language writes units
+	b.ops = append(append([]op{{kind: readOp, text: powers.Replace(s)}}, b.ops...), op{kind: endOp})
 	return b
 }
 

@@ -8,14 +8,17 @@ import (
 	"time"
 	"unicode/utf16"
 
+	"kern/checker"
 	"kern/checker/drawing"
+	"kern/checker/output"
 
 	"codeberg.org/go-pdf/fpdf"
 )
 
 // PDF writes the sheet as a PDF with its fonts in it, searchable, with bookmarks. A
-// formula is read out and copied as text of the language.
-func (s *Sheet) PDF(w io.Writer) error {
+// formula is read out and copied as text of the language. progress is told of the
+// pages; it may be nil.
+func (s *Sheet) PDF(w io.Writer, progress checker.Progress) error {
 	pages, headings, size := s.layOut()
 	doc := fpdf.NewCustom(&fpdf.InitType{UnitStr: "pt", Size: size})
 	for _, f := range faceNames {
@@ -40,6 +43,10 @@ func (s *Sheet) PDF(w io.Writer) error {
 		for _, o := range page.ops {
 			p.op(o)
 		}
+		pages[i].ops = nil // a long sheet is big
+		if progress != nil {
+			progress(i+1, len(pages))
+		}
 	}
 	if err := doc.Output(w); err != nil {
 		return fmt.Errorf("the PDF could not be written: %w", err)
@@ -53,6 +60,9 @@ func (s *Sheet) layOut() ([]paged, []placed, fpdf.SizeType) {
 	cover.blocks(s.Blocks[:s.contentsAt])
 	rest := newFlow(s.options.Paper)
 	rest.blocks(s.Blocks[s.contentsAt:])
+	if missed(append(cover.pages, rest.pages...)) {
+		rest.blocks([]output.Block{output.Paragraph{Text: output.Words(string(missing) + " stands for a letter that the fonts of this PDF lack; the sheet as HTML or Markdown shows it.")}})
+	}
 	// how many pages the contents take does not depend on the numbers in them
 	list := newFlow(s.options.Paper)
 	list.contents(rest.headings)
@@ -74,6 +84,18 @@ func (s *Sheet) layOut() ([]paged, []placed, fpdf.SizeType) {
 	}
 	pages := append(append(cover.pages, list.pages...), rest.pages...)
 	return pages, headings, fpdf.SizeType{Wd: cover.width, Ht: cover.height}
+}
+
+// missed tells whether a page has a letter that the fonts lack.
+func missed(pages []paged) bool {
+	for _, p := range pages {
+		for _, o := range p.ops {
+			if o.kind == textOp && strings.ContainsRune(o.text, missing) {
+				return true
+			}
+		}
+	}
+	return false
 }
 
 // properties fill the document's information. Its date is that of the project,

@@ -225,16 +225,18 @@ func (c *chapter) table(head ...string) [][]string {
 }
 
 var (
-	stream = regexp.MustCompile(`(?s)stream\r?\n(.*?)\r?\nendstream`)
-	actual = regexp.MustCompile(`/ActualText <FEFF([0-9A-F]*)>`)
-	shown  = regexp.MustCompile(`(?s)BT ([-\d.]+) ([-\d.]+) Td \(((?:\\.|[^\\)])*)\) Tj`)
+	stream = regexp.MustCompile(`(?s)stream\n(.*?)\nendstream`)
+	// what a page's stream does with words: it opens a part that is read as
+	// something else, closes it, or shows a run of words
+	marks = regexp.MustCompile(`(?s)/Span <</(ActualText|Alt) <FEFF([0-9A-F]*)>>> BDC|EMC|BT ([-\d.]+) ([-\d.]+) Td \(((?:\\.|[^\\)])*)\) Tj`)
 )
 
 // pageText is what a PDF's page says: the formulas as they are read out, and every
 // run of words with its place.
 type pageText struct {
-	read  []string
+	read  []string // formulas and symbols
 	words []run
+	said  []run // both in the order of the page: where a part is read as something else, that
 }
 
 type run struct {
@@ -257,15 +259,31 @@ func pdfPages(t testing.TB, data []byte) []pageText {
 			continue
 		}
 		var p pageText
-		for _, a := range actual.FindAllSubmatch(body, -1) {
-			raw, err := hex.DecodeString(string(a[1]))
-			if err != nil {
-				t.Fatal(err)
+		instead := ""
+		for _, m := range marks.FindAllSubmatch(body, -1) {
+			switch {
+			case string(m[0]) == "EMC":
+				instead = ""
+			case len(m[1]) > 0:
+				raw, err := hex.DecodeString(string(m[2]))
+				if err != nil {
+					t.Fatal(err)
+				}
+				if instead = utf16Text(raw); string(m[1]) == "ActualText" {
+					p.read = append(p.read, instead)
+				}
+			default:
+				r := run{string(m[3]), string(m[4]), utf16Text(unescaped(m[5]))}
+				p.words = append(p.words, r)
+				switch instead {
+				case "":
+					p.said = append(p.said, r)
+				case "-": // said already
+				default:
+					p.said = append(p.said, run{r.x, r.y, instead})
+					instead = "-"
+				}
 			}
-			p.read = append(p.read, utf16Text(raw))
-		}
-		for _, w := range shown.FindAllSubmatch(body, -1) {
-			p.words = append(p.words, run{string(w[1]), string(w[2]), utf16Text(unescaped(w[3]))})
 		}
 		out = append(out, p)
 	}

@@ -10,6 +10,7 @@ import (
 	"path/filepath"
 	"runtime"
 	"slices"
+	"strconv"
 	"strings"
 	"testing"
 
@@ -69,7 +70,7 @@ func printed(t testing.TB, r *checker.Report, form string, o sheet.Options) []by
 		t.Fatal(err)
 	}
 	var b bytes.Buffer
-	if err := s.Write(&b, form); err != nil {
+	if err := s.Write(&b, form, nil); err != nil {
 		t.Fatal(err)
 	}
 	return b.Bytes()
@@ -275,14 +276,14 @@ func follow(t *testing.T, c *chapter, equations []string) (last float64) {
 // they are set in HTML, and from the words of the PDF.
 func TestBlindReader(t *testing.T) {
 	members, read := 0, 0
-	for _, files := range []map[string]string{boathouse(t), generate.Project(12, 3), generate.BentProject(12, 9)} {
+	for _, files := range []map[string]string{boathouse(t), generate.Project(8, 3), generate.BentProject(6, 9)} {
 		m, p := readBlind(t, check(files))
 		members, read = members+m, read+p
 	}
-	if members < 30 {
+	if members < 25 {
 		t.Errorf("only %d members were worked out", members)
 	}
-	if read < 150 {
+	if read < 100 {
 		t.Errorf("only %d formulas of the PDF were read", read)
 	}
 }
@@ -324,17 +325,81 @@ func readBlind(t *testing.T, r *checker.Report) (members, read int) {
 	return members, read
 }
 
+// TestBlindReaderOfPaper works members out again from the PDF alone: the rows of the
+// tables of symbols, by where their words stand on the paper, and the formulas as
+// they are read out.
+func TestBlindReaderOfPaper(t *testing.T) {
+	r := check(boathouse(t))
+	want := jsonOf(t, r)
+	for _, name := range []string{"H4", "P6", "B1", "W4", "M1"} {
+		known := map[string]unit.Quantity{}
+		got, steps := math.NaN(), 0
+		for _, p := range pdfPages(t, printed(t, r, "pdf", sheet.Options{Members: []string{name}})) {
+			from := math.NaN() // where the last column begins, in a table of symbols
+			for i, w := range p.said {
+				at := func(k int) float64 {
+					x, err := strconv.ParseFloat(p.said[k].x, 64)
+					if err != nil {
+						t.Fatal(err)
+					}
+					return x
+				}
+				switch {
+				case w.text == "symbol":
+					for k := i; k < len(p.said) && p.said[k].y == w.y; k++ {
+						if p.said[k].text == "from" {
+							from = at(k)
+						}
+					}
+				case (w.text == "check" || w.text == "combination") && at(i) < 70:
+					from = math.NaN()
+				case strings.Contains(w.text, " = "):
+					parts := strings.Split(w.text, " = ")
+					due := quantity(t, parts[len(parts)-1], nil)
+					if len(parts) > 2 {
+						x := quantity(t, parts[1], known)
+						if x.Dim != due.Dim || math.Abs(x.Value-due.Value) > 2e-3*math.Max(math.Abs(due.Value), 1e-3) {
+							t.Errorf("%s: %q comes to %g", name, w.text, x.Value)
+						}
+					}
+					known[parts[0]], got = due, due.Value
+					steps++
+				case from > 0 && at(i) < 70: // the first word of a row
+					value := ""
+					for k := i + 1; k < len(p.said) && at(k) >= 70; k++ { // up to the next row
+						if p.said[k].y != w.y || at(k) > from-1 {
+							continue
+						}
+						word := ascii.Replace(p.said[k].text)
+						if _, err := strconv.ParseFloat(word, 64); err == nil {
+							value = word
+						} else if value != "" {
+							value += map[bool]string{true: "", false: " "}[strings.Contains(value, " ")] + word
+						}
+					}
+					if value != "" {
+						known[w.text] = quantity(t, value, nil)
+					}
+				}
+			}
+		}
+		if due := *want[name].Utilisation; steps < 3 || math.Abs(got-due) > 2e-3*due {
+			t.Errorf("%s: the paper comes to %g in %d steps, the JSON has %g", name, got, steps, due)
+		}
+	}
+}
+
 // TestSameBytes: the same files give the same sheet, in every form, whatever the
 // order they were asked for in and the number of cores.
 func TestSameBytes(t *testing.T) {
 	files := boathouse(t)
 	first := map[string][]byte{}
 	for _, form := range forms {
-		first[form] = printed(t, check(files), form, sheet.Options{Full: true})
+		first[form] = printed(t, check(files), form, sheet.Options{})
 	}
 	defer runtime.GOMAXPROCS(runtime.GOMAXPROCS(1))
 	for _, form := range forms {
-		if again := printed(t, check(files), form, sheet.Options{Full: true}); !bytes.Equal(again, first[form]) {
+		if again := printed(t, check(files), form, sheet.Options{}); !bytes.Equal(again, first[form]) {
 			t.Errorf("%s differs from run to run", form)
 		}
 	}
@@ -397,12 +462,12 @@ func TestNothingIsLost(t *testing.T) {
 				due = append(due, c.Rule, c.Why)
 			}
 			for _, d := range due {
-				if !strings.Contains(text, squeeze.Replace(strings.NewReplacer("mm2", "mm²").Replace(d))) && !strings.Contains(text, squeeze.Replace(d)) {
+				if !strings.Contains(text, squeeze.Replace(strings.NewReplacer("mm2", "mm²", " m2", " m²").Replace(d))) && !strings.Contains(text, squeeze.Replace(d)) {
 					t.Errorf("%s: %s: %q is not there", form, m.Name, d)
 				}
 			}
 		}
-		for _, due := range []string{"Local codes govern; a licensed engineer decides.", "kern test", "24 members: 18 pass, 5 fail, 1 undecided"} {
+		for _, due := range []string{"Local codes govern; a licensed engineer decides.", "kern test", "26 members: 20 pass, 5 fail, 1 undecided"} {
 			if !strings.Contains(text, squeeze.Replace(due)) {
 				t.Errorf("%s lacks %q", form, due)
 			}

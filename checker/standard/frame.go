@@ -24,9 +24,13 @@ type Frame struct {
 	From, To float64
 
 	// Stretches between points held against buckling about major and minor;
-	// Stands is false about an axis for a mechanism.
+	// Stands is false about an axis for a mechanism, and where effective lengths
+	// cannot tell: NotHeld says why. Where Exact is set, the critical load is that of
+	// the whole member and depends on the combination: Under gives the stretches
+	// their factors, and here they have the greatest of all combinations.
 	Stretches [2][]action.Stretch
 	Stands    [2]bool
+	Exact     [2]bool
 	// Twist is the greatest distance between points held against twist; with
 	// TwistFree an end can turn about the member's own axis.
 	Twist     float64
@@ -45,11 +49,14 @@ type Frame struct {
 	slope       [][]float64 // [combination][segment] loss of compression per length, of imported forces alone
 	beams       [2][][]action.Piece
 	beamOK      [2]bool
+	loadFactor  [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
+	sprung      [2]bool      // a spring leaves effective lengths without an answer
 
 	parts  []model.Lift // neighbouring lifts of one section and material taken as one
 	twists []Segment    // between points held against twist
 	floors []floors     // [case][segment] what floors bring, for reductions; nil for none
 	lift   *liftView    // of a frame of one lift
+	needs  []HoldDemand // what Holds found, nil before
 }
 
 // Segment is a part of the height between two points that are held, m.
@@ -65,6 +72,7 @@ func NewFrame(env *model.Env, m *model.Member, combinations []model.Combination)
 	f := &Frame{Member: m, Env: env, Combinations: combinations, TwistK: 1, To: m.Height, parts: merged(m.Parts())}
 	f.split()
 	f.forces()
+	f.critical()
 	f.moments()
 	return f
 }
@@ -73,11 +81,11 @@ func NewFrame(env *model.Env, m *model.Member, combinations []model.Combination)
 func (f *Frame) split() {
 	m := f.Member
 	for axis := range f.Stretches {
-		var holds []float64
-		for _, h := range m.Holds {
-			if axis == 0 && h.Major || axis == 1 && h.Minor {
-				holds = append(holds, h.At)
-			}
+		holds := m.RigidHolds(model.Axis(axis))
+		f.Exact[axis] = m.Exact && m.Factor[axis] == 0 && m.Joints[axis] == nil && !f.Env.Basis.Direct // each says K
+		if f.Exact[axis] {
+			f.Stretches[axis] = f.spans(axis)
+			continue
 		}
 		f.Stretches[axis], f.Stands[axis] = action.Stretches(m.Base[axis], m.Top[axis], holds, m.Height, f.Env.Basis.Recommended)
 		if j := m.Joints[axis]; j != nil {
@@ -99,6 +107,8 @@ func (f *Frame) split() {
 				s := &f.Stretches[axis][i]
 				s.K, s.Overridden, s.Exact, s.Direct = k, true, false, false
 			}
+		} else if m.Sprung(model.Axis(axis)) {
+			f.Stands[axis], f.sprung[axis] = false, true
 		}
 	}
 	last := 0.0
@@ -170,7 +180,7 @@ func (f *Frame) forces() {
 	for c, combination := range f.Combinations {
 		row := flat[c*segments : (c+1)*segments]
 		for k, factor := range combination.Factors {
-			if factor != 0 {
+			if factor != 0 && k < len(f.Env.Cases) { // behind the cases stand forces of imperfections
 				for s := range row {
 					row[s] += factor * (of[k*segments+s] - f.relief(c, k, s))
 				}
@@ -202,6 +212,24 @@ func (f *Frame) byCase() []float64 {
 		}
 	}
 	return of
+}
+
+// CaseForce is the axial force just below a height from one case, without factors
+// and reductions, N, compression positive; self-weight counts in its case.
+func (f *Frame) CaseForce(c int, z float64) float64 {
+	eps := 1e-9 * f.Member.Height
+	n := 0.0
+	for _, l := range f.Member.Loads {
+		if l.Kind == model.AxialLoad && l.Case == c && l.At >= z-eps {
+			n += l.Value
+		}
+	}
+	if c == f.Env.SelfWeight {
+		for s, own := range f.own {
+			n += own * max(0, f.cuts[s+1]-max(z, f.cuts[s]))
+		}
+	}
+	return n
 }
 
 // partAt is the part of the member that a height lies in.
@@ -329,18 +357,20 @@ func (f *Frame) moments() {
 			f.Pushed[l.Axis] = f.Pushed[l.Axis] || l.Value != 0
 		}
 	}
+	for axis := range f.Bends {
+		if f.Imperfect() && m.Sways(model.Axis(axis)) {
+			f.Bends[axis], f.Pushed[axis] = true, true
+		}
+	}
 	for axis, bends := range f.Bends {
 		if !bends {
 			continue
 		}
 		beam := action.Beam{Base: m.Base[axis], Top: m.Top[axis], Height: m.Height}
+		beam.Holds = m.RigidHolds(model.Axis(axis))
+		beam.Springs = f.springs(axis)
 		if len(f.parts) > 1 {
 			beam.Steps = f.steps(axis, 0, m.Height)
-		}
-		for _, h := range m.Holds {
-			if axis == 0 && h.Major || axis == 1 && h.Minor {
-				beam.Holds = append(beam.Holds, h.At)
-			}
 		}
 		loadings := make([][]action.Push, len(f.Env.Cases))
 		for _, l := range m.Loads {
@@ -361,9 +391,12 @@ func (f *Frame) moments() {
 			}
 			loadings[l.Case] = append(loadings[l.Case], p)
 		}
+		if f.Imperfect() {
+			loadings = append(loadings, f.notional(axis)...)
+		}
 		pieces, err := beam.Solve(loadings)
 		if m.Nominal {
-			for c := range pieces {
+			for c := range min(len(pieces), len(f.Env.Cases)) {
 				f.nominal(axis, c, pieces[c])
 			}
 		}
@@ -389,8 +422,19 @@ func (f *Frame) StretchName(axis int, s action.Stretch) string {
 	if s.From <= 0 && s.To >= f.Member.Height {
 		return "the whole height"
 	}
-	return fmt.Sprintf("the stretch from %s m to %s m", number(s.From), number(s.To))
+	return fmt.Sprintf("the stretch from %s to %s", f.Place(s.From), f.Place(s.To))
 }
+
+// Place is a height in words: in metres, or in feet where the basis shows US
+// customary units.
+func (f *Frame) Place(z float64) string {
+	if f.Env.Basis.Show.American() {
+		return number(z/foot) + " ft"
+	}
+	return number(z) + " m"
+}
+
+const foot = 0.3048
 
 func number(x float64) string { return unit.Exact(math.Round(x*1e4) / 1e4) }
 
@@ -401,6 +445,10 @@ func (f *Frame) Assumptions() []string {
 	out = append(out, m.Section.Assumed...)
 	out = append(out, m.Material.Assumed...)
 	for axis, name := range []string{"major", "minor"} {
+		if f.Exact[axis] {
+			out = append(out, "critical loads about "+name+" of the whole member under each combination, by its stiffness matrix with its holds, springs and stepped forces (critical exact)")
+			continue
+		}
 		for _, s := range f.Stretches[axis] {
 			if f.Stepped(s.From, s.To) {
 				continue // said for the lift
@@ -427,15 +475,21 @@ func (f *Frame) Assumptions() []string {
 		}
 	}
 	if m.Imported != nil {
-		return append(out, importedAssumptions(m.Imported)...)
+		out = append(out, importedAssumptions(m.Imported)...)
+		return append(out, f.swayAssumptions()...)
 	}
 	switch {
 	case m.Weight:
 		c := f.Env.Cases[f.Env.SelfWeight].Name
-		out = append(out, fmt.Sprintf("self-weight %s kN in all, in case %s", unit.Short(f.OwnWeight()/1e3, 3), c))
+		own := unit.Short(f.OwnWeight()/1e3, 3) + " kN"
+		if show := f.Env.Basis.Show; show.American() {
+			own = show.Show(f.OwnWeight(), unit.Force, 3)
+		}
+		out = append(out, fmt.Sprintf("self-weight %s in all, in case %s", own, c))
 	case m.Kind == model.Column:
 		out = append(out, "self-weight not counted")
 	}
+	out = append(out, f.swayAssumptions()...)
 	out = append(out, f.reductions()...)
 	if m.Nominal && (f.Bends[0] || f.Bends[1]) {
 		out = append(out, "nominal moments of simple construction: each load off the centroid bends the lengths of column above and below its level alone, in proportion to I/L, or in halves where these differ by no more than 1.5 (common practice, from memory)")

@@ -5,12 +5,15 @@ import (
 
 	"kern/checker/action"
 	"kern/checker/model"
+	"kern/checker/section"
 )
 
 // liftView is what a frame of one lift knows beside the member's own frame.
 type liftView struct {
-	whole *Frame
-	part  int
+	whole   *Frame
+	part    int
+	twisted bool // the section changes in the part that is worst for torsional buckling
+	it, iw  float64
 }
 
 // merged takes neighbouring lifts as one where neither section nor material
@@ -44,7 +47,7 @@ func (f *Frame) Part(i, combination int) *Frame {
 	p := *f
 	m := *f.Member
 	m.Section, m.Material = l.Section, l.Material
-	p.Member, p.From, p.To, p.lift = &m, l.From, l.To, &liftView{f, i}
+	p.Member, p.From, p.To, p.lift = &m, l.From, l.To, &liftView{whole: f, part: i}
 	eps := 1e-9 * m.Height
 	for p.first < p.last && p.cuts[p.first+1] <= l.From+eps {
 		p.first++
@@ -55,14 +58,18 @@ func (f *Frame) Part(i, combination int) *Frame {
 	if combination >= 0 {
 		p.Combinations = f.Combinations[combination : combination+1]
 		p.axial, p.weight = f.axial[combination:combination+1], f.weight[combination:combination+1]
+		if f.slope != nil {
+			p.slope = f.slope[combination : combination+1]
+		}
 	}
+	p.loadFactor = f.partFactors(i, combination)
 	for axis, all := range f.Stretches {
 		p.Stretches[axis] = nil
 		for _, s := range all {
 			if s.From >= l.To-eps || s.To <= l.From+eps {
 				continue
 			}
-			if f.Stepped(s.From, s.To) && combination >= 0 {
+			if f.Stepped(s.From, s.To) && combination >= 0 && !f.Exact[axis] {
 				var ok bool
 				if s, ok = f.within(axis, s, i, combination); !ok {
 					p.Stands[axis] = false
@@ -71,11 +78,19 @@ func (f *Frame) Part(i, combination int) *Frame {
 			p.Stretches[axis] = append(p.Stretches[axis], s)
 		}
 	}
+	for axis := range p.Exact {
+		if p.Exact[axis] {
+			p.longest(axis)
+		}
+	}
 	p.Twist = 0
 	for _, t := range f.twists {
 		if t.From < l.To-eps && t.To > l.From+eps {
 			p.Twist = max(p.Twist, t.To-t.From)
 		}
+	}
+	if combination >= 0 && !f.Alone(i) {
+		p.twist()
 	}
 	return &p
 }
@@ -208,10 +223,10 @@ func (f *Frame) mechanism(s action.Stretch) bool {
 	return !ok
 }
 
-// holds tells whether a hold about an axis is at a height.
+// holds tells whether a rigid hold about an axis is at a height.
 func (f *Frame) holds(axis int, z float64) bool {
 	for _, h := range f.Member.Holds {
-		if (axis == 0 && h.Major || axis == 1 && h.Minor) && math.Abs(h.At-z) <= 1e-9*f.Member.Height {
+		if h.About(model.Axis(axis)) && h.Stiffness == 0 && math.Abs(h.At-z) <= 1e-9*f.Member.Height {
 			return true
 		}
 	}
@@ -242,45 +257,91 @@ func (f *Frame) Critical(axis int, s action.Stretch) float64 {
 }
 
 // Twisting gives the torsion constant (m4) and the warping constant (m6) that a
-// check of torsional buckling over the length Twist may count on: the section's
-// own, and where the section changes between points held against twist so much of
-// them that the critical force is a lower bound for the stepped member (the least
-// G I_t and E I_w of the lifts, the greatest product of axial force and squared
-// polar radius, under the combination of the frame).
-func (f *Frame) Twisting() (it, iw float64) {
-	sec := f.Member.Section
-	it, iw = sec.It, Warping(sec)
-	if f.lift == nil {
-		return it, iw
+// check of torsional buckling over the length Twist may count on, under the
+// greatest compression in the frame, and where they come from: the section's own,
+// or what stands for a part between points held against twist in which the section
+// changes, where that is worse.
+func (f *Frame) Twisting() (it, iw float64, source string) {
+	if f.lift != nil && f.lift.twisted {
+		return f.lift.it, f.lift.iw, f.Member.Section.Title() + ", times what the change of section leaves of it"
 	}
+	return f.Member.Section.It, Warping(f.Member.Section), f.Member.Section.Title()
+}
+
+// twist chooses the part between points held against twist that is worst for a
+// frame of one lift and one combination. Where the section changes in it the
+// critical force is a lower bound for the stepped member: the least G I_t and E I_w of
+// the lifts there, over the greatest product of axial force and squared polar radius.
+// The force in that part may be less than the greatest in the lift, which the check
+// is made with; the constants grow by the quotient, which is on the safe side, as the
+// resistance grows less than the critical force.
+func (f *Frame) twist() {
 	w, me := f.lift.whole, &f.parts[f.lift.part]
 	eps := 1e-9 * f.Member.Height
-	gi, ew, load, own := me.Material.G*it, me.Material.E*iw, 0.0, 0.0
+	sec := f.Member.Section
+	most := f.Compression(0, f.From, f.To)
+	critical := func(it, iw, length float64) float64 {
+		if f.TwistFree {
+			return me.Material.G * it
+		}
+		return me.Material.G*it + math.Pi*math.Pi*me.Material.E*iw/(length*length)
+	}
+	plain := 0.0 // the longest part of one section
+	for _, t := range w.twists {
+		if t.From < f.To-eps && t.To > f.From+eps && !w.Stepped(t.From, t.To) {
+			plain = max(plain, t.To-t.From)
+		}
+	}
+	worst := math.Inf(1)
+	if plain > 0 {
+		worst, f.Twist = critical(sec.It, warping(sec), plain), plain
+	}
 	for _, t := range w.twists {
 		if t.From >= f.To-eps || t.To <= f.From+eps || !w.Stepped(t.From, t.To) {
 			continue
 		}
+		gi, ew, load, own := math.Inf(1), math.Inf(1), 0.0, 0.0
 		for seg := range w.own {
 			if w.cuts[seg+1] <= t.From+eps || w.cuts[seg] >= t.To-eps {
 				continue
 			}
 			l := w.partAt((w.cuts[seg] + w.cuts[seg+1]) / 2)
-			gi = math.Min(gi, l.Material.G*l.Section.It)
-			ew = math.Min(ew, l.Material.E*Warping(l.Section))
-			for k := range f.axial {
-				n := max(f.axial[k][seg], f.top(k, seg), 0)
-				load = max(load, n*polar2(l.Section))
-				if l == me {
-					own = max(own, n)
-				}
+			gi = math.Min(gi, l.Material.G*doubly(l.Section)*l.Section.It)
+			ew = math.Min(ew, l.Material.E*warping(l.Section))
+			n := max(f.axial[0][seg], f.top(0, seg), 0)
+			load = max(load, n*polar2(l.Section))
+			if l == me {
+				own = max(own, n)
 			}
 		}
+		if !(own > 0) {
+			continue // nothing in the lift to buckle here
+		}
+		share := most * polar2(sec) / load
+		it, iw := gi/me.Material.G*share, ew/me.Material.E*share
+		if c := critical(it, iw, t.To-t.From); !(c >= worst) {
+			worst, f.Twist = c, t.To-t.From
+			f.lift.it, f.lift.iw, f.lift.twisted = it, iw, true
+		}
 	}
-	if !(own > 0) || !(load > 0) {
-		return it, iw
+}
+
+// doubly is 1 for a section with two axes of symmetry, NaN for any other: what
+// twists the one bends the other, and no bound is known for a member of both.
+func doubly(s *model.Section) float64 {
+	switch s.Shape.Kind {
+	case section.Channel, section.Tee, section.Angle:
+		return math.NaN()
 	}
-	share := own * polar2(sec) / load
-	return gi / me.Material.G * share, ew / me.Material.E * share
+	return 1
+}
+
+// warping is the warping constant of a section, m6, 0 where it is not stated.
+func warping(s *model.Section) float64 {
+	if math.IsNaN(s.Iw) {
+		return 0
+	}
+	return s.Iw
 }
 
 // polar2 is the square of the polar radius of gyration about the shear centre, m2.
@@ -311,7 +372,7 @@ func (f *Frame) Lateral() []Segment {
 		var minor, twist bool
 		for _, o := range m.Holds {
 			if math.Abs(o.At-h.At) <= 1e-6*m.Height {
-				minor, twist = minor || o.Minor, twist || o.Twist
+				minor, twist = minor || o.Minor && o.Stiffness == 0, twist || o.Twist
 			}
 		}
 		if minor && twist && h.At-last > 1e-6*m.Height {
@@ -327,18 +388,12 @@ func (f *Frame) lateralFactor(from, to float64) float64 {
 		return 1
 	}
 	eps := 1e-9 * f.Member.Height
-	warping := func(s *model.Section) float64 {
-		if math.IsNaN(s.Iw) {
-			return 0
-		}
-		return s.Iw
-	}
 	me := &f.parts[f.lift.part]
 	a, b, g := math.Inf(1), math.Inf(1), math.Inf(1)
 	for i := range f.parts {
 		l := &f.parts[i]
 		if l.From < to-eps && l.To > from+eps {
-			a, b, g = math.Min(a, bending(l, 1)), math.Min(b, l.Material.E*warping(l.Section)), math.Min(g, l.Material.G*l.Section.It)
+			a, b, g = math.Min(a, bending(l, 1)), math.Min(b, l.Material.E*warping(l.Section)), math.Min(g, l.Material.G*doubly(l.Section)*l.Section.It)
 		}
 	}
 	// M_cr² = E I_z x (E I_w x + G I_t) with x = (pi/L)²; solved for the length of

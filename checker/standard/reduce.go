@@ -45,11 +45,19 @@ func (f *Frame) reduce() {
 				x.force += l.Value
 				x.pressure = max(x.pressure, l.Value/l.Area)
 			}
-			if x.storeys > 0 && k.Reducible() && x.force > 0 {
+			if x.storeys > 0 && f.reducible(k) && x.force > 0 {
 				x.factor = f.factor(c, x)
 			}
 		}
 	}
+}
+
+// reducible tells whether the member's reduction may be used on a case.
+func (f *Frame) reducible(c *model.Case) bool {
+	if f.Member.Reduction.Kind == model.ByTributaryArea || f.Env.Basis.Basic() {
+		return c.ReducibleLive()
+	}
+	return c.Reducible()
 }
 
 // factor is the reduction of what the floors above bring of a case.
@@ -61,9 +69,6 @@ func (f *Frame) factor(c int, x *floors) float64 {
 	case model.ByArea:
 		return values.AreaFactor(f.Env.Cases[c].Category, x.area, f.Env.PsiOf(c))
 	case model.ByTributaryArea:
-		if f.Env.Cases[c].Category == "C" {
-			return 1 // places of assembly, 4.7.5
-		}
 		return action.LiveFactor(r.Element, x.area, x.storeys, x.pressure)
 	case model.StatedReduction:
 		return r.Value
@@ -83,6 +88,16 @@ func (f *Frame) relief(combination, c, segment int) float64 {
 		return 0
 	}
 	return x.force * (1 - x.factor)
+}
+
+// Reduced is the factor that a combination takes a load along the member with at
+// the base beside that of its case: the reduction of imposed loads of floors, 1 for
+// any other.
+func (f *Frame) Reduced(combination int, l model.Load) float64 {
+	if l.Level == nil || f.relief(combination, l.Case, 0) == 0 {
+		return 1
+	}
+	return f.floors[l.Case*(len(f.cuts)-1)].factor
 }
 
 // Reduction is the factor of the imposed loads of floors of a case just below a
@@ -128,7 +143,7 @@ func (f *Frame) reductions() []string {
 		case !any || k.Kind != action.Imposed:
 		case len(parts) > 0:
 			list = append(list, k.Name+": "+strings.Join(parts, ", "))
-		case k.Reducible():
+		case f.reducible(k):
 			kept = append(kept, k.Name)
 		default:
 			kept = append(kept, k.Name+" (category "+k.Category+")")

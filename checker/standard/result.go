@@ -5,6 +5,7 @@ package standard
 import (
 	"math"
 
+	"kern/checker/catalogue"
 	"kern/checker/derivation"
 	"kern/checker/model"
 	"kern/checker/section"
@@ -54,6 +55,7 @@ type Check struct {
 	Rule        string
 	Clause      string
 	Combination int     // index into the frame's combinations, -1 when it does not depend on one
+	Under       string  // the name of a combination that is none of the frame's, such as one of serviceability
 	Demand      float64 // SI units of Dim
 	Capacity    float64
 	Dim         unit.Dim
@@ -128,7 +130,7 @@ func Overridden(basis *model.Basis, name string, standard float64) (float64, boo
 // alone; by common practice that little is left out.
 func Warping(s *model.Section) float64 {
 	switch s.Shape.Kind {
-	case section.Tee, section.Angle:
+	case section.Tee, section.Angle, section.DoubleAngle:
 		return 0
 	}
 	return s.Iw
@@ -141,6 +143,9 @@ func NoStrength(m *model.Member) string {
 		return "the material '" + m.Material.Title() + "' states no yield strength: fy = …"
 	case math.IsNaN(m.Section.Thickness):
 		return "the strength of " + m.Material.Title() + " follows the thickness, which the section does not state: thickness = …"
+	}
+	if _, ok := m.Material.Grade.For(m.Section.Shape); !ok {
+		return m.Material.Grade.Standard + " is not a standard of " + catalogue.FormOf(m.Section.Shape).String() + ": name another grade"
 	}
 	return "the yield strength of " + m.Material.Title() + " is not known for this thickness"
 }

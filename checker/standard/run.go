@@ -38,6 +38,7 @@ type lifts struct {
 	frame    *Frame
 	order    []string // the rules, in the order of the checks
 	rows     map[string]*row
+	main     []int // of each lift, the combination that its outcome in out.Lifts is of, -1 for all
 	out      Outcome
 }
 
@@ -64,8 +65,8 @@ func (r *lifts) lift(i int) {
 	if f.Alone(i) {
 		out := r.standard.Check(f.Part(i, -1), nil)
 		r.add(out, i, -1, true)
-		r.out.Lifts = append(r.out.Lifts, LiftOutcome{name, out})
-		r.assume(name, out.Assumptions)
+		r.out.Lifts, r.main = append(r.out.Lifts, LiftOutcome{name, out}), append(r.main, -1)
+		r.assume(out.Assumptions)
 		return
 	}
 	p := f.Part(i, -1)
@@ -79,8 +80,8 @@ func (r *lifts) lift(i int) {
 		out := r.standard.Check(f.Part(i, k), nil)
 		r.add(out, i, k, k == at)
 		if k == at {
-			r.out.Lifts = append(r.out.Lifts, LiftOutcome{name, out})
-			r.assume(name, out.Assumptions)
+			r.out.Lifts, r.main = append(r.out.Lifts, LiftOutcome{name, out}), append(r.main, k)
+			r.assume(out.Assumptions)
 			r.assumeLengths(i, at)
 		}
 	}
@@ -101,10 +102,14 @@ func (r *lifts) add(out *Outcome, part, combination int, main bool) {
 			c.Demand, c.Capacity, c.Utilisation, c.Verdict, c.Combination = nan, nan, nan, Undecided, -1
 			c.Why = steppedTwist
 		}
+		own := c.Combination // of checks of the whole member
 		if c.Combination >= 0 && combination >= 0 {
 			c.Combination = combination
 		}
 		c.Lift = name
+		if slices.Contains(CommonRules, c.Rule) {
+			c.Lift, c.Combination = "", own
+		}
 		w := r.row(c.Rule)
 		one := &run{c, part, combination}
 		switch {
@@ -130,7 +135,7 @@ func (r *lifts) add(out *Outcome, part, combination int, main bool) {
 		}
 		w.whyLift = w.covered || part > 0
 		w.state, w.why, w.covered = c.State, c.Why, true
-		if w.why != "" && c.State == NotCovered {
+		if w.why != "" && c.State == NotCovered && !slices.Contains(CommonRules, c.Rule) {
 			w.why = "lift " + name + ": " + w.why
 		}
 	}
@@ -150,7 +155,7 @@ func (r *lifts) row(rule string) *row {
 }
 
 // assume takes the assumptions of a lift; what was said before is not said again.
-func (r *lifts) assume(lift string, list []string) {
+func (r *lifts) assume(list []string) {
 	for _, a := range list {
 		if !slices.Contains(r.out.Assumptions, a) {
 			r.out.Assumptions = append(r.out.Assumptions, a)
@@ -178,12 +183,12 @@ func (r *lifts) assumeLengths(part, combination int) {
 			default:
 				text += ": from the critical load of the stepped stretch, solved under the forces of each combination; this is the one that compresses the lift most"
 			}
-			r.assume("", []string{text})
+			r.assume([]string{text})
 		}
 	}
 	for _, t := range whole.twists {
 		if l := whole.parts[part]; t.From < l.To && t.To > l.From && whole.Stepped(t.From, t.To) {
-			r.assume("", []string{fmt.Sprintf("torsional and lateral-torsional buckling between %s m and %s m, where the section changes: with the least stiffness of the lifts there, a lower bound", number(t.From), number(t.To))})
+			r.assume([]string{fmt.Sprintf("torsional and lateral-torsional buckling between %s m and %s m, where the section changes: with the least stiffness of the lifts there, a lower bound", number(t.From), number(t.To))})
 		}
 	}
 }
@@ -201,14 +206,14 @@ func (r *lifts) outcome() *Outcome {
 		}
 		if w.covered {
 			c := Coverage{Rule: rule, State: w.state, Why: w.why}
-			if c.State == Checked && c.Why != "" && w.whyLift {
+			if c.State == Checked && c.Why != "" && w.whyLift && !slices.Contains(CommonRules, rule) {
 				c.Why = "each lift by itself"
 			}
 			r.out.Coverage = append(r.out.Coverage, c)
 		}
 	}
 	r.out.Coverage = append(r.out.Coverage, Coverage{Rule: "splices", State: NotApplicable,
-		Why: "no such check is made: lifts are taken to go on stiffly into one another; a splice must carry the forces and moments there, and a pinned one is not covered"})
+		Why: "no such check is made: lifts are taken to go on stiffly into one another, their centroids in one line and their major axes parallel; a splice must carry the forces and moments there, and a pinned one is not covered"})
 	// a result of the member is what all its lifts agree on
 	r.out.Value = func(symbol string) (unit.Quantity, bool) {
 		var out unit.Quantity
@@ -253,10 +258,41 @@ func (r *lifts) derive(record *derivation.Record) {
 			if s.Group == "" && shared[k.part] || s.Group != "" && !slices.Contains(rules[k], s.Group) {
 				continue
 			}
-			s.Lift = r.frame.parts[k.part].Name()
+			if s.Lift = r.frame.parts[k.part].Name(); slices.Contains(CommonRules, s.Group) {
+				s.Lift = ""
+			}
 			record.Steps = append(record.Steps, s)
 		}
 		shared[k.part] = true
+	}
+	r.deriveRequired(record)
+}
+
+// deriveRequired writes down what leads to the values that the member requires, in
+// the lift where each is worst.
+func (r *lifts) deriveRequired(record *derivation.Record) {
+	for _, q := range r.frame.Member.Requires {
+		name := q.Symbol
+		if alias := r.standard.Alias(name); alias != "" {
+			name = alias
+		}
+		id, ok := record.Set.Find(name)
+		worst, value := -1, 0.0
+		for i, l := range r.out.Lifts {
+			v, known := l.Value(name)
+			if known && (worst < 0 || (v.Value < value) == strings.HasPrefix(q.Compare, ">")) {
+				worst, value = i, v.Value
+			}
+		}
+		if !ok || worst < 0 {
+			continue
+		}
+		one := &derivation.Record{Set: record.Set}
+		r.standard.Check(r.frame.Part(worst, r.main[worst]), one)
+		for _, s := range one.Leading(id) {
+			s.Group, s.Lift = "requirement", r.frame.parts[worst].Name()
+			record.Steps = append(record.Steps, s)
+		}
 	}
 }
 

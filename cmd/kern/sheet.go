@@ -82,7 +82,11 @@ func printSheet(out io.Writer, f sheetFlags, paths []string) error {
 		return err
 	}
 	var data bytes.Buffer
-	if err := s.Write(&data, form); err != nil {
+	pages := newBar(os.Stderr)
+	pages.what = "writing pages"
+	err = s.Write(&data, form, pages.tell)
+	pages.finish()
+	if err != nil {
 		return err
 	}
 	if f.file == "" {

@@ -54,7 +54,7 @@ func verifySheet(out io.Writer, file string, paths []string) error {
 		return fmt.Errorf("%s: the files are the same, but the sheet could not be made again: %w", file, err)
 	}
 	var fresh bytes.Buffer
-	if err := again.Write(&fresh, mark.Form); err != nil {
+	if err := again.Write(&fresh, mark.Form, nil); err != nil {
 		return err
 	}
 	same := bytes.Equal(fresh.Bytes(), data)

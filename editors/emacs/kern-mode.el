@@ -37,11 +37,12 @@
 
 ;; generated: statements
 (defconst kern-mode-statements
-  '("accidental" "actions" "amplification" "base" "checked" "connected" "date" "depart" "effective"
-    "factor_buckling" "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0" "gamma_M1"
-    "gamma_Q" "height" "hold" "joints" "length" "lift" "limit" "load" "material" "moments" "name"
-    "net" "note" "number" "permanent" "prepared" "reduce" "reduction" "require" "revision" "roofs"
-    "section" "selfweight" "show" "stability" "standard" "strengths" "top" "xi")
+  '("accidental" "actions" "amplification" "base" "checked" "connected" "critical" "date" "depart"
+    "effective" "factor_buckling" "factor_yield" "from" "gamma_G_inf" "gamma_G_sup" "gamma_M0"
+    "gamma_M1" "gamma_Q" "height" "hold" "imperfection" "joints" "length" "lift" "limit" "load"
+    "material" "moments" "name" "net" "note" "number" "permanent" "prepared" "reduce" "reduction"
+    "require" "revision" "roofs" "section" "selfweight" "show" "stability" "standard" "strengths"
+    "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -49,27 +50,27 @@
 (defconst kern-mode-properties
   '("A" "A_v_major" "A_v_minor" "E" "G" "I_major" "I_minor" "I_t" "I_w" "W_major" "W_minor"
     "Wpl_major" "Wpl_minor" "class" "corner" "curve" "curve_major" "curve_minor" "density" "depth"
-    "diameter" "flange" "fu" "fy" "made" "nu" "outside" "root" "thickness" "toe" "wall" "web"
+    "diameter" "flange" "fu" "fy" "gap" "made" "nu" "outside" "root" "thickness" "toe" "wall" "web"
     "width")
   "Words before an equals sign in the block of a material or shape.")
 ;; end of properties
 
 ;; generated: shapes
 (defconst kern-mode-shapes
-  '("angle" "bar" "channel" "given" "isection" "pipe" "rod" "tee" "tube")
+  '("angle" "bar" "channel" "doubleangle" "given" "isection" "pipe" "rod" "tee" "tube")
   "Words for cross-sections.")
 ;; end of shapes
 
 ;; generated: particles
 (defconst kern-mode-particles
   '("ASD" "K_LL" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "area" "as" "at"
-    "because" "both" "braced" "by" "cases" "characteristic" "cold" "compression" "continuous"
-    "direct" "effective" "eq" "fixed" "floor" "free" "frequent" "from" "guided" "hot" "imposed"
-    "independent" "leg" "lengths" "live" "long" "major" "minor" "negative" "nominal" "off" "offset"
-    "on" "per" "permanent" "persistent" "pinned" "positive" "psi_0" "psi_1" "psi_2" "quasipermanent"
-    "recommended" "rolled" "secant" "seismic" "short" "simple" "slenderness" "snow" "space"
-    "storeys" "sway" "temperature" "theoretical" "to" "together" "top" "tributary" "twist"
-    "utilisation" "welded" "wind")
+    "because" "both" "braced" "by" "cases" "characteristic" "cold" "compression" "continuous" "dead"
+    "deflection" "direct" "effective" "eq" "exact" "fixed" "floor" "free" "frequent" "from" "guided"
+    "hot" "imposed" "independent" "leg" "lengths" "live" "long" "major" "minor" "negative" "nominal"
+    "off" "offset" "on" "per" "permanent" "persistent" "pinned" "positive" "psi_0" "psi_1" "psi_2"
+    "quasipermanent" "rain" "recommended" "rolled" "roof" "secant" "seismic" "short" "simple"
+    "slenderness" "snow" "space" "span" "spring" "stiffness" "storeys" "sway" "temperature"
+    "theoretical" "to" "together" "top" "tributary" "twist" "under" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 

@@ -142,7 +142,7 @@ func aboutSection(e *catalogue.Entry, show derivation.Units) Document {
 	for _, x := range []struct {
 		name  string
 		value float64
-	}{{"depth", shape.Depth}, {"width", shape.Width}, {"outside", shape.Diameter}, {"web", shape.Web}, {"flange", shape.Flange}, {"wall", shape.Wall}, {"root", shape.Root}, {"toe", shape.Toe}, {"corner", shape.OuterRadius}} {
+	}{{"depth", shape.Depth}, {"width", shape.Width}, {"outside", shape.Diameter}, {"web", shape.Web}, {"flange", shape.Flange}, {"wall", shape.Wall}, {"gap", shape.Gap}, {"root", shape.Root}, {"toe", shape.Toe}, {"corner", shape.OuterRadius}} {
 		if x.value > 0 {
 			row(x.name, quantityIn(show, x.value, "mm"))
 		}
@@ -167,6 +167,14 @@ func aboutSection(e *catalogue.Entry, show derivation.Units) Document {
 func aboutGrade(g *catalogue.Grade) Document {
 	d := Document{Text: []string{fmt.Sprintf("**%s**, %s: E = %s, G = %s, density %s kg/m3", g.Name, g.Standard,
 		quantityIn(nil, g.E, "GPa"), quantityIn(nil, g.G, "GPa"), unit.Short(g.Density, 4))}}
+	if g.American() {
+		d.Text = append(d.Text, "Strengths from memory: compare them with "+g.Standard+".")
+		d.Rows = [][]string{{"product", "thickness", "fy ksi", "fu ksi"}}
+		for _, f := range g.Forms() {
+			d.Rows = append(d.Rows, []string{f.Form.String(), f.Row, quantityIn(nil, f.Fy, "ksi"), quantityIn(nil, f.Fu, "ksi")})
+		}
+		return d
+	}
 	if g.Eurocode != "EN 1993-1-1" {
 		d.Text = append(d.Text, "A steel of "+g.Eurocode+": the checks of EN 1993-1-1 leave it undecided.")
 	}

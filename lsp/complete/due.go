@@ -44,7 +44,7 @@ func newScope(r *checker.Report, file string, offset int32) (*scope, bool) {
 var placeholderDims = map[string]unit.Dim{
 	"LENGTH": unit.Length, "HEIGHT": unit.Length, "LEVEL": unit.Length, "PLACE": unit.Length, "AREA": unit.Area,
 	"LENGTH^3": unit.Volume, "LENGTH^4": unit.Length4, "LENGTH^6": unit.Length6,
-	"FORCE": unit.Force, "FORCE/LENGTH": unit.ForcePerLength, "MOMENT": unit.Moment, "STRESS": unit.Stress, "PRESSURE": unit.Stress,
+	"FORCE": unit.Force, "FORCE/LENGTH": unit.ForcePerLength, "MOMENT": unit.Moment, "MOMENT/ANGLE": unit.RotationalStiffness, "STRESS": unit.Stress, "PRESSURE": unit.Stress,
 	"DENSITY": unit.Density, "NUMBER": unit.None,
 }
 
@@ -75,7 +75,7 @@ func (s *scope) quantity(e *lang.Expr) (unit.Quantity, bool) {
 		if v, ok := s.named(n.Text); ok {
 			return v, nil
 		}
-		if s.member != nil && (n.Text == "height" || n.Text == "length") {
+		if s.member != nil && (n.Text == "height" || n.Text == "length" || n.Text == "span" && s.head == "limit") {
 			return unit.Quantity{Value: 1, Dim: unit.Length}, nil
 		}
 		return unit.Quantity{}, lang.Silent

@@ -19,11 +19,65 @@ var familyWords = map[string]string{
 	"UBP": "universal bearing piles", "UPN": "channels, tapered flanges", "UPE": "channels, parallel flanges", "PFC": "channels, parallel flanges (UK)",
 	"L": "angles", "T": "tees cut from I and H sections", "SHS": "square hollow sections", "RHS": "rectangular hollow sections",
 	"CHS": "circular hollow sections", "EHS": "elliptical hollow sections",
+	"W": "wide flange (ASTM A6)", "M": "miscellaneous beams (ASTM A6)", "S": "standard beams, tapered flanges (ASTM A6)", "C": "standard channels (ASTM A6)",
+	"MC": "miscellaneous channels (ASTM A6)", "WT": "tees cut from W (ASTM A6)", "MT": "tees cut from M (ASTM A6)", "ST": "tees cut from S (ASTM A6)",
+	"2L": "double angles (ASTM A6)", "HSS": "hollow structural sections (ASTM A500, A1085)", "PIPE": "steel pipe (ASTM A53)",
 }
 
 // familyOrder is the order in which families are offered: sections of columns
 // first.
-var familyOrder = []string{"HEA", "HEB", "HEM", "SHS", "RHS", "CHS", "UC", "IPE", "UB", "UPE", "UPN", "PFC", "L", "HEAA", "HD", "HL", "HP", "UBP", "T", "EHS"}
+var familyOrder = []string{"HEA", "HEB", "HEM", "SHS", "RHS", "CHS", "UC", "IPE", "UB", "UPE", "UPN", "PFC", "L", "HEAA", "HD", "HL", "HP", "UBP", "T", "EHS",
+	"W", "HSS", "PIPE", "WT", "2L", "C", "MC", "S", "M", "ST", "MT"}
+
+// americanFirst is the first of them that has American sections alone.
+const americanFirst = "W"
+
+// american tells whether the calculation is one with American sections: by its
+// standard, or else by what it has already, or by the unit of its lengths.
+func (s *scope) american() bool {
+	standard := strings.ToUpper(s.env.Basis.Standard)
+	switch {
+	case strings.Contains(standard, "AISC"):
+		return true
+	case strings.HasPrefix(standard, "EN"):
+		return false
+	}
+	score := 0
+	for _, x := range s.env.Sections {
+		switch {
+		case strings.HasPrefix(x.Standard, "ASTM "):
+			score++
+		case x.Standard != "":
+			score--
+		}
+	}
+	if score != 0 {
+		return score > 0
+	}
+	u, ok := s.env.Basis.Show[unit.Length]
+	return ok && (u.Symbol == "in" || u.Symbol == "ft")
+}
+
+// families are the families in the order in which they are offered, those of the
+// calculation's part of the world first.
+func (s *scope) families() []string {
+	if !s.american() {
+		return familyOrder
+	}
+	i := slices.Index(familyOrder, americanFirst)
+	return append(slices.Clone(familyOrder[i:]), append([]string{"HP", "L"}, slices.DeleteFunc(slices.Clone(familyOrder[:i]), func(f string) bool { return f == "HP" || f == "L" })...)...)
+}
+
+// familyText is how a designation of the family begins.
+func familyText(f string) string {
+	switch {
+	case f == "PIPE":
+		return "Pipe "
+	case slices.Index(familyOrder, f) >= slices.Index(familyOrder, americanFirst):
+		return f
+	}
+	return f + " "
+}
 
 // computed keeps the properties of catalogue sections: they never change while
 // the program runs.
@@ -73,9 +127,10 @@ func (s *scope) designations() (out []Item, more bool) {
 			}
 		}
 	}
-	for _, f := range familyOrder {
+	order := s.families()
+	for _, f := range order {
 		if strings.HasPrefix(f, upper) && f != upper {
-			out = append(out, Item{Label: f, Detail: familyWords[f], Kind: FamilyItem, Text: f + " ", Group: 3, Eager: true})
+			out = append(out, Item{Label: strings.TrimSpace(familyText(f)), Detail: familyWords[f], Kind: FamilyItem, Text: familyText(f), Group: 3, Eager: true})
 		}
 	}
 	if typed == "" {
@@ -100,9 +155,15 @@ func (s *scope) designations() (out []Item, more bool) {
 			}
 		}
 	}
-	slices.SortStableFunc(found, func(a, b catalogue.Entry) int {
-		return slices.Index(familyOrder, a.Family) - slices.Index(familyOrder, b.Family)
-	})
+	home := s.american()
+	rank := func(e *catalogue.Entry) int {
+		n := slices.Index(order, e.Family)
+		if e.American() != home {
+			n += len(order)
+		}
+		return n
+	}
+	slices.SortStableFunc(found, func(a, b catalogue.Entry) int { return rank(&a) - rank(&b) })
 	group := 4
 	if exact || len(out) == 0 {
 		group = 2
@@ -162,6 +223,9 @@ func (s *scope) ownSection() *model.Section {
 // suits ranks a grade for a section: 0 where the product standard is one of such
 // sections.
 func suits(standard string, x *model.Section) int {
+	if american := strings.HasPrefix(standard, "ASTM "); american || x != nil && strings.HasPrefix(x.Standard, "ASTM ") {
+		return suitsAmerican(standard, x)
+	}
 	if x == nil {
 		return map[string]int{"EN 10025-2": 0, "EN 10210-1": 1, "EN 10219-1": 1, "EN 10025-3": 2, "EN 10025-4": 2, "EN 10025-6": 3}[standard]
 	}
@@ -177,11 +241,43 @@ func suits(standard string, x *model.Section) int {
 	return map[bool]int{true: 0, false: 1}[standard == "EN 10219-1" == (x.Shape.Made == section.Cold)]
 }
 
+// usualSteels are the ASTM standards that sections are usually made to.
+var usualSteels = map[string]catalogue.Form{"ASTM A992": catalogue.RolledShape, "ASTM A500": catalogue.SquareHollow, "ASTM A36": catalogue.Plate}
+
+// suitsAmerican is suits where the grade or the section is American.
+func suitsAmerican(standard string, x *model.Section) int {
+	american := strings.HasPrefix(standard, "ASTM ")
+	switch {
+	case x == nil:
+		return 3
+	case american != strings.HasPrefix(x.Standard, "ASTM ") && x.Standard != "":
+		return 3
+	case !american:
+		return 2
+	}
+	form := catalogue.FormOf(x.Shape)
+	for _, g := range catalogue.Grades() {
+		if g.Standard != standard {
+			continue
+		}
+		if _, ok := g.For(x.Shape); !ok {
+			return 2
+		}
+		usual, known := usualSteels[standard]
+		named := x.Standard == standard || standard == "ASTM A500" && form == catalogue.RoundHollow && x.Standard != "ASTM A53"
+		if named || known && usual == form && (form != catalogue.SquareHollow || x.Standard == "") {
+			return 0
+		}
+		return 1
+	}
+	return 3
+}
+
 // grades are the steel grades of the catalogue, those first that the member's
 // section is made of. A grade that several product standards have stands once,
 // as the one that it means without saying which.
 func (s *scope) grades() []Item {
-	x := s.ownSection()
+	x, home := s.ownSection(), s.american()
 	var out []Item
 	seen := map[string]bool{}
 	for _, g := range catalogue.Grades() {
@@ -195,6 +291,9 @@ func (s *scope) grades() []Item {
 			g, item.Text = own, `"`+g.Name+`" per "EN 10219-1"`
 		}
 		fit := suits(g.Standard, x)
+		if x == nil && home { // no section to go by
+			fit = map[bool]int{true: 0, false: 3}[g.American()]
+		}
 		item.Detail, item.Group, item.Eager = s.gradeWords(&g, x), 1+fit, fit < 3
 		out = append(out, item)
 	}
@@ -204,6 +303,9 @@ func (s *scope) grades() []Item {
 // gradeWords says where a grade comes from and how strong it is: for the
 // member's section, or as thin as it is listed.
 func (s *scope) gradeWords(g *catalogue.Grade, x *model.Section) string {
+	if g.American() {
+		return s.americanWords(g, x)
+	}
 	t, at := 0.01, " in 10 mm"
 	if x != nil && x.Thickness > 0 {
 		t, at = x.Thickness, " in "+s.showAs(unit.Quantity{Value: x.Thickness, Dim: unit.Length}, "mm")
@@ -218,6 +320,20 @@ func (s *scope) gradeWords(g *catalogue.Grade, x *model.Section) string {
 		return from + ", no strength" + at
 	}
 	return from + ", fy " + s.show(unit.Quantity{Value: fy, Dim: unit.Stress}) + at
+}
+
+// americanWords is gradeWords for an American grade.
+func (s *scope) americanWords(g *catalogue.Grade, x *model.Section) string {
+	if x != nil && x.Thickness > 0 {
+		if own, ok := g.For(x.Shape); !ok {
+			return g.Standard + ", not for " + catalogue.FormOf(x.Shape).String()
+		} else if fy, _, _, ok := own.Strength(x.Thickness); ok {
+			return g.Standard + ", fy " + s.showAs(unit.Quantity{Value: fy, Dim: unit.Stress}, "ksi") + " in " + s.showAs(unit.Quantity{Value: x.Thickness, Dim: unit.Length}, "in")
+		}
+		return g.Standard + ", no strength in " + s.showAs(unit.Quantity{Value: x.Thickness, Dim: unit.Length}, "in")
+	}
+	first := g.Forms()[0]
+	return g.Standard + ", fy " + s.showAs(unit.Quantity{Value: first.Fy, Dim: unit.Stress}, "ksi") + " in " + first.Form.String()
 }
 
 // showAs writes a quantity in the calculation's unit of its dimension, or in
@@ -281,5 +397,8 @@ func (s *scope) productStandards() []Item {
 // productWords say what a product standard is of.
 var productWords = map[string]string{
 	"EN 10025-2": ", hot rolled, non-alloy", "EN 10025-3": ", hot rolled, normalised fine grain", "EN 10025-4": ", hot rolled, thermomechanical fine grain",
+	"ASTM A36": ", shapes, plate and bar", "ASTM A53": ", pipe", "ASTM A242": ", weathering", "ASTM A500": ", cold formed hollow sections", "ASTM A501": ", hot formed hollow sections",
+	"ASTM A529": ", shapes, plate and bar", "ASTM A572": ", shapes, plate and bar", "ASTM A588": ", weathering", "ASTM A847": ", cold formed hollow sections, weathering",
+	"ASTM A913": ", shapes, quenched and self-tempered", "ASTM A992": ", shapes", "ASTM A1065": ", hollow sections welded of two halves", "ASTM A1085": ", cold formed hollow sections, full wall",
 	"EN 10025-6": ", plate, quenched and tempered", "EN 10210-1": ", hot finished hollow sections", "EN 10219-1": ", cold formed hollow sections",
 }

@@ -11,7 +11,7 @@ import (
 // once are the words that a member says once; those that say the same thing
 // stand under one of them.
 var once = map[string]string{"section": "section", "material": "material", "height": "height", "length": "height", "from": "height", "selfweight": "selfweight", "net": "net",
-	"moments": "moments", "reduce": "reduce", "reduction": "reduce"}
+	"critical": "critical", "imperfection": "imperfection", "moments": "moments", "reduce": "reduce", "reduction": "reduce"}
 
 // statements are what can be said where a statement begins.
 func (s *scope) statements() []Item {

@@ -90,7 +90,7 @@ var standardWords = map[string]string{
 
 // fixedWords explain the texts that stand as they are.
 var fixedWords = map[string]string{
-	"EN 1990:2002": "Eurocode, basis of structural design", "6.10": "one leading action, the others with psi_0",
+	"EN 1990:2002": "Eurocode, basis of structural design", "ASCE/SEI 7-22": "minimum design loads, United States", "6.10": "one leading action, the others with psi_0",
 	"6.10a/b":          "the less favourable of (6.10a) and (6.10b)",
 	"product standard": "by the thickness, as the grade's product standard has it", "EN 1993-1-1 Table 3.1": "two thickness ranges, as Eurocode 3 simplifies them",
 }
@@ -108,6 +108,9 @@ var imposed = []category{
 // categories are the categories of an action with the factor that they bring.
 func (s *scope) categories(kind action.Kind) []Item {
 	list := imposed
+	if s.env.Basis.Basic() {
+		list = []category{{action.Assembly, "places of public assembly, not reduced"}, {action.Garage, "passenger vehicles, not reduced"}}
+	}
 	if kind == action.Snow {
 		list = []category{{action.SnowLow, "sites up to 1000 m above sea level"}, {action.SnowHigh, "sites above 1000 m"}}
 	}

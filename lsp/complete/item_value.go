@@ -45,7 +45,7 @@ func (s *scope) valuesFor(d duty) (list []Item, more bool) {
 	case "SHAPE":
 		return s.shapes(), false
 	case "KIND":
-		return s.words(duty{element: &element{kind: wordElement, words: []string{"imposed", "snow", "wind", "temperature"}}}), false
+		return s.words(duty{element: &element{kind: wordElement, words: []string{"imposed", "live", "roof", "snow", "rain", "wind", "temperature"}}}), false
 	case "SITUATION":
 		return s.words(duty{element: &element{kind: wordElement, words: action.SituationNames()}}), false
 	case "RESULT":
@@ -146,6 +146,9 @@ func (s *scope) operands(dims []unit.Dim) []Item {
 	}
 	if s.member != nil && s.in == lang.InMember && dims != nil && fitting(dims, unit.Length) && s.head != "height" && s.head != "length" && s.head != "from" {
 		out = append(out, Item{Label: "height", Detail: "the member's own height", Kind: WordItem, Group: 3, Eager: true})
+		if s.head == "limit" && len(s.before) > 0 && s.before[0].Is("deflection") && s.env.Names["span"] == nil {
+			out = append(out, Item{Label: "span", Detail: lang.Words["span"], Kind: WordItem, Group: 3, Eager: true})
+		}
 	}
 	for _, f := range functionNames() {
 		group := 5
@@ -201,6 +204,9 @@ func (s *scope) caseWords(c *model.Case) string {
 
 // psiWords are the factors of a variable action by the annex of the calculation.
 func (s *scope) psiWords(c action.Case) string {
+	if s.env.Basis.Basic() {
+		return ""
+	}
 	values := action.Recommended
 	if s.env.Basis.Combining.Values.Annex != "" {
 		values = s.env.Basis.Combining.Values

@@ -86,7 +86,7 @@ var places = map[string]string{
 	"basis { selfweight ¦ }":                            "on off",
 	"basis { strengths \"¦\" }":                         "product_standard EN_1993-1-1_Table_3.1",
 	"basis { gamma_M0 = 1.1 ¦ }":                        "because",
-	"case Q ¦":                                          "permanent imposed snow wind temperature accidental seismic",
+	"case Q ¦":                                          "permanent dead imposed live roof snow rain wind temperature accidental seismic",
 	"case Q imposed \"¦\"":                              "A B C1",
 	"case Q snow \"¦\"":                                 "below_1000_m above_1000_m",
 	"material x = \"¦\"":                                "S235 S235JR",

@@ -143,7 +143,7 @@ func has(l List, word string, family bool) bool {
 	for _, x := range l.Items {
 		switch {
 		case x.Label == word, x.Label == "height / 2" && word == "height",
-			family && x.Kind == FamilyItem && strings.HasPrefix(word, x.Label+" "):
+			family && x.Kind == FamilyItem && strings.HasPrefix(word, strings.Trim(x.written(), `"`)):
 			return true
 		case x.Kind == RuleItem && strings.HasPrefix(x.Label, word):
 			return true

@@ -81,7 +81,7 @@ func measured(b *testing.B, ask func() bool) {
 
 // BenchmarkAt measures completion in a file of 10,000 columns.
 func BenchmarkAt(b *testing.B) {
-	for _, typed := range []string{"", "section = ", `section = "HEB 1`, `section = "100x`, "load G 80 ", "load G ", "require ", "depart ", "hold minor at ", `material = "`} {
+	for _, typed := range []string{"", "section = ", `section = "HEB 1`, `section = "W14x`, `section = "HSS8x`, `section = "100x`, "load G 80 ", "load G ", "require ", "depart ", "hold minor at ", `material = "`} {
 		name := strings.TrimSpace(typed)
 		if name == "" {
 			name = "statement"

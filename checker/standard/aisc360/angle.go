@@ -65,12 +65,12 @@ func (c *calc) byLeg() bool {
 	c.group(rule)
 	c.cover(major, standard.NotApplicable, "connected by one leg: see "+rule+" (E5)")
 	if !c.pressed {
-		c.least(math.NaN(), rule)
+		c.least(unknown(rule))
 		c.cover(rule, standard.NotApplicable, notPressed)
 		return true
 	}
 	if why := c.legRefused(); why != "" {
-		c.least(math.NaN(), rule)
+		c.least(unknown(rule))
 		c.undecided(rule, eccentric, why)
 		return true
 	}
@@ -97,14 +97,15 @@ func (c *calc) byLeg() bool {
 	x := axes[1]
 	slope := c.do(legs[legKey{m.Leg.Short && unequal, m.Leg.Space, c.s.At(symLen)/c.s.At(symRa) <= bound}])
 	if !(slope <= mostSlope) {
-		c.least(math.NaN(), rule)
+		c.least(unknown(rule))
 		c.undecided(rule, eccentric, fmt.Sprintf("L_c/r by E5 is %s, above 200: the eccentricity is to be counted as bending (chapter H), by hand", unit.Short(slope, 3)))
 		return true
 	}
 	c.assume("connected by one leg at both ends, the same one, by welds or at least two bolts (E5)")
 	c.do(x.doFe)
+	c.do(x.doPe)
 	c.nominalStrength(x)
-	c.least(c.s.At(x.pn), rule)
+	c.least(c.of(x, rule))
 	n, k := c.worst(0, m.Height)
 	c.take(x.pr, n, c.combination(k))
 	u := c.do(x.doU)
@@ -123,6 +124,9 @@ func (c *calc) legRefused() string {
 		return "the longer leg is not shorter than 1.7 times the other: count the eccentricity as bending (E5(5), chapter H), by hand"
 	case c.f.Pushed[0] || c.f.Pushed[1]:
 		return "there are loads across the member: count the eccentricity as bending (E5(3), chapter H), by hand"
+	}
+	if m.Imported != nil {
+		return "its forces come from a table: whether they come in at the ends is not known, count the eccentricity as bending (E5(1), chapter H), by hand"
 	}
 	for _, l := range m.Loads {
 		if l.At > 1e-6*m.Height && l.At < m.Height*(1-1e-6) {

@@ -3,6 +3,7 @@ package aisc360
 import (
 	"strings"
 
+	"kern/checker/action"
 	"kern/checker/derivation"
 	"kern/checker/standard"
 	"kern/lang/unit"
@@ -37,19 +38,21 @@ func newBrace(letter string) *brace {
 	return b
 }
 
+// fewHolds is up to how many holds are listed one by one.
+const fewHolds = 4
+
 // bracing works out what appendix 6 asks of the holds. The calculation knows
 // nothing of what holds the member: a person compares.
 func (c *calc) bracing() {
 	const rule = "bracing"
-	held, whole := [2]bool{}, false
+	held := [2]bool{}
 	for a := range held {
-		whole = whole || len(c.f.Stretches[a]) > 0 && c.f.Stretches[a][0].Exact // none of a mechanism
-		for _, s := range c.f.Stretches[a] {                                    // one that ends at a hold
+		for _, s := range c.f.Stretches[a] { // one that ends at a hold
 			held[a] = held[a] || c.f.Stands[a] && s.Length() < c.f.Member.Height*(1-1e-9)
 		}
 	}
 	switch {
-	case !held[0] && !held[1] && len(c.f.Member.Holds) > 0 && whole:
+	case !held[0] && !held[1] && len(c.f.Member.Holds) > 0 && (c.whole(0) || c.whole(1)):
 		c.cover(rule, standard.NotApplicable, "beside a free end the column is worked out as a whole: what its holds need is to be found by analysis (App. 6.1)")
 		return
 	case !held[0] && !held[1]:
@@ -79,24 +82,45 @@ func (c *calc) bracing() {
 				fullest = i
 			}
 		}
-		most, k := c.worst(stretches[fullest].From, stretches[fullest].To)
-		if most <= 0 {
+		if most, _ := c.worst(stretches[fullest].From, stretches[fullest].To); most <= 0 {
 			continue
 		}
-		c.take(b.pr, most, c.combination(k))
-		c.do(b.doPbr)
-		n, k := c.worst(stretches[steepest].From, stretches[steepest].To)
-		c.take(b.prs, n, c.combination(k))
-		c.take(b.lbr, stretches[steepest].Length(), c.f.StretchName(a, stretches[steepest]))
-		if c.asd {
-			c.do(b.doBetaASD)
-		} else {
-			c.do(b.doBetaLRFD)
+		work := func(fullest, steepest action.Stretch) string {
+			most, k := c.worst(fullest.From, fullest.To)
+			c.take(b.pr, most, c.combination(k))
+			c.do(b.doPbr)
+			n, k := c.worst(steepest.From, steepest.To)
+			c.take(b.prs, n, c.combination(k))
+			c.take(b.lbr, steepest.Length(), c.f.StretchName(a, steepest))
+			if c.asd {
+				c.do(b.doBetaASD)
+			} else {
+				c.do(b.doBetaLRFD)
+			}
+			return "a strength of at least " + show.Show(c.s.At(b.pbr), unit.Force, 3) + " and a stiffness of at least " + show.Show(c.s.At(b.beta), unit.ForcePerLength, 3)
 		}
-		need := "each hold " + flexures[a].word + " has a strength of at least " + show.Show(c.s.At(b.pbr), unit.Force, 3) +
-			" and a stiffness of at least " + show.Show(c.s.At(b.beta), unit.ForcePerLength, 3)
+		if n := len(stretches) - 1; n > 1 && n <= fewHolds {
+			c.silently(func() {
+				for i := range n {
+					below, above := stretches[i], stretches[i+1]
+					full, steep := above, above
+					p, _ := c.worst(below.From, below.To)
+					q, _ := c.worst(above.From, above.To)
+					if p > q {
+						full = below
+					}
+					if p/below.Length() > q/above.Length() {
+						steep = below
+					}
+					c.assume("the hold %s at %s has %s (point bracing, App. 6.2.2)", flexures[a].word, c.f.Place(below.To), work(full, steep))
+				}
+			})
+		}
+		need := "each hold " + flexures[a].word + " has " + work(stretches[fullest], stretches[steepest])
+		if n := len(stretches) - 1; n <= 1 || n > fewHolds {
+			c.assume("%s (point bracing, App. 6.2.2)", need)
+		}
 		needs = append(needs, need)
-		c.assume("%s (point bracing, App. 6.2.2)", need)
 	}
 	why := "worked out, to be compared with what holds the member: " + strings.Join(needs, "; ")
 	if c.f.Bends[0] {
@@ -104,3 +128,6 @@ func (c *calc) bracing() {
 	}
 	c.cover(rule, standard.Checked, why)
 }
+
+// whole tells whether a column beyond a hold is worked out as one.
+func (c *calc) whole(a int) bool { return len(c.f.Stretches[a]) == 1 && c.f.Stretches[a][0].Exact }

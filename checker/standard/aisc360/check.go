@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math"
 	"slices"
+	"strings"
 
 	"kern/checker/derivation"
 	"kern/checker/standard"
@@ -25,10 +26,12 @@ type calc struct {
 
 	shape   *shape // the plates that can buckle in compression; nil for solid, round and stated sections
 	slender bool   // a plate, or the round wall, has a width-to-thickness ratio above lambda_r
-	// nominal is the least nominal compressive strength that was found, of which
-	// rule; NaN while it is not known.
-	nominal     float64
-	nominalRule string
+	// governing is the mode of buckling with the least nominal strength; its rule is ""
+	// while none was found.
+	governing mode
+	// compressed are the values after the checks of tension and compression, which
+	// those of combined forces compute again for other stretches.
+	compressed []float64
 
 	bend bendState
 }
@@ -52,6 +55,9 @@ func (c *calc) value(symbol string) (unit.Quantity, bool) {
 		return unit.Quantity{}, false
 	}
 	v := c.s.At(id)
+	if int(id) < len(c.compressed) && !math.IsNaN(c.compressed[id]) {
+		v = c.compressed[id]
+	}
 	return unit.Quantity{Value: v, Dim: c.ed.set.At(id).Dim}, !math.IsNaN(v)
 }
 
@@ -105,7 +111,7 @@ func (c *calc) combination(k int) string {
 
 // run makes the checks in the order in which they lean on each other.
 func (c *calc) run() {
-	c.nominal = math.NaN()
+	c.governing = unknown("")
 	c.s.Recording(c.record)
 	c.given()
 	c.loads()
@@ -113,10 +119,14 @@ func (c *calc) run() {
 	c.tension()
 	c.compression()
 	c.stability()
+	c.compressed = make([]float64, c.ed.set.Len())
+	for i := range c.compressed {
+		c.compressed[i] = c.s.At(derivation.ID(i))
+	}
 	c.bending()
 	c.bracing()
 	c.slenderness()
-	c.sway()
+	c.shared()
 	c.out.Assumptions = append(c.f.Assumptions(), c.assuming...)
 }
 
@@ -131,7 +141,7 @@ const (
 func (c *calc) given() {
 	m, basis := c.f.Member, &c.f.Env.Basis
 	c.group("")
-	fy, _, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	fy, _, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok || !(fy > 0) {
 		fy = math.NaN()
 		c.why = standard.NoStrength(m)
@@ -158,9 +168,15 @@ func (c *calc) given() {
 	}
 	c.take(symAlphaFactor, alpha, "C2.3, "+method)
 	if c.asd {
-		c.assume("by ASD: allowable strengths (B3.2)")
+		c.assume("by ASD: allowable strengths (B3.2), with combinations of ASD")
 	} else {
-		c.assume("by LRFD: design strengths (B3.1)")
+		c.assume("by LRFD: design strengths (B3.1), with combinations of LRFD")
+	}
+	switch {
+	case basis.Actions == "" && len(c.f.Env.Automatic) > 0 && !c.asd && m.Imported == nil:
+		c.assume("the loads bear the load factors of LRFD already, as no combinations are stated")
+	case strings.HasPrefix(basis.Actions, "EN "):
+		c.assume("combinations of %s with strengths of %s: the safety of the two is not of one kind", basis.Actions, c.ed.name)
 	}
 	if m.Material.Grade != nil {
 		c.assume("strengths of %s from its product standard %s", m.Material.Grade.Name, m.Material.Grade.Standard)
@@ -179,6 +195,10 @@ func (c *calc) loads() {
 			most, c.pulled = t, k
 		}
 	}
+	if c.pressed {
+		n, k := c.worst(0, c.f.Member.Height)
+		c.take(symPr, n, c.combination(k))
+	}
 }
 
 // worst is the greatest compression between two heights and its combination.
@@ -192,10 +212,9 @@ func (c *calc) worst(from, to float64) (float64, int) {
 	return most, at
 }
 
-func (c *calc) sway() {
-	if c.f.Member.Limits.Sway > 0 {
-		c.undecided("sway", "limit of the member", "sway is not worked out: compare the frame's sway with the limit by hand")
-		return
-	}
-	c.cover("sway", standard.NotApplicable, "the member sets no limit")
+// common are the checks that all standards share.
+var common = standard.NewCommon(set)
+
+func (c *calc) shared() {
+	common.Check(c.f, c.s, &c.out, c.group, c.do)
 }

@@ -17,7 +17,7 @@ var Clauses = append(append([]Clause{
 	{"B3.1", "Design for strength by LRFD", "checked", "by LRFD in the basis"},
 	{"B3.2", "Design for strength by ASD", "checked", "by ASD in the basis"},
 	{"B3.4 to B3.6", "Connections, diaphragms, anchorage", "not covered", "by hand: joints and base plates"},
-	{"B3.8", "Serviceability", "not covered", "by hand: drift and deflection; sway leaves a member with such a limit undecided"},
+	{"B3.8", "Serviceability", "checked", "sway, deflection: against the limits of the member; the drift of a frame by hand (hold-stiffness, of holds that state one, is of no clause)"},
 	{"B3.11 to B3.13", "Fatigue, fire, corrosion", "not covered", "by hand: appendices 3 and 4"},
 	{"B4.1, Table B4.1a", "Local buckling in compression", "checked", "local-buckling"},
 	{"B4.2", "Design wall thickness of HSS", "checked", "the wall of the section, as its catalogue or the calculation gives it"},

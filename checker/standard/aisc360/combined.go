@@ -89,8 +89,11 @@ func (c *calc) interaction() {
 	case !pressed && !pulled && !(c.f.Bends[0] && c.f.Bends[1]):
 		c.cover(rule, standard.NotApplicable, "neither axial force nor bending about a second axis")
 		return
-	case !c.f.Stands[0] || !c.f.Stands[1]:
-		refuse("the ends and holds do not keep the member in place")
+	case !c.f.Stands[0]:
+		refuse(c.f.NotHeld(0))
+		return
+	case !c.f.Stands[1]:
+		refuse(c.f.NotHeld(1))
 		return
 	case c.f.Bends[0] && c.bend.why[0] != "":
 		refuse(c.bend.why[0])
@@ -196,7 +199,11 @@ func (c *calc) interactionAt(s strip, k int, pull bool) float64 {
 			peak[a] = action.DiagramOf(b.pieces[a], max(g.from, stretch[a].From), min(g.to, stretch[a].To), c.bend.tiny[a]).Peak
 		}
 	}
+	// compression spreads the moment of a stretch over all of its segments
 	with := [2]bool{peak[0] > c.bend.tiny[0], peak[1] > c.bend.tiny[1]}
+	if !pull {
+		with = [2]bool{d[0].Peak > c.bend.tiny[0], d[1].Peak > c.bend.tiny[1]}
+	}
 	if !with[0] && !with[1] {
 		return -1
 	}
@@ -224,8 +231,7 @@ func (c *calc) interactionAt(s strip, k int, pull bool) float64 {
 		if !with[a] {
 			continue
 		}
-		c.take(x.mnt, peak[a], source)
-		if !c.amplified(a, k, stretch[a], d[a]) {
+		if !c.amplified(a, k, stretch[a], d[a], peak[a]) {
 			if ratio > 1 {
 				return c.do(doOver)
 			}

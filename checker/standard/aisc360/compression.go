@@ -12,13 +12,13 @@ import (
 
 // axis holds the symbols and formulas of flexural buckling about one axis.
 type axis struct {
-	letter, word                       string
-	i, r, l, k, lc, slender, fe, fn    derivation.ID
-	pn, pr, u, limit, us               derivation.ID
-	strength                           *available
-	doR, doLc, doSlender, doFe         *derivation.Formula
-	doFn, doFnElastic, doFnOf          *derivation.Formula
-	doPn, doPnEffective, doU, doLimitU *derivation.Formula
+	letter, word                        string
+	i, r, l, k, lc, slender, fe, pe, fn derivation.ID
+	pn, pr, u, limit, us                derivation.ID
+	strength                            *available
+	doR, doLc, doSlender, doFe, doPe    *derivation.Formula
+	doFn, doFnElastic, doFnOf           *derivation.Formula
+	doPn, doPnEffective, doU, doLimitU  *derivation.Formula
 }
 
 var axes = [2]*axis{newAxis("x", "major"), newAxis("y", "minor")}
@@ -35,6 +35,7 @@ func newAxis(letter, word string) *axis {
 	x.lc = s("L_c", unit.Length, "effective length")
 	x.slender = s("slenderness", unit.None, "effective slenderness ratio L_c/r")
 	x.fe = s("F_e", unit.Stress, "elastic buckling stress")
+	x.pe = s("P_e", unit.Force, "elastic buckling load")
 	x.fn = s("F_n", unit.Stress, "nominal stress, flexural buckling")
 	x.pn = s("P_n", unit.Force, "nominal compressive strength, flexural buckling")
 	x.pr = s("P_r", unit.Force, "required compressive strength in the stretch")
@@ -49,6 +50,7 @@ func newAxis(letter, word string) *axis {
 	x.doLc = f(x.lc, "K_? * L_?", "E2")
 	x.doSlender = f(x.slender, "L_c_? / r_?", "E2")
 	x.doFe = f(x.fe, "pi^2 * E / slenderness_?^2", "E3 (E3-4)")
+	x.doPe = f(x.pe, "F_e_? * A_g", "E3 (E3-4), as a load")
 	x.doFn = f(x.fn, "0.658^(F_y / F_e_?) * F_y", "E3(a) (E3-2)")
 	x.doFnElastic = f(x.fn, "0.877 * F_e_?", "E3(b) (E3-3)")
 	x.doFnOf = f(symFn, "F_n_?", "E7")
@@ -61,10 +63,11 @@ func newAxis(letter, word string) *axis {
 
 // The member's strength in compression: the least of all modes of buckling.
 var (
+	symPr       = sym("P_r", unit.Force, "required compressive strength, the greatest in the member")
+	symFe       = sym("F_e", unit.Stress, "elastic buckling stress of the mode that governs")
 	symPn       = sym("P_n", unit.Force, "nominal compressive strength, the least of all modes of buckling")
 	compressive = newAvailable(symPn, "P_c", "phi_c", "Omega_c", "E1")
 	inelastic   = 2.25 // greatest F_y/F_e of inelastic buckling, E3(a)
-	notInPlace  = "the ends and holds do not keep the member in place about "
 	notPressed  = "no combination compresses the member"
 )
 
@@ -80,9 +83,11 @@ func (c *calc) compression() {
 	c.group("")
 	source := ""
 	if c.s.Recorded() {
-		source = "E1, the least: " + c.nominalRule
+		source = "E1, the least: " + c.governing.rule
 	}
-	c.take(symPn, c.nominal, source)
+	c.take(symFe, c.governing.fe, source)
+	c.take(symFn, c.governing.fn, source)
+	c.take(symPn, c.governing.pn, source)
 	c.available(compressive)
 	c.advice()
 }
@@ -98,11 +103,11 @@ func (c *calc) flexural(a int) {
 	c.group(rule)
 	switch {
 	case !c.f.Stands[a]:
-		c.least(math.NaN(), rule)
-		c.undecided(rule, clause, notInPlace+x.word)
+		c.least(unknown(rule))
+		c.undecided(rule, clause, c.f.NotHeld(a))
 		return
 	case c.why != "":
-		c.least(math.NaN(), rule)
+		c.least(unknown(rule))
 		if c.pressed {
 			c.undecided(rule, clause, c.why)
 		} else {
@@ -129,7 +134,7 @@ func (c *calc) flexural(a int) {
 	})
 	s := c.f.Stretches[a][governing]
 	c.flexuralStrength(x, a, s)
-	c.least(c.s.At(x.pn), rule)
+	c.least(c.of(x, rule))
 	if combination < 0 {
 		c.cover(rule, standard.NotApplicable, notPressed)
 		return
@@ -140,14 +145,32 @@ func (c *calc) flexural(a int) {
 	c.add(rule, clause, combination, n, c.s.At(x.strength.c), unit.Force, u, c.f.Limit())
 }
 
-// least keeps the least nominal strength of all modes of buckling; one that is
-// not known makes it unknown for good.
-func (c *calc) least(pn float64, rule string) {
+// mode is a mode of buckling.
+type mode struct {
+	rule       string
+	pn, fe, fn float64
+}
+
+// least keeps the mode with the least nominal strength; one that is not known makes
+// it unknown for good.
+func (c *calc) least(m mode) {
+	g := &c.governing
 	switch {
-	case c.nominalRule != "" && math.IsNaN(c.nominal):
-	case c.nominalRule == "" || !(pn >= c.nominal):
-		c.nominal, c.nominalRule = pn, rule
+	case g.rule != "" && math.IsNaN(g.pn):
+	case g.rule == "" || !(m.pn >= g.pn):
+		*g = m
 	}
+}
+
+// unknown is a mode of buckling whose strength is not known.
+func unknown(rule string) mode {
+	nan := math.NaN()
+	return mode{rule, nan, nan, nan}
+}
+
+// of is the mode of flexural buckling that was computed last about an axis.
+func (c *calc) of(x *axis, rule string) mode {
+	return mode{rule, c.s.At(x.pn), c.s.At(x.fe), c.s.At(x.fn)}
 }
 
 // elastic computes the elastic buckling stress of a stretch.
@@ -158,10 +181,18 @@ func (c *calc) elasticStress(a int, s action.Stretch) float64 {
 		source = fmt.Sprintf("%s, %s–%s", c.f.StretchName(a, s), s.Base, s.Top)
 	}
 	c.take(x.l, standard.Known(s.Length()), source)
+	if s.Whole {
+		source = "from the critical load of the whole member, the greatest of all combinations"
+	}
 	c.take(x.k, standard.Known(s.K), source)
+	if s.Joints {
+		c.joints(a)
+	}
 	c.do(x.doLc)
 	c.do(x.doSlender)
-	return c.do(x.doFe)
+	fe := c.do(x.doFe)
+	c.do(x.doPe)
+	return fe
 }
 
 // elasticOf is elasticStress for the longest effective length about an axis,
@@ -238,7 +269,7 @@ func (c *calc) slenderness() {
 	worst, at := math.Inf(-1), 0
 	for a := range axes {
 		if !c.f.Stands[a] {
-			c.undecided(rule, "limit of the member", notInPlace+axes[a].word)
+			c.undecided(rule, "limit of the member", c.f.NotHeld(a))
 			return
 		}
 		c.silently(func() {

@@ -77,7 +77,7 @@ func (Standard) Overrides() map[string]bool {
 // Rules implements standard.Standard.
 func (Standard) Rules() []string {
 	return append([]string{"local-buckling", "section-tension", "net-section", "flexural-buckling-major", "flexural-buckling-minor",
-		"torsional-buckling", "flexural-torsional-buckling", "frame-stability", "slenderness", "sway"}, bendingRules...)
+		"torsional-buckling", "flexural-torsional-buckling", "frame-stability", "slenderness"}, append(standard.CommonRules, bendingRules...)...)
 }
 
 // Symbols implements standard.Standard.
@@ -95,6 +95,14 @@ func (s Standard) Alias(word string) string {
 		return "P_c_T"
 	case "N_b":
 		return "P_c"
+	case "N_cr_major":
+		return "P_e_x"
+	case "N_cr_minor":
+		return "P_e_y"
+	case "N_Ed":
+		return "P_r"
+	case "N_t_Ed":
+		return "P_r_t"
 	}
 	for from, to := range map[string]string{"_major": "_x", "_minor": "_y"} {
 		if base, ok := strings.CutSuffix(word, from); ok {

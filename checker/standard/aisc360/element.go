@@ -3,6 +3,7 @@ package aisc360
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"kern/checker/derivation"
 	"kern/checker/section"
@@ -144,6 +145,7 @@ func (c *calc) local() {
 		c.cover(rule, standard.NotCovered, c.why)
 	}
 	c.group("")
+	c.designWall()
 	switch sh.Kind {
 	case section.Bar, section.Rod:
 		whole("a solid section has no plates that could buckle")
@@ -235,6 +237,24 @@ func (c *calc) local() {
 		whole("slender elements (" + worst + "): the effective area counts (E7)")
 	default:
 		whole("no slender elements: the whole section counts (Table B4.1a)")
+	}
+}
+
+// designWall says what the wall of a tube is taken for (B4.2). American catalogue
+// tubes have their design wall.
+func (c *calc) designWall() {
+	sec := c.f.Member.Section
+	switch sec.Shape.Kind {
+	case section.Tube, section.Pipe:
+	default:
+		return
+	}
+	switch {
+	case sec.Shape.Made == section.Welded:
+	case strings.HasPrefix(sec.Standard, "EN "):
+		c.assume("the wall of %s counts with its nominal thickness; B4.2 takes 0.93 of it for tubes to other standards than ASTM A1065 and A1085", sec.Title())
+	case sec.Standard == "":
+		c.assume("the wall of '%s' is its design wall thickness (B4.2)", sec.Title())
 	}
 }
 

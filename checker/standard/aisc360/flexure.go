@@ -64,7 +64,7 @@ func (c *calc) bending() {
 	why := c.why
 	for a := range flexures {
 		if _, ok := c.f.Bending(a, nil, nil); !ok || c.f.Bends[a] && !c.f.Stands[a] {
-			why = "the ends and holds do not keep the member in place about " + flexures[a].word
+			why = c.f.NotHeld(a)
 		}
 	}
 	if why != "" {

@@ -68,6 +68,9 @@ func (c *calc) lateralOf() lateralState {
 		l.segments, l.why = c.unbraced()
 	}
 	l.unknown = l.why != ""
+	if !l.unknown && c.f.Pushed[l.axis] {
+		c.assume("loads across the member act at the height of the shear centre; on a flange in compression they lower the lateral-torsional buckling moment, which is for a person")
+	}
 	if o, ok := c.f.Env.Basis.Overrides["C_b"]; ok {
 		l.stated, l.because = o.Value, o.Because
 	}
@@ -153,7 +156,7 @@ func (c *calc) segmentGiven(s segment) {
 			source = "from the fixed end to the free end"
 		}
 		if len(c.bend.lat.segments) > 1 {
-			source = fmt.Sprintf("from %s m to %s m, %s", unit.Number(s.from, 4), unit.Number(s.to, 4), source)
+			source = fmt.Sprintf("from %s to %s, %s", c.f.Place(s.from), c.f.Place(s.to), source)
 		}
 	}
 	if s.factor != 1 && c.s.Recorded() {
@@ -177,6 +180,9 @@ func (c *calc) factorCb(k int, s segment, peak, tension float64) {
 		return
 	case s.free:
 		c.take(symCb, 1, "F1(c), a cantilever")
+		return
+	case !(peak > c.bend.tiny[l.axis]):
+		c.take(symCb, 1, "hardly any moment in the segment")
 		return
 	}
 	pieces := c.bend.combs[k].pieces[l.axis]

@@ -206,3 +206,21 @@ func TestUnsound(t *testing.T) {
 		}
 	}
 }
+
+// TestValues: a requirement reads the strength of the check of that name, whatever
+// the checks of combined forces compute after it.
+func TestValues(t *testing.T) {
+	p := post{shape: section.Shape{Kind: section.ISection, Made: section.Rolled, Depth: 12, Width: 8, Web: 0.4, Flange: 0.6, Root: 0.4}, fy: 50, height: 20, force: 10,
+		more: func(m *model.Member) {
+			m.Holds = append(m.Holds, model.Hold{At: 0.55 * m.Height, Minor: true, Twist: true})
+			m.Loads = append(m.Loads, model.Load{Kind: model.PointLoad, Value: 40 * kip, At: 0.85 * m.Height})
+		}}
+	out := Standard{}.Check(p.frame(t), nil)
+	for rule, word := range map[string]string{"flexural-buckling-major": "N_b_major", "flexural-buckling-minor": "N_b_minor"} {
+		c, ok := verdict(out, rule)
+		q, known := out.Value(Standard{}.Alias(word))
+		if !ok || !known || q.Value != c.Capacity {
+			t.Errorf("%s = %g, the check has %g", word, q.Value, c.Capacity)
+		}
+	}
+}

@@ -185,6 +185,15 @@ func TestPublishedExamples(t *testing.T) {
 				{"F_e_T", 91.9, ksi, 0}, {"F_n_y", 28.9, ksi, 0}, {"k_c", 0.516, 1, 0}, {"lambda_r_f", 11.1, 1, 0}, {fby + "lambda_e_w", 47.2, 1, 0},
 				{fby + "F_el_w", 30.7, ksi, 0}, {fby + "h_e", 12.6, inch, 0}, {fby + "A_e", 19.2, inch * inch, 0}, {"P_n", 555, kip, 0}, {"phi_P_n", 500, kip, 0}},
 			[]row{{"P_n_over_Omega", 332, kip, 0}}},
+		{"E.3 built-up, slender flanges", post{shape: section.Shape{Kind: section.ISection, Made: section.Welded, Depth: 8, Width: 10.5, Web: 0.25, Flange: 0.375}, j: 0.407, cw: 1050, fy: 50, height: 15, force: 240},
+			[]row{{"A_g", 9.69, inch * inch, 0}, {"r_y", 2.73, inch, 0}, {"I_x", 122, math.Pow(inch, 4), 0}, {"lambda_c_w", 29.0, 1, 0}, {"k_c", 0.743, 1, 0}, {"lambda_r_f", 13.3, 1, 0}, {"lambda_c_f", 14.0, 1, 0},
+				{"slenderness_y", 65.9, 1, 0}, {"F_e_y", 65.9, ksi, 0}, {"F_e_T", 71.2, ksi, 0}, {"F_n_y", 36.4, ksi, 0}, {fby + "lambda_e_f", 15.6, 1, 0}, {"P_n", 353, kip, 0}, {"phi_P_n", 318, kip, 0}},
+			[]row{{"P_n_over_Omega", 211, kip, 0}}},
+		{"E.8 WT7x15", post{shape: section.Shape{Kind: section.Tee, Made: section.Rolled, Depth: 6.92, Width: 6.73, Web: 0.27, Flange: 0.385, Root: 0.4},
+			area: 4.42, rx: 2.07, ry: 1.49, y0: 1.39, j: 0.190, cw: 0, fy: 50, height: 20, force: 36},
+			[]row{{"lambda_c_s", 25.6, 1, 0}, {"lambda_r_s", 18.1, 1, 0}, {"lambda_c_f", 8.74, 1, 0}, {"slenderness_x", 116, 1, 0}, {"slenderness_y", 161, 1, 0}, {"F_e_x", 21.3, ksi, 0.006}, {"H", 0.771, 1, 0},
+				{"F_e_z", 57.0, ksi, 0}, {"F_e_T", 10.5, ksi, 0}, {"F_n_T", 9.21, ksi, 0}, {ftb + "lambda_e_s", 42.2, 1, 0}, {"P_n", 40.7, kip, 0}, {"phi_P_n", 36.6, kip, 0}, {"phi_P_n_x", 74.3, kip, 0}},
+			[]row{{"P_n_over_Omega", 24.4, kip, 0}, {"P_n_x_over_Omega", 49.4, kip, 0}}},
 		{"E.7 WT7x34", post{shape: section.Shape{Kind: section.Tee, Made: section.Rolled, Depth: 7.02, Width: 10.035, Web: 0.415, Flange: 0.72, Root: 0.6},
 			area: 10.0, rx: 2.46, ry: 1.81, x0: 0.93, j: 1.50, cw: 0, fy: 50, height: 20, force: 120},
 			// kern's major axis of this tee is its axis of symmetry, y–y in the source
@@ -219,7 +228,7 @@ func TestPublishedExamples(t *testing.T) {
 		// about y–y; the chart's equations give 1.459 and 2.033
 		{"E.4A W14x82, storey BC", post{shape: w14x82, area: 24.0, rx: 6.05, ry: 2.48, fy: 50, height: 14, ky: 0.01, force: 100,
 			more: func(m *model.Member) { m.Joints[0] = &action.Joints{Top: 1.38, Base: 1.63, Sway: true} }},
-			[]row{{"K_x", 1.5, 1, 0.034}, {"phi_P_n_x", 940, kip, 0.02}}, []row{{"P_n_x_over_Omega", 626, kip, 0.02}}},
+			[]row{{"K_x", 1.5, 1, 0.034}, {"chart_x", 1, 1, 1e-9}, {"phi_P_n_x", 940, kip, 0.02}}, []row{{"P_n_x_over_Omega", 626, kip, 0.02}}},
 		{"E.4B W14x82, storey AB, pinned base", post{shape: w14x82, area: 24.0, rx: 6.05, ry: 2.48, fy: 50, height: 14, ky: 0.01, force: 100,
 			more: func(m *model.Member) { m.Joints[0] = &action.Joints{Top: 1.62, Base: 10, Sway: true} }},
 			[]row{{"K_x", 2.0, 1, 0.025}, {"phi_P_n_x", 861, kip, 0.01}}, []row{{"P_n_x_over_Omega", 573, kip, 0.01}}},
@@ -240,6 +249,44 @@ func TestPublishedExamples(t *testing.T) {
 					t.Errorf("%s: %s = %.4g, printed %g", c.name, r.symbol, got, r.printed)
 				}
 			}
+		}
+	}
+}
+
+// TestPublishedTension holds the worked examples D.1 to D.3 of AISC Design Examples
+// v16.0, read in the source.
+func TestPublishedTension(t *testing.T) {
+	w8x21 := section.Shape{Kind: section.ISection, Made: section.Rolled, Depth: 8.28, Width: 5.27, Web: 0.25, Flange: 0.4, Root: 0.3}
+	l4 := section.Shape{Kind: section.Angle, Made: section.Rolled, Depth: 4, Width: 4, Wall: 0.5, Root: 0.375, Toe: 0.25}
+	wt6x20 := section.Shape{Kind: section.Tee, Made: section.Rolled, Depth: 5.97, Width: 8.01, Web: 0.295, Flange: 0.515, Root: 0.5}
+	for _, c := range []struct {
+		name                                string
+		shape                               section.Shape
+		area, rx, ry, height, force, net, u float64
+		rows                                []row // LRFD
+		yield, rupture                      float64
+	}{
+		{"D.1 W8x21", w8x21, 6.16, 3.49, 1.26, 25, 180, 4.76, 0.908, []row{{"A_e_t", 4.32, inch * inch, 0}, {"P_n_R", 281, kip, 0}, {"phi_P_n_Y", 277, kip, 0}, {"phi_P_n_R", 211, kip, 0}}, 184, 141},
+		{"D.2 L4x4x1/2", l4, 3.75, 1.54, 0.776, 10, 120, 3.31, 0.869, []row{{"P_n_Y", 188, kip, 0}, {"phi_P_n_Y", 169, kip, 0}, {"A_e_t", 2.88, inch * inch, 0}, {"P_n_R", 187, kip, 0}, {"phi_P_n_R", 140, kip, 0}}, 113, 93.5},
+		{"D.3 WT6x20", wt6x20, 5.84, 1.94, 1.57, 30, 240, 5.84, 0.860, []row{{"phi_P_n_Y", 263, kip, 0}, {"A_e_t", 5.02, inch * inch, 0}, {"P_n_R", 326, kip, 0}, {"phi_P_n_R", 245, kip, 0}}, 175, 163},
+	} {
+		p := post{shape: c.shape, area: c.area, rx: c.rx, ry: c.ry, fy: 50, fu: 65, height: c.height, force: -c.force, overrides: map[string]float64{"U": c.u},
+			more: func(m *model.Member) { m.Net = c.net * inch * inch }}
+		v, out := p.values(t, Standard{})
+		for _, r := range c.rows {
+			if got := v[r.symbol] / r.unit; !(math.Abs(got/r.printed-1) <= 0.006) {
+				t.Errorf("%s: %s = %.4g, printed %g", c.name, r.symbol, got, r.printed)
+			}
+		}
+		for rule, capacity := range map[string]string{"section-tension": "phi_P_n_Y", "net-section": "phi_P_n_R"} {
+			if check, ok := verdict(out, rule); !ok || check.Capacity != v[capacity] || check.Verdict != standard.Passes {
+				t.Errorf("%s: %s %+v, strength %g", c.name, rule, check, v[capacity])
+			}
+		}
+		p.asd = true // D.2 divides 188, rounded from 187.5
+		v, _ = p.values(t, Edition2016)
+		if y, r := v["P_n_Y_over_Omega"]/kip, v["P_n_R_over_Omega"]/kip; !(math.Abs(y/c.yield-1) <= 0.007 && math.Abs(r/c.rupture-1) <= 0.006) {
+			t.Errorf("%s by ASD: %.4g and %.4g, printed %g and %g", c.name, y, r, c.yield, c.rupture)
 		}
 	}
 }

@@ -26,6 +26,42 @@ var (
 	doNi      = formula(symNi, "0.002 * alpha * Y_i", "C2.2b(a) (C2-1)")
 )
 
+// chart is the stiffness ratios of rigid joints, whose effective length factor is the
+// root of an equation.
+type chart struct {
+	base, top, root   derivation.ID
+	doSway, doInhibit *derivation.Formula
+}
+
+var charts = [2]*chart{newChart("x"), newChart("y")}
+
+func newChart(letter string) *chart {
+	c := &chart{
+		base: sym("G_base_"+letter, unit.None, "stiffness ratio of the joint at the base, "+letter+"–"+letter),
+		top:  sym("G_top_"+letter, unit.None, "stiffness ratio of the joint at the top, "+letter+"–"+letter),
+		root: sym("chart_"+letter, unit.None, "1 where K is a root of the equation of the alignment chart, "+letter+"–"+letter),
+	}
+	f := func(text, clause string) *derivation.Formula {
+		return formula(c.root, replaceAxis(text, letter), clause)
+	}
+	c.doSway = f("1 + (G_base_? * G_top_? * (pi / K_?)^2 - 36) / (6 * (G_base_? + G_top_?)) - pi / K_? / tan(pi / K_?)", "C-A-7-2, sidesway uninhibited")
+	c.doInhibit = f("G_base_? * G_top_? / 4 * (pi / K_?)^2 + (G_base_? + G_top_?) / 2 * (1 - pi / K_? / tan(pi / K_?)) + 2 * tan(pi / (2 * K_?)) / (pi / K_?)", "C-A-7-1, sidesway inhibited")
+	return c
+}
+
+// joints takes the stiffness ratios and puts the factor into the equation of the
+// chart.
+func (c *calc) joints(a int) {
+	j := c.f.Member.Joints[a]
+	c.take(charts[a].base, j.Base, "joints of the member")
+	c.take(charts[a].top, j.Top, "joints of the member")
+	if j.Sway {
+		c.do(charts[a].doSway)
+	} else {
+		c.do(charts[a].doInhibit)
+	}
+}
+
 // rigidity is the flexural rigidity E I* about an axis.
 type rigidity struct {
 	ei                 derivation.ID

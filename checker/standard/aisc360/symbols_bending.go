@@ -27,12 +27,12 @@ type flexure struct {
 	doMns, doMnsF, doMnsW, doMnsFW       *derivation.Formula
 
 	// the check of the section, and the strength beside axial force
-	mr, u         derivation.ID
-	section       *available
-	doU           *derivation.Formula
-	mn, mrH, mnt  derivation.ID
-	whole         *available
-	doMnS, doMnLT *derivation.Formula
+	mr, u             derivation.ID
+	section           *available
+	doU               *derivation.Formula
+	mn, mrH, mnt, seg derivation.ID
+	whole             *available
+	doMnS, doMnLT     *derivation.Formula
 
 	// tubes
 	lamF, lamW, areaW, rpg           derivation.ID
@@ -131,7 +131,8 @@ func (x *flexure) moduli(s declare, f define) {
 	x.whole = newAvailable(x.mn, "M_c_"+x.letter, "phi_b", "Omega_b", "F1(a)")
 	x.mr = s("M", unit.Moment, "greatest moment, first order, without its sign")
 	x.u = s("u_M", unit.None, "utilisation, flexure")
-	x.mnt = s("M_nt", unit.Moment, "greatest moment in the part, first order, without its sign")
+	x.mnt = s("M_nt", unit.Moment, "greatest moment in the stretch, first order, without its sign")
+	x.seg = s("M_seg", unit.Moment, "greatest moment in the unbraced segment, first order, without its sign")
 	x.mrH = s("M_r", unit.Moment, "required flexural strength, second order")
 
 	x.doMpTube = f(x.mp, "F_y * Z_?", "F7.1 (F7-1)")

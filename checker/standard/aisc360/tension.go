@@ -3,6 +3,7 @@ package aisc360
 import (
 	"math"
 
+	"kern/checker/section"
 	"kern/checker/standard"
 	"kern/lang/unit"
 )
@@ -51,7 +52,7 @@ func (c *calc) tension() {
 		c.undecided(rule, clause, standard.NoStrength(c.f.Member))
 	}
 	c.netSection(n)
-	if r := c.f.Member.Section; c.f.Member.Height/min(r.RMajor, r.RMinor) > 300 {
+	if r := c.f.Member.Section; r.Shape.Kind != section.Rod && c.f.Member.Height/min(r.RMajor, r.RMinor) > 300 {
 		c.assume("length over least radius of gyration = %s is above 300, which the user note of D1 prefers not to exceed", unit.Short(c.f.Member.Height/min(r.RMajor, r.RMinor), 3))
 	}
 }
@@ -96,7 +97,7 @@ func (c *calc) ruptureStrength() string {
 	case !(lag.Value <= 1):
 		return "U is more than 1: the shear lag factor is at most 1 (Table D3.1)"
 	}
-	_, fu, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	_, fu, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok || !(fu > 0) {
 		return "the tensile strength of " + m.Material.Title() + " is not known"
 	}

@@ -86,9 +86,9 @@ func (c *calc) torsional() {
 	const clause, torsion, coupled = "ANSI/AISC 360 E4", "torsional-buckling", "flexural-torsional-buckling"
 	sec := c.f.Member.Section
 	c.group(coupled)
-	mode, why := c.torsionRule()
+	kind, why := c.torsionRule()
 	rule := coupled
-	switch mode {
+	switch kind {
 	case "":
 		c.cover(torsion, standard.NotApplicable, why)
 		c.cover(coupled, standard.NotApplicable, why)
@@ -101,7 +101,7 @@ func (c *calc) torsional() {
 	}
 	c.group(rule)
 	refuse := func(why string) {
-		c.least(math.NaN(), rule)
+		c.least(unknown(rule))
 		if c.pressed {
 			c.undecided(rule, clause, why)
 		} else {
@@ -116,17 +116,17 @@ func (c *calc) torsional() {
 		refuse("state I_t and I_w of the section, or check torsional buckling by hand")
 		return
 	case !c.f.Stands[0]:
-		refuse(notInPlace + "major")
+		refuse(c.f.NotHeld(0))
 		return
 	case !c.f.Stands[1]:
-		refuse(notInPlace + "minor")
+		refuse(c.f.NotHeld(1))
 		return
 	}
 	if sec.Shape.Kind == section.Given {
 		c.assume("the section '%s' is doubly symmetric", sec.Name)
 	}
 	c.torsionalStrength(rule)
-	c.least(c.s.At(symPnT), rule)
+	c.least(mode{rule, c.s.At(symPnT), c.s.At(symFeT), c.s.At(symFnT)})
 	if !c.pressed {
 		c.cover(rule, standard.NotApplicable, notPressed)
 		return
@@ -140,8 +140,7 @@ func (c *calc) torsional() {
 // torsionalStrength computes P_c_T in the group that is open.
 func (c *calc) torsionalStrength(rule string) {
 	sec := c.f.Member.Section
-	title := sec.Title()
-	j, cw := c.f.Twisting()
+	j, cw, title := c.f.Twisting()
 	if math.IsNaN(cw) {
 		cw = 0
 		c.assume("C_w = 0, as it is not stated")

@@ -48,14 +48,18 @@ var (
 	doUy    = set.Formula(symUy, "sigma / f_y", "demand / capacity")
 )
 
+// common are the checks that all standards share.
+var common = standard.NewCommon(set)
+
 type axis struct {
 	name                                        string
 	i, w, r, l, k, le, pcr, n, u, slender, m, a derivation.ID
-	peak                                        derivation.ID
+	peak, acr                                   derivation.ID
 	ratio, uSlender, limit                      derivation.ID
 	doLe, doPcr, doU, doR, doSlender, doRatio   *derivation.Formula
 	doBuckled                                   *derivation.Formula
 	secant, sine, sway, tension, doUSlender     *derivation.Formula
+	whole, doPcrWhole, doLeWhole                *derivation.Formula
 }
 
 func newAxis(name string) axis {
@@ -78,10 +82,13 @@ func newAxis(name string) axis {
 	x.a = sym("a", unit.None, "amplification of the moment by the axial force")
 	x.ratio = sym("n", unit.None, "factored axial force over the critical load")
 	x.uSlender = sym("u_slenderness", unit.None, "utilisation, slenderness")
+	x.acr = sym("alpha_cr", unit.None, "factor by which the loads of the combination reach elastic buckling of the whole member")
 	x.limit = sym("limit_slenderness", unit.None, "limit of slenderness")
 	f := func(id derivation.ID, text, clause string) *derivation.Formula { return set.Formula(id, text, clause) }
 	x.doLe = f(x.le, "K_"+name+" * L_"+name, "effective length")
 	x.doR = f(x.r, "sqrt(I_"+name+" / A)", "definition")
+	x.doPcrWhole = f(x.pcr, "alpha_cr_"+name+" * N_"+name, "elastic buckling of the whole member")
+	x.doLeWhole = f(x.le, "pi * sqrt(E * I_"+name+" / P_cr_"+name+")", "effective length that gives P_cr")
 	x.doPcr = f(x.pcr, "pi^2 * E * I_"+name+" / L_cr_"+name+"^2", "Euler")
 	x.doU = f(x.u, "factor_buckling * N_"+name+" / P_cr_"+name, "demand / capacity")
 	x.doSlender = f(x.slender, "L_cr_"+name+" / i_"+name, "definition")
@@ -93,6 +100,10 @@ func newAxis(name string) axis {
 	// grows to 32/pi3/(1 - n) = 1.0321/(1 - n), for a single point load to no more
 	// than 0.82/(1 - n). 0.0325 covers both for every n.
 	x.sway = f(x.a, "(1 + 0.0325 * n_"+name+") / (1 - n_"+name+")", "amplification of the moment of one load across the member")
+	// The part of the first-order moments that has the form of the buckled shape's
+	// moments grows by n/(1 - n). Where these are made of parts of sine waves and
+	// straight lines, it is no more than 3/2 of the greatest moment.
+	x.whole = f(x.a, "(1 + 0.5 * n_"+name+") / (1 - n_"+name+")", "amplification by the buckled shape of the whole member (an upper bound)")
 	x.sine = f(x.a, "1 / (1 - n_"+name+")", "amplification of a sinusoidal moment, as the basis asks")
 	x.tension = f(x.a, "1", "tension does not amplify moments")
 	return x
@@ -115,8 +126,8 @@ func (Standard) Overrides() map[string]bool {
 
 // Rules implements standard.Standard.
 func (Standard) Rules() []string {
-	return []string{"first-yield", "elastic-buckling-major", "elastic-buckling-minor", "torsional-buckling", "flexural-torsional-buckling",
-		"section-shear-major", "section-shear-minor", "lateral-torsional-buckling", "slenderness", "sway"}
+	return append([]string{"first-yield", "elastic-buckling-major", "elastic-buckling-minor", "torsional-buckling", "flexural-torsional-buckling",
+		"section-shear-major", "section-shear-minor", "lateral-torsional-buckling", "slenderness"}, standard.CommonRules...)
 }
 
 // Symbols implements standard.Standard.
@@ -134,6 +145,7 @@ func (Standard) Check(f *standard.Frame, record *derivation.Record) *standard.Ou
 	c.given()
 	for a := range axes {
 		c.buckling(a)
+		c.critical[a] = c.s.At(axes[a].pcr)
 	}
 	if c.f.Member.Leg.Stated() {
 		c.cover("elastic-buckling-minor", standard.NotCovered, standard.ByLeg)
@@ -149,11 +161,7 @@ func (Standard) Check(f *standard.Frame, record *derivation.Record) *standard.Ou
 	} else {
 		c.cover("lateral-torsional-buckling", standard.NotApplicable, "the loads do not bend the member about its major axis")
 	}
-	if c.f.Member.Limits.Sway > 0 {
-		const why = "sway is not worked out: compare the frame's sway with the limit by hand"
-		c.out.Checks = append(c.out.Checks, standard.Check{Rule: "sway", Clause: "limit of the member", Combination: -1, Dim: unit.Length, Utilisation: math.NaN(), Demand: math.NaN(), Capacity: math.NaN(), Why: why})
-		c.cover("sway", standard.NotCovered, why)
-	}
+	common.Check(c.f, c.s, &c.out, func(rule string) { group(c.record, rule) }, c.s.Do)
 	return &c.out
 }
 
@@ -163,6 +171,8 @@ type calc struct {
 	record *derivation.Record
 	out    standard.Outcome
 	pieces []action.Piece // kept for its room
+
+	critical [2]float64 // critical load that decided the check of buckling, N; NaN for none
 }
 
 func (c *calc) value(symbol string) (unit.Quantity, bool) {
@@ -171,6 +181,11 @@ func (c *calc) value(symbol string) (unit.Quantity, bool) {
 		return unit.Quantity{}, false
 	}
 	v := c.s.At(id)
+	for a, x := range axes {
+		if c.f.Exact[a] && id == x.pcr {
+			v = c.critical[a] // what amplifies moments may be less
+		}
+	}
 	return unit.Quantity{Value: v, Dim: set.At(id).Dim}, !math.IsNaN(v)
 }
 
@@ -200,7 +215,7 @@ func (c *calc) given() {
 	m, basis := c.f.Member, &c.f.Env.Basis
 	c.s.Recording(c.record)
 	group(c.record, "")
-	fy, _, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	fy, _, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok {
 		fy = math.NaN()
 	}
@@ -235,20 +250,25 @@ func (c *calc) buckling(a int) {
 	rule := "elastic-buckling-" + x.name
 	if !c.f.Stands[a] {
 		c.out.Checks = append(c.out.Checks, standard.Check{Rule: rule, Clause: "Euler", Combination: -1, Dim: unit.Force, Utilisation: math.NaN(), Demand: math.NaN(), Capacity: math.NaN(),
-			Why: "the ends and holds do not keep the member in place about " + x.name})
-		c.cover(rule, standard.NotCovered, "the ends and holds do not keep the member in place about "+x.name)
+			Why: c.f.NotHeld(a)})
+		c.cover(rule, standard.NotCovered, c.f.NotHeld(a))
 		return
 	}
 	worst, at, combination, compressed := math.Inf(-1), 0, -1, false
 	c.s.Recording(nil)
 	for i, s := range c.f.Stretches[a] {
-		c.stretch(a, s)
+		if !c.f.Exact[a] {
+			c.stretch(a, s, -1)
+		}
 		for k := range c.f.Combinations {
 			n := c.f.Compression(k, s.From, s.To)
 			if n <= 0 {
 				continue
 			}
 			compressed = true
+			if c.f.Exact[a] {
+				c.stretch(a, s, k)
+			}
 			c.s.Take(x.n, n, "")
 			if u := c.s.Do(x.doU); u > worst || math.IsNaN(u) {
 				worst, at, combination = u, i, k
@@ -264,7 +284,7 @@ func (c *calc) buckling(a int) {
 		at = c.longest(a)
 	}
 	s := c.f.Stretches[a][at]
-	c.stretch(a, s)
+	c.stretch(a, s, combination)
 	if !compressed {
 		c.cover(rule, standard.NotApplicable, "no combination compresses the member")
 		return
@@ -291,8 +311,37 @@ func (c *calc) longest(a int) int {
 	return best
 }
 
-func (c *calc) stretch(a int, s action.Stretch) {
+// weakest computes the least critical load about an axis.
+func (c *calc) weakest(a int) {
+	if c.f.Exact[a] {
+		c.stretch(a, c.f.Whole(a), c.f.Weakest(a))
+		return
+	}
+	c.stretch(a, c.f.Stretches[a][c.longest(a)], -1)
+}
+
+// stretch computes the critical load of a stretch: by its effective length, or
+// where critical loads are those of the whole member, from the load factor of the
+// combination.
+func (c *calc) stretch(a int, s action.Stretch, k int) {
 	x := &axes[a]
+	whole := c.f.Exact[a] && s.Whole
+	if n := 0.0; whole && k >= 0 {
+		if n = c.f.Compression(k, s.From, s.To); !(n <= 0) {
+			source := ""
+			if c.s.Recorded() {
+				source = c.f.Combinations[k].Name
+			}
+			c.s.Take(x.acr, standard.Known(c.f.Factor(a, k)), "eigenvalue of the stiffness matrix with holds, springs and stepped forces")
+			c.s.Take(x.n, n, source)
+			c.s.Do(x.doPcrWhole)
+			c.s.Do(x.doLeWhole)
+			return
+		}
+	}
+	if whole {
+		s.K = 1 // not compressed
+	}
 	source := ""
 	if c.s.Recorded() {
 		source = fmt.Sprintf("%s, %s–%s", c.f.StretchName(a, s), s.Base, s.Top)
@@ -319,7 +368,11 @@ func (c *calc) yield() {
 	}
 	for a, b := range bends {
 		if b && !c.f.Stands[a] {
-			fail("the ends and holds do not keep the member in place about " + axes[a].name)
+			fail(c.f.NotHeld(a))
+			return
+		}
+		if b && c.f.Exact[a] && len(c.f.Lifts()) > 1 {
+			fail("how the buckled shape of a member of several sections amplifies moments is not covered: say critical effective lengths")
 			return
 		}
 	}
@@ -332,7 +385,7 @@ func (c *calc) yield() {
 		for a := range axes {
 			var ok bool
 			if pieces[a], ok = c.f.Bending(a, c.f.Combinations[k].Factors, pieces[a]); !ok {
-				fail("the ends and holds do not keep the member in place about " + axes[a].name)
+				fail(c.f.NotHeld(a))
 				return
 			}
 			if bends[a] {
@@ -437,8 +490,9 @@ func (c *calc) amplify(a, combination int) float64 {
 	worst, at, n := math.Inf(-1), -1, 0.0
 	recording := c.s.Recorded()
 	c.s.Recording(nil)
-	for i, s := range c.f.Stretches[a] {
-		c.stretch(a, s)
+	stretches, whole := c.amplified(a)
+	for i, s := range stretches {
+		c.stretch(a, s, combination)
 		c.s.Take(x.n, c.f.Compression(combination, s.From, s.To), "")
 		if r := c.s.Do(x.doRatio); r > worst || math.IsNaN(r) {
 			worst, at, n = r, i, c.s.At(x.n)
@@ -450,8 +504,8 @@ func (c *calc) amplify(a, combination int) float64 {
 	if worst <= 0 {
 		return c.s.Do(x.tension)
 	}
-	s := c.f.Stretches[a][at]
-	c.stretch(a, s)
+	s := stretches[at]
+	c.stretch(a, s, combination)
 	source := ""
 	if recording {
 		source = c.f.Combinations[combination].Name
@@ -463,10 +517,29 @@ func (c *calc) amplify(a, combination int) float64 {
 	switch {
 	case c.f.Env.Basis.Simple:
 		return c.s.Do(x.sine)
+	case whole:
+		return c.s.Do(x.whole)
 	case c.f.Pushed[a] && !c.ends(a) && c.pushedOnce(a):
 		return c.s.Do(x.sway)
 	}
 	return c.s.Do(x.secant)
+}
+
+// amplified are the stretches whose critical loads amplify moments, and whether
+// they are that of the whole member. A member on several rigid holds is taken as
+// pinned at them here too: the moments of one stretch can grow with the bow of
+// another, which its own moments do not tell.
+func (c *calc) amplified(a int) (stretches []action.Stretch, whole bool) {
+	m := c.f.Member
+	if !c.f.Exact[a] {
+		return c.f.Stretches[a], false
+	}
+	if holds := m.RigidHolds(model.Axis(a)); len(holds) > 0 {
+		if pinned, ok := action.Stretches(m.Base[a], m.Top[a], holds, m.Height, c.f.Env.Basis.Recommended); ok {
+			return pinned, false
+		}
+	}
+	return []action.Stretch{c.f.Whole(a)}, true
 }
 
 // ends tells whether moments about the axis come from anything but loads across
@@ -538,7 +611,8 @@ func (c *calc) momentAt(pieces []action.Piece, z float64) float64 {
 func (c *calc) peakAt(a int, pieces []action.Piece, z float64) float64 {
 	hair := 1e-9 * c.f.Member.Height
 	most := 0.0
-	for _, s := range c.f.Stretches[a] {
+	stretches, _ := c.amplified(a)
+	for _, s := range stretches {
 		if z < s.From-hair || z > s.To+hair {
 			continue
 		}
@@ -564,7 +638,7 @@ func (c *calc) slenderness() {
 	c.s.Recording(nil)
 	run := func(a int) float64 {
 		x := &axes[a]
-		c.stretch(a, c.f.Stretches[a][c.longest(a)])
+		c.weakest(a)
 		c.s.Do(x.doR)
 		c.s.Do(x.doSlender)
 		c.s.Take(x.limit, limit, "limit of the member")
@@ -572,7 +646,7 @@ func (c *calc) slenderness() {
 	}
 	for a := range axes {
 		if !c.f.Stands[a] {
-			c.cover(rule, standard.NotCovered, "the ends and holds do not keep the member in place about "+axes[a].name)
+			c.cover(rule, standard.NotCovered, c.f.NotHeld(a))
 			return
 		}
 		if u := run(a); u > worst {

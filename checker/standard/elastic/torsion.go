@@ -51,7 +51,7 @@ func (c *calc) torsion() {
 			c.cover(coupled, standard.NotApplicable, "the section is taken as doubly symmetric")
 			return
 		}
-	case section.Channel, section.Tee, section.Angle:
+	case section.Channel, section.Tee, section.Angle, section.DoubleAngle:
 		rule, other = coupled, torsional
 	}
 	c.cover(other, standard.NotApplicable, map[string]string{torsional: "torsion goes with bending: see " + coupled, coupled: "the shear centre is the centroid"}[other])
@@ -73,17 +73,19 @@ func (c *calc) torsion() {
 		undecided("sections without an axis of symmetry are not covered: solve the cubic of flexural-torsional buckling by hand")
 		return
 	}
-	if !c.f.Stands[0] || !c.f.Stands[1] {
-		undecided("the ends and holds do not keep the member in place")
-		return
+	for a := range c.f.Stands {
+		if !c.f.Stands[a] {
+			undecided(c.f.NotHeld(a))
+			return
+		}
 	}
 	c.s.Recording(c.record)
 	group(c.record, rule)
 	title := sec.Title()
 	c.s.Take(symG, standard.Known(c.f.Member.Material.G), c.f.Member.Material.Title())
-	it, iw := c.f.Twisting()
-	c.s.Take(symIt, standard.KnownOrZero(it), title)
-	c.s.Take(symIw, standard.KnownOrZero(iw), title)
+	it, iw, from := c.f.Twisting()
+	c.s.Take(symIt, standard.KnownOrZero(it), from)
+	c.s.Take(symIw, standard.KnownOrZero(iw), from)
 	offset := 0.0
 	if rule == coupled {
 		offset = math.Hypot(sec.SMajor, sec.SMinor)
@@ -104,7 +106,7 @@ func (c *calc) torsion() {
 		if math.Abs(sec.SMinor) > math.Abs(sec.SMajor) {
 			a = 1
 		}
-		c.stretch(a, c.f.Stretches[a][c.longest(a)])
+		c.weakest(a)
 		c.s.Do(doB0)
 		c.s.Do([]*formula{doPTFMaj, doPTFMin}[a])
 		u, capacity = c.s.Do(doUTF), symPTF

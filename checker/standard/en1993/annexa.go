@@ -6,6 +6,7 @@ import (
 
 	"kern/checker/action"
 	"kern/checker/derivation"
+	"kern/checker/standard"
 	"kern/lang/unit"
 )
 
@@ -119,40 +120,10 @@ func (c *calc) cm0(a int, d diagram, pieces []action.Piece) {
 	case d.lower && d.upper && !d.line && d.points == 1 && d.pointMiddle:
 		c.do(t.doPoint)
 	default:
-		c.take(t.delta, deflection(pieces, d)/(c.s.At(symE)*c.s.At(axes[a].i)), "beam analysis")
+		ei := c.s.At(symE) * c.s.At(axes[a].i)
+		c.take(t.delta, standard.FromChord(pieces, d.from, d.to, func(float64) float64 { return ei }), "beam analysis")
 		c.do(t.doCommon)
 	}
-}
-
-// deflection is the greatest deflection between the ends of a diagram, measured
-// from the line through them, times E I.
-func deflection(pieces []action.Piece, d diagram) float64 {
-	at := func(z float64) float64 {
-		for i, p := range pieces {
-			if z <= p.To || i == len(pieces)-1 {
-				return p.Deflection(z - p.From)
-			}
-		}
-		return 0
-	}
-	l := d.to - d.from
-	first, last := at(d.from), at(d.to)
-	from := func(z float64) float64 { return math.Abs(at(z) - first - (last-first)*(z-d.from)/l) }
-	const n = 24
-	most, top := 0.0, d.from
-	for i := 1; i < n; i++ {
-		if z := d.from + l*float64(i)/n; from(z) > most {
-			most, top = from(z), z
-		}
-	}
-	for step := l / n / 2; step > l*1e-5; step /= 2 {
-		for _, z := range []float64{top - step, top + step} {
-			if z > d.from && z < d.to && from(z) > most {
-				most, top = from(z), z
-			}
-		}
-	}
-	return most
 }
 
 // annexA computes the factors of Tables A.1 and A.2.

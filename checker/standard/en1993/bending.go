@@ -65,7 +65,7 @@ func (c *calc) bending() {
 	}
 	for a := range bends {
 		if _, ok := c.f.Bending(a, nil, nil); !ok || bends[a] && !c.f.Stands[a] {
-			why = "the ends and holds do not keep the member in place about " + axes[a].word
+			why = c.f.NotHeld(a)
 		}
 	}
 	if why == "" && c.uniform == 4 && c.class == 0 {
@@ -113,7 +113,7 @@ func (c *calc) undecidedIn(rule, clause string, dim unit.Dim, why string) {
 func (c *calc) torsion() {
 	const rule = "torsion"
 	switch c.f.Member.Section.Shape.Kind {
-	case section.Channel, section.Tee, section.Angle:
+	case section.Channel, section.Tee, section.Angle, section.DoubleAngle:
 		c.cover(rule, standard.NotApplicable, "loads across the member and eccentric loads are taken to act through the shear centre: what they twist is for a person (6.2.7)")
 	default:
 		c.cover(rule, standard.NotApplicable, "loads act in the planes of symmetry: nothing twists the member (6.2.7)")

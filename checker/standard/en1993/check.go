@@ -115,7 +115,7 @@ func (c *calc) run() {
 	c.torsional()
 	c.bending()
 	c.slenderness()
-	c.sway()
+	c.shared()
 	c.out.Assumptions = append(c.f.Assumptions(), c.assuming...)
 }
 
@@ -123,7 +123,7 @@ func (c *calc) run() {
 func (c *calc) given() {
 	m, basis := c.f.Member, &c.f.Env.Basis
 	c.group("")
-	fy, _, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	fy, _, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok {
 		fy = math.NaN()
 	}
@@ -272,7 +272,7 @@ func (c *calc) netSection(n float64) {
 		return
 	}
 	c.group(rule)
-	_, fu, source, ok := m.Material.Strength(m.Section.Thickness, basis.TableFy)
+	_, fu, source, ok := m.Material.StrengthOf(m.Section, basis.TableFy)
 	if !ok || !(fu > 0) {
 		c.undecided(rule, clause, "the tensile strength of "+m.Material.Title()+" is not known")
 		return
@@ -303,7 +303,7 @@ func (c *calc) flexural(a int, curve curve) {
 	c.group(rule)
 	switch {
 	case !c.f.Stands[a]:
-		c.undecided(rule, clause, "the ends and holds do not keep the member in place about "+x.word)
+		c.undecided(rule, clause, c.f.NotHeld(a))
 		return
 	case c.class == 0 && c.pressed:
 		c.undecided(rule, clause, c.why)
@@ -316,7 +316,19 @@ func (c *calc) flexural(a int, curve curve) {
 	governing, combination, best := 0, -1, math.Inf(-1)
 	c.silently(func() {
 		for i, s := range c.f.Stretches[a] {
-			c.resistance(x, a, s, alpha, "")
+			if c.f.Exact[a] { // the combination decides the critical force too
+				for k := range c.f.Combinations {
+					if !(c.f.Compression(k, s.From, s.To) > 0) {
+						continue
+					}
+					c.resistance(x, a, s, k, alpha, "")
+					if u := c.do(x.doU); u > best || combination < 0 || math.IsNaN(u) && !math.IsNaN(best) {
+						best, governing, combination = u, i, k
+					}
+				}
+				continue
+			}
+			c.resistance(x, a, s, -1, alpha, "")
 			n, k := c.worst(s.From, s.To)
 			if n <= 0 {
 				if combination < 0 && s.Effective() > c.f.Stretches[a][governing].Effective() {
@@ -331,12 +343,12 @@ func (c *calc) flexural(a int, curve curve) {
 		}
 	})
 	s := c.f.Stretches[a][governing]
-	if c.class > 0 {
+	if c.class > 0 && (combination >= 0 || !c.f.Exact[a]) {
 		source := ""
 		if c.s.Recorded() {
 			source = "curve " + curve.letter + ", Table 6.1 and 6.2: " + curve.row
 		}
-		c.resistance(x, a, s, alpha, source)
+		c.resistance(x, a, s, combination, alpha, source)
 	}
 	if combination < 0 {
 		c.cover(rule, standard.NotApplicable, "no combination compresses the member")
@@ -352,18 +364,12 @@ func (c *calc) flexural(a int, curve curve) {
 	c.add(rule, clause, combination, n, c.s.At(x.nb), unit.Force, u, c.f.Limit())
 }
 
-// resistance computes the buckling resistance of a stretch. A member in a
-// stretch sees one compression, the greatest in it, so the combination with the
-// greatest compression governs the stretch.
-func (c *calc) resistance(x *axis, a int, s action.Stretch, alpha float64, curveSource string) {
-	source := ""
-	if c.s.Recorded() {
-		source = fmt.Sprintf("%s, %s–%s", c.f.StretchName(a, s), s.Base, s.Top)
-	}
-	c.take(x.l, s.Length(), source)
-	c.take(x.k, s.K, source)
-	c.do(x.doLcr)
-	c.do(x.doNcr)
+// resistance computes the buckling resistance of a stretch under a combination,
+// which counts where critical forces are those of the whole member. Else a stretch
+// sees one compression, the greatest in it, so the combination with the greatest
+// compression governs the stretch.
+func (c *calc) resistance(x *axis, a int, s action.Stretch, k int, alpha float64, curveSource string) {
+	c.criticalForce(x, a, s, k)
 	if c.slender {
 		c.do(x.doLamEff)
 	} else {
@@ -379,10 +385,44 @@ func (c *calc) resistance(x *axis, a int, s action.Stretch, alpha float64, curve
 	}
 }
 
+// criticalForce computes the elastic critical force of a stretch under a
+// combination: by its effective length, or from the load factor of the whole member.
+func (c *calc) criticalForce(x *axis, a int, s action.Stretch, k int) {
+	source := ""
+	if c.s.Recorded() {
+		source = fmt.Sprintf("%s, %s–%s", c.f.StretchName(a, s), s.Base, s.Top)
+	}
+	c.take(x.l, s.Length(), source)
+	n := 0.0
+	if c.f.Exact[a] && k >= 0 {
+		n = c.f.Compression(k, s.From, s.To)
+	}
+	if c.f.Exact[a] && !(n <= 0) {
+		if c.s.Recorded() {
+			source = c.f.Combinations[k].Name
+		}
+		c.take(x.acr, standard.Known(c.f.Factor(a, k)), "eigenvalue of the stiffness matrix with holds, springs and stepped forces")
+		c.take(x.n, n, source)
+		c.do(x.doNcrWhole)
+		c.do(x.doLcrWhole)
+		return
+	}
+	if c.f.Exact[a] {
+		s.K, source = 1, "not compressed: its own length"
+	}
+	c.take(x.k, s.K, source)
+	c.do(x.doLcr)
+	c.do(x.doNcr)
+}
+
 // criticalOf computes the critical force about an axis for its longest
 // effective length, which is on the safe side where stretches differ.
 func (c *calc) criticalOf(a int) {
 	x := axes[a]
+	if c.f.Exact[a] {
+		c.criticalForce(x, a, c.f.Whole(a), c.f.Weakest(a))
+		return
+	}
 	longest := c.f.Stretches[a][0]
 	for _, s := range c.f.Stretches[a] {
 		if s.Effective() > longest.Effective() {
@@ -419,7 +459,7 @@ func (c *calc) slenderness() {
 	worst, at := math.Inf(-1), 0
 	for a := range axes {
 		if !c.f.Stands[a] {
-			c.undecided(rule, "limit of the member", "the ends and holds do not keep the member in place about "+axes[a].word)
+			c.undecided(rule, "limit of the member", c.f.NotHeld(a))
 			return
 		}
 		c.silently(func() {
@@ -432,12 +472,11 @@ func (c *calc) slenderness() {
 	c.add(rule, "limit of the member", -1, c.s.At(axes[at].slender), limit, unit.None, u, 1)
 }
 
-func (c *calc) sway() {
-	if c.f.Member.Limits.Sway > 0 {
-		c.undecided("sway", "limit of the member", "sway is not worked out: compare the frame's sway with the limit by hand")
-		return
-	}
-	c.cover("sway", standard.NotApplicable, "the member sets no limit")
+// common are the checks that all standards share.
+var common = standard.NewCommon(set)
+
+func (c *calc) shared() {
+	common.Check(c.f, c.s, &c.out, c.group, c.do)
 }
 
 var _ standard.Standard = Standard{}

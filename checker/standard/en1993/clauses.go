@@ -12,10 +12,11 @@ type Clause struct {
 // clause. Members say the same by rule; this is the table behind them.
 var Clauses = []Clause{
 	{"5.1", "Structural modelling", "not covered", "by hand: joints are taken as the ends say; the frame is outside the calculation"},
-	{"5.2.1, 5.2.2", "Effects of deformed geometry", "not covered", "by hand: find alpha_cr of the frame; moments here are of first order between the member's own ends and holds"},
+	{"5.2.1", "Effects of deformed geometry", "checked", "critical exact gives alpha_cr of the member on its own ends, holds and springs; of a frame: by hand"},
+	{"5.2.2(1) to (6)", "Second-order effects of frames", "not covered", "by hand: moments here are of first order between the member's own ends and holds"},
 	{"5.2.2(7)b, (8)", "Members by 6.3 with buckling lengths", "checked", "flexural-buckling-major, flexural-buckling-minor"},
-	{"5.3.1, 5.3.2", "Imperfections of frames", "not covered", "by hand: give their notional loads as loads"},
-	{"5.3.3", "Imperfection of bracing systems", "not covered", "by hand: the force and stiffness of each hold"},
+	{"5.3.1, 5.3.2", "Sway imperfections", "checked", "imperfection on, for columns that carry sway themselves (m = 1, not disregarded by 5.3.2(4)); of a frame by hand: give its notional loads as loads"},
+	{"5.3.3", "Imperfection of bracing systems", "checked", "the force on each hold is listed with the member, for m = 1; its stiffness too (hold-stiffness, no clause); splices (4) by hand"},
 	{"5.3.4", "Member imperfections", "checked", "within the buckling curves of 6.3 (5.3.4(1))"},
 	{"5.4.1, 5.4.2", "Elastic analysis", "checked", "exact first-order analysis of the member on its ends and holds"},
 	{"5.4.3", "Plastic analysis", "not applicable", "no plastic hinges are counted on"},

@@ -134,9 +134,9 @@ func (s Standard) Overrides() map[string]bool {
 
 // Rules implements standard.Standard.
 func (Standard) Rules() []string {
-	return []string{"local-buckling", "section-compression", "section-tension", "net-section", "section-bending-major", "section-bending-minor",
+	return append([]string{"local-buckling", "section-compression", "section-tension", "net-section", "section-bending-major", "section-bending-minor",
 		"section-shear-major", "section-shear-minor", "section-interaction", "flexural-buckling-major", "flexural-buckling-minor",
-		"torsional-buckling", "flexural-torsional-buckling", "lateral-torsional-buckling", "member-interaction", "torsion", "slenderness", "sway"}
+		"torsional-buckling", "flexural-torsional-buckling", "lateral-torsional-buckling", "member-interaction", "torsion", "slenderness"}, standard.CommonRules...)
 }
 
 // Symbols implements standard.Standard.

@@ -94,14 +94,17 @@ func (c *calc) memberInteraction() {
 	case !pressed && !both:
 		c.cover(rule, standard.NotApplicable, "no combination presses and bends the member at once")
 		return
-	case sec.Shape.Kind == section.Channel || sec.Shape.Kind == section.Tee || sec.Shape.Kind == section.Angle || sec.Shape.Kind == section.Ellipse:
+	case sec.Shape.Kind == section.Channel || sec.Shape.Kind == section.Tee || sec.Shape.Kind == section.Angle || sec.Shape.Kind == section.DoubleAngle || sec.Shape.Kind == section.Ellipse:
 		undecided("6.3.3 is for doubly symmetric sections: check compression with bending by hand (6.3.4 or second order)")
 		return
 	case c.f.Bends[0] && c.lat.prone && c.lat.unknown:
 		undecided(c.lat.why)
 		return
-	case !c.f.Stands[0] || !c.f.Stands[1]:
-		undecided("the ends and holds do not keep the member in place")
+	case !c.f.Stands[0]:
+		undecided(c.f.NotHeld(0))
+		return
+	case !c.f.Stands[1]:
+		undecided(c.f.NotHeld(1))
 		return
 	case c.major.letter == "" || c.minor.letter == "":
 		undecided("the standard gives no buckling curve for this section")
@@ -133,8 +136,8 @@ func (c *calc) memberInteraction() {
 				if b.class == 4 {
 					e = 1
 				}
-				if !ready[e] {
-					c.stripResistance(s, e == 1)
+				if !ready[e] || c.f.Exact[0] || c.f.Exact[1] {
+					c.stripResistance(s, k, e == 1)
 					for a, x := range axes {
 						cache[e][a] = chis{c.s.At(x.lam), c.s.At(x.chi), c.s.At(x.nb), c.s.At(x.ncr)}
 					}
@@ -160,7 +163,7 @@ func (c *calc) memberInteraction() {
 	}
 	s := strips[at]
 	c.underCombination(comb)
-	c.stripResistance(s, c.combs[comb].class == 4)
+	c.stripResistance(s, comb, c.combs[comb].class == 4)
 	c.stripGiven(s)
 	u := c.stripAt(s, comb)
 	c.add(rule, clause, comb, u, 1, unit.None, u, c.f.Limit())
@@ -183,7 +186,7 @@ func (c *calc) swayAny() bool {
 
 func sways(s action.Stretch) bool {
 	held := func(e action.End) bool { return e == action.Pinned || e == action.Fixed }
-	return s.Exact || !held(s.Base) || !held(s.Top)
+	return s.Exact || s.Sprung || !held(s.Base) || !held(s.Top)
 }
 
 // stripGiven is what a strip has whatever the combination.
@@ -195,7 +198,7 @@ func (c *calc) stripGiven(s strip) {
 
 // stripResistance computes slenderness and resistance to flexural buckling about
 // both axes.
-func (c *calc) stripResistance(s strip, effective bool) {
+func (c *calc) stripResistance(s strip, k int, effective bool) {
 	slender := c.slender
 	c.slender = effective
 	for a, i := range []int{s.y, s.z} {
@@ -204,7 +207,7 @@ func (c *calc) stripResistance(s strip, effective bool) {
 		if c.s.Recorded() {
 			source = "curve " + cv.letter + ", Table 6.1 and 6.2: " + cv.row
 		}
-		c.resistance(axes[a], a, c.f.Stretches[a][i], alphas[cv.letter], source)
+		c.resistance(axes[a], a, c.f.Stretches[a][i], k, alphas[cv.letter], source)
 	}
 	c.slender = slender
 }
@@ -282,6 +285,16 @@ func (c *calc) stripAt(s strip, k int) float64 {
 	return c.do(doUMI)
 }
 
+// equivalent takes the equivalent uniform moment factor of a stretch. Table B.3 has
+// none for a stretch that a spring holds.
+func (c *calc) equivalent(f *momentFactor, d diagram, s action.Stretch) {
+	if s.Sprung {
+		c.take(f.c, 1, "a spring holds the stretch: on the safe side")
+		return
+	}
+	c.tableB3(f, d, sways(s))
+}
+
 // annexB computes the factors of Tables B.1 to B.3.
 func (c *calc) annexB(s strip, b *comb, dy, dz diagram, withY, withZ bool, y, z action.Stretch) {
 	kind := c.f.Member.Section.Shape.Kind
@@ -289,7 +302,7 @@ func (c *calc) annexB(s strip, b *comb, dy, dz diagram, withY, withZ bool, y, z 
 	hollow := kind == section.Tube || kind == section.Pipe || kind == section.Rod
 	if withY {
 		if dy.peak > c.tiny[0] {
-			c.tableB3(factorY, dy, sways(y))
+			c.equivalent(factorY, dy, y)
 		} else {
 			c.take(factorY.c, 1, "hardly any moment in the stretch")
 		}
@@ -300,7 +313,7 @@ func (c *calc) annexB(s strip, b *comb, dy, dz diagram, withY, withZ bool, y, z 
 		}
 	}
 	if withZ {
-		c.tableB3(factorZ, dz, sways(z))
+		c.equivalent(factorZ, dz, z)
 		switch {
 		case !compact:
 			c.do(doKzz34)
@@ -328,7 +341,7 @@ func (c *calc) annexB(s strip, b *comb, dy, dz diagram, withY, withZ bool, y, z 
 	default:
 		d := diagramOf(b.pieces[0], z.From, z.To, c.tiny[0])
 		if d.peak > c.tiny[0] {
-			c.tableB3(factorLT, d, false)
+			c.equivalent(factorLT, d, action.Stretch{Sprung: z.Sprung}) // it knows no sway
 		} else {
 			c.take(factorLT.c, 1, "hardly any moment in the stretch")
 		}

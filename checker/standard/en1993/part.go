@@ -144,6 +144,8 @@ func (c *calc) classify() (int, string) {
 			return 0, "angles of class 4: the effective section shifts its centroid, which brings bending"
 		}
 		return class, ""
+	case section.DoubleAngle:
+		return 0, "a pair of angles is a built-up member, which is not covered: check it by EN 1993-1-1 6.4 by hand"
 	case section.Tube:
 		kind = &shapeTube
 		if sh.OuterRadius == 0 {

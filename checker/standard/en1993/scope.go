@@ -10,6 +10,8 @@ import (
 // up to S460 (3.1); EN 1993-1-12 has those above. "" when it holds.
 func outOfScope(m *model.Material, fy float64) string {
 	switch {
+	case m.Grade != nil && m.Grade.American():
+		return fmt.Sprintf("%s is no steel of EN 1993-1-1 Table 3.1: if the project allows it, state its strengths in a material of your own", m.Grade.Name)
 	case m.Grade != nil && m.Grade.Eurocode != "" && m.Grade.Eurocode != "EN 1993-1-1":
 		return fmt.Sprintf("%s is beyond EN 1993-1-1, which covers steels up to S460; see %s", m.Grade.Name, m.Grade.Eurocode)
 	case m.Grade == nil && fy > 460e6*(1+1e-9):

@@ -72,9 +72,10 @@ type axis struct {
 	letter, word                                 string
 	i, r, l, k, lcr, ncr, lam, alpha, phi, chi   derivation.ID
 	nb, u, n                                     derivation.ID
-	slender, limit, us                           derivation.ID
+	slender, limit, us, acr                      derivation.ID
 	doLcr, doNcr, doLam, doLamEff, doPhi, doChi  *derivation.Formula
 	doNb, doNbEff, doU, doR, doSlender, doLimitU *derivation.Formula
+	doNcrWhole, doLcrWhole                       *derivation.Formula
 }
 
 var axes = [2]*axis{newAxis("y", "major"), newAxis("z", "minor")}
@@ -99,12 +100,15 @@ func newAxis(letter, word string) *axis {
 	x.u = sym("u_b_"+letter, unit.None, "utilisation, flexural buckling "+letter+"–"+letter)
 	x.slender = s("slenderness", unit.None, "slenderness")
 	x.limit = s("limit_slenderness", unit.None, "limit of slenderness")
+	x.acr = s("alpha_cr", unit.None, "factor by which the design loads of the combination reach elastic buckling of the whole member")
 	x.us = s("u_slenderness", unit.None, "utilisation, slenderness")
 	f := func(id derivation.ID, text, clause string) *derivation.Formula {
 		return formula(id, replaceAxis(text, letter), clause)
 	}
 	x.doR = f(x.r, "sqrt(I_? / A)", "definition")
 	x.doLcr = f(x.lcr, "K_? * L_?", "effective length")
+	x.doNcrWhole = f(x.ncr, "alpha_cr_? * N_Ed_?", "6.3.1.2(1), 5.2.1(3)")
+	x.doLcrWhole = f(x.lcr, "pi * sqrt(E * I_? / N_cr_?)", "buckling length that gives N_cr")
 	x.doNcr = f(x.ncr, "pi^2 * E * I_? / L_cr_?^2", "6.3.1.2(1)")
 	x.doLam = f(x.lam, "sqrt(A * f_y / N_cr_?)", "6.3.1.3(1) (6.50)")
 	x.doLamEff = f(x.lam, "sqrt(A_eff * f_y / N_cr_?)", "6.3.1.3(1) (6.51)")

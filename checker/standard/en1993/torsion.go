@@ -47,8 +47,11 @@ func (c *calc) torsional() {
 	case c.class == 0:
 		c.undecided(rule, clause, c.why)
 		return
-	case !c.f.Stands[0] || !c.f.Stands[1]:
-		c.undecided(rule, clause, "the ends and holds do not keep the member in place")
+	case !c.f.Stands[0]:
+		c.undecided(rule, clause, c.f.NotHeld(0))
+		return
+	case !c.f.Stands[1]:
+		c.undecided(rule, clause, c.f.NotHeld(1))
 		return
 	case c.minor.letter == "":
 		c.undecided(rule, clause, c.minor.row)
@@ -66,13 +69,13 @@ func (c *calc) torsional() {
 func (c *calc) torsionalResistance(rule string, unequal bool) {
 	sec := c.f.Member.Section
 	title := sec.Title()
-	it, iw := c.f.Twisting()
+	it, iw, from := c.f.Twisting()
 	if math.IsNaN(iw) {
 		iw = 0
 		c.assume("I_w = 0, as it is not stated")
 	}
-	c.take(symIt, standard.KnownOrZero(it), title)
-	c.take(symIw, standard.KnownOrZero(iw), title)
+	c.take(symIt, standard.KnownOrZero(it), from)
+	c.take(symIw, standard.KnownOrZero(iw), from)
 	offset := math.Hypot(sec.SMajor, sec.SMinor)
 	if rule == "torsional-buckling" {
 		offset = 0

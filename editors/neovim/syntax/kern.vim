@@ -8,12 +8,12 @@ syn spell toplevel
 syn match kernOperator /[-+*\/^=<>]/
 syn match kernDefinition /\v^\s*\zs[[:alpha:]_\u0370-\u03ff]\k*\ze\s*\=/
 " generated: words
-syn match kernParticle /\v<%(ASD|K_LL|LRFD|about|accidental|across|alone|and|annex|area|as|at|because|both|braced|by|cases|characteristic|cold|compression|continuous|direct|effective|eq|fixed|floor|free|frequent|from|guided|hot|imposed|independent|leg|lengths|live|long|major|minor|negative|nominal|off|offset|on|per|permanent|persistent|pinned|positive|psi_0|psi_1|psi_2|quasipermanent|recommended|rolled|secant|seismic|short|simple|slenderness|snow|space|storeys|sway|temperature|theoretical|to|together|top|tributary|twist|utilisation|welded|wind)>/
-syn match kernShape /\v<%(angle|bar|channel|given|isection|pipe|rod|tee|tube)>/
+syn match kernParticle /\v<%(ASD|K_LL|LRFD|about|accidental|across|alone|and|annex|area|as|at|because|both|braced|by|cases|characteristic|cold|compression|continuous|dead|deflection|direct|effective|eq|exact|fixed|floor|free|frequent|from|guided|hot|imposed|independent|leg|lengths|live|long|major|minor|negative|nominal|off|offset|on|per|permanent|persistent|pinned|positive|psi_0|psi_1|psi_2|quasipermanent|rain|recommended|rolled|roof|secant|seismic|short|simple|slenderness|snow|space|span|spring|stiffness|storeys|sway|temperature|theoretical|to|together|top|tributary|twist|under|utilisation|welded|wind)>/
+syn match kernShape /\v<%(angle|bar|channel|doubleangle|given|isection|pipe|rod|tee|tube)>/
 syn match kernFunction /\v<%(abs|cos|max|min|sin|sqrt|tan)>\ze\s*\(/
 syn match kernConstant /\v<%(g|pi)>/
-syn match kernProperty /\v%(^|[;{])\s*\zs<%(A|A_v_major|A_v_minor|E|G|I_major|I_minor|I_t|I_w|W_major|W_minor|Wpl_major|Wpl_minor|class|corner|curve|curve_major|curve_minor|density|depth|diameter|flange|fu|fy|made|nu|outside|root|thickness|toe|wall|web|width)>\ze\s*\=/
-syn match kernStatement /\v%(^|[;{])\s*\zs<%(accidental|actions|amplification|base|checked|connected|date|depart|effective|factor_buckling|factor_yield|from|gamma_G_inf|gamma_G_sup|gamma_M0|gamma_M1|gamma_Q|height|hold|joints|length|lift|limit|load|material|moments|name|net|note|number|permanent|prepared|reduce|reduction|require|revision|roofs|section|selfweight|show|stability|standard|strengths|top|xi)>/ nextgroup=kernUnits skipwhite
+syn match kernProperty /\v%(^|[;{])\s*\zs<%(A|A_v_major|A_v_minor|E|G|I_major|I_minor|I_t|I_w|W_major|W_minor|Wpl_major|Wpl_minor|class|corner|curve|curve_major|curve_minor|density|depth|diameter|flange|fu|fy|gap|made|nu|outside|root|thickness|toe|wall|web|width)>\ze\s*\=/
+syn match kernStatement /\v%(^|[;{])\s*\zs<%(accidental|actions|amplification|base|checked|connected|critical|date|depart|effective|factor_buckling|factor_yield|from|gamma_G_inf|gamma_G_sup|gamma_M0|gamma_M1|gamma_Q|height|hold|imperfection|joints|length|lift|limit|load|material|moments|name|net|note|number|permanent|prepared|reduce|reduction|require|revision|roofs|section|selfweight|show|stability|standard|strengths|top|xi)>/ nextgroup=kernUnits skipwhite
 syn match kernDeclaration /\v^\s*\zs<%(basis|case|column|combination|exclusive|forces|include|level|material|project|section|strut|tie)>%(\s*\=)@!/ nextgroup=kernName skipwhite
 " end of words
 syn match kernName contained /\v\k+%(\s*,\s*\k+)*/
