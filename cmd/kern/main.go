@@ -56,6 +56,7 @@ func root() *cobra.Command {
 		catalogueCommand(),
 		chartCommand(),
 		lspCommand(),
+		reviewCommand(),
 		versionCommand(),
 	)
 	return c
