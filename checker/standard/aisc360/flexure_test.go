@@ -203,6 +203,18 @@ func TestSway(t *testing.T) {
 	}
 }
 
+// TestStep: where a moment comes in at a quarter point, the greater of both sides
+// counts: 12.5 0.75/(2.5 0.75 + 3 0.75 + 4 0.5 + 3 0.25).
+func TestStep(t *testing.T) {
+	p := post{shape: i(14.2, 14.6, 0.485, 0.78, 0.6), fy: 50, height: 20, more: func(m *model.Member) {
+		m.Loads = append(m.Loads, model.Load{Kind: model.EndMoment, Axis: model.Major, Value: 50 * kip * foot, At: m.Height / 4})
+	}}
+	v, _ := p.values(t, Standard{})
+	if want := 12.5 * 0.75 / 6.875; !(math.Abs(v["C_b"]/want-1) < 1e-9) {
+		t.Errorf("C_b = %g, want %g", v["C_b"], want)
+	}
+}
+
 // TestCantilever: C_b = 1.0 over the whole height (F1(c)), where the base holds
 // against twist and turning; undecided where it does not.
 func TestCantilever(t *testing.T) {

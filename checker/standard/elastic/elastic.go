@@ -10,6 +10,7 @@ import (
 	"kern/checker/action"
 	"kern/checker/derivation"
 	"kern/checker/model"
+	"kern/checker/section"
 	"kern/checker/standard"
 	"kern/lang/unit"
 )
@@ -202,6 +203,9 @@ func (c *calc) assumptions() []string {
 		if _, set := c.f.Env.Basis.Overrides[name]; !set {
 			out = append(out, name+" = 1")
 		}
+	}
+	if c.f.Member.Section.Shape.Kind == section.DoubleAngle {
+		out = append(out, "the two angles act as one piece: that their connectors are close enough and do not give is for a person")
 	}
 	if c.f.Bends[0] || c.f.Bends[1] {
 		if (!c.f.Bends[0] || c.f.Exact[0]) && (!c.f.Bends[1] || c.f.Exact[1]) {
