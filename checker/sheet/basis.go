@@ -260,7 +260,7 @@ func cases(env *model.Env) (out []output.Block) {
 		rows = append(rows, append(row, output.Words(x.Because)))
 	}
 	if len(rows) > 0 {
-		out = append(out, output.Heading{Level: 3, Text: "Load cases"}, output.Table{Head: []string{"case", "kind", "category", "psi_0", "psi_1", "psi_2", "because"}, Align: "lllnnnl", Rows: rows})
+		out = append(out, output.Heading{Level: 3, Text: "Load cases"}, lean(output.Table{Head: []string{"case", "kind", "category", "psi_0", "psi_1", "psi_2", "because"}, Align: "lllnnnl", Rows: rows}))
 	}
 	var items []output.Line
 	for _, g := range env.Exclusive {
@@ -278,6 +278,15 @@ func cases(env *model.Env) (out []output.Block) {
 
 func levels(env *model.Env) (out []output.Block) {
 	units := env.Basis.Show
+	// nobody gives the load of a floor in the unit of stresses
+	pressure := "kN/m2"
+	if force := units.For(unit.Force).Symbol; force == "kip" || force == "lbf" {
+		pressure = "psf"
+	}
+	shown, err := unit.Parse(pressure)
+	if err != nil {
+		return nil // both are units of the language
+	}
 	var rows [][]output.Line
 	for _, l := range env.Levels {
 		if l.Bad {
@@ -285,12 +294,12 @@ func levels(env *model.Env) (out []output.Block) {
 		}
 		var loads []string
 		for _, p := range l.Pressures {
-			loads = append(loads, env.Cases[p.Case].Name+" "+unit.Short(p.Value/1000, 4)+" kN/m2")
+			loads = append(loads, env.Cases[p.Case].Name+" "+unit.Short(p.Value/shown.Factor, 4)+" "+pressure)
 		}
 		rows = append(rows, []output.Line{output.Words(l.Name), output.Words(units.Show(l.At, unit.Length, 5)), output.Words(strings.Join(loads, "; "))})
 	}
 	if len(rows) > 0 {
-		out = append(out, output.Heading{Level: 3, Text: "Levels"}, output.Table{Head: []string{"level", "height", "loads on its floor"}, Align: "lnl", Rows: rows})
+		out = append(out, output.Heading{Level: 3, Text: "Levels"}, lean(output.Table{Head: []string{"level", "height", "loads on its floor"}, Align: "lnl", Rows: rows}))
 	}
 	return out
 }
@@ -364,4 +373,21 @@ func (c *composer) forces(r *checker.Result) []output.Block {
 	}
 	return []output.Block{output.Heading{Level: 4, Text: title}, output.Table{Head: head, Align: align, Rows: rows},
 		output.Paragraph{Text: output.Words("Compression is positive. Moments are the greatest of first order, as they act on the straight member.")}}
+}
+
+// lean leaves out the columns of a table that hold nothing, the first apart.
+func lean(t output.Table) output.Table {
+	out := output.Table{Rows: make([][]output.Line, len(t.Rows))}
+	for i, head := range t.Head {
+		if i > 0 && !slices.ContainsFunc(t.Rows, func(row []output.Line) bool {
+			return i < len(row) && row[i].String() != "" && row[i].String() != "–"
+		}) {
+			continue
+		}
+		out.Head, out.Align = append(out.Head, head), out.Align+t.Align[i:i+1]
+		for r, row := range t.Rows {
+			out.Rows[r] = append(out.Rows[r], row[i])
+		}
+	}
+	return out
 }
