@@ -223,6 +223,14 @@ func (e *elevation) upright(x, from, to float64, text string) {
 	e.left = append(e.left, entry{want: (from + to) / 2, lines: []Text{{Words: text, Size: small}}, to: Point{x, (from + to) / 2}})
 }
 
+// endWords say how an end is held, springs too.
+func endWords(end action.End, spring model.Spring) string {
+	if spring != (model.Spring{}) {
+		return end.String() + ", spring"
+	}
+	return end.String()
+}
+
 // view draws the member about an axis.
 func (e *elevation) view(axis int) {
 	x, w := e.at[axis], e.half[axis]
@@ -234,8 +242,8 @@ func (e *elevation) view(axis int) {
 	e.base(e.m.Base[axis], x, base, w)
 	e.top(e.m.Top[axis], x, top, w)
 	foot := map[action.End]float64{action.Pinned: 8, action.Fixed: 4.6, action.Guided: 7, action.Free: 3.4}[e.m.Base[axis]]
-	e.text(Text{At: Point{x, base + foot}, Words: e.m.Base[axis].String(), Size: small, Anchor: Middle})
-	near := []entry{{want: top + 3.4, lines: []Text{{Words: e.m.Top[axis].String(), Size: small}}, to: Point{-1, -1}}}
+	e.text(Text{At: Point{x, base + foot}, Words: endWords(e.m.Base[axis], e.m.BaseSpring[axis]), Size: small, Anchor: Middle})
+	near := []entry{{want: top + 3.4, lines: []Text{{Words: endWords(e.m.Top[axis], e.m.TopSpring[axis]), Size: small}}, to: Point{-1, -1}}}
 	for _, h := range e.m.Holds {
 		y := e.y(h.At)
 		if axis == 0 && h.Major || axis == 1 && h.Minor {
@@ -244,6 +252,9 @@ func (e *elevation) view(axis int) {
 			} else {
 				e.hold(x-w, y, -1)
 			}
+		}
+		if h.About(model.Axis(axis)) && h.Stiffness > 0 {
+			near = append(near, entry{want: y + 3, lines: []Text{{Words: "spring", Size: small}}, to: Point{-1, -1}})
 		}
 		if h.Twist {
 			e.rect(Outline, Box{x - w - 0.8, y - 0.9, x + w + 0.8, y + 0.9})
