@@ -49,6 +49,12 @@ func (c *composer) basis(env *model.Env) {
 		lengths = "those recommended for design"
 	}
 	fact("effective length factors", lengths)
+	if b.Exact {
+		fact("critical loads", "of whole members with their holds, springs and stepped forces, where a member does not say otherwise")
+	}
+	if b.Imperfect {
+		fact("sway imperfections", "to EN 1993-1-1 5.3.2, on members that can sway")
+	}
 	strengths := "by product standard and thickness"
 	if b.TableFy {
 		strengths = "EN 1993-1-1 Table 3.1"
