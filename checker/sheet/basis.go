@@ -96,6 +96,12 @@ func basis(env *model.Env) (out []output.Block) {
 		lengths = "those recommended for design"
 	}
 	fact("effective length factors", lengths)
+	if b.Exact {
+		fact("critical loads", "of whole members with their holds, springs and stepped forces, where a member does not say otherwise")
+	}
+	if b.Imperfect {
+		fact("sway imperfections", "to EN 1993-1-1 5.3.2, on members that can sway")
+	}
 	strengths := "by product standard and thickness"
 	if b.TableFy {
 		strengths = "EN 1993-1-1 Table 3.1"
