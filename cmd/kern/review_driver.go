@@ -51,7 +51,7 @@ func annotate(out io.Writer, file string) error {
 	if err != nil {
 		return fmt.Errorf("%s: %w", file, reason(err))
 	}
-	name, read, err := context(file, string(text))
+	name, read, err := surroundings(file, string(text))
 	if err != nil { // it stands alone
 		name = filepath.Base(file)
 		read = func(string) (string, error) { return "", errors.New("not known here") }
@@ -104,9 +104,9 @@ func results(list []*checker.Result) string {
 	return strings.Join(parts, "; ")
 }
 
-// context finds the workspace that a file belongs to: git hands over files of
+// surroundings finds the workspace that a file belongs to: git hands over files of
 // earlier states by themselves, under names of no meaning.
-func context(file, text string) (name string, read lang.Read, err error) {
+func surroundings(file, text string) (name string, read lang.Read, err error) {
 	here, err := os.Getwd()
 	if err != nil {
 		return "", nil, err
