@@ -124,6 +124,9 @@ func TestSharesAddUp(t *testing.T) {
 	for seed := range uint64(pairs) {
 		r := rand.New(rand.NewPCG(seed, 5))
 		before := generate.Shared + generate.Columns(4, seed)
+		if seed%3 == 2 {
+			before = generate.Shared + generate.BentColumns(2, seed)
+		}
 		after := mutate(before, r, 1+r.IntN([]int{18, 90}[seed%2]))
 		got := compare(before, after)
 		for i := range got.Changes {
