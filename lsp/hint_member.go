@@ -46,8 +46,8 @@ func (c *collector) member(s *lang.Stmt) {
 // results gives utilisation and governing check after the first line.
 func (c *collector) results(s *lang.Stmt, own []*checker.Result) {
 	say := resultLabel
-	if c.settings.HintHistory {
-		say = func(r *checker.Result) string { return resultLabel(r) + c.f.was(r) }
+	if c.past != nil {
+		say = func(r *checker.Result) string { return resultLabel(r) + c.f.was(c.past, r) }
 	}
 	for _, g := range groupsOf(own, say) {
 		label := g.label
@@ -62,7 +62,7 @@ func (c *collector) results(s *lang.Stmt, own []*checker.Result) {
 			if check, ok := r.GoverningCheck(); ok && r.Verdict != standard.Undecided {
 				output.CheckWorking(p, r, r.Derive(), check.Rule, 0)
 			}
-			if c.settings.HintHistory {
+			if c.past != nil {
 				c.f.since(p, r)
 			}
 		})

@@ -103,8 +103,7 @@ func (w *workspace) readPast(repo *history.Repository, hash string) (*review.Pas
 
 // was says what a member's result was in the last commit, ", was 0.74"; "" when it
 // reads the same, or when there is nothing to compare with.
-func (f *File) was(r *checker.Result) string {
-	past, _ := f.past()
+func (f *File) was(past *review.Past, r *checker.Result) string {
 	if past == nil {
 		return ""
 	}

@@ -3,8 +3,11 @@ package review_test
 import (
 	"flag"
 	"fmt"
+	"maps"
 	"math"
 	"math/rand/v2"
+	"os"
+	"path/filepath"
 	"slices"
 	"strings"
 	"testing"
@@ -111,6 +114,68 @@ func mutate(text string, r *rand.Rand, edits int) string {
 	return strings.Join(lines, "\n")
 }
 
+// TestAnyText reviews the demo project against itself with random pieces lost,
+// doubled or put elsewhere: nothing may panic, and shares must add up.
+func TestAnyText(t *testing.T) {
+	rounds := 6
+	if *many > 0 {
+		rounds = *many
+	}
+	files := map[string]string{}
+	names, err := filepath.Glob("../../testdata/boathouse/*.kern")
+	if err != nil || len(names) < 4 {
+		t.Fatal(names, err)
+	}
+	for _, name := range names {
+		text, err := os.ReadFile(name)
+		if err != nil {
+			t.Fatal(err)
+		}
+		files[filepath.Base(name)] = string(text)
+	}
+	sorted := slices.Sorted(maps.Keys(files))
+	base := check(files)
+	changes := 0
+	for seed := range uint64(rounds) {
+		r := rand.New(rand.NewPCG(seed, 77))
+		edited := maps.Clone(files)
+		for range 1 + r.IntN(4) {
+			name := sorted[r.IntN(len(sorted))]
+			lines := strings.SplitAfter(edited[name], "\n")
+			i, k := r.IntN(len(lines)), r.IntN(len(lines))
+			switch r.IntN(5) {
+			case 0:
+				lines[i] = ""
+			case 1:
+				lines[i] += lines[k]
+			case 2:
+				lines[i], lines[k] = lines[k], lines[i]
+			case 3:
+				at := r.IntN(len(lines[i]) + 1)
+				lines[i] = lines[i][:at] + string("{}()\"#;=,.07 kmN\n"[r.IntN(17)]) + lines[i][at:]
+			default:
+				for j := range lines[i] {
+					if c := lines[i][j]; c >= '1' && c <= '9' {
+						lines[i] = lines[i][:j] + string('1'+(c-'0')%9) + lines[i][j+1:]
+						break
+					}
+				}
+			}
+			edited[name] = strings.Join(lines, "")
+		}
+		now := check(edited)
+		for _, x := range []*review.Review{review.Compare(base, now), review.Compare(now, base)} {
+			for i := range x.Changes {
+				changes++
+				if x.Changes[i].Method != review.None {
+					sum(t, &x.Changes[i])
+				}
+			}
+		}
+	}
+	t.Logf("%d rounds, %d changes", rounds, changes)
+}
+
 // TestSharesAddUp holds the shares of random pairs of states to their sum, edits
 // that cannot matter to exactly nothing, and all of it against another order of
 // the lines.
@@ -124,6 +189,9 @@ func TestSharesAddUp(t *testing.T) {
 	for seed := range uint64(pairs) {
 		r := rand.New(rand.NewPCG(seed, 5))
 		before := generate.Shared + generate.Columns(4, seed)
+		if seed%3 == 2 {
+			before = generate.Shared + generate.BentColumns(2, seed)
+		}
 		after := mutate(before, r, 1+r.IntN([]int{18, 90}[seed%2]))
 		got := compare(before, after)
 		for i := range got.Changes {

@@ -38,7 +38,8 @@ func reviewCommand() *cobra.Command {
 			"much of it each edit brought about. The states are branches, tags or commits of the\n" +
 			"git repository, read without a checkout, or two folders or two files. Without HEAD\n" +
 			"the later state is the working directory; without BASE the earlier one is where HEAD\n" +
-			"parts from the default branch. Paths behind -- narrow it to folders or files.\n\n" +
+			"parts from the default branch. Paths behind -- narrow it to folders or files. Two names\n" +
+			"that are folders are taken for folders: a branch of such a name is refs/heads/NAME.\n\n" +
 			"--merge OURS THEIRS merges two commits as git does by text, and tells of members that\n" +
 			"are right on either side and not together.\n\n" +
 			"Exit status: 0 nothing got worse; 1 a member fails or is undecided, or the text has an\n" +
