@@ -94,12 +94,6 @@ func secondText(r map[string]string) string {
 // implementation does; kern takes no less than the dimension minus 3 t, what the
 // clause takes where the radius is not known. That is on the safe side: the walls
 // count as up to 2 (R - 1.5 t) wider, which lowers E7, F7.2, F7.3 and C_v2 of G4.
-//
-// In shear kern takes an inside radius up to t as not known, also where the corner
-// is stated, and takes off 3 t (G4). With a stated radius R of more than 1.5 t that
-// is more web than the text gives, (H - 3 t)/(H - 2 R) at most: kern is above the
-// second implementation there, and the text is on the latter's side. With R below
-// 1.5 t kern is below it. R is the outside radius of the corner of a tube.
 func secondBand(r map[string]string, symbol string) (least, greatest float64) {
 	least, greatest = 1-1e-6, 1+1e-6
 	if symbol == "u_PM" && r["hold_twist"] != "" && r["P_n_T"] != "" {
@@ -109,8 +103,7 @@ func secondBand(r map[string]string, symbol string) (least, greatest float64) {
 		return
 	}
 	corner, wall := secondNumber(r["corner"]), secondNumber(r["wall"])
-	sharp, blunt := corner < 1.5*wall*(1-1e-9), corner > 1.5*wall*(1+1e-9)
-	if !blunt && !(sharp && strings.Contains(symbol, "V_")) {
+	if corner <= 1.5*wall*(1+1e-9) {
 		return
 	}
 	utilisation := strings.HasPrefix(symbol, "u_")
@@ -119,18 +112,6 @@ func secondBand(r map[string]string, symbol string) (least, greatest float64) {
 		greatest = 1.15
 	case strings.HasPrefix(symbol, "P_n") || strings.HasPrefix(symbol, "M_n") || strings.HasPrefix(symbol, "V_n"):
 		least = 1 / 1.15
-	}
-	if blunt && strings.Contains(symbol, "V_") {
-		side := secondNumber(r["depth"])
-		if strings.HasSuffix(symbol, "y") {
-			side = secondNumber(r["width"])
-		}
-		more := (side - 3*wall) / (side - 2*corner)
-		if utilisation {
-			least /= more
-		} else {
-			greatest *= more
-		}
 	}
 	return
 }
