@@ -2,23 +2,12 @@ package offer
 
 import (
 	"slices"
-	"strings"
 
 	"kern/checker"
+	"kern/checker/edit"
 	"kern/checker/model"
 	"kern/lang"
 )
-
-// order is the place of a statement in a member's block: lines are put behind
-// those that come before them in the table of forms.
-var order = lang.WordsIn(lang.InMember)
-
-func rank(word string) int {
-	if word == "length" || word == "from" {
-		word = "height" // one or the other
-	}
-	return slices.Index(order, word)
-}
 
 // owner is a statement with the declaration that it stands in.
 type owner struct {
@@ -30,78 +19,11 @@ type owner struct {
 // statement. It is false where the block is not closed, as nobody can tell then
 // where it ends.
 func (l *list) insert(o owner, lines ...string) (checker.Edit, bool) {
-	text, s := o.decl.Text, o.stmt
-	at := func(offset int32, new string) (checker.Edit, bool) {
-		return l.editAt(lang.Place{Decl: o.decl, Span: lang.Span{Start: offset, End: offset}}, new), true
-	}
-	if s.Body == nil {
-		return at(s.Line.End, " {\n    "+strings.Join(lines, "\n    ")+"\n}")
-	}
-	open, end := s.Body.Span.Start+1, s.Body.Span.End-1
-	if end < open || int(end) >= len(text) || text[end] != '}' {
+	c, ok := edit.Insert(o.decl.Text, o.stmt, lines...)
+	if !ok {
 		return checker.Edit{}, false
 	}
-	inner := s.Body.Stmts
-	word, _, _ := strings.Cut(lines[0], " ")
-	i := len(inner)
-	for i > 0 && rank(word) >= 0 && rank(inner[i-1].Word) > rank(word) {
-		i--
-	}
-	if !strings.ContainsAny(text[open:end], "\r\n") {
-		together := strings.Join(lines, "; ")
-		switch {
-		case len(inner) == 0:
-			return l.editAt(lang.Place{Decl: o.decl, Span: lang.Span{Start: open, End: end}}, " "+together+" "), true
-		case i == len(inner):
-			return at(inner[i-1].Span.End, "; "+together)
-		}
-		return at(inner[i].Span.Start, together+"; ")
-	}
-	before := open // what the new lines come behind
-	indent := indentOf(text, s.Span.Start) + "    "
-	if i > 0 {
-		before = inner[i-1].Span.End
-	}
-	if len(inner) > 0 && first(text, inner[max(i-1, 0)].Span.Start) {
-		indent = indentOf(text, inner[max(i-1, 0)].Span.Start)
-	}
-	if to, ok := rest(text, before); ok {
-		return at(to, "\n"+indent+strings.Join(lines, "\n"+indent))
-	}
-	together := strings.Join(lines, "; ")
-	switch {
-	case i > 0:
-		return at(before, "; "+together)
-	case len(inner) > 0:
-		return at(inner[0].Span.Start, together+"; ")
-	}
-	return at(before, "\n"+indent+strings.Join(lines, "\n"+indent)+"\n")
-}
-
-// first tells whether a place is the first of its line that is not blank.
-func first(text string, offset int32) bool {
-	return strings.Trim(text[lineStart(text, offset):offset], " \t") == ""
-}
-
-// rest gives the end of the line that a place stands in, if nothing but blanks,
-// semicolons and a comment follows it there.
-func rest(text string, offset int32) (int32, bool) {
-	end := int32(len(text))
-	if i := strings.IndexAny(text[offset:], "\r\n"); i >= 0 {
-		end = offset + int32(i)
-	}
-	tail := strings.TrimLeft(text[offset:end], " \t;")
-	return end, tail == "" || tail[0] == '#'
-}
-
-func lineStart(text string, offset int32) int32 {
-	return int32(strings.LastIndexAny(text[:offset], "\r\n") + 1)
-}
-
-// indentOf is what the line of a place begins with.
-func indentOf(text string, offset int32) string {
-	line := text[lineStart(text, offset):]
-	return line[:len(line)-len(strings.TrimLeft(line, " \t"))]
+	return l.editAt(lang.Place{Decl: o.decl, Span: c.Span}, c.New), true
 }
 
 // statements are those that make up a member: its own, and those of the members

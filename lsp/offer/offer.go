@@ -14,6 +14,7 @@ import (
 	"sort"
 
 	"kern/checker"
+	"kern/checker/edit"
 	"kern/checker/model"
 	"kern/lang"
 )
@@ -69,7 +70,7 @@ func At(q Request) []Offer {
 	}
 	q.Span.Start = min(max(q.Span.Start, 0), int32(len(f.Text)))
 	q.Span.End = min(max(q.Span.End, q.Span.Start), int32(len(f.Text)))
-	l := &list{Request: q, file: f, seen: map[string]bool{}, calculations: q.Report.Calculations(q.File)}
+	l := &list{Request: q, file: f, seen: map[string]bool{}, calculations: q.Report.Calculations(q.File), layout: edit.NewLayout(q.Report.Project)}
 	if l.wants(QuickFix) {
 		l.fixes()
 	}
@@ -115,7 +116,7 @@ type list struct {
 	out          []Offer
 	seen         map[string]bool
 	faults       *faults // nil until somebody asks
-	laid         map[*lang.File]bool
+	layout       *edit.Layout
 }
 
 func (l *list) wants(k Kind) bool { return l.Want == nil || l.Want(k) }
@@ -131,7 +132,7 @@ func (l *list) add(o Offer) {
 	}
 	l.seen[key] = true
 	edits := o.edits
-	o.edits = func() []checker.Edit { return l.tidy(edits()) }
+	o.edits = func() []checker.Edit { return l.layout.Tidy(edits()) }
 	l.out = append(l.out, o)
 }
 

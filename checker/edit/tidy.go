@@ -1,4 +1,4 @@
-package offer
+package edit
 
 import (
 	"cmp"
@@ -10,19 +10,32 @@ import (
 	"kern/lang"
 )
 
-// tidy puts edits in order and has them end lines as their files do. A file that
-// was laid out stays laid out.
-func (l *list) tidy(edits []checker.Edit) []checker.Edit {
+// Layout makes edits of a project fit to be made: in order, with the line ends of
+// their files, and laid out where the file was laid out before.
+type Layout struct {
+	project *lang.Project
+	laid    map[*lang.File]bool
+}
+
+// NewLayout is the layout of a project.
+func NewLayout(project *lang.Project) *Layout {
+	return &Layout{project: project, laid: map[*lang.File]bool{}}
+}
+
+// Tidy gives edits in order and has them end lines as their files do. A file that
+// was laid out stays laid out. It is nil for edits of files that the project does
+// not have, and for those that overlap.
+func (l *Layout) Tidy(edits []checker.Edit) []checker.Edit {
 	by := map[string][]lang.Change{}
 	for _, e := range edits {
-		if l.Report.Project.Files[e.File] == nil {
-			return nil // a place that the report does not have: no edit at all
+		if l.project.Files[e.File] == nil {
+			return nil // no edit at all
 		}
 		by[e.File] = append(by[e.File], lang.Change{Span: e.Span, New: e.New})
 	}
 	var out []checker.Edit
 	for _, name := range slices.Sorted(maps.Keys(by)) {
-		f := l.Report.Project.Files[name]
+		f := l.project.Files[name]
 		changes := by[name]
 		slices.SortStableFunc(changes, func(a, b lang.Change) int {
 			return cmp.Or(cmp.Compare(a.Span.Start, b.Span.Start), cmp.Compare(a.Span.End, b.Span.End))
@@ -42,26 +55,23 @@ func (l *list) tidy(edits []checker.Edit) []checker.Edit {
 
 // lay makes changes to a file and lays the result out, if the file was laid out
 // before.
-func (l *list) lay(f *lang.File, changes []lang.Change) []lang.Change {
-	p := whole(f.Text)
-	p.apply(changes)
+func (l *Layout) lay(f *lang.File, changes []lang.Change) []lang.Change {
+	p := Whole(f.Text)
+	p.Apply(changes)
 	if l.laidOut(f) {
-		p.apply(lang.FormatEdits(lang.Parse(&lang.FileID{Name: f.Name}, lang.Apply(f.Text, changes), f)))
+		p.Apply(lang.FormatEdits(lang.Parse(&lang.FileID{Name: f.Name}, lang.Apply(f.Text, changes), f)))
 	}
-	return p.changes(f.Text)
+	return p.Changes(f.Text)
 }
 
 // maxLaid is the longest text, in bytes, that is laid out after a change: the
 // user waits.
 const maxLaid = 1 << 20
 
-func (l *list) laidOut(f *lang.File) bool {
+func (l *Layout) laidOut(f *lang.File) bool {
 	laid, known := l.laid[f]
 	if !known {
 		laid = len(f.Text) <= maxLaid && len(lang.FormatEdits(f)) == 0
-		if l.laid == nil {
-			l.laid = map[*lang.File]bool{}
-		}
 		l.laid[f] = laid
 	}
 	return laid
