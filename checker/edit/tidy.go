@@ -5,6 +5,7 @@ import (
 	"maps"
 	"slices"
 	"strings"
+	"sync"
 
 	"kern/checker"
 	"kern/lang"
@@ -14,6 +15,7 @@ import (
 // their files, and laid out where the file was laid out before.
 type Layout struct {
 	project *lang.Project
+	mu      sync.Mutex // of laid: members are sized on all cores
 	laid    map[*lang.File]bool
 }
 
@@ -53,6 +55,38 @@ func (l *Layout) Tidy(edits []checker.Edit) []checker.Edit {
 	return out
 }
 
+// TidyIn is Tidy for changes inside one declaration, whose spans count from its
+// start: the layout of the rest of the file is not looked at again.
+func (l *Layout) TidyIn(file string, decl *lang.Decl, changes []lang.Change) []checker.Edit {
+	f := l.project.Files[file]
+	if f == nil {
+		return nil
+	}
+	i := f.Index(decl)
+	if i < 0 || len(decl.Stmts) == 0 {
+		return nil
+	}
+	p := Whole(decl.Text)
+	changes = slices.Clone(changes)
+	for i := range changes {
+		changes[i].New = withEnds(f.Text, changes[i].New)
+	}
+	p.Apply(changes)
+	if l.laidOut(f) {
+		now := lang.Parse(&lang.FileID{Name: f.Name}, lang.Apply(decl.Text, changes), nil)
+		if len(now.Decls) != 1 {
+			return nil
+		}
+		first, last := now.Decls[0].Stmts[0].Span.Start, now.Decls[0].Stmts[len(now.Decls[0].Stmts)-1].Span.End
+		p.Apply(slices.DeleteFunc(lang.FormatEdits(now), func(c lang.Change) bool { return c.Span.Start < first || c.Span.End > last }))
+	}
+	var out []checker.Edit
+	for _, c := range p.Changes(decl.Text) {
+		out = append(out, checker.Edit{File: file, Span: lang.Span{Start: f.Starts[i] + c.Span.Start, End: f.Starts[i] + c.Span.End}, New: withEnds(f.Text, c.New)})
+	}
+	return out
+}
+
 // lay makes changes to a file and lays the result out, if the file was laid out
 // before.
 func (l *Layout) lay(f *lang.File, changes []lang.Change) []lang.Change {
@@ -69,6 +103,8 @@ func (l *Layout) lay(f *lang.File, changes []lang.Change) []lang.Change {
 const maxLaid = 1 << 20
 
 func (l *Layout) laidOut(f *lang.File) bool {
+	l.mu.Lock()
+	defer l.mu.Unlock()
 	laid, known := l.laid[f]
 	if !known {
 		laid = len(f.Text) <= maxLaid && len(lang.FormatEdits(f)) == 0

@@ -1,8 +1,6 @@
 package offer
 
 import (
-	"slices"
-
 	"kern/checker"
 	"kern/checker/edit"
 	"kern/checker/model"
@@ -26,56 +24,10 @@ func (l *list) insert(o owner, lines ...string) (checker.Edit, bool) {
 	return l.editAt(lang.Place{Decl: o.decl, Span: c.Span}, c.New), true
 }
 
-// statements are those that make up a member: its own, and those of the members
-// that it is "as", but for the words that it says itself.
-func statements(env *model.Env, o owner) []owner {
-	var out []owner
-	said := map[string]bool{}
-	for depth := 0; depth < 100; depth++ {
-		var own []owner
-		if o.stmt.Body != nil {
-			for _, b := range o.stmt.Body.Stmts {
-				if !said[same(b.Word)] {
-					own = append(own, owner{o.decl, b})
-				}
-			}
-		}
-		for _, b := range own {
-			said[same(b.stmt.Word)] = true
-		}
-		out = append(own, out...)
-		i := slices.IndexFunc(o.stmt.Args, func(e *lang.Expr) bool { return e.Is("as") })
-		if i < 0 || i+1 >= len(o.stmt.Args) {
-			break
-		}
-		n := env.Names[o.stmt.Args[i+1].Text]
-		if n == nil || n.Kind != model.MemberName {
-			break
-		}
-		o = owner{n.Place.Decl, n.Stmt}
-	}
-	return out
-}
-
-// same groups words that say the same thing in two ways.
-func same(word string) string {
-	if word == "from" || word == "length" {
-		return "height"
-	}
-	return word
-}
-
 // takenOver are the lines of a word that a member has from the one that it is
-// "as". A line of that word in its own block would replace them, so they are
-// written out beside it.
+// "as".
 func takenOver(env *model.Env, o owner, word string) []string {
-	var out []string
-	for _, b := range statements(env, o) {
-		if same(b.stmt.Word) == same(word) && b.decl != o.decl {
-			out = append(out, b.stmt.Span.Of(b.decl.Text))
-		}
-	}
-	return out
+	return edit.TakenOver(env, edit.Line{Decl: o.decl, Stmt: o.stmt}, word)
 }
 
 // memberOf gives the member statement that a place of the file stands in.
