@@ -78,7 +78,19 @@ func (l *Layout) TidyIn(file string, decl *lang.Decl, changes []lang.Change) []c
 			return nil
 		}
 		first, last := now.Decls[0].Stmts[0].Span.Start, now.Decls[0].Stmts[len(now.Decls[0].Stmts)-1].Span.End
-		p.Apply(slices.DeleteFunc(lang.FormatEdits(now), func(c lang.Change) bool { return c.Span.Start < first || c.Span.End > last }))
+		edits := lang.FormatEdits(now)
+		line := lang.Span{Start: decl.Stmts[0].Span.Start, End: decl.Stmts[len(decl.Stmts)-1].Span.End}.Of(decl.Text)
+		laid := lang.Span{Start: first, End: last}.Of(now.Text)
+		if !strings.ContainsAny(line, "\r\n") && (strings.ContainsAny(laid, "\r\n") || slices.ContainsFunc(edits, func(c lang.Change) bool {
+			return c.Span.Start >= first && c.Span.End <= last && strings.Contains(c.New, "\n")
+		})) { // a block that is no longer on one line parts from its neighbours
+			var whole []checker.Edit
+			for _, c := range changes {
+				whole = append(whole, checker.Edit{File: file, Span: lang.Span{Start: f.Starts[i] + c.Span.Start, End: f.Starts[i] + c.Span.End}, New: c.New})
+			}
+			return l.Tidy(whole)
+		}
+		p.Apply(slices.DeleteFunc(edits, func(c lang.Change) bool { return c.Span.Start < first || c.Span.End > last }))
 	}
 	var out []checker.Edit
 	for _, c := range p.Changes(decl.Text) {

@@ -65,7 +65,7 @@ func (s *subject) holds() []Mend {
 		}
 		j := newJudge(s.r)
 		best, bestAt := math.Inf(1), 0.0
-		var half bool
+		middle := math.Inf(1) // the utilisation with a hold at half the height
 		tried := map[float64]bool{}
 		for i := 1; i < positions; i++ {
 			at := m.Height * float64(i) / positions
@@ -80,16 +80,18 @@ func (s *subject) holds() []Mend {
 			if !ok {
 				continue
 			}
-			half = half || i == positions/2
+			if i == positions/2 {
+				middle = r.Utilisation
+			}
 			if r.Utilisation < best-1e-9 {
 				best, bestAt = r.Utilisation, at
 			}
 		}
 		var out []Mend
-		if half {
+		if !math.IsInf(middle, 1) {
 			out = s.hold(t, x, m.Height/2, "height / 2", out)
 		}
-		if bestAt > 0 && bestAt != m.Height/2 {
+		if bestAt > 0 && best < middle-0.005 {
 			out = s.hold(t, x, bestAt, down(bestAt, u, 4), out)
 		}
 		if len(out) > 0 {

@@ -350,7 +350,7 @@ func (s *subject) group(o Options) []Mend {
 	var out []Mend
 	try := func(families []string) {
 		for _, c := range candidates(s.r, families, o) {
-			if all && c.section.Area >= s.r.Member.Section.Area*(1-1e-9) {
+			if (all || s.r.Verdict == standard.Passes) && c.section.Area >= s.r.Member.Section.Area*(1-1e-9) {
 				return
 			}
 			var worst *checker.Result

@@ -49,6 +49,7 @@ func root() *cobra.Command {
 		checkCommand(),
 		sheetCommand(),
 		scheduleCommand(),
+		sizeCommand(),
 		formatCommand(),
 		rulesCommand(),
 		catalogueCommand(),
