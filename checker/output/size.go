@@ -253,10 +253,14 @@ func SizingText(w io.Writer, s Sizing) error {
 // words begin the line of a mend, by its kind.
 var words = map[size.Kind]string{size.Section: "section ", size.Group: "one section for all ", size.Grade: "grade ", size.Hold: "", size.Height: "", size.Load: ""}
 
-// SensitivityLines says how the utilisation answers to each quantity.
+// SensitivityLines says how the utilisation answers to each quantity that it
+// answers to.
 func SensitivityLines(r *checker.Result, all []size.Sensitivity) []string {
 	var out []string
 	for _, k := range all {
+		if math.Abs(k.Effect()) < 0.00005 {
+			continue // nothing to be seen in four decimals
+		}
 		step := r.Units().Show(k.Reference, k.Dim, 3)
 		if k.Dim.IsNone() {
 			step = "1 %"

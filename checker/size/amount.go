@@ -30,9 +30,9 @@ func lengthOf(symbol string) unit.Unit {
 	return u
 }
 
-// down writes a quantity with at most so many significant digits, rounded towards
+// Down writes a quantity with at most so many significant digits, rounded towards
 // zero; what the rounding of a float64 alone took away is given back.
-func down(si float64, u unit.Unit, significant int) string {
+func Down(si float64, u unit.Unit, significant int) string {
 	v := si / u.Factor
 	if v == 0 {
 		return "0 " + u.Symbol
@@ -42,7 +42,7 @@ func down(si float64, u unit.Unit, significant int) string {
 	return unit.Short(n, significant) + " " + u.Symbol
 }
 
-// read gives the value of what down wrote, in SI units.
+// read gives the value of what Down wrote, in SI units.
 func read(text string, u unit.Unit) float64 {
 	n := len(text) - len(u.Symbol) - 1
 	v, err := strconv.ParseFloat(text[:n], 64)

@@ -11,6 +11,7 @@ import (
 	"kern/checker/model"
 	"kern/checker/standard"
 	"kern/lang"
+	"kern/lang/unit"
 )
 
 // restraint is what one more hold holds.
@@ -92,7 +93,7 @@ func (s *subject) holds() []Mend {
 			out = s.hold(t, x, m.Height/2, "height / 2", out)
 		}
 		if bestAt > 0 && best < middle-0.005 {
-			out = s.hold(t, x, bestAt, down(bestAt, u, 4), out)
+			out = s.hold(t, x, bestAt, Down(bestAt, u, 4), out)
 		}
 		if len(out) > 0 {
 			return out
@@ -127,7 +128,7 @@ func (s *subject) hold(t *trial, x restraint, at float64, text string, out []Men
 		return out
 	}
 	mend := s.mend(Hold, strings.Join(lines, ", "), r, []lang.Change{c})
-	mend.Value, mend.Needs = at, needs(r, at)
+	mend.Value, mend.Dim, mend.Needs = at, unit.Length, needs(r, at)
 	if x.twist {
 		mend.Note = "what holds against twist must take up a moment about the member's axis: to be worked out by hand"
 	}

@@ -287,6 +287,11 @@ func offset(m *model.Member) bool {
 	return slices.ContainsFunc(m.Loads, func(l model.Load) bool { return l.Offset != [2]float64{} })
 }
 
+func used(r *checker.Result) float64 {
+	u, _, _ := Used(r)
+	return u
+}
+
 // shared are the members whose section is given in one place with that of the
 // subject: a section that has a name, or a line that others take over. place is
 // what is to be replaced there.
@@ -360,7 +365,7 @@ func (s *subject) group(o Options) []Mend {
 				if fits = ok; !ok {
 					break
 				}
-				if worst == nil || r.Utilisation > worst.Utilisation {
+				if worst == nil || used(r) > used(worst) {
 					worst = r
 				}
 			}
@@ -376,8 +381,9 @@ func (s *subject) group(o Options) []Mend {
 			}
 			file, span := s.report.Where(lang.Place{Decl: at.Decl, Span: lang.Span{Start: from, End: at.Stmt.Span.End}})
 			mass := c.section.Area * s.r.Member.Material.Density
-			mend := Mend{Kind: Group, Change: c.section.Designation, Family: c.family, Utilisation: worst.Utilisation, Governing: worst.Governing, Combination: worst.Combination,
-				MassPerLength: mass, Added: mass - Mass(s.r), Value: nan,
+			most, governing, under := Used(worst)
+			mend := Mend{Kind: Group, Change: c.section.Designation, Family: c.family, Utilisation: most, Governing: governing, Combination: under,
+				MassPerLength: mass, Added: mass - Mass(s.r), Value: nan, Now: nan, Place: s.r.Member.SectionAt,
 				edits: func() []checker.Edit {
 					return s.layout.Tidy([]checker.Edit{{File: file, Span: span, New: `"` + c.section.Designation + `"`}})
 				}}

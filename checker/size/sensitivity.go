@@ -60,7 +60,7 @@ const difference = 2e-4
 // utilisation.
 func Sensitivities(report *checker.Report, r *checker.Result) []Sensitivity {
 	s := newSubject(report, r, edit.NewLayout(report.Project))
-	if !s.stated || math.IsNaN(r.Utilisation) {
+	if !s.stated || math.IsNaN(used(r)) {
 		return nil
 	}
 	m := r.Member
@@ -72,7 +72,7 @@ func Sensitivities(report *checker.Report, r *checker.Result) []Sensitivity {
 			if x == nil || len(x.Missing) > 0 {
 				return nan
 			}
-			return x.Utilisation
+			return used(x)
 		}
 		centre := value(now) // not r's own: a text that is read again may differ in the last bits
 		k := Sensitivity{Parameter: name, Value: now, Dim: dim, Reference: reference,

@@ -14,6 +14,7 @@ import (
 	"kern/checker/model"
 	"kern/checker/standard"
 	"kern/lang"
+	"kern/lang/unit"
 )
 
 // Kind is what a mend changes.
@@ -49,8 +50,13 @@ type Mend struct {
 	Needs []standard.HoldDemand
 	// Serves are the members of a group, in the order of the report.
 	Serves []string
-	// Value is the greatest height or load in SI units, NaN of other kinds.
-	Value float64
+	// Value is the greatest height or load, or the height of a hold, in SI units of
+	// Dim; Now is what the height or the load is at present. NaN of other kinds.
+	Value, Now float64
+	Dim        unit.Dim
+	// Place is the line of the load, or of the height or section, in the member's text;
+	// of lines that are not there or are taken over, no declaration.
+	Place lang.Place
 	// Note is what the change does not look after, "" for nothing.
 	Note string
 
@@ -192,9 +198,30 @@ func (s *subject) say(word, line string) ([]lang.Change, bool) {
 // mend makes the mend of a result.
 func (s *subject) mend(k Kind, change string, r *checker.Result, changes []lang.Change) Mend {
 	mass := Mass(r)
-	return Mend{Kind: k, Change: change, Utilisation: r.Utilisation, Governing: r.Governing, Combination: r.Combination,
-		MassPerLength: mass, Added: mass - Mass(s.r), Value: math.NaN(),
+	var at lang.Place
+	word := map[Kind]string{Section: "section", Grade: "material", Height: "height"}[k]
+	if b := s.own(word); word != "" && b != nil {
+		at = lang.Place{Decl: s.line.Decl, Span: b.Line}
+	}
+	used, governing, under := Used(r)
+	return Mend{Kind: k, Place: at, Change: change, Utilisation: used, Governing: governing, Combination: under,
+		MassPerLength: mass, Added: mass - Mass(s.r), Value: nan, Now: nan,
 		edits: func() []checker.Edit { return s.layout.TidyIn(s.file, s.line.Decl, changes) }}
+}
+
+// Used is the greatest utilisation of the checks that the member does not depart
+// from, with the check's rule and combination; NaN where there is none.
+func Used(r *checker.Result) (utilisation float64, governing, combination string) {
+	if len(r.Departures) == 0 {
+		return r.Utilisation, r.Governing, r.Combination
+	}
+	utilisation = nan
+	for _, c := range r.Checks {
+		if !c.Departed && c.Rule != "requirement" && !math.IsNaN(c.Utilisation) && !(c.Utilisation <= utilisation) {
+			utilisation, governing, combination = c.Utilisation, c.Rule, r.CombinationName(c)
+		}
+	}
+	return utilisation, governing, combination
 }
 
 // Mass is the mass per length of a member of one section, kg/m; of several lifts

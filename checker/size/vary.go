@@ -3,6 +3,7 @@ package size
 import (
 	"math"
 	"slices"
+	"strings"
 
 	"kern/checker/edit"
 	"kern/checker/model"
@@ -68,7 +69,7 @@ func (s *subject) heights() []Mend {
 	if math.IsNaN(most) || open {
 		return nil
 	}
-	text := down(most, u, 4)
+	text := Down(most, u, 4)
 	changes, ok := say(text)
 	if !ok {
 		return nil
@@ -78,7 +79,7 @@ func (s *subject) heights() []Mend {
 		return nil
 	}
 	mend := s.mend(Height, "height = "+text, r, changes)
-	mend.Value = r.Member.Height
+	mend.Value, mend.Now, mend.Dim = r.Member.Height, m.Height, unit.Length
 	return []Mend{mend}
 }
 
@@ -165,7 +166,7 @@ func (s *subject) load(t *trial, all []edit.Line, i int, value *lang.Expr, up bo
 			u = known
 		}
 	}
-	text := down(q.Value*most, u, 4)
+	text := Down(q.Value*most, u, 4)
 	v := read(text, u)
 	if !(v != 0) {
 		return Mend{}, false
@@ -196,7 +197,7 @@ func (s *subject) load(t *trial, all []edit.Line, i int, value *lang.Expr, up bo
 	if !ok {
 		return Mend{}, false
 	}
-	mend := s.mend(Load, say(i), r, changes)
-	mend.Value = v
+	mend := s.mend(Load, strings.Join(strings.Fields(say(i)), " "), r, changes)
+	mend.Value, mend.Now, mend.Dim, mend.Place = v, q.Value, q.Dim, place
 	return mend, true
 }

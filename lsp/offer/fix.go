@@ -26,6 +26,7 @@ func (l *list) fixes() {
 			}
 			l.add(Offer{Kind: QuickFix, Title: f.Title, Preferred: i == safe(&d), Mends: &d, edits: func() []checker.Edit { return slices.Clone(f.Edits) }})
 		}
+		l.sized(&d)
 		l.depart(&d)
 	}
 }

@@ -16,6 +16,7 @@ import (
 	"kern/checker"
 	"kern/checker/edit"
 	"kern/checker/model"
+	"kern/checker/size"
 	"kern/lang"
 )
 
@@ -59,6 +60,8 @@ type Request struct {
 	Span   lang.Span
 	// Want tells which kinds are wanted; nil for all.
 	Want func(Kind) bool
+	// Mends finds what makes a member pass; nil to offer none of it.
+	Mends func(*checker.Result) []size.Mend
 }
 
 // At gives the offers at a place: fixes first, the likeliest in front, then
@@ -75,6 +78,9 @@ func At(q Request) []Offer {
 		l.fixes()
 	}
 	if s, ok := l.site(); ok {
+		if l.wants(QuickFix) {
+			l.sizedAt(s)
+		}
 		if l.wants(Rewrite) {
 			l.convert(s)
 			l.state(s)
@@ -115,7 +121,8 @@ type list struct {
 	calculations []*model.Calculation
 	out          []Offer
 	seen         map[string]bool
-	faults       *faults // nil until somebody asks
+	faults       *faults  // nil until somebody asks
+	sizes        []string // titles of mends offered already
 	layout       *edit.Layout
 }
 
