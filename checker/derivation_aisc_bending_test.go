@@ -76,6 +76,8 @@ column T6 as F1 { section = bnon }
 column T7 as F1 { section = bdeep }
 column T8 as F1 { section = blow }
 column T9 as F1 { section = bbox }
+section bround = tube { depth = 200 mm; width = 150 mm; wall = 8 mm; corner = 24 mm; made = cold }
+column T12 as F1 { section = bround }
 column T11 as F1 { section = bwalls }
 column T10 as F1 { section = bnarrow }
 column P1 as F1 { section = bpipe }
@@ -103,4 +105,33 @@ column V3 as F1 { height = 8 m; hold twist at 7 m; load 200 kN; load 20 kNm abou
 column V4 as S4 { hold twist at 1.9 m; height = 2 m; load 20 kN; load 2 kNm about minor at top; load -1.9 kNm about minor at base }
 column V1 { section = "HEB 200"; material = hard; height = 8 m; lift base to 4 m { section = "HEB 260" }; load 200 kN; load 20 kNm about major at top; load 5 kNm about minor at top }
 column V2 as V1 { hold both at 4 m; hold twist at 4 m }
+material harder { E = 200 GPa; fy = 900 MPa; fu = 1000 MPa; density = 7850 kg/m3 }
+column D13 as F1 { section = "2L6X4X1/2 SLBB"; material = harder; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D14 as F1 { section = "2L6X4X1/2 SLBB"; material = harder; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D15 as F1 { section = "2L6X4X1/2 SLBB"; material = harder; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D16 as F1 { section = "2L6X4X1/2 SLBB"; material = harder; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D17 as F1 { section = "2L5X3-1/2X1/4 LLBB"; material = hard; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D18 as F1 { section = "2L5X3-1/2X1/4 LLBB"; material = hard; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D19 as F1 { section = "2L5X3-1/2X1/4 LLBB"; material = hard; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D20 as F1 { section = "2L5X3-1/2X1/4 LLBB"; material = hard; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D21 as F1 { section = "2L5X3-1/2X1/4 LLBB"; material = harder; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D22 as F1 { section = "2L5X3-1/2X1/4 LLBB"; material = harder; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D23 as F1 { section = "2L5X3-1/2X1/4 LLBB"; material = harder; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D24 as F1 { section = "2L5X3-1/2X1/4 LLBB"; material = harder; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D25 as F1 { section = "2L5X3X1/4X3/4 SLBB"; material = hard; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D26 as F1 { section = "2L5X3X1/4X3/4 SLBB"; material = hard; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D27 as F1 { section = "2L5X3X1/4X3/4 SLBB"; material = hard; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D28 as F1 { section = "2L5X3X1/4X3/4 SLBB"; material = hard; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D29 as F1 { section = "2L5X3X1/4X3/4 SLBB"; material = harder; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D30 as F1 { section = "2L5X3X1/4X3/4 SLBB"; material = harder; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D31 as F1 { section = "2L5X3X1/4X3/4 SLBB"; material = harder; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D32 as F1 { section = "2L5X3X1/4X3/4 SLBB"; material = harder; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D49 as F1 { section = "2L4X4X1/4"; material = hard; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D50 as F1 { section = "2L4X4X1/4"; material = hard; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D51 as F1 { section = "2L4X4X1/4"; material = hard; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D52 as F1 { section = "2L4X4X1/4"; material = hard; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D53 as F1 { section = "2L4X4X1/4"; material = harder; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D54 as F1 { section = "2L4X4X1/4"; material = harder; height = 1 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
+column D55 as F1 { section = "2L4X4X1/4"; material = harder; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about major at top }
+column D56 as F1 { section = "2L4X4X1/4"; material = harder; height = 5 m; connectors every 0.5 m welded; load 5 kN; load 0.5 kNm about minor at top }
 `

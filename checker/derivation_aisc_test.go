@@ -37,6 +37,12 @@ strut L5 as L1 { connected by long leg space }
 strut L6 as L1 { length = 3 m; connected by long leg space }
 strut L7 as L1 { connected by short leg space }
 strut L8 as L1 { length = 4 m; connected by short leg space }
+strut PA1 { section = "2L4x3-1/2x3/8x3/4 LLBB"; material = hard; length = 2.4 m; load 100 kN; connectors every 800 mm welded }
+strut PA2 as PA1 { connectors every 500 mm pretensioned }
+strut PA3 as PA1 { connectors every 500 mm snug }
+strut PA4 as PA1 { section = "2L5x3x1/4 LLBB"; connectors every 800 mm welded }
+strut PA5 as PA4 { connectors every 500 mm welded }
+strut PA6 as PA4 { connectors every 500 mm snug }
 tie R1 { section = solid; material = hard; length = 3 m; load -100 kN }
 tie R2 { section = rolled; material = hard; length = 3 m; load -100 kN; load 5 kN across major at 1 m }
 ` + aiscBending

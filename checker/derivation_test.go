@@ -216,6 +216,10 @@ column SP2 as A1 { section = hot; critical exact; hold minor at 1.5 m stiffness 
 column SP3 as A1 { section = hot; base fixed; top free; imperfection on; load 40 kN; load 1 kN across major at top; limit sway = height / 150; limit deflection = span / 200 }
 column SP4 as A1 { section = rolled; base fixed; top spring 200 kN/m; imperfection on; critical exact; load 90 kN at 2 m; load 100 kN offset 20 mm about major }
 column SP5 as A1 { section = l; height = 1.5 m; critical exact; load 60 kN; limit deflection = 4 mm }
+column SP7 as A1 { section = hot; critical exact; effective = 1 about minor; load 1 kN/m about major; load 0.5 kN/m about minor; load 60 kN }
+column SP10 as A1 { section = hot; critical exact; effective = 1 about major; load 1 kN/m about major; load 0.5 kN/m about minor; load 60 kN }
+column SP8 as A1 { section = hot; critical exact; load 1 kN/m about major; load 60 kN }
+column SP9 as A1 { section = hot; critical exact; load 1 kN/m about minor; load 60 kN }
 column SP6 as A1 { section = u; height = 2 m; critical exact; load 60 kN }
 column A31 as A1 { section = rolled; effective = 2.0 about major; limit slenderness = 60 }
 `

@@ -13,6 +13,7 @@ type Envelope struct {
 
 	r           *Result
 	combination int
+	close       float64 // how near to the limit the utilisation is on the line
 }
 
 // Factors is a point of an envelope; NaN where the standard cannot decide.
@@ -24,12 +25,13 @@ const rays = 25
 // Envelope finds the envelope of a combination, by its index. It is false where
 // the standard decides nothing without moments or without axial forces.
 func (r *Result) Envelope(combination int) (*Envelope, bool) {
-	e := &Envelope{r: r, combination: combination, Limit: r.limit()}
+	e := &Envelope{r: r, combination: combination, Limit: r.limit(), close: 1e-4} // the ends are said as numbers
 	e.Axial, e.Bending = e.reach(1, 0, 1), e.reach(0, 1, 1)
 	if !(e.Axial > 0) || !(e.Bending > 0) {
 		return nil, false
 	}
 	guess := 1.0
+	e.close = 2e-3 // finer than a line is wide
 	for i := range rays {
 		angle := math.Pi / 2 * float64(i) / (rays - 1)
 		sin, cos := math.Sincos(angle)
@@ -39,7 +41,10 @@ func (r *Result) Envelope(combination int) (*Envelope, bool) {
 		case rays - 1:
 			sin, cos = 1, 0
 		}
-		t := e.reach(cos*e.Axial, sin*e.Bending, guess)
+		t := 1.0 // at the ends, which are known
+		if i > 0 && i < rays-1 {
+			t = e.reach(cos*e.Axial, sin*e.Bending, guess)
+		}
 		if t > 0 {
 			guess = t
 		}
@@ -90,7 +95,7 @@ func (e *Envelope) reach(axial, bending, guess float64) float64 {
 func (e *Envelope) between(low, lowOver, high, highOver float64, over func(float64) float64) float64 {
 	side := 0
 	for i := range 40 {
-		if high-low <= 1e-3*high {
+		if high-low <= e.close*high {
 			break
 		}
 		mid := (low*highOver - high*lowOver) / (highOver - lowOver)
@@ -99,7 +104,7 @@ func (e *Envelope) between(low, lowOver, high, highOver float64, over func(float
 		}
 		v := over(mid)
 		switch {
-		case v <= 0 && v > -5e-4:
+		case v <= 0 && v > -e.close:
 			return mid
 		case v <= 0:
 			low, lowOver = mid, v

@@ -202,6 +202,8 @@ func (w *mentions) statement(s *lang.Stmt) {
 		at(2)
 	case "reduce": // reduce live by tributary area K_LL NUMBER
 		at(5)
+	case "connectors": // connectors every LENGTH KIND
+		at(1)
 	case "joints": // joints RATIO at base, RATIO at top about AXIS
 		at(0)
 		at(4)

@@ -104,10 +104,14 @@ func play(t *testing.T, archive *txtar.Archive) string {
 		Options      map[string]any
 		Settings     map[string]any
 		Folders      []string
+		Commit       bool // the files are committed to a repository first
 	}
 	config.Folders = []string{"."}
 	if err := unmarshal(client, &config); err != nil {
 		t.Fatalf("client.json: %v", err)
+	}
+	if config.Commit {
+		s.commit()
 	}
 	s.config = remarshal(t, config.Settings)
 	options := ""

@@ -60,6 +60,10 @@
 // [Server.Settings] for them. Documents whose text the server makes register
 // their scheme in contents (rulepages.go).
 //
+// What was before stands in past.go: the state of the last commit is read and
+// checked once, in the background, and answers show it beside what is. A commit
+// is noticed with the next question.
+//
 // # What happens to errors
 //
 //   - A file that no project has: File is nil without an error, and the answer is
@@ -85,7 +89,7 @@
 //
 //	What the archive shows, in a sentence.
 //	-- client.json --
-//	{"capabilities": {"textDocument": {"hover": null}}, "options": {}, "settings": {}, "folders": ["."]}
+//	{"capabilities": {"textDocument": {"hover": null}}, "options": {}, "settings": {}, "folders": ["."], "commit": false}
 //	-- a.kern --
 //	column ⟦name:A1⟧ { section = "HEB 100"; load ⟦at⟧10 kN }
 //	-- script --

@@ -8,6 +8,7 @@ import (
 	"kern/checker/derivation"
 	"kern/checker/model"
 	"kern/checker/output"
+	"kern/checker/review"
 	"kern/lang"
 	"kern/lang/unit"
 )
@@ -43,6 +44,7 @@ type collector struct {
 	within   lang.Span
 	out      []hint
 
+	past     *review.Past    // nil where nothing is to be said of it
 	used     *usage          // nil until somebody asks
 	familiar map[string]bool // whether a unit is a customary one, by symbol
 
@@ -59,6 +61,9 @@ func hintsIn(f *File, within lang.Span, settings Settings) []hint {
 	}
 	if all := c.report.Calculations(f.Name); len(all) > 0 {
 		c.calc = all[0]
+	}
+	if settings.HintResults && settings.HintHistory {
+		c.past, _ = f.past() // once: it looks at the disk
 	}
 	first, last := f.Tree.DeclAt(within.Start), f.Tree.DeclAt(within.End)
 	for i := first; i >= 0 && i <= last; i++ {

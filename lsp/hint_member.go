@@ -45,7 +45,11 @@ func (c *collector) member(s *lang.Stmt) {
 
 // results gives utilisation and governing check after the first line.
 func (c *collector) results(s *lang.Stmt, own []*checker.Result) {
-	for _, g := range groupsOf(own, resultLabel) {
+	say := resultLabel
+	if c.past != nil {
+		say = func(r *checker.Result) string { return resultLabel(r) + c.f.was(c.past, r) }
+	}
+	for _, g := range groupsOf(own, say) {
 		label := g.label
 		if len(g.results) < len(own) {
 			label = g.names() + " " + label
@@ -57,6 +61,9 @@ func (c *collector) results(s *lang.Stmt, own []*checker.Result) {
 			openPoints(p, r)
 			if check, ok := r.GoverningCheck(); ok && r.Verdict != standard.Undecided {
 				output.CheckWorking(p, r, r.Derive(), check.Rule, 0)
+			}
+			if c.past != nil {
+				c.f.since(p, r)
 			}
 		})
 	}

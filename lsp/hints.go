@@ -76,7 +76,8 @@ func (s *Server) InlayHintResolve(ctx context.Context, p *protocol.InlayHint) (*
 	if f == nil || err != nil {
 		return &out, err
 	}
-	settings := DefaultSettings() // one that has just been switched off still shows
+	settings := DefaultSettings()                   // one that has just been switched off still shows
+	settings.HintHistory = s.Settings().HintHistory // which is a part of a label
 	for _, h := range hintsIn(f, lang.Span{Start: data.Offset, End: data.Offset}, settings) {
 		if h.kind == data.Kind && h.offset == data.Offset && h.label == string(label) && h.tip != nil {
 			out.Tooltip = s.markup(h.tip(s.client.HoverMarkdown))

@@ -38,10 +38,11 @@ func (s *Server) Hover(ctx context.Context, p *protocol.HoverParams) (*protocol.
 }
 
 // paper is the form in which a client takes pages.
-type paper struct{ markdown, pictures bool }
+type paper struct{ markdown, pictures, history bool }
 
 func (s *Server) paper() paper {
-	return paper{markdown: s.client.HoverMarkdown, pictures: s.client.Pictures && s.Settings().HoverDrawings}
+	settings := s.Settings()
+	return paper{markdown: s.client.HoverMarkdown, pictures: s.client.Pictures && settings.HoverDrawings, history: settings.HoverHistory}
 }
 
 // markup is a text in the form of the paper.

@@ -25,6 +25,9 @@ func (h *hovering) member(r *checker.Result) {
 		p.Text(output.Words(output.SectionTitle(m.Section) + "; " + output.MaterialTitle(m.Material) + "; " + m.Kind.String() + " of " + output.Value(r.Units(), m.Height, unit.Length)))
 	}
 	output.Missing(p, r)
+	if h.paper.history {
+		h.f.since(p, r)
+	}
 	var rows [][]output.Line
 	for _, c := range r.Checks {
 		rows = append(rows, checkRow(r, c))

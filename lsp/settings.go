@@ -12,11 +12,12 @@ import (
 // Settings are what a user can set. The zero value is of no use: start from
 // DefaultSettings.
 type Settings struct {
-	HintResults, HintSections, HintStrengths, HintValues, HintUnits, HintAssumptions bool
+	HintResults, HintSections, HintStrengths, HintValues, HintUnits, HintAssumptions, HintHistory bool
 
 	CodeLens         bool
 	HoldMilliseconds int // how long a new error on the line being typed is held back
 	HoverDrawings    bool
+	HoverHistory     bool
 	DocsURL          string // base address of the rules' pages, "" for none
 	Trace            string // off, messages or verbose
 }
@@ -57,6 +58,8 @@ var settings = []Setting{
 		Description: "Show quantities converted where units are mixed."},
 	{Name: "inlayHints.assumptions", Type: "boolean", Default: true, flag: func(s *Settings) *bool { return &s.HintAssumptions },
 		Description: "Show what is assumed about a member."},
+	{Name: "inlayHints.history", Type: "boolean", Default: true, flag: func(s *Settings) *bool { return &s.HintHistory },
+		Description: "Show what a member's result was in the last commit, where it was another."},
 	{Name: "codeLens", Type: "boolean", Default: true, flag: func(s *Settings) *bool { return &s.CodeLens },
 		Description: "Show verdict, governing check and \"show working\" above each member."},
 	{Name: "diagnostics.holdMilliseconds", Type: "integer", Default: 600, Least: 0, Most: 10_000, number: func(s *Settings) *int { return &s.HoldMilliseconds },
@@ -65,6 +68,8 @@ var settings = []Setting{
 		Description: "Base address of the rules' pages, for links from diagnostics; empty for none."},
 	{Name: "hover.drawings", Type: "boolean", Default: true, flag: func(s *Settings) *bool { return &s.HoverDrawings },
 		Description: "Draw sections to scale in hovers, where the editor can show pictures."},
+	{Name: "hover.history", Type: "boolean", Default: true, flag: func(s *Settings) *bool { return &s.HoverHistory },
+		Description: "Show in a member's hover which edits since the last commit changed its utilisation."},
 	{Name: "trace", Type: "string", Default: "off", Values: []string{"off", "messages", "verbose"}, text: func(s *Settings) *string { return &s.Trace },
 		Description: "Log the messages that the server handles."},
 }

@@ -40,8 +40,9 @@ type workspace struct {
 	check  sync.Mutex // one check at a time
 	lines  sync.Map   // name -> *Text of files that are not open
 
-	disk files
-	sets map[uri.URI]fileSet // guarded by Server.pushing
+	disk  files
+	pasts pasts
+	sets  map[uri.URI]fileSet // guarded by Server.pushing
 
 	stopWaking func() // of the goroutine that publishes
 }

@@ -369,12 +369,12 @@ func (b Beam) nodes(loadings [][]Push) []float64 {
 			}
 		}
 	}
-	return merge(z, b.Height)
+	return Merge(z, b.Height)
 }
 
-// merge sorts heights and drops those that are the same within a billionth of
+// Merge sorts heights and drops those that are the same within a billionth of
 // the column.
-func merge(z []float64, height float64) []float64 {
+func Merge(z []float64, height float64) []float64 {
 	for i := 1; i < len(z); i++ {
 		for j := i; j > 0 && z[j] < z[j-1]; j-- {
 			z[j], z[j-1] = z[j-1], z[j]

@@ -40,16 +40,23 @@ func DiagramOf(pieces []Piece, from, to, tiny float64) Diagram {
 	return d
 }
 
-// MomentAt is the moment of pieces at a height, Nm; where a moment comes in, the
-// one below it.
-func MomentAt(pieces []Piece, z float64) float64 {
+// MomentsAt are the moments of pieces just below and just above a height, Nm: two
+// where a moment comes in there, equal elsewhere.
+func MomentsAt(pieces []Piece, z float64) (below, above float64) {
+	if len(pieces) == 0 {
+		return 0, 0
+	}
+	eps := 1e-9 * (pieces[len(pieces)-1].To - pieces[0].From)
+	found := false
 	for _, p := range pieces {
-		if z <= p.To {
-			return p.Moment(z - p.From)
+		if z < p.From-eps || z > p.To+eps {
+			continue
 		}
+		m := p.Moment(z - p.From)
+		if !found {
+			below, found = m, true
+		}
+		above = m
 	}
-	if n := len(pieces); n > 0 {
-		return pieces[n-1].Moment(z - pieces[n-1].From)
-	}
-	return 0
+	return below, above
 }

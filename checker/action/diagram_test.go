@@ -26,7 +26,9 @@ func TestDiagramOf(t *testing.T) {
 	if d.Straight {
 		t.Error("the diagram of a uniform load is not straight")
 	}
-	near("the moment at a quarter", math.Abs(MomentAt(uniform, 1)), 3*1*3/2.)
+	below, above := MomentsAt(uniform, 1)
+	near("the moment at a quarter", math.Abs(below), 3*1*3/2.)
+	near("the moment above it", above, below)
 
 	half := DiagramOf(solve(Push{Force: 8, From: 2}), 0, 2, 1e-9) // P L/4, nothing inside the half
 	near("the peak of a load in the middle", half.Peak, 8)
@@ -38,6 +40,8 @@ func TestDiagramOf(t *testing.T) {
 	}
 	jump := DiagramOf(solve(Push{Moment: 8, From: 2}), 0, 4, 1e-9)
 	near("the peak beside a moment", jump.Peak, 4)
+	below, above = MomentsAt(solve(Push{Moment: 8, From: 2}), 2)
+	near("the step at a moment", math.Abs(above-below), 8)
 	if jump.Straight {
 		t.Error("a jump is not straight")
 	}

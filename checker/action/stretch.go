@@ -64,6 +64,7 @@ type Stretch struct {
 	Sprung     bool    // a spring keeps it from moving sideways somewhere
 	Whole      bool    // K follows from the critical load of the whole column under a combination
 	Joints     bool    // K follows from the stiffness ratios of rigid joints
+	Sway       bool    // then, its joints can move sideways against each other
 	Direct     bool    // K is 1 by the direct analysis method
 	Stepped    bool    // the section changes in it; K is for one of its sections and one combination
 }

@@ -54,8 +54,8 @@ func (b *buckling) view(axis int, x float64, weak int) {
 	b.line(Dashed, x, top, x, base)
 	b.base(b.m.Base[axis], x, base, 0.7)
 	b.top(b.m.Top[axis], x, top, 0.7)
-	for _, z := range b.holdHeights(axis) {
-		b.hold(x-0.4, b.y(z), -1)
+	for _, s := range b.supports(axis) {
+		b.support(s, x, b.y(s.at), 0.4, -1)
 	}
 	style, tone := Outline, Plain
 	if axis == weak {
@@ -93,11 +93,11 @@ func (b *buckling) lines(axis int) []string {
 		if b.f.Stepped(s.From, s.To) { // each lift has an effective length of its own
 			return append(out, "checked lift by lift")
 		}
-		with := "checked with"
+		k := "checked with K "
 		if s.Overridden {
-			with += " the stated K"
+			k = "with the stated K "
 		}
-		out = append(out, with, "N_cr "+b.show(b.f.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length)+", K "+unit.Short(s.K, 3))
+		out = append(out, k+unit.Short(s.K, 3), "N_cr "+b.show(b.f.Critical(axis, s), unit.Force), "L_cr "+b.show(s.Effective(), unit.Length))
 	}
 	return out
 }

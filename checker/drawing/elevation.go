@@ -79,6 +79,11 @@ func (e *elevation) layOut() {
 				e.room[a] = max(e.room[a], Width(t.Words, small, false)+0.1)
 			}
 		}
+		for _, s := range e.supports(a) {
+			for _, t := range e.springs(s) {
+				e.room[a] = max(e.room[a], Width(t.Words, small, false)+0.1)
+			}
+		}
 		e.room[a] = min(e.room[a], most[a])
 	}
 	e.at[0] = 39
@@ -236,15 +241,19 @@ func (e *elevation) view(axis int) {
 	foot := map[action.End]float64{action.Pinned: 8, action.Fixed: 4.6, action.Guided: 7, action.Free: 3.4}[e.m.Base[axis]]
 	e.text(Text{At: Point{x, base + foot}, Words: e.m.Base[axis].String(), Size: small, Anchor: Middle})
 	near := []entry{{want: top + 3.4, lines: []Text{{Words: e.m.Top[axis].String(), Size: small}}, to: Point{-1, -1}}}
+	var right []entry
+	for _, s := range e.supports(axis) {
+		side := -1.0
+		if e.hangs(axis, s.at) {
+			side = 1
+		}
+		e.support(s, x, e.y(s.at), w, side)
+		if lines := e.springs(s); len(lines) > 0 {
+			right = append(right, entry{want: e.y(s.at), lines: lines, to: Point{x + w + 0.4, e.y(s.at)}})
+		}
+	}
 	for _, h := range e.m.Holds {
 		y := e.y(h.At)
-		if axis == 0 && h.Major || axis == 1 && h.Minor {
-			if e.hangs(axis, h.At) {
-				e.hold(x+w, y, 1)
-			} else {
-				e.hold(x-w, y, -1)
-			}
-		}
 		if h.Twist {
 			e.rect(Outline, Box{x - w - 0.8, y - 0.9, x + w + 0.8, y + 0.9})
 			near = append(near, entry{want: y + 3, lines: []Text{{Words: "twist", Size: small}}, to: Point{-1, -1}})
@@ -254,11 +263,13 @@ func (e *elevation) view(axis int) {
 	e.column(near, edge, holdWords, 8, tallSheet-6, End)
 	if axis == 0 {
 		for _, l := range e.m.Lifts {
+			if l.Section == nil { // its line has an error
+				continue
+			}
 			e.left = append(e.left, entry{want: (e.y(l.From) + e.y(l.To)) / 2, lines: []Text{{Words: l.Section.Title(), Size: small}}, to: Point{-1, -1}})
 		}
 		e.column(e.left, 11.5, edge-holdWords-1-11.5, 8, tallSheet-6, Start)
 	}
-	var right []entry
 	for _, g := range e.groups {
 		if l, drawn := e.load(g, axis, x, w); drawn && len(l.lines) > 0 {
 			right = append(right, l)
@@ -374,8 +385,13 @@ func (e *elevation) describe() string {
 	b.WriteString(e.m.Kind.String() + " of " + e.show(e.m.Height, unit.Length))
 	for a, name := range []string{"major", "minor"} {
 		b.WriteString("; about " + name + ": base " + e.m.Base[a].String() + ", top " + e.m.Top[a].String())
-		for _, z := range e.holdHeights(a) {
-			b.WriteString(", held at " + e.show(z, unit.Length))
+		for _, s := range e.supports(a) {
+			if s.rigid {
+				b.WriteString(", held at " + e.show(s.at, unit.Length))
+			}
+			for _, t := range e.springs(s) {
+				b.WriteString(", " + t.Words + " at " + e.show(s.at, unit.Length))
+			}
 		}
 	}
 	if e.m.Imported != nil {

@@ -177,6 +177,33 @@ func TestLifts(t *testing.T) {
 	}
 }
 
+// TestSprings: every spring is said with its stiffness in the view about its axis,
+// and is no rigid hold.
+func TestSprings(t *testing.T) {
+	r := check(t, basis+`column A { section = "HEB 160"; material = "S355"; height = 5 m; critical exact
+base spring 4000 kNm/rad about major
+top free about major
+top spring 250 kN/m about major
+hold minor at 2.5 m stiffness 900 kN/m
+load G 50 kN }`).Members[0]
+	s := drawing.Elevation(r)
+	if why := sound(s); why != "" {
+		t.Error(why)
+	}
+	var words []string
+	for _, x := range partsOf(s).texts {
+		words = append(words, x.Words)
+	}
+	for _, want := range []string{"spring 4000 kNm/rad", "spring 250 kN/m", "spring 900 kN/m"} {
+		if n := count(words, want); n != 1 {
+			t.Errorf("'%s' stands %d times among %q", want, n, words)
+		}
+	}
+	if strings.Contains(s.Description, "held at") || !strings.Contains(s.Description, "about minor: base pinned, top pinned, spring 900 kN/m at 2500 mm") {
+		t.Error(s.Description)
+	}
+}
+
 // TestSectionAspect: a section 200 mm deep and 100 mm wide is drawn twice as high
 // as it is wide.
 func TestSectionAspect(t *testing.T) {

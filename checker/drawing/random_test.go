@@ -47,6 +47,15 @@ func randomMembers(n int, seed uint64) string {
 		for range r.IntN(crowd + 1) {
 			fmt.Fprintf(&b, "hold %s at %s\n", pick("major", "minor", "both", "twist"), at())
 		}
+		if r.IntN(8) == 0 {
+			fmt.Fprintf(&b, "hold %s at %s stiffness %.0f kN/m\n", pick("major", "minor", "both"), at(), 5000*r.Float64()+1)
+		}
+		if r.IntN(6) == 0 {
+			fmt.Fprintf(&b, "%s spring %.0f kNm/rad about %s\n", pick("base", "top"), 5000*r.Float64()+1, pick("major", "minor"))
+		}
+		if r.IntN(5) == 0 {
+			b.WriteString("critical exact\n")
+		}
 		c := func() string { return pick("G", "Imposed_on_the_gallery", "W") }
 		size := func() float64 { return (r.Float64() - 0.3) * 200 * r.Float64() }
 		for range 1 + r.IntN(crowd*2) {

@@ -147,14 +147,53 @@ func depths(s *model.Section) [2]float64 {
 	return [2]float64{high[0] - low[0], high[1] - low[1]}
 }
 
-// holdHeights are the heights of the points held about an axis, ascending.
-func (s *subject) holdHeights(axis int) []float64 {
-	var out []float64
+// support is what holds the member at a height about an axis.
+type support struct {
+	at               float64 // m
+	rigid            bool
+	lateral, turning float64 // stiffness of springs, N/m and Nm/rad; 0 for none
+}
+
+// supports are those about an axis besides Base and Top.
+func (s *subject) supports(axis int) []support {
+	var out []support
 	for _, h := range s.m.Holds {
-		if axis == 0 && h.Major || axis == 1 && h.Minor {
-			out = append(out, h.At)
+		if h.About(model.Axis(axis)) {
+			out = append(out, support{at: h.At, rigid: h.Stiffness == 0, lateral: h.Stiffness})
 		}
 	}
-	slices.Sort(out)
+	for _, e := range []support{
+		{at: 0, lateral: s.m.BaseSpring[axis].Lateral, turning: s.m.BaseSpring[axis].Turning},
+		{at: s.m.Height, lateral: s.m.TopSpring[axis].Lateral, turning: s.m.TopSpring[axis].Turning},
+	} {
+		if e.lateral > 0 || e.turning > 0 {
+			out = append(out, e)
+		}
+	}
 	return out
+}
+
+// springs are the words about the springs of a support.
+func (s *subject) springs(p support) []Text {
+	var out []Text
+	if p.lateral > 0 {
+		out = append(out, Text{Words: "spring " + s.show(p.lateral, unit.ForcePerLength), Size: small})
+	}
+	if p.turning > 0 {
+		out = append(out, Text{Words: "spring " + s.show(p.turning, unit.RotationalStiffness), Size: small})
+	}
+	return out
+}
+
+// support draws a support at a side of the member whose half width is w.
+func (p *pen) support(s support, x, y, w, side float64) {
+	switch {
+	case s.rigid:
+		p.hold(x+side*w, y, side)
+	case s.lateral > 0:
+		p.spring(x+side*w, y, side)
+	}
+	if s.turning > 0 {
+		p.coil(x, y)
+	}
 }

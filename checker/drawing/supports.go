@@ -1,6 +1,10 @@
 package drawing
 
-import "kern/checker/action"
+import (
+	"math"
+
+	"kern/checker/action"
+)
 
 // hatch draws the ground: a line with strokes behind it. It is level, with the
 // strokes below (or above), or upright with them at the left.
@@ -61,4 +65,30 @@ func (p *pen) top(end action.End, x, y, w float64) {
 func (p *pen) hold(x, y, side float64) {
 	p.polygon(Outline, Point{x, y}, Point{x + side*2.9, y - 1.7}, Point{x + side*2.9, y + 1.7})
 	p.hatch(Point{x + side*3.5, y - 2.2}, Point{x + side*3.5, y + 2.2}, side*1.1, 1.1)
+}
+
+// spring draws a point kept from moving sideways by a spring, at the left (side
+// -1) or at the right (side 1) of the member.
+func (p *pen) spring(x, y, side float64) {
+	pts := []Point{{x, y}, {x + side*0.5, y}}
+	for i := range 5 {
+		pts = append(pts, Point{x + side*(0.8+0.5*float64(i)), y + 1.1*float64(1-2*(i%2))})
+	}
+	p.polyline(Outline, append(pts, Point{x + side*3.1, y}, Point{x + side*3.5, y})...)
+	p.hatch(Point{x + side*3.5, y - 2.2}, Point{x + side*3.5, y + 2.2}, side*1.1, 1.1)
+}
+
+// coil draws a spring against turning about an end: two turns around it, held to
+// the ground at the right.
+func (p *pen) coil(x, y float64) {
+	at := func(r, turn float64) Point {
+		sin, cos := math.Sincos(turn * math.Pi / 2)
+		return Point{x + r*cos, y + r*sin}
+	}
+	path := Path{Style: Outline, Steps: []Step{{Kind: Move, To: at(0.9, 0)}}}
+	for i := 1; i <= 6; i++ {
+		r := 0.9 + 0.25*float64(i)
+		path.Steps = append(path.Steps, Step{Kind: Arc, To: at(r, float64(i)), Radius: r, Clockwise: true})
+	}
+	p.add(path)
 }

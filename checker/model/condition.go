@@ -32,6 +32,14 @@ func (w *memberReader) limit(r *reader) {
 	case "sway":
 		double = w.m.Limits.Sway.Set()
 		l := Movement{Place: at}
+		names := r.names
+		r.names = func(e *lang.Expr) (unit.Quantity, *lang.Problem) {
+			if e.Text == "span" && w.env.Names["span"] == nil {
+				return unit.Quantity{}, &lang.Problem{Rule: "unknown-name", Span: e.Span, Message: "sway is that of the whole member: it has a height, and no span",
+					Fixes: []lang.Fix{lang.Replace("Write height", false, e.Span, "height")}}
+			}
+			return names(e)
+		}
 		l.Limit, _, _ = r.quantity(want{what: "the limit of sway", dim: unit.Length, unit: "mm", max: 10})
 		w.under(r, &l)
 		w.m.Limits.Sway = l
@@ -48,7 +56,7 @@ func (w *memberReader) limit(r *reader) {
 func (w *memberReader) under(r *reader, l *Movement) {
 	l.Under = action.Characteristic
 	if _, ok := r.word("under"); ok {
-		word, _ := r.wordOf("what the movement is limited under", "characteristic", "frequent", "quasipermanent")
+		word, _ := r.wordOf("the situation of the limit", "characteristic", "frequent", "quasipermanent")
 		l.Under, _ = action.SituationOf(word)
 	}
 }
@@ -65,6 +73,15 @@ func (w *memberReader) deflection(r *reader, at lang.Place) {
 		return names(e)
 	}
 	e := r.peek()
+	if e != nil && e.Kind != lang.QuantExpr { // one of a bad unit says so itself
+		if q, p := lang.Eval(e, r.names); p == nil && q.Dim.IsNone() {
+			r.take()
+			at := lang.Span{Start: e.Span.Start, End: e.Span.Start}
+			r.problem(lang.Problem{Rule: "missing-unit", Span: e.Span, Message: "the limit of deflection is a length: span / 300, 8 mm; this is a bare number",
+				Fixes: []lang.Fix{lang.Replace("Write span * before it", false, at, "span * ")}})
+			return
+		}
+	}
 	v, _, ok := r.quantity(want{what: "the limit of deflection", dim: unit.Length, unit: "mm", max: 10})
 	l := Movement{Place: at, Limit: v}
 	w.under(r, &l)

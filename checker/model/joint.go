@@ -4,6 +4,7 @@ import (
 	"kern/checker/action"
 	"kern/checker/section"
 	"kern/lang"
+	"kern/lang/unit"
 )
 
 // joints reads the stiffness ratios of rigid joints: "joints 1.2 at base, 2.0 at
@@ -78,6 +79,22 @@ func (w *memberReader) connected(r *reader) {
 	w.m.Leg = Leg{Long: leg == "long", Short: leg == "short", Space: space, Place: r.place(r.stmt.Line)}
 }
 
+// connectors reads what connects a pair of angles: "connectors every 600 mm welded".
+func (w *memberReader) connectors(r *reader) {
+	if _, ok := r.wordOf("the distance of the connectors", "every"); !ok {
+		return
+	}
+	v, _, ok := r.quantity(want{what: "the distance of the connectors", dim: unit.Length, unit: "mm", min: 0.01, max: 50})
+	if !ok {
+		return
+	}
+	kind, ok := r.wordOf("how they connect", "welded", "pretensioned", "snug")
+	if !ok {
+		return
+	}
+	w.m.Connectors = Connectors{Every: v, Kind: kind, Place: r.place(r.stmt.Line)}
+}
+
 // fits looks whether what was said of joints and legs fits the rest of the member.
 func (w *memberReader) fits() {
 	m := w.m
@@ -96,6 +113,9 @@ func (w *memberReader) fits() {
 	}
 	if m.Leg.Stated() && m.Section != nil && m.Section.Shape.Kind != section.Angle {
 		problem(m.Leg.Place, lang.Problem{Rule: "wrong-kind", Message: "a single angle is connected by one leg; this member is " + lang.A(m.Section.Shape.Kind.String())})
+	}
+	if m.Connectors.Every > 0 && m.Section != nil && m.Section.Shape.Kind != section.DoubleAngle {
+		problem(m.Connectors.Place, lang.Problem{Rule: "wrong-kind", Message: "connectors connect the angles of a pair; this member is " + lang.A(m.Section.Shape.Kind.String())})
 	}
 	if m.Leg.Stated() && len(m.Lifts) > 0 {
 		problem(m.Leg.Place, lang.Problem{Rule: "wrong-form", Message: "a member that is connected by one leg has one section from end to end, without lifts"})

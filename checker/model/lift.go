@@ -39,6 +39,11 @@ func (w *memberReader) lift(r *reader, d declared) {
 	if l.From, _, ok = w.place(r, "the lower end of the lift"); !ok {
 		return
 	}
+	if e := r.peek(); e != nil && !e.Is("to") {
+		r.problem(lang.Problem{Rule: "wrong-form", Span: e.Span, Message: "the upper end of a lift stands behind the word 'to'",
+			Fixes: []lang.Fix{lang.Replace("Add 'to'", false, lang.Span{Start: e.Span.Start, End: e.Span.Start}, "to ")}})
+		return
+	}
 	if _, ok = r.wordOf("the upper end of the lift", "to"); !ok {
 		return
 	}
@@ -187,20 +192,33 @@ func (w *memberReader) lifts(missing func(fix, what string)) {
 	}
 	lacks("section", m.Section != nil, func(l *Lift) bool { return l.Section != nil })
 	lacks("material", m.Material != nil, func(l *Lift) bool { return l.Material != nil })
+	section, material := false, false // what the member says for itself counts somewhere
 	for i := range all {
 		if all[i].Section == nil {
-			all[i].Section = m.Section
+			all[i].Section, section = m.Section, true
 		}
 		if all[i].Material == nil {
-			all[i].Material = m.Material
+			all[i].Material, material = m.Material, true
 		}
 	}
+	w.idle("section", m.SectionAt, section || m.Section == nil)
+	w.idle("material", m.MaterialAt, material || m.Material == nil)
 	m.Lifts = all
 	if m.Section == nil {
 		m.Section = all[0].Section
 	}
 	if m.Material == nil {
 		m.Material = all[0].Material
+	}
+}
+
+// idle warns of a section or material that the member says for itself and that no
+// part of it has, as its lifts say their own. One that is taken over from another
+// member is right where it stands.
+func (w *memberReader) idle(what string, at lang.Place, used bool) {
+	if m := w.m; !used && at.Decl == m.Decl && len(m.Missing) == 0 {
+		m.Problems = append(m.Problems, lang.Diagnostic{Decl: at.Decl, Problem: lang.Problem{Rule: "unused-definition", Severity: lang.Warning, Span: at.Span, Unused: true,
+			Message: "no part of the " + m.Kind.String() + " has this " + what + ": its lifts say their own over the whole height"}})
 	}
 }
 

@@ -258,6 +258,8 @@ func (w *memberReader) statement(d declared) {
 		w.joints(r)
 	case "connected":
 		w.connected(r)
+	case "connectors":
+		w.connectors(r)
 	case "load":
 		w.load(r)
 	case "limit":

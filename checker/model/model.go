@@ -307,6 +307,7 @@ type Member struct {
 	Exact                 bool              // critical loads of the whole member instead of effective lengths
 	Imperfect             bool              // carries the forces of a sway imperfection where it can sway
 	Joints                [2]*action.Joints // stiffness ratios of rigid joints: major, minor; nil for none
+	Connectors            Connectors        // of a pair of angles
 	Leg                   Leg               // the leg by which a single angle is connected
 	Factor                [3]float64        // effective length factors of the user: major, minor, twist; 0 for none
 	Loads                 []Load
@@ -328,6 +329,17 @@ type Member struct {
 
 	Problems []lang.Diagnostic
 }
+
+// Connectors are what connects the two angles of a pair between its ends.
+type Connectors struct {
+	Every float64 // distance between them, m; 0 when it is not stated
+	Kind  string  // "welded", "pretensioned" or "snug"
+	Place lang.Place
+}
+
+// Snug tells whether the connectors are bolts that are not pretensioned, which
+// slip.
+func (c Connectors) Snug() bool { return c.Kind == "snug" }
 
 // Leg is the leg by which a single angle is connected at both ends.
 type Leg struct {

@@ -185,7 +185,7 @@ func (w *memberReader) held(a Axis, z float64) bool {
 		return keeps(m.Top[a])
 	}
 	for _, h := range m.Holds {
-		if (a == Major && h.Major || a == Minor && h.Minor) && math.Abs(h.At-z) <= 1e-6*m.Height {
+		if h.About(a) && h.Stiffness == 0 && math.Abs(h.At-z) <= 1e-6*m.Height {
 			return true
 		}
 	}

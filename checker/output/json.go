@@ -10,6 +10,7 @@ import (
 
 	"kern/checker"
 	"kern/checker/derivation"
+	"kern/checker/record"
 	"kern/checker/standard"
 	"kern/lang"
 	"kern/lang/unit"
@@ -30,6 +31,23 @@ type (
 		Diagnostics []diagnostic `json:"diagnostics"`
 		Members     []member     `json:"members"`
 		Summary     summary      `json:"summary"`
+		Recorded    *recorded    `json:"recorded,omitempty"`
+	}
+	recorded struct {
+		Blocked     bool         `json:"blocked"`
+		Differences []difference `json:"differences"`
+		Carried     []carried    `json:"carried"`
+	}
+	difference struct {
+		File    string `json:"file"`
+		Member  string `json:"member"`
+		Message string `json:"message"`
+	}
+	carried struct {
+		File    string `json:"file"`
+		Member  string `json:"member"`
+		Verdict string `json:"verdict"`
+		Because string `json:"because"`
 	}
 	position struct {
 		Line   int `json:"line"`
@@ -165,13 +183,24 @@ type (
 // Caution goes with every output.
 const Caution = "Local codes govern; a licensed engineer decides."
 
-// JSON writes a report as one JSON object.
-func JSON(w io.Writer, r *checker.Report, program string, names Names) error {
+// JSON writes a report as one JSON object. known is what a comparison with
+// recorded results came to, nil without one.
+func JSON(w io.Writer, r *checker.Report, program string, names Names, known *record.Outcome) error {
 	b := bufio.NewWriter(w)
 	e := json.NewEncoder(b)
 	e.SetEscapeHTML(false)
 	e.SetIndent("", " ")
-	if err := e.Encode(build(r, program, names)); err != nil {
+	d := build(r, program, names)
+	if known != nil {
+		d.Recorded = &recorded{Blocked: known.Blocked, Differences: []difference{}, Carried: []carried{}}
+		for _, x := range known.Differences {
+			d.Recorded.Differences = append(d.Recorded.Differences, difference{x.File, x.Name, x.Message})
+		}
+		for _, x := range known.Carried {
+			d.Recorded.Carried = append(d.Recorded.Carried, carried{x.File, x.Name, x.Verdict, x.Carried})
+		}
+	}
+	if err := e.Encode(d); err != nil {
 		return err
 	}
 	return b.Flush()

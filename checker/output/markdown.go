@@ -2,6 +2,8 @@ package output
 
 import (
 	"encoding/base64"
+	"fmt"
+	"html"
 	"strings"
 
 	"github.com/mattn/go-runewidth"
@@ -66,6 +68,17 @@ func (p *pageWriter) block(b Block) {
 		p.b.WriteString("![" + escape(b.Alt, false) + "](data:image/svg+xml;base64," + base64.StdEncoding.EncodeToString([]byte(b.SVG)) + ")\n")
 	case Table:
 		p.table(b)
+	case Fold:
+		p.gap()
+		if p.plain {
+			p.b.WriteString(clean(b.Summary, false) + ":\n")
+			return
+		}
+		p.b.WriteString("<details><summary>" + html.EscapeString(clean(b.Summary, false)) + "</summary>\n")
+	case Unfold:
+		if !p.plain {
+			p.b.WriteString("\n</details>\n")
+		}
 	}
 }
 
@@ -184,6 +197,8 @@ func (p *pageWriter) render(l Line, indent string, cell bool) string {
 		case text == "":
 		case p.plain:
 			b.WriteString(text)
+		case x.Face == Linked:
+			b.WriteString("[" + strings.ReplaceAll(escape(text, cell), "]", `\]`) + "](" + address(x.To) + ")")
 		case x.Face == Mono:
 			b.WriteString(codeSpan(text, cell))
 		case x.Face == Bold:
@@ -254,6 +269,20 @@ func codeSpan(s string, cell bool) string {
 		fence, gap = fence+"`", " "
 	}
 	return fence + gap + s + gap + fence
+}
+
+// address writes an address so that it ends where it ends.
+func address(s string) string {
+	var b strings.Builder
+	for i := 0; i < len(s); i++ {
+		switch c := s[i]; {
+		case c <= ' ' || c >= 0x7f || strings.IndexByte("<>()|\\`\"", c) >= 0:
+			fmt.Fprintf(&b, "%%%02X", c)
+		default:
+			b.WriteByte(c)
+		}
+	}
+	return b.String()
 }
 
 // guardStart keeps the first letters of a paragraph from being taken for the mark

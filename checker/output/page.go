@@ -45,6 +45,9 @@ type (
 	}
 	// Equations are the computed steps of a derivation.
 	Equations struct{ Steps []Equation }
+	// Fold begins a part that is shown when it is asked for, Unfold ends it.
+	Fold   struct{ Summary string }
+	Unfold struct{}
 )
 
 // Equation is a computed step of a derivation, in the language's own expressions:
@@ -65,6 +68,7 @@ type Line []Part
 type Part struct {
 	Face Face
 	Text string
+	To   string // the address that a Linked part leads to
 }
 
 // Face is how words look.
@@ -76,19 +80,23 @@ const (
 	Bold
 	Mono    // text of the language
 	NewLine // no words: the next line of the same paragraph
+	Linked  // words that lead to an address
 )
 
 // Words are ordinary words; nothing in them is taken for a mark.
-func Words(s string) Line { return Line{{Ordinary, s}} }
+func Words(s string) Line { return Line{{Face: Ordinary, Text: s}} }
 
 // Strong are words that stand out.
-func Strong(s string) Line { return Line{{Bold, s}} }
+func Strong(s string) Line { return Line{{Face: Bold, Text: s}} }
 
 // Code is text of the language: a symbol, a formula, a name.
-func Code(s string) Line { return Line{{Mono, s}} }
+func Code(s string) Line { return Line{{Face: Mono, Text: s}} }
+
+// Link are words that lead to an address. Plain text shows the words alone.
+func Link(s, address string) Line { return Line{{Linked, s, address}} }
 
 // Break goes on in the next line of the same paragraph.
-func Break() Line { return Line{{NewLine, ""}} }
+func Break() Line { return Line{{Face: NewLine}} }
 
 // Join puts lines one behind the other.
 func Join(lines ...Line) Line {

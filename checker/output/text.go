@@ -9,6 +9,7 @@ import (
 
 	"kern/checker"
 	"kern/checker/model"
+	"kern/checker/record"
 	"kern/checker/standard"
 	"kern/lang"
 
@@ -39,8 +40,9 @@ func (p *printer) paint(s string, a ...color.Attribute) string {
 }
 
 // Text writes a report for people: each diagnostic with the line it is about,
-// then a table of the members.
-func Text(w io.Writer, r *checker.Report, style Style, names Names) error {
+// then a table of the members. known is what a comparison with recorded results
+// came to, nil without one.
+func Text(w io.Writer, r *checker.Report, style Style, names Names, known *record.Outcome) error {
 	p := &printer{w: bufio.NewWriter(w), style: style, lines: newIndex(r.Project), names: names}
 	for i, d := range r.Diagnostics {
 		// several failing checks of one member share its line
@@ -54,7 +56,7 @@ func Text(w io.Writer, r *checker.Report, style Style, names Names) error {
 		fmt.Fprintln(p.w)
 	}
 	p.table(r)
-	p.summary(r)
+	p.summary(r, known)
 	return p.w.Flush()
 }
 
@@ -255,8 +257,32 @@ func dash(s string) string {
 	return s
 }
 
-func (p *printer) summary(r *checker.Report) {
-	s := r.Summary
+func (p *printer) summary(r *checker.Report, known *record.Outcome) {
+	fmt.Fprintln(p.w, Counts(r.Summary))
+	if known != nil {
+		for _, e := range known.Carried {
+			fmt.Fprintf(p.w, "%s %s %s: %s\n", p.paint("carried:", color.FgYellow), e.Name, e.Verdict, e.Carried)
+		}
+		for _, d := range known.Differences {
+			fmt.Fprintf(p.w, "%s %s: %s %s\n", p.paint("not as recorded:", color.FgRed, color.Bold), d.File, d.Name, d.Message)
+		}
+		switch n := len(known.Differences); {
+		case n == 0:
+			fmt.Fprintln(p.w, "all results are as recorded")
+		case n == 1:
+			fmt.Fprintln(p.w, "1 result is not as recorded; if that is meant, run kern record")
+		default:
+			fmt.Fprintf(p.w, "%d results are not as recorded; if that is meant, run kern record\n", n)
+		}
+		if n := len(known.Carried); n > 0 {
+			fmt.Fprintln(p.w, carriedCount(n))
+		}
+	}
+	fmt.Fprintln(p.w, p.paint(Caution, color.Faint))
+}
+
+// Counts says how many members there are, and how they do.
+func Counts(s checker.Summary) string {
 	var parts []string
 	count := func(n int, one, many string) {
 		if n == 1 {
@@ -280,6 +306,5 @@ func (p *printer) summary(r *checker.Report) {
 	count(s.Departures, "departure", "departures")
 	count(s.Errors, "error", "errors")
 	count(s.Warnings, "warning", "warnings")
-	fmt.Fprintln(p.w, strings.Join(parts, "; "))
-	fmt.Fprintln(p.w, p.paint(Caution, color.Faint))
+	return strings.Join(parts, "; ")
 }

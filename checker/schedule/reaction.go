@@ -70,12 +70,12 @@ func reactionsOf(r *checker.Result) reactions {
 }
 
 // governing is the combination of the check with the greatest utilisation of those
-// that depend on a combination: a slenderness, say, does not. It is false when there
-// is none.
+// that depend on a combination for ultimate limit states: a slenderness does not, and
+// a sway is of another. It is false when there is none.
 func governing(r *checker.Result) (model.Combination, bool) {
 	most, found := math.Inf(-1), model.Combination{}
 	for _, c := range r.Checks {
-		if x, ok := r.CombinationOf(c); ok && c.Utilisation > most {
+		if x, ok := r.CombinationOf(c); ok && x.Situation.Ultimate() && c.Utilisation > most {
 			most, found = c.Utilisation, x
 		}
 	}

@@ -1,6 +1,7 @@
 package sheet
 
 import (
+	"fmt"
 	"maps"
 	"slices"
 	"strings"
@@ -19,20 +20,66 @@ func checked(name string) bool {
 	return r != nil && r.Check
 }
 
-// part writes what the members of a calculation share.
-func (c *composer) part(p part) {
-	env := p.calculation.Env
-	name := relative(c.dir, p.calculation.Root)
-	c.add(output.Heading{Level: 2, Text: "Basis of " + name})
-	c.basis(env)
-	c.materials(p)
-	c.sections(p)
-	c.cases(env)
-	c.levels(env)
-	c.combinations(p)
+// bases writes what the members of the calculations share. Calculations that share
+// one basis, as those do that include the same files, have it written once.
+func (c *composer) bases() {
+	type group struct {
+		names []string
+		all   part
+		text  string // the basis as it is written, for comparison
+	}
+	var groups []*group
+	for _, p := range c.parts {
+		name, text := relative(c.dir, p.calculation.Root), fmt.Sprintf("%#v", c.shared(p))
+		i := slices.IndexFunc(groups, func(g *group) bool { return g.text == text && agree(g.all.results, p.results) })
+		if i < 0 {
+			groups = append(groups, &group{[]string{name}, part{p.calculation, slices.Clone(p.results)}, text})
+			continue
+		}
+		groups[i].names = append(groups[i].names, name)
+		groups[i].all.results = append(groups[i].all.results, p.results...)
+	}
+	for _, g := range groups {
+		c.add(output.Heading{Level: 2, Text: "Basis of " + strings.Join(g.names, ", ")})
+		shared := c.shared(g.all)
+		c.add(shared[0]...)
+		c.add(materials(g.all)...)
+		c.add(sections(g.all)...)
+		c.add(shared[1]...)
+	}
 }
 
-func (c *composer) basis(env *model.Env) {
+// shared are the blocks of a basis that do not depend on the members: those before
+// the materials, and those behind the sections.
+func (c *composer) shared(p part) [2][]output.Block {
+	env := p.calculation.Env
+	var after []output.Block
+	for _, b := range [][]output.Block{cases(env), levels(env), combinations(p)} {
+		after = append(after, b...)
+	}
+	return [2][]output.Block{basis(env), after}
+}
+
+// agree tells whether names of sections and materials mean the same to the members of
+// two calculations.
+func agree(a, b []*checker.Result) bool {
+	for _, x := range made(a) {
+		for _, y := range made(b) {
+			if x.section != nil && y.section != nil && x.section != y.section && x.section.Title() == y.section.Title() && !x.section.Same(y.section) {
+				return false
+			}
+			// stated values are known by their name alone; a value that is not known (NaN)
+			// is like no other
+			if m, n := x.material, y.material; m != nil && n != nil && m != n && m.Title() == n.Title() &&
+				(output.MaterialTitle(m) != output.MaterialTitle(n) || m.E != n.E || m.G != n.G || m.Density != n.Density || m.Grade == nil && m.Fy != n.Fy) {
+				return false
+			}
+		}
+	}
+	return true
+}
+
+func basis(env *model.Env) (out []output.Block) {
 	b := env.Basis
 	var facts Facts
 	fact := func(name, value string) { facts = append(facts, Fact{name, output.Words(value)}) }
@@ -49,6 +96,12 @@ func (c *composer) basis(env *model.Env) {
 		lengths = "those recommended for design"
 	}
 	fact("effective length factors", lengths)
+	if b.Exact {
+		fact("critical loads", "of whole members with their holds, springs and stepped forces, where a member does not say otherwise")
+	}
+	if b.Imperfect {
+		fact("sway imperfections", "to EN 1993-1-1 5.3.2, on members that can sway")
+	}
 	strengths := "by product standard and thickness"
 	if b.TableFy {
 		strengths = "EN 1993-1-1 Table 3.1"
@@ -62,18 +115,19 @@ func (c *composer) basis(env *model.Env) {
 	if b.Simple {
 		fact("amplification of moments", "1/(1 - n) for every moment diagram")
 	}
-	c.add(facts)
+	out = append(out, facts)
 	var rows [][]output.Line
 	for _, name := range slices.Sorted(maps.Keys(b.Overrides)) {
 		o := b.Overrides[name]
 		rows = append(rows, []output.Line{output.Code(name), output.Words(unit.Exact(o.Value)), output.Words(o.Because)})
 	}
 	if len(rows) > 0 {
-		c.add(output.Heading{Level: 3, Text: "Numbers that the calculation sets itself"}, output.Table{Head: []string{"number", "value", "because"}, Align: "lnl", Rows: rows})
+		out = append(out, output.Heading{Level: 3, Text: "Numbers that the calculation sets itself"}, output.Table{Head: []string{"number", "value", "because"}, Align: "lnl", Rows: rows})
 	}
 	if env.Refused != "" {
-		c.add(output.Paragraph{Text: output.Join(output.Strong("No member can be judged: "), output.Words(env.Refused+"."))})
+		out = append(out, output.Paragraph{Text: output.Join(output.Strong("No member can be judged: "), output.Words(env.Refused+"."))})
 	}
+	return out
 }
 
 // value writes a value to four digits; a dash for one that is not known.
@@ -104,7 +158,7 @@ func made(results []*checker.Result) []madeOf {
 	return out
 }
 
-func (c *composer) materials(p part) {
+func materials(p part) (out []output.Block) {
 	units := p.calculation.Env.Basis.Show
 	var rows [][]output.Line
 	var seen []string
@@ -117,9 +171,9 @@ func (c *composer) materials(p part) {
 		rows = append(rows, []output.Line{output.Words(output.MaterialTitle(m)), value(units, m.E, unit.Stress), value(units, m.G, unit.Stress), value(units, m.Density, unit.Density)})
 	}
 	if len(rows) == 0 {
-		return
+		return nil
 	}
-	c.add(output.Heading{Level: 3, Text: "Materials"}, output.Table{Head: []string{"material", "E", "G", "density"}, Align: "lnnn", Rows: rows})
+	out = append(out, output.Heading{Level: 3, Text: "Materials"}, output.Table{Head: []string{"material", "E", "G", "density"}, Align: "lnnn", Rows: rows})
 	seen, rows = nil, nil
 	for _, x := range made(p.results) {
 		m, s := x.material, x.section
@@ -135,11 +189,12 @@ func (c *composer) materials(p part) {
 		rows = append(rows, []output.Line{output.Words(m.Title()), output.Words(s.Title()), value(units, s.Thickness, unit.Length), value(units, fy, unit.Stress), value(units, fu, unit.Stress), output.Words(source)})
 	}
 	if len(rows) > 0 {
-		c.add(output.Table{Head: []string{"strength of", "in section", "thickest part", "f_y", "f_u", "from"}, Align: "llnnnl", Rows: rows})
+		out = append(out, output.Table{Head: []string{"strength of", "in section", "thickest part", "f_y", "f_u", "from"}, Align: "llnnnl", Rows: rows})
 	}
+	return out
 }
 
-func (c *composer) sections(p part) {
+func sections(p part) (out []output.Block) {
 	units := p.calculation.Env.Basis.Show
 	var list []*model.Section
 	density := map[string]float64{}
@@ -157,9 +212,9 @@ func (c *composer) sections(p part) {
 		}
 	}
 	if len(list) == 0 {
-		return
+		return nil
 	}
-	c.add(output.Heading{Level: 3, Text: "Sections"})
+	out = append(out, output.Heading{Level: 3, Text: "Sections"})
 	var pictures Figures
 	var general, axes [][]output.Line
 	var assumed []output.Line
@@ -185,16 +240,17 @@ func (c *composer) sections(p part) {
 		}
 	}
 	if len(pictures) > 0 {
-		c.add(pictures)
+		out = append(out, pictures)
 	}
-	c.add(output.Table{Head: []string{"section", "area A", "mass", "I_t", "I_w"}, Align: "lnnnn", Rows: general},
+	out = append(out, output.Table{Head: []string{"section", "area A", "mass", "I_t", "I_w"}, Align: "lnnnn", Rows: general},
 		output.Table{Head: []string{"section", "axis", "I", "i", "W elastic", "W plastic", "A_v"}, Align: "llnnnnn", Rows: axes})
 	if len(assumed) > 0 {
-		c.add(output.List{Items: assumed})
+		out = append(out, output.List{Items: assumed})
 	}
+	return out
 }
 
-func (c *composer) cases(env *model.Env) {
+func cases(env *model.Env) (out []output.Block) {
 	var rows [][]output.Line
 	for _, x := range env.Cases {
 		kind, category := x.Kind.String(), x.Given
@@ -210,7 +266,7 @@ func (c *composer) cases(env *model.Env) {
 		rows = append(rows, append(row, output.Words(x.Because)))
 	}
 	if len(rows) > 0 {
-		c.add(output.Heading{Level: 3, Text: "Load cases"}, output.Table{Head: []string{"case", "kind", "category", "psi_0", "psi_1", "psi_2", "because"}, Align: "lllnnnl", Rows: rows})
+		out = append(out, output.Heading{Level: 3, Text: "Load cases"}, lean(output.Table{Head: []string{"case", "kind", "category", "psi_0", "psi_1", "psi_2", "because"}, Align: "lllnnnl", Rows: rows}))
 	}
 	var items []output.Line
 	for _, g := range env.Exclusive {
@@ -221,12 +277,22 @@ func (c *composer) cases(env *model.Env) {
 		items = append(items, output.Words("of "+strings.Join(list, ", ")+" one acts at a time"))
 	}
 	if len(items) > 0 {
-		c.add(output.List{Items: items})
+		out = append(out, output.List{Items: items})
 	}
+	return out
 }
 
-func (c *composer) levels(env *model.Env) {
+func levels(env *model.Env) (out []output.Block) {
 	units := env.Basis.Show
+	// nobody gives the load of a floor in the unit of stresses
+	pressure := "kN/m2"
+	if force := units.For(unit.Force).Symbol; force == "kip" || force == "lbf" {
+		pressure = "psf"
+	}
+	shown, err := unit.Parse(pressure)
+	if err != nil {
+		return nil // both are units of the language
+	}
 	var rows [][]output.Line
 	for _, l := range env.Levels {
 		if l.Bad {
@@ -234,17 +300,18 @@ func (c *composer) levels(env *model.Env) {
 		}
 		var loads []string
 		for _, p := range l.Pressures {
-			loads = append(loads, env.Cases[p.Case].Name+" "+unit.Short(p.Value/1000, 4)+" kN/m2")
+			loads = append(loads, env.Cases[p.Case].Name+" "+unit.Short(p.Value/shown.Factor, 4)+" "+pressure)
 		}
 		rows = append(rows, []output.Line{output.Words(l.Name), output.Words(units.Show(l.At, unit.Length, 5)), output.Words(strings.Join(loads, "; "))})
 	}
 	if len(rows) > 0 {
-		c.add(output.Heading{Level: 3, Text: "Levels"}, output.Table{Head: []string{"level", "height", "loads on its floor"}, Align: "lnl", Rows: rows})
+		out = append(out, output.Heading{Level: 3, Text: "Levels"}, lean(output.Table{Head: []string{"level", "height", "loads on its floor"}, Align: "lnl", Rows: rows}))
 	}
+	return out
 }
 
 // combinations lists those that members were checked under.
-func (c *composer) combinations(p part) {
+func combinations(p part) (out []output.Block) {
 	var list []model.Combination
 	for _, r := range p.results {
 		if len(r.Combinations()) > 0 && r.Member.Imported == nil {
@@ -261,15 +328,16 @@ func (c *composer) combinations(p part) {
 		rows = append(rows, []output.Line{output.Words(name), output.Words(x.Situation.String()), output.Words(x.Source)})
 	}
 	if len(rows) > 0 {
-		c.add(output.Heading{Level: 3, Text: "Combinations"}, output.Table{Head: []string{"combination", "situation", "from"}, Align: "lll", Rows: rows})
+		out = append(out, output.Heading{Level: 3, Text: "Combinations"}, output.Table{Head: []string{"combination", "situation", "from"}, Align: "lll", Rows: rows})
 	}
 	if len(p.calculation.Env.Assumed) > 0 {
 		var items []output.Line
 		for _, a := range p.calculation.Env.Assumed {
 			items = append(items, output.Words(a))
 		}
-		c.add(output.List{Items: items})
+		out = append(out, output.List{Items: items})
 	}
+	return out
 }
 
 // forces writes what the combinations come to in a member: of all of them, or of
@@ -311,4 +379,21 @@ func (c *composer) forces(r *checker.Result) []output.Block {
 	}
 	return []output.Block{output.Heading{Level: 4, Text: title}, output.Table{Head: head, Align: align, Rows: rows},
 		output.Paragraph{Text: output.Words("Compression is positive. Moments are the greatest of first order, as they act on the straight member.")}}
+}
+
+// lean leaves out the columns of a table that hold nothing, the first apart.
+func lean(t output.Table) output.Table {
+	out := output.Table{Rows: make([][]output.Line, len(t.Rows))}
+	for i, head := range t.Head {
+		if i > 0 && !slices.ContainsFunc(t.Rows, func(row []output.Line) bool {
+			return i < len(row) && row[i].String() != "" && row[i].String() != "–"
+		}) {
+			continue
+		}
+		out.Head, out.Align = append(out.Head, head), out.Align+t.Align[i:i+1]
+		for r, row := range t.Rows {
+			out.Rows[r] = append(out.Rows[r], row[i])
+		}
+	}
+	return out
 }

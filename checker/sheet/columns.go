@@ -78,11 +78,7 @@ func (g *grid) share(width float64) bool {
 			g.columns[i].width = g.columns[i].most + spare
 		}
 	case least <= width:
-		by := (width - least) / (most - least)
-		for i := range g.columns {
-			c := &g.columns[i]
-			c.width = c.least + (c.most-c.least)*by
-		}
+		g.fill(width)
 	default:
 		for i := range g.columns {
 			g.columns[i].width = g.columns[i].least * width / least
@@ -90,6 +86,47 @@ func (g *grid) share(width float64) bool {
 		return false
 	}
 	return true
+}
+
+// fill gives narrow columns all that they ask for and lets the wide ones share the
+// rest, none less than it needs.
+func (g *grid) fill(width float64) {
+	var wide []int
+	for i := range g.columns {
+		g.columns[i].width = 0
+		wide = append(wide, i)
+	}
+	for more := true; more; {
+		more = false
+		for k, i := range wide {
+			c := &g.columns[i]
+			least := 0.0 // of the others
+			for _, j := range wide {
+				if j != i {
+					least += g.columns[j].least
+				}
+			}
+			if c.most <= width/float64(len(wide)) && least <= width-c.most {
+				c.width = c.most
+				width -= c.most
+				wide = append(wide[:k:k], wide[k+1:]...)
+				more = true
+				break
+			}
+		}
+	}
+	least, most := 0.0, 0.0
+	for _, i := range wide {
+		least, most = least+g.columns[i].least, most+g.columns[i].most
+	}
+	by := 0.0
+	if most > least {
+		by = min((width-least)/(most-least), 1)
+	}
+	for _, i := range wide {
+		c := &g.columns[i]
+		c.width = c.least + (c.most-c.least)*by
+	}
 }
 
 func (f *flow) table(t output.Table) {

@@ -52,21 +52,28 @@ func (c *composer) compose() {
 	c.sheet.contentsAt = len(c.sheet.Blocks)
 	c.overview()
 	c.findings()
-	for _, p := range c.parts {
-		c.part(p)
-	}
+	c.bases()
 	c.members()
 	c.files()
 }
 
-// facts puts the project's words together: those of the first part that has any.
+// facts puts the words about the project together. Where calculations say different
+// things, all stand there: nothing is picked.
 func (c *composer) facts() model.Project {
-	for _, p := range c.parts {
-		if x := p.calculation.Env.Project; x.Stated {
-			return x
+	var out model.Project
+	join := func(to *string, s string) {
+		if s != "" && !contains(strings.Split(*to, "; "), s) {
+			*to = strings.TrimPrefix(*to+"; "+s, "; ")
 		}
 	}
-	return model.Project{}
+	for _, p := range c.parts {
+		x := p.calculation.Env.Project
+		for _, f := range []struct{ to, from *string }{{&out.Name, &x.Name}, {&out.Number, &x.Number}, {&out.PreparedBy, &x.PreparedBy},
+			{&out.CheckedBy, &x.CheckedBy}, {&out.Revision, &x.Revision}, {&out.Date, &x.Date}} {
+			join(f.to, *f.from)
+		}
+	}
+	return out
 }
 
 // head composes title and running lines.
@@ -259,6 +266,69 @@ func (c *composer) overview() {
 			output.Words(r.Governing), output.Words(r.Combination)})
 	}
 	c.add(output.Table{Head: []string{"member", "title", "section", "verdict", "utilisation", "governing check", "under"}, Align: "llllnll", Rows: rows})
+	c.open()
+}
+
+// open lists what is left to a person: what was not checked or could not be, and what
+// members depart from. What several members share stands once.
+func (c *composer) open() {
+	var hand, departures gathered
+	for _, r := range c.chosen {
+		for _, x := range r.Coverage {
+			if x.State == standard.NotCovered {
+				hand.add(r.Name, x.Rule+": "+x.Why)
+			}
+		}
+		for _, x := range r.Checks {
+			if x.Verdict == standard.Undecided && x.Why != "" {
+				hand.add(r.Name, x.Rule+": "+x.Why)
+			}
+		}
+		for _, why := range r.Missing {
+			hand.add(r.Name, why)
+		}
+		for _, d := range r.Departures {
+			departures.add(r.Name, d.Rule+", because \""+d.Because+"\"")
+		}
+	}
+	if items := hand.items(": ", ": "); len(items) > 0 {
+		c.add(output.Heading{Level: 3, Text: "Left to be checked by hand"}, output.List{Items: items})
+	}
+	if items := departures.items(" departs from ", " depart from "); len(items) > 0 {
+		c.add(output.Heading{Level: 3, Text: "Departures"}, output.List{Items: items})
+	}
+}
+
+// gathered are texts with the members that they are said of.
+type gathered struct {
+	texts []string
+	names [][]string
+}
+
+func (g *gathered) add(name, text string) {
+	for i, t := range g.texts {
+		if t == text {
+			if !contains(g.names[i], name) {
+				g.names[i] = append(g.names[i], name)
+			}
+			return
+		}
+	}
+	g.texts, g.names = append(g.texts, text), append(g.names, []string{name})
+}
+
+// items writes the texts behind their members, with the words between for one
+// member and for several.
+func (g *gathered) items(one, several string) []output.Line {
+	var out []output.Line
+	for i, t := range g.texts {
+		between := one
+		if len(g.names[i]) > 1 {
+			between = several
+		}
+		out = append(out, output.Join(output.Strong(strings.Join(g.names[i], ", ")), output.Words(between+t)))
+	}
+	return out
 }
 
 // findings lists what was reported about the files themselves, failing checks

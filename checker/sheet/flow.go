@@ -3,7 +3,6 @@ package sheet
 import (
 	"fmt"
 
-	"kern/checker/drawing"
 	"kern/checker/output"
 )
 
@@ -363,5 +362,3 @@ func (f *flow) contents(list []placed) {
 		f.y += 1.5
 	}
 }
-
-var _ *drawing.Scene

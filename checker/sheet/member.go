@@ -68,6 +68,7 @@ func (c *composer) member(group []*checker.Result) []output.Block {
 		assumptions(p, r)
 		output.Departures(p, r)
 		output.Notes(p, r)
+		output.Holds(p, r)
 	})
 	return out
 }

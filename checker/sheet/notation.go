@@ -2,6 +2,7 @@ package sheet
 
 import (
 	"regexp"
+	"slices"
 	"strings"
 
 	"kern/lang"
@@ -77,7 +78,7 @@ func binary(text string, e *lang.Expr) mark {
 	case '/':
 		return mark{kind: fractionMark, parts: []mark{notation(text, bare(e.Args[0])), notation(text, bare(e.Args[1]))}}
 	case '^':
-		base, above := notation(text, e.Args[0]), notation(text, bare(e.Args[1]))
+		base, above := notation(text, e.Args[0]), level(notation(text, bare(e.Args[1])))
 		if base.kind == scriptMark && base.parts[2].kind == emptyMark {
 			return mark{kind: scriptMark, parts: []mark{base.parts[0], base.parts[1], above}}
 		}
@@ -85,6 +86,21 @@ func binary(text string, e *lang.Expr) mark {
 	}
 	sign := map[byte]string{'+': "+", '-': "−", '*': "·"}[e.Op]
 	return row(notation(text, e.Args[0]), mark{kind: operatorMark, text: sign}, notation(text, e.Args[1]))
+}
+
+// level sets a fraction on one line, for an exponent: a bar would make it too small to
+// read.
+func level(m mark) mark {
+	if m.kind != fractionMark {
+		return m
+	}
+	part := func(p mark) mark {
+		if p.kind == fractionMark || p.kind == rowMark && slices.ContainsFunc(p.parts, func(x mark) bool { return x.kind == operatorMark }) {
+			return mark{kind: fenceMark, text: "()", parts: []mark{p}}
+		}
+		return p
+	}
+	return row(part(m.parts[0]), mark{kind: operatorMark, text: "/"}, part(m.parts[1]))
 }
 
 // bare takes the brackets off where a bar, a root or a raised line groups.

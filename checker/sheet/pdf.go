@@ -190,7 +190,7 @@ func (p *pdfWriter) op(o op) {
 	case linkOp:
 		p.doc.Link(o.x, o.y, o.w, o.h, p.links[o.target])
 	case sceneOp:
-		s := o.scene.(*drawing.Scene)
+		s := o.scene
 		p.read(strings.TrimSuffix(s.Title+". "+s.Description, ". "), "Figure")
 		s.Paint(&scenePainter{p, o.x, o.y, o.w * point})
 		p.end()

@@ -81,6 +81,8 @@ func formulaText(n *html.Node) string {
 		switch s := n.FirstChild.Data; s {
 		case "·":
 			return " * "
+		case "/":
+			return " / "
 		case "−":
 			if attribute(n, "form") == "prefix" {
 				return "-"
@@ -94,6 +96,9 @@ func formulaText(n *html.Node) string {
 			return s
 		}
 	case "mfrac":
+		if below := formulaText(kids[1]); below == "Omega" { // an allowable strength: one symbol
+			return formulaText(kids[0]) + "_over_Omega"
+		}
 		return "((" + formulaText(kids[0]) + ") / (" + formulaText(kids[1]) + "))"
 	case "msqrt":
 		return "sqrt(" + rowText(kids) + ")"
@@ -118,6 +123,10 @@ func rowText(kids []*html.Node) string {
 	var b strings.Builder
 	for i, k := range kids {
 		switch {
+		case k.Data == "mspace" && i > 0 && kids[i-1].Data == "mi" && said(kids[i-1]) == "φ": // a factor before a strength: one symbol
+			b.WriteByte('_')
+		case k.Data == "msub" && i > 1 && kids[i-1].Data == "mspace" && kids[i-2].Data == "mi" && said(kids[i-2]) == "φ":
+			b.WriteString(formulaText(k))
 		case k.Data == "mspace":
 			b.WriteByte(' ')
 		case i > 0 && kids[i-1].Data == "mspace":

@@ -1,6 +1,10 @@
 package sheet
 
-import "math"
+import (
+	"math"
+
+	"kern/checker/drawing"
+)
 
 // box is something set on a line: its size around the base line, and what is drawn
 // in it, from its left end on the base line, y down. Lengths are points.
@@ -21,7 +25,7 @@ type op struct {
 	points []float64 // of a stroke: x, y, …; a cubic curve has four points
 	cubic  bool
 	target int // of a link: the heading that it leads to
-	scene  any
+	scene  *drawing.Scene
 }
 
 type opKind uint8
@@ -87,6 +91,9 @@ func set(m mark, size float64, heavy bool, inner int) box {
 		space, down := 0.22*size, 0.0
 		if m.text == "·" { // it stands high in this font
 			space, down = 0.14*size, 0.09*size
+		}
+		if m.text == "/" {
+			space = 0.06 * size
 		}
 		return box{width: b.width + 2*space, above: b.above, below: b.below, ops: shifted(b.ops, space, down)}
 	case commaMark:

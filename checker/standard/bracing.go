@@ -2,6 +2,7 @@ package standard
 
 import (
 	"math"
+	"slices"
 
 	"kern/checker/action"
 	"kern/checker/model"
@@ -44,12 +45,29 @@ func (f *Frame) Holds() []HoldDemand {
 		return f.lift.whole.Holds()
 	}
 	if f.needs == nil {
-		f.needs = f.holdDemands()
+		f.needs = f.holdDemands(false)
 	}
 	return f.needs
 }
 
-func (f *Frame) holdDemands() []HoldDemand {
+// statedHolds are those of Holds that a check of stated stiffnesses reads; other
+// holds may be without what they need.
+func (f *Frame) statedHolds() []HoldDemand {
+	switch {
+	case f.lift != nil:
+		return f.lift.whole.statedHolds()
+	case f.needs != nil:
+		return f.needs
+	}
+	if f.stated == nil {
+		f.stated = f.holdDemands(true)
+	}
+	return f.stated
+}
+
+// holdDemands finds what the holds need; with stated only what is needed to judge
+// those that state a stiffness, which saves most of the work.
+func (f *Frame) holdDemands(stated bool) []HoldDemand {
 	var out []HoldDemand
 	for i, h := range f.Member.Holds {
 		for _, a := range []model.Axis{model.Major, model.Minor} {
@@ -65,8 +83,8 @@ func (f *Frame) holdDemands() []HoldDemand {
 				here = append(here, &out[i])
 			}
 		}
-		if len(here) > 0 {
-			f.demands(a, here)
+		if len(here) > 0 && (!stated || slices.ContainsFunc(here, func(h *HoldDemand) bool { return h.Stated > 0 })) {
+			f.demands(a, here, stated)
 		}
 	}
 	pressed := []HoldDemand{}
@@ -79,7 +97,7 @@ func (f *Frame) holdDemands() []HoldDemand {
 }
 
 // demands works out what the holds about an axis need.
-func (f *Frame) demands(a model.Axis, holds []*HoldDemand) {
+func (f *Frame) demands(a model.Axis, holds []*HoldDemand, stated bool) {
 	m := f.Member
 	cuts := []float64{0}
 	for _, h := range holds {
@@ -107,7 +125,10 @@ func (f *Frame) demands(a model.Axis, holds []*HoldDemand) {
 	}
 	how := winter
 	if !both {
-		stiffness, how = 2*f.enough(a), byHolds // of the rigid ones
+		stiffness, how = math.NaN(), byHolds // of the rigid ones
+		if !stated {
+			stiffness = 2 * f.enough(a)
+		}
 	}
 	scale := math.NaN()
 	for i, h := range holds {

@@ -88,7 +88,7 @@ func (x *Common) holds(f *Frame, s *derivation.Sheet, out *Outcome, group func(r
 	group(rule)
 	var worst HoldDemand
 	best := math.Inf(-1)
-	for _, d := range f.Holds() {
+	for _, d := range f.statedHolds() {
 		if u := d.Stiffness / d.Stated; d.Stated > 0 && !(u <= best) && !math.IsNaN(best) {
 			best, worst = u, d
 		}

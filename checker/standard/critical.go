@@ -65,15 +65,30 @@ func (f *Frame) spans(axis int) []action.Stretch {
 }
 
 // weightParts is how many parts of the whole height a member is cut into where
-// its own weight makes the axial force grow all along.
-const weightParts = 12
+// its own weight makes the axial force grow all along, for a critical load within
+// 0.03 %: few where the weight is next to nothing beside the greatest force.
+func weightParts(grows, most float64) float64 {
+	if math.Abs(grows) < 0.02*most {
+		return 6
+	}
+	return 40
+}
 
 // Bar is the whole member about an axis under a combination, on its ends, holds
 // and springs: what its critical load and its buckled shape are found from.
-func (f *Frame) Bar(axis, combination int) *action.Bar {
+func (f *Frame) Bar(axis, combination int) *action.Bar { return f.bar(axis, combination, nil) }
+
+// bar is Bar with nodes at more heights.
+func (f *Frame) bar(axis, combination int, more []float64) *action.Bar {
 	m, a := f.Member, model.Axis(axis)
-	cuts := f.Heights()
-	holds := m.RigidHolds(a)
+	cuts := f.cuts
+	if len(more) > 0 {
+		cuts = action.Merge(append(append([]float64(nil), cuts...), more...), m.Height)
+	}
+	holds, most := m.RigidHolds(a), 0.0
+	if combination >= 0 {
+		most = math.Max(f.Compression(combination, 0, m.Height), f.Tension(combination))
+	}
 	b := &action.Bar{Base: m.Base[a], Top: m.Top[a], Nodes: []float64{0}, Held: []bool{false}}
 	for i := range len(cuts) - 1 {
 		n := 1
@@ -82,7 +97,7 @@ func (f *Frame) Bar(axis, combination int) *action.Bar {
 			bottom, top = f.Between(combination, cuts[i], cuts[i+1])
 		}
 		if bottom != top {
-			n = 1 + int(weightParts*(cuts[i+1]-cuts[i])/m.Height)
+			n = 1 + int(weightParts((bottom-top)*m.Height/(cuts[i+1]-cuts[i]), most)*(cuts[i+1]-cuts[i])/m.Height)
 		}
 		for j := range n {
 			t := (float64(j) + 1) / float64(n)
@@ -161,6 +176,36 @@ func (f *Frame) longest(axis int) {
 		}
 		f.Stretches[axis][i].K = k
 	}
+}
+
+// SecondOrder gives the bending moments of second order of the whole member about
+// an axis under a combination with all its loads times a factor, from the base up.
+// It is false at and beyond the critical load, and where the loads are not known
+// one by one: for forces from a table and nominal moments.
+func (f *Frame) SecondOrder(axis, combination int, factor float64) ([]action.Curve, bool) {
+	if f.lift != nil || f.Member.Imported != nil || f.Member.Nominal {
+		return nil, false // of one lift the combination is another one
+	}
+	var loads []action.Push
+	var at []float64
+	for k, share := range f.Combinations[combination].Factors {
+		if share == 0 || k >= len(f.pushes[axis]) {
+			continue
+		}
+		for _, p := range f.pushes[axis][k] {
+			p.Force, p.Moment, p.Line = p.Force*share*factor, p.Moment*share*factor, p.Line*share*factor
+			loads = append(loads, p)
+			at = append(at, p.From)
+			if p.Line != 0 {
+				at = append(at, p.To)
+			}
+		}
+	}
+	bar := f.bar(axis, combination, at)
+	for i := range bar.Force {
+		bar.Force[i] *= factor
+	}
+	return bar.SecondOrder(loads)
 }
 
 // partFactors are the load factors that the frame of a lift counts with under all

@@ -49,14 +49,16 @@ type Frame struct {
 	slope       [][]float64 // [combination][segment] loss of compression per length, of imported forces alone
 	beams       [2][][]action.Piece
 	beamOK      [2]bool
-	loadFactor  [2][]float64 // [axis][combination] load factor at which the whole member buckles, where Exact
-	sprung      [2]bool      // a spring leaves effective lengths without an answer
+	pushes      [2][][]action.Push // [axis][case] what acts across, with the forces of imperfections behind
+	loadFactor  [2][]float64       // [axis][combination] load factor at which the whole member buckles, where Exact
+	sprung      [2]bool            // a spring leaves effective lengths without an answer
 
 	parts  []model.Lift // neighbouring lifts of one section and material taken as one
 	twists []Segment    // between points held against twist
 	floors []floors     // [case][segment] what floors bring, for reductions; nil for none
 	lift   *liftView    // of a frame of one lift
 	needs  []HoldDemand // what Holds found, nil before
+	stated []HoldDemand // what statedHolds found, nil before
 }
 
 // Segment is a part of the height between two points that are held, m.
@@ -89,7 +91,7 @@ func (f *Frame) split() {
 		}
 		f.Stretches[axis], f.Stands[axis] = action.Stretches(m.Base[axis], m.Top[axis], holds, m.Height, f.Env.Basis.Recommended)
 		if j := m.Joints[axis]; j != nil {
-			f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: j.Factor(), Joints: true}}
+			f.Stretches[axis] = []action.Stretch{{From: 0, To: m.Height, Base: m.Base[axis], Top: m.Top[axis], K: j.Factor(), Joints: true, Sway: j.Sway}}
 			f.Stands[axis] = true
 		}
 		if f.Env.Basis.Direct && f.Stands[axis] {
@@ -394,6 +396,7 @@ func (f *Frame) moments() {
 		if f.Imperfect() {
 			loadings = append(loadings, f.notional(axis)...)
 		}
+		f.pushes[axis] = loadings
 		pieces, err := beam.Solve(loadings)
 		if m.Nominal {
 			for c := range min(len(pieces), len(f.Env.Cases)) {
@@ -475,6 +478,9 @@ func (f *Frame) Assumptions() []string {
 		}
 	}
 	if m.Imported != nil {
+		if m.Reduction.Kind != model.NoReduction {
+			out = append(out, "forces of a table are not reduced, whatever the calculation says of imposed loads")
+		}
 		out = append(out, importedAssumptions(m.Imported)...)
 		return append(out, f.swayAssumptions()...)
 	}

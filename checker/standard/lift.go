@@ -210,7 +210,7 @@ func (f *Frame) within(axis int, s action.Stretch, part, combination int) (actio
 	}
 	// Interaction with bending is known for uniform members: there a lift gets no
 	// help from a stiffer one. A stated factor is never made smaller either.
-	if s.Overridden || f.Bends[0] || f.Bends[1] {
+	if s.Overridden || s.Joints || s.Direct || f.Bends[0] || f.Bends[1] {
 		s.K = max(s.K, stated)
 	}
 	s.Stepped = true

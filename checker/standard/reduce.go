@@ -235,7 +235,7 @@ func (f *Frame) lengths(axis int, z float64) (below, above [2]float64) {
 	eps := 1e-9 * m.Height
 	below, above = [2]float64{0, z}, [2]float64{z, m.Height}
 	for _, h := range m.Holds {
-		if (axis == 0 && h.Major || axis == 1 && h.Minor) && math.Abs(h.At-z) > eps {
+		if h.About(model.Axis(axis)) && h.Stiffness == 0 && math.Abs(h.At-z) > eps {
 			if h.At < z {
 				below[0] = max(below[0], h.At)
 			} else {

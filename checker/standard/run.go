@@ -62,7 +62,7 @@ type run struct {
 func (r *lifts) lift(i int) {
 	f := r.frame
 	name := f.parts[i].Name()
-	if f.Alone(i) {
+	if f.Alone(i) || len(f.Combinations) == 0 {
 		out := r.standard.Check(f.Part(i, -1), nil)
 		r.add(out, i, -1, true)
 		r.out.Lifts, r.main = append(r.out.Lifts, LiftOutcome{name, out}), append(r.main, -1)

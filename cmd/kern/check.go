@@ -1,14 +1,18 @@
 package main
 
 import (
+	"errors"
 	"fmt"
 	"io"
 	"os"
+	"slices"
+	"strings"
 	"sync"
 	"time"
 
 	"kern/checker"
 	"kern/checker/output"
+	"kern/checker/record"
 	"kern/lang"
 
 	"github.com/schollz/progressbar/v3"
@@ -16,43 +20,80 @@ import (
 	"golang.org/x/term"
 )
 
+// forms are the forms of a report.
+var forms = []string{"text", "json", "sarif", "junit", "github"}
+
 func checkCommand() *cobra.Command {
-	format := "text"
+	format, recorded, tolerance := "text", false, -1.0
 	c := &cobra.Command{
 		Use:   "check [PATH…]",
 		Short: "Check every member of the calculations",
 		Long: "check reads the calculations (files, or folders walked for *.kern; the working\n" +
 			"directory without a path) and checks every member.\n\n" +
+			"With --recorded the results are held against those that kern record has written\n" +
+			"(" + record.FileName + " beside the calculations): a difference is an error, and known\n" +
+			"failures that the record carries do not block.\n\n" +
 			"Exit status: 0 every member passes and no file has an error; 1 a member fails or is\n" +
-			"undecided, or a file has an error; 2 the command itself could not run.",
-		Example: "  kern check\n  kern check frame/ --output json",
+			"undecided, or a file has an error; 2 the command itself could not run. With\n" +
+			"--recorded: 0 when nothing but carried failures is wrong and all is as recorded.",
+		Example: "  kern check\n  kern check frame/ --output json\n  kern check --recorded --output github",
 		RunE: func(c *cobra.Command, paths []string) error {
-			if format != "text" && format != "json" {
-				return fmt.Errorf("--output is text or json, not '%s'", format)
+			if !slices.Contains(forms, format) {
+				return fmt.Errorf("--output is %s, not '%s'", lang.OrList(forms), format)
+			}
+			if c.Flags().Changed("tolerance") && (!recorded || !(tolerance >= 0 && tolerance <= 0.1)) {
+				return errors.New("--tolerance is a number from 0 to 0.1 and goes with --recorded")
 			}
 			w, err := openWorkspace(paths)
 			if err != nil {
 				return err
 			}
 			report := w.check(os.Stderr)
-			out := c.OutOrStdout()
-			if format == "json" {
-				err = output.JSON(out, report, program(), w.show)
-			} else {
-				err = output.Text(out, report, style(out), w.show)
+			var known *record.Outcome
+			names := w.show
+			if recorded {
+				shelf, err := w.shelf(paths)
+				if err != nil {
+					return err
+				}
+				r, err := shelf.read()
+				if err != nil {
+					return err
+				}
+				names = shelf.name
+				known = record.Compare(report, r, tolerance, shelf.name)
 			}
-			if err != nil {
+			if err := printReport(c.OutOrStdout(), format, w, report, known, names); err != nil {
 				return err
 			}
-			if report.Summary.Failed() {
+			if known == nil && report.Summary.Failed() || known != nil && known.Blocked {
 				return errWrong
 			}
 			return nil
 		},
 	}
-	c.Flags().StringVarP(&format, "output", "o", format, "form of the report: text or json")
-	completeWords(c, "output", "text", "json")
+	c.Flags().StringVarP(&format, "output", "o", format, "form of the report: "+strings.Join(forms, ", "))
+	c.Flags().BoolVar(&recorded, "recorded", false, "hold the results against the recorded ones")
+	c.Flags().Float64Var(&tolerance, "tolerance", -1, "by how much a utilisation may differ from the recorded one; the record's own without it")
+	completeWords(c, "output", forms...)
 	return c
+}
+
+// printReport writes a report in one of the forms. recorded turns names of files
+// into those of the record.
+func printReport(out io.Writer, form string, w *workspace, r *checker.Report, known *record.Outcome, recorded output.Names) error {
+	whole := func(name string) string { return name } // from the checkout, as build servers count
+	switch form {
+	case "json":
+		return output.JSON(out, r, program(), w.show, known)
+	case "sarif":
+		return output.SARIF(out, r, program(), known, recorded)
+	case "junit":
+		return output.JUnit(out, r, whole, known, recorded)
+	case "github":
+		return output.Annotations(out, r, known, recorded)
+	}
+	return output.Text(out, r, style(out), w.show, known)
 }
 
 // completeWords offers the values of a flag in shell completion.

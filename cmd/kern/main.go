@@ -47,6 +47,8 @@ func root() *cobra.Command {
 	c.SetVersionTemplate("kern {{.Version}}\n")
 	c.AddCommand(
 		checkCommand(),
+		recordCommand(),
+		watchCommand(),
 		sheetCommand(),
 		scheduleCommand(),
 		sizeCommand(),
@@ -55,6 +57,7 @@ func root() *cobra.Command {
 		catalogueCommand(),
 		chartCommand(),
 		lspCommand(),
+		reviewCommand(),
 		versionCommand(),
 	)
 	return c

@@ -82,6 +82,12 @@ func (f *Folder) ignored(dir string) []gitignore.Pattern {
 	if err != nil {
 		return nil
 	}
+	return Ignored(text, dir)
+}
+
+// Ignored reads the text of the ignore file of a folder, "." or "" for the
+// outermost.
+func Ignored(text, dir string) []gitignore.Pattern {
 	var domain []string
 	if dir != "." && dir != "" {
 		domain = strings.Split(dir, "/")

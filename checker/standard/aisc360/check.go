@@ -115,6 +115,7 @@ func (c *calc) run() {
 	c.s.Recording(c.record)
 	c.given()
 	c.loads()
+	c.pair()
 	c.local()
 	c.tension()
 	c.compression()

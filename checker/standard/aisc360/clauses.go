@@ -44,7 +44,8 @@ var Clauses = append(append([]Clause{
 	{"E4(b), (c)", "Flexural-torsional buckling", "checked", "flexural-torsional-buckling"},
 	{"E4(d) to (f)", "Lateral bracing off the shear centre", "not covered", "by hand: holds are taken at the shear centre"},
 	{"E5", "Single angles", "checked", "flexural-buckling-minor where the member says connected by one leg; else as loaded in its centroid"},
-	{"E6", "Built-up members", "not covered", "by hand: the language has no members of several shapes"},
+	{"E6.1, E6.2(a)", "Pairs of angles", "checked", "the slenderness between connectors in flexural-buckling-minor or -major and flexural-torsional-buckling; connector-spacing"},
+	{"E6.2(b) to (e)", "Built-up members otherwise", "not covered", "by hand: the connectors themselves, lacing, cover plates, and members of other shapes"},
 	{"E7", "Slender elements", "checked", "local-buckling, and the strengths with the effective area"},
 	{"E7.2", "Round HSS with slender walls", "checked", "up to D/t = 0.45 E/F_y, undecided beyond"},
 }, clausesOfBending...), clausesOfAppendices...)

@@ -80,6 +80,7 @@ func (c *calc) compression() {
 		c.flexural(1)
 	}
 	c.torsional()
+	c.spacing()
 	c.group("")
 	source := ""
 	if c.s.Recorded() {
@@ -189,7 +190,11 @@ func (c *calc) elasticStress(a int, s action.Stretch) float64 {
 		c.joints(a)
 	}
 	c.do(x.doLc)
-	c.do(x.doSlender)
+	if a == c.pairAxisOf() {
+		c.pairSlenderness(a)
+	} else {
+		c.do(x.doSlender)
+	}
 	fe := c.do(x.doFe)
 	c.do(x.doPe)
 	return fe

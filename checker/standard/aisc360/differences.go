@@ -11,6 +11,7 @@ var Differences = []Difference{
 	{"E4(d) to (f)", "not in the text (commentary)", "buckling about an axis that lateral bracing off the shear centre enforces", "certain", "not covered in either edition: holds are at the shear centre"},
 	{"Table D3.1", "cases for HSS with other formulas", "new formulas for slotted HSS and for side plates", "certain", "the factor U is stated in both editions"},
 	{"F6.2, slender flanges", "F_cr = 0.69 E/(b/t)^2", "F_cr = 0.70 E/(b/t)^2", "fairly certain", "each edition has its number"},
+	{"F7.2(b), F7.3(b)", "(3.57 b/t sqrt(F_y/E) - 4.0) and (0.305 h/t sqrt(F_y/E) - 0.738), for boxes as well", "between lambda_p and lambda_r of Table B4.1b, whose lambda_r of box flanges is 1.49 sqrt(E/F_y)", "fairly certain", "each edition has its own; HSS differ in the rounding alone"},
 	{"App. 6.2", "the same equations for panel and point bracing", "the same", "fairly certain", "one set of equations"},
 	{"C2.2b, C2.3, App. 7, App. 8", "the same equations", "the same", "certain", "one set of equations"},
 }

@@ -77,7 +77,7 @@ func (Standard) Overrides() map[string]bool {
 // Rules implements standard.Standard.
 func (Standard) Rules() []string {
 	return append([]string{"local-buckling", "section-tension", "net-section", "flexural-buckling-major", "flexural-buckling-minor",
-		"torsional-buckling", "flexural-torsional-buckling", "frame-stability", "slenderness"}, append(standard.CommonRules, bendingRules...)...)
+		"torsional-buckling", "flexural-torsional-buckling", "connector-spacing", "frame-stability", "slenderness"}, append(standard.CommonRules, bendingRules...)...)
 }
 
 // Symbols implements standard.Standard.

@@ -97,6 +97,7 @@ type shape struct {
 }
 
 const (
+	legLimit = "0.45 * sqrt(E / F_y)"
 	outstand = "0.56 * sqrt(E / F_y)"
 	webLimit = "1.49 * sqrt(E / F_y)"
 	hssLimit = "1.40 * sqrt(E / F_y)"
@@ -113,7 +114,7 @@ var (
 		formula(symAe, "A_g - 2 * (b_out - b_e) * t_f - (h - h_e) * t_w", ofParts)}
 	shapeTee = shape{[]*element{stem.with(nil, "0.75 * sqrt(E / F_y)", "4"), flange.of("b_f / 2", "B4.1a(a)", outstand, "1")},
 		formula(symAe, "A_g - 2 * (b_out - b_e) * t_f - (d - d_e) * t_w", ofParts)}
-	shapeAngle = shape{[]*element{leg1.with(nil, "0.45 * sqrt(E / F_y)", "3"), leg2.with(nil, "0.45 * sqrt(E / F_y)", "3")},
+	shapeAngle = shape{[]*element{leg1.with(nil, legLimit, "3"), leg2.with(nil, legLimit, "3")},
 		formula(symAe, "A_g - (b_1 - b_1_e) * t - (b_2 - b_2_e) * t", ofParts)}
 	// A corner radius counts as far as half the wall, as where it is not known.
 	shapeTube = shape{[]*element{
@@ -175,8 +176,14 @@ func (c *calc) local() {
 		c.shape = &shapeChannel
 	case section.Tee:
 		c.shape = &shapeTee
-	case section.Angle:
+	case section.Angle, section.DoubleAngle:
 		c.shape = &shapeAngle
+		if sh.Kind == section.DoubleAngle {
+			c.shape = &shapePair
+			if sh.Gap == 0 {
+				c.shape = &shapePairClose
+			}
+		}
 		c.take(symLeg1, sh.Depth, title)
 		c.take(symLeg2, sh.Width, title)
 		c.take(symT, sh.Wall, title)

@@ -120,7 +120,7 @@ func (c *calc) undecidedIn(rule, clause string, dim unit.Dim, why string) {
 func (c *calc) torsion() {
 	const rule = "torsion"
 	switch c.f.Member.Section.Shape.Kind {
-	case section.Channel, section.Tee, section.Angle:
+	case section.Channel, section.Tee, section.Angle, section.DoubleAngle:
 		c.cover(rule, standard.NotApplicable, "loads across the member and eccentric loads are taken to act through the shear centre: what they twist is for a person (H3)")
 	default:
 		c.cover(rule, standard.NotApplicable, "loads act in the planes of symmetry: nothing twists the member (H3)")
@@ -245,7 +245,7 @@ func (c *calc) flexureClause(a int) string {
 		return "F7"
 	case section.Pipe:
 		return "F8"
-	case section.Tee:
+	case section.Tee, section.DoubleAngle:
 		return "F9"
 	case section.Angle:
 		return "F10"
@@ -275,6 +275,8 @@ func (c *calc) sectionStrength(a int) string {
 		return c.pipeStrength(a)
 	case section.Tee:
 		return c.teeStrength(a)
+	case section.DoubleAngle:
+		return c.pairStrength(a)
 	case section.Angle:
 		c.angleStrength(a)
 	case section.Bar:

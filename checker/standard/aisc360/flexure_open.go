@@ -1,7 +1,9 @@
 package aisc360
 
 import (
+	"kern/checker/model"
 	"kern/checker/section"
+	"kern/checker/standard"
 )
 
 // web is the slenderness of a web by Table B4.1b.
@@ -182,11 +184,7 @@ func (c *calc) teeStrength(a int) string {
 		c.do(x.doMnsW)
 		return ""
 	}
-	sxc := max(sec.WelMajorPos, sec.WelMajorNeg)
-	if a == 1 {
-		sxc = max(sec.WelMinorPos, sec.WelMinorNeg)
-	}
-	c.take(t.sxc, sxc, sec.Title())
+	c.take(t.sxc, standard.Known(flangeModulus(sec, a)), sec.Title())
 	if flange == noncompact {
 		c.do(t.doFnc)
 	} else {
@@ -196,7 +194,17 @@ func (c *calc) teeStrength(a int) string {
 	return ""
 }
 
-// squareToStem is the axis about which a tee bends in the plane of its stem.
+// flangeModulus is the elastic modulus of the flange's side of a tee or of double
+// angles, whose centroid is nearer to the flange, m3.
+func flangeModulus(sec *model.Section, a int) float64 {
+	if a == 1 {
+		return max(sec.WelMinorPos, sec.WelMinorNeg)
+	}
+	return max(sec.WelMajorPos, sec.WelMajorNeg)
+}
+
+// squareToStem is the axis about which a tee, or double angles, bend in the plane of
+// the stem or web legs.
 func (c *calc) squareToStem() int {
 	if c.f.Member.Section.Turned {
 		return 1

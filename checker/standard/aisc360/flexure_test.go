@@ -139,6 +139,19 @@ func TestEditions(t *testing.T) {
 	if got := old["M_n_F_y"] / new["M_n_F_y"]; !(math.Abs(got-0.69/0.70) < 1e-12) {
 		t.Errorf("the strengths of slender flanges have the ratio %g", got)
 	}
+	// F7.2(b): the same line for HSS, with rounded coefficients; another for boxes
+	for _, made := range []section.Made{section.Cold, section.Welded} {
+		s := tube(10, 10, 0.3)
+		if s.Made = made; made == section.Welded {
+			s.OuterRadius, s.InnerRadius = 0, 0
+		}
+		p := post{shape: s, fy: 50, height: 10, more: ends(model.Major, 10, 10)}
+		new, _ := p.values(t, Standard{})
+		old, _ := p.values(t, Edition2016)
+		if got := old["M_n_F_x"] / new["M_n_F_x"]; made == section.Cold && !(math.Abs(got-1) < 1e-3) || made == section.Welded && !(got < 0.999) {
+			t.Errorf("the strengths of noncompact flanges of a tube made %v have the ratio %g", made, got)
+		}
+	}
 }
 
 // TestPointBracing holds P_br and beta_br against 0.01 P_r and 8 P_r/L_br over phi =
@@ -187,6 +200,18 @@ func TestSway(t *testing.T) {
 	_, out = p.values(t, Standard{})
 	if c, ok := verdict(out, "member-interaction"); ok && c.Verdict == standard.Undecided {
 		t.Errorf("without compression: %+v", c)
+	}
+}
+
+// TestStep: where a moment comes in at a quarter point, the greater of both sides
+// counts: 12.5 0.75/(2.5 0.75 + 3 0.75 + 4 0.5 + 3 0.25).
+func TestStep(t *testing.T) {
+	p := post{shape: i(14.2, 14.6, 0.485, 0.78, 0.6), fy: 50, height: 20, more: func(m *model.Member) {
+		m.Loads = append(m.Loads, model.Load{Kind: model.EndMoment, Axis: model.Major, Value: 50 * kip * foot, At: m.Height / 4})
+	}}
+	v, _ := p.values(t, Standard{})
+	if want := 12.5 * 0.75 / 6.875; !(math.Abs(v["C_b"]/want-1) < 1e-9) {
+		t.Errorf("C_b = %g, want %g", v["C_b"], want)
 	}
 }
 

@@ -56,6 +56,9 @@ func (c *calc) lateralOf() lateralState {
 	case section.Tee:
 		l.axis, l.cb = c.squareToStem(), false
 		l.strength = (*calc).lateralTee
+	case section.DoubleAngle:
+		l.axis, l.cb = c.squareToStem(), false
+		l.strength = (*calc).lateralPair
 	case section.Angle:
 		l.strength = (*calc).lateralAngle
 		c.unequalLegs()
@@ -186,9 +189,9 @@ func (c *calc) factorCb(k int, s segment, peak, tension float64) {
 		return
 	}
 	pieces := c.bend.combs[k].pieces[l.axis]
-	for i, id := range []int{0, 1, 2} {
-		z := s.from + (s.to-s.from)*float64(i+1)/4
-		c.take([]derivation.ID{symMA, symMB, symMC}[id], math.Abs(action.MomentAt(pieces, z)), "")
+	for i, id := range []derivation.ID{symMA, symMB, symMC} {
+		below, above := action.MomentsAt(pieces, s.from+(s.to-s.from)*float64(i+1)/4)
+		c.take(id, max(math.Abs(below), math.Abs(above)), "")
 	}
 	switch {
 	case angle:

@@ -24,7 +24,7 @@ var (
 // shearParts are the texts of A_w and of the width-to-thickness ratio for each
 // kind of section.
 type shearParts struct {
-	web, flanges, stem, leg, tube, box, solid                     *derivation.Formula
+	web, flanges, stem, leg, tube, round, box, solid              *derivation.Formula
 	ratioWeb, ratioFlange, ratioU, ratioStem, ratioLeg, ratioTube *derivation.Formula
 	vnWeb, vnFlange, cvWeb, cvWebLong, pipe                       *derivation.Formula
 }
@@ -54,7 +54,8 @@ func newShearParts(a int) *shearParts {
 	p.ratioStem = ratio("d / t_w", "G3")
 	p.leg = area("min(b_1, b_2) * t", "G3, the shorter leg by itself, on the safe side")
 	p.ratioLeg = ratio("max(b_1, b_2) / t", "G3, of the longer leg, on the safe side")
-	p.tube = area("2 * ("+outside+" - 2 * t - 2 * max(r_in, 0.5 * t)) * t", "G4: 3 t off where the radius is not more")
+	p.tube = area("2 * ("+outside+" - 3 * t) * t", "G4, the corner radius taken as not known")
+	p.round = area("2 * ("+outside+" - 2 * t - 2 * r_in) * t", "G4")
 	p.box = area("2 * "+side+" * t", "G4")
 	p.ratioTube = ratio(side+" / t", "G4")
 	p.solid = area("A_g", "J4.2, the gross area")
@@ -93,9 +94,9 @@ func (c *calc) shearClause(a int) string {
 	switch kind := c.f.Member.Section.Shape.Kind; {
 	case (kind == section.ISection || kind == section.Channel) && a == 0:
 		return "G2.1"
-	case kind == section.ISection || kind == section.Channel || kind == section.Tee && a != c.squareToStem():
+	case kind == section.ISection || kind == section.Channel || (kind == section.Tee || kind == section.DoubleAngle) && a != c.squareToStem():
 		return "G6"
-	case kind == section.Tee || kind == section.Angle:
+	case kind == section.Tee || kind == section.Angle || kind == section.DoubleAngle:
 		return "G3"
 	case kind == section.Tube:
 		return "G4"
@@ -140,11 +141,20 @@ func (c *calc) shearStrength(a int) string {
 			plate(p.stem, p.ratioStem, x.doVnLeg, 1.2, "G3")
 			return ""
 		}
-		return "G6 gives the flange of a tee in shear across its stem, F no bending there: check by hand"
+		return "chapter F has no bending of tees across the stem: check bending and shear there by hand"
+	case section.DoubleAngle:
+		if a == c.squareToStem() {
+			plate(pairs[a].area, pairs[a].ratio, x.doVnLeg, 1.2, "G3")
+			return ""
+		}
+		return "F has no bending of double angles across their web legs: check bending and shear there by hand"
 	case section.Angle:
 		plate(p.leg, p.ratioLeg, x.doVnLeg, 1.2, "G3")
 	case section.Tube:
 		area := p.tube
+		if sh.InnerRadius > sh.Wall*(1+1e-9) { // more than product standards assume
+			area = p.round
+		}
 		if c.shape == &shapeBox {
 			area = p.box
 			c.do(doHBox)

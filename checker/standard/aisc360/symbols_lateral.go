@@ -110,9 +110,14 @@ var (
 )
 
 // changed2016 is the text in the edition of 2016 of formulas that it writes
-// otherwise (from memory).
+// otherwise: F6.2 (from memory), F7.2 and F7.3 with their coefficients rounded, which
+// for boxes are those of HSS (from memory; (F7-2) seen in print).
 var changed2016 = map[*derivation.Formula]string{
-	doF6s: "0.69 * E / lambda_f^2 * S_y",
+	doF6s:               "0.69 * E / lambda_f^2 * S_y",
+	flexures[0].doTubeF: "min(M_p_x, M_p_x - (M_p_x - F_y * S_x) * (3.57 * lambda_f_x * sqrt(F_y / E) - 4.0))",
+	flexures[1].doTubeF: "min(M_p_y, M_p_y - (M_p_y - F_y * S_y) * (3.57 * lambda_f_y * sqrt(F_y / E) - 4.0))",
+	flexures[0].doTubeW: "min(M_p_x, M_p_x - (M_p_x - F_y * S_x) * (0.305 * lambda_w_x * sqrt(F_y / E) - 0.738))",
+	flexures[1].doTubeW: "min(M_p_y, M_p_y - (M_p_y - F_y * S_y) * (0.305 * lambda_w_y * sqrt(F_y / E) - 0.738))",
 }
 
 // tee holds what F9 asks of a tee, about whichever axis is square to its stem.

@@ -48,6 +48,10 @@ type bent struct {
 	holds                          []float64
 	loads                          []model.Load
 	simple                         bool // amplification simple
+
+	whole           bool         // critical exact
+	springs         []model.Hold // holds with a stiffness
+	baseSpr, topSpr model.Spring
 }
 
 const modulusE = 210e9
@@ -66,6 +70,13 @@ func (b bent) check(fy float64) (*standard.Outcome, *derivation.Record) {
 	for _, h := range b.holds {
 		m.Holds = append(m.Holds, model.Hold{At: h, Major: true, Minor: true})
 	}
+	m.Exact = b.whole
+	for _, h := range b.springs {
+		h.Major, h.Minor = true, true
+		m.Holds = append(m.Holds, h)
+	}
+	sort.Slice(m.Holds, func(i, j int) bool { return m.Holds[i].At < m.Holds[j].At })
+	m.BaseSpring, m.TopSpring = [2]model.Spring{b.baseSpr, b.baseSpr}, [2]model.Spring{b.topSpr, b.topSpr}
 	one := model.Combination{}
 	one.Name, one.Factors = "load", []float64{1}
 	record := &derivation.Record{Set: set}

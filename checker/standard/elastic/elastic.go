@@ -10,6 +10,7 @@ import (
 	"kern/checker/action"
 	"kern/checker/derivation"
 	"kern/checker/model"
+	"kern/checker/section"
 	"kern/checker/standard"
 	"kern/lang/unit"
 )
@@ -45,7 +46,12 @@ var (
 	doMajor = set.Formula(symS, "factor_yield * (N_s / A + (M_major + (a_major - 1) * M_max_major) / W_major)", "axial force and bending, second order")
 	doMinor = set.Formula(symS, "factor_yield * (N_s / A + (M_minor + (a_minor - 1) * M_max_minor) / W_minor)", "axial force and bending, second order")
 	doBoth  = set.Formula(symS, "factor_yield * (N_s / A + (M_major + (a_major - 1) * M_max_major) / W_major + (M_minor + (a_minor - 1) * M_max_minor) / W_minor)", "axial force and bending, second order")
-	doUy    = set.Formula(symUy, "sigma / f_y", "demand / capacity")
+	// The same with moments of second order of the whole member, found under the loads
+	// times the factor of safety.
+	doMajor2 = set.Formula(symS, "factor_yield * N_s / A + M_2_major / W_major", "axial force and bending, second order")
+	doMinor2 = set.Formula(symS, "factor_yield * N_s / A + M_2_minor / W_minor", "axial force and bending, second order")
+	doBoth2  = set.Formula(symS, "factor_yield * N_s / A + M_2_major / W_major + M_2_minor / W_minor", "axial force and bending, second order")
+	doUy     = set.Formula(symUy, "sigma / f_y", "demand / capacity")
 )
 
 // common are the checks that all standards share.
@@ -54,12 +60,12 @@ var common = standard.NewCommon(set)
 type axis struct {
 	name                                        string
 	i, w, r, l, k, le, pcr, n, u, slender, m, a derivation.ID
-	peak, acr                                   derivation.ID
+	peak, acr, m2                               derivation.ID
 	ratio, uSlender, limit                      derivation.ID
 	doLe, doPcr, doU, doR, doSlender, doRatio   *derivation.Formula
 	doBuckled                                   *derivation.Formula
 	secant, sine, sway, tension, doUSlender     *derivation.Formula
-	whole, doPcrWhole, doLeWhole                *derivation.Formula
+	doPcrWhole, doLeWhole, doSecond             *derivation.Formula
 }
 
 func newAxis(name string) axis {
@@ -79,6 +85,7 @@ func newAxis(name string) axis {
 	x.slender = sym("slenderness", unit.None, "slenderness")
 	x.m = sym("M", unit.Moment, "bending moment, first order, without its sign")
 	x.peak = sym("M_max", unit.Moment, "greatest bending moment in the stretch, first order, without its sign")
+	x.m2 = sym("M_2", unit.Moment, "bending moment of second order under the loads times the factor of safety, without its sign")
 	x.a = sym("a", unit.None, "amplification of the moment by the axial force")
 	x.ratio = sym("n", unit.None, "factored axial force over the critical load")
 	x.uSlender = sym("u_slenderness", unit.None, "utilisation, slenderness")
@@ -93,6 +100,7 @@ func newAxis(name string) axis {
 	x.doU = f(x.u, "factor_buckling * N_"+name+" / P_cr_"+name, "demand / capacity")
 	x.doSlender = f(x.slender, "L_cr_"+name+" / i_"+name, "definition")
 	x.doUSlender = f(x.uSlender, "slenderness_"+name+" / limit_slenderness_"+name, "demand / limit")
+	x.doSecond = f(x.m2, "factor_yield * (M_"+name+" + (a_"+name+" - 1) * M_max_"+name+")", "amplification")
 	x.doRatio = f(x.ratio, "factor_yield * N_"+name+" / P_cr_"+name, "definition")
 	x.doBuckled = f(symUy, "n_"+name, "beyond the critical load no stress can be given")
 	x.secant = f(x.a, "1 / cos(pi / 2 * sqrt(n_"+name+"))", "secant formula (equal end moments; an upper bound for others)")
@@ -100,10 +108,6 @@ func newAxis(name string) axis {
 	// grows to 32/pi3/(1 - n) = 1.0321/(1 - n), for a single point load to no more
 	// than 0.82/(1 - n). 0.0325 covers both for every n.
 	x.sway = f(x.a, "(1 + 0.0325 * n_"+name+") / (1 - n_"+name+")", "amplification of the moment of one load across the member")
-	// The part of the first-order moments that has the form of the buckled shape's
-	// moments grows by n/(1 - n). Where these are made of parts of sine waves and
-	// straight lines, it is no more than 3/2 of the greatest moment.
-	x.whole = f(x.a, "(1 + 0.5 * n_"+name+") / (1 - n_"+name+")", "amplification by the buckled shape of the whole member (an upper bound)")
 	x.sine = f(x.a, "1 / (1 - n_"+name+")", "amplification of a sinusoidal moment, as the basis asks")
 	x.tension = f(x.a, "1", "tension does not amplify moments")
 	return x
@@ -200,8 +204,13 @@ func (c *calc) assumptions() []string {
 			out = append(out, name+" = 1")
 		}
 	}
+	if c.f.Member.Section.Shape.Kind == section.DoubleAngle {
+		out = append(out, "the two angles act as one piece: that their connectors are close enough and do not give is for a person")
+	}
 	if c.f.Bends[0] || c.f.Bends[1] {
-		if c.f.Env.Basis.Simple {
+		if (!c.f.Bends[0] || c.f.Exact[0]) && (!c.f.Bends[1] || c.f.Exact[1]) {
+			out = append(out, "moments of second order of the whole member on its ends, holds and springs")
+		} else if c.f.Env.Basis.Simple {
 			out = append(out, "moments amplified by 1/(1 - N/N_cr), as the basis asks; for equal end moments this is up to 22 % too low")
 		} else {
 			out = append(out, "moments amplified for the axial force: (1 + 0.0325 n)/(1 - n) for one load across the member or line loads over its height, the secant for all others")
@@ -372,7 +381,11 @@ func (c *calc) yield() {
 			return
 		}
 		if b && c.f.Exact[a] && len(c.f.Lifts()) > 1 {
-			fail("how the buckled shape of a member of several sections amplifies moments is not covered: say critical effective lengths")
+			fail("moments of second order of a member of several sections are not covered: say critical effective lengths")
+			return
+		}
+		if b && c.f.Exact[a] && (m.Imported != nil || m.Nominal) {
+			fail("moments of second order need the loads one by one: say critical effective lengths")
 			return
 		}
 	}
@@ -380,6 +393,7 @@ func (c *calc) yield() {
 	c.s.Take(axes[1].w, standard.Known(m.Section.WelMinor), "")
 	best, over := point{u: math.Inf(-1)}, buckled{}
 	var pieces [2][]action.Piece
+	var curves [2][]action.Curve
 	for k := range c.f.Combinations {
 		amplify := [2]float64{1, 1}
 		for a := range axes {
@@ -389,7 +403,11 @@ func (c *calc) yield() {
 				return
 			}
 			if bends[a] {
-				amplify[a] = c.amplify(a, k)
+				if amplify[a] = c.amplify(a, k); c.f.Exact[a] && !math.IsNaN(amplify[a]) {
+					if curves[a], ok = c.f.SecondOrder(a, k, c.s.At(symNy)); !ok {
+						amplify[a] = math.NaN()
+					}
+				}
 				if r := c.s.At(axes[a].ratio); math.IsNaN(amplify[a]) && r >= 1 && r > over.ratio && !math.IsInf(r, 0) {
 					over = buckled{r, a, k}
 				}
@@ -397,11 +415,21 @@ func (c *calc) yield() {
 		}
 		c.s.Take(axes[0].a, amplify[0], "")
 		c.s.Take(axes[1].a, amplify[1], "")
-		for _, z := range c.heights(pieces) {
+		heights := c.heights(pieces)
+		for _, side := range curves {
+			for _, curve := range side {
+				heights = append(heights, curve.Peaks()...)
+			}
+		}
+		for _, z := range heights {
 			p := point{combination: k, z: z, n: math.Abs(c.f.At(k, z))}
 			p.n = max(p.n, math.Abs(c.f.Compression(k, max(c.f.From, z-1e-6*m.Height), min(c.f.To, z+1e-6*m.Height))))
 			for a := range axes {
 				p.m[a], p.peak[a] = c.momentAt(pieces[a], z), c.peakAt(a, pieces[a], z)
+				p.second[a] = math.NaN()
+				if !math.IsNaN(amplify[a]) {
+					p.second[a] = curvesAt(curves[a], z)
+				}
 			}
 			if p.u = c.stress(p); p.u > best.u || math.IsNaN(p.u) {
 				best = p
@@ -453,6 +481,7 @@ type point struct {
 	combination int
 	z, n, u     float64
 	m, peak     [2]float64
+	second      [2]float64 // moments of second order, where critical loads are those of the whole member
 }
 
 // stress computes the utilisation at a point.
@@ -471,14 +500,39 @@ func (c *calc) stress(p point) float64 {
 	case [2]bool{true, true}:
 		formula = doBoth
 	}
+	second := c.f.Bends[0] && c.f.Exact[0] || c.f.Bends[1] && c.f.Exact[1]
+	if second {
+		formula = map[*derivation.Formula]*derivation.Formula{doMajor: doMajor2, doMinor: doMinor2, doBoth: doBoth2}[formula]
+	}
 	for a, b := range c.f.Bends {
+		if b && c.f.Exact[a] {
+			c.s.Take(axes[a].m2, p.second[a], source+second2)
+			continue
+		}
 		if b {
 			c.s.Take(axes[a].m, p.m[a], source)
 			c.s.Take(axes[a].peak, p.peak[a], source)
 		}
+		if b && second {
+			c.s.Do(axes[a].doSecond)
+		}
 	}
 	c.s.Do(formula)
 	return c.s.Do(doUy)
+}
+
+const second2 = ", stiffness matrix with exact stability functions"
+
+// curvesAt is the size of the moment of second order at a height: the larger of the
+// two sides where it jumps.
+func curvesAt(curves []action.Curve, z float64) float64 {
+	m := 0.0
+	for _, c := range curves {
+		if z >= c.From-1e-12 && z <= c.To+1e-12 {
+			m = max(m, math.Abs(c.Moment(z-c.From)))
+		}
+	}
+	return m
 }
 
 func metres(z float64) string { return unit.Exact(math.Round(z*1e3) / 1e3) }
@@ -490,7 +544,10 @@ func (c *calc) amplify(a, combination int) float64 {
 	worst, at, n := math.Inf(-1), -1, 0.0
 	recording := c.s.Recorded()
 	c.s.Recording(nil)
-	stretches, whole := c.amplified(a)
+	stretches := c.f.Stretches[a]
+	if c.f.Exact[a] {
+		stretches = []action.Stretch{c.f.Whole(a)}
+	}
 	for i, s := range stretches {
 		c.stretch(a, s, combination)
 		c.s.Take(x.n, c.f.Compression(combination, s.From, s.To), "")
@@ -515,31 +572,14 @@ func (c *calc) amplify(a, combination int) float64 {
 		return c.s.Take(x.a, math.NaN(), "the factored axial force reaches the critical load")
 	}
 	switch {
+	case c.f.Exact[a]: // the moments are those of second order
+		return c.s.Take(x.a, 1, "in the moment of second order")
 	case c.f.Env.Basis.Simple:
 		return c.s.Do(x.sine)
-	case whole:
-		return c.s.Do(x.whole)
 	case c.f.Pushed[a] && !c.ends(a) && c.pushedOnce(a):
 		return c.s.Do(x.sway)
 	}
 	return c.s.Do(x.secant)
-}
-
-// amplified are the stretches whose critical loads amplify moments, and whether
-// they are that of the whole member. A member on several rigid holds is taken as
-// pinned at them here too: the moments of one stretch can grow with the bow of
-// another, which its own moments do not tell.
-func (c *calc) amplified(a int) (stretches []action.Stretch, whole bool) {
-	m := c.f.Member
-	if !c.f.Exact[a] {
-		return c.f.Stretches[a], false
-	}
-	if holds := m.RigidHolds(model.Axis(a)); len(holds) > 0 {
-		if pinned, ok := action.Stretches(m.Base[a], m.Top[a], holds, m.Height, c.f.Env.Basis.Recommended); ok {
-			return pinned, false
-		}
-	}
-	return []action.Stretch{c.f.Whole(a)}, true
 }
 
 // ends tells whether moments about the axis come from anything but loads across
@@ -611,8 +651,7 @@ func (c *calc) momentAt(pieces []action.Piece, z float64) float64 {
 func (c *calc) peakAt(a int, pieces []action.Piece, z float64) float64 {
 	hair := 1e-9 * c.f.Member.Height
 	most := 0.0
-	stretches, _ := c.amplified(a)
-	for _, s := range stretches {
+	for _, s := range c.f.Stretches[a] {
 		if z < s.From-hair || z > s.To+hair {
 			continue
 		}

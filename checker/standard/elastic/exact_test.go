@@ -77,6 +77,9 @@ func (x *exactColumn) cut() {
 	for _, z := range x.holds {
 		add(z / x.height)
 	}
+	for _, s := range x.springs {
+		add(s.At / x.height)
+	}
 	for _, l := range x.loads {
 		add(l.At / x.height)
 		if l.Kind == model.LineLoad {
@@ -176,7 +179,13 @@ func (x *exactColumn) conditions() {
 		if held {
 			x.equation(0, side{i, 0, [4]float64{1}})
 		} else {
-			x.equation(x.force[i], side{i - 1, l, x.across(i-1, -1)}, side{i, 0, x.across(i, 1)})
+			above := x.across(i, 1)
+			for _, s := range x.springs {
+				if near(s.At/x.height, x.cuts[i]) {
+					above[0] += s.Stiffness * x.height * x.height * x.height / (modulusE * x.inertia)
+				}
+			}
+			x.equation(x.force[i], side{i - 1, l, x.across(i-1, -1)}, side{i, 0, above})
 		}
 	}
 	x.end(x.top, pieces-1, x.cuts[pieces]-x.cuts[pieces-1], 1, pieces)
@@ -184,15 +193,21 @@ func (x *exactColumn) conditions() {
 
 // end writes the two conditions of an end.
 func (x *exactColumn) end(e action.End, p int, z, sign float64, node int) {
+	spring, h, ei := x.baseSpr, x.height, modulusE*x.inertia
+	if sign > 0 {
+		spring = x.topSpr
+	}
 	if e == action.Pinned || e == action.Fixed {
 		x.equation(0, side{p, z, [4]float64{1}})
 	} else {
-		x.equation(-sign*x.force[node], side{p, z, x.across(p, 1)})
+		across := x.across(p, 1)
+		across[0] -= sign * spring.Lateral * h * h * h / ei
+		x.equation(-sign*x.force[node], side{p, z, across})
 	}
 	if e == action.Fixed || e == action.Guided {
 		x.equation(0, side{p, z, [4]float64{0, 1}})
 	} else {
-		x.equation(sign*x.moment[node], side{p, z, [4]float64{0, 0, 1}})
+		x.equation(sign*x.moment[node], side{p, z, [4]float64{0, sign * spring.Turning * h / ei, 1}})
 	}
 }
 

@@ -186,7 +186,7 @@ func (c *calc) swayAny() bool {
 
 func sways(s action.Stretch) bool {
 	held := func(e action.End) bool { return e == action.Pinned || e == action.Fixed }
-	return s.Exact || s.Sprung || !held(s.Base) || !held(s.Top)
+	return s.Exact || s.Sway || s.Sprung || !held(s.Base) || !held(s.Top)
 }
 
 // stripGiven is what a strip has whatever the combination.
@@ -267,7 +267,7 @@ func (c *calc) stripAt(s strip, k int) float64 {
 	if c.settings.annexA {
 		c.annexA(s, k, dy, dz, withY, withZ)
 	} else {
-		c.annexB(s, b, dy, dz, withY, withZ, y, z)
+		c.annexB(s, k, dy, dz, withY, withZ, y, z)
 	}
 	switch {
 	case withY && withZ:
@@ -285,24 +285,43 @@ func (c *calc) stripAt(s strip, k int) float64 {
 	return c.do(doUMI)
 }
 
-// equivalent takes the equivalent uniform moment factor of a stretch. Table B.3 has
-// none for a stretch that a spring holds.
-func (c *calc) equivalent(f *momentFactor, d diagram, s action.Stretch) {
-	if s.Sprung {
-		c.take(f.c, 1, "a spring holds the stretch: on the safe side")
+// equivalent takes the equivalent uniform moment factor of a stretch about an axis
+// under a combination. Table B.3 has none for a stretch that a spring holds: there it
+// is what the factor stands for, so that 1/(1 - N_Ed/N_cr) times it gives the
+// greatest moment of second order, and no less than 1.
+func (c *calc) equivalent(f *momentFactor, d diagram, s action.Stretch, axis, k int) {
+	if !s.Sprung {
+		c.tableB3(f, d, sways(s))
 		return
 	}
-	c.tableB3(f, d, sways(s))
+	factor := 1.0
+	if alpha := c.f.Factor(axis, k); !(alpha <= 1) { // beyond it the member has buckled
+		curves, ok := c.f.SecondOrder(axis, k, 1)
+		most := 0.0
+		for _, curve := range curves {
+			for _, z := range curve.Peaks() {
+				if z >= s.From-1e-9 && z <= s.To+1e-9 {
+					most = max(most, math.Abs(curve.Moment(z-curve.From)))
+				}
+			}
+		}
+		factor = max(1, (1-1/alpha)*most/d.peak)
+		if !ok || math.IsNaN(alpha) {
+			factor = math.NaN() // of a member of several sections, or forces from a table
+		}
+	}
+	c.take(f.c, factor, "a spring holds the stretch: the greatest moment of second order (stiffness matrix) over that of first order, times 1 - N_Ed/N_cr, at least 1")
 }
 
 // annexB computes the factors of Tables B.1 to B.3.
-func (c *calc) annexB(s strip, b *comb, dy, dz diagram, withY, withZ bool, y, z action.Stretch) {
+func (c *calc) annexB(s strip, k int, dy, dz diagram, withY, withZ bool, y, z action.Stretch) {
+	b := &c.combs[k]
 	kind := c.f.Member.Section.Shape.Kind
 	compact := b.class <= 2
 	hollow := kind == section.Tube || kind == section.Pipe || kind == section.Rod
 	if withY {
 		if dy.peak > c.tiny[0] {
-			c.equivalent(factorY, dy, y)
+			c.equivalent(factorY, dy, y, 0, k)
 		} else {
 			c.take(factorY.c, 1, "hardly any moment in the stretch")
 		}
@@ -313,7 +332,7 @@ func (c *calc) annexB(s strip, b *comb, dy, dz diagram, withY, withZ bool, y, z 
 		}
 	}
 	if withZ {
-		c.equivalent(factorZ, dz, z)
+		c.equivalent(factorZ, dz, z, 1, k)
 		switch {
 		case !compact:
 			c.do(doKzz34)
@@ -341,7 +360,11 @@ func (c *calc) annexB(s strip, b *comb, dy, dz diagram, withY, withZ bool, y, z 
 	default:
 		d := diagramOf(b.pieces[0], z.From, z.To, c.tiny[0])
 		if d.peak > c.tiny[0] {
-			c.equivalent(factorLT, d, action.Stretch{Sprung: z.Sprung}) // it knows no sway
+			if z.Sprung {
+				c.take(factorLT.c, 1, "a spring holds the stretch")
+			} else {
+				c.tableB3(factorLT, d, false) // it knows no sway
+			}
 		} else {
 			c.take(factorLT.c, 1, "hardly any moment in the stretch")
 		}
