@@ -142,3 +142,42 @@ func TestNotOffered(t *testing.T) {
 		}
 	}
 }
+
+// TestChoice: what the calculation permits bounds the sections that are offered,
+// and a wish of the one who asks bounds them further.
+func TestChoice(t *testing.T) {
+	text := stand("HEB 100", "S235", "4 m", "choose section from HEB, HEA with depth <= 160 mm", "load 500 kN")
+	report := check(t, text)
+	of := func(o size.Options) (names []string) {
+		o.Kinds = []size.Kind{size.Section}
+		for _, m := range size.Mends(report, report.Members[0], o) {
+			names = append(names, m.Change)
+		}
+		return names
+	}
+	for _, c := range []struct {
+		o    size.Options
+		want string
+	}{
+		{size.Options{}, "HEB 140"},
+		{size.Options{Families: []string{"HEA", "IPE"}}, ""},
+		{size.Options{MaxDepth: 0.13}, ""},
+	} {
+		got := strings.Join(of(c.o), " ")
+		for _, name := range strings.Split(got, " H") {
+			if strings.Contains(name, "IPE") || strings.Contains(name, "UC") {
+				t.Errorf("%v: %s", c.o, got)
+			}
+		}
+		t.Logf("%+v: %s", c.o, got)
+		for _, name := range of(c.o) {
+			e, _ := catalogue.Find(name)
+			if e.Family != "HEB" && e.Family != "HEA" || e.Shape.Depth > 0.1601 || c.o.MaxDepth > 0 && e.Shape.Depth > c.o.MaxDepth {
+				t.Errorf("%+v: %s is offered", c.o, name)
+			}
+		}
+		if c.want != "" && !strings.Contains(got, c.want) {
+			t.Errorf("%+v: %s, want %s among them", c.o, got, c.want)
+		}
+	}
+}
