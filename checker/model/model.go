@@ -205,7 +205,8 @@ type Section struct {
 	Thickness float64
 	// CurveMajor and CurveMinor are stated buckling curves ("" to look them up).
 	CurveMajor, CurveMinor string
-	Class                  int // stated cross-section class, 0 to determine it
+	CornerStated           bool // the corner radius of a tube is given, not that of a product standard
+	Class                  int  // stated cross-section class, 0 to determine it
 	Assumed                []string
 	Bad                    bool
 }

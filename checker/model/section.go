@@ -307,6 +307,7 @@ func (s *Section) complete(corner float64) {
 				assume("'%s' with corners of outside radius %s mm (corner is not given)", s.Name, unit.Short(shape.OuterRadius*1000, 3))
 			}
 		} else {
+			s.CornerStated = true
 			shape.OuterRadius = corner
 			shape.InnerRadius = max(0, corner-shape.Wall)
 		}
