@@ -18,6 +18,7 @@ func (r *Result) With(change func(m *model.Member)) *Result {
 func (r *Result) changed(change func(m *model.Member)) *model.Member {
 	m := *r.Member
 	m.Loads, m.Holds, m.Lifts = slices.Clone(m.Loads), slices.Clone(m.Holds), slices.Clone(m.Lifts)
+	m.Choice = nil // nobody looks for a lighter one of what might be
 	if len(m.Missing) == 0 {
 		change(&m)
 	}

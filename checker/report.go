@@ -168,6 +168,7 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 	r.depart()
 	r.judge()
 	r.diagnose()
+	r.chosen()
 	return r
 }
 

@@ -81,6 +81,7 @@ func (t *Trials) Of(text string) []*Result {
 	for _, d := range append([]*lang.Decl{d}, t.also...) {
 		for _, m := range model.Members(&t.env, d, departable, t.env.Results()) {
 			if m.Name != "" {
+				m.Choice = nil // nobody looks for a lighter one of what might be
 				out = append(out, evaluate(&t.env, m, t.combinations))
 			}
 		}

@@ -90,6 +90,7 @@ var Forms = []Form{
 	{"connected", InMember, []string{`connected by long|short leg [space]`}, "The leg by which a single angle is connected at both ends; space for web members of box and space trusses.", "connected by ${1|long,short|} leg"},
 	{"net", InMember, []string{`net = AREA`}, "The area that holes leave across the path of failure in tension.", "net = ${1:17.2 cm2}"},
 	{"connectors", InMember, []string{`connectors every LENGTH welded|pretensioned|snug`}, "What connects the two angles of a pair between its ends, and how far apart.", "connectors every ${1:600 mm} ${2|welded,pretensioned,snug|}"},
+	{"choose", InMember, []string{`choose section from FAMILY[, FAMILY …] [with depth|width <= LENGTH [and depth|width <= LENGTH]]`}, "The sections that the member may have: it tells where a lighter one of them would do.", "choose section from ${1:HEB, HEA} with ${2|depth,width|} <= ${3:200 mm}"},
 	{"load", InMember, []string{
 		`load [CASE] FORCE [at PLACE] [offset LENGTH about AXIS [and LENGTH about AXIS]]`,
 		`load [CASE] FORCE across AXIS at PLACE`,
@@ -198,6 +199,7 @@ var Words = map[string]string{
 	"sway": "sideways movement of the top", "deflection": "sideways movement from the line between neighbouring holds", "span": "the distance of neighbouring holds",
 	"under": "in which combinations", "spring": "an elastic hold of an end", "stiffness": "force by movement, or moment by rotation", "exact": "of the whole member",
 	"braced": "the joints cannot move sideways against each other", "direct": "the direct analysis method", "effective": "effective lengths",
+	"depth": "the overall depth of a section", "width": "the overall width of a section",
 	"every": "the distance between them", "pretensioned": "by pretensioned bolts", "snug": "by bolts that are not pretensioned",
 	"long": "the longer leg of an angle", "short": "the shorter leg of an angle", "leg": "one of the two plates of an angle", "space": "web member of a box or space truss",
 }

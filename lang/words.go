@@ -22,7 +22,7 @@ var starters = map[string]bool{
 // verbs are the words that begin a statement inside a block.
 var verbs = map[string]bool{
 	"section": true, "material": true, "height": true, "from": true, "base": true, "top": true, "hold": true,
-	"effective": true, "joints": true, "connected": true, "connectors": true, "load": true, "limit": true, "require": true, "depart": true, "note": true, "selfweight": true,
+	"effective": true, "joints": true, "connected": true, "connectors": true, "choose": true, "load": true, "limit": true, "require": true, "depart": true, "note": true, "selfweight": true,
 	"standard": true, "actions": true, "show": true, "length": true, "lift": true, "moments": true, "reduce": true, "reduction": true, "slope": true, "net": true,
 	"critical": true, "imperfection": true,
 }

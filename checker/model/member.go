@@ -239,6 +239,8 @@ func (w *memberReader) statement(d declared) {
 	switch s.Word {
 	case "section":
 		w.m.Section, w.m.SectionAt = w.section(r, d)
+	case "choose":
+		w.choose(r)
 	case "material":
 		w.m.Material, w.m.MaterialAt = w.material(r)
 	case "lift":

@@ -295,6 +295,8 @@ type Member struct {
 	// stated.
 	Net   float64
 	NetAt lang.Place
+	// Choice are the sections that the calculation permits; nil where it does not say.
+	Choice *Choice
 	// Lifts are the parts of the height with a section and material of their own,
 	// from the base up and without gaps; none for a member of one section.
 	Lifts     []Lift

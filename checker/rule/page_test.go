@@ -102,7 +102,7 @@ func TestEquations(t *testing.T) {
 func TestSeverities(t *testing.T) {
 	want := map[string]lang.Severity{
 		"unused-definition": lang.Warning, "member-without-load": lang.Warning, "implausible-load": lang.Warning,
-		"departure-not-needed": lang.Warning, "design-wall": lang.Warning, "undecided": lang.Warning, "departure": lang.Information,
+		"departure-not-needed": lang.Warning, "design-wall": lang.Warning, "undecided": lang.Warning, "departure": lang.Information, "lighter-section": lang.Information, "section-not-permitted": lang.Warning,
 		"there-is-no-such-rule": lang.Error,
 	}
 	for _, r := range rule.All() {

@@ -142,3 +142,36 @@ func TestNotOffered(t *testing.T) {
 		}
 	}
 }
+
+// TestChoice: what the calculation permits bounds the sections that are offered,
+// and a wish of the one who asks bounds them further.
+func TestChoice(t *testing.T) {
+	text := stand("HEB 100", "S235", "4 m", "choose section from HEB, HEA with depth <= 160 mm", "load 500 kN")
+	report := check(t, text)
+	of := func(o size.Options) (names []string) {
+		o.Kinds = []size.Kind{size.Section}
+		for _, m := range size.Mends(report, report.Members[0], o) {
+			names = append(names, m.Change)
+		}
+		return names
+	}
+	for _, name := range []string{"HEB 140", "HEA 160"} { // lighter, and permitted
+		if r := check(t, strings.Replace(text, `"HEB 100"`, `"`+name+`"`, 1)).Members[0]; r.Verdict != standard.Fails {
+			t.Errorf("%s %s", name, r.Verdict)
+		}
+	}
+	for _, c := range []struct {
+		o    size.Options
+		want string
+	}{
+		{size.Options{}, "HEB 160"},
+		{size.Options{Families: []string{"HEB", "UC"}}, "HEB 160"},
+		{size.Options{Families: []string{"HEA", "IPE"}}, ""},
+		{size.Options{MaxDepth: 0.13}, ""},
+		{size.Options{MaxDepth: 0.3}, "HEB 160"},
+	} {
+		if got := strings.Join(of(c.o), " "); got != c.want {
+			t.Errorf("%+v: %s, want %s", c.o, got, c.want)
+		}
+	}
+}

@@ -76,12 +76,12 @@ func TestProjects(t *testing.T) {
 				if faults(again) > faults(report) {
 					t.Errorf("%s, %s: %s makes errors", dir, s.Result.Name, m.Change)
 				}
-				if now := named(again, s.Result.Name); now == nil || now.Verdict != standard.Passes {
+				if now := standing(report, again, s.Result); now == nil || now.Verdict != standard.Passes {
 					t.Errorf("%s, %s: %s does not make it pass", dir, s.Result.Name, m.Change)
 				}
 				for _, before := range report.Members {
 					if before.Verdict == standard.Passes && before.Member.As == s.Result.Member.Decl {
-						if now := named(again, before.Name); now.Verdict != standard.Passes {
+						if now := standing(report, again, before); now.Verdict != standard.Passes {
 							t.Errorf("%s: %s for %s has %s fail", dir, m.Change, s.Result.Name, before.Name)
 						}
 					}
@@ -90,6 +90,17 @@ func TestProjects(t *testing.T) {
 		}
 	}
 	t.Logf("%d mends", made)
+}
+
+// standing finds a member of the same name in the same file.
+func standing(before, again *checker.Report, r *checker.Result) *checker.Result {
+	file, _ := before.Place(r)
+	for _, m := range again.Members {
+		if at, _ := again.Place(m); at == file && m.Name == r.Name {
+			return m
+		}
+	}
+	return nil
 }
 
 // faults counts the errors in the text; that a member fails is none.

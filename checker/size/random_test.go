@@ -76,59 +76,6 @@ func apply(text string, edits []checker.Edit) string {
 	return lang.Apply(text, changes)
 }
 
-func named(report *checker.Report, name string) *checker.Result {
-	for _, m := range report.Members {
-		if m.Name == name {
-			return m
-		}
-	}
-	return nil
-}
-
-// TestRandom sizes random failing members: every mend, made as its text edit and
-// checked from scratch, passes with the utilisation that was promised, and the
-// layout stays; the lightest section is the lightest by checking the text with
-// every section of the families.
-func TestRandom(t *testing.T) {
-	for b, base := range bases {
-		t.Run(base.name, func(t *testing.T) {
-			t.Parallel()
-			r := rand.New(rand.NewPCG(7, uint64(b)))
-			counts := map[size.Kind]int{}
-			for done := 0; done < *members; {
-				text := lang.Format(column(r, b))
-				report := check(t, text)
-				m := report.Members[0]
-				if m.Verdict != standard.Fails {
-					continue
-				}
-				done++
-				mends := size.Mends(report, m, size.Options{})
-				for _, x := range mends {
-					counts[x.Kind]++
-					changed := apply(text, x.Edits())
-					again := check(t, changed)
-					now := again.Members[0]
-					if now.Verdict != standard.Passes || now.Utilisation != x.Utilisation || now.Governing != x.Governing {
-						t.Fatalf("%s %s: %v %v by %s, promised %v by %s, in\n%s\n%s", x.Kind, x.Change, now.Verdict, now.Utilisation, now.Governing, x.Utilisation, x.Governing, changed, now.Missing)
-					}
-					if again.Summary.Errors > 0 {
-						t.Fatalf("%s makes errors: %v", x.Change, again.Diagnostics)
-					}
-					if lang.Format(changed) != changed {
-						t.Fatalf("%s would be laid out anew:\n%s", x.Change, changed)
-					}
-					beyond(t, x, changed)
-				}
-				if done%6 == 0 {
-					lightest(t, m, text, mends)
-				}
-			}
-			t.Log(counts)
-		})
-	}
-}
-
 var quantity = regexp.MustCompile(`-?[0-9.]+ (m|ft|kN/m|kN|kip)\b`)
 
 // beyond looks that a height or a load that is greater by 0.15 % fails: 0.1 % are

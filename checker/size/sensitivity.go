@@ -161,7 +161,7 @@ func depthOf(m *model.Member) (float64, bool) {
 	if m.Section == nil {
 		return 0, false
 	}
-	d, _ := Outside(m.Section.Shape)
+	d, _ := checker.Outside(m.Section.Shape)
 	return d, d > 0
 }
 

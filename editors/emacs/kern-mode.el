@@ -37,12 +37,12 @@
 
 ;; generated: statements
 (defconst kern-mode-statements
-  '("accidental" "actions" "amplification" "base" "checked" "connected" "connectors" "critical"
-    "date" "depart" "effective" "factor_buckling" "factor_yield" "from" "gamma_G_inf" "gamma_G_sup"
-    "gamma_M0" "gamma_M1" "gamma_Q" "height" "hold" "imperfection" "joints" "length" "lift" "limit"
-    "load" "material" "moments" "name" "net" "note" "number" "permanent" "prepared" "reduce"
-    "reduction" "require" "revision" "roofs" "section" "selfweight" "show" "stability" "standard"
-    "strengths" "top" "xi")
+  '("accidental" "actions" "amplification" "base" "checked" "choose" "connected" "connectors"
+    "critical" "date" "depart" "effective" "factor_buckling" "factor_yield" "from" "gamma_G_inf"
+    "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height" "hold" "imperfection" "joints" "length"
+    "lift" "limit" "load" "material" "moments" "name" "net" "note" "number" "permanent" "prepared"
+    "reduce" "reduction" "require" "revision" "roofs" "section" "selfweight" "show" "stability"
+    "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 
@@ -65,13 +65,13 @@
 (defconst kern-mode-particles
   '("ASD" "K_LL" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "area" "as" "at"
     "because" "both" "braced" "by" "cases" "characteristic" "cold" "compression" "continuous" "dead"
-    "deflection" "direct" "effective" "eq" "every" "exact" "fixed" "floor" "free" "frequent" "from"
-    "guided" "hot" "imposed" "independent" "leg" "lengths" "live" "long" "major" "minor" "negative"
-    "nominal" "off" "offset" "on" "per" "permanent" "persistent" "pinned" "positive" "pretensioned"
-    "psi_0" "psi_1" "psi_2" "quasipermanent" "rain" "recommended" "rolled" "roof" "secant" "seismic"
-    "short" "simple" "slenderness" "snow" "snug" "space" "span" "spring" "stiffness" "storeys"
-    "sway" "temperature" "theoretical" "to" "together" "top" "tributary" "twist" "under"
-    "utilisation" "welded" "wind")
+    "deflection" "depth" "direct" "effective" "eq" "every" "exact" "fixed" "floor" "free" "frequent"
+    "from" "guided" "hot" "imposed" "independent" "leg" "lengths" "live" "long" "major" "minor"
+    "negative" "nominal" "off" "offset" "on" "per" "permanent" "persistent" "pinned" "positive"
+    "pretensioned" "psi_0" "psi_1" "psi_2" "quasipermanent" "rain" "recommended" "rolled" "roof"
+    "secant" "seismic" "short" "simple" "slenderness" "snow" "snug" "space" "span" "spring"
+    "stiffness" "storeys" "sway" "temperature" "theoretical" "to" "together" "top" "tributary"
+    "twist" "under" "utilisation" "welded" "width" "wind")
   "Words inside statements.")
 ;; end of particles
 

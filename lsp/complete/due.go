@@ -6,6 +6,7 @@ import (
 
 	"kern/checker"
 	"kern/checker/action"
+	"kern/checker/catalogue"
 	"kern/checker/model"
 	"kern/lang"
 	"kern/lang/unit"
@@ -112,7 +113,7 @@ func (s *scope) accepts(e *element, part *lang.Expr) bool {
 		case lang.CommaExpr:
 			return e.name == ","
 		case lang.CompareExpr:
-			return e.name == ">="
+			return e.name == ">=" || e.name == part.Text // any comparison, or this one
 		}
 		return false
 	case textElement:
@@ -139,6 +140,8 @@ func (s *scope) accepts(e *element, part *lang.Expr) bool {
 		case "KIND":
 			kind, known := action.KindNames[part.Text]
 			return known && kind.Variable()
+		case "FAMILY":
+			return slices.Contains(catalogue.Families(), strings.ToUpper(part.Text))
 		case "SITUATION":
 			return slices.Contains(action.SituationNames(), part.Text)
 		case "RESULT", "RULE", "UNIT", "SHAPE":
@@ -153,7 +156,7 @@ func (s *scope) accepts(e *element, part *lang.Expr) bool {
 		}
 	default:
 		switch e.name {
-		case "NAME", "CASE", "AXIS", "SHAPE", "RESULT", "KIND", "SITUATION":
+		case "NAME", "CASE", "AXIS", "SHAPE", "RESULT", "KIND", "SITUATION", "FAMILY":
 			return false
 		}
 	}

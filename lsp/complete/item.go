@@ -208,6 +208,8 @@ func signs(sign string) []Item {
 	switch sign {
 	case "=":
 		return []Item{{Label: "=", Kind: SignItem, Detail: "gives it its value", Group: 8}}
+	case "<=":
+		return []Item{{Label: "<=", Kind: SignItem, Detail: "at most", Eager: true}}
 	case ">=":
 		return []Item{
 			{Label: ">=", Kind: SignItem, Detail: "at least", Eager: true}, {Label: "<=", Kind: SignItem, Detail: "at most", Eager: true},

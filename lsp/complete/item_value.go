@@ -48,6 +48,14 @@ func (s *scope) valuesFor(d duty) (list []Item, more bool) {
 		return s.words(duty{element: &element{kind: wordElement, words: []string{"imposed", "live", "roof", "snow", "rain", "wind", "temperature"}}}), false
 	case "SITUATION":
 		return s.words(duty{element: &element{kind: wordElement, words: action.SituationNames()}}), false
+	case "FAMILY":
+		var out []Item
+		for _, f := range s.families() {
+			if f[0] < '0' || f[0] > '9' { // one that begins with a digit stands in quotes
+				out = append(out, Item{Label: f, Kind: WordItem, Text: f, Detail: familyWords[f]})
+			}
+		}
+		return out, false
 	case "RESULT":
 		return s.results(true), false
 	case "RULE":

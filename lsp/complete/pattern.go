@@ -157,10 +157,10 @@ func (r *patternReader) nodes() []patternNode {
 				e.words, e.name = []string{e.name}, ""
 			}
 			out = append(out, r.element(e, end, true))
-		case c == ',' || c == '=' || c == '>':
+		case c == ',' || c == '=' || c == '>' || c == '<':
 			sign := rest[:1]
-			if strings.HasPrefix(rest, ">=") {
-				sign = ">="
+			if strings.HasPrefix(rest, ">=") || strings.HasPrefix(rest, "<=") {
+				sign = rest[:2]
 			}
 			out = append(out, r.element(element{kind: signElement, name: sign}, len(sign), false))
 		default:

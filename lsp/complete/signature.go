@@ -38,7 +38,7 @@ var placeholderWords = map[string]string{
 	"MOMENT": "a moment: 5 kNm", "MOMENT/ANGLE": "a stiffness against turning: 4000 kNm/rad", "AREA": "an area: 18 m2", "LENGTH": "a length: 4.80 m, 250 mm, 14 ft 6 in", "HEIGHT": "a height above datum: 3.60 m",
 	"LEVEL": "a level, or a height above datum", "PLACE": "top, base, a height above the base, or a level", "STRESS": "a stress: 355 MPa", "PRESSURE": "a load on each square metre: 5.0 kN/m2",
 	"DENSITY": "a density: 7850 kg/m3", "NUMBER": "a pure number", "LENGTH^3": "a section modulus: 92 cm3", "LENGTH^4": "a second moment of area: 612 cm4", "LENGTH^6": "a warping constant: 12000 cm6",
-	"CASE": "a load case of the calculation", "AXIS": "major or minor", "NAME": "a name", "SHAPE": "tube, pipe, isection, channel, tee, angle, bar, rod or given", "VALUE": "a value with its unit, or a calculation",
+	"CASE": "a load case of the calculation", "AXIS": "major or minor", "FAMILY": "a family of the catalogue: HEB, SHS", "NAME": "a name", "SHAPE": "tube, pipe, isection, channel, tee, angle, bar, rod or given", "VALUE": "a value with its unit, or a calculation",
 	"RESULT": "a result: N_b_minor, N_cr_major, utilisation, or a symbol of the standard", "RULE": "the name of a check: flexural-buckling-minor", "UNIT": "a unit: kN",
 	"FACTOR CASE": "cases with their factors: 1.1 G + 0.5 W", "FILE": "the path of a file, from this one", "DESIGNATION": "a section of the catalogue: HEB 160", "GRADE": "a steel grade: S355",
 	"STANDARD": "a product standard: EN 10025-2", "TITLE": "what people call the member", "REASON": "why", "TEXT": "any text", "DATE": "a date, year-month-day: 2026-03-31", "KIND": "imposed, roof, snow, rain, wind or temperature", "SITUATION": "what the combination is for; without it, persistent situations", "CATEGORY": "the category of EN 1990 Table A1.1: A to H",
@@ -145,6 +145,8 @@ func (p *pattern) paramWords(param int) string {
 				words = placeholderWords[e.name]
 			case e.kind == textElement:
 				words = fixedWords[e.words[0]]
+			case e.words[0] == "section":
+				words = "the cross-section"
 			case p.form.Word == "class":
 				words = "the class of the cross-section"
 			case strings.HasPrefix(p.form.Word, "curve"):
