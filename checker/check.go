@@ -54,6 +54,8 @@ func (registry) Annexes(name string) []string { return find(name).Annexes() }
 
 func (registry) Methods(name string) []string { return find(name).Methods() }
 
+func (registry) Choices(name string) []string { return find(name).Choices() }
+
 func (registry) Overrides(name string) map[string]bool { return find(name).Overrides() }
 
 // departable are the checks that a member may depart from.

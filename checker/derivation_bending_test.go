@@ -3,10 +3,10 @@ package checker_test
 // bendingBases are the settings that change how bending is checked.
 var bendingBases = []string{
 	"basis { standard \"EN 1993-1-1:2005\" }",
-	"basis { standard \"EN 1993-1-1:2005\" annex \"recommended with Annex A\"; net_ratio = 0.9 because \"holes\" }",
-	"basis { standard \"EN 1993-1-1:2005\" annex \"recommended with 6.3.2.3 and Annex A\"; gamma_M1 = 1.05 because \"national annex\"; show kip, kip-ft, in, ksi }",
+	"basis { standard \"EN 1993-1-1:2005\"; interaction annex A; net_ratio = 0.9 because \"holes\" }",
+	"basis { standard \"EN 1993-1-1:2005\"; lateral buckling rolled; interaction annex A; gamma_M1 = 1.05 because \"national annex\"; show kip, kip-ft, in, ksi }",
 	"basis { standard \"EN 1993-1-1:2005\" annex \"United Kingdom\" }",
-	"basis { standard \"EN 1993-1-1:2005\" annex \"recommended with 6.3.2.3\"; C_1 = 1.13 because \"table\"; C_2 = 0.45 because \"table\"; z_g_h = 0.5 because \"load on the flange\"; k_c = 0.94 because \"table\" }",
+	"basis { standard \"EN 1993-1-1:2005\"; lateral buckling rolled; C_1 = 1.13 because \"table\"; C_2 = 0.45 because \"table\"; z_g_h = 0.5 because \"load on the flange\"; k_c = 0.94 because \"table\" }",
 }
 
 // bendingMembers reach every formula of bending to EN 1993-1-1.

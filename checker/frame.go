@@ -101,6 +101,16 @@ func Annexes(name string) []string {
 	return nil
 }
 
+// Nationals are the numbers and methods of a national annex to a design standard,
+// with their sources.
+func Nationals(standard, annex string) []action.National {
+	s, ok := find(standard).(interface{ Nationals() []action.National })
+	if !ok {
+		return nil
+	}
+	return slices.DeleteFunc(s.Nationals(), func(n action.National) bool { return n.Annex != annex })
+}
+
 // Overrides are the numbers of a design standard that a basis may replace, by
 // name.
 func Overrides(name string) []string {

@@ -85,7 +85,7 @@ column A1 { section = s; material = "S275"; height = 4.2 m; effective = 0.7 abou
 				{"A1", "u_62", "0.97", "", printed, ""},
 			}},
 		{"B-05 bending", "Access Steel SX029a-EN-EU (2006), portal column IPE 600, Annex A; MEMORY", `
-basis { standard "EN 1993-1-1:2005" annex "recommended with 6.3.2.3 and Annex A"; selfweight off; strengths "EN 1993-1-1 Table 3.1" }
+basis { standard "EN 1993-1-1:2005"; lateral buckling rolled; interaction annex A; selfweight off; strengths "EN 1993-1-1 Table 3.1" }
 material m { E = 210 GPa; G = 80770 MPa; fy = 275 MPa }
 column A1 { section = "IPE 600"; material = m; height = 5.99 m; load 161.5 kN; load 755 kNm about major at top }`,
 			[]publishedRow{
@@ -118,7 +118,7 @@ strut A1 { section = s; material = "S275"; length = 5.1 m; load 1362 kNm about m
 				{"A1", "u_LT", "0.97", "", printed, ""},
 			}},
 		{"L-03", "Access Steel SX001a-EN-EU, unrestrained beam IPE 330, load on the top flange; MEMORY", `
-basis { standard "EN 1993-1-1:2005" annex "recommended with 6.3.2.3"; selfweight off; C_1 = 1.127 because "SN003"; C_2 = 0.454 because "SN003"; z_g_h = 0.5 because "load on the flange" }
+basis { standard "EN 1993-1-1:2005"; lateral buckling rolled; selfweight off; C_1 = 1.127 because "SN003"; C_2 = 0.454 because "SN003"; z_g_h = 0.5 because "load on the flange" }
 material m { E = 210 GPa; G = 80770 MPa; fy = 235 MPa }
 strut A1 { section = "IPE 330"; material = m; length = 5.70 m; load 20 kN/m about major }`,
 			[]publishedRow{

@@ -59,6 +59,8 @@ var Forms = []Form{
 	{"show", InBasis, []string{`show UNIT[, UNIT …]`}, "Units that results are shown in.", "show ${1:kN, kNm, mm, MPa}"},
 	{"effective", InBasis, []string{`effective lengths theoretical`, `effective lengths recommended`}, "Effective length factors of ideal ends, or those recommended for design.", "effective lengths ${1|recommended,theoretical|}"},
 	{"stability", InBasis, []string{`stability direct`, `stability effective`}, "The method of stability of ANSI/AISC 360: direct analysis (chapter C) or effective lengths (Appendix 7).", "stability ${1|direct,effective|}"},
+	{"lateral", InBasis, []string{`lateral buckling general`, `lateral buckling rolled`}, "The method of lateral-torsional buckling of EN 1993-1-1:2005: the general case (6.3.2.2), or that of rolled and equivalent welded I sections (6.3.2.3).", "lateral buckling ${1|rolled,general|}"},
+	{"interaction", InBasis, []string{`interaction annex A`, `interaction annex B`}, "The annex of EN 1993-1-1:2005 that gives the interaction factors of bending and compression (6.3.3).", "interaction annex ${1|A,B|}"},
 	{"selfweight", InBasis, []string{`selfweight on`, `selfweight off`}, "Whether members carry their own weight.", "selfweight ${1|off,on|}"},
 	{"strengths", InBasis, []string{`strengths "product standard"`, `strengths "EN 1993-1-1 Table 3.1"`}, "Where the strength of a grade comes from.", `strengths "${1|product standard,EN 1993-1-1 Table 3.1|}"`},
 	{"critical", InBasis, []string{`critical effective lengths`, `critical exact`}, "Whether critical loads are those of effective lengths, or those of whole members with their holds, springs and stepped forces.", "critical ${1|exact,effective lengths|}"},

@@ -24,7 +24,7 @@ var verbs = map[string]bool{
 	"section": true, "material": true, "height": true, "from": true, "base": true, "top": true, "hold": true,
 	"effective": true, "joints": true, "connected": true, "connectors": true, "choose": true, "load": true, "limit": true, "require": true, "depart": true, "note": true, "selfweight": true,
 	"standard": true, "actions": true, "show": true, "length": true, "lift": true, "moments": true, "reduce": true, "reduction": true, "slope": true, "net": true,
-	"critical": true, "imperfection": true,
+	"critical": true, "imperfection": true, "lateral": true, "interaction": true,
 }
 
 // blockAssigned are starters that are also properties inside a member's block:

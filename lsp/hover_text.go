@@ -48,9 +48,10 @@ func (h *hovering) quoted(s *lang.Stmt) {
 	case s.Word == "case" && context == lang.InFile:
 		h.category(s, e.Text)
 	case s.Word == "actions" && before == "annex":
-		h.actionsAnnex(e.Text)
+		h.annex(e.Text, "EN 1990", action.NationalsOf(e.Text))
 	case s.Word == "standard" && before == "annex":
-		h.page.Text(output.Strong(e.Text), output.Words(": "+lang.Words["annex"]))
+		name := s.Args[0].Text
+		h.annex(e.Text, name, checker.Nationals(name, e.Text))
 	case s.Word == "standard":
 		h.standard(e.Text)
 	case s.Word == "actions" && before == "":
@@ -155,14 +156,14 @@ func (h *hovering) actions() {
 	h.page.List(items...)
 }
 
-// actionsAnnex writes the numbers of an annex to the standard of actions.
-func (h *hovering) actionsAnnex(name string) {
+// annex writes the numbers of an annex to a standard.
+func (h *hovering) annex(name, standard string, numbers []action.National) {
 	var rows [][]output.Line
-	for _, n := range action.NationalsOf(name) {
+	for _, n := range numbers {
 		rows = append(rows, []output.Line{output.Words(n.What), output.Words(n.Value), output.Words(n.Source)})
 	}
+	h.page.Text(output.Strong(name), output.Words(": "+lang.Words["annex"]+" to "+standard))
 	if len(rows) > 0 {
-		h.page.Text(output.Strong(name), output.Words(": "+lang.Words["annex"]+" to EN 1990"))
 		h.page.Table([]string{"number", "value", "source"}, "lll", rows)
 	}
 }

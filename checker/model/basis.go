@@ -2,6 +2,7 @@ package model
 
 import (
 	"fmt"
+	"slices"
 
 	"kern/checker/action"
 	"kern/checker/derivation"
@@ -52,11 +53,39 @@ func (b *builder) basis() {
 			r.fail("wrong-form", basis.DirectAt.Span, "direct analysis is a method of ANSI/AISC 360; %s has none of that name", basis.Standard)
 			env.refuse("a line of the basis has an error")
 		}
+		b.choices(d)
 	}
 	b.methods()
 }
 
-var basisWords = []string{"standard", "actions", "show", "effective", "stability", "selfweight", "strengths", "amplification", "critical", "imperfection", "permanent", "roofs", "accidental", "moments", "reduce", "reduction",
+// choices refuses the choice of a method that the design standard does not leave
+// open.
+func (b *builder) choices(d declared) {
+	basis := &b.env.Basis
+	if basis.Standard == "" {
+		return
+	}
+	for _, c := range []struct {
+		word, what string
+		Choice
+	}{{"lateral", "the method of lateral-torsional buckling", basis.Lateral}, {"interaction", "the annex of the interaction factors", basis.Interaction}} {
+		if c.Word == "" || slices.Contains(b.standards.Choices(basis.Standard), c.word) {
+			continue
+		}
+		var open []string
+		for _, name := range b.standards.Names() {
+			if slices.Contains(b.standards.Choices(name), c.word) {
+				open = append(open, name)
+			}
+		}
+		r := b.reader(declared{c.Place.Decl, d.stmt})
+		r.problem(lang.Problem{Rule: "wrong-form", Span: c.Place.Span, Message: fmt.Sprintf("%s is a choice of %s; %s leaves none", c.what, lang.OrList(open), basis.Standard),
+			Fixes: []lang.Fix{lang.Replace("Remove it", false, c.Place.Span, "")}})
+		b.env.refuse("a line of the basis has an error")
+	}
+}
+
+var basisWords = []string{"standard", "actions", "show", "effective", "stability", "lateral", "interaction", "selfweight", "strengths", "amplification", "critical", "imperfection", "permanent", "roofs", "accidental", "moments", "reduce", "reduction",
 	"gamma_M0", "gamma_M1", "gamma_M2", "gamma_G_sup", "gamma_G_inf", "gamma_Q", "xi", "companion_live", "factor_yield", "factor_buckling"}
 
 func (b *builder) basisStmt(r *reader) {
@@ -110,7 +139,11 @@ func (b *builder) basisStmt(r *reader) {
 			}
 			if !found {
 				basis.Standard = ""
-				r.fail("unknown-annex", e.Span, "the annex '%s' is not known; known is %s. Other national values are given one by one: gamma_M1 = 1.1 because \"…\"", annex, lang.OrList(known))
+				p := lang.Problem{Rule: "unknown-annex", Span: e.Span, Message: fmt.Sprintf("the annex '%s' is not known; known is %s. Other national values are given one by one: gamma_M1 = 1.1 because \"…\"", annex, lang.OrList(known))}
+				for _, n := range Closest(annex, known, 1) {
+					p.Fixes = append(p.Fixes, lang.Replace("Write "+n, false, e.Span, `"`+n+`"`))
+				}
+				r.problem(p)
 				return
 			}
 		}
@@ -151,6 +184,16 @@ func (b *builder) basisStmt(r *reader) {
 	case "stability":
 		w, _ := r.wordOf("the method of stability", "direct", "effective")
 		basis.Direct, basis.DirectAt = w == "direct", r.place(r.stmt.Line)
+	case "lateral":
+		if _, ok := r.wordOf("what to set", "buckling"); ok {
+			w, _ := r.wordOf("the method of lateral-torsional buckling", "general", "rolled")
+			basis.Lateral = Choice{w, r.place(r.stmt.Line)}
+		}
+	case "interaction":
+		if _, ok := r.wordOf("what to set", "annex"); ok {
+			w, _ := r.wordOf("the annex of the interaction factors", "A", "B")
+			basis.Interaction = Choice{w, r.place(r.stmt.Line)}
+		}
 	case "amplification":
 		w, _ := r.wordOf("the amplification", "secant", "simple")
 		basis.Simple = w == "simple"

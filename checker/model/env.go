@@ -21,6 +21,8 @@ type Standards interface {
 	// Methods lists the methods of a standard, of which a basis must state one;
 	// nil when there is one alone.
 	Methods(name string) []string
+	// Choices lists the words of a basis that choose a method of the standard.
+	Choices(name string) []string
 	// Overrides lists the numbers of a standard that a basis may replace, with
 	// whether a reason must be given.
 	Overrides(name string) map[string]bool

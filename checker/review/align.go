@@ -92,7 +92,7 @@ func (p pairing) first() int {
 // that is about something else.
 var exchanges = map[string]bool{"load": true, "hold": true, "base": true, "top": true, "effective": true, "lift": true, "height": true, "section": true,
 	"material": true, "selfweight": true, "made of": true, "kind": true, "title": true, "as": true, "standard": true, "actions": true, "show": true, "value": true, "note": true,
-	"joints": true, "connected": true, "moments": true, "reduce": true, "reduction": true, "net": true, "stability": true, "forces": true, "head": true}
+	"joints": true, "connected": true, "moments": true, "reduce": true, "reduction": true, "net": true, "stability": true, "lateral": true, "interaction": true, "forces": true, "head": true}
 
 // group is the same for words that say the same thing in two ways.
 func group(word string) string {

@@ -98,6 +98,14 @@ func (r *Review) basis(b, a *side) {
 		stability := map[bool]string{true: "direct", false: "effective lengths"}
 		words(stability[x.Direct], stability[y.Direct], "another method of stability", y.DirectAt)
 	}
+	for _, c := range []struct {
+		what string
+		x, y model.Choice
+	}{{"another method of lateral-torsional buckling", x.Lateral, y.Lateral}, {"another annex of interaction factors", x.Interaction, y.Interaction}} {
+		if c.x.Word != c.y.Word {
+			words(orAnnex(c.x.Word), orAnnex(c.y.Word), c.what, c.y.Place)
+		}
+	}
 	if x.Exact != y.Exact {
 		stability := map[bool]string{true: "critical loads of the whole member", false: "effective lengths"}
 		words(stability[x.Exact], stability[y.Exact], "another way to critical loads", lang.Place{})
@@ -371,4 +379,12 @@ func sortLoosened(list []Loosening) {
 		}
 		return cmp.Compare(rank(x), rank(y))
 	})
+}
+
+// orAnnex is the word of a choice, or who chooses without one.
+func orAnnex(word string) string {
+	if word == "" {
+		return "that of the annex"
+	}
+	return word
 }

@@ -102,6 +102,12 @@ func basis(env *model.Env) (out []output.Block) {
 	if b.Imperfect {
 		fact("sway imperfections", "to EN 1993-1-1 5.3.2, on members that can sway")
 	}
+	if w := b.Lateral.Word; w != "" {
+		fact("lateral-torsional buckling", map[string]string{"general": "the general case, 6.3.2.2", "rolled": "rolled and equivalent welded sections, 6.3.2.3"}[w])
+	}
+	if w := b.Interaction.Word; w != "" {
+		fact("interaction factors", "Annex "+w)
+	}
 	strengths := "by product standard and thickness"
 	if b.TableFy {
 		strengths = "EN 1993-1-1 Table 3.1"

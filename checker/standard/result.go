@@ -22,6 +22,9 @@ type Standard interface {
 	// Annexes are the sets of national values, the first is the default; nil when
 	// there are none.
 	Annexes() []string
+	// Choices are the words of a basis that choose a method which the standard
+	// leaves open ("lateral"); nil for none.
+	Choices() []string
 	// Overrides are the numbers that a basis may replace, with whether it must
 	// say why.
 	Overrides() map[string]bool

@@ -65,6 +65,9 @@ func (Standard) Annexes() []string { return nil }
 // Methods implements standard.Standard.
 func (Standard) Methods() []string { return []string{"LRFD", "ASD"} }
 
+// Choices implements standard.Standard: what depends on a method is in Methods.
+func (Standard) Choices() []string { return nil }
+
 // Overrides implements standard.Standard.
 func (Standard) Overrides() map[string]bool {
 	out := map[string]bool{"net_ratio": true, "U": true}

@@ -121,6 +121,9 @@ func (Standard) Annexes() []string { return nil }
 // Methods implements standard.Standard: there is one alone.
 func (Standard) Methods() []string { return nil }
 
+// Choices implements standard.Standard.
+func (Standard) Choices() []string { return nil }
+
 // Overrides implements standard.Standard: the two factors of safety. They
 // replace no published value, so they need no reason.
 func (Standard) Overrides() map[string]bool {

@@ -24,7 +24,7 @@ type edition struct {
 	outOfScope func(m *model.Material, fy float64) string
 }
 
-var edition2005 = &edition{name: "EN 1993-1-1:2005", annexes: annexes, set: set, curves: curves, outOfScope: outOfScope}
+var edition2005 = &edition{name: "EN 1993-1-1:2005", annexes: annexNames(), set: set, curves: curves, outOfScope: outOfScope}
 
 func (s Standard) edition() *edition {
 	if s.ed == nil {
@@ -122,6 +122,15 @@ func (s Standard) Annexes() []string { return s.edition().annexes }
 
 // Methods implements standard.Standard: there is one alone.
 func (Standard) Methods() []string { return nil }
+
+// Choices implements standard.Standard: the edition of 2005 leaves two methods of
+// lateral-torsional buckling (6.3.2.2, 6.3.2.3) and two annexes for 6.3.3.
+func (s Standard) Choices() []string {
+	if s.ed == nil {
+		return []string{"lateral", "interaction"}
+	}
+	return nil
+}
 
 // Overrides implements standard.Standard.
 func (s Standard) Overrides() map[string]bool {

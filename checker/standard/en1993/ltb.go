@@ -152,7 +152,7 @@ func (c *calc) lateralCurve(l *lateral) {
 			kind = "welded"
 		}
 		switch {
-		case l.l3 && s.british && kind == "rolled":
+		case l.l3 && s.national.british && kind == "rolled":
 			letter, row = "b", "rolled I section, UK National Annex (from memory)"
 			if slim {
 				letter = "c"
@@ -160,7 +160,7 @@ func (c *calc) lateralCurve(l *lateral) {
 			if very {
 				letter = "d"
 			}
-		case l.l3 && s.british:
+		case l.l3 && s.national.british:
 			letter, row = pick("c", "d"), "welded I section, UK National Annex (from memory)"
 		case l.l3 && kind == "rolled":
 			letter, row = pick("b", "c"), "rolled I section, "+limit+", Table 6.5"

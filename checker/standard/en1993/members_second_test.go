@@ -229,7 +229,7 @@ func compareBending(t *testing.T, r map[string]string, my, mz bool, left map[str
 		left[leftOver]++
 		return
 	}
-	b.annex = "recommended with Annex A"
+	b.annexA = true
 	o = b.check()
 	names := map[string]string{"mu_y": "A_muy", "mu_z": "A_muz"}
 	if my {
