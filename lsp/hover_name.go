@@ -246,9 +246,10 @@ func (h *hovering) combination(c model.Combination) {
 func (h *hovering) level(l *model.Level) {
 	h.page.Text(output.Strong(l.Name), output.Words(": a level at "+quantityText(h.units(), unit.Quantity{Value: l.At, Dim: unit.Length})+" above datum"))
 	var rows [][]output.Line
+	pressure := h.units().Pressure()
 	for _, p := range l.Pressures {
 		c := h.calc.Env.Cases[p.Case]
-		rows = append(rows, []output.Line{output.Words(c.Name), output.Words(c.Kind.String()), output.Words(unit.Short(p.Value/1000, 5) + " kN/m2")})
+		rows = append(rows, []output.Line{output.Words(c.Name), output.Words(c.Kind.String()), output.Words(unit.Short(p.Value/pressure.Factor, 5) + " " + pressure.Symbol)})
 	}
 	h.page.Table([]string{"case", "kind", "load on the floor"}, "llr", rows)
 }

@@ -57,6 +57,30 @@ func (p Piece) Moment(x float64) float64 { return p.M + x*(p.V+x*p.Line/2) }
 // Shear is the shear force at x above From.
 func (p Piece) Shear(x float64) float64 { return p.V + x*p.Line }
 
+// GreatestShear is the greater size of the shear forces at its ends, N.
+func (p Piece) GreatestShear() float64 {
+	return math.Max(math.Abs(p.V), math.Abs(p.Shear(p.To-p.From)))
+}
+
+// quiet takes away the shear forces that rounding leaves where the moment is constant,
+// so that none is shown or judged.
+func quiet(pieces []Piece) []Piece {
+	if len(pieces) == 0 {
+		return pieces
+	}
+	most := 0.0
+	for _, p := range pieces {
+		most = math.Max(most, math.Max(math.Abs(p.M), math.Abs(p.Moment(p.To-p.From))))
+	}
+	height := pieces[len(pieces)-1].To - pieces[0].From
+	for i, p := range pieces {
+		if p.Line == 0 && math.Abs(p.V)*height <= 1e-12*most {
+			pieces[i].V = 0
+		}
+	}
+	return pieces
+}
+
 // Deflection is the deflection times E I at x above From.
 func (p Piece) Deflection(x float64) float64 {
 	return p.D + x*(p.R+x*(p.M/2+x*(p.V/6+x*p.Line/24)))
@@ -456,7 +480,7 @@ func eliminate(k [][]float64, fixed []bool, size int, height float64) ([][]float
 func Add(pieces [][]Piece, factors []float64, into []Piece) []Piece {
 	into = into[:0]
 	if len(pieces) == 0 {
-		return into
+		return quiet(into)
 	}
 	for i := range pieces[0] {
 		p := Piece{From: pieces[0][i].From, To: pieces[0][i].To}
@@ -473,5 +497,5 @@ func Add(pieces [][]Piece, factors []float64, into []Piece) []Piece {
 		}
 		into = append(into, p)
 	}
-	return into
+	return quiet(into)
 }

@@ -12,21 +12,18 @@ import (
 // are shown in the usual one.
 type Units map[unit.Dim]unit.Unit
 
-// rigidity is that of a member in bending, E I.
-var rigidity, _ = unit.Moment.Mul(unit.Length)
-
 var usual = map[unit.Dim]string{
 	unit.Length: "mm", unit.Area: "mm2", unit.Volume: "cm3", unit.Length4: "cm4", unit.Length6: "cm6", unit.Force: "kN",
 	unit.Stress: "N/mm2", unit.Moment: "kNm", unit.ForcePerLength: "kN/m", unit.Density: "kg/m3", unit.MassPerLength: "kg/m",
 	unit.Mass: "kg", unit.Angle: "rad", unit.Acceleration: "m/s2", unit.WeightDensity: "kN/m3", unit.RotationalStiffness: "kNm/rad",
-	rigidity: "kN*m2",
+	unit.Rigidity: "kN*m2",
 }
 
 // customary are the usual units where lengths are shown in inches or feet.
 var customary = map[unit.Dim]string{
 	unit.Length: "in", unit.Area: "in2", unit.Volume: "in3", unit.Length4: "in4", unit.Length6: "in6", unit.Force: "kip",
 	unit.Stress: "ksi", unit.Moment: "kip-ft", unit.ForcePerLength: "klf", unit.Density: "pcf", unit.MassPerLength: "lb/ft", unit.Mass: "lb",
-	rigidity: "kip*in2",
+	unit.RotationalStiffness: "kip-ft/rad", unit.WeightDensity: "lbf/ft3", unit.Acceleration: "ft/s2", unit.Rigidity: "kip*in2",
 }
 
 // American tells whether what is not said is shown in US customary units: where
@@ -71,6 +68,55 @@ func (u Units) Show(value float64, dim unit.Dim, digits int) string {
 	}
 	s := u.For(dim)
 	return unit.Number(value/s.Factor, digits) + " " + s.Symbol
+}
+
+const foot = 0.3048 // m
+
+// Place writes a height on a member (m) as messages do: in metres, or in feet where
+// US customary units are shown, to a tenth of a millimetre or finer.
+func (u Units) Place(z float64) string {
+	if u.American() {
+		return unit.Exact(math.Round(z/foot*1e4)/1e4) + " ft"
+	}
+	return unit.Exact(math.Round(z*1e4)/1e4) + " m"
+}
+
+// Long writes a length that is computed (m) in the same units, to the given number of
+// significant digits.
+func (u Units) Long(length float64, digits int) string {
+	if u.American() {
+		return unit.Short(length/foot, digits) + " ft"
+	}
+	return unit.Short(length, digits) + " m"
+}
+
+// Floor writes an area of floor (m2), to the given number of significant digits:
+// nobody gives it in the unit of a section's area.
+func (u Units) Floor(area float64, digits int) string {
+	if u.American() {
+		return unit.Short(area/(foot*foot), digits) + " ft2"
+	}
+	return unit.Short(area, digits) + " m2"
+}
+
+// Pressure is the unit of loads on a floor: nobody gives them in that of stresses.
+func (u Units) Pressure() unit.Unit {
+	text := "kN/m2"
+	if u.American() {
+		text = "psf"
+	}
+	p, err := unit.Parse(text)
+	if err != nil {
+		panic(err) // both are units of the language
+	}
+	return p
+}
+
+// Short writes a value with its unit to the given number of significant digits,
+// without zeros at the end.
+func (u Units) Short(value float64, dim unit.Dim, digits int) string {
+	s := u.For(dim)
+	return unit.Short(value/s.Factor, digits) + " " + s.Symbol
 }
 
 // Digits is how many significant digits derivations are printed with: enough

@@ -67,7 +67,7 @@ func (b *builder) choices(d declared) {
 	}
 	for _, c := range []struct {
 		word, what string
-		Choice
+		Chosen
 	}{{"lateral", "the method of lateral-torsional buckling", basis.Lateral}, {"interaction", "the annex of the interaction factors", basis.Interaction}} {
 		if c.Word == "" || slices.Contains(b.standards.Choices(basis.Standard), c.word) {
 			continue
@@ -187,12 +187,12 @@ func (b *builder) basisStmt(r *reader) {
 	case "lateral":
 		if _, ok := r.wordOf("what to set", "buckling"); ok {
 			w, _ := r.wordOf("the method of lateral-torsional buckling", "general", "rolled")
-			basis.Lateral = Choice{w, r.place(r.stmt.Line)}
+			basis.Lateral = Chosen{w, r.place(r.stmt.Line)}
 		}
 	case "interaction":
 		if _, ok := r.wordOf("what to set", "annex"); ok {
 			w, _ := r.wordOf("the annex of the interaction factors", "A", "B")
-			basis.Interaction = Choice{w, r.place(r.stmt.Line)}
+			basis.Interaction = Chosen{w, r.place(r.stmt.Line)}
 		}
 	case "amplification":
 		w, _ := r.wordOf("the amplification", "secant", "simple")

@@ -6,8 +6,8 @@ import (
 	"slices"
 
 	"kern/checker/action"
+	"kern/checker/derivation"
 	"kern/lang"
-	"kern/lang/unit"
 )
 
 // tabled tells whether a table has forces of one of the members that are read.
@@ -16,7 +16,7 @@ func (w *memberReader) tabled() bool {
 }
 
 // imports gives the member the forces of a table in place of loads of its own.
-func (m *Member) imports(in *Imported) {
+func (m *Member) imports(in *Imported, show derivation.Units) {
 	m.Problems, m.Missing, m.Assumed = slices.Clone(m.Problems), slices.Clone(m.Missing), slices.Clone(m.Assumed)
 	m.Imported, m.Weight = in, false
 	say := func(at lang.Place, rule, message string) {
@@ -41,7 +41,7 @@ func (m *Member) imports(in *Imported) {
 	first, last := in.Positions[0], in.Positions[len(in.Positions)-1]
 	if tolerance := 1e-3 * m.Height; !in.Single && (math.Abs(first) > tolerance || math.Abs(last-m.Height) > tolerance) {
 		m.Problems = append(m.Problems, lang.Diagnostic{Decl: in.Place.Decl, Problem: lang.Problem{Rule: "wrong-table", Span: in.Place.Span,
-			Message: fmt.Sprintf("the forces of %s go from %s m to %s m; the member goes from 0 to %s m", m.Name, unit.Short(first, 5), unit.Short(last, 5), unit.Short(m.Height, 5)),
+			Message: fmt.Sprintf("the forces of %s go from %s to %s; the member goes from 0 to %s", m.Name, show.Place(first), show.Place(last), show.Place(m.Height)),
 			Related: []lang.Related{{Place: lang.Place{Decl: m.Decl, Span: m.NameSpan}, Message: "the member"}}}})
 		m.Missing = append(m.Missing, "its forces in '"+in.Table+"' are not given from its base to its top")
 	}

@@ -7,7 +7,6 @@ import (
 
 	"kern/checker/section"
 	"kern/lang"
-	"kern/lang/unit"
 )
 
 // Lift is a part of a member's height with a section and a material of its own.
@@ -77,7 +76,7 @@ func (w *memberReader) lift(r *reader, d declared) {
 	for _, o := range w.m.Lifts {
 		if from, to := max(l.From, o.From), min(l.To, o.To); to-from > 1e-9*w.m.Height {
 			r.problem(lang.Problem{Rule: "lifts-overlap", Span: low.Span.Join(high.Span),
-				Message: "the lift overlaps another from " + w.height3(from) + " to " + w.height3(to) + ": a part of the member has one section",
+				Message: "the lift overlaps another from " + w.env.Basis.Show.Place(from) + " to " + w.env.Basis.Show.Place(to) + ": a part of the member has one section",
 				Related: []lang.Related{{Place: o.Place, Message: "the other lift"}}})
 			return
 		}
@@ -88,8 +87,6 @@ func (w *memberReader) lift(r *reader, d declared) {
 // minLift is the least height of a lift as a part of the member's; a shorter one
 // costs the analysis its digits.
 const minLift = 1e-4
-
-func (w *memberReader) height3(z float64) string { return unit.Short(z, 4) + " m" }
 
 // liftBlock reads what a lift is made of.
 func (w *memberReader) liftBlock(r *reader, d declared, l *Lift) {
@@ -238,7 +235,7 @@ func (env *Env) PlaceName(m *Member, z float64) string {
 	case z >= m.Height*(1-1e-6):
 		return "top"
 	}
-	return unit.Exact(math.Round(z*1e4)/1e4) + " m"
+	return env.Basis.Show.Place(z)
 }
 
 // Parts are the lifts of a member, or the one part that a member of one section

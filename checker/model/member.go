@@ -86,7 +86,7 @@ func readMembers(env *Env, d *lang.Decl, s *lang.Stmt, known DepartureRules, res
 			c.Problems = nil // said once
 		}
 		if in := env.imported[e.Text]; in != nil {
-			c.imports(in)
+			c.imports(in, w.env.Basis.Show)
 		}
 		out = append(out, &c)
 	}

@@ -117,16 +117,16 @@ type Basis struct {
 	Reduction   Reduction
 	Direct      bool // stability by the direct analysis method of ANSI/AISC 360 chapter C
 	DirectAt    lang.Place
-	Lateral     Choice // method of lateral-torsional buckling: "general" or "rolled"
-	Interaction Choice // annex of the interaction factors: "A" or "B"
+	Lateral     Chosen // method of lateral-torsional buckling: "general" or "rolled"
+	Interaction Chosen // annex of the interaction factors: "A" or "B"
 	Simple      bool   // amplification 1/(1 - N/N_cr) for every moment diagram
 	Exact       bool   // critical loads of the whole member instead of effective lengths
 	Imperfect   bool   // members that can sway carry the forces of a sway imperfection
 }
 
-// Choice is a method that a basis chooses where a standard leaves it open; without
+// Chosen is a method that a basis chooses where a standard leaves it open; without
 // a word the annex or the standard chooses.
-type Choice struct {
+type Chosen struct {
 	Word  string
 	Place lang.Place
 }

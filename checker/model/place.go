@@ -29,7 +29,7 @@ func (w *memberReader) fromTo(r *reader) {
 		return
 	}
 	if h := to - from; h < 0.05 || h > 200 {
-		r.fail("impossible-value", span, "from %s m to %s m is no height of a member", unit.Short(from, 4), unit.Short(to, 4))
+		r.fail("impossible-value", span, "from %s to %s is no height of a member", w.env.Basis.Show.Place(from), w.env.Basis.Show.Place(to))
 		return
 	}
 	w.m.From, w.m.Height, w.m.Levels = from, to-from, true
@@ -215,7 +215,7 @@ func (w *memberReader) place(r *reader, what string) (float64, lang.Span, bool) 
 		return v, span, true
 	}
 	if h := w.m.Height; v < -1e-9*h || v > h*(1+1e-9) {
-		r.fail("outside-the-member", span, "%s at %s m lies outside the member, which is %s m high", what, unit.Short(v, 4), unit.Short(h, 4))
+		r.fail("outside-the-member", span, "%s at %s lies outside the member, which is %s high", what, w.env.Basis.Show.Place(v), w.env.Basis.Show.Place(h))
 		return 0, span, false
 	}
 	return min(max(v, 0), w.m.Height), span, true

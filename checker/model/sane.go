@@ -55,7 +55,7 @@ func (w *memberReader) complete() {
 			at = lang.Place{Decl: m.Decl, Span: m.NameSpan}
 		}
 		m.Problems = append(m.Problems, lang.Diagnostic{Decl: at.Decl, Problem: lang.Problem{Rule: "impossible-value", Span: at.Span,
-			Message: fmt.Sprintf("the net area of %s cm2 is more than that of the section %s, %s cm2: holes leave no more than the whole area", unit.Short(m.Net*1e4, 4), s.Title(), unit.Short(s.Area*1e4, 4))}})
+			Message: fmt.Sprintf("the net area of %s is more than that of the section %s, %s: holes leave no more than the whole area", w.env.Basis.Show.Short(m.Net, unit.Area, 4), s.Title(), w.env.Basis.Show.Short(s.Area, unit.Area, 4))}})
 		m.Missing = append(m.Missing, "its net area cannot be")
 		break
 	}
@@ -139,10 +139,10 @@ func (w *memberReader) sane() {
 		switch {
 		case v > 50*squash:
 			m.Problems = append(m.Problems, lang.Diagnostic{Decl: l.Place.Decl, Problem: lang.Problem{Rule: "implausible-load", Severity: lang.Warning, Span: l.Place.Span,
-				Message: fmt.Sprintf("a load of %s kN is %s times what the section can carry at all: is the unit meant?", unit.Short(v/1e3, 3), unit.Short(v/squash, 2))}})
+				Message: fmt.Sprintf("a load of %s is %s times what the section can carry at all: is the unit meant?", w.env.Basis.Show.Short(v, unit.Force, 3), unit.Short(v/squash, 2))}})
 		case v < 1e-4*squash && v < 200:
 			m.Problems = append(m.Problems, lang.Diagnostic{Decl: l.Place.Decl, Problem: lang.Problem{Rule: "implausible-load", Severity: lang.Warning, Span: l.Place.Span,
-				Message: fmt.Sprintf("a load of %s N is next to nothing for this section: is the unit meant?", unit.Short(v, 3))}})
+				Message: fmt.Sprintf("a load of %s is next to nothing for this section: is the unit meant?", w.env.Basis.Show.Short(v, unit.Force, 3))}})
 		}
 	}
 }

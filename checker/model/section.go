@@ -7,6 +7,7 @@ import (
 	"sync"
 
 	"kern/checker/catalogue"
+	"kern/checker/derivation"
 	"kern/checker/section"
 	"kern/lang"
 	"kern/lang/unit"
@@ -236,7 +237,7 @@ func shapedSection(r *reader, newReader func(declared) *reader, d declared, s *S
 			return false
 		}
 	}
-	s.complete(corner)
+	s.complete(corner, r.env.Basis.Show)
 	var shapeErr *section.ShapeError
 	props, err := section.Compute(*shape)
 	if errors.As(err, &shapeErr) {
@@ -267,8 +268,9 @@ func (s *Section) assumePair() {
 	}
 }
 
-// complete fills in what a shape leaves open, each as an assumption.
-func (s *Section) complete(corner float64) {
+// complete fills in what a shape leaves open, each as an assumption, in the units that
+// results are shown in.
+func (s *Section) complete(corner float64, units derivation.Units) {
 	shape := &s.Shape
 	assume := func(format string, args ...any) { s.Assumed = append(s.Assumed, fmt.Sprintf(format, args...)) }
 	switch shape.Kind {
@@ -304,7 +306,7 @@ func (s *Section) complete(corner float64) {
 		if math.IsNaN(corner) {
 			shape.OuterRadius, shape.InnerRadius = section.DefaultRadii(shape.Made, shape.Wall)
 			if shape.OuterRadius > 0 {
-				assume("'%s' with corners of outside radius %s mm (corner is not given)", s.Name, unit.Short(shape.OuterRadius*1000, 3))
+				assume("'%s' with corners of outside radius %s (corner is not given)", s.Name, units.Short(shape.OuterRadius, unit.Length, 3))
 			}
 		} else {
 			s.CornerStated = true

@@ -357,6 +357,7 @@ func number(s string) (float64, string) {
 
 // give hands a member what the table says of it.
 func (t *tableReader) give(name string, m *rows) {
+	show := t.b.env.Basis.Show
 	env := t.b.env
 	if env.imported == nil {
 		env.imported = map[string]*Imported{}
@@ -404,8 +405,8 @@ func (t *tableReader) give(name string, m *rows) {
 		for i := range len(in.Positions) - 1 {
 			span, ok := between(list, in, i)
 			if !ok {
-				t.problem(list[0].place.Span, "wrong-table", "%s under '%s' has forces from %s m to %s m, and under another combination from %s m to %s m: all combinations go from the base to the top",
-					name, clip(under), unit.Short(list[0].at, 5), unit.Short(list[len(list)-1].at, 5), unit.Short(in.Positions[0], 5), unit.Short(in.Positions[len(in.Positions)-1], 5))
+				t.problem(list[0].place.Span, "wrong-table", "%s under '%s' has forces from %s to %s, and under another combination from %s to %s: all combinations go from the base to the top",
+					name, clip(under), show.Place(list[0].at), show.Place(list[len(list)-1].at), show.Place(in.Positions[0]), show.Place(in.Positions[len(in.Positions)-1]))
 				in.Combinations = nil
 				return
 			}
@@ -463,6 +464,7 @@ func between(list []row, in *Imported, i int) (ImportedSpan, bool) {
 // in one sign or the other; where they are not, a load acts between the positions
 // and the moment between them is not known.
 func (t *tableReader) slopes(name string, in *Imported, axis int) {
+	show := t.b.env.Basis.Show
 	off := func(sign float64, c *ImportedCombination, i int) float64 {
 		s, l := c.Spans[i], in.Positions[i+1]-in.Positions[i]
 		size := math.Max(math.Max(math.Abs(s.M[axis][0]), math.Abs(s.M[axis][1])), l*math.Max(math.Abs(s.V[axis][0]), math.Abs(s.V[axis][1])))
@@ -485,8 +487,8 @@ func (t *tableReader) slopes(name string, in *Imported, axis int) {
 		for i := range c.Spans {
 			if off(sign, c, i) > 0.02 {
 				t.problem(t.members[name].combinations[c.Name][0].place.Span, "wrong-table",
-					"under '%s', between %s m and %s m, %s is not the slope of %s: give the forces where loads act too", clip(c.Name),
-					unit.Short(in.Positions[i], 5), unit.Short(in.Positions[i+1], 5), tableColumns[3+axis].name, tableColumns[1+axis].name)
+					"under '%s', between %s and %s, %s is not the slope of %s: give the forces where loads act too", clip(c.Name),
+					show.Place(in.Positions[i]), show.Place(in.Positions[i+1]), tableColumns[3+axis].name, tableColumns[1+axis].name)
 				in.Combinations = nil
 				return
 			}

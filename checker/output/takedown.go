@@ -37,7 +37,7 @@ func Takedown(p *Page, r *checker.Result) {
 			if reduces(t, c) {
 				text := "–"
 				if l.Storeys[i] > 0 {
-					text = unit.Short(l.Factor[i], 3) + " for " + unit.Short(l.Area[i], 4) + " m2 of " + storeys(l.Storeys[i])
+					text = unit.Short(l.Factor[i], 3) + " for " + units.Floor(l.Area[i], 4) + " of " + storeys(l.Storeys[i])
 				}
 				row = append(row, Words(text))
 			}

@@ -100,7 +100,7 @@ func (r *Review) basis(b, a *side) {
 	}
 	for _, c := range []struct {
 		what string
-		x, y model.Choice
+		x, y model.Chosen
 	}{{"another method of lateral-torsional buckling", x.Lateral, y.Lateral}, {"another annex of interaction factors", x.Interaction, y.Interaction}} {
 		if c.x.Word != c.y.Word {
 			words(orAnnex(c.x.Word), orAnnex(c.y.Word), c.what, c.y.Place)

@@ -290,15 +290,7 @@ func cases(env *model.Env) (out []output.Block) {
 
 func levels(env *model.Env) (out []output.Block) {
 	units := env.Basis.Show
-	// nobody gives the load of a floor in the unit of stresses
-	pressure := "kN/m2"
-	if force := units.For(unit.Force).Symbol; force == "kip" || force == "lbf" {
-		pressure = "psf"
-	}
-	shown, err := unit.Parse(pressure)
-	if err != nil {
-		return nil // both are units of the language
-	}
+	pressure := units.Pressure()
 	var rows [][]output.Line
 	for _, l := range env.Levels {
 		if l.Bad {
@@ -306,7 +298,7 @@ func levels(env *model.Env) (out []output.Block) {
 		}
 		var loads []string
 		for _, p := range l.Pressures {
-			loads = append(loads, env.Cases[p.Case].Name+" "+unit.Short(p.Value/shown.Factor, 4)+" "+pressure)
+			loads = append(loads, env.Cases[p.Case].Name+" "+unit.Short(p.Value/pressure.Factor, 4)+" "+pressure.Symbol)
 		}
 		rows = append(rows, []output.Line{output.Words(l.Name), output.Words(units.Show(l.At, unit.Length, 5)), output.Words(strings.Join(loads, "; "))})
 	}

@@ -97,7 +97,7 @@ func (x *Common) holds(f *Frame, s *derivation.Sheet, out *Outcome, group func(r
 		out.Coverage = append(out.Coverage, Coverage{Rule: rule, State: NotApplicable, Why: "no combination compresses the member"})
 		return
 	}
-	where := "hold at " + number(worst.At) + " m about " + worst.Axis.String()
+	where := "hold at " + f.Place(worst.At) + " about " + worst.Axis.String()
 	s.Take(x.stiffness.value, worst.Stiffness, f.Combinations[worst.Combination].Name+", "+worst.How)
 	s.Take(x.stiffness.limit, worst.Stated, where)
 	u := do(x.stiffness.do)

@@ -431,13 +431,8 @@ func (f *Frame) StretchName(axis int, s action.Stretch) string {
 // Place is a height in words: in metres, or in feet where the basis shows US
 // customary units.
 func (f *Frame) Place(z float64) string {
-	if f.Env.Basis.Show.American() {
-		return number(z/foot) + " ft"
-	}
-	return number(z) + " m"
+	return f.Env.Basis.Show.Place(z)
 }
-
-const foot = 0.3048
 
 func number(x float64) string { return unit.Exact(math.Round(x*1e4) / 1e4) }
 
@@ -487,10 +482,7 @@ func (f *Frame) Assumptions() []string {
 	switch {
 	case m.Weight:
 		c := f.Env.Cases[f.Env.SelfWeight].Name
-		own := unit.Short(f.OwnWeight()/1e3, 3) + " kN"
-		if show := f.Env.Basis.Show; show.American() {
-			own = show.Show(f.OwnWeight(), unit.Force, 3)
-		}
+		own := f.Env.Basis.Show.Short(f.OwnWeight(), unit.Force, 3)
 		out = append(out, fmt.Sprintf("self-weight %s in all, in case %s", own, c))
 	case m.Kind == model.Column:
 		out = append(out, "self-weight not counted")

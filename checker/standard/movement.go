@@ -67,7 +67,7 @@ func (f *Frame) greatest(rule string, l model.Movement) (moved, string) {
 				continue
 			}
 			for i, s := range m.Spans(a) {
-				try(0, f.spanLimit(l, axis, i), combinations[0].Name, "about "+a.String()+", "+between(s))
+				try(0, f.spanLimit(l, axis, i), combinations[0].Name, "about "+a.String()+", "+f.between(s))
 			}
 			continue
 		}
@@ -82,7 +82,7 @@ func (f *Frame) greatest(rule string, l model.Movement) (moved, string) {
 				continue
 			}
 			for i, s := range m.Spans(a) {
-				try(FromChord(pieces, s[0], s[1], ei), f.spanLimit(l, axis, i), c.Name, "about "+a.String()+", "+between(s))
+				try(FromChord(pieces, s[0], s[1], ei), f.spanLimit(l, axis, i), c.Name, "about "+a.String()+", "+f.between(s))
 			}
 		}
 	}
@@ -102,7 +102,9 @@ func (f *Frame) spanLimit(l model.Movement, axis, i int) float64 {
 	return math.NaN()
 }
 
-func between(s [2]float64) string { return "from " + number(s[0]) + " m to " + number(s[1]) + " m" }
+func (f *Frame) between(s [2]float64) string {
+	return "from " + f.Place(s[0]) + " to " + f.Place(s[1])
+}
 
 // across is the deflection at a height, m; ei gives E I at a height.
 func across(pieces []action.Piece, z float64, ei func(z float64) float64) float64 {

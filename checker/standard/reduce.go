@@ -137,7 +137,7 @@ func (f *Frame) reductions() []string {
 			if s < segments-1 && x.storeys == f.floors[c*segments+s+1].storeys || x.factor >= 1 {
 				continue
 			}
-			parts = append(parts, fmt.Sprintf("%s below %s (%s, %s m2)", unit.Short(x.factor, 3), f.Env.PlaceName(f.Member, f.cuts[s+1]), count(x.storeys, "storey"), unit.Short(x.area, 4)))
+			parts = append(parts, fmt.Sprintf("%s below %s (%s, %s)", unit.Short(x.factor, 3), f.Env.PlaceName(f.Member, f.cuts[s+1]), count(x.storeys, "storey"), f.Env.Basis.Show.Floor(x.area, 4)))
 		}
 		switch {
 		case !any || k.Kind != action.Imposed:

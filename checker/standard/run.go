@@ -172,7 +172,7 @@ func (r *lifts) assumeLengths(part, combination int) {
 			if !whole.Stepped(s.From, s.To) {
 				continue
 			}
-			text := fmt.Sprintf("L_cr = %s m %s in lift %s for %s, in which the section changes (%s–%s)", unit.Short(s.Effective(), 4), name, whole.parts[part].Name(), f.StretchName(axis, s), s.Base, s.Top)
+			text := fmt.Sprintf("L_cr = %s %s in lift %s for %s, in which the section changes (%s–%s)", f.Env.Basis.Show.Long(s.Effective(), 4), name, whole.parts[part].Name(), f.StretchName(axis, s), s.Base, s.Top)
 			switch {
 			case !s.Stepped:
 				text += ": taken as uniform, as nothing compresses it"
@@ -188,7 +188,7 @@ func (r *lifts) assumeLengths(part, combination int) {
 	}
 	for _, t := range whole.twists {
 		if l := whole.parts[part]; t.From < l.To && t.To > l.From && whole.Stepped(t.From, t.To) {
-			r.assume([]string{fmt.Sprintf("torsional and lateral-torsional buckling between %s m and %s m, where the section changes: with the least stiffness of the lifts there, a lower bound", number(t.From), number(t.To))})
+			r.assume([]string{fmt.Sprintf("torsional and lateral-torsional buckling between %s and %s, where the section changes: with the least stiffness of the lifts there, a lower bound", f.Place(t.From), f.Place(t.To))})
 		}
 	}
 }

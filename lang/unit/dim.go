@@ -68,6 +68,8 @@ var (
 	WeightDensity = Dim{L: -2 * sixths, M: 1 * sixths, T: -2 * sixths}
 	// RotationalStiffness is a moment by an angle, N*m/rad.
 	RotationalStiffness = Dim{L: 2 * sixths, M: 1 * sixths, T: -2 * sixths, A: -1 * sixths}
+	// Rigidity is that of a member in bending, E I, N*m2.
+	Rigidity = Dim{L: 3 * sixths, M: 1 * sixths, T: -2 * sixths}
 )
 
 // IsNone reports whether d is the dimension of a pure number.

@@ -31,6 +31,7 @@ var namings = map[Dim]naming{
 	MassPerArea:         {"mass per area", "kg/m2"},
 	WeightDensity:       {"weight density", "N/m3"},
 	RotationalStiffness: {"rotational stiffness", "N*m/rad"},
+	Rigidity:            {"flexural rigidity", "N*m2"},
 }
 
 // Name returns the trade's word for d without an article ("length", "stress or

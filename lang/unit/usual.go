@@ -34,6 +34,7 @@ var usualTexts = []struct {
 	{MassPerArea, "kg/m2 t/m2 lb/ft2"},
 	{WeightDensity, "kN/m3 N/m3 lbf/ft3 kip/ft3 lbf/in3"},
 	{RotationalStiffness, "kNm/rad MNm/rad Nm/rad kNm/mrad kNm/deg kip-ft/rad kip-in/rad lbf-ft/rad"},
+	{Rigidity, "kN*m2 MN*m2 N*m2 kN*cm2 N*mm2 kip*in2 kip*ft2 lbf*in2"},
 }
 
 var usual = makeUsual()

@@ -177,7 +177,7 @@ func (c *calc) combine() {
 				if p, ok := c.f.Cut(p); ok {
 					m, _ := p.Largest()
 					b.peak[a] = max(b.peak[a], math.Abs(m))
-					b.shear[a] = max(b.shear[a], math.Abs(p.V), math.Abs(p.Shear(p.To-p.From)))
+					b.shear[a] = max(b.shear[a], p.GreatestShear())
 				}
 			}
 			b.bends[a] = !(beyond <= c.bend.tiny[a])

@@ -65,6 +65,15 @@ func (c *calc) pairAxisOf() int {
 	return 1
 }
 
+// connectorsNotStated says what a pair lacks, with an example.
+func (c *calc) connectorsNotStated() string {
+	every := "600 mm"
+	if c.f.Env.Basis.Show.American() {
+		every = "24 in"
+	}
+	return "how the two angles are connected is not stated: connectors every " + every + " welded (or pretensioned, or snug)"
+}
+
 // pair takes what the two angles are, and refuses a pair whose connectors are not
 // known.
 func (c *calc) pair() {
@@ -74,14 +83,14 @@ func (c *calc) pair() {
 	}
 	if m.Connectors.Every == 0 {
 		if c.why == "" {
-			c.why = "how the two angles are connected is not stated: connectors every 600 mm welded (or pretensioned, or snug)"
+			c.why = c.connectorsNotStated()
 		}
 		return
 	}
 	c.take(symApart, standard.Known(m.Connectors.Every), m.Connectors.Kind)
 	c.take(symRi, leastRadius(m.Section.Shape), "one angle")
 	c.do(doComp)
-	c.assume("the ends of the pair are welded or have pretensioned bolts (E6.1); connectors every %s, %s", unit.Short(m.Connectors.Every*1000, 4)+" mm", m.Connectors.Kind)
+	c.assume("the ends of the pair are welded or have pretensioned bolts (E6.1); connectors every %s, %s", c.f.Env.Basis.Show.Short(m.Connectors.Every, unit.Length, 4), m.Connectors.Kind)
 }
 
 // leastRadius is the least radius of gyration of one angle of a pair, m.
@@ -130,7 +139,7 @@ func (c *calc) spacing() {
 		c.cover(rule, standard.NotApplicable, notPressed)
 		return
 	case c.f.Member.Connectors.Every == 0:
-		c.undecided(rule, clause, "how the two angles are connected is not stated: connectors every 600 mm welded (or pretensioned, or snug)")
+		c.undecided(rule, clause, c.connectorsNotStated())
 		return
 	case !c.f.Stands[0]:
 		c.undecided(rule, clause, c.f.NotHeld(0))

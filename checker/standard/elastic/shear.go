@@ -58,7 +58,7 @@ func (c *calc) shear() {
 				if !ok {
 					continue
 				}
-				if v := math.Max(math.Abs(p.V), math.Abs(p.Shear(p.To-p.From))); v > worst {
+				if v := p.GreatestShear(); v > worst {
 					worst, at = v, k
 				}
 			}

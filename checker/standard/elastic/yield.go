@@ -138,7 +138,7 @@ type point struct {
 func (c *calc) stress(p point) float64 {
 	source := ""
 	if c.s.Recorded() {
-		source = fmt.Sprintf("%s, at %s m", c.f.Combinations[p.combination].Name, metres(p.z))
+		source = fmt.Sprintf("%s, at %s", c.f.Combinations[p.combination].Name, c.f.Place(p.z))
 	}
 	c.s.Take(symNs, p.n, source)
 	formula := doAxial
@@ -184,8 +184,6 @@ func curvesAt(curves []action.Curve, z float64) float64 {
 	}
 	return m
 }
-
-func metres(z float64) string { return unit.Exact(math.Round(z*1e3) / 1e3) }
 
 // amplify computes the amplification of the moments about an axis: NaN when the
 // factored axial force reaches the critical load.

@@ -127,7 +127,7 @@ func (c *calc) given() {
 	if !ok {
 		fy = math.NaN()
 	}
-	if c.beyond = c.ed.outOfScope(m.Material, fy); c.beyond != "" {
+	if c.beyond = c.ed.outOfScope(m.Material, fy, c.f.Env.Basis.Show); c.beyond != "" {
 		fy = math.NaN()
 	}
 	title := m.Section.Title()

@@ -21,7 +21,7 @@ type edition struct {
 	extra      map[string]*derivation.Formula              // formulas that 2005 does not have
 	renumber   func(string) string                         // its clause for one of 2005; nil for 2005
 	curves     func(s *model.Section, s460 bool) (major, minor curve)
-	outOfScope func(m *model.Material, fy float64) string
+	outOfScope func(m *model.Material, fy float64, units derivation.Units) string
 }
 
 var edition2005 = &edition{name: "EN 1993-1-1:2005", annexes: annexNames(), set: set, curves: curves, outOfScope: outOfScope}
@@ -102,9 +102,9 @@ func New(e Edition) Standard {
 		ed.extra[name] = own.Formula(id, t.Text, t.Clause)
 	}
 	own.Seal()
-	ed.outOfScope = func(m *model.Material, fy float64) string {
+	ed.outOfScope = func(m *model.Material, fy float64, units derivation.Units) string {
 		if fy > e.Yield*(1+1e-9) {
-			return "a yield strength above " + unit.Short(e.Yield/1e6, 3) + " N/mm2 is beyond " + e.Name
+			return "a yield strength above " + units.Short(e.Yield, unit.Stress, 3) + " is beyond " + e.Name
 		}
 		return ""
 	}

@@ -26,7 +26,7 @@ type beamColumn struct {
 func (b *beamColumn) check() outcome {
 	c := &model.Case{}
 	c.Name = "load"
-	env := &model.Env{Cases: []*model.Case{c}, Basis: model.Basis{Standard: Standard{}.Name(), Annex: b.annex, Interaction: model.Choice{Word: map[bool]string{true: "A"}[b.annexA]}, Overrides: map[string]model.Override{}}}
+	env := &model.Env{Cases: []*model.Case{c}, Basis: model.Basis{Standard: Standard{}.Name(), Annex: b.annex, Interaction: model.Chosen{Word: map[bool]string{true: "A"}[b.annexA]}, Overrides: map[string]model.Override{}}}
 	for k, v := range b.override {
 		env.Basis.Overrides[k] = v
 	}

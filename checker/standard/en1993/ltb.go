@@ -183,7 +183,7 @@ func (c *calc) segmentGiven(s segment) {
 	if c.s.Recorded() {
 		source = "held sideways and against twist at both ends"
 		if c.lat.segments[0].to < c.f.Member.Height || s.from > 0 {
-			source = fmt.Sprintf("from %s m to %s m, %s", unit.Number(s.from, 4), unit.Number(s.to, 4), source)
+			source = fmt.Sprintf("from %s to %s, %s", c.f.Place(s.from), c.f.Place(s.to), source)
 		}
 	}
 	if s.factor != 1 && c.s.Recorded() {

@@ -49,7 +49,7 @@ func TestSettings(t *testing.T) {
 		{"United Kingdom", "", "", true, false, true, 1},
 		{"United Kingdom", "general", "A", false, true, true, 1},
 	} {
-		s := settingsOf(&model.Basis{Annex: c.annex, Lateral: model.Choice{Word: c.lateral}, Interaction: model.Choice{Word: c.interaction}})
+		s := settingsOf(&model.Basis{Annex: c.annex, Lateral: model.Chosen{Word: c.lateral}, Interaction: model.Chosen{Word: c.interaction}})
 		m0, _ := s.partial("gamma_M0", 1)
 		m1, _ := s.partial("gamma_M1", 1)
 		m2, _ := s.partial("gamma_M2", 1.25)
