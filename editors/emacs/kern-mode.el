@@ -39,10 +39,10 @@
 (defconst kern-mode-statements
   '("accidental" "actions" "amplification" "base" "checked" "choose" "connected" "connectors"
     "critical" "date" "depart" "effective" "factor_buckling" "factor_yield" "from" "gamma_G_inf"
-    "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height" "hold" "imperfection" "joints" "length"
-    "lift" "limit" "load" "material" "moments" "name" "net" "note" "number" "permanent" "prepared"
-    "reduce" "reduction" "require" "revision" "roofs" "section" "selfweight" "show" "stability"
-    "standard" "strengths" "top" "xi")
+    "gamma_G_sup" "gamma_M0" "gamma_M1" "gamma_Q" "height" "hold" "imperfection" "interaction"
+    "joints" "lateral" "length" "lift" "limit" "load" "material" "moments" "name" "net" "note"
+    "number" "permanent" "prepared" "reduce" "reduction" "require" "revision" "roofs" "section"
+    "selfweight" "show" "stability" "standard" "strengths" "top" "xi")
   "Words that begin a line in a block.")
 ;; end of statements
 

@@ -13,7 +13,7 @@ syn match kernShape /\v<%(angle|bar|channel|doubleangle|given|isection|pipe|rod|
 syn match kernFunction /\v<%(abs|cos|max|min|sin|sqrt|tan)>\ze\s*\(/
 syn match kernConstant /\v<%(g|pi)>/
 syn match kernProperty /\v%(^|[;{])\s*\zs<%(A|A_v_major|A_v_minor|E|G|I_major|I_minor|I_t|I_w|W_major|W_minor|Wpl_major|Wpl_minor|class|corner|curve|curve_major|curve_minor|density|depth|diameter|flange|fu|fy|gap|made|nu|outside|root|thickness|toe|wall|web|width)>\ze\s*\=/
-syn match kernStatement /\v%(^|[;{])\s*\zs<%(accidental|actions|amplification|base|checked|choose|connected|connectors|critical|date|depart|effective|factor_buckling|factor_yield|from|gamma_G_inf|gamma_G_sup|gamma_M0|gamma_M1|gamma_Q|height|hold|imperfection|joints|length|lift|limit|load|material|moments|name|net|note|number|permanent|prepared|reduce|reduction|require|revision|roofs|section|selfweight|show|stability|standard|strengths|top|xi)>/ nextgroup=kernUnits skipwhite
+syn match kernStatement /\v%(^|[;{])\s*\zs<%(accidental|actions|amplification|base|checked|choose|connected|connectors|critical|date|depart|effective|factor_buckling|factor_yield|from|gamma_G_inf|gamma_G_sup|gamma_M0|gamma_M1|gamma_Q|height|hold|imperfection|interaction|joints|lateral|length|lift|limit|load|material|moments|name|net|note|number|permanent|prepared|reduce|reduction|require|revision|roofs|section|selfweight|show|stability|standard|strengths|top|xi)>/ nextgroup=kernUnits skipwhite
 syn match kernDeclaration /\v^\s*\zs<%(basis|case|column|combination|exclusive|forces|include|level|material|project|section|strut|tie)>%(\s*\=)@!/ nextgroup=kernName skipwhite
 " end of words
 syn match kernName contained /\v\k+%(\s*,\s*\k+)*/
