@@ -155,9 +155,16 @@ func (s *subject) shared() (users []*checker.Result, at edit.Line, ok bool) {
 	return nil, edit.Line{}, false
 }
 
+// manyUsers is how many members may share a section that one for all is looked
+// for unasked.
+const manyUsers = 300
+
 // group gives the lightest section that serves all members that share one.
 func (s *subject) group(o Options) []Mend {
 	users, at, ok := s.shared()
+	if o.Kinds == nil && len(users) > manyUsers {
+		return nil // somebody waits; it is looked for where it is asked for
+	}
 	if !ok || len(users) < 2 || checker.Fixed(s.r.Member) != "" {
 		return nil
 	}
