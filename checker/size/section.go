@@ -131,9 +131,9 @@ func (s *subject) shared() (users []*checker.Result, at edit.Line, ok bool) {
 	for _, r := range s.report.Members {
 		u := r.Member
 		switch {
-		case u.Section == nil || len(r.Missing) > 0:
+		case len(r.Missing) > 0 || u.Section == nil && named == nil:
 		case named != nil && slices.ContainsFunc(u.Uses, func(n *model.Named) bool { return n.Place == named.Place }):
-			if u.Section != m.Section && !u.Section.Same(m.Section) || checker.Fixed(u) != "" {
+			if u.Section == nil || u.Section != m.Section && !u.Section.Same(m.Section) || checker.Fixed(u) != "" {
 				return nil, edit.Line{}, false
 			}
 			users = append(users, r)
