@@ -201,7 +201,6 @@ var Words = map[string]string{
 	"sway": "sideways movement of the top", "deflection": "sideways movement from the line between neighbouring holds", "span": "the distance of neighbouring holds",
 	"under": "in which combinations", "spring": "an elastic hold of an end", "stiffness": "force by movement, or moment by rotation", "exact": "of the whole member",
 	"braced": "the joints cannot move sideways against each other", "direct": "the direct analysis method", "effective": "effective lengths",
-	"depth": "the overall depth of a section", "width": "the overall width of a section",
 	"every": "the distance between them", "pretensioned": "by pretensioned bolts", "snug": "by bolts that are not pretensioned",
 	"long": "the longer leg of an angle", "short": "the shorter leg of an angle", "leg": "one of the two plates of an angle", "space": "web member of a box or space truss",
 }

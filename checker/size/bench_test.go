@@ -20,16 +20,16 @@ func twenty() string {
 	return b.String()
 }
 
-func columns(n int) *checker.Report {
+func columns(n int, write func(n int, seed uint64) string) *checker.Report {
 	shared := strings.Replace(generate.Shared, "    actions  \"EN 1990:2002\" eq \"6.10\"\n", "", 1)
-	text := shared + twenty() + generate.Columns(n, 3)
+	text := shared + twenty() + write(n, 3)
 	return checker.Check(lang.Load([]string{"a.kern"}, func(string) (string, error) { return text, nil }, nil), nil)
 }
 
 // BenchmarkSections is the lightest section, of the own family and of all that
 // are alike, of 1,000 columns under 20 combinations.
 func BenchmarkSections(b *testing.B) {
-	report := columns(1000)
+	report := columns(1000, generate.Columns)
 	for b.Loop() {
 		found := 0
 		for _, m := range size.All(report, report.Members, size.Options{Kinds: []size.Kind{size.Section}}, nil) {
@@ -41,8 +41,12 @@ func BenchmarkSections(b *testing.B) {
 
 // BenchmarkMends is all mends of one member that fails, as the editor asks for
 // them, in a file of 1,000.
-func BenchmarkMends(b *testing.B) {
-	report := columns(1000)
+func BenchmarkMends(b *testing.B) { mends(b, columns(1000, generate.Columns)) }
+
+// BenchmarkMendsBent is the same of a member that is bent about both axes.
+func BenchmarkMendsBent(b *testing.B) { mends(b, columns(1000, generate.BentColumns)) }
+
+func mends(b *testing.B, report *checker.Report) {
 	for _, m := range report.Members {
 		if m.Verdict.String() != "fails" {
 			continue

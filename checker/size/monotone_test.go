@@ -175,3 +175,25 @@ func TestChoice(t *testing.T) {
 		}
 	}
 }
+
+// TestGroupWithLifts: a section that is a lift of another member too is not
+// changed for all, as that member is not looked at.
+func TestGroupWithLifts(t *testing.T) {
+	text := `basis { standard "EN 1993-1-1:2005" }
+section post = "HEB 100"
+column A1 { section = post; material = "S235"; height = 5 m; load 400 kN }
+column A2 as A1 { load 300 kN }
+LAST
+`
+	for last, want := range map[string]bool{
+		"": true,
+		"column A3 { section = \"HEB 200\"; material = \"S235\"; height = 5 m; lift base to 2 m { section = post }; load 50 kN }": false,
+		"column A3 { material = \"S235\"; height = 5 m; lift base to 5 m { section = post }; load 50 kN }":                        false,
+	} {
+		report := check(t, strings.Replace(text, "LAST", last, 1))
+		found := size.Mends(report, report.Members[0], size.Options{Kinds: []size.Kind{size.Group}})
+		if (len(found) > 0) != want {
+			t.Errorf("with %q: %d sections for all", last, len(found))
+		}
+	}
+}

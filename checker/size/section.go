@@ -131,9 +131,9 @@ func (s *subject) shared() (users []*checker.Result, at edit.Line, ok bool) {
 	for _, r := range s.report.Members {
 		u := r.Member
 		switch {
-		case u.Section == nil || len(r.Missing) > 0:
+		case len(r.Missing) > 0 || u.Section == nil && named == nil:
 		case named != nil && slices.ContainsFunc(u.Uses, func(n *model.Named) bool { return n.Place == named.Place }):
-			if u.Section != m.Section && !u.Section.Same(m.Section) || checker.Fixed(u) != "" {
+			if u.Section == nil || u.Section != m.Section && !u.Section.Same(m.Section) || checker.Fixed(u) != "" {
 				return nil, edit.Line{}, false
 			}
 			users = append(users, r)
@@ -155,9 +155,16 @@ func (s *subject) shared() (users []*checker.Result, at edit.Line, ok bool) {
 	return nil, edit.Line{}, false
 }
 
+// manyUsers is how many members may share a section that one for all is looked
+// for unasked.
+const manyUsers = 300
+
 // group gives the lightest section that serves all members that share one.
 func (s *subject) group(o Options) []Mend {
 	users, at, ok := s.shared()
+	if o.Kinds == nil && len(users) > manyUsers {
+		return nil // somebody waits; it is looked for where it is asked for
+	}
 	if !ok || len(users) < 2 || checker.Fixed(s.r.Member) != "" {
 		return nil
 	}

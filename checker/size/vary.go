@@ -161,6 +161,12 @@ func (s *subject) load(t *trial, all []edit.Line, i int, value *lang.Expr, up bo
 		return Mend{}, false
 	}
 	u, written := s.r.Units().For(q.Dim), unitOf(value)
+	if written == "" && q.Dim == unit.Area { // a floor, not a section
+		written = "m2"
+		if s.r.Units().American() {
+			written = "ft2"
+		}
+	}
 	for _, known := range unit.For(q.Dim) {
 		if known.Symbol == written {
 			u = known

@@ -147,6 +147,8 @@ func (p *pattern) paramWords(param int) string {
 				words = fixedWords[e.words[0]]
 			case e.words[0] == "section":
 				words = "the cross-section"
+			case e.words[0] == "depth": // no words that are taken: a calculation may have such names
+				words = "depth or width: the overall dimension of the section"
 			case p.form.Word == "class":
 				words = "the class of the cross-section"
 			case strings.HasPrefix(p.form.Word, "curve"):
