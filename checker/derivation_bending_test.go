@@ -39,6 +39,7 @@ section lun  = angle { depth = 150 mm; width = 100 mm; wall = 14 mm; root = 12 m
 section told = given { A = 50 cm2; I_major = 4000 cm4; I_minor = 1200 cm4; W_major = 350 cm3; W_minor = 120 cm3; Wpl_major = 400 cm3; Wpl_minor = 190 cm3; I_t = 20 cm4; I_w = 60000 cm6; thickness = 12 mm; class = 1; curve = c }
 
 column I1 { section = ipe; material = steel; height = 4 m; load 150 kN; load 40 kNm about major at top; load 4 kNm about minor at top }
+strut LEG { section = lun; material = mild; length = 2.4 m; load 60 kN; connected by long leg }
 column I2 as I1 { load 150 kN; load 20 kNm about major at top; load 20 kNm about major at base }
 column I3 as I1 { load 150 kN; load 10 kN/m about major }
 column I4 as I1 { load 150 kN; load 30 kN across major at 2 m }

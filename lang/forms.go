@@ -194,6 +194,7 @@ var Words = map[string]string{
 	"psi_0": "the combination value of a variable action", "psi_1": "its frequent value", "psi_2": "its quasi-permanent value",
 	"cases": "load cases", "together": "at the same time", "alone": "not at the same time", "independent": "each by itself",
 	"on": "counted", "off": "not counted", "lengths": "effective lengths", "theoretical": "of ideal ends", "recommended": "recommended for design",
+	"general": "for all sections", "buckling": "the method of lateral-torsional buckling",
 	"continuous": "of the member as a continuous beam", "nominal": "of simple construction, at each level by itself",
 	"storeys": "the number of storeys above (alpha_n)", "area": "the area of floor above (alpha_A)", "tributary": "that a member carries",
 	"K_LL":   "the live load element factor",

@@ -153,6 +153,8 @@ func (p *pattern) paramWords(param int) string {
 				words = "the class of the cross-section"
 			case strings.HasPrefix(p.form.Word, "curve"):
 				words = "a buckling curve"
+			case p.form.Word == "interaction":
+				words = "the annex with the interaction factors"
 			case len(e.words) > 1:
 				var each []string
 				for _, w := range e.words {

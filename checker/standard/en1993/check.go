@@ -107,10 +107,9 @@ func (c *calc) run() {
 	c.local()
 	c.compression()
 	c.tension()
-	c.flexural(0, c.major)
-	c.flexural(1, c.minor)
-	if c.f.Member.Leg.Stated() {
-		c.cover("flexural-buckling-minor", standard.NotCovered, standard.ByLeg+" (EN 1993-1-1 BB.1.2)")
+	if !c.byLeg() {
+		c.flexural(0, c.major)
+		c.flexural(1, c.minor)
 	}
 	c.torsional()
 	c.bending()
@@ -269,6 +268,10 @@ func (c *calc) netSection(n float64) {
 	}
 	if !own && !(ratio.Value <= 1) {
 		c.undecided(rule, clause, "net_ratio is more than 1: holes leave no more than the whole area")
+		return
+	}
+	if m.Leg.Stated() {
+		c.cover(rule, standard.NotCovered, "the angle is connected by one leg: find its net section by EN 1993-1-8 3.10.3, by hand (6.2.3(5))")
 		return
 	}
 	c.group(rule)

@@ -8,7 +8,7 @@ type Clause struct {
 	How           string // the rule that checks it, why it does not apply, or what a person does by hand
 }
 
-// Clauses is the coverage of EN 1993-1-1:2005, sections 5 and 6, clause by
+// Clauses is the coverage of EN 1993-1-1:2005, sections 5 and 6 and annex BB, clause by
 // clause. Members say the same by rule; this is the table behind them.
 var Clauses = []Clause{
 	{"5.1", "Structural modelling", "not covered", "by hand: joints are taken as the ends say; the frame is outside the calculation"},
@@ -32,7 +32,7 @@ var Clauses = []Clause{
 	{"6.2.2.5", "Effective sections of class 4", "checked", "doubly symmetric I and rectangular hollow sections, EN 1993-1-5 4.4; others undecided"},
 	{"6.2.3(1), (2)", "Tension", "checked", "section-tension, net-section"},
 	{"6.2.3(3), (4)", "Capacity design, category C connections", "not covered", "by hand: N_pl,Rd ≤ N_u,Rd, and N_net,Rd"},
-	{"6.2.3(5)", "Angles connected by one leg", "not covered", "by hand: EN 1993-1-8 3.10.3"},
+	{"6.2.3(5)", "Angles connected by one leg", "not covered", "by hand: EN 1993-1-8 3.10.3; net-section says so of a member that is connected by one leg"},
 	{"6.2.4", "Compression", "checked", "section-compression"},
 	{"6.2.5(1) to (3)", "Bending", "checked", "section-bending-major, section-bending-minor"},
 	{"6.2.5(4) to (6)", "Holes in bending", "not covered", "by hand: A_f,net 0.9 f_u/gamma_M2 ≥ A_f f_y/gamma_M0"},
@@ -56,6 +56,6 @@ var Clauses = []Clause{
 	{"6.3.4", "General method", "not covered", "by hand, where 6.3.3 leaves a member undecided"},
 	{"6.3.5", "Members with plastic hinges", "not applicable", "no plastic analysis"},
 	{"6.4", "Built-up compression members", "not covered", "by hand: the language has no built-up members"},
-	{"BB.1.2", "Angles as web members", "not covered", "by hand: effective slenderness lambda_eff; here angles are loaded in their centroid over K L"},
+	{"BB.1.2", "Angles as web members", "checked", "flexural-buckling-major, flexural-buckling-minor, with connected by long or short leg; other angles are loaded in their centroid over K L; one bolt at an end (2): by hand"},
 	{"BB.2", "Continuous restraint", "not covered", "by hand: holds are points"},
 }
