@@ -265,7 +265,7 @@ func (c *calc) buckling(a int) {
 		c.cover(rule, standard.NotCovered, c.f.NotHeld(a))
 		return
 	}
-	worst, at, combination, compressed := math.Inf(-1), 0, -1, false
+	worst, most, at, combination, compressed := math.Inf(-1), 0.0, 0, -1, false
 	c.s.Recording(nil)
 	for i, s := range c.f.Stretches[a] {
 		if !c.f.Exact[a] {
@@ -281,8 +281,13 @@ func (c *calc) buckling(a int) {
 				c.stretch(a, s, k)
 			}
 			c.s.Take(x.n, n, "")
-			if u := c.s.Do(x.doU); u > worst || math.IsNaN(u) {
-				worst, at, combination = u, i, k
+			u := c.s.Do(x.doU)
+			more := u > worst
+			if c.f.Exact[a] && math.Abs(u-worst) <= 1e-12*worst {
+				more = n > most // all of the member buckles at once: rounding must not say which part is shown
+			}
+			if more || math.IsNaN(u) {
+				worst, most, at, combination = u, n, i, k
 				if math.IsNaN(u) {
 					break
 				}
