@@ -64,14 +64,14 @@
 ;; generated: particles
 (defconst kern-mode-particles
   '("ASD" "K_LL" "LRFD" "about" "accidental" "across" "alone" "and" "annex" "area" "as" "at"
-    "because" "both" "braced" "by" "cases" "characteristic" "cold" "compression" "continuous" "dead"
-    "deflection" "depth" "direct" "effective" "eq" "every" "exact" "fixed" "floor" "free" "frequent"
-    "from" "guided" "hot" "imposed" "independent" "leg" "lengths" "live" "long" "major" "minor"
-    "negative" "nominal" "off" "offset" "on" "per" "permanent" "persistent" "pinned" "positive"
-    "pretensioned" "psi_0" "psi_1" "psi_2" "quasipermanent" "rain" "recommended" "rolled" "roof"
-    "secant" "seismic" "short" "simple" "slenderness" "snow" "snug" "space" "span" "spring"
-    "stiffness" "storeys" "sway" "temperature" "theoretical" "to" "together" "top" "tributary"
-    "twist" "under" "utilisation" "welded" "width" "wind")
+    "because" "both" "braced" "buckling" "by" "cases" "characteristic" "cold" "compression"
+    "continuous" "dead" "deflection" "direct" "effective" "eq" "every" "exact" "fixed" "floor"
+    "free" "frequent" "from" "general" "guided" "hot" "imposed" "independent" "leg" "lengths" "live"
+    "long" "major" "minor" "negative" "nominal" "off" "offset" "on" "per" "permanent" "persistent"
+    "pinned" "positive" "pretensioned" "psi_0" "psi_1" "psi_2" "quasipermanent" "rain" "recommended"
+    "rolled" "roof" "secant" "seismic" "short" "simple" "slenderness" "snow" "snug" "space" "span"
+    "spring" "stiffness" "storeys" "sway" "temperature" "theoretical" "to" "together" "top"
+    "tributary" "twist" "under" "utilisation" "welded" "wind")
   "Words inside statements.")
 ;; end of particles
 

@@ -8,7 +8,7 @@ syn spell toplevel
 syn match kernOperator /[-+*\/^=<>]/
 syn match kernDefinition /\v^\s*\zs[[:alpha:]_\u0370-\u03ff]\k*\ze\s*\=/
 " generated: words
-syn match kernParticle /\v<%(ASD|K_LL|LRFD|about|accidental|across|alone|and|annex|area|as|at|because|both|braced|by|cases|characteristic|cold|compression|continuous|dead|deflection|depth|direct|effective|eq|every|exact|fixed|floor|free|frequent|from|guided|hot|imposed|independent|leg|lengths|live|long|major|minor|negative|nominal|off|offset|on|per|permanent|persistent|pinned|positive|pretensioned|psi_0|psi_1|psi_2|quasipermanent|rain|recommended|rolled|roof|secant|seismic|short|simple|slenderness|snow|snug|space|span|spring|stiffness|storeys|sway|temperature|theoretical|to|together|top|tributary|twist|under|utilisation|welded|width|wind)>/
+syn match kernParticle /\v<%(ASD|K_LL|LRFD|about|accidental|across|alone|and|annex|area|as|at|because|both|braced|buckling|by|cases|characteristic|cold|compression|continuous|dead|deflection|direct|effective|eq|every|exact|fixed|floor|free|frequent|from|general|guided|hot|imposed|independent|leg|lengths|live|long|major|minor|negative|nominal|off|offset|on|per|permanent|persistent|pinned|positive|pretensioned|psi_0|psi_1|psi_2|quasipermanent|rain|recommended|rolled|roof|secant|seismic|short|simple|slenderness|snow|snug|space|span|spring|stiffness|storeys|sway|temperature|theoretical|to|together|top|tributary|twist|under|utilisation|welded|wind)>/
 syn match kernShape /\v<%(angle|bar|channel|doubleangle|given|isection|pipe|rod|tee|tube)>/
 syn match kernFunction /\v<%(abs|cos|max|min|sin|sqrt|tan)>\ze\s*\(/
 syn match kernConstant /\v<%(g|pi)>/
