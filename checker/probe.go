@@ -12,12 +12,33 @@ import (
 // copy whose loads, holds and lifts it may alter, and nothing else that is shared. A
 // member that lacks something is judged as it is.
 func (r *Result) With(change func(m *model.Member)) *Result {
+	return evaluate(r.env, r.changed(change), r.given)
+}
+
+func (r *Result) changed(change func(m *model.Member)) *model.Member {
 	m := *r.Member
 	m.Loads, m.Holds, m.Lifts = slices.Clone(m.Loads), slices.Clone(m.Holds), slices.Clone(m.Lifts)
 	if len(m.Missing) == 0 {
 		change(&m)
 	}
-	return evaluate(r.env, &m, r.combinations)
+	return &m
+}
+
+// FailsUnder tells whether the member fails after a change under one of its
+// combinations alone, by its index: then it fails under all of them together. It
+// is false where that cannot be told, as for a member that lacks something.
+func (r *Result) FailsUnder(combination int, change func(m *model.Member)) bool {
+	s := find(r.Standard)
+	if s == nil || len(r.Missing) > 0 || combination < 0 || combination >= len(r.combinations) {
+		return false
+	}
+	out := standard.Run(s, standard.NewFrame(r.env, r.changed(change), r.combinations[combination:combination+1]), nil)
+	for _, c := range out.Checks {
+		if c.Verdict == standard.Fails && !r.departs(c.Rule) {
+			return true
+		}
+	}
+	return false
 }
 
 // Probe judges the member under one of its combinations, by its index, with the

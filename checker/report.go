@@ -88,6 +88,7 @@ type Result struct {
 	Missing []string
 
 	env          *model.Env
+	given        []model.Combination // without the forces of imperfections
 	combinations []model.Combination
 	problems     []lang.Diagnostic
 }
@@ -131,9 +132,10 @@ func evaluate(env *model.Env, m *model.Member, combinations []model.Combination)
 	if m.Imported != nil {
 		combinations = m.Imported.List()
 	}
+	given := combinations
 	combinations = standard.Imperfections(env, m, combinations)
 	r := &Result{Name: m.Name, Title: m.Title, Member: m, Standard: env.Basis.Standard, Utilisation: math.NaN(),
-		env: env, combinations: combinations, Departures: m.Departs, Missing: m.Missing}
+		env: env, given: given, combinations: combinations, Departures: m.Departs, Missing: m.Missing}
 	s := find(env.Basis.Standard)
 	switch {
 	case len(r.Missing) > 0:

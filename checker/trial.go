@@ -2,6 +2,7 @@ package checker
 
 import (
 	"math"
+	"slices"
 
 	"kern/checker/model"
 	"kern/checker/standard"
@@ -19,27 +20,52 @@ func StandardNamed(name string) standard.Standard { return find(name) }
 // must have the declaration's names where the declaration has them; nil
 // otherwise.
 func Trial(c *model.Calculation, decl *lang.Decl, text string) []*Result {
+	return NewTrials(c, decl).Of(text)
+}
+
+// Trials tries texts of one declaration, one after another.
+type Trials struct {
+	calculation  *model.Calculation
+	decl         *lang.Decl
+	also         []*lang.Decl
+	env          model.Env
+	combinations []model.Combination
+}
+
+// NewTrials makes ready to try texts of a declaration. The members of the
+// declarations named behind it, which lean on it, are worked out too.
+func NewTrials(c *model.Calculation, decl *lang.Decl, also ...*lang.Decl) *Trials {
+	t := &Trials{calculation: c, decl: decl, also: also, env: *c.Env}
+	t.env.Names = map[string]*model.Named{}
+	for name, n := range c.Env.Names {
+		if n.Kind != model.MemberName {
+			t.env.Names[name] = n
+		}
+	}
+	for _, d := range append([]*lang.Decl{decl}, also...) {
+		for _, name := range leaning(c.Env, d) {
+			t.env.Names[name] = c.Env.Names[name]
+		}
+	}
+	t.combinations = t.env.All()
+	return t
+}
+
+// Of works out the members with another text: those of the declaration, then
+// those that lean on it.
+func (t *Trials) Of(text string) []*Result {
+	decl := t.decl
 	f := lang.Parse(decl.File, text, nil)
 	if len(f.Decls) != 1 || f.Unreadable != "" {
 		return nil
 	}
 	d := f.Decls[0]
-	env := *c.Env
-	env.Names = map[string]*model.Named{}
-	for name, n := range c.Env.Names {
-		if n.Kind != model.MemberName {
-			env.Names[name] = n
-		}
-	}
-	for _, name := range leaning(c.Env, decl) {
-		env.Names[name] = c.Env.Names[name]
-	}
 	for i, s := range decl.Stmts {
 		if i >= len(d.Stmts) || d.Stmts[i].Word != s.Word {
 			return nil
 		}
 		for _, e := range s.Args {
-			n := env.Names[e.Text]
+			n := t.calculation.Env.Names[e.Text]
 			if n == nil || n.Place != (lang.Place{Decl: decl, Span: e.Span}) {
 				continue
 			}
@@ -48,14 +74,41 @@ func Trial(c *model.Calculation, decl *lang.Decl, text string) []*Result {
 			}
 			moved := *n
 			moved.Place.Decl, moved.Stmt = d, d.Stmts[i]
-			env.Names[e.Text] = &moved
+			t.env.Names[e.Text] = &moved
 		}
 	}
 	var out []*Result
-	combinations := env.All()
-	for _, m := range model.Members(&env, d, departable, env.Results()) {
-		if m.Name != "" {
-			out = append(out, evaluate(&env, m, combinations))
+	for _, d := range append([]*lang.Decl{d}, t.also...) {
+		for _, m := range model.Members(&t.env, d, departable, t.env.Results()) {
+			if m.Name != "" {
+				out = append(out, evaluate(&t.env, m, t.combinations))
+			}
+		}
+	}
+	return out
+}
+
+// Leaners are the declarations of a calculation whose members are "as" one of a
+// declaration, themselves or through others, in the order of the files.
+func Leaners(c *model.Calculation, decl *lang.Decl) []*lang.Decl {
+	on := map[*lang.Decl]bool{decl: true}
+	var out []*lang.Decl
+	for again := true; again; {
+		again = false
+		for _, d := range c.Env.MemberDecls() {
+			if on[d] {
+				continue
+			}
+			for _, s := range d.Stmts {
+				i := slices.IndexFunc(s.Args, func(e *lang.Expr) bool { return e.Is("as") })
+				if i < 0 || i+1 >= len(s.Args) {
+					continue
+				}
+				if n := c.Env.Names[s.Args[i+1].Text]; n != nil && n.Kind == model.MemberName && on[n.Place.Decl] && !on[d] {
+					on[d], again = true, true
+					out = append(out, d)
+				}
+			}
 		}
 	}
 	return out

@@ -22,8 +22,8 @@ func measure(text string) (f *File, took time.Duration, allocated, held int64) {
 	return f, took, int64(after.TotalAlloc - before.TotalAlloc), int64(kept.HeapAlloc) - int64(before.HeapAlloc)
 }
 
-// A line of 50 MB is one statement that is refused or one token: it costs time,
-// not memory.
+// A line of 50 MB is one statement that is refused or one token: it costs time in
+// proportion (with the square of it this test would not end), not memory.
 func TestLongLines(t *testing.T) {
 	const whole, part = 50 << 20, 10 << 20
 	repeat := func(s string, size int) string { return strings.Repeat(s, size/len(s)) }
@@ -45,16 +45,7 @@ func TestLongLines(t *testing.T) {
 	} {
 		text := c.text + "\nlast = 1\n"
 		f, took, allocated, held := measure(text)
-		for range 2 { // a busy machine is no failure
-			if took <= 3*time.Second {
-				break
-			}
-			f, took, allocated, held = measure(text)
-		}
 		t.Logf("%-24s %6.2f s, %6.1f MB allocated, %6.1f MB held", c.name, took.Seconds(), float64(allocated)/1e6, float64(held)/1e6)
-		if took > 3*time.Second {
-			t.Errorf("%s took %v", c.name, took)
-		}
 		if allocated > 16<<20 || held > 8<<20 {
 			t.Errorf("%s: %d bytes allocated, %d held", c.name, allocated, held)
 		}

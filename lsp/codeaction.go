@@ -54,7 +54,7 @@ func (s *Server) CodeAction(ctx context.Context, p *protocol.CodeActionParams) (
 	}
 	out := []protocol.CommandOrCodeAction{}
 	span := f.Span(r)
-	offers := offer.At(offer.Request{Report: f.report, File: f.Name, Span: span, Want: func(k offer.Kind) bool {
+	offers := offer.At(offer.Request{Report: f.report, File: f.Name, Span: span, Mends: f.mends, Want: func(k offer.Kind) bool {
 		if automatic && span.Len() == 0 {
 			return k == offer.QuickFix // while somebody moves about, only what is wrong is worth a sign
 		}
@@ -156,7 +156,7 @@ func (s *Server) CodeActionResolve(ctx context.Context, p *protocol.CodeAction) 
 	if now := f.Version(f.Name); (now == nil) != (d.Version == nil) || now != nil && *now != *d.Version {
 		return nil, protocol.ErrContentModified
 	}
-	for _, o := range offer.At(offer.Request{Report: f.report, File: f.Name, Span: lang.Span{Start: d.Span[0], End: d.Span[1]}, Want: func(k offer.Kind) bool { return string(k) == d.Kind }}) {
+	for _, o := range offer.At(offer.Request{Report: f.report, File: f.Name, Mends: f.mends, Span: lang.Span{Start: d.Span[0], End: d.Span[1]}, Want: func(k offer.Kind) bool { return string(k) == d.Kind }}) {
 		if o.Title != d.Title || (o.Mends != nil) != (d.Diagnostic != "") || o.Mends != nil && diagnosticKey(*o.Mends) != d.Diagnostic {
 			continue
 		}

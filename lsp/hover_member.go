@@ -34,6 +34,8 @@ func (h *hovering) member(r *checker.Result) {
 	}
 	p.Table(checkHead, "lrrrl", rows)
 	openPoints(p, r)
+	h.sized(r)
+	h.sensitivity(r)
 	if len(r.Assumptions) > 0 {
 		p.Text(output.Words("Assumed: " + strings.Join(r.Assumptions, "; ") + "."))
 	}

@@ -7,6 +7,7 @@ import (
 	"sync"
 
 	"kern/checker"
+	"kern/checker/size"
 	"kern/lang"
 
 	"go.lsp.dev/protocol"
@@ -28,6 +29,13 @@ type Snapshot struct {
 	project *lang.Project
 	report  *checker.Report
 	err     error
+	sized   sync.Map // what makes a member pass, by its result: looked for when somebody first asks
+}
+
+// mends gives what makes a member pass, or what more one that passes may take.
+func (s *Snapshot) mends(r *checker.Result) []size.Mend {
+	find, _ := s.sized.LoadOrStore(r, sync.OnceValue(func() []size.Mend { return size.Mends(s.report, r, size.Options{}) }))
+	return find.(func() []size.Mend)()
 }
 
 // wait has the snapshot worked out up to a stage. Only the waiting can be

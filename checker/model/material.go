@@ -77,11 +77,22 @@ func readGrade(r *reader, m *Material) bool {
 		r.problem(p)
 		return false
 	}
+	m.grade(g)
+	return true
+}
+
+// GradedMaterial is a steel grade as a calculation has it that names it.
+func GradedMaterial(g catalogue.Grade) *Material {
+	m := &Material{Name: g.Name}
+	m.grade(g)
+	return m
+}
+
+func (m *Material) grade(g catalogue.Grade) {
 	m.Grade = &g
 	m.E, m.G, m.Density = g.E, g.G, g.Density
 	m.Nu = 0.3
 	m.Fy, m.Fu = unknown, unknown
-	return true
 }
 
 // Ranges outside of which a material value is a slip of the unit, not a

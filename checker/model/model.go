@@ -141,8 +141,11 @@ type Material struct {
 	Nu      float64          // Poisson's ratio; 0 when G is stated by itself
 	Density float64          // kg/m3; NaN when not known
 	Fy, Fu  float64          // Pa, of stated values; NaN when not known
-	Assumed []string
-	Bad     bool
+	// Stronger is a factor on the strengths, with which sensitivities are found; 0 for
+	// none. No text can say it.
+	Stronger float64
+	Assumed  []string
+	Bad      bool
 }
 
 // StrengthOf is Strength for a section: an American grade depends on the form of
@@ -164,6 +167,12 @@ func (m *Material) StrengthOf(s *Section, table31 bool) (fy, fu float64, source 
 // the row of the table it comes from. It is false when there is none. See
 // StrengthOf for the strength in a section.
 func (m *Material) Strength(thickness float64, table31 bool) (fy, fu float64, source string, ok bool) {
+	if m.Stronger > 0 {
+		plain := *m
+		plain.Stronger = 0
+		fy, fu, source, ok = plain.Strength(thickness, table31)
+		return fy * m.Stronger, fu * m.Stronger, source, ok
+	}
 	if m.Grade == nil {
 		return m.Fy, m.Fu, "stated", m.Fy > 0
 	}
@@ -196,7 +205,8 @@ type Section struct {
 	Thickness float64
 	// CurveMajor and CurveMinor are stated buckling curves ("" to look them up).
 	CurveMajor, CurveMinor string
-	Class                  int // stated cross-section class, 0 to determine it
+	CornerStated           bool // the corner radius of a tube is given, not that of a product standard
+	Class                  int  // stated cross-section class, 0 to determine it
 	Assumed                []string
 	Bad                    bool
 }

@@ -109,6 +109,22 @@ func fromCatalogue(r *reader, e *lang.Expr, s *Section) bool {
 		r.problem(p)
 		return false
 	}
+	if err := s.roll(entry); err != nil {
+		r.fail("impossible-section", e.Span, "%s: %v", entry.Designation, err)
+		return false
+	}
+	return true
+}
+
+// RolledSection is a section of the catalogue as a calculation has it that names
+// its designation. Whoever uses the section gives it its name and place.
+func RolledSection(entry catalogue.Entry) (*Section, error) {
+	s := &Section{}
+	return s, s.roll(entry)
+}
+
+// roll gives a section the dimensions and properties of one of the catalogue.
+func (s *Section) roll(entry catalogue.Entry) error {
 	s.Designation, s.Standard, s.Shape = entry.Designation, entry.Standard, entry.Shape
 	if entry.Assumed != "" {
 		s.Assumed = append(s.Assumed, entry.Designation+" taken as "+entry.Assumed)
@@ -122,14 +138,13 @@ func fromCatalogue(r *reader, e *lang.Expr, s *Section) bool {
 	} else {
 		props, err := section.Compute(entry.Shape)
 		if err != nil {
-			r.fail("impossible-section", e.Span, "%s: %v", entry.Designation, err)
-			return false
+			return err
 		}
 		rolled.Store(entry.Designation, &props)
 		s.Properties = props
 	}
 	s.Thickness = thickest(s.Shape)
-	return true
+	return nil
 }
 
 // thickest is the thickness that decides a grade's strength.
@@ -294,6 +309,7 @@ func (s *Section) complete(corner float64, units derivation.Units) {
 				assume("'%s' with corners of outside radius %s (corner is not given)", s.Name, units.Short(shape.OuterRadius, unit.Length, 3))
 			}
 		} else {
+			s.CornerStated = true
 			shape.OuterRadius = corner
 			shape.InnerRadius = max(0, corner-shape.Wall)
 		}

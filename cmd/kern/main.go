@@ -51,6 +51,7 @@ func root() *cobra.Command {
 		watchCommand(),
 		sheetCommand(),
 		scheduleCommand(),
+		sizeCommand(),
 		formatCommand(),
 		rulesCommand(),
 		catalogueCommand(),

@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"kern/checker"
+	"kern/checker/edit"
 	"kern/lang"
 )
 
@@ -25,6 +26,7 @@ func (l *list) fixes() {
 			}
 			l.add(Offer{Kind: QuickFix, Title: f.Title, Preferred: i == safe(&d), Mends: &d, edits: func() []checker.Edit { return slices.Clone(f.Edits) }})
 		}
+		l.sized(&d)
 		l.depart(&d)
 	}
 }
@@ -74,18 +76,18 @@ const maxRounds = 10
 // mendAll makes every safe fix of the file, looks at the result again, and goes
 // on until nothing safe is left.
 func (l *list) mendAll() []checker.Edit {
-	report, p := l.Report, whole(l.file.Text)
+	report, p := l.Report, edit.Whole(l.file.Text)
 	for range maxRounds {
 		changes := safeChanges(diagnosticsOf(report, l.File), l.File)
 		if len(changes) == 0 {
 			break
 		}
-		p.apply(changes)
+		p.Apply(changes)
 		text := lang.Apply(report.Project.Files[l.File].Text, changes)
 		report = checker.CheckAgain(report, with(report.Project, l.File, text), nil)
 	}
 	var out []checker.Edit
-	for _, c := range p.changes(l.file.Text) {
+	for _, c := range p.Changes(l.file.Text) {
 		out = append(out, checker.Edit{File: l.File, Span: c.Span, New: c.New})
 	}
 	return out

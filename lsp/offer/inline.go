@@ -4,6 +4,7 @@ import (
 	"strings"
 
 	"kern/checker"
+	"kern/checker/edit"
 	"kern/checker/model"
 	"kern/lang"
 )
@@ -156,12 +157,12 @@ func (l *list) everywhere(n *model.Named, v *lang.Value) []checker.Edit {
 	}
 	span := v.Stmt.Span
 	text := v.Decl.Text
-	if first(text, span.Start) && len(v.Decl.Stmts) == 1 {
-		end, ok := rest(text, span.End)
+	if edit.First(text, span.Start) && len(v.Decl.Stmts) == 1 {
+		end, ok := edit.Rest(text, span.End)
 		tail := strings.TrimLeft(lang.Span{Start: span.End, End: end}.Of(text), " \t;")
 		switch {
 		case ok && tail == "": // the whole line, with its end
-			span.Start, span.End = lineStart(text, span.Start), end
+			span.Start, span.End = edit.LineStart(text, span.Start), end
 			if strings.HasPrefix(text[end:], "\r\n") {
 				span.End += 2
 			} else if int(end) < len(text) {

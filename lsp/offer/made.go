@@ -6,6 +6,7 @@ import (
 
 	"kern/checker"
 	"kern/checker/catalogue"
+	"kern/checker/edit"
 	"kern/checker/model"
 	"kern/lang"
 )
@@ -66,7 +67,7 @@ func (l *list) made(s site) {
 	name := l.free(what)
 	value, _ := b.Assigned()
 	whole := lang.Span{Start: value[0].Span.Start, End: b.Span.End}.Of(o.decl.Text)
-	whole = outdent(whole, indentOf(o.decl.Text, b.Span.Start))
+	whole = outdent(whole, edit.IndentOf(o.decl.Text, b.Span.Start))
 	title := fmt.Sprintf("Declare the %s: %s = %s", b.Word, name, text)
 	if b.Body != nil {
 		title = fmt.Sprintf("Declare the %s: %s = %s { … }", b.Word, name, value[0].Text)

@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"kern/checker"
+	"kern/checker/edit"
 	"kern/checker/model"
 	"kern/lang"
 )
@@ -181,7 +182,7 @@ func (l *list) declare(s site, word, text string) (checker.Edit, bool) {
 		if len(d.Stmts) != 1 || d.Stmts[0].Word != word || assigned(d.Stmts[0]) || d.Stmts[0].Body != nil || len(d.Problems) > 0 {
 			continue
 		}
-		if to, ok := rest(d.Text, d.Stmts[0].Span.End); ok {
+		if to, ok := edit.Rest(d.Text, d.Stmts[0].Span.End); ok {
 			return l.declares(l.edit(l.file.Starts[i], lang.Span{Start: to, End: to}, "\n"+text), text)
 		}
 	}
@@ -192,18 +193,18 @@ func (l *list) declare(s site, word, text string) (checker.Edit, bool) {
 // comment that belongs to that.
 func (l *list) above(decl int, text string) (checker.Edit, bool) {
 	d := l.file.Decls[decl]
-	if len(d.Stmts) == 0 || !first(strings.TrimPrefix(d.Text[:d.Stmts[0].Span.Start], "\ufeff"), int32(len(strings.TrimPrefix(d.Text[:d.Stmts[0].Span.Start], "\ufeff")))) {
+	if len(d.Stmts) == 0 || !edit.First(strings.TrimPrefix(d.Text[:d.Stmts[0].Span.Start], "\ufeff"), int32(len(strings.TrimPrefix(d.Text[:d.Stmts[0].Span.Start], "\ufeff")))) {
 		return checker.Edit{}, false
 	}
 	all := l.file.Text
-	line := lineStart(all, l.file.Starts[decl]+d.Stmts[0].Span.Start)
+	line := edit.LineStart(all, l.file.Starts[decl]+d.Stmts[0].Span.Start)
 	at := line
 	for at > 0 {
 		before := at - 1
 		if before > 0 && all[before] == '\n' && all[before-1] == '\r' {
 			before--
 		}
-		start := lineStart(all, before)
+		start := edit.LineStart(all, before)
 		if !strings.HasPrefix(strings.TrimLeft(all[start:before], " \t"), "#") {
 			break
 		}

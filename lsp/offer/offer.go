@@ -14,7 +14,9 @@ import (
 	"sort"
 
 	"kern/checker"
+	"kern/checker/edit"
 	"kern/checker/model"
+	"kern/checker/size"
 	"kern/lang"
 )
 
@@ -58,6 +60,8 @@ type Request struct {
 	Span   lang.Span
 	// Want tells which kinds are wanted; nil for all.
 	Want func(Kind) bool
+	// Mends finds what makes a member pass; nil to offer none of it.
+	Mends func(*checker.Result) []size.Mend
 }
 
 // At gives the offers at a place: fixes first, the likeliest in front, then
@@ -69,11 +73,14 @@ func At(q Request) []Offer {
 	}
 	q.Span.Start = min(max(q.Span.Start, 0), int32(len(f.Text)))
 	q.Span.End = min(max(q.Span.End, q.Span.Start), int32(len(f.Text)))
-	l := &list{Request: q, file: f, seen: map[string]bool{}, calculations: q.Report.Calculations(q.File)}
+	l := &list{Request: q, file: f, seen: map[string]bool{}, calculations: q.Report.Calculations(q.File), layout: edit.NewLayout(q.Report.Project)}
 	if l.wants(QuickFix) {
 		l.fixes()
 	}
 	if s, ok := l.site(); ok {
+		if l.wants(QuickFix) {
+			l.sizedAt(s)
+		}
 		if l.wants(Rewrite) {
 			l.convert(s)
 			l.state(s)
@@ -114,8 +121,9 @@ type list struct {
 	calculations []*model.Calculation
 	out          []Offer
 	seen         map[string]bool
-	faults       *faults // nil until somebody asks
-	laid         map[*lang.File]bool
+	faults       *faults  // nil until somebody asks
+	sizes        []string // titles of mends offered already
+	layout       *edit.Layout
 }
 
 func (l *list) wants(k Kind) bool { return l.Want == nil || l.Want(k) }
@@ -131,7 +139,7 @@ func (l *list) add(o Offer) {
 	}
 	l.seen[key] = true
 	edits := o.edits
-	o.edits = func() []checker.Edit { return l.tidy(edits()) }
+	o.edits = func() []checker.Edit { return l.layout.Tidy(edits()) }
 	l.out = append(l.out, o)
 }
 

@@ -35,8 +35,8 @@ func interactions(text, clause string) [3]*derivation.Formula {
 	return out
 }
 
-// strip is a stretch about x–x, one about y–y and a segment of lateral-torsional
-// buckling that overlap: H1 is checked for each.
+// strip is a stretch about x–x and one about y–y that meet, or a segment of
+// lateral-torsional buckling with one of each that meet it: H1 is checked for each.
 type strip struct {
 	of  [2]int // the stretches
 	seg int    // -1 when there is none
@@ -47,15 +47,15 @@ func (c *calc) strips() []strip {
 	eps := 1e-9 * c.f.Member.Height
 	for i, x := range c.f.Stretches[0] {
 		for j, y := range c.f.Stretches[1] {
-			from, to := max(x.From, y.From, c.f.From), min(x.To, y.To, c.f.To)
-			if to-from <= eps {
-				continue
+			meet := func(from, to float64, s action.Stretch) bool {
+				return min(s.To, to, c.f.To)-max(s.From, from, c.f.From) > eps
 			}
-			if len(c.bend.lat.segments) == 0 {
+			if len(c.bend.lat.segments) == 0 && meet(x.From, x.To, y) {
 				out = append(out, strip{[2]int{i, j}, -1})
 			}
+			// the least P_c in the whole of a segment goes with the M_c of it (H1.1, E1)
 			for s, g := range c.bend.lat.segments {
-				if min(to, g.to)-max(from, g.from) > eps {
+				if meet(g.from, g.to, x) && meet(g.from, g.to, y) {
 					out = append(out, strip{[2]int{i, j}, s})
 				}
 			}

@@ -152,7 +152,7 @@ func (c *calc) shearStrength(a int) string {
 		plate(p.leg, p.ratioLeg, x.doVnLeg, 1.2, "G3")
 	case section.Tube:
 		area := p.tube
-		if sh.InnerRadius > sh.Wall*(1+1e-9) { // more than product standards assume
+		if c.f.Member.Section.CornerStated || sh.InnerRadius > sh.Wall*(1+1e-9) { // known, or more than product standards assume
 			area = p.round
 		}
 		if c.shape == &shapeBox {

@@ -1,4 +1,4 @@
-package offer
+package edit
 
 import (
 	"strings"
@@ -6,10 +6,10 @@ import (
 	"kern/lang"
 )
 
-// pieces are a text as parts of the text that it grew out of and what was put
+// Pieces are a text as parts of the text that it grew out of and what was put
 // between them. They join changes that were made one after another into changes
 // of the first text.
-type pieces struct{ parts []part }
+type Pieces struct{ parts []part }
 
 // part is a kept range of the first text, or a text of its own.
 type part struct {
@@ -33,14 +33,14 @@ func (p part) cut(from, to int) part {
 	return part{text: p.text[from:to]}
 }
 
-// whole is a text that has not changed.
-func whole(text string) *pieces {
-	return &pieces{parts: []part{{end: len(text), kept: true}}}
+// Whole is a text that has not changed.
+func Whole(text string) *Pieces {
+	return &Pieces{parts: []part{{end: len(text), kept: true}}}
 }
 
-// apply makes changes, which are in order and do not overlap, to the text as it
+// Apply makes changes, which are in order and do not overlap, to the text as it
 // is now.
-func (p *pieces) apply(changes []lang.Change) {
+func (p *Pieces) Apply(changes []lang.Change) {
 	var out []part
 	add := func(x part) {
 		if x.length() > 0 {
@@ -74,9 +74,9 @@ func (p *pieces) apply(changes []lang.Change) {
 	p.parts = out
 }
 
-// changes gives what was changed, as replacements in the first text, each
+// Changes gives what was changed, as replacements in the first text, each
 // without the bytes that it would only write again.
-func (p *pieces) changes(text string) []lang.Change {
+func (p *Pieces) Changes(text string) []lang.Change {
 	var out []lang.Change
 	var new strings.Builder
 	pos := 0
