@@ -46,13 +46,16 @@ column B3 { section = "HEA 300"; material = a36; height = 6 m; lift base to spli
 column B4 { section = "HEA 300"; material = a36; from ground to ground; load G 300 kN }
 column B5 { section = "UPN 200"; material = a36; height = 3 m; load G 30 kN offset 0.1 m about minor; require N_b_minor >= 10 kN; limit slenderness = 20 }
 column B6 { section = "HEA 300"; material = a36; height = 3 m; load G 30 kN; load G 10 kNm about major at base; load G -10 kNm about major at top; selfweight off }
+section bad1 = tube { width = 150 mm; depth = 200 mm; wall = 80 mm }
+section bad2 = isection { depth = 300 mm; width = 300 mm; web = 10 mm; flange = 15 mm; root = 140 mm }
+section bad3 = tube { width = 150 mm; depth = 200 mm; wall = 8 mm; corner = 90 mm }
 column B7 { section = l2; material = a36; height = 2.3 m; load G 100 kN }
 tie D1 { section = "UPN 200"; material = a36; height = 3 m; net = 28 cm2; load G -100 kN }
 tie D2 { section = "UPN 200"; material = a36; height = 3 m; net = 92 cm2; load G -100 kN }
 `
 
 // wrong are the rules of the errors that everywhere has on purpose.
-var wrong = []string{"outside-the-member", "lifts-overlap", "impossible-value", "nominal-without-hold"}
+var wrong = []string{"outside-the-member", "lifts-overlap", "impossible-value", "nominal-without-hold", "impossible-section"}
 
 // written is all that a report says in words, without the working.
 func written(r *checker.Report) []string {

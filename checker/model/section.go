@@ -249,7 +249,7 @@ func shapedSection(r *reader, newReader func(declared) *reader, d declared, s *S
 		if !ok {
 			span = d.stmt.Line
 		}
-		r.fail("impossible-section", span, "%s", f.Message)
+		r.fail("impossible-section", span, "%s", f.In(func(v float64) string { return r.env.Basis.Show.Short(v, unit.Length, 6) }))
 		return false
 	}
 	if err != nil {

@@ -22,6 +22,11 @@ type Fault struct {
 	Limit   float64 // the bound that it breaks (m, or the pure number of a slope); 0 if there is none
 }
 
+// In is the message with its limit as show writes a length (m).
+func (f Fault) In(show func(length float64) string) string {
+	return strings.Replace(f.Message, millimetres(f.Limit), show(f.Limit), 1)
+}
+
 // ShapeError is the error for a shape whose geometry cannot be.
 type ShapeError struct {
 	Kind   Kind
