@@ -121,13 +121,19 @@ const steps = {
 
   async 'a lens leads to the working, which follows the text'(w) {
     await w.cursor(gallery, 'column P4');
-    const verdict = await w.there('.codelens-decoration', /P4: fails 1\.\d\d/);
-    const top = (await verdict.boundingBox()).y;
-    let link;
-    for (const l of await w.page.locator('.codelens-decoration a', { hasText: 'show working' }).all()) {
-      if (Math.abs((await l.boundingBox()).y - top) < 10) link = l;
-    }
-    await link.click();
+    await w.until('the lens beside the verdict', async () => {
+      // lenses are drawn anew while the text is checked: one that is gone has no box
+      const verdict = await w.there('.codelens-decoration', /P4: fails 1\.\d\d/);
+      const top = (await verdict.boundingBox())?.y;
+      for (const l of await w.page.locator('.codelens-decoration a', { hasText: 'show working' }).all()) {
+        const box = await l.boundingBox();
+        if (top !== undefined && box && Math.abs(box.y - top) < 10) {
+          await l.click();
+          return true;
+        }
+      }
+      return false;
+    });
     await w.there('.tabs-container .tab', 'Preview P4.md');
     const shown = async () => (await Promise.all(w.page.frames().map((f) => f.evaluate(() => document.querySelector('.markdown-body')?.innerText ?? '').catch(() => '')))).join('');
     await w.until('the working', async () => /^P4: Prop below the stair landing\s+fails/.test(await shown()));
