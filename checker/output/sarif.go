@@ -89,7 +89,7 @@ type (
 	}
 	sarifPhysical struct {
 		Artifact sarifArtifact `json:"artifactLocation"`
-		Region   sarifRegion   `json:"region"`
+		Region   *sarifRegion  `json:"region,omitempty"`
 	}
 	sarifArtifact struct {
 		URI  string `json:"uri"`
@@ -135,6 +135,10 @@ func SARIF(w io.Writer, r *checker.Report, program string, known *record.Outcome
 	run.Tool.Driver.Name, run.Tool.Driver.Version = name, version
 	for _, d := range r.Diagnostics {
 		run.Results = append(run.Results, s.result(d))
+	}
+	if known != nil {
+		run.Properties["carriedFailures"], run.Properties["differencesFromRecord"] = len(known.Carried), len(known.Differences)
+		run.Results = append(run.Results, s.differences()...)
 	}
 	e := json.NewEncoder(w)
 	e.SetIndent("", "  ")
@@ -188,6 +192,27 @@ func (s *sarifWriter) result(d checker.Diagnostic) sarifResult {
 	return out
 }
 
+// differences are the results that are not as recorded. They are about a member,
+// not about a place in its file.
+func (s *sarifWriter) differences() []sarifResult {
+	file := map[string]string{} // by its name in the record
+	for name := range s.r.Project.Files {
+		file[s.recorded(name)] = name
+	}
+	var out []sarifResult
+	for _, d := range s.known.Differences {
+		name := file[d.File]
+		if name == "" {
+			name = d.File // it is gone
+		}
+		sum := sha256.Sum256([]byte(d.File + "\x00" + d.Name))
+		out = append(out, sarifResult{RuleID: "recorded-result", RuleIndex: -1, Level: "error", Message: sarifText{Text: d.Name + " " + d.Message},
+			Locations:    []sarifLocation{{Physical: sarifPhysical{Artifact: sarifArtifact{sarifURI(name), sarifRoot}}, Logical: []sarifLogical{{d.Name, "member"}}}},
+			Fingerprints: map[string]string{"kernRecorded/v1": hex.EncodeToString(sum[:16])}})
+	}
+	return out
+}
+
 // carriedReason is why a diagnostic of a member that fails does not block; "" for
 // one that does.
 func carriedReason(known *record.Outcome, recorded Names, d checker.Diagnostic) string {
@@ -220,7 +245,7 @@ func (s *sarifWriter) departure(d checker.Diagnostic) (string, bool) {
 func (s *sarifWriter) fix(f checker.Fix) sarifFix {
 	out := sarifFix{Description: sarifText{Text: f.Title}}
 	for _, e := range f.Edits {
-		change := sarifReplacement{Deleted: s.at(e.File, e.Span).Region, Inserted: sarifText{Text: e.New}}
+		change := sarifReplacement{Deleted: *s.at(e.File, e.Span).Region, Inserted: sarifText{Text: e.New}}
 		uri := sarifURI(e.File)
 		if n := len(out.Changes); n > 0 && out.Changes[n-1].Artifact.URI == uri {
 			out.Changes[n-1].Replacements = append(out.Changes[n-1].Replacements, change)
@@ -233,7 +258,7 @@ func (s *sarifWriter) fix(f checker.Fix) sarifFix {
 
 func (s *sarifWriter) at(file string, span lang.Span) sarifPhysical {
 	at := s.lines.span(file, span)
-	return sarifPhysical{sarifArtifact{sarifURI(file), sarifRoot}, sarifRegion{at.Start.Line, at.Start.Column, at.End.Line, at.End.Column}}
+	return sarifPhysical{sarifArtifact{sarifURI(file), sarifRoot}, &sarifRegion{at.Start.Line, at.Start.Column, at.End.Line, at.End.Column}}
 }
 
 // sarifURI is a name of the workspace as a relative address.

@@ -147,6 +147,14 @@ func TestSARIF(t *testing.T) {
 		t.Errorf("%d departures, %d carried, %d fixes", kept, carried, fixed)
 	}
 	sarif(t, map[string]string{"empty.kern": ""}, nil)
+
+	// a result that is not the recorded one is a result of the log
+	recorded.Entries[0].Utilisation = 0.001
+	known = record.Compare(r, recorded, -1, same)
+	log = sarif(t, files, known)
+	if n := len(log.Runs[0].Results) - len(r.Diagnostics); n != len(known.Differences) || n != 1 || log.Runs[0].Results[len(r.Diagnostics)].RuleID != "recorded-result" {
+		t.Errorf("%d differences of %d", n, len(known.Differences))
+	}
 }
 
 // TestFingerprints: a comment on top of a file, a line put in between and blanks
