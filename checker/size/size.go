@@ -26,11 +26,12 @@ const (
 	Group   Kind = "group" // one section for all members that share it
 	Grade   Kind = "grade"
 	Hold    Kind = "hold"
+	Turn    Kind = "turn" // the section turned by a right angle
 	Height  Kind = "height"
 	Load    Kind = "load"
 )
 
-var kindOrder = []Kind{Section, Group, Grade, Hold, Height, Load}
+var kindOrder = []Kind{Section, Group, Grade, Turn, Hold, Height, Load}
 
 // Mend is a change with which a member passes.
 type Mend struct {
@@ -264,6 +265,7 @@ func mends(report *checker.Report, r *checker.Result, o Options, layout *edit.La
 	add(Group, func() []Mend { return s.group(o) })
 	if !passes {
 		add(Grade, s.grades)
+		add(Turn, s.turns)
 		add(Hold, s.holds)
 	}
 	add(Height, s.heights)
