@@ -102,6 +102,40 @@ type Outcome struct {
 	Lifts []LiftOutcome
 }
 
+// Cover notes whether a check was made.
+func (o *Outcome) Cover(rule string, state State, why string) {
+	o.Coverage = append(o.Coverage, Coverage{Rule: rule, State: state, Why: why})
+}
+
+// Add notes a check that was made: demand and capacity in SI units of dim, the
+// utilisation u judged against a limit.
+func (o *Outcome) Add(rule, clause string, combination int, demand, capacity float64, dim unit.Dim, u, limit float64) {
+	check := Check{Rule: rule, Clause: clause, Combination: combination, Demand: demand, Capacity: capacity, Dim: dim, Utilisation: u, Verdict: Utilisation(u, limit)}
+	if check.Verdict == Undecided {
+		check.Why = "a value that the check needs is missing or out of range"
+	}
+	o.Checks = append(o.Checks, check)
+	o.Cover(rule, Checked, "")
+}
+
+// Undecided notes a check that could not be made, of quantities of dim, and why.
+func (o *Outcome) Undecided(rule, clause string, dim unit.Dim, why string) {
+	nan := math.NaN()
+	o.Checks = append(o.Checks, Check{Rule: rule, Clause: clause, Combination: -1, Demand: nan, Capacity: nan, Dim: dim, Utilisation: nan, Why: why})
+	o.Cover(rule, NotCovered, why)
+}
+
+// Untwisted covers torsion, whose clause is given: the language has no load that
+// twists a member.
+func (o *Outcome) Untwisted(kind section.Kind, clause string) {
+	switch kind {
+	case section.Channel, section.Tee, section.Angle, section.DoubleAngle:
+		o.Cover("torsion", NotApplicable, "loads across the member and eccentric loads are taken to act through the shear centre: what they twist is for a person ("+clause+")")
+	default:
+		o.Cover("torsion", NotApplicable, "loads act in the planes of symmetry: nothing twists the member ("+clause+")")
+	}
+}
+
 // Known gives a value that must be finite and positive, NaN for any other: what
 // depends on it is then undecided. The language refuses such values; this is the
 // last gate before a verdict.

@@ -104,20 +104,12 @@ func (c *calc) bendsOne(axes []int) bool {
 
 // undecidedIn is undecided for a check of another dimension.
 func (c *calc) undecidedIn(rule, clause string, dim unit.Dim, why string) {
-	nan := math.NaN()
-	c.out.Checks = append(c.out.Checks, standard.Check{Rule: rule, Clause: clause, Combination: -1, Demand: nan, Capacity: nan, Dim: dim, Utilisation: nan, Why: why})
-	c.cover(rule, standard.NotCovered, why)
+	c.out.Undecided(rule, clause, dim, why)
 }
 
 // torsion is 6.2.7: the language has no load that twists the member.
 func (c *calc) torsion() {
-	const rule = "torsion"
-	switch c.f.Member.Section.Shape.Kind {
-	case section.Channel, section.Tee, section.Angle, section.DoubleAngle:
-		c.cover(rule, standard.NotApplicable, "loads across the member and eccentric loads are taken to act through the shear centre: what they twist is for a person (6.2.7)")
-	default:
-		c.cover(rule, standard.NotApplicable, "loads act in the planes of symmetry: nothing twists the member (6.2.7)")
-	}
+	c.out.Untwisted(c.f.Member.Section.Shape.Kind, "6.2.7")
 }
 
 // moduli takes the properties that bending asks for.

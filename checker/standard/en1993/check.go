@@ -65,7 +65,7 @@ func (c *calc) value(symbol string) (unit.Quantity, bool) {
 }
 
 func (c *calc) cover(rule string, state standard.State, why string) {
-	c.out.Coverage = append(c.out.Coverage, standard.Coverage{Rule: rule, State: state, Why: why})
+	c.out.Cover(rule, state, why)
 }
 
 func (c *calc) assume(format string, args ...any) {
@@ -86,18 +86,11 @@ func (c *calc) silently(f func()) {
 }
 
 func (c *calc) add(rule, clause string, combination int, demand, capacity float64, dim unit.Dim, u, limit float64) {
-	check := standard.Check{Rule: rule, Clause: clause, Combination: combination, Demand: demand, Capacity: capacity, Dim: dim, Utilisation: u, Verdict: standard.Utilisation(u, limit)}
-	if check.Verdict == standard.Undecided {
-		check.Why = "a value that the check needs is missing or out of range"
-	}
-	c.out.Checks = append(c.out.Checks, check)
-	c.cover(rule, standard.Checked, "")
+	c.out.Add(rule, clause, combination, demand, capacity, dim, u, limit)
 }
 
 func (c *calc) undecided(rule, clause, why string) {
-	nan := math.NaN()
-	c.out.Checks = append(c.out.Checks, standard.Check{Rule: rule, Clause: clause, Combination: -1, Demand: nan, Capacity: nan, Dim: unit.Force, Utilisation: nan, Why: why})
-	c.cover(rule, standard.NotCovered, why)
+	c.out.Undecided(rule, clause, unit.Force, why)
 }
 
 func (c *calc) run() {
